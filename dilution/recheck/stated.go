@@ -1,0 +1,129 @@
+// Package recheck is the second route (rules R17 and "no ink without a second
+// route"): it works every printed figure again, backwards, from the printed
+// words alone, in whole numbers, with its own unit table and its own rounding
+// rule. It imports the standard library only. It can only block.
+package recheck
+
+// A Figure is one figure as it will be printed.
+//
+// Paper says where it stands ("label", "draw-up", "pump card", "check sheet");
+// it is used in messages only. Name says what the figure claims to be: one of
+// the names below, for rows of a table with the row number in the middle
+// ("ladder.3.rate"). Text is the text as printed, for instance "7.2 mL".
+type Figure struct {
+	Paper string
+	Name  string
+	Text  string
+}
+
+// A Stated is everything that the papers say about one syringe.
+//
+// Syringe names it in messages. Asked holds what the order says, as typed.
+// Record is the raw text of the formulary file in which the presentation's own
+// words are found again, Drug and Presentation say where in it. Figures holds
+// every figure of every paper of this syringe, repeated ones included.
+type Stated struct {
+	Syringe      string
+	Drug         string
+	Presentation string
+	Record       []byte
+	Asked        []Figure
+	Figures      []Figure
+}
+
+// Names of figures. Each says what it is, and the sum that it must satisfy.
+const (
+	// The container as supplied.
+	ContainerAmount = "container.amount" // drug in one container, "20 mg"
+	ContainerVolume = "container.volume" // volume of one container; for a powder the volume after mixing
+	ContainerCount  = "container.count"  // whole containers opened, "2"
+	Strength        = "strength"         // container.amount / container.volume
+	PowderAdded     = "powder.added"     // fluid added to one container of powder
+	PowderDisplaced = "powder.displaced" // volume that the powder itself takes; container.volume = added + displaced
+
+	// The mixture.
+	Method             = "method"               // "neat", "make up to", "add to", "withdraw, then add"
+	DrugVolume         = "drug.volume"          // total drawn from the containers
+	DrugStep           = "drug.step"            // graduation of the barrel that measures it; drug.volume is a multiple
+	DiluentVolume      = "diluent.volume"       // diluent added ("add to": volume already in the bag; "withdraw, then add": volume left in the bag)
+	FinalVolume        = "final.volume"         // drug.volume + diluent.volume
+	AmountInSyringe    = "amount"               // drug.volume x strength
+	Concentration      = "concentration"        // amount / final.volume
+	LeftVolume         = "left.volume"          // count x container.volume - drug.volume
+	LeftAmount         = "left.amount"          // left.volume x strength
+	SecondContainer    = "second.container"     // a second drug in the same container, "500 micrograms"
+	SecondAmount       = "second.amount"        // amount x second.container / container.amount
+	SecondConcentrated = "second.concentration" // second.amount / final.volume
+	SubstanceFactor    = "substance.factor"     // the drug's own factor, "4 mmol/g"
+	SubstanceAmount    = "substance.amount"     // amount x factor
+	SubstanceConc      = "substance.concentration"
+
+	// How sure the concentration is.
+	Assay           = "assay"            // half width of the presentation's assay limits, "10 %"
+	DrugBarrel      = "drug.barrel"      // nominal capacity of the barrel that measures drug.volume
+	FinalBarrel     = "final.barrel"     // nominal capacity of the barrel in which final.volume is read
+	IntervalPercent = "interval.percent" // half width of the interval, to 0.1 %
+	IntervalLow     = "interval.low"     // concentration x (1 - interval.percent)
+	IntervalHigh    = "interval.high"    // concentration x (1 + interval.percent)
+
+	// The patient.
+	WeightActual   = "weight.actual"
+	Height         = "height"
+	Age            = "age"
+	Sex            = "sex"
+	WeightIdeal    = "weight.ideal"    // Devine 1974
+	WeightAdjusted = "weight.adjusted" // ideal + 0.4 (actual - ideal)
+	WeightLean     = "weight.lean"     // Janmahasatian 2005
+	WeightJames    = "weight.james"    // James 1976
+	SurfaceArea    = "surface"         // Mosteller 1987
+	BMI            = "bmi"
+
+	// One dose.
+	Dose          = "dose"           // as ordered, "0.3 mg/kg" or "2 mg"
+	DoseWeightBy  = "dose.weight.by" // "actual", "ideal", "adjusted", "lean", "surface" or "none"
+	DoseWeight    = "dose.weight"    // the body weight or surface area that the dose goes by
+	DoseAmount    = "dose.amount"    // dose x dose.weight
+	DoseVolume    = "dose.volume"    // dose.amount / concentration, on the giving barrel's graduation
+	DoseStep      = "dose.step"      // that graduation
+	DoseDelivered = "dose.delivered" // dose.volume x concentration
+
+	// An infusion.
+	RateWeightBy   = "rate.weight.by"
+	RateWeight     = "rate.weight"
+	RateStep       = "rate.step"       // the pump's step, "0.1 mL/h"
+	StartDose      = "start.dose"      // start dose rate
+	StartRate      = "start.rate"      // its pump rate, half up to the step
+	StartDelivered = "start.delivered" // dose rate that the rounded pump rate gives
+	LowDose        = "low.dose"        // lowest dose rate of the range
+	LowRate        = "low.rate"        // its rate, rounded up to the step
+	HighDose       = "high.dose"       // highest dose rate of the range
+	HighRate       = "high.rate"       // its rate, rounded down to the step
+	LimitDose      = "limit.dose"      // hard limit of the formulary
+	LimitRate      = "limit.rate"      // its rate, rounded down to the step
+	RunTime        = "run.time"        // final.volume / start.rate, whole minutes, rounded down, "9 h 25 min"
+	EmptyAt        = "empty.at"        // prepared + run.time
+
+	// Time.
+	Prepared       = "prepared"        // date and time, as the number style writes it
+	PreparedOffset = "prepared.offset" // "+01:00"
+	UseHours       = "use.hours"       // "24 h", "30 min"
+	UseBy          = "use.by"          // prepared + use.hours, absolute hours (R18)
+	UseByOffset    = "use.by.offset"
+
+	// The barcode, in human-readable form, and the facts it must repeat.
+	Code   = "code"   // "(91)N01AX07(92)261202073000001003(93)2mg/mL"
+	ATC    = "atc"    // "N01AX07"
+	Serial = "serial" // eight digits
+)
+
+// Names of table rows: Row("ladder", 3, "rate") is "ladder.3.rate".
+//
+//	ladder.N.dose       a dose rate
+//	ladder.N.rate       its pump rate, half up to the step
+//	ladder.N.delivered  the dose rate that this pump rate gives
+//	slip.N.kind         "per minute for per hour", "per hour for per minute", "ten times", "a tenth", "pounds for kilograms"
+//	slip.N.rate         the pump rate that this slip would show, half up to the step, from the exact start dose
+const (
+	Ladder = "ladder"
+	Slip   = "slip"
+)
