@@ -1,0 +1,13 @@
+// Package quantity holds exact amounts, volumes, concentrations, doses, rates
+// and body sizes, reads them as people write them, and writes them as ISO and
+// safety lists ask for.
+//
+// Every value is a fraction of whole numbers (rule R1); no binary floating
+// point takes part. Roles are types: an [Amount] cannot be used as a
+// [BodyWeight], so a dose per kilogram never cancels against the drug's mass
+// (rule R3). How a drug is counted, by mass, by biological activity or by
+// amount of substance, is its [Kind]; kinds never convert into each other
+// (rule R4). The zero value of every type means "not given".
+//
+// Two values are compared with Cmp or Equal; == does not compile.
+package quantity

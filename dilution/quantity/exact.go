@@ -1,0 +1,110 @@
+package quantity
+
+import (
+	"math/big"
+	"strings"
+)
+
+// exact is a fraction that never changes after it is made. A nil fraction
+// means "not given".
+type exact struct {
+	_ [0]func() // forbids ==
+	r *big.Rat
+}
+
+func whole(n int64) exact         { return exact{r: new(big.Rat).SetInt64(n)} }
+func fraction(a, b int64) exact   { return exact{r: big.NewRat(a, b)} }
+func (x exact) given() bool       { return x.r != nil }
+func (x exact) mul(y exact) exact { return exact{r: new(big.Rat).Mul(x.r, y.r)} }
+func (x exact) quo(y exact) exact { return exact{r: new(big.Rat).Quo(x.r, y.r)} }
+func (x exact) add(y exact) exact { return exact{r: new(big.Rat).Add(x.r, y.r)} }
+func (x exact) sub(y exact) exact { return exact{r: new(big.Rat).Sub(x.r, y.r)} }
+func (x exact) cmp(y exact) int   { return x.r.Cmp(y.r) }
+func (x exact) sign() int         { return x.r.Sign() }
+func (x exact) copyRat() *big.Rat { return new(big.Rat).Set(x.r) }
+func fromRat(r *big.Rat) exact    { return exact{r: new(big.Rat).Set(r)} }
+func (x exact) floorDiv(y exact) *big.Int {
+	q := new(big.Rat).Quo(x.r, y.r)
+	return new(big.Int).Div(q.Num(), q.Denom())
+}
+
+// A Direction says which way a step rounds.
+type Direction int
+
+// Directions of rounding. The zero value is refused.
+const (
+	HalfUp Direction = iota + 1 // the nearest step, a tie goes up (rule R2)
+	Up                          // the next step that is not smaller
+	Down                        // the next step that is not larger
+)
+
+// toStep moves x to a multiple of step. It is the only place where a value is
+// rounded on its way to a syringe or a pump.
+func (x exact) toStep(step exact, d Direction) (exact, error) {
+	if !x.given() || !step.given() || step.sign() <= 0 {
+		return exact{}, &NotGivenError{What: "step"}
+	}
+	var n *big.Int
+	switch d {
+	case HalfUp:
+		n = x.add(step.quo(whole(2))).floorDiv(step)
+	case Down:
+		n = x.floorDiv(step)
+	case Up:
+		neg := exact{r: new(big.Rat).Neg(x.r)}
+		n = new(big.Int).Neg(neg.floorDiv(step))
+	default:
+		return exact{}, &NotGivenError{What: "rounding direction"}
+	}
+	return exact{r: new(big.Rat).Mul(new(big.Rat).SetInt(n), step.r)}, nil
+}
+
+// decimal gives the terminating decimal text of x, or false.
+func (x exact) decimal() (string, bool) {
+	places, ok := x.places()
+	if !ok {
+		return "", false
+	}
+	return trimZeros(x.r.FloatString(places)), true
+}
+
+// places counts the decimals that x needs; false if it never ends.
+func (x exact) places() (int, bool) {
+	den := new(big.Int).Set(x.r.Denom())
+	two, five := factorOut(den, 2), factorOut(den, 5)
+	if den.Cmp(big.NewInt(1)) != 0 {
+		return 0, false
+	}
+	return max(two, five), true
+}
+
+func factorOut(n *big.Int, p int64) int {
+	count, prime, rest := 0, big.NewInt(p), new(big.Int)
+	for {
+		q, m := new(big.Int).QuoRem(n, prime, rest)
+		if m.Sign() != 0 {
+			return count
+		}
+		n.Set(q)
+		count++
+	}
+}
+
+// text is the exact value in full: a decimal if it ends, else a fraction in
+// lowest terms such as "28/3".
+func (x exact) text() string {
+	if !x.given() {
+		return ""
+	}
+	if s, ok := x.decimal(); ok {
+		return s
+	}
+	return x.r.RatString()
+}
+
+func trimZeros(s string) string {
+	if !strings.Contains(s, ".") {
+		return s
+	}
+	return strings.TrimSuffix(strings.TrimRight(s, "0"), ".")
+}

@@ -1,0 +1,127 @@
+package refusal
+
+// A Code names one fault. A code never changes its meaning; new ones are
+// added, old ones stay. Each has an entry in the catalogue below.
+type Code string
+
+// Faults of a text that should be a quantity. They equal quantity.Fault.
+const (
+	QuantityMissing  Code = "quantity-missing"
+	NumberWithComma  Code = "number-with-comma"
+	NumberMalformed  Code = "number-malformed"
+	NumberTooLong    Code = "number-too-long"
+	UnitUnknown      Code = "unit-unknown"
+	UnitWrongKind    Code = "unit-wrong-kind"
+	QuantityZero     Code = "quantity-zero"
+	RatioStrength    Code = "ratio-strength"
+	AmountKindDiffer Code = "units-against-mass"
+)
+
+// Faults of a file.
+const (
+	FileUnreadable   Code = "file-unreadable"
+	FileEmpty        Code = "file-empty"
+	FileTooLarge     Code = "file-too-large"
+	FileNotText      Code = "file-not-text"
+	FileSyntax       Code = "file-syntax"
+	KeyUnknown       Code = "key-unknown"
+	KeyRepeated      Code = "key-repeated"
+	KeyMissing       Code = "key-missing"
+	KeyConflict      Code = "keys-contradict"
+	ValueWrongType   Code = "value-wrong-type"
+	ValueUnknown     Code = "value-unknown"
+	TimeMalformed    Code = "time-malformed"
+	OutputUnwritable Code = "output-unwritable"
+	NothingToMake    Code = "nothing-to-make"
+	SyringeNumber    Code = "syringe-number-unknown"
+)
+
+// Faults of a patient.
+const (
+	WeightMissing     Code = "weight-missing"
+	WeightImplausible Code = "weight-implausible"
+	HeightMissing     Code = "height-missing"
+	HeightImplausible Code = "height-implausible"
+	SexMissing        Code = "sex-missing"
+	AgeMissing        Code = "age-missing"
+	BodySizeOutside   Code = "body-size-outside-equation"
+	LeanPlateau       Code = "lean-weight-above-plateau"
+	WeightEstimated   Code = "weight-estimated"
+	BodyValuesStrange Code = "body-values-do-not-fit"
+)
+
+// Faults of an order against the formulary.
+const (
+	DrugUnknown            Code = "drug-unknown"
+	PresentationUnknown    Code = "presentation-unknown"
+	PresentationUnclear    Code = "presentation-unclear"
+	PresentationNotPump    Code = "presentation-not-for-pump"
+	StandardUnknown        Code = "standard-preparation-unknown"
+	DiluentForbidden       Code = "diluent-forbidden"
+	DiluentNotListed       Code = "diluent-not-listed"
+	DiluentMissing         Code = "diluent-missing"
+	MustBeDiluted          Code = "must-be-diluted"
+	MustNotBeDiluted       Code = "must-not-be-diluted"
+	RouteNotListed         Code = "route-not-listed"
+	RouteForbidden         Code = "route-forbidden"
+	NeverAsInfusion        Code = "never-as-infusion"
+	NeverAsBolus           Code = "never-as-bolus"
+	FormularyBlank         Code = "formulary-blank"
+	DisplacementBlank      Code = "displacement-blank"
+	ConcentrationTooHigh   Code = "concentration-above-limit"
+	ConcentrationTooLow    Code = "concentration-below-limit"
+	DoseAboveHard          Code = "dose-above-hard-limit"
+	DoseAboveSoft          Code = "dose-above-soft-limit"
+	DoseBelowSoft          Code = "dose-below-usual"
+	DoseBelowHard          Code = "dose-below-hard-limit"
+	DoseAboveTotal         Code = "dose-above-absolute-maximum"
+	RateAboveHard          Code = "dose-rate-above-hard-limit"
+	RateAboveSoft          Code = "dose-rate-above-soft-limit"
+	RateBelowHard          Code = "dose-rate-below-hard-limit"
+	RateBelowSoft          Code = "dose-rate-below-usual"
+	RateUnitUnlike         Code = "dose-rate-unit-unlike-formulary"
+	DoseUnitUnlike         Code = "dose-unit-unlike-formulary"
+	AgeOutside             Code = "age-outside-range"
+	SlipThousand           Code = "thousandfold-slip"
+	SlipTen                Code = "tenfold-slip"
+	SoftLimitNotSigned     Code = "soft-limit-not-acknowledged"
+	Unverified             Code = "figure-unverified"
+	CautionFromFormulary   Code = "formulary-caution"
+	NonStandardMixture     Code = "non-standard-mixture"
+	HighStrengthInSyringe  Code = "whole-course-in-one-syringe"
+	AssayAssumed           Code = "assay-limits-assumed"
+	ContradictoryAmounts   Code = "amounts-contradict"
+	ExpiredPresentation    Code = "presentation-expired"
+	UseByUnknown           Code = "use-by-unknown"
+	NegligibleDisplacement Code = "displacement-negligible"
+)
+
+// Faults of measuring.
+const (
+	VolumeBelowMeasurable Code = "volume-below-measurable"
+	VolumeOffGraduation   Code = "volume-off-graduation"
+	VolumeAboveSyringe    Code = "volume-above-syringe"
+	VolumeUnderFifth      Code = "volume-under-a-fifth-of-barrel"
+	SyringeUnknown        Code = "syringe-size-unknown"
+	ContainersMany        Code = "many-containers"
+	BagFillUnknown        Code = "bag-fill-unknown"
+	RateBelowPump         Code = "rate-below-pump-step"
+	RateAbovePump         Code = "rate-above-pump"
+	RateRounding          Code = "rate-rounding-large"
+	RateSlow              Code = "rate-slow-start"
+)
+
+// Faults of paper.
+const (
+	LabelTooSmall    Code = "label-too-small"
+	LabelAllAtOnce   Code = "labels-printed-together"
+	StockUnknown     Code = "stock-unknown"
+	GlyphMissing     Code = "glyph-missing"
+	TextTooLong      Code = "text-too-long"
+	SyringesLeftOut  Code = "syringes-left-out"
+	LimitsNotChecked Code = "limits-not-checked"
+	RoutesDisagree   Code = "routes-disagree"
+	FlagMissing      Code = "flag-missing"
+	FlagConflict     Code = "flags-contradict"
+	FlagUnknown      Code = "flag-unknown"
+)
