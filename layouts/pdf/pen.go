@@ -65,15 +65,18 @@ func (p *pen) text(m ink.Text) {
 		return
 	}
 	p.setFill(m.Colour)
+	p.flush()
+	// The face must be set before the matrix is saved, or restoring that
+	// would undo it unnoticed.
+	if em := fonts.Hundredths(int64(m.Size)); em != p.em || m.Face != p.face {
+		p.face, p.em = m.Face, em
+		p.lib.SetFont(family(m.Face), "", float64(em)/100)
+	}
 	if m.Rotate == 90 {
 		p.op("q 0 1 -1 0")
 		p.place(m.X, m.Y)
 		p.op(" cm\n")
-	}
-	p.flush()
-	if em := fonts.Hundredths(int64(m.Size)); em != p.em || m.Face != p.face {
-		p.face, p.em = m.Face, em
-		p.lib.SetFont(family(m.Face), "", float64(em)/100)
+		p.flush()
 	}
 	// The library turns y round at its own page height; handing it that
 	// height less ours makes it print ours.

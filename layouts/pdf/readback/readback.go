@@ -152,7 +152,9 @@ func (f *File) About(entry string) string {
 type Run struct {
 	Text string
 	// X, Y, W, H is the box of the text: along the line the advance widths
-	// or the ink, whichever the renderer counts, across it the ink.
+	// or the ink, whichever the renderer counts, across it the ink. The
+	// renderer widens it by up to some 60 micrometres; StartX and StartY are
+	// exact to about 2.
 	X, Y, W, H ink.Micrometre
 	// StartX, StartY is the left end of the baseline.
 	StartX, StartY ink.Micrometre
