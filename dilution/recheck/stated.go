@@ -102,6 +102,7 @@ const (
 	LimitRate      = "limit.rate"      // its rate, rounded down to the step
 	RunTime        = "run.time"        // final.volume / start.rate, whole minutes, rounded down, "9 h 25 min"
 	EmptyAt        = "empty.at"        // prepared + run.time
+	EmptyOffset    = "empty.offset"    // offset of empty.at; where it is not printed, that of prepared
 
 	// Time.
 	Prepared       = "prepared"        // date and time, as the number style writes it

@@ -1,0 +1,231 @@
+package recheck
+
+import (
+	"fmt"
+	"slices"
+	"strings"
+)
+
+// A Passed is the proof that a set of figures went through Check. The zero
+// Passed proves nothing.
+type Passed struct {
+	figures map[Figure]bool
+}
+
+// Covers says whether every one of the figures (Paper, Name and Text) was in
+// the set that passed. The zero Passed covers nothing, not even an empty list.
+func (p Passed) Covers(figures []Figure) bool {
+	if p.figures == nil {
+		return false
+	}
+	for _, f := range figures {
+		if !p.figures[f] {
+			return false
+		}
+	}
+	return true
+}
+
+// Check works every printed figure again and compares (rules R1 to R6, R9,
+// R17, R18). It looks at all of them; its error is a *Disagreement that lists
+// every fault. A figure that no sum, no typed text and no line of the record
+// can confirm is a fault as well.
+func Check(s Stated) (Passed, error) {
+	c := newCheck(s)
+	if len(s.Figures) == 0 {
+		c.add("", "", "", "", "no figure is stated, so nothing was checked")
+	}
+	c.checkAsked()
+	rules := allRules()
+	for _, name := range c.names {
+		c.checkOne(rules, name)
+	}
+	if len(c.faults) > 0 {
+		return Passed{}, &Disagreement{Faults: c.faults}
+	}
+	passed := Passed{figures: make(map[Figure]bool, len(s.Figures))}
+	for _, f := range s.Figures {
+		passed.figures[f] = true
+	}
+	return passed, nil
+}
+
+// A check is the work on one Stated.
+type check struct {
+	syringe string
+	names   []string            // in the order in which they were first stated
+	texts   map[string]string   // name to printed text
+	papers  map[string][]string // name to the papers it stands on
+	asked   map[string][]string // name to typed texts
+	slips   map[string]int      // kind of slip to how many rows name it
+	record  record
+	faults  []Fault
+}
+
+func newCheck(s Stated) *check {
+	c := &check{
+		syringe: s.Syringe,
+		texts:   map[string]string{},
+		papers:  map[string][]string{},
+		asked:   map[string][]string{},
+		slips:   map[string]int{},
+		record:  findRecord(s.Record, s.Drug, s.Presentation),
+	}
+	for _, f := range s.Figures {
+		first, known := c.texts[f.Name]
+		switch {
+		case !known:
+			c.names = append(c.names, f.Name)
+			c.texts[f.Name] = f.Text
+			if isSlipKind(f.Name) {
+				c.slips[f.Text]++
+			}
+		case first != f.Text:
+			c.add(f.Paper, f.Name, f.Text, first, "the papers do not say the same: "+strings.Join(c.papers[f.Name], ", ")+" prints the other text")
+		}
+		if !slices.Contains(c.papers[f.Name], f.Paper) {
+			c.papers[f.Name] = append(c.papers[f.Name], f.Paper)
+		}
+	}
+	for _, f := range s.Asked {
+		c.asked[f.Name] = append(c.asked[f.Name], f.Text)
+	}
+	return c
+}
+
+func (c *check) add(paper, name, printed, gets, sentence string) {
+	c.faults = append(c.faults, Fault{Syringe: c.syringe, Paper: paper, Name: name, Printed: printed, Gets: gets, Sentence: sentence})
+}
+
+func (c *check) checkOne(rules map[string]rule, name string) {
+	text := c.texts[name]
+	papers := strings.Join(c.papers[name], ", ")
+	key, row := splitRow(name)
+	work, ok := rules[key]
+	if !ok {
+		c.add(papers, name, text, "", "the second route has no sum for a figure of this name")
+		return
+	}
+	if o := work(c, row, text); o != nil {
+		c.add(papers, name, text, o.gets, o.why)
+	}
+}
+
+// checkAsked refuses what was asked twice in different words, and what the
+// second route does not know: it could not tell whether it was honoured.
+func (c *check) checkAsked() {
+	rules := allRules()
+	names := make([]string, 0, len(c.asked))
+	for name := range c.asked {
+		names = append(names, name)
+	}
+	slices.Sort(names)
+	for _, name := range names {
+		typed := c.asked[name]
+		key, _ := splitRow(name)
+		if _, ok := rules[key]; !ok {
+			c.add("the order", name, typed[0], "", "the second route does not know what was asked under this name")
+		}
+		for _, other := range typed[1:] {
+			if other != typed[0] && !isStocked(name) {
+				c.add("the order", name, other, typed[0], "was asked twice in different words")
+			}
+		}
+	}
+}
+
+// isStocked says whether several typed texts of one name are a list to choose
+// from: what the site has in stock.
+func isStocked(name string) bool {
+	switch name {
+	case DrugStep, DoseStep, DrugBarrel, FinalBarrel:
+		return true
+	}
+	return false
+}
+
+// get is the exact value of a printed figure, or what is lacking.
+func (c *check) get(name string) value {
+	text, ok := c.texts[name]
+	if !ok {
+		return lacking("needs " + name + ", which is not printed")
+	}
+	r, err := readPrinted(text)
+	if err != nil {
+		return lacking("needs " + name + ", which cannot be read")
+	}
+	return r.whole
+}
+
+func (c *check) has(name string) bool {
+	_, ok := c.texts[name]
+	return ok
+}
+
+func (c *check) was(name string) bool { return len(c.asked[name]) > 0 }
+
+// typed is the one typed value of a name.
+func (c *check) typed(name string) value {
+	texts := c.asked[name]
+	if len(texts) == 0 {
+		return lacking("needs " + name + " as typed, which is not among what was asked")
+	}
+	v, _, err := readTyped(texts[0])
+	if err != nil {
+		return lacking(fmt.Sprintf("%s as typed, %q: %v", name, texts[0], err))
+	}
+	return v
+}
+
+// A rule confirms one printed figure or objects. Row is the number of a table
+// row, zero elsewhere.
+type rule func(c *check, row int, text string) *objection
+
+// measured makes a rule that first reads the text as number and unit.
+func measured(work func(c *check, row int, r reading) *objection) rule {
+	return func(c *check, row int, text string) *objection {
+		r, err := readPrinted(text)
+		if err != nil {
+			return object("", "cannot be read: "+err.Error())
+		}
+		return work(c, row, r)
+	}
+}
+
+// asTyped is the rule of figures that only repeat what was typed.
+func asTyped(name string) rule {
+	return measured(func(c *check, _ int, r reading) *objection {
+		return exact(r, c.typed(name), "typed as")
+	})
+}
+
+// stocked is the rule of a figure that must be one of the typed ones.
+func stocked(name string) rule {
+	return measured(func(c *check, _ int, r reading) *objection {
+		return c.oneOf(name, r)
+	})
+}
+
+func (c *check) oneOf(name string, r reading) *objection {
+	if !c.was(name) {
+		return object("", "is not among what was typed for "+name+", and no sum could confirm it")
+	}
+	for _, text := range c.asked[name] {
+		v, _, err := readTyped(text)
+		if err == nil && exact(r, v, "typed as") == nil {
+			return nil
+		}
+	}
+	return object(strings.Join(c.asked[name], " or "), "is none of those typed")
+}
+
+// sameText is the rule of words that must be repeated letter by letter.
+func (c *check) sameText(name, text string) *objection {
+	if !c.was(name) {
+		return object("", "is not among what was typed, and no sum could confirm it")
+	}
+	if c.asked[name][0] != text {
+		return object(c.asked[name][0], "was typed so")
+	}
+	return nil
+}

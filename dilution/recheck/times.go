@@ -1,0 +1,220 @@
+package recheck
+
+import (
+	"strconv"
+	"strings"
+	"time"
+)
+
+// The two ways in which a date and time is printed: UK style, and the style of
+// the US and SI sheets.
+const (
+	dayMonth  = "02 Jan 2006 15:04"
+	yearFirst = "2006-01-02 15:04"
+)
+
+// readMoment reads a printed date and time as if at offset zero. Writing it
+// again must give the same text, so nothing half-read passes.
+func readMoment(text string) (time.Time, bool) {
+	for _, layout := range []string{dayMonth, yearFirst} {
+		t, err := time.Parse(layout, text)
+		if err == nil && t.Format(layout) == text {
+			return t, true
+		}
+	}
+	return time.Time{}, false
+}
+
+// readOffset reads "+01:00" in minutes. "-00:00" does not exist.
+func readOffset(text string) (int64, bool) {
+	if len(text) != 6 || (text[0] != '+' && text[0] != '-') || text[3] != ':' || !digitsOnly(text[1:3]+text[4:]) {
+		return 0, false
+	}
+	hours, err := strconv.Atoi(text[1:3])
+	minutes, fault := strconv.Atoi(text[4:])
+	if err != nil || fault != nil || hours > 14 || minutes > 59 || text == "-00:00" {
+		return 0, false
+	}
+	total := int64(hours)*60 + int64(minutes)
+	if text[0] == '-' {
+		total = -total
+	}
+	return total, true
+}
+
+// instant is the absolute minute of a printed date and offset (rule R18).
+func (c *check) instant(name, offset string) (int64, string) {
+	for _, n := range []string{name, offset} {
+		if !c.has(n) {
+			return 0, "needs " + n + ", which is not printed"
+		}
+	}
+	t, ok := readMoment(c.texts[name])
+	if !ok {
+		return 0, "needs " + name + ", which cannot be read"
+	}
+	minutes, ok := readOffset(c.texts[offset])
+	if !ok {
+		return 0, "needs " + offset + ", which cannot be read"
+	}
+	return t.Unix()/60 - minutes, ""
+}
+
+// spanMinutes reads "24 h" or "30 min" as printed.
+func spanMinutes(text string) (value, string) {
+	r, err := readPrinted(text)
+	if err != nil || r.whole.dim != one(inTime) || !r.whole.isMultiple(whole(1)) {
+		return value{}, "needs use.hours, which cannot be read as whole minutes"
+	}
+	return r.whole, ""
+}
+
+// spans says whether a span reaches from one instant to the other.
+func (c *check) spans(fromName, fromOffset, toName, toOffset string, minutes value) *objection {
+	from, lack := c.instant(fromName, fromOffset)
+	if lack != "" {
+		return object("", lack)
+	}
+	to, lack := c.instant(toName, toOffset)
+	if lack != "" {
+		return object("", lack)
+	}
+	want := whole(from).plus(minutes.bare(one(inTime)))
+	if want.lack != "" {
+		return object("", want.lack)
+	}
+	if want.against(whole(to)) != 0 {
+		late := whole(to).minus(want)
+		return object("", "is "+decimal(late, 0)+" min after the end of the span that is printed (below zero: before it)")
+	}
+	return nil
+}
+
+func useBy(c *check, _ int, text string) *objection {
+	if _, ok := readMoment(text); !ok {
+		return object("", "cannot be read as a date and time")
+	}
+	hours, ok := c.texts[UseHours]
+	if !ok {
+		return object("", "needs use.hours, which is not printed")
+	}
+	minutes, lack := spanMinutes(hours)
+	if lack != "" {
+		return object("", lack)
+	}
+	return c.spans(Prepared, PreparedOffset, UseBy, UseByOffset, minutes)
+}
+
+// partOf is for a figure that another figure's sum takes in exactly: where that
+// one is printed it confirms both, else the figure must have been typed.
+func (c *check) partOf(name, text string, wholes ...string) *objection {
+	if c.was(name) {
+		return c.sameText(name, text)
+	}
+	for _, w := range wholes {
+		if c.has(w) {
+			return nil
+		}
+	}
+	return object("", "was not typed, and "+strings.Join(wholes, " or ")+", whose sum takes it in, is not printed")
+}
+
+func prepared(c *check, _ int, text string) *objection {
+	if _, ok := readMoment(text); !ok {
+		return object("", "cannot be read as a date and time")
+	}
+	return c.partOf(Prepared, text, UseBy, EmptyAt)
+}
+
+func preparedOffset(c *check, _ int, text string) *objection {
+	if _, ok := readOffset(text); !ok {
+		return object("", "cannot be read as an offset")
+	}
+	return c.partOf(PreparedOffset, text, UseBy)
+}
+
+func useByOffset(c *check, _ int, text string) *objection {
+	if _, ok := readOffset(text); !ok {
+		return object("", "cannot be read as an offset")
+	}
+	return c.partOf(UseByOffset, text, UseBy)
+}
+
+func emptyOffset(c *check, _ int, text string) *objection {
+	if _, ok := readOffset(text); !ok {
+		return object("", "cannot be read as an offset")
+	}
+	return c.partOf(EmptyOffset, text, EmptyAt)
+}
+
+func useHours(c *check, _ int, text string) *objection {
+	if _, lack := spanMinutes(text); lack != "" {
+		return object("", "cannot be read as whole minutes")
+	}
+	if c.was(UseHours) {
+		return asTyped(UseHours)(c, 0, text)
+	}
+	return c.partOf(UseHours, text, UseBy)
+}
+
+// readRun reads "9 h 25 min", "9 h" or "45 min" in minutes; an hour is never
+// written as 60 min, and a part that is nothing is not written.
+func readRun(text string) (value, bool) {
+	words := strings.Split(text, " ")
+	if len(words) != 2 && len(words) != 4 {
+		return value{}, false
+	}
+	total := whole(0)
+	if words[1] == "h" {
+		hours, err := printedNumber(words[0])
+		if err != nil || hours.sign() == 0 || !hours.isMultiple(whole(1)) {
+			return value{}, false
+		}
+		total = hours.times(whole(60))
+		words = words[2:]
+		if len(words) == 0 {
+			return total.ofKind(one(inTime)), true
+		}
+	}
+	if len(words) != 2 || words[1] != "min" {
+		return value{}, false
+	}
+	minutes, err := printedNumber(words[0])
+	if err != nil || !minutes.isMultiple(whole(1)) || minutes.against(whole(60)) >= 0 {
+		return value{}, false
+	}
+	if minutes.sign() == 0 && total.sign() != 0 {
+		return value{}, false
+	}
+	return total.plus(minutes).ofKind(one(inTime)), true
+}
+
+// runTime is the final volume over the start rate, whole minutes, down.
+func runTime(c *check, _ int, text string) *objection {
+	minutes, ok := readRun(text)
+	if !ok {
+		return object("", "cannot be read as hours and minutes")
+	}
+	minute := whole(1).ofKind(one(inTime))
+	r := reading{number: minutes.bare(one(inTime)), unit: minute, whole: minutes}
+	return onStep(r, c.get(FinalVolume).over(c.get(StartRate)), minute, downward)
+}
+
+func emptyAt(c *check, _ int, text string) *objection {
+	if _, ok := readMoment(text); !ok {
+		return object("", "cannot be read as a date and time")
+	}
+	run, ok := c.texts[RunTime]
+	if !ok {
+		return object("", "needs run.time, which is not printed")
+	}
+	minutes, ok := readRun(run)
+	if !ok {
+		return object("", "needs run.time, which cannot be read")
+	}
+	offset := EmptyOffset
+	if !c.has(EmptyOffset) {
+		offset = PreparedOffset
+	}
+	return c.spans(Prepared, PreparedOffset, EmptyAt, offset, minutes)
+}
