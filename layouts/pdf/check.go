@@ -140,35 +140,60 @@ func (b *box) add(x, y ink.Micrometre) {
 	b.top, b.bottom = min(b.top, y), max(b.bottom, y)
 }
 
+// within reports whether the box lies on the page. A box that ends before it
+// begins comes from lengths beyond 64 bits.
+func (b box) within(page ink.Page) bool {
+	return 0 <= b.left && b.left <= b.right && b.right <= page.W &&
+		0 <= b.top && b.top <= b.bottom && b.bottom <= page.H
+}
+
 // checkMark checks one mark by itself and against the page's edges.
 func checkMark(number int, page ink.Page, mark ink.Mark) error {
-	name, reason := "", ""
+	var reason string
 	var b box
 	switch m := mark.(type) {
 	case ink.Text:
-		name = fmt.Sprintf("text %q", m.String)
-		if missing := faceOf(m.Face).Missing(m.String); len(missing) > 0 && faceOf(m.Face) != nil {
-			return MissingGlyph{missing[0], m.String, number}
-		}
 		reason, b = textFault(m), textBox(m)
+		if reason == "" {
+			if missing := faceOf(m.Face).Missing(m.String); len(missing) > 0 {
+				return MissingGlyph{missing[0], m.String, number}
+			}
+		}
 	case ink.Rect:
-		name, reason, b = "rectangle", rectFault(m), rectBox(m)
+		reason, b = rectFault(m), rectBox(m)
 	case ink.Line:
-		name, reason, b = "line", lineFault(m), lineBox(m)
+		reason, b = lineFault(m), lineBox(m)
 	case ink.Polygon:
-		name, reason, b = "polygon", polygonFault(m), polygonBox(m)
+		reason, b = polygonFault(m), polygonBox(m)
 	case ink.Symbol:
-		name, reason, b = "symbol", symbolFault(m), symbolBox(m)
+		reason, b = symbolFault(m), symbolBox(m)
 	default:
-		name, reason = fmt.Sprintf("%T", mark), "got an unknown mark, want Text, Rect, Line, Polygon or Symbol"
+		reason = "got an unknown mark, want Text, Rect, Line, Polygon or Symbol"
 	}
 	if reason != "" {
-		return BadMark{number, name, reason}
+		return BadMark{number, name(mark), reason}
 	}
-	if b.left < 0 || b.top < 0 || b.right > page.W || b.bottom > page.H {
-		return OffPage{number, name, b.left, b.top, b.right, b.bottom, page.W, page.H}
+	if !b.within(page) {
+		return OffPage{number, name(mark), b.left, b.top, b.right, b.bottom, page.W, page.H}
 	}
 	return nil
+}
+
+// name says in an error which mark is meant.
+func name(mark ink.Mark) string {
+	switch m := mark.(type) {
+	case ink.Text:
+		return fmt.Sprintf("text %q", m.String)
+	case ink.Rect:
+		return "rectangle"
+	case ink.Line:
+		return "line"
+	case ink.Polygon:
+		return "polygon"
+	case ink.Symbol:
+		return "symbol"
+	}
+	return fmt.Sprintf("mark %T", mark)
 }
 
 func textFault(m ink.Text) string {
@@ -259,8 +284,8 @@ func polygonBox(m ink.Polygon) box {
 }
 
 func symbolFault(m ink.Symbol) string {
-	if m.Module <= 0 {
-		return fmt.Sprintf("got module %d, want more than 0", m.Module)
+	if m.Module <= 0 || m.Module > widest {
+		return fmt.Sprintf("got module %d, want 1 to %d micrometres", m.Module, widest)
 	}
 	if len(m.Rows) == 0 || len(m.Rows[0]) == 0 {
 		return "got no modules, want at least one"

@@ -4,10 +4,13 @@ import (
 	"bytes"
 	"errors"
 	"fmt"
+	"math"
 	"strings"
 	"testing"
 	"time"
+	"unicode"
 
+	"drawup/fonts"
 	"drawup/layouts/ink"
 	"drawup/layouts/pdf"
 	"drawup/layouts/pdf/readback"
@@ -86,6 +89,37 @@ func TestTextReadBack(t *testing.T) {
 		}
 		if got.Colour != want.Colour || got.Upwards != (want.Rotate == 90) {
 			t.Errorf("%q: got colour %s, upwards %t", want.String, got.Colour, got.Upwards)
+		}
+	}
+}
+
+// Every letter that a face covers comes back as itself from the file.
+func TestEveryLetter(t *testing.T) {
+	for _, name := range fonts.Names() {
+		page := ink.Page{W: ink.MM(1000), H: ink.MM(1000)}
+		var lines []string
+		line := ""
+		for r := rune(0x21); r <= 0xFFFF; r++ {
+			if fonts.Get(name).Covers(r) && r != 'μ' && !unicode.IsSpace(r) {
+				line += string(r)
+			}
+			if len(line) >= 60 || r == 0xFFFF && line != "" {
+				lines, line = append(lines, line), ""
+			}
+		}
+		for i, line := range lines {
+			page.Add(ink.Text{X: ink.MM(10), Y: ink.MM(20 + 8*int64(i)), Size: 4000, Face: ink.Face(name), Colour: ink.Black, String: line})
+		}
+		runs := readback.Open(t, written(t, document(page))).Text(1)
+		if len(runs) != len(lines) {
+			t.Fatalf("%s: got %d lines, want %d", name, len(runs), len(lines))
+		}
+		for i, want := range lines {
+			// The renderer reads a ligature's letters.
+			want = strings.NewReplacer("ﬁ", "fi", "ﬂ", "fl").Replace(want)
+			if runs[i].Text != want {
+				t.Errorf("%s: got %q, want %q", name, runs[i].Text, want)
+			}
 		}
 	}
 }
@@ -260,6 +294,10 @@ func TestFaults(t *testing.T) {
 		{"ragged", ink.Symbol{Module: 1, Rows: []string{"##", "#"}}, "pdf.BadMark page 2: symbol: got 1 modules in row 2"},
 		{"other byte", ink.Symbol{Module: 1, Rows: []string{"#x"}}, "pdf.BadMark page 2: symbol: got row"},
 		{"symbol over the edge", ink.Symbol{Module: 20_000, Rows: []string{"##"}}, "pdf.OffPage"},
+		{"module beyond all pages", ink.Symbol{Module: 1 << 62, Rows: []string{"####"}}, "pdf.BadMark page 2: symbol: got module"},
+		{"width beyond 64 bits", ink.Filled(1, 0, math.MaxInt64, 1, ink.Black), "pdf.OffPage"},
+		{"place beyond 64 bits", ink.Filled(math.MaxInt64, 0, 1, 1, ink.Black), "pdf.OffPage"},
+		{"text beyond 64 bits", with(func(t *ink.Text) { t.X = math.MaxInt64 }), "pdf.OffPage"},
 		{"no mark", nil, "pdf.BadMark page 2"},
 	} {
 		bad := ink.Page{W: page.W, H: page.H, Marks: []ink.Mark{c.mark}}

@@ -56,9 +56,8 @@ func TestSymbolDecodes(t *testing.T) {
 }
 
 // labels is an invented job: 65 labels a page, each with a coloured band, six
-// strings and a symbol, drawn by the given function.
+// strings and a symbol of its own, drawn by the given function.
 func labels(b *testing.B, count int, symbol func(page *ink.Page, x, y ink.Micrometre, rows []string)) pdf.Document {
-	rows := encode(b, "910123456789012345678901234567890123456789")
 	var pages []ink.Page
 	for i := range count {
 		if i%65 == 0 {
@@ -71,7 +70,7 @@ func labels(b *testing.B, count int, symbol func(page *ink.Page, x, y ink.Microm
 			page.Add(ink.Text{X: x + 1000, Y: y + 3000 + ink.Micrometre(line)*2500, Size: 2500, Face: ink.CondensedRegular,
 				Colour: ink.Black, String: fmt.Sprintf("label %d line %d", i, line)})
 		}
-		symbol(page, x+26_000, y+6000, rows)
+		symbol(page, x+26_000, y+6000, encode(b, fmt.Sprintf("91%040d", 7_654_321*i)))
 	}
 	return document(pages...)
 }
@@ -110,3 +109,18 @@ func benchmark(b *testing.B, symbol func(*ink.Page, ink.Micrometre, ink.Micromet
 
 func BenchmarkSymbolPath(b *testing.B)       { benchmark(b, asPath) }
 func BenchmarkSymbolRectangles(b *testing.B) { benchmark(b, asRectangles) }
+
+// BenchmarkOneLabel is what a person waits for: one label with a text in each
+// of the four faces, the time of which is nearly all the library's font work.
+func BenchmarkOneLabel(b *testing.B) {
+	page := ink.Page{W: ink.MM(35), H: ink.MM(12)}
+	for i, face := range []ink.Face{ink.Regular, ink.Bold, ink.CondensedRegular, ink.CondensedSemiBold} {
+		page.Add(ink.Text{X: 1000, Y: ink.MM(3 + 2*int64(i)), Size: 2500, Face: face, Colour: ink.Black, String: "Testamine 1 mg/mL"})
+	}
+	doc := document(page)
+	for b.Loop() {
+		if err := pdf.Write(io.Discard, doc); err != nil {
+			b.Fatal(err)
+		}
+	}
+}
