@@ -106,9 +106,31 @@ func (c *check) checkOne(rules map[string]rule, name string) {
 		c.add(papers, name, text, "", "the second route has no sum for a figure of this name")
 		return
 	}
-	if o := work(c, row, text); o != nil {
+	o := work(c, row, text)
+	if o == nil {
+		o = c.honoured(name, text)
+	}
+	if o != nil {
 		c.add(papers, name, text, o.gets, o.why)
 	}
+}
+
+// honoured holds a figure against what was typed under its own name, so that
+// nothing typed is passed over. Names whose rule has already weighed the typed
+// text in its own way are left out.
+func (c *check) honoured(name, text string) *objection {
+	if !c.was(name) || isStocked(name) {
+		return nil
+	}
+	switch name {
+	case AmountInSyringe, Concentration, ContainerCount, Age, Sex, Prepared:
+		return nil
+	}
+	r, err := readPrinted(text)
+	if err != nil {
+		return c.sameText(name, text)
+	}
+	return exact(r, c.typed(name), "typed as")
 }
 
 // checkAsked refuses what was asked twice in different words, and what the

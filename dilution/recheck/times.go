@@ -123,7 +123,21 @@ func prepared(c *check, _ int, text string) *objection {
 	if _, ok := readMoment(text); !ok {
 		return object("", "cannot be read as a date and time")
 	}
+	if c.was(Prepared) {
+		return sameMoment(c.asked[Prepared][0], text)
+	}
 	return c.partOf(Prepared, text, UseBy, EmptyAt)
+}
+
+// sameMoment compares a printed moment with the typed one, whichever of the
+// two printed styles it was typed in.
+func sameMoment(typed, text string) *objection {
+	want, ok := readMoment(typed)
+	got, known := readMoment(text)
+	if !ok || !known || !want.Equal(got) {
+		return object(typed, "was typed so")
+	}
+	return nil
 }
 
 func preparedOffset(c *check, _ int, text string) *objection {
