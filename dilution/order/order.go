@@ -1,0 +1,107 @@
+package order
+
+import (
+	"time"
+
+	"drawup/dilution/body"
+	"drawup/dilution/quantity"
+	"drawup/dilution/refusal"
+)
+
+// A Field is one value with the text it was read from and its place. A value
+// that is not in the file has no text; one that could not be read has its text,
+// a zero Value, and a reason in the list of [Read].
+type Field[T any] struct {
+	Value T
+	Text  string      // as written; "" if not given
+	Pos   refusal.Pos // of the value, or of the nearest table when not given
+}
+
+// Given reports whether the file holds a text for the field.
+func (f Field[T]) Given() bool { return f.Text != "" }
+
+// An Order is one order file.
+type Order struct {
+	File     string
+	Session  Session
+	Site     Site
+	Patients []Patient
+	// Syringes holds all syringes in making order: patient by patient as they
+	// stand in the file, first the patient's syringes, then the infusions.
+	Syringes []Syringe
+}
+
+// A Session is when, where and by whom the syringes are made.
+type Session struct {
+	Place    Field[string]
+	Prepared Field[time.Time] // Date and Clock in Zone
+	Date     Field[string]    // "2026-12-01"
+	Clock    Field[string]    // "07:30"
+	Zone     Field[string]    // IANA name or "+01:00"; UTC when not given
+	Preparer Field[string]
+	Invented bool // demonstration data, said on every sheet
+}
+
+// A Site is the house's settings. What is not given has the caller's default.
+type Site struct {
+	Style          Field[quantity.Style]
+	BolusUseBy     Field[time.Duration]
+	InfusionUseBy  Field[time.Duration]
+	Smallest       Field[quantity.Volume]  // smallest volume that may be measured (R8)
+	Tolerance      Field[quantity.Percent] // how far a graduation may move a volume (R8)
+	PumpStep       Field[quantity.FlowRate]
+	Barrels        []Field[quantity.Volume] // syringe sizes in stock
+}
+
+// A Patient is whom the syringes are for.
+type Patient struct {
+	ID, Name  Field[string]
+	Sex       Field[body.Sex]
+	Age       Field[body.Age]
+	Height    Field[quantity.Length]
+	Weight    Field[quantity.BodyWeight]
+	Weighed   Field[string] // when or how, in the user's words
+	Estimated bool          // the weight is an estimate
+	Pos       refusal.Pos
+}
+
+// A Syringe is one syringe that is wanted, given at once or by a pump.
+type Syringe struct {
+	Number   int // in making order, from 1
+	Patient  int // index in Order.Patients
+	Infusion bool
+	Pos      refusal.Pos
+
+	Drug, Presentation, Indication Field[string]
+	Diluent, Route, Line, Batch    Field[string]
+	// Expiry is the last minute of the day, or of the month, that the
+	// presentation's pack states, in the session's zone.
+	Expiry Field[time.Time]
+	Size   Field[quantity.Volume] // nominal volume of the giving syringe
+
+	// Of a syringe: one of dose; amount; amount and volume; concentration and
+	// volume; a dose with either of these pairs.
+	Dose          Field[quantity.Dose]
+	DoseBy        Field[body.Kind] // the word after the dose: "0.3 mg/kg lean"
+	Amount        Field[quantity.Amount]
+	Concentration Field[quantity.Concentration]
+	Volume        Field[quantity.Volume]
+
+	// Of an infusion: a standard preparation by name, or a mixture.
+	Standard        Field[string]
+	MixAmount       Field[quantity.Amount]
+	MixVolume       Field[quantity.Volume]
+	Method          Field[string] // one of the Method texts; MakeUpTo when not given
+	Start, From, To Field[quantity.DoseRate]
+	RateBy          Field[body.Kind] // the word after the start dose rate
+
+	// A named person and a reason take the responsibility for a soft limit (R11).
+	AcceptedBy, AcceptedReason Field[string]
+}
+
+// Methods of mixing: three different sums (rule R5).
+const (
+	MakeUpTo        = "make up to"
+	AddTo           = "add to"
+	WithdrawThenAdd = "withdraw, then add"
+)
