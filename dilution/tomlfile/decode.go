@@ -109,7 +109,7 @@ func syntaxReason(pos refusal.Pos, line, message string) refusal.Reason {
 	case plain == value:
 		why = "the value of %q is not in quotes"
 	}
-	r.Message = fmt.Sprintf("line %d cannot be read: "+why+"", pos.Line, key)
+	r.Message = fmt.Sprintf("line %d cannot be read: "+why, pos.Line, key)
 	return r
 }
 
@@ -181,7 +181,7 @@ func (s *survey) wrongType(e expression, err *toml.DecodeError) refusal.Reason {
 	want := wanted(err.Error())
 	r := refusal.Reason{
 		Code: refusal.ValueWrongType, Severity: refusal.Refuse, Field: e.key, Pos: s.lines.at(s.lines.offset(err.Position())),
-		Got: kindInWords(e.value), Want: want, Remedy: "write " + want + "",
+		Got: kindInWords(e.value), Want: want, Remedy: "write " + want,
 	}
 	if raw := shortened(e.raw); raw != "" && e.value != unstable.InlineTable {
 		r.Got += " " + raw

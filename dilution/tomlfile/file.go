@@ -79,13 +79,13 @@ func notUTF8(text []byte) int {
 
 func unreadable(path string, err error) refusal.List {
 	why := err.Error()
-	remedy := "check the file and the right to read it."
+	remedy := "check the file and the right to read it"
 	var p *fs.PathError
 	if errors.As(err, &p) {
 		why = p.Err.Error()
 	}
 	if errors.Is(err, fs.ErrNotExist) {
-		why, remedy = "no such file", "check the name and the folder."
+		why, remedy = "no such file", "check the name and the folder"
 	}
 	return one(path, refusal.FileUnreadable, fmt.Sprintf("the file %q cannot be read: %s", path, why),
 		why, "a file that can be read", remedy)

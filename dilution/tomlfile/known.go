@@ -20,7 +20,7 @@ func (s *survey) unknown(missing *toml.StrictMissingError, known []string) refus
 		offset := s.lines.offset(e.Position())
 		path := []string(e.Key())
 		r := refusal.Reason{Code: refusal.KeyUnknown, Severity: refusal.Refuse,
-			Field: strings.Join(path, ""), Want: "a key that this table has", Remedy: "take the line out", Pos: s.lines.at(offset)}
+			Field: strings.Join(path, "."), Want: "a key that this table has", Remedy: "take the line out", Pos: s.lines.at(offset)}
 		if len(path) == 0 {
 			list = append(list, r)
 			continue
@@ -29,7 +29,7 @@ func (s *survey) unknown(missing *toml.StrictMissingError, known []string) refus
 		r.Got = key
 		r.Message = fmt.Sprintf("there is no key %q here", key)
 		if len(table) > 0 {
-			r.Message = fmt.Sprintf("there is no key %q in %q", key, strings.Join(table, ""))
+			r.Message = fmt.Sprintf("there is no key %q in %q", key, strings.Join(table, "."))
 		}
 		if likely := likelyKey(key, table, known); likely != "" {
 			r.Want, r.Remedy = likely, fmt.Sprintf("write %q, if that is meant", likely)
@@ -60,7 +60,7 @@ func (s *survey) noteLikely(offset int, likely string) {
 func likelyKey(key string, table, known []string) string {
 	best, likely := len(key)/3+1, ""
 	for _, k := range known {
-		parts := strings.Split(k, "")
+		parts := strings.Split(k, ".")
 		if len(parts) != len(table)+1 || !sameTable(parts[:len(table)], table) {
 			continue
 		}

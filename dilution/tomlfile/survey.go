@@ -91,7 +91,7 @@ func (s *survey) expression(n *unstable.Node) {
 		e.raw = string(s.parser.Raw(n.Value().Raw))
 		names := keyNames(n)
 		e.short = names[len(names)-1]
-		e.key = strings.TrimPrefix(s.dotted+"."+strings.Join(names, ""), "")
+		e.key = strings.TrimPrefix(s.dotted+"."+strings.Join(names, "."), ".")
 		s.exprs = append(s.exprs, e)
 		if s.dropping || !s.keyValue(s.table, n, 0) {
 			s.blank(e.from, e.to)
@@ -115,7 +115,7 @@ func (s *survey) header(n *unstable.Node) {
 	it.Next()
 	start := int(it.Node().Raw.Offset)
 	e := expression{from: s.lines.starts[s.lines.line(start)], header: true,
-		key: strings.Join(names, ""), short: names[len(names)-1]}
+		key: strings.Join(names, "."), short: names[len(names)-1]}
 	_, e.to = s.lines.span(s.lines.line(start))
 	s.exprs = append(s.exprs, e)
 	path, ok := "", true
