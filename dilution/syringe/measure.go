@@ -1,0 +1,151 @@
+package syringe
+
+import (
+	"fmt"
+	"math/big"
+
+	"drawup/dilution/quantity"
+)
+
+// A Reading is a volume on the graduation of a barrel.
+type Reading struct {
+	Barrel Barrel
+	// Volume is what is read: a multiple of the barrel's graduation.
+	Volume quantity.Volume
+	// MovedPercent is Volume minus the wanted volume in per cent of the wanted
+	// one; 0 if nothing moved (rule R2).
+	MovedPercent *big.Rat
+	// Tolerance is how far the expelled volume may be off, in mL either way.
+	Tolerance quantity.Volume
+	// UnderFifth reports a volume under 20 % of the barrel's capacity (rule R8).
+	UnderFifth bool
+}
+
+// Relative is the tolerance in per cent of the volume, for [Interval]; not
+// given for the zero Reading.
+func (r Reading) Relative() quantity.Percent {
+	if !r.Tolerance.Given() || !positive(r.Volume) {
+		return quantity.Percent{}
+	}
+	x := new(big.Rat).Quo(r.Tolerance.Rat(), r.Volume.Rat())
+	return quantity.PerCent(x.Mul(x, big.NewRat(100, 1)))
+}
+
+// BelowSmallest says that a volume is smaller than the site measures (rule R8).
+// OnGraduation is given where only the move to the graduation went below.
+type BelowSmallest struct {
+	Got, OnGraduation, Smallest quantity.Volume
+}
+
+func (e *BelowSmallest) Error() string {
+	if e.OnGraduation.Given() {
+		return fmt.Sprintf("got %s mL, which reads %s mL, want at least %s mL", text(e.Got), text(e.OnGraduation), text(e.Smallest))
+	}
+	return fmt.Sprintf("got %s mL, want at least %s mL", text(e.Got), text(e.Smallest))
+}
+
+// NoBarrel says that no barrel holds a volume. Largest is the largest there
+// is; not given where there is none at all.
+type NoBarrel struct {
+	Got, Largest quantity.Volume
+}
+
+func (e *NoBarrel) Error() string {
+	return fmt.Sprintf("got %s mL, want at most %s mL, the largest barrel", text(e.Got), text(e.Largest))
+}
+
+// OffGraduation says that the graduation is too coarse for a volume: moving it
+// to the nearest line changes it by more than the site allows (rule R8).
+type OffGraduation struct {
+	Got, Moved quantity.Volume
+	Barrel     Barrel
+	Percent    *big.Rat // moved minus wanted, in per cent of wanted
+	Within     quantity.Percent
+}
+
+func (e *OffGraduation) Error() string {
+	return fmt.Sprintf("got %s mL, nearest line %s mL on the %s mL barrel, a change of %s %%, want at most %s %% either way",
+		text(e.Got), text(e.Moved), text(e.Barrel.nominal), e.Percent.FloatString(1), e.Within.Exact())
+}
+
+// Measure finds the smallest barrel of stock that holds v and reads v on it,
+// moved half up to its graduation (rules R2 and R8). No other barrel is tried
+// when that one is too coarse: larger barrels are never graduated more finely
+// ([Known]), so the smallest one that fits has the finest graduation. Of two
+// barrels of one capacity the finer one is taken.
+//
+// Smallest is the site's smallest measurable volume; within is how far, in per
+// cent of v, the move may go. Errors: *quantity.NotGivenError, *BelowSmallest,
+// *NoBarrel, *OffGraduation.
+func Measure(v quantity.Volume, stock []Barrel, smallest quantity.Volume, within quantity.Percent) (Reading, error) {
+	if err := readable(v, smallest, within); err != nil {
+		return Reading{}, err
+	}
+	if v.Cmp(smallest) < 0 {
+		return Reading{}, &BelowSmallest{Got: v, Smallest: smallest}
+	}
+	var fits Barrel
+	var largest quantity.Volume
+	for _, b := range stock {
+		if !b.Given() {
+			continue
+		}
+		if !largest.Given() || b.nominal.Cmp(largest) > 0 {
+			largest = b.nominal
+		}
+		if b.nominal.Cmp(v) >= 0 && (!fits.Given() || b.before(fits)) {
+			fits = b
+		}
+	}
+	if !fits.Given() {
+		return Reading{}, &NoBarrel{Got: v, Largest: largest}
+	}
+	return fits.Read(v, smallest, within)
+}
+
+// before reports whether b is smaller than c, or as large and finer.
+func (b Barrel) before(c Barrel) bool {
+	if n := b.nominal.Cmp(c.nominal); n != 0 {
+		return n < 0
+	}
+	return b.step.Cmp(c.step) < 0
+}
+
+// Read reads v on this barrel, moved half up to its graduation, for a barrel
+// that is already chosen. Arguments and errors are those of [Measure].
+func (b Barrel) Read(v, smallest quantity.Volume, within quantity.Percent) (Reading, error) {
+	if err := readable(v, smallest, within); err != nil {
+		return Reading{}, err
+	}
+	if v.Cmp(smallest) < 0 {
+		return Reading{}, &BelowSmallest{Got: v, Smallest: smallest}
+	}
+	if !b.Given() || b.nominal.Cmp(v) < 0 {
+		return Reading{}, &NoBarrel{Got: v, Largest: b.nominal}
+	}
+	moved, percent, err := v.ToStep(b.step, quantity.HalfUp)
+	if err != nil {
+		return Reading{}, err
+	}
+	if moved.IsZero() || new(big.Rat).Abs(percent).Cmp(within.Rat()) > 0 {
+		return Reading{}, &OffGraduation{Got: v, Moved: moved, Barrel: b, Percent: percent, Within: within}
+	}
+	if moved.Cmp(smallest) < 0 {
+		return Reading{}, &BelowSmallest{Got: v, OnGraduation: moved, Smallest: smallest}
+	}
+	fifth := share(b.nominal.Rat(), 1, 5)
+	return Reading{Barrel: b, Volume: moved, MovedPercent: percent, Tolerance: b.Tolerance(moved), UnderFifth: moved.Cmp(fifth) < 0}, nil
+}
+
+// readable refuses to measure with a value missing.
+func readable(v, smallest quantity.Volume, within quantity.Percent) error {
+	switch {
+	case !positive(v):
+		return &quantity.NotGivenError{What: "a volume above zero to measure"}
+	case !smallest.Given():
+		return &quantity.NotGivenError{What: "the smallest measurable volume"}
+	case !within.Given():
+		return &quantity.NotGivenError{What: "how far a volume may move to a graduation"}
+	}
+	return nil
+}
