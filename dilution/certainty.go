@@ -1,0 +1,109 @@
+package dilution
+
+import (
+	"math/big"
+	"time"
+
+	"drawup/dilution/quantity"
+	"drawup/dilution/refusal"
+	"drawup/dilution/syringe"
+)
+
+func one() *big.Rat { return big.NewRat(1, 1) }
+
+// assumedAssay is the half width used where the record has no assay limits:
+// the wider of the two common pharmacopoeia ranges (calculation.md part d).
+const assumedAssay = "10 %"
+
+// certainty states the interval in which the true concentration lies (R9).
+func (w *work) certainty() bool {
+	m := &w.plan.Mixture
+	m.Assay = w.plan.Presentation.Assay.Value
+	if !w.plan.Presentation.Assay.Given() {
+		a, err := quantity.ParsePercent(assumedAssay)
+		if err != nil {
+			return w.fault(err, "assay", w.o.Pos)
+		}
+		m.Assay, m.AssayAssumed = a, true
+		w.caution(refusal.Reason{Code: refusal.AssayAssumed, Rule: "R9", Field: "assay", Got: "none stored", Want: assumedAssay,
+			Message: "the formulary has no assay limits for this container; plus or minus " + assumedAssay + " is assumed for the interval"})
+	}
+	parts := []quantity.Percent{m.Assay}
+	if m.Method != Neat {
+		parts = append(parts, m.DrugReading.Relative())
+		if !m.InBag {
+			parts = append(parts, relative(m.FinalBarrel, m.FinalVolume))
+		}
+	}
+	var err error
+	if m.Interval, err = syringe.Interval(parts...); err != nil {
+		return w.fault(err, "interval", w.o.Pos)
+	}
+	share := new(big.Rat).Quo(m.Interval.Rat(), big.NewRat(100, 1))
+	m.Low = m.Concentration.Scaled(new(big.Rat).Sub(one(), share))
+	m.High = m.Concentration.Scaled(new(big.Rat).Add(one(), share))
+	return true
+}
+
+// relative is the tolerance of reading v in barrel b, in per cent of v.
+func relative(b syringe.Barrel, v quantity.Volume) quantity.Percent {
+	rel := new(big.Rat).Quo(b.Tolerance(v).Rat(), v.Rat())
+	return quantity.PerCent(rel.Mul(rel, big.NewRat(100, 1)))
+}
+
+// useBy is the earliest of site policy, stability and expiry (R18). Hours are
+// absolute.
+func (w *work) useBy() bool {
+	policy := w.site.bolus
+	if w.o.Infusion {
+		policy = w.site.infusion
+	}
+	best := UseBy{Minutes: policy.minutes, Won: "site policy", Source: policy.source}
+	known := false
+	for _, s := range w.plan.Drug.Stability {
+		if s.Storage != "room" || !w.stabilityFits(s.Diluent) {
+			continue
+		}
+		known = true
+		if s.Minutes < best.Minutes {
+			best = UseBy{Minutes: s.Minutes, Won: "stability, " + s.Diluent + ", at room temperature", Source: s.Source.Title}
+		}
+	}
+	if !known {
+		w.caution(refusal.Reason{Code: refusal.UseByUnknown, Rule: "R18", Field: "stability", Got: "none stored", Want: "a stability for " + w.fluid(),
+			Message: "the formulary has no room-temperature stability for this preparation; the use-by time follows site policy alone", Remedy: "check the pack and local policy"})
+	}
+	best.At = w.plan.Prepared.Add(time.Duration(best.Minutes) * time.Minute)
+	if !w.o.Expiry.Given() {
+		w.plan.UseBy = best
+		return true
+	}
+	return w.expiry(best)
+}
+
+// expiry lets the container's own expiry date win when it is earlier. A date
+// holds until the end of that day.
+func (w *work) expiry(best UseBy) bool {
+	end := w.o.Expiry.Value
+	if !end.After(w.plan.Prepared) {
+		return w.refuse(refusal.Reason{Code: refusal.ExpiredPresentation, Field: "expiry", Got: w.o.Expiry.Text, Want: "a date after " + w.plan.Prepared.Format("2006-01-02"), Rule: "R18", Pos: w.o.Expiry.Pos,
+			Message: "the container is past its expiry date", Remedy: "discard it and take another"})
+	}
+	if left := int64(end.Sub(w.plan.Prepared) / time.Minute); left < best.Minutes {
+		best = UseBy{At: end, Minutes: left, Won: "expiry of the container", Source: "the order"}
+	}
+	w.plan.UseBy = best
+	return true
+}
+
+func (w *work) stabilityFits(diluent string) bool {
+	return diluent == "any" || diluent == w.fluid()
+}
+
+// fluid is what the stability rows call this preparation.
+func (w *work) fluid() string {
+	if w.plan.Mixture.Method == Neat {
+		return "neat"
+	}
+	return w.plan.Mixture.Diluent
+}

@@ -1,0 +1,232 @@
+package formulary
+
+import (
+	"fmt"
+	"regexp"
+	"strings"
+	"time"
+
+	"drawup/dilution/body"
+	"drawup/dilution/quantity"
+	"drawup/dilution/refusal"
+)
+
+// classes are the label classes of label-rules.md 1.3.
+var classes = []string{"IND", "BZD", "BZD-A", "NMB", "SUX", "NMB-R", "OPI", "OPI-A", "VAS", "ADR", "HYP", "LA", "ACH", "AEM", "HEP", "PRO", "OTH"}
+
+// flags are the marks a drug may carry.
+var flags = []string{"high alert", "controlled", "protect from light", "filter needle", "in-line filter", "large vein", "central line preferred",
+	"paralysing", "emulsion", "no preservative for neuraxial", "vesicant", "separate line", "shake or invert", "keep refrigerated"}
+
+// atcPattern is the shape of an ATC code of the fifth level.
+var atcPattern = regexp.MustCompile(`^[A-Z]\d{2}[A-Z]{2}\d{2}$`)
+
+// drug reads the i-th drug of the file.
+func (r *reader) drug(rec drugRecord, i int) Drug {
+	d := Drug{Name: rec.Name, names: rec.Names, Also: rec.Also, ATC: rec.ATC, Class: rec.Class, CountedAs: rec.CountedAs, ShowAs: rec.ShowAs, Flags: rec.Flags,
+		Origin: r.text.Name, Raw: r.text.Data, Pos: r.places.Of("drug", i)}
+	r.identity(&d, rec, i)
+	for j := range rec.Cautions {
+		d.Cautions = append(d.Cautions, *r.note(&rec.Cautions[j], "drug", i, "caution", j))
+	}
+	d.NeverAsInfusion = r.note(rec.NoInfusion, "drug", i, "never_as_infusion")
+	d.NeverAsBolus = r.note(rec.NoBolus, "drug", i, "never_as_bolus")
+	d.Substance = figure(r, rec.Substance, parseFactor, "drug", i, "substance")
+	for j, p := range rec.Presentations {
+		d.Presentations = append(d.Presentations, r.presentation(p, d.Kind, "drug", i, "presentation", j))
+	}
+	for j, c := range rec.Concentrations {
+		d.Bounds = append(d.Bounds, r.bounds(c, "drug", i, "concentration", j))
+	}
+	for j, row := range rec.Doses {
+		d.Doses = append(d.Doses, r.doseRule(row, "drug", i, "dose", j))
+	}
+	for j, row := range rec.Infusions {
+		d.Rates = append(d.Rates, r.rateRule(row, "drug", i, "infusion", j))
+	}
+	for j, s := range rec.Standards {
+		d.Standards = append(d.Standards, r.standard(s, "drug", i, "standard", j))
+	}
+	for j, s := range rec.Stability {
+		d.Stability = append(d.Stability, r.stability(s, "drug", i, "stability", j))
+	}
+	return d
+}
+
+// identity checks the name, code, class, counting and flags of a drug.
+func (r *reader) identity(d *Drug, rec drugRecord, i int) {
+	if d.Name == "" || d.Name != strings.ToLower(d.Name) {
+		r.fault(refusal.KeyMissing, d.Name, "the INN in lower case", "the drug has no name in lower case", "drug", i, "name")
+	}
+	if !atcPattern.MatchString(d.ATC) {
+		r.fault(refusal.ValueUnknown, d.ATC, "a code such as N01AX07", "the ATC code has not the shape of one", "drug", i, "atc")
+	}
+	if !contains(classes, d.Class) {
+		r.fault(refusal.ValueUnknown, d.Class, strings.Join(classes, ", "), "the label class is not known", "drug", i, "class")
+	}
+	for j, f := range d.Flags {
+		if !contains(flags, f) {
+			r.fault(refusal.ValueUnknown, f, strings.Join(flags, ", "), "the flag is not known", "drug", i, "flags", j)
+		}
+	}
+	switch rec.Counted {
+	case "mass":
+		d.Kind = quantity.ByMass
+	case "units":
+		d.Kind = quantity.ByActivity
+	case "substance":
+		d.Kind = quantity.BySubstance
+	default:
+		r.fault(refusal.ValueUnknown, rec.Counted, "mass, units or substance", "the file does not say how the drug is counted", "drug", i, "counted")
+	}
+}
+
+// parseFactor reads "4 mmol/g".
+func parseFactor(s string) (Factor, error) {
+	head, ok := strings.CutSuffix(strings.TrimSpace(s), "/g")
+	if !ok {
+		return Factor{}, fmt.Errorf("got %q, want a factor such as \"4 mmol/g\"", s)
+	}
+	a, err := quantity.ParseAmount(head)
+	if err == nil && a.Kind() != quantity.BySubstance {
+		err = &quantity.KindError{Got: a.Kind(), Want: quantity.BySubstance}
+	}
+	return Factor{PerGram: a}, err
+}
+
+// parseMinutes reads "24 h", "30 min" or "7 days" as whole minutes.
+func parseMinutes(s string) (int64, error) {
+	number, unit, _ := strings.Cut(strings.TrimSpace(s), " ")
+	factor := map[string]int64{"min": 1, "h": 60, "hour": 60, "hours": 60, "day": 1440, "days": 1440}[unit]
+	var n int64
+	if _, err := fmt.Sscanf(number, "%d", &n); err != nil || factor == 0 || n <= 0 || n > int64(100*365*24*time.Hour/time.Minute) {
+		return 0, fmt.Errorf("got %q, want a time such as \"24 h\"", s)
+	}
+	return n * factor, nil
+}
+
+func (r *reader) presentation(rec presentationRecord, kind quantity.Kind, path ...any) Presentation {
+	p := Presentation{ID: rec.ID, Container: rec.Container, Form: rec.Form, AddFluids: rec.AddFluids, SecondName: rec.SecondName, Uses: rec.Uses, Neat: rec.Neat,
+		Source: r.source(rec.Source, path...), Pos: r.places.Of(path...)}
+	p.Unverified = rec.Unverified || p.Source.Grade == "C"
+	at := func(key string) []any { return append(append([]any{}, path...), key) }
+	if rec.ID == "" || !contains([]string{"ampoule", "vial", "syringe"}, rec.Container) || !contains([]string{"solution", "emulsion", "powder"}, rec.Form) {
+		r.fault(refusal.ValueUnknown, rec.ID+", "+rec.Container+", "+rec.Form, "an id, a container (ampoule, vial, syringe) and a form (solution, emulsion, powder)", "the presentation is not described", at("id")...)
+	}
+	a, err := quantity.ParseAmount(rec.Amount)
+	if err == nil && a.Kind() != kind {
+		err = &quantity.KindError{Got: a.Kind(), Want: kind}
+	}
+	if err != nil {
+		r.badText(rec.Amount, err, at("amount")...)
+	}
+	p.Amount = a
+	r.contents(&p, rec, at)
+	if rec.SecondName != "" {
+		if p.SecondAmount, err = quantity.ParseAmount(rec.SecondAmount); err != nil {
+			r.badText(rec.SecondAmount, err, at("second_amount")...)
+		}
+	}
+	p.Assay = figure(r, rec.Assay, quantity.ParsePercent, at("assay")...)
+	for _, u := range rec.Uses {
+		if u != "bolus" && u != "infusion" {
+			r.fault(refusal.ValueUnknown, u, "bolus or infusion", "the use is not known", at("uses")...)
+		}
+	}
+	p.Diluents = r.diluents(rec.Diluents, at("diluent"))
+	p.Forbidden = r.diluents(rec.Forbidden, at("forbidden_diluent"))
+	for j := range rec.Notes {
+		p.Notes = append(p.Notes, *r.note(&rec.Notes[j], append(at("note"), j)...))
+	}
+	return p
+}
+
+// contents reads what is in the container: a volume, or a powder with what is
+// added to it.
+func (r *reader) contents(p *Presentation, rec presentationRecord, at func(string) []any) {
+	if !p.Powder() {
+		v, err := quantity.ParseVolume(rec.Volume)
+		if err != nil {
+			r.badText(rec.Volume, err, at("volume")...)
+		}
+		p.Volume = v
+		return
+	}
+	added, err := quantity.ParseVolume(rec.Add)
+	if err != nil {
+		r.badText(rec.Add, err, at("add")...)
+		return
+	}
+	p.Added = added
+	if rec.Displacement == nil {
+		return
+	}
+	if rec.Displacement.Value == "negligible" {
+		s := r.source(rec.Displacement.Source, at("displacement")...)
+		p.Displacement = Figure[quantity.Volume]{Text: "negligible", Source: s, Unverified: rec.Displacement.Unverified || s.Grade == "C"}
+		p.Negligible, p.Volume = true, added
+		return
+	}
+	p.Displacement = figure(r, rec.Displacement, quantity.ParseVolume, at("displacement")...)
+	if p.Displacement.Value.Given() {
+		p.Volume = added.Plus(p.Displacement.Value)
+	}
+}
+
+func (r *reader) diluents(list []diluentRecord, path []any) []Diluent {
+	var out []Diluent
+	for j, d := range list {
+		if d.Name == "" {
+			r.fault(refusal.KeyMissing, "", "the name of a fluid", "a diluent has no name", append(append([]any{}, path...), j)...)
+		}
+		s := r.source(d.Source, append(append([]any{}, path...), j)...)
+		out = append(out, Diluent{Name: d.Name, Reason: d.Reason, Source: s, Unverified: d.Unverified || s.Grade == "C"})
+	}
+	return out
+}
+
+func (r *reader) bounds(rec concentrationRecord, path ...any) Bounds {
+	at := func(key string) []any { return append(append([]any{}, path...), key) }
+	b := Bounds{Use: rec.Use, Line: rec.Line,
+		Low:  figure(r, rec.Low, quantity.ParseConcentration, at("low")...),
+		High: figure(r, rec.High, quantity.ParseConcentration, at("high")...)}
+	if !contains([]string{"bolus", "infusion"}, b.Use) || !contains([]string{"any", "peripheral", "central"}, b.Line) {
+		r.fault(refusal.ValueUnknown, b.Use+", "+b.Line, "use bolus or infusion; line any, peripheral or central", "the row does not say what it is for", path...)
+	}
+	if b.Low.Given() && b.High.Given() {
+		if n, err := b.Low.Value.Cmp(b.High.Value); err != nil || n > 0 {
+			r.fault(refusal.KeyConflict, b.Low.Text+" to "+b.High.Text, "low not above high, counted the same way", "the bounds are out of order", path...)
+		}
+	}
+	return b
+}
+
+func (r *reader) standard(rec standardRecord, path ...any) Standard {
+	a, v, err := quantity.ParseMix(rec.Mix)
+	if err != nil {
+		r.badText(rec.Mix, err, append(append([]any{}, path...), "mix")...)
+	}
+	s := r.source(rec.Source, path...)
+	return Standard{ID: rec.ID, Amount: a, Volume: v, Diluent: rec.Diluent, Line: rec.Line, Jurisdiction: rec.Jurisdiction, Source: s, Unverified: rec.Unverified || s.Grade == "C"}
+}
+
+func (r *reader) stability(rec stabilityRecord, path ...any) Stability {
+	m, err := parseMinutes(rec.Hours)
+	if err != nil {
+		r.fault(refusal.TimeMalformed, rec.Hours, `a time such as "24 h"`, err.Error(), append(append([]any{}, path...), "hours")...)
+	}
+	s := r.source(rec.Source, path...)
+	return Stability{Diluent: rec.Diluent, Storage: rec.Storage, Minutes: m, Text: rec.Hours, Source: s, Unverified: rec.Unverified || s.Grade == "C"}
+}
+
+// ageText reads an age bound; blank is no bound.
+func (r *reader) age(s string, path ...any) body.Age {
+	if s == "" {
+		return body.Age{}
+	}
+	a, err := body.ParseAge(s)
+	if err != nil {
+		r.badText(s, err, path...)
+	}
+	return a
+}

@@ -1,0 +1,217 @@
+package dilution
+
+import (
+	"fmt"
+	"math/big"
+
+	"drawup/dilution/body"
+	"drawup/dilution/formulary"
+	"drawup/dilution/pump"
+	"drawup/dilution/quantity"
+	"drawup/dilution/refusal"
+)
+
+// rungs is how many steps a titration ladder aims at.
+const rungs = 9
+
+// infusion works the pump card: start rate, range, limits, ladder, slips.
+func (w *work) infusion() bool {
+	if !w.o.Infusion {
+		return true
+	}
+	rows, ok := fittingRows(w, w.plan.Drug.Rates, "dose rate")
+	if !ok {
+		return false
+	}
+	row, ok := w.pickRate(rows)
+	if !ok {
+		return false
+	}
+	part := &InfusionPart{Rule: row, Step: w.site.step}
+	by := row.By
+	if w.o.RateBy.Given() {
+		by = w.o.RateBy.Value
+	}
+	var err error
+	if part.Weight, part.Surface, part.By, err = w.scalar(w.o.Start.Value.Basis(), by); err != nil {
+		return w.sizeFault(err, "start", w.o.Start.Pos)
+	}
+	w.plan.Infusion = part
+	w.unlikeWeight(w.o.RateBy.Given(), w.o.RateBy.Value, row.By, row.BySource, w.o.RateBy.Pos)
+	w.weightNotes(part.By)
+	return w.setPump(part) && w.setRange(part) && w.extras(part)
+}
+
+// per is the weight or surface of the part, for package pump.
+func (p *InfusionPart) per() pump.Per {
+	switch {
+	case p.Weight.Given():
+		return pump.PerWeight(p.Weight)
+	case p.Surface.Given():
+		return pump.PerSurface(p.Surface)
+	}
+	return pump.PerNothing()
+}
+
+// pickRate chooses the row with the mildest verdict over start and range.
+func (w *work) pickRate(rows []formulary.Rule[quantity.DoseRate]) (formulary.Rule[quantity.DoseRate], bool) {
+	best, verdicts := -1, verdict{}
+	for i, row := range rows {
+		var all verdict
+		for _, f := range []struct {
+			rate  quantity.DoseRate
+			given bool
+			name  string
+			pos   refusal.Pos
+		}{{w.o.Start.Value, true, "start", w.o.Start.Pos}, {w.o.From.Value, w.o.From.Given(), "from", w.o.From.Pos}, {w.o.To.Value, w.o.To.Given(), "to", w.o.To.Pos}} {
+			if !f.given {
+				continue
+			}
+			v, err := w.judgeRate(row, f.rate, f.name, f.pos)
+			if err != nil {
+				return row, w.sizeFault(err, f.name, f.pos)
+			}
+			all.rank = max(all.rank, v.rank)
+			all.reasons = append(all.reasons, v.reasons...)
+		}
+		if best < 0 || all.rank < verdicts.rank {
+			best, verdicts = i, all
+		}
+	}
+	for _, r := range verdicts.reasons {
+		w.add(r)
+	}
+	return rows[best], verdicts.rank < 3
+}
+
+// judgeRate holds one dose rate against one row, as absolute rates.
+func (w *work) judgeRate(row formulary.Rule[quantity.DoseRate], rate quantity.DoseRate, field string, pos refusal.Pos) (verdict, error) {
+	by := row.By
+	if w.o.RateBy.Given() {
+		by = w.o.RateBy.Value
+	}
+	value, err := w.absoluteRate(rate, by)
+	if err != nil {
+		return verdict{}, err
+	}
+	s := scale{what: "dose rate", field: field, value: value, text: w.plan.Style.DoseRate(rate), codes: rateCodes, pos: pos,
+		acceptedBy: w.o.AcceptedBy.Value, acceptedReason: w.o.AcceptedReason.Value}
+	err = fillScale(&s, row, w.plan.Style.DoseRate, func(x quantity.DoseRate) (*big.Rat, error) { return w.absoluteRate(x, row.By) })
+	if err != nil {
+		return verdict{}, err
+	}
+	return s.judge(), nil
+}
+
+// absoluteRate is the rate for this patient in mg, units or mmol per hour.
+func (w *work) absoluteRate(d quantity.DoseRate, by body.Kind) (*big.Rat, error) {
+	if err := unitKind(d.Kind(), w.plan.Drug.Kind); err != nil {
+		return nil, err
+	}
+	weight, surface, _, err := w.scalar(d.Basis(), by)
+	if err != nil {
+		return nil, err
+	}
+	switch d.Basis() {
+	case quantity.PerKilogram:
+		d, err = d.For(weight)
+	case quantity.PerSquareMetre:
+		d, err = d.On(surface)
+	}
+	if err != nil {
+		return nil, err
+	}
+	return d.Rat(), nil
+}
+
+// setPump works the start rate.
+func (w *work) setPump(part *InfusionPart) bool {
+	s, c := w.plan.Style, w.plan.Mixture.Concentration
+	start, err := pump.Set(w.o.Start.Value, part.per(), c, part.Step)
+	if err != nil {
+		if exact, e := pump.Flow(w.o.Start.Value, part.per(), c); e == nil {
+			return w.refuse(refusal.Reason{Code: refusal.RateBelowPump, Field: "start", Got: s.FlowRate(exact), Want: "at least half of the pump's step, " + s.FlowRate(part.Step), Rule: "R8", Pos: w.o.Start.Pos,
+				Message: fmt.Sprintf("the start dose needs %s, less than the pump can be set to", s.FlowRate(exact)), Remedy: "use a weaker mixture"})
+		}
+		return w.fault(err, "start", w.o.Start.Pos)
+	}
+	part.Start = start
+	if new(big.Rat).Abs(start.LostPercent).Cmp(w.site.tolerance.Rat()) > 0 {
+		w.caution(refusal.Reason{Code: refusal.RateRounding, Field: "start", Got: s.FlowRate(start.Exact), Want: s.FlowRate(start.Rate), Rule: "R2", Pos: w.o.Start.Pos,
+			Message: fmt.Sprintf("rounding to the pump's step changes the start dose by %s; it gives %s", percentOf(s, start.LostPercent), s.DoseRate(start.Delivered)), Remedy: "a weaker mixture rounds less"})
+	}
+	if start.Rate.Rat().Cmp(one()) < 0 {
+		w.caution(refusal.Reason{Code: refusal.RateSlow, Field: "start", Got: s.FlowRate(start.Rate), Want: "1 mL/h or more", Rule: "R8", Pos: w.o.Start.Pos, Source: "Neff et al., Paediatr Anaesth 2001;11:561-565",
+			Message: "below 1 mL/h a syringe pump may take many minutes to begin delivering", Remedy: "purge the line on the pump before connecting, or use a weaker mixture"})
+	}
+	return true
+}
+
+// setRange works the range to titrate in, the hard limit and the ladder.
+func (w *work) setRange(part *InfusionPart) bool {
+	c := w.plan.Mixture.Concentration
+	low, high := w.rangeEnds(part)
+	var err error
+	if part.Low, err = pump.SetNotBelow(low, part.per(), c, part.Step); err != nil {
+		return w.fault(err, "from", w.o.Start.Pos)
+	}
+	if part.High, err = pump.SetNotAbove(high, part.per(), c, part.Step); err != nil {
+		return w.fault(err, "to", w.o.Start.Pos)
+	}
+	if h := part.Rule.HardHigh; h.Given() && h.Value.Basis() == w.o.Start.Value.Basis() {
+		if part.Limit, err = pump.SetNotAbove(h.Value, part.per(), c, part.Step); err != nil {
+			return w.fault(err, "limit", w.o.Start.Pos)
+		}
+	}
+	if part.Ladder, err = pump.Ladder(low, high, rungs, part.per(), c, part.Step); err != nil {
+		return w.fault(err, "ladder", w.o.Start.Pos)
+	}
+	return true
+}
+
+// rangeEnds are the ordered range, or the usual range of the row where it is
+// counted like the order, or half to double the start.
+func (w *work) rangeEnds(part *InfusionPart) (low, high quantity.DoseRate) {
+	start, row := w.o.Start.Value, part.Rule
+	low, high = start.Scaled(big.NewRat(1, 2)), start.Scaled(big.NewRat(2, 1))
+	alike := func(f formulary.Figure[quantity.DoseRate]) bool {
+		return f.Given() && f.Value.Basis() == start.Basis() && f.Value.Unit().String() == start.Unit().String() && f.Value.Period() == start.Period()
+	}
+	if alike(row.UsualLow) && alike(row.UsualHigh) {
+		low, high = row.UsualLow.Value, row.UsualHigh.Value
+	} else if t := row.HardHigh; alike(t) {
+		if n, err := high.Cmp(t.Value); err == nil && n > 0 {
+			high = t.Value
+		}
+	}
+	if w.o.From.Given() {
+		low = w.o.From.Value
+	}
+	if w.o.To.Given() {
+		high = w.o.To.Value
+	}
+	return widen(low, high, start)
+}
+
+// widen makes sure that the start lies inside the range.
+func widen(low, high, start quantity.DoseRate) (quantity.DoseRate, quantity.DoseRate) {
+	if n, err := start.Cmp(low); err == nil && n < 0 {
+		low = start
+	}
+	if n, err := start.Cmp(high); err == nil && n > 0 {
+		high = start
+	}
+	return low, high
+}
+
+// extras works the slips and the time until the syringe is empty.
+func (w *work) extras(part *InfusionPart) bool {
+	var err error
+	if part.Slips, err = pump.Slips(w.o.Start.Value, part.per(), w.plan.Mixture.Concentration, part.Step); err != nil {
+		return w.fault(err, "slips", w.o.Start.Pos)
+	}
+	if part.Minutes, err = w.plan.Mixture.FinalVolume.Minutes(part.Start.Rate); err != nil {
+		return w.fault(err, "run time", w.o.Start.Pos)
+	}
+	return true
+}

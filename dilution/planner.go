@@ -1,0 +1,205 @@
+package dilution
+
+import (
+	"fmt"
+	"time"
+
+	"drawup/dilution/body"
+	"drawup/dilution/formulary"
+	"drawup/dilution/order"
+	"drawup/dilution/quantity"
+	"drawup/dilution/refusal"
+)
+
+// A work is one syringe while it is being planned. Reasons gather; the steps
+// after a refusal still run where they can, so that all faults show at once.
+type work struct {
+	site    site
+	f       *formulary.Formulary
+	o       order.Syringe
+	patient order.Patient
+	size    body.Size
+	plan    Plan
+	doseOK  bool               // verdict of pickDose
+	noted   map[body.Kind]bool // weights already commented on
+	reasons refusal.List
+}
+
+// NewList plans every syringe of o that is not left out. It returns all
+// reasons; when any of them refuses, nothing of the list is to be made.
+func NewList(o order.Order, f *formulary.Formulary, at time.Time, leaveOut map[int]bool, faults refusal.List) (List, refusal.List) {
+	list := List{Order: o, Formulary: f, At: at}
+	var all refusal.List
+	for _, r := range faults {
+		if r.Syringe == 0 || !leaveOut[r.Syringe] {
+			all = append(all, r)
+		}
+	}
+	s, err := siteOf(o)
+	if err != nil {
+		return list, append(all, refusal.Reason{Code: refusal.FormularyBlank, Severity: refusal.Refuse, Message: err.Error()})
+	}
+	broken := brokenSyringes(faults)
+	for _, sy := range o.Syringes {
+		if broken[sy.Number] && !leaveOut[sy.Number] {
+			continue
+		}
+		p, reasons := newPlan(s, f, o, sy, at, broken[sy.Number])
+		if leaveOut[sy.Number] {
+			list.LeftOut = append(list.LeftOut, LeftOut{sy.Number, sy.Drug.Value, append(faults.Of(sy.Number), reasons.Refusals()...)})
+			continue
+		}
+		all = append(all, reasons...)
+		list.Plans = append(list.Plans, p)
+	}
+	if len(list.Plans) == 0 && !all.Refused() {
+		all = append(all, refusal.Reason{Code: refusal.NothingToMake, Severity: refusal.Refuse, Message: "every syringe of the order is left out",
+			Want: "at least one syringe", Remedy: "leave fewer out"})
+	}
+	return list, all
+}
+
+// brokenSyringes are those whose order could not be read whole.
+func brokenSyringes(faults refusal.List) map[int]bool {
+	broken := map[int]bool{}
+	for _, r := range faults.Refusals() {
+		if r.Syringe != 0 {
+			broken[r.Syringe] = true
+		}
+	}
+	return broken
+}
+
+// newPlan works one syringe. A syringe whose order could not be read whole is
+// not worked: its reasons are those of the reading.
+func newPlan(s site, f *formulary.Formulary, o order.Order, sy order.Syringe, at time.Time, broken bool) (Plan, refusal.List) {
+	w := &work{site: s, f: f, o: sy, patient: o.Patients[sy.Patient]}
+	w.plan = Plan{Number: sy.Number, Order: sy, Patient: w.patient, Style: s.style, Prepared: at, Route: "IV"}
+	if sy.Route.Given() {
+		w.plan.Route = sy.Route.Value
+	}
+	if broken {
+		return w.plan, nil
+	}
+	w.size = body.Size{Sex: w.patient.Sex.Value, Age: w.patient.Age.Value, Height: w.patient.Height.Value, Weight: w.patient.Weight.Value}
+	w.plan.Size = w.size
+	for _, step := range []func() bool{w.findDrug, w.choosePresentation, w.mix, w.checkConcentration, w.dose, w.infusion, w.certainty, w.useBy, w.balance} {
+		if !step() {
+			break
+		}
+	}
+	w.unverified()
+	w.plan.Cautions = w.reasons.Cautions()
+	return w.plan, w.reasons
+}
+
+// refuse adds a refusal and returns false, for "return w.refuse(…)".
+func (w *work) refuse(r refusal.Reason) bool {
+	r.Severity = refusal.Refuse
+	w.add(r)
+	return false
+}
+
+// caution adds a caution and returns true.
+func (w *work) caution(r refusal.Reason) bool {
+	r.Severity = refusal.Caution
+	w.add(r)
+	return true
+}
+
+func (w *work) add(r refusal.Reason) {
+	r.Syringe = w.o.Number
+	if r.Pos.Line == 0 {
+		r.Pos = w.o.Pos
+	}
+	w.reasons = append(w.reasons, r)
+}
+
+// fault turns an error of a sum into a refusal; kinds that meet wrongly get
+// the code of rule R4.
+func (w *work) fault(err error, field string, pos refusal.Pos) bool {
+	code, rule := refusal.NumberMalformed, "R1"
+	switch e := err.(type) {
+	case *quantity.KindError:
+		return w.refuse(refusal.Reason{Code: refusal.AmountKindDiffer, Field: field, Got: e.Got.String(), Want: e.Want.String(), Rule: "R4", Pos: pos,
+			Message: fmt.Sprintf("%s is counted by %v here, but %s is counted by %v; the two never convert", field, e.Got, w.plan.Drug.Name, e.Want),
+			Remedy:  "order it in the unit that stands on the ampoule"})
+	case *quantity.SyntaxError:
+		code = refusal.Code(e.Code)
+	case *quantity.NotGivenError:
+		code = refusal.QuantityMissing
+	}
+	return w.refuse(refusal.Reason{Code: code, Field: field, Rule: rule, Pos: pos, Message: err.Error(), Remedy: "check the order"})
+}
+
+// balance is the run-time check of rule R6: taken = in the syringe + left.
+func (w *work) balance() bool {
+	m := w.plan.Mixture
+	taken := w.plan.Presentation.Amount.Times(m.Containers)
+	sum, err := m.Amount.Plus(m.LeftAmount)
+	if err != nil || !sum.Equal(taken) {
+		return w.refuse(refusal.Reason{Code: refusal.RoutesDisagree, Rule: "R6", Message: "the amounts taken, drawn and left over do not balance: a fault of this program, not of yours",
+			Remedy: "do not use this result; report it"})
+	}
+	return true
+}
+
+// unverified gathers one caution for all unverified figures that were used.
+func (w *work) unverified() {
+	var list []string
+	note := func(what string, unverified bool) {
+		if unverified {
+			list = append(list, what)
+		}
+	}
+	p := w.plan
+	note("contents of the container", p.Presentation.Unverified)
+	if p.Dose != nil {
+		for _, f := range []formulary.Figure[quantity.Dose]{p.Dose.Rule.HardLow, p.Dose.Rule.UsualLow, p.Dose.Rule.UsualHigh, p.Dose.Rule.SoftHigh, p.Dose.Rule.HardHigh} {
+			note("dose "+f.Text, f.Unverified)
+		}
+	}
+	if p.Infusion != nil {
+		for _, f := range []formulary.Figure[quantity.DoseRate]{p.Infusion.Rule.HardLow, p.Infusion.Rule.UsualLow, p.Infusion.Rule.UsualHigh, p.Infusion.Rule.SoftHigh, p.Infusion.Rule.HardHigh} {
+			note("dose rate "+f.Text, f.Unverified)
+		}
+	}
+	for _, b := range p.Drug.Bounds {
+		note("concentration "+b.Low.Text, b.Low.Unverified && b.Use == w.use())
+		note("concentration "+b.High.Text, b.High.Unverified && b.Use == w.use())
+	}
+	if len(list) > 0 {
+		w.caution(refusal.Reason{Code: refusal.Unverified, Rule: "R13", Field: "formulary", Got: joinAnd(list),
+			Message: "nobody has verified these figures: " + joinAnd(list), Remedy: "check them against the pack and local policy"})
+	}
+}
+
+func (w *work) use() string {
+	if w.o.Infusion {
+		return "infusion"
+	}
+	return "bolus"
+}
+
+func joinAnd(list []string) string {
+	switch len(list) {
+	case 0:
+		return ""
+	case 1:
+		return list[0]
+	}
+	s := list[0]
+	for _, x := range list[1 : len(list)-1] {
+		s += ", " + x
+	}
+	return s + " and " + list[len(list)-1]
+}
+
+func joinOr(list []string) string {
+	s := joinAnd(list)
+	if len(list) > 1 {
+		last := list[len(list)-1]
+		s = s[:len(s)-len(" and "+last)] + " or " + last
+	}
+	return s
+}

@@ -1,0 +1,83 @@
+package dilution
+
+import (
+	"fmt"
+	"time"
+
+	"drawup/dilution/order"
+	"drawup/dilution/quantity"
+	"drawup/dilution/syringe"
+)
+
+// A site is what an order file may set once for all its syringes, with the
+// values that hold when it is silent.
+type site struct {
+	style     quantity.Style
+	smallest  quantity.Volume
+	tolerance quantity.Percent
+	step      quantity.FlowRate
+	barrels   []syringe.Barrel
+	bolus     useByPolicy
+	infusion  useByPolicy
+}
+
+type useByPolicy struct {
+	minutes int64
+	source  string
+}
+
+// Values for a silent site. The times are remembered figures and say so.
+const (
+	defaultSmallest  = "0.1 mL" // rule R8
+	defaultTolerance = "5 %"    // common practice, no source
+	defaultStep      = "0.1 mL/h"
+	defaultBolus     = 4 * 60
+	defaultInfusion  = 24 * 60
+	defaultSource    = "default of this tool, unverified: 4 h for immediate use after USP <797> (2023), 24 h for infusions; set the site's own"
+)
+
+// siteOf reads the site's settings; quantities in the order are already valid.
+func siteOf(o order.Order) (site, error) {
+	s := site{style: quantity.UK(), barrels: syringe.Stocked(),
+		bolus: useByPolicy{defaultBolus, defaultSource}, infusion: useByPolicy{defaultInfusion, defaultSource}}
+	var err error
+	if s.smallest, err = quantity.ParseVolume(defaultSmallest); err != nil {
+		return s, err
+	}
+	if s.tolerance, err = quantity.ParsePercent(defaultTolerance); err != nil {
+		return s, err
+	}
+	if s.step, err = quantity.ParseFlowRate(defaultStep); err != nil {
+		return s, err
+	}
+	in := o.Site
+	if in.Style.Given() {
+		s.style = in.Style.Value
+	}
+	if in.Smallest.Given() {
+		s.smallest = in.Smallest.Value
+	}
+	if in.Tolerance.Given() {
+		s.tolerance = in.Tolerance.Value
+	}
+	if in.PumpStep.Given() {
+		s.step = in.PumpStep.Value
+	}
+	if in.BolusUseBy.Given() {
+		s.bolus = useByPolicy{int64(in.BolusUseBy.Value / time.Minute), "site policy in the order file"}
+	}
+	if in.InfusionUseBy.Given() {
+		s.infusion = useByPolicy{int64(in.InfusionUseBy.Value / time.Minute), "site policy in the order file"}
+	}
+	if len(in.Barrels) > 0 {
+		s.barrels = nil
+		for _, f := range in.Barrels {
+			b, ok := syringe.Find(f.Value)
+			if !ok {
+				return s, fmt.Errorf("got a barrel of %q, want a size whose graduation is on record", f.Text)
+			}
+			s.barrels = append(s.barrels, b)
+		}
+	}
+	return s, nil
+}
