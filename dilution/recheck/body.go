@@ -33,11 +33,12 @@ func (c *check) bySex(man, woman value) value {
 	return woman
 }
 
+// readSex knows the words as they stand, in no other letter case.
 func readSex(text string) (male, ok bool) {
-	switch strings.ToLower(text) {
-	case "male", "man", "m":
+	switch text {
+	case "male", "man", "m", "M":
 		return true, true
-	case "female", "woman", "f":
+	case "female", "woman", "f", "F":
 		return false, true
 	}
 	return false, false

@@ -36,9 +36,8 @@ func Check(s Stated) (Passed, error) {
 		c.add("", "", "", "", "no figure is stated, so nothing was checked")
 	}
 	c.checkAsked()
-	rules := allRules()
 	for _, name := range c.names {
-		c.checkOne(rules, name)
+		c.checkOne(name)
 	}
 	if len(c.faults) > 0 {
 		return Passed{}, &Disagreement{Faults: c.faults}
@@ -58,6 +57,8 @@ type check struct {
 	papers  map[string][]string // name to the papers it stands on
 	asked   map[string][]string // name to typed texts
 	slips   map[string]int      // kind of slip to how many rows name it
+	read    map[string]value    // name to exact value, filled as figures are needed
+	rules   map[string]rule
 	record  record
 	faults  []Fault
 }
@@ -69,6 +70,8 @@ func newCheck(s Stated) *check {
 		papers:  map[string][]string{},
 		asked:   map[string][]string{},
 		slips:   map[string]int{},
+		read:    map[string]value{},
+		rules:   allRules(),
 		record:  findRecord(s.Record, s.Drug, s.Presentation),
 	}
 	for _, f := range s.Figures {
@@ -97,11 +100,11 @@ func (c *check) add(paper, name, printed, gets, sentence string) {
 	c.faults = append(c.faults, Fault{Syringe: c.syringe, Paper: paper, Name: name, Printed: printed, Gets: gets, Sentence: sentence})
 }
 
-func (c *check) checkOne(rules map[string]rule, name string) {
+func (c *check) checkOne(name string) {
 	text := c.texts[name]
 	papers := strings.Join(c.papers[name], ", ")
 	key, row := splitRow(name)
-	work, ok := rules[key]
+	work, ok := c.rules[key]
 	if !ok {
 		c.add(papers, name, text, "", "the second route has no sum for a figure of this name")
 		return
@@ -136,7 +139,6 @@ func (c *check) honoured(name, text string) *objection {
 // checkAsked refuses what was asked twice in different words, and what the
 // second route does not know: it could not tell whether it was honoured.
 func (c *check) checkAsked() {
-	rules := allRules()
 	names := make([]string, 0, len(c.asked))
 	for name := range c.asked {
 		names = append(names, name)
@@ -145,7 +147,7 @@ func (c *check) checkAsked() {
 	for _, name := range names {
 		typed := c.asked[name]
 		key, _ := splitRow(name)
-		if _, ok := rules[key]; !ok {
+		if _, ok := c.rules[key]; !ok {
 			c.add("the order", name, typed[0], "", "the second route does not know what was asked under this name")
 		}
 		for _, other := range typed[1:] {
@@ -166,8 +168,18 @@ func isStocked(name string) bool {
 	return false
 }
 
-// get is the exact value of a printed figure, or what is lacking.
+// get is the exact value of a printed figure, or what is lacking. No sum
+// changes the whole numbers of a value, so one reading serves them all.
 func (c *check) get(name string) value {
+	if v, ok := c.read[name]; ok {
+		return v
+	}
+	v := c.readOnce(name)
+	c.read[name] = v
+	return v
+}
+
+func (c *check) readOnce(name string) value {
 	text, ok := c.texts[name]
 	if !ok {
 		return lacking("needs " + name + ", which is not printed")

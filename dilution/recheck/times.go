@@ -25,6 +25,22 @@ func readMoment(text string) (time.Time, bool) {
 	return time.Time{}, false
 }
 
+// momentFault objects to a text that is no date and time, or that is in another
+// style than the other moments of the same syringe: a site has one style.
+func (c *check) momentFault(text string) *objection {
+	if _, ok := readMoment(text); !ok {
+		return object("", "cannot be read as a date and time")
+	}
+	for _, name := range []string{Prepared, UseBy, EmptyAt} {
+		if other, ok := c.texts[name]; ok && isYearFirst(other) != isYearFirst(text) {
+			return object("", "is in another style than "+name)
+		}
+	}
+	return nil
+}
+
+func isYearFirst(text string) bool { return len(text) > 4 && text[4] == '-' }
+
 // readOffset reads "+01:00" in minutes. "-00:00" does not exist.
 func readOffset(text string) (int64, bool) {
 	if len(text) != 6 || (text[0] != '+' && text[0] != '-') || text[3] != ':' || !digitsOnly(text[1:3]+text[4:]) {
@@ -91,8 +107,8 @@ func (c *check) spans(fromName, fromOffset, toName, toOffset string, minutes val
 }
 
 func useBy(c *check, _ int, text string) *objection {
-	if _, ok := readMoment(text); !ok {
-		return object("", "cannot be read as a date and time")
+	if o := c.momentFault(text); o != nil {
+		return o
 	}
 	hours, ok := c.texts[UseHours]
 	if !ok {
@@ -120,8 +136,8 @@ func (c *check) partOf(name, text string, wholes ...string) *objection {
 }
 
 func prepared(c *check, _ int, text string) *objection {
-	if _, ok := readMoment(text); !ok {
-		return object("", "cannot be read as a date and time")
+	if o := c.momentFault(text); o != nil {
+		return o
 	}
 	if c.was(Prepared) {
 		return sameMoment(c.asked[Prepared][0], text)
@@ -215,8 +231,8 @@ func runTime(c *check, _ int, text string) *objection {
 }
 
 func emptyAt(c *check, _ int, text string) *objection {
-	if _, ok := readMoment(text); !ok {
-		return object("", "cannot be read as a date and time")
+	if o := c.momentFault(text); o != nil {
+		return o
 	}
 	run, ok := c.texts[RunTime]
 	if !ok {
