@@ -44,13 +44,13 @@ type Session struct {
 
 // A Site is the house's settings. What is not given has the caller's default.
 type Site struct {
-	Style          Field[quantity.Style]
-	BolusUseBy     Field[time.Duration]
-	InfusionUseBy  Field[time.Duration]
-	Smallest       Field[quantity.Volume]  // smallest volume that may be measured (R8)
-	Tolerance      Field[quantity.Percent] // how far a graduation may move a volume (R8)
-	PumpStep       Field[quantity.FlowRate]
-	Barrels        []Field[quantity.Volume] // syringe sizes in stock
+	Style         Field[quantity.Style]
+	BolusUseBy    Field[time.Duration]
+	InfusionUseBy Field[time.Duration]
+	Smallest      Field[quantity.Volume]  // smallest volume that may be measured (R8)
+	Tolerance     Field[quantity.Percent] // how far a graduation may move a volume (R8)
+	PumpStep      Field[quantity.FlowRate]
+	Barrels       []Field[quantity.Volume] // syringe sizes in stock
 }
 
 // A Patient is whom the syringes are for.

@@ -1,0 +1,176 @@
+package order
+
+import (
+	"time"
+
+	"drawup/dilution/quantity"
+	"drawup/dilution/refusal"
+	"drawup/dilution/tomlfile"
+)
+
+// Read reads data, the text of the order file called name, and gives every
+// reason to refuse it at once, in the order of the file: what [tomlfile.Decode]
+// refuses, then key-missing, keys-contradict, key-repeated, nothing-to-make,
+// value-unknown, time-malformed, the faults of a quantity's text
+// ([quantity.Fault]), units-against-mass, weight-missing, height-missing,
+// sex-missing, weight-implausible, height-implausible, body-values-do-not-fit.
+//
+// A reason that concerns one syringe carries its number. When nothing refuses,
+// every given field of the order has a value.
+func Read(name string, data []byte) (Order, refusal.List) {
+	var file fileRecord
+	places, list := tomlfile.Decode(name, data, &file, knownKeys()...)
+	r := &reader{places: places, list: list, broken: map[int]bool{}, zone: time.UTC}
+	r.order.File = name
+	if !places.Whole() {
+		return r.order, list // what is missing may stand in the part not read
+	}
+	for _, reason := range list {
+		r.broken[reason.Pos.Line] = true
+	}
+	r.session(file.Session)
+	r.site(file.Site)
+	for i, p := range file.Patients {
+		r.patient(i, p)
+	}
+	r.something()
+	r.attribute(len(list))
+	r.list.Sort()
+	return r.order, r.list
+}
+
+// reader reads one order.
+type reader struct {
+	places *tomlfile.Places
+	list   refusal.List
+	broken map[int]bool // lines that have a reason of the file's form already
+	zone   *time.Location
+	number int // the syringe that is being read, 0 outside
+	order  Order
+}
+
+// at is a longer path; base is never changed.
+func at(base []any, more ...any) []any {
+	return append(append(make([]any, 0, len(base)+len(more)), base...), more...)
+}
+
+// refuse adds a reason at path. field is the key in the user's words.
+func (r *reader) refuse(path []any, reason refusal.Reason) {
+	reason.Severity = refusal.Refuse
+	reason.Syringe = r.number
+	reason.Pos = r.places.Of(path...)
+	if reason.Field == "" {
+		reason.Field = words(path)
+	}
+	r.list = append(r.list, reason)
+}
+
+// words is a path as people name it, without numbers: "patient.syringe.dose".
+func words(path []any) string {
+	s := ""
+	for _, part := range path {
+		if name, ok := part.(string); ok {
+			if s != "" {
+				s += "."
+			}
+			s += name
+		}
+	}
+	return s
+}
+
+// key is the last name of a path.
+func key(path []any) string {
+	for i := len(path) - 1; i >= 0; i-- {
+		if name, ok := path[i].(string); ok {
+			return name
+		}
+	}
+	return ""
+}
+
+// read turns a text into a value. A key that is not there gives an empty
+// field; an empty text is refused, because it may be a form half filled in.
+func read[T any](r *reader, text string, parse func(string) (T, error), path []any) Field[T] {
+	f := Field[T]{Text: text, Pos: r.places.Of(path...)}
+	if !r.places.Has(path...) || r.broken[f.Pos.Line] {
+		return Field[T]{Pos: f.Pos}
+	}
+	value, err := parse(text)
+	if err != nil {
+		r.refuse(path, textReason(key(path), text, err))
+		return f
+	}
+	f.Value = value
+	return f
+}
+
+// something refuses an order that asks for nothing.
+func (r *reader) something() {
+	if len(r.order.Syringes) > 0 {
+		return
+	}
+	for i := range r.order.Patients {
+		if r.places.Has("patient", i, "syringe") || r.places.Has("patient", i, "infusion") {
+			return // there is one, and its form is refused
+		}
+	}
+	if len(r.order.Patients) == 0 && r.places.Has("patient") {
+		return
+	}
+	want, remedy := "at least one [[patient]] with a [[patient.syringe]] or [[patient.infusion]]", "add the syringes that are wanted"
+	message := "the order has no patient"
+	if len(r.order.Patients) > 0 {
+		message = "the order has patients, and no syringe or infusion for any of them"
+	}
+	r.refuse([]any{"patient"}, refusal.Reason{Code: refusal.NothingToMake, Message: message, Got: "nothing to make", Want: want, Remedy: remedy})
+}
+
+// attribute gives the first n reasons, those of the file's form, the number of
+// the syringe in whose table they stand, so that the syringe can be left out.
+func (r *reader) attribute(n int) {
+	type start struct {
+		pos    refusal.Pos
+		number int
+	}
+	var starts []start
+	for _, s := range r.order.Syringes {
+		starts = append(starts, start{s.Pos, s.Number})
+	}
+	for _, p := range r.order.Patients {
+		starts = append(starts, start{p.Pos, 0})
+	}
+	for _, table := range []string{"session", "site"} {
+		if r.places.Has(table) {
+			starts = append(starts, start{r.places.Of(table), 0})
+		}
+	}
+	for i := range r.list[:n] {
+		best := refusal.Pos{}
+		for _, s := range starts {
+			if !after(s.pos, r.list[i].Pos) && !after(best, s.pos) {
+				best, r.list[i].Syringe = s.pos, s.number
+			}
+		}
+	}
+}
+
+func after(a, b refusal.Pos) bool {
+	return a.Line > b.Line || a.Line == b.Line && a.Column > b.Column
+}
+
+// site reads the house's settings; all of them may be left out.
+func (r *reader) site(s siteRecord) {
+	p := []any{"site"}
+	r.order.Site = Site{
+		Style:         read(r, s.Style, parseStyle, at(p, "style")),
+		BolusUseBy:    read(r, s.BolusUseBy, parseSpan, at(p, "bolus_use_by")),
+		InfusionUseBy: read(r, s.InfusionUseBy, parseSpan, at(p, "infusion_use_by")),
+		Smallest:      read(r, s.Smallest, quantity.ParseVolume, at(p, "smallest_volume")),
+		Tolerance:     read(r, s.Tolerance, quantity.ParsePercent, at(p, "tolerance")),
+		PumpStep:      read(r, s.PumpStep, quantity.ParseFlowRate, at(p, "pump_step")),
+	}
+	for i, text := range s.Barrels {
+		r.order.Site.Barrels = append(r.order.Site.Barrels, read(r, text, quantity.ParseVolume, at(p, "barrels", i)))
+	}
+}
