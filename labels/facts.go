@@ -1,0 +1,235 @@
+package labels
+
+import (
+	"fmt"
+	"strings"
+	"time"
+
+	"drawup/dilution"
+	"drawup/dilution/body"
+	"drawup/dilution/pump"
+	"drawup/dilution/quantity"
+	"drawup/dilution/recheck"
+)
+
+// Facts are the printed figures of one plan, by the names of the second route.
+// Every paper takes its figures from here, so that one figure reads the same
+// wherever it stands.
+type Facts struct {
+	style quantity.Style
+	text  map[string]string
+	rungs int
+	slips int
+}
+
+// FactsOf writes out every figure of p in its house style (rule R14).
+func FactsOf(p dilution.Plan) Facts {
+	w := Facts{style: p.Style, text: map[string]string{}}
+	w.container(p)
+	w.mixture(p)
+	w.patient(p)
+	w.dose(p)
+	w.infusion(p)
+	w.times(p)
+	return w
+}
+
+// Has reports whether the plan has a figure of this name.
+func (w Facts) Has(name string) bool { return w.text[name] != "" }
+
+// Text is the figure as printed, "" if the plan has none of this name.
+func (w Facts) Text(name string) string { return w.text[name] }
+
+// Cell is the figure as a cell; the empty cell if there is none.
+func (w Facts) Cell(name string) Cell {
+	if !w.Has(name) {
+		return Cell{}
+	}
+	return Cell{Text: w.text[name], Figure: name}
+}
+
+// Rungs is how many rows the ladder has, numbered from 1.
+func (w Facts) Rungs() int { return w.rungs }
+
+// Slips is how many readings of slips there are, numbered from 1.
+func (w Facts) Slips() int { return w.slips }
+
+func (w Facts) put(name, text string) {
+	if text != "" {
+		w.text[name] = text
+	}
+}
+
+func (w Facts) container(p dilution.Plan) {
+	s, pr := w.style, p.Presentation
+	w.put(recheck.ContainerAmount, s.Amount(pr.Amount))
+	w.put(recheck.ContainerVolume, s.Volume(pr.Volume))
+	w.put(recheck.ContainerCount, fmt.Sprint(p.Mixture.Containers))
+	w.put(recheck.Strength, s.Concentration(p.Mixture.Strength))
+	if pr.Powder() {
+		w.put(recheck.PowderAdded, s.Volume(pr.Added))
+		displaced := "0 mL"
+		if !pr.Negligible {
+			displaced = s.Volume(pr.Displacement.Value)
+		}
+		w.put(recheck.PowderDisplaced, displaced)
+	}
+	w.put(recheck.ATC, p.Drug.ATC)
+}
+
+func (w Facts) mixture(p dilution.Plan) {
+	s, m := w.style, p.Mixture
+	w.put(recheck.Method, m.Method.String())
+	w.put(recheck.DrugVolume, s.Volume(m.DrugVolume))
+	w.put(recheck.DrugStep, s.Volume(m.DrugReading.Barrel.Step()))
+	w.put(recheck.DrugBarrel, s.Volume(m.DrugReading.Barrel.Nominal()))
+	w.put(recheck.DiluentVolume, s.Volume(m.DiluentVolume))
+	w.put(recheck.FinalVolume, s.Volume(m.FinalVolume))
+	if !m.InBag {
+		w.put(recheck.FinalBarrel, s.Volume(m.FinalBarrel.Nominal()))
+	}
+	w.put(recheck.AmountInSyringe, s.Amount(m.Amount))
+	w.put(recheck.Concentration, s.Concentration(m.Concentration))
+	w.put(recheck.LeftVolume, s.Volume(m.LeftVolume))
+	w.put(recheck.LeftAmount, s.Amount(m.LeftAmount))
+	w.put(recheck.SecondContainer, s.Amount(p.Presentation.SecondAmount))
+	w.put(recheck.SecondAmount, s.Amount(m.SecondAmount))
+	w.put(recheck.SecondConcentrated, s.Concentration(m.SecondConc))
+	if p.Drug.Substance.Given() {
+		w.put(recheck.SubstanceFactor, s.Amount(p.Drug.Substance.Value.PerGram)+"/g")
+	}
+	w.put(recheck.SubstanceAmount, s.Amount(m.Substance))
+	w.put(recheck.SubstanceConc, s.Concentration(m.SubstanceConc))
+	w.put(recheck.Assay, s.Percent(m.Assay))
+	w.put(recheck.IntervalPercent, s.Percent(m.Interval))
+	w.put(recheck.IntervalLow, s.Concentration(m.Low))
+	w.put(recheck.IntervalHigh, s.Concentration(m.High))
+}
+
+// patient writes the body's figures: as typed, and those that were used.
+func (w Facts) patient(p dilution.Plan) {
+	s, size := w.style, p.Size
+	w.put(recheck.WeightActual, s.BodyWeight(size.Weight))
+	w.put(recheck.Height, s.Length(size.Height))
+	if size.Age.Given() {
+		w.put(recheck.Age, size.Age.String())
+	}
+	w.put(recheck.Sex, size.Sex.String())
+	used := map[body.Kind]bool{}
+	if p.Dose != nil {
+		used[p.Dose.By] = true
+	}
+	if p.Infusion != nil {
+		used[p.Infusion.By] = true
+	}
+	for _, k := range []struct {
+		kind body.Kind
+		name string
+	}{{body.Ideal, recheck.WeightIdeal}, {body.Adjusted, recheck.WeightAdjusted}, {body.Lean, recheck.WeightLean}} {
+		if !used[k.kind] && !(k.kind == body.Ideal && used[body.Adjusted]) {
+			continue
+		}
+		if weight, err := size.Used(k.kind); err == nil {
+			w.put(k.name, s.BodyWeight(weight))
+		}
+	}
+	if used[body.Surface] {
+		if area, err := size.UsedSurface(); err == nil {
+			w.put(recheck.SurfaceArea, s.Surface(area))
+		}
+	}
+}
+
+func (w Facts) dose(p dilution.Plan) {
+	d, s := p.Dose, w.style
+	if d == nil {
+		return
+	}
+	w.put(recheck.Dose, s.Dose(d.Ordered))
+	w.put(recheck.DoseWeightBy, d.By.String())
+	w.put(recheck.DoseWeight, scalarText(s, d.Weight, d.Surface))
+	w.put(recheck.DoseAmount, s.Amount(d.Amount))
+	w.put(recheck.DoseVolume, s.Volume(d.Volume))
+	w.put(recheck.DoseStep, s.Volume(d.Step))
+	w.put(recheck.DoseDelivered, s.Amount(d.Delivered))
+}
+
+func scalarText(s quantity.Style, weight quantity.BodyWeight, area quantity.BodySurfaceArea) string {
+	if area.Given() {
+		return s.Surface(area)
+	}
+	return s.BodyWeight(weight)
+}
+
+func (w *Facts) infusion(p dilution.Plan) {
+	part, s := p.Infusion, w.style
+	if part == nil {
+		return
+	}
+	w.put(recheck.RateWeightBy, part.By.String())
+	w.put(recheck.RateWeight, scalarText(s, part.Weight, part.Surface))
+	w.put(recheck.RateStep, s.FlowRate(part.Step))
+	w.put(recheck.StartDose, s.DoseRate(part.Start.Dose))
+	w.put(recheck.StartRate, s.FlowRate(part.Start.Rate))
+	w.put(recheck.StartDelivered, s.DoseRate(part.Start.Delivered))
+	for _, x := range []struct {
+		set        pump.Setting
+		dose, rate string
+	}{{part.Low, recheck.LowDose, recheck.LowRate}, {part.High, recheck.HighDose, recheck.HighRate}, {part.Limit, recheck.LimitDose, recheck.LimitRate}} {
+		w.put(x.dose, s.DoseRate(x.set.Dose))
+		w.put(x.rate, s.FlowRate(x.set.Rate))
+	}
+	for i, rung := range part.Ladder {
+		w.put(recheck.Row(recheck.Ladder, i+1, "dose"), s.DoseRate(rung.Dose))
+		w.put(recheck.Row(recheck.Ladder, i+1, "rate"), s.FlowRate(rung.Rate))
+		w.put(recheck.Row(recheck.Ladder, i+1, "delivered"), s.DoseRate(rung.Delivered))
+	}
+	w.rungs = len(part.Ladder)
+	for i, slip := range part.Slips {
+		w.put(recheck.Row(recheck.Slip, i+1, "kind"), slip.Kind)
+		w.put(recheck.Row(recheck.Slip, i+1, "rate"), s.FlowRate(slip.Rate))
+	}
+	w.slips = len(part.Slips)
+	w.put(recheck.RunTime, Span(part.Minutes))
+	empty := p.Prepared.Add(time.Duration(part.Minutes) * time.Minute)
+	w.put(recheck.EmptyAt, Moment(s, empty))
+	w.put(recheck.EmptyOffset, empty.Format("-07:00"))
+}
+
+func (w Facts) times(p dilution.Plan) {
+	w.put(recheck.Prepared, Moment(w.style, p.Prepared))
+	w.put(recheck.PreparedOffset, p.Prepared.Format("-07:00"))
+	w.put(recheck.UseHours, Span(p.UseBy.Minutes))
+	w.put(recheck.UseBy, Moment(w.style, p.UseBy.At))
+	w.put(recheck.UseByOffset, p.UseBy.At.Format("-07:00"))
+}
+
+// Moment is a date and time as the style prints it (rule N25): two ways that
+// cannot be misread, always with the time of day.
+func Moment(s quantity.Style, t time.Time) string {
+	if s.String() == "uk" {
+		return t.Format("02 Jan 2006 15:04")
+	}
+	return t.Format("2006-01-02 15:04")
+}
+
+// Span is a number of minutes in hours and minutes: "9 h 25 min", "45 min".
+func Span(minutes int64) string {
+	h, m := minutes/60, minutes%60
+	switch {
+	case h == 0:
+		return fmt.Sprintf("%d min", m)
+	case m == 0:
+		return fmt.Sprintf("%d h", h)
+	}
+	return fmt.Sprintf("%d h %d min", h, m)
+}
+
+// Capital is a drug's name as labels print it: lower case with an initial
+// capital; a name that already carries capitals stays as it is (5.4.2).
+func Capital(name string) string {
+	if name == "" || strings.ToLower(name) != name {
+		return name
+	}
+	return strings.ToUpper(name[:1]) + name[1:]
+}

@@ -1,0 +1,194 @@
+package labels
+
+import (
+	"fmt"
+	"strings"
+
+	"drawup/dilution"
+	"drawup/dilution/recheck"
+	"drawup/dilution/refusal"
+	"drawup/labels/gs1"
+)
+
+// A Making is what all papers of one run share: who made them, from which
+// formulary, and the short digest of order, formulary and time (rule R19).
+type Making struct {
+	Place           string
+	Preparer        string
+	Made            string // date and time, as printed
+	Formulary       string // name and version
+	FormularyDigest string // first twelve digits
+	State           string // approval line
+	Digest          string // short digest, hexadecimal
+	Serial          string // first five digits of every serial number
+	Invented        bool
+}
+
+// SerialOf is the eight-digit serial of syringe n: five digits of the run, then
+// the number.
+func (m Making) SerialOf(n int) string { return fmt.Sprintf("%s%03d", m.Serial, n) }
+
+// CodeOf is the barcode's content in human-readable form: drug by ATC code,
+// use-by and serial, concentration, in the company-internal identifiers 91 to
+// 93, which may stand alone.
+func CodeOf(p dilution.Plan, serial string) (string, error) {
+	_, hri, err := gs1.Encode([]gs1.Element{
+		{AI: "91", Value: p.Drug.ATC},
+		{AI: "92", Value: p.UseBy.At.Format("0601021504") + serial},
+		{AI: "93", Value: p.Mixture.Concentration.InCode()},
+	})
+	return hri, err
+}
+
+// FromPlan is the label of one planned syringe.
+func FromPlan(p dilution.Plan, w Facts, m Making) (Label, error) {
+	class, ok := ClassOf(p.Drug.Class)
+	if !ok {
+		return Label{}, fmt.Errorf("got label class %q, want one of Table 1", p.Drug.Class)
+	}
+	serial := m.SerialOf(p.Number)
+	code, err := CodeOf(p, serial)
+	if err != nil {
+		return Label{}, err
+	}
+	l := Label{Number: p.Number, Class: class, Concentration: w.Cell(recheck.Concentration),
+		Amount:   Line{w.Cell(recheck.AmountInSyringe), {Text: " in "}, w.Cell(recheck.FinalVolume)},
+		UseBy:    Line{{Text: "use by "}, w.Cell(recheck.UseBy)},
+		Prepared: Line{{Text: "made "}, w.Cell(recheck.Prepared), {Text: " " + m.Preparer}},
+		Serial:   Cell{Text: serial, Figure: recheck.Serial}, Code: Cell{Text: code, Figure: recheck.Code},
+		Digest: m.Digest, Marks: marks(p)}
+	l.names(p, w)
+	if w.Has(recheck.SubstanceAmount) {
+		l.Substance = Line{w.Cell(recheck.SubstanceAmount), {Text: " in "}, w.Cell(recheck.FinalVolume)}
+	}
+	if p.Dose != nil {
+		l.Dose = doseLine(p, w)
+	}
+	if p.Route != "IV" || p.Infusion != nil {
+		l.Route = p.Route
+	}
+	if p.Infusion != nil {
+		l.infusion(p)
+	}
+	return l, nil
+}
+
+func (l *Label) names(p dilution.Plan, w Facts) {
+	name := p.Drug.LabelName(p.Style)
+	if second := p.Presentation.SecondName; second != "" {
+		name, _, _ = strings.Cut(name, " with ")
+		l.Second, l.SecondConcentration = Capital(second), w.Cell(recheck.SecondConcentrated)
+	}
+	l.Name = Capital(name)
+	if p.Drug.ShowAs {
+		l.As = p.Drug.CountedAs
+	}
+}
+
+// doseLine says what one dose is; a syringe that is one dose says just that.
+func doseLine(p dilution.Plan, w Facts) Line {
+	if p.Dose.Volume.Cmp(p.Mixture.FinalVolume) == 0 {
+		return Words("one dose")
+	}
+	return Line{{Text: "dose "}, w.Cell(recheck.DoseVolume), {Text: " = "}, w.Cell(recheck.DoseDelivered)}
+}
+
+func (l *Label) infusion(p dilution.Plan) {
+	l.Infusion, l.CheckedBy, l.Patient = true, true, p.Patient.ID.Value
+	l.Diluent = Words("undiluted")
+	if p.Mixture.Diluent != "" {
+		l.Diluent = Words("in " + p.Mixture.Diluent)
+	}
+}
+
+func marks(p dilution.Plan) []string {
+	out := []string{MarkStarter}
+	for _, r := range p.Cautions {
+		if r.Code == refusal.Unverified {
+			return append(out, MarkUnverified)
+		}
+	}
+	return out
+}
+
+// Stated is everything that the papers of p say, for the second route:
+// what was typed, the formulary's own text, and the figures of all papers.
+func Stated(p dilution.Plan, figures []recheck.Figure) recheck.Stated {
+	return recheck.Stated{
+		Syringe: fmt.Sprintf("syringe %d, %s", p.Number, p.Drug.Name), Drug: p.Drug.Name, Presentation: p.Presentation.ID,
+		Record: p.Drug.Raw, Asked: asked(p), Figures: figures,
+	}
+}
+
+// asked is what the order, the site or the formulary row says, as typed.
+func asked(p dilution.Plan) []recheck.Figure {
+	var out []recheck.Figure
+	add := func(name, text string) {
+		if text != "" {
+			out = append(out, recheck.Figure{Paper: "order", Name: name, Text: text})
+		}
+	}
+	o := p.Order
+	add(recheck.Dose, typedDose(o.Dose.Text))
+	add(recheck.AmountInSyringe, o.Amount.Text)
+	add(recheck.Concentration, o.Concentration.Text)
+	add(recheck.WeightActual, p.Patient.Weight.Text)
+	add(recheck.Height, p.Patient.Height.Text)
+	add(recheck.Age, p.Patient.Age.Text)
+	add(recheck.Sex, p.Patient.Sex.Text)
+	askedVolume(p, add)
+	askedRates(p, add)
+	add(recheck.UseHours, Span(p.UseBy.Minutes))
+	add(recheck.Prepared, p.Prepared.Format("2006-01-02 15:04"))
+	add(recheck.PreparedOffset, p.Prepared.Format("-07:00"))
+	if p.Mixture.AssayAssumed {
+		add(recheck.Assay, p.Mixture.Assay.Written())
+	}
+	return out
+}
+
+// askedVolume says which volume the order's number meant (rule R5).
+func askedVolume(p dilution.Plan, add func(name, text string)) {
+	text := p.Order.Volume.Text
+	if p.Order.Infusion {
+		amount, volume := p.Order.MixAmount.Text, p.Order.MixVolume.Text
+		if s, ok := p.Drug.Standard(p.Standard); ok {
+			amount, volume = s.Amount.Written(), s.Volume.Written()
+		}
+		add(recheck.AmountInSyringe, strings.TrimSpace(amount))
+		text = strings.TrimSpace(volume)
+	}
+	if p.Mixture.Method == dilution.AddTo {
+		add(recheck.DiluentVolume, text)
+		return
+	}
+	add(recheck.FinalVolume, text)
+}
+
+func askedRates(p dilution.Plan, add func(name, text string)) {
+	if p.Infusion == nil {
+		return
+	}
+	part := p.Infusion
+	add(recheck.StartDose, typedDose(p.Order.Start.Text))
+	add(recheck.RateStep, p.Style.FlowRate(part.Step))
+	add(recheck.LowDose, part.Low.Dose.Written())
+	add(recheck.HighDose, part.High.Dose.Written())
+	add(recheck.LimitDose, part.Limit.Dose.Written())
+	if part.Low.Dose.Written() == "" {
+		add(recheck.LowDose, p.Style.DoseRate(part.Low.Dose))
+	}
+	if part.High.Dose.Written() == "" {
+		add(recheck.HighDose, p.Style.DoseRate(part.High.Dose))
+	}
+}
+
+// typedDose is the text of a dose without the word for the weight.
+func typedDose(s string) string {
+	for _, word := range []string{"actual", "total", "ideal", "adjusted", "lean", "surface"} {
+		if t, ok := strings.CutSuffix(strings.TrimSpace(s), " "+word); ok {
+			return strings.TrimSpace(t)
+		}
+	}
+	return s
+}
