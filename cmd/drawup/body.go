@@ -1,0 +1,172 @@
+package main
+
+import (
+	"errors"
+	"fmt"
+	"io"
+	"math/big"
+
+	"drawup/dilution/body"
+	"drawup/dilution/quantity"
+	"drawup/dilution/refusal"
+)
+
+func bodyFlags() []flagSpec {
+	return []flagSpec{
+		{"weight", "72 kg", "actual body weight"},
+		{"height", "178 cm", "height"},
+		{"sex", "female", "female or male, as the equations ask; without it only BMI and surface are worked"},
+		{"age", "54 years", "age; under 18 years no weight is worked"},
+	}
+}
+
+// A bodyDocument is the answer of drawup body. A figure that an equation does
+// not give is left out, and a caution says why.
+type bodyDocument struct {
+	Ideal     *quantityJSON `json:"ideal_devine,omitempty"`
+	Adjusted  *quantityJSON `json:"adjusted,omitempty"`
+	Lean      *quantityJSON `json:"lean_janmahasatian,omitempty"`
+	James     *quantityJSON `json:"lean_james,omitempty"`
+	Mosteller *quantityJSON `json:"surface_mosteller,omitempty"`
+	DuBois    *quantityJSON `json:"surface_dubois,omitempty"`
+	BMI       *quantityJSON `json:"bmi,omitempty"`
+	findings
+}
+
+func runBody(e env, args []string) int {
+	r := newRequest("body", bodyFlags(), args)
+	if r.help {
+		return showHelp(e, "body")
+	}
+	doc := &bodyDocument{}
+	size := readSize(r)
+	if !r.refused() {
+		workBody(r, size, doc)
+	}
+	return r.finish(e, doc, func(w io.Writer) { tellBody(w, doc) })
+}
+
+func readSize(r *request) body.Size {
+	r.need("weight", "every figure goes by it")
+	r.need("height", "every figure goes by it")
+	size := body.Size{
+		Weight: read(r, "weight", quantity.ParseBodyWeight),
+		Height: read(r, "height", quantity.ParseLength),
+		Age:    read(r, "age", body.ParseAge),
+	}
+	if r.given("sex") {
+		sex, ok := body.SexNamed(r.texts["sex"].text)
+		if !ok {
+			r.add(refusal.Reason{
+				Code: refusal.ValueUnknown, Field: "--sex", Got: r.texts["sex"].text, Want: "female or male",
+				Message: fmt.Sprintf("--sex: got %q, want female or male", r.texts["sex"].text),
+				Remedy:  "choose the one that the equations should use",
+			})
+		}
+		size.Sex = sex
+	}
+	return size
+}
+
+func workBody(r *request, size body.Size, doc *bodyDocument) {
+	tenth, hundredth := big.NewRat(1, 10), big.NewRat(1, 100)
+	weight := func(work func() (quantity.BodyWeight, error)) *quantityJSON {
+		w, err := work()
+		if err != nil {
+			r.leftOut(err)
+			return nil
+		}
+		shown, err := w.ToStep(tenth, quantity.HalfUp)
+		if err != nil {
+			r.leftOut(err)
+			return nil
+		}
+		return &quantityJSON{w.Exact(), r.style.BodyWeight(shown), "kg"}
+	}
+	surface := func(work func() (quantity.BodySurfaceArea, error)) *quantityJSON {
+		a, err := work()
+		if err != nil {
+			r.leftOut(err)
+			return nil
+		}
+		shown, err := a.ToStep(hundredth, quantity.HalfUp)
+		if err != nil {
+			r.leftOut(err)
+			return nil
+		}
+		return &quantityJSON{a.Exact(), r.style.Surface(shown), "m2"}
+	}
+	doc.Ideal, doc.Adjusted = weight(size.Ideal), weight(size.Adjusted)
+	doc.Lean, doc.James = weight(size.Lean), weight(size.James)
+	doc.Mosteller, doc.DuBois = surface(size.Mosteller), surface(size.DuBois)
+	doc.BMI = bmiJSON(r, size)
+	for _, n := range size.Notes() {
+		r.caution(refusal.Reason{Code: refusal.Code(n.Code), Field: "body size", Message: n.Text, Source: n.Source})
+	}
+}
+
+func bmiJSON(r *request, size body.Size) *quantityJSON {
+	bmi, err := size.BMI()
+	if err != nil {
+		r.leftOut(err)
+		return nil
+	}
+	shown, err := quantity.PerCent(bmi).ToStep(big.NewRat(1, 10), quantity.HalfUp)
+	if err != nil {
+		r.leftOut(err)
+		return nil
+	}
+	return &quantityJSON{exactText(bmi), r.style.Number(shown.Rat()) + " kg/m²", "kg/m2"}
+}
+
+// leftOut says, once for each reason, why a figure of the body is not there.
+func (r *request) leftOut(err error) {
+	x := refusal.Reason{Code: refusal.BodySizeOutside, Field: "body size", Message: err.Error() + "; the figure is left out"}
+	var outside *body.OutsideEquation
+	var missing *body.MissingError
+	switch {
+	case errors.As(err, &outside):
+		x.Source = outside.Source
+		x.Remedy = "use the actual weight, or a local rule for this patient"
+	case errors.As(err, &missing):
+		x.Code = missingCode(missing.What)
+		x.Field = "--" + string(missing.What)
+		x.Message = "without --" + string(missing.What) + " there is no " + missing.Equation
+		x.Remedy = r.remedyFor(string(missing.What))
+	}
+	r.caution(x)
+}
+
+func missingCode(v body.Value) refusal.Code {
+	switch v {
+	case body.NeedSex:
+		return refusal.SexMissing
+	case body.NeedAge:
+		return refusal.AgeMissing
+	case body.NeedHeight:
+		return refusal.HeightMissing
+	case body.NeedWeight:
+		return refusal.WeightMissing
+	}
+	return refusal.QuantityMissing
+}
+
+func tellBody(w io.Writer, d *bodyDocument) {
+	for _, row := range []struct {
+		name, how string
+		q         *quantityJSON
+	}{
+		{"ideal weight", "Devine 1974", d.Ideal},
+		{"adjusted weight", "ideal + 0.4 (actual - ideal)", d.Adjusted},
+		{"lean weight", "Janmahasatian 2005", d.Lean},
+		{"lean weight", "James 1976", d.James},
+		{"surface area", "Mosteller 1987", d.Mosteller},
+		{"surface area", "Du Bois 1916", d.DuBois},
+		{"body mass index", "weight / height squared", d.BMI},
+	} {
+		if row.q != nil {
+			fmt.Fprintf(w, "%-16s %s%s\n", row.name, pad(row.q.Printed, 12), row.how)
+		}
+	}
+	fmt.Fprintln(w, "\nweights are rounded half up to 0.1 kg, surface areas to 0.01 m²; roots are worked to 40 digits (rule R1)")
+}

@@ -1,0 +1,326 @@
+package main
+
+import (
+	"fmt"
+	"io"
+	"math/big"
+	"strings"
+
+	"drawup/dilution/quantity"
+	"drawup/dilution/refusal"
+	"drawup/dilution/salts"
+)
+
+func convertFlags() []flagSpec {
+	return []flagSpec{
+		{"from", "10 %", "what there is"},
+		{"to", "mg/mL", "the unit wanted"},
+		{"of", "magnesium sulfate heptahydrate", `the salt, where mass, mmol, mEq or base meet; "calcium in calcium chloride dihydrate" counts one ion`},
+	}
+}
+
+// A convertDocument is the answer of drawup convert.
+type convertDocument struct {
+	From    string        `json:"from,omitempty"`
+	Of      string        `json:"of,omitempty"`
+	Result  *quantityJSON `json:"result,omitempty"`
+	Working []string      `json:"working,omitempty"`
+	findings
+}
+
+func runConvert(e env, args []string) int {
+	r := newRequest("convert", convertFlags(), args)
+	if r.help {
+		return showHelp(e, "convert")
+	}
+	doc := &convertDocument{}
+	r.need("from", "there is nothing to convert")
+	r.need("to", "the unit wanted is not said")
+	if !r.refused() {
+		doc.From, doc.Of = r.texts["from"].text, r.texts["of"].text
+		c := &conversion{r: r, doc: doc}
+		c.work()
+	}
+	if r.refused() {
+		doc.Result, doc.Working = nil, nil
+	}
+	return r.finish(e, doc, func(w io.Writer) { tellConvert(w, doc) })
+}
+
+func tellConvert(w io.Writer, d *convertDocument) {
+	fmt.Fprintf(w, "%s\n", d.Result.Printed)
+	if plain(d.Result.Printed) != d.Result.Exact {
+		line(w, "exactly", d.Result.Exact+" "+d.Result.Unit)
+	}
+	line(w, "from", oneLine(d.From))
+	for _, s := range d.Working {
+		line(w, "how", s)
+	}
+}
+
+// A sort is what a text turned out to be.
+type sort int
+
+// Sorts of quantity that convert reads.
+const (
+	sortNone sort = iota
+	sortAmount
+	sortVolume
+	sortConcentration
+	sortDose
+	sortDoseRate
+	sortFlow
+	sortWeight
+	sortHeight
+	sortSurface
+)
+
+func (s sort) String() string {
+	switch s {
+	case sortAmount:
+		return "an amount"
+	case sortVolume:
+		return "a volume"
+	case sortConcentration:
+		return "a concentration"
+	case sortDose:
+		return "a dose"
+	case sortDoseRate:
+		return "a dose rate"
+	case sortFlow:
+		return "a flow rate"
+	case sortWeight:
+		return "a body weight"
+	case sortHeight:
+		return "a height"
+	case sortSurface:
+		return "a surface area"
+	case sortNone:
+		return "nothing"
+	}
+	return "nothing"
+}
+
+// A reading is a text read as one sort: its exact value in the base unit, how
+// it counts drug and, for doses and rates, per what.
+type reading struct {
+	sort  sort
+	value *big.Rat
+	kind  quantity.Kind
+	basis quantity.Basis
+	unit  string // plain name of the unit, "" where the text's own will do
+	amt   quantity.Unit
+}
+
+// readAny reads text as the first sort that fits. Bare amounts win over doses.
+func readAny(text string) (reading, bool) {
+	if a, err := quantity.ParseAmount(text); err == nil {
+		return reading{sort: sortAmount, value: a.Rat(), kind: a.Kind(), unit: a.Unit().String(), amt: a.Unit()}, true
+	}
+	if v, err := quantity.ParseVolume(text); err == nil {
+		return reading{sort: sortVolume, value: v.Rat()}, true
+	}
+	if c, err := quantity.ParseConcentration(text); err == nil {
+		return reading{sort: sortConcentration, value: c.Rat(), kind: c.Kind(), amt: c.Unit()}, true
+	}
+	if d, err := quantity.ParseDose(text); err == nil {
+		return reading{sort: sortDose, value: d.Rat(), kind: d.Kind(), basis: d.Basis(), unit: d.Unit().String() + plainBasis(d.Basis())}, true
+	}
+	if d, err := quantity.ParseDoseRate(text); err == nil {
+		return reading{sort: sortDoseRate, value: d.Rat(), kind: d.Kind(), basis: d.Basis(), unit: doseRateUnit(d)}, true
+	}
+	if f, err := quantity.ParseFlowRate(text); err == nil {
+		return reading{sort: sortFlow, value: f.Rat()}, true
+	}
+	return readBody(text)
+}
+
+func readBody(text string) (reading, bool) {
+	if w, err := quantity.ParseBodyWeight(text); err == nil {
+		return reading{sort: sortWeight, value: w.Rat(), unit: "kg"}, true
+	}
+	if l, err := quantity.ParseLength(text); err == nil {
+		return reading{sort: sortHeight, value: l.Rat()}, true
+	}
+	if a, err := quantity.ParseSurface(text); err == nil {
+		return reading{sort: sortSurface, value: a.Rat(), unit: "m2"}, true
+	}
+	return otherBody(text)
+}
+
+// otherBody reads the weights and heights that other papers use. The pound is
+// 0.45359237 kg and the inch 2.54 cm, both by definition.
+func otherBody(text string) (reading, bool) {
+	number, unit, _ := strings.Cut(strings.TrimSpace(text), " ")
+	n, err := quantity.ParseBodyWeight(number + " kg")
+	if err != nil {
+		return reading{}, false
+	}
+	pound := big.NewRat(45359237, 100000000)
+	weight := func(f *big.Rat) (reading, bool) {
+		return reading{sort: sortWeight, value: f.Mul(f, n.Rat()), unit: "kg"}, true
+	}
+	switch strings.TrimSpace(unit) {
+	case "lb", "lbs", "pound", "pounds":
+		return weight(pound)
+	case "st", "stone", "stones":
+		return weight(pound.Mul(pound, big.NewRat(14, 1)))
+	case "in", "inch", "inches":
+		return reading{sort: sortHeight, value: new(big.Rat).Mul(n.Rat(), big.NewRat(254, 100))}, true
+	}
+	return reading{}, false
+}
+
+// A conversion is one request of drawup convert being worked.
+type conversion struct {
+	r    *request
+	doc  *convertDocument
+	salt salts.Salt
+	ok   bool // salt is set
+}
+
+func (c *conversion) work() {
+	from, fromForm := form(c.doc.From)
+	to, toForm := form(c.r.texts["to"].text)
+	if !c.target(to) {
+		return
+	}
+	one, ok := readAny("1 " + to)
+	if !ok {
+		c.refuse(refusal.UnitUnknown, "--to", to, "a unit such as mg, mmol/mL, mL/min or kg",
+			fmt.Sprintf("--to: got %q, want a unit", to), "give the unit alone, without a number")
+		return
+	}
+	if c.r.given("of") && !c.findSalt(c.doc.Of) {
+		return
+	}
+	if charge, perVolume, ok := milliequivalents(from); ok {
+		c.fromCharge(charge, perVolume, one, to)
+		return
+	}
+	got, ok := readAny(from)
+	if one.sort == sortWeight && got.sort == sortAmount && got.unit == "g" {
+		got = reading{sort: sortWeight, value: new(big.Rat).Quo(got.value, big.NewRat(1000000, 1)), unit: "kg"}
+	}
+	if !ok {
+		c.unread(from, one.sort)
+		return
+	}
+	c.join(got, one, fromForm, toForm, to)
+}
+
+// target refuses what is read but never written (rule R14).
+func (c *conversion) target(to string) bool {
+	switch {
+	case to == "%" || to == "% w/v":
+		c.refuse(refusal.UnitWrongKind, "--to", to, "mg/mL", "per cent is read, never written: it does not say which substance it counts",
+			"ask for mg/mL; 1 % w/v is 10 mg/mL")
+	case strings.HasPrefix(to, "mEq"):
+		c.refuse(refusal.UnitWrongKind, "--to", to, "mmol", "milliequivalents are read, never written",
+			"ask for mmol; mEq is mmol times the charge of the ion")
+	case strings.HasPrefix(to, "1:") || strings.HasPrefix(to, "1 in"):
+		c.refuse(refusal.RatioStrength, "--to", to, "mg/mL", "a ratio strength is read, never written", "ask for mg/mL or microgram/mL")
+	case to == "in" || to == "lb" || to == "st":
+		c.refuse(refusal.UnitWrongKind, "--to", to, "kg or cm", "this unit is read, never written", "ask for kg or cm")
+	default:
+		return true
+	}
+	return false
+}
+
+func (c *conversion) refuse(code refusal.Code, field, got, want, message, remedy string) {
+	rule := "R4"
+	if field == "--to" {
+		rule = "R14"
+	}
+	c.r.add(refusal.Reason{Code: code, Field: field, Got: got, Want: want, Message: message, Rule: rule, Remedy: remedy})
+}
+
+// unread tells why from cannot be read, in the words of the sort wanted.
+func (c *conversion) unread(from string, want sort) {
+	var err error
+	switch want {
+	case sortVolume:
+		_, err = quantity.ParseVolume(from)
+	case sortConcentration:
+		_, err = quantity.ParseConcentration(from)
+	case sortDose:
+		_, err = quantity.ParseDose(from)
+	case sortDoseRate:
+		_, err = quantity.ParseDoseRate(from)
+	case sortFlow:
+		_, err = quantity.ParseFlowRate(from)
+	case sortWeight:
+		_, err = quantity.ParseBodyWeight(from)
+	case sortHeight:
+		_, err = quantity.ParseLength(from)
+	case sortSurface:
+		_, err = quantity.ParseSurface(from)
+	case sortAmount, sortNone:
+		_, err = quantity.ParseAmount(from)
+	}
+	if err == nil {
+		err = &quantity.NotGivenError{What: "quantity to convert"}
+	}
+	c.r.add(faultOf("--from", err))
+}
+
+// form cuts the word "base" or "salt" from the end of a quantity.
+func form(text string) (rest, word string) {
+	t := strings.TrimSpace(text)
+	for _, w := range []string{"base", "salt"} {
+		if s, ok := strings.CutSuffix(t, " "+w); ok {
+			return strings.TrimSpace(s), w
+		}
+	}
+	return t, ""
+}
+
+// join turns got into the unit of one.
+func (c *conversion) join(got, one reading, fromForm, toForm, to string) {
+	if got.sort != one.sort {
+		c.unlike(got, one)
+		return
+	}
+	if got.basis != one.basis {
+		c.r.add(faultOf("--to", &quantity.BasisError{Got: one.basis, Want: got.basis}))
+		return
+	}
+	forms := fromForm != toForm && (fromForm == "base" || toForm == "base")
+	if got.kind != one.kind || forms {
+		c.throughSalt(got, one, fromForm, toForm, to)
+		return
+	}
+	c.r.forbid("both sides count the same thing", "of")
+	c.answer(got.value, one, to)
+}
+
+// unlike refuses a change of sort and says what would be needed.
+func (c *conversion) unlike(got, one reading) {
+	remedy := "check both units"
+	switch {
+	case got.sort == sortVolume && one.sort == sortAmount, got.sort == sortAmount && one.sort == sortVolume:
+		remedy = "a concentration joins them: use drawup dose or drawup mix"
+	case got.sort == sortFlow && one.sort == sortDoseRate, got.sort == sortDoseRate && one.sort == sortFlow:
+		remedy = "a concentration joins them: use drawup rate"
+	case got.sort == sortWeight || one.sort == sortWeight:
+		remedy = "a body weight is no amount of drug (rule R3)"
+	}
+	c.refuse(refusal.UnitWrongKind, "--from", c.doc.From, one.sort.String(),
+		fmt.Sprintf("got %v, want %v", got.sort, one.sort), remedy)
+}
+
+// answer puts value, counted in the base unit, into the document in the unit
+// of one.
+func (c *conversion) answer(value *big.Rat, one reading, to string) {
+	x := new(big.Rat).Quo(value, one.value)
+	unit := to
+	if one.unit != "" {
+		unit = one.unit
+	}
+	printed := c.r.style.Number(x) + " " + unit
+	if one.sort == sortAmount {
+		printed = c.r.style.AmountIn(quantity.AmountOf(x, one.amt), one.amt)
+	}
+	c.doc.Result = &quantityJSON{exactText(x), printed, unit}
+}

@@ -1,0 +1,99 @@
+package main
+
+import (
+	"fmt"
+	"io"
+
+	"drawup/dilution/quantity"
+	"drawup/dilution/refusal"
+)
+
+func doseFlags() []flagSpec {
+	return append([]flagSpec{
+		{"dose", "0.3 mg/kg", "the dose: absolute, per kg or per m²"},
+	}, patientAndMixFlags()...)
+}
+
+// A doseDocument is the answer of drawup dose. Reading is what a stocked barrel
+// shows; it is left out when none measures the volume.
+type doseDocument struct {
+	Amount        *quantityJSON `json:"amount,omitempty"`
+	Volume        *quantityJSON `json:"volume,omitempty"`
+	Concentration *quantityJSON `json:"concentration,omitempty"`
+	Reading       *readingJSON  `json:"reading,omitempty"`
+	Working       []string      `json:"working,omitempty"`
+	findings
+}
+
+func runDose(e env, args []string) int {
+	r := newRequest("dose", doseFlags(), args)
+	if r.help {
+		return showHelp(e, "dose")
+	}
+	doc := &doseDocument{}
+	r.need("dose", "there is no sum without it")
+	dose := read(r, "dose", quantity.ParseDose)
+	conc := readConcentration(r)
+	if dose.Given() {
+		readPer(r, dose.Basis())
+	}
+	if !r.refused() {
+		workDose(r, dose, conc, doc)
+	}
+	if r.refused() {
+		doc = &doseDocument{}
+	}
+	return r.finish(e, doc, func(w io.Writer) { tellDose(w, doc) })
+}
+
+func workDose(r *request, dose quantity.Dose, c quantity.Concentration, doc *doseDocument) {
+	amount, who, err := doseAmount(r, dose)
+	if err != nil {
+		r.add(faultOf("--dose", err))
+		return
+	}
+	volume, err := amount.DrawnAt(c)
+	if err != nil {
+		r.add(faultOf("--dose", err))
+		return
+	}
+	doc.Amount, doc.Volume, doc.Concentration = amountJSON(r.style, amount), volumeJSON(r.style, volume), concentrationJSON(r.style, c)
+	if who != "" {
+		doc.Working = append(doc.Working, fmt.Sprintf("%s x %s = %s", r.style.Dose(dose), who, shown(doc.Amount)))
+	}
+	doc.Working = append(doc.Working, fmt.Sprintf("%s / %s = %s", shown(doc.Amount), shown(doc.Concentration), shown(doc.Volume)))
+	if got, ok := r.measure("volume", volume); ok {
+		doc.Reading = readingOf(r.style, got)
+	}
+	r.noLimits()
+}
+
+// doseAmount is the absolute dose and the words for what it was multiplied by.
+func doseAmount(r *request, dose quantity.Dose) (quantity.Amount, string, error) {
+	switch dose.Basis() {
+	case quantity.PerKilogram:
+		w := read(r, "weight", quantity.ParseBodyWeight)
+		a, err := dose.For(w)
+		return a, "body weight " + r.style.BodyWeight(w), err
+	case quantity.PerSquareMetre:
+		s := read(r, "surface", quantity.ParseSurface)
+		a, err := dose.On(s)
+		return a, "surface area " + r.style.Surface(s), err
+	case quantity.Absolute:
+		a, err := dose.Amount()
+		return a, "", err
+	}
+	return quantity.Amount{}, "", refusal.Reason{Code: refusal.QuantityMissing, Message: "the dose has no basis"}
+}
+
+func tellDose(w io.Writer, d *doseDocument) {
+	fmt.Fprintf(w, "give %s\n", shown(d.Volume))
+	line(w, "amount", shown(d.Amount))
+	line(w, "concentration", shown(d.Concentration))
+	if d.Reading != nil {
+		line(w, "measured", d.Reading.words())
+	}
+	for _, s := range d.Working {
+		line(w, "how", s)
+	}
+}

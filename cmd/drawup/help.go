@@ -1,0 +1,190 @@
+package main
+
+import (
+	"fmt"
+	"strings"
+
+	"drawup/dilution/refusal"
+)
+
+// A topic is one page of help that is not a command.
+type topic struct{ name, summary, text string }
+
+func topics() []topic {
+	return []topic{
+		{"quantities", "how to type amounts, volumes, rates", helpQuantities},
+		{"rounding", "where numbers are rounded and where not", helpRounding},
+		{"exit-codes", "what the program ends with", helpExitCodes},
+		{"cautions", "refusals and cautions, and how to read them", helpCautions},
+	}
+}
+
+const helpQuantities = `Quantities are typed as people write them, in quotes: a number, a blank, a unit.
+
+  amount         4 mg   500 units   8 mmol   150 micromol   200 ng
+  volume         50 mL   1 L
+  concentration  2 mg/mL   200 mg/5 mL   4 mg in 50 mL   0.5 %   1:1000
+  dose           2 mg   0.3 mg/kg   75 mg/m2
+  dose rate      5 mg/h   0.1 microgram/kg/min   2 units/day
+  flow rate      5.3 mL/h   0.5 mL/min
+  patient        72 kg   178 cm   1.8 m2   54 years
+
+microgram may be typed as mcg or µg. Per cent (grams in 100 mL) and ratio
+strengths are read and never printed. A number has digits and at most one point
+with digits on both sides: 0.5, not .5 or 0,5 or 5e-1. What is refused comes
+with the reading that was probably meant.
+
+"4 mg in 50 mL" means 50 mL in the end, drug included.
+`
+
+const helpRounding = `Every sum is worked in exact fractions. A number is rounded where it meets a
+scale, once, half up:
+
+  pump rate        to the pump's step, 0.1 mL/h unless --step says otherwise
+  body weight      ideal, adjusted and lean weight to 0.1 kg
+  surface area     to 0.01 m²
+  on screen        exactly, where four digits are enough; else to three digits,
+                   and "about" stands before it
+
+With --json each quantity has "exact": the full decimal if it ends, else a
+fraction such as 28/3.
+`
+
+const helpExitCodes = `0  made: the result is there
+1  refused: the request was read, and a rule or a limit stands against it
+2  the request cannot be read: a flag, a number or a unit is wrong or missing
+3  the two routes disagree: a fault of the program; nothing may be used
+`
+
+const helpCautions = `A refusal stops the work and goes to standard error:
+
+  drawup: refused: weight-missing
+    the dose is per kg and no body weight is given
+    rule: R3
+    do: add --weight "72 kg"
+
+The code never changes its meaning. All refusals are told at once. A caution has
+the same form, starts with "caution:" and stands below the answer: the answer
+holds, and a person has to weigh it. With --json both are lists of objects with
+code, message, field, got, want, rule, source and remedy.
+
+The quick sums check no limit of any drug (limits-not-checked). Local policy, the
+pack in the hand and licensed staff decide.
+`
+
+func runHelp(e env, args []string) int {
+	r := request{name: "help"}
+	for _, a := range args {
+		if a == "-h" || a == "--help" {
+			args = nil
+			break
+		}
+	}
+	switch len(args) {
+	case 0:
+		return e.print(overview())
+	case 1:
+		if text, ok := helpText(args[0]); ok {
+			return e.print(text)
+		}
+		r.add(refusal.Reason{
+			Code: refusal.ValueUnknown, Field: "topic", Got: args[0], Want: "a command or a topic",
+			Message: fmt.Sprintf("got %q, want a command or a topic", args[0]),
+			Remedy:  nearestOr(args[0], helpNames(), "", "type drawup help for the list"),
+		})
+	default:
+		r.add(refusal.Reason{
+			Code: refusal.ValueUnknown, Field: "topic", Got: strings.Join(args, " "), Want: "one topic",
+			Message: fmt.Sprintf("got %d topics, want one", len(args)), Remedy: "ask for one at a time",
+		})
+	}
+	return finish(e, false, &bareDocument{}, nil, r.faults)
+}
+
+func (e env) print(text string) int {
+	if _, err := fmt.Fprint(e.stdout, text); err != nil {
+		return outputFault(e, err)
+	}
+	return exitMade
+}
+
+func helpNames() []string {
+	var names []string
+	for _, c := range commands() {
+		names = append(names, c.name)
+	}
+	for _, t := range topics() {
+		names = append(names, t.name)
+	}
+	return names
+}
+
+// overview is the first page of help.
+func overview() string {
+	var b strings.Builder
+	b.WriteString("drawup plans and labels drug syringes.\n\nusage: drawup COMMAND [flags]\n\n")
+	for _, c := range commands() {
+		fmt.Fprintf(&b, "  %s%s\n", pad(c.name, 12), c.summary)
+	}
+	b.WriteString("\ndrawup help COMMAND lists its flags. Topics of help:\n\n")
+	for _, t := range topics() {
+		fmt.Fprintf(&b, "  %s%s\n", pad(t.name, 12), t.summary)
+	}
+	return b.String()
+}
+
+// flagsOf is the flags of the commands of this file's kind, by name.
+func flagsOf(name string) ([]flagSpec, string, bool) {
+	switch name {
+	case "mix":
+		return mixFlags(), `drawup mix --amount "4 mg" --final "50 mL" --strength "1 mg/mL"`, true
+	case "rate":
+		return rateFlags(), `drawup rate --dose "0.1 microgram/kg/min" --weight "70 kg" --mix "4 mg in 50 mL"`, true
+	case "dose":
+		return doseFlags(), `drawup dose --dose "0.3 mg/kg" --weight "72 kg" --concentration "10 mg/mL"`, true
+	case "body":
+		return bodyFlags(), `drawup body --weight "72 kg" --height "178 cm" --sex male --age "54 years"`, true
+	case "convert":
+		return convertFlags(), `drawup convert --from "1 g" --to mmol --of "magnesium sulfate heptahydrate"`, true
+	}
+	return nil, "", false
+}
+
+// helpText is the page of a command or topic.
+func helpText(name string) (string, bool) {
+	for _, t := range topics() {
+		if t.name == name {
+			return t.text, true
+		}
+	}
+	flags, example, ok := flagsOf(name)
+	if !ok {
+		if name == "help" {
+			return overview(), true
+		}
+		return commandSummary(name)
+	}
+	var b strings.Builder
+	summary, _ := commandSummary(name)
+	fmt.Fprintf(&b, "%s\n  %s\n\n", summary, example)
+	for _, f := range flags {
+		fmt.Fprintf(&b, "  %s%s%s\n", pad("--"+f.name, 18), pad(f.example, 32), f.use)
+	}
+	fmt.Fprintf(&b, "  %s%s%s\n", pad("--json", 18), pad("", 32), "the answer as a JSON document")
+	fmt.Fprintf(&b, "  %s%s%s\n", pad("--style", 18), pad("uk", 32), "house style of numbers and units: uk, us, si")
+	return b.String(), true
+}
+
+func commandSummary(name string) (string, bool) {
+	for _, c := range commands() {
+		if c.name == name {
+			return fmt.Sprintf("drawup %s: %s\n", c.name, c.summary), true
+		}
+	}
+	return "", false
+}
+
+func showHelp(e env, name string) int {
+	text, _ := helpText(name)
+	return e.print(text)
+}
