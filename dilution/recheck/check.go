@@ -128,6 +128,8 @@ func (c *check) honoured(name, text string) *objection {
 	switch name {
 	case AmountInSyringe, Concentration, ContainerCount, Age, Sex, Prepared:
 		return nil
+	case UseBy, EmptyAt:
+		return sameMoment(c.asked[name][0], text)
 	}
 	r, err := readPrinted(text)
 	if err != nil {
@@ -203,6 +205,11 @@ func (c *check) typed(name string) value {
 	texts := c.asked[name]
 	if len(texts) == 0 {
 		return lacking("needs " + name + " as typed, which is not among what was asked")
+	}
+	if name == Concentration {
+		if v, ok := readOldStrength(texts[0]); ok {
+			return v
+		}
 	}
 	v, _, err := readTyped(texts[0])
 	if err != nil {

@@ -54,13 +54,7 @@ func findRecord(raw []byte, drug, presentation string) record {
 	if len(raw) > mostRecord {
 		return record{problem: "the record is too long to be searched"}
 	}
-	drugs := readBlocks(string(raw))
-	var found []drugBlock
-	for _, d := range drugs {
-		if d.lines["name"] == drug && drug != "" {
-			found = append(found, d)
-		}
-	}
+	found := drugsNamed(string(raw), drug)
 	if len(found) != 1 {
 		return record{problem: fmt.Sprintf("the record holds %d drugs named %q, want one", len(found), drug)}
 	}
@@ -77,6 +71,29 @@ func findRecord(raw []byte, drug, presentation string) record {
 		return record{problem: fmt.Sprintf("the record of %q has a line twice: %s", drug, key)}
 	}
 	return record{own: found[0].lines, pack: packs[0].lines}
+}
+
+// drugsNamed cuts the text at its [[drug]] lines and reads only the pieces in
+// which the name stands in quotes, so that a long formulary costs little.
+func drugsNamed(text, name string) []drugBlock {
+	const cut = "\n[[drug]]"
+	var found []drugBlock
+	for text != "" && name != "" {
+		piece, rest := text, ""
+		if at := strings.Index(text[1:], cut); at >= 0 {
+			piece, rest = text[:at+1], text[at+1:]
+		}
+		text = rest
+		if !strings.Contains(piece, `"`+name+`"`) && !strings.Contains(piece, "'"+name+"'") {
+			continue
+		}
+		for _, d := range readBlocks(piece) {
+			if d.lines["name"] == name {
+				found = append(found, d)
+			}
+		}
+	}
+	return found
 }
 
 // readBlocks walks the text line by line. Only [[drug]] and

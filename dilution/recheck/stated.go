@@ -18,10 +18,26 @@ type Figure struct {
 
 // A Stated is everything that the papers say about one syringe.
 //
-// Syringe names it in messages. Asked holds what the order says, as typed.
-// Record is the raw text of the formulary file in which the presentation's own
-// words are found again, Drug and Presentation say where in it. Figures holds
-// every figure of every paper of this syringe, repeated ones included.
+// Syringe names it in messages. Asked holds what the order says, as typed, and
+// where the order leaves a choice to the site what the site's own file says, as
+// typed there. Record is the raw text of the formulary file in which the
+// presentation's own words are found again, Drug and Presentation say where in
+// it. Figures holds every figure of every paper of this syringe, repeated ones
+// included.
+//
+// These names have no sum that could confirm them, so each that is printed must
+// be in Asked under its own name: method (unless neat), drug.step, dose.step,
+// rate.step, drug.barrel, final.barrel, weight.actual, height, age, sex, dose,
+// start.dose, low.dose, high.dose, limit.dose. Steps of barrels and barrels may
+// be asked several times: they are the stock to choose from. The weight that a
+// dose goes by stands behind the typed dose ("0.3 mg/kg lean") or in Asked under
+// dose.weight.by and rate.weight.by; where it is nowhere, only "actual" passes.
+// How much drug to draw must follow from an asked amount, concentration,
+// drug.volume, container.count, a final.volume drawn neat, or a dose alone.
+// ladder.N.dose is compared where it was asked. prepared, prepared.offset,
+// use.hours and use.by.offset are confirmed by use.by or else must be asked; atc
+// by the drug's line atc in the record, by code or by Asked; serial by code or
+// by Asked.
 type Stated struct {
 	Syringe      string
 	Drug         string

@@ -208,3 +208,27 @@ func readTyped(text string) (value, string, error) {
 	}
 	return n.times(u), words[1], nil
 }
+
+// readOldStrength reads the two strengths that people may type and paper never
+// shows: "0.5 %" is 0.5 g in 100 mL, "1:10000" and "1 in 10000" are 1 g in so
+// many mL.
+func readOldStrength(text string) (value, bool) {
+	gram, millilitre := whole(1_000_000_000).ofKind(one(inMass)), whole(1).ofKind(one(inVolume))
+	text = strings.TrimSpace(text)
+	if number, ok := strings.CutSuffix(text, "%"); ok {
+		n, err := typedNumber(strings.TrimSpace(number))
+		if err != nil {
+			return value{}, false
+		}
+		return n.times(pair(1, 100)).times(gram).over(millilitre), true
+	}
+	number, ok := strings.CutPrefix(text, "1:")
+	if !ok {
+		number, ok = strings.CutPrefix(text, "1 in ")
+	}
+	n, err := typedNumber(number)
+	if !ok || err != nil || n.sign() == 0 {
+		return value{}, false
+	}
+	return gram.over(millilitre).over(n), true
+}

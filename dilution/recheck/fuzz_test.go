@@ -1,0 +1,63 @@
+package recheck
+
+import (
+	"strings"
+	"testing"
+)
+
+// Whatever printedNumber accepts is written back, group marks aside, letter for
+// letter.
+func FuzzPrintedNumber(f *testing.F) {
+	for _, s := range []string{"0", "7.2", "1,000", "12\u202f345.678", "1\u00a0000", "05", "1e3", ".5", "5."} {
+		f.Add(s)
+	}
+	f.Fuzz(func(t *testing.T, text string) {
+		v, err := printedNumber(text)
+		if err != nil {
+			return
+		}
+		plainText := strings.NewReplacer(",", "", "\u202f", "", "\u00a0", "").Replace(text)
+		if got := decimal(v, mostDigits); got != plainText {
+			t.Errorf("%q read back as %q", text, got)
+		}
+	})
+}
+
+// Printed and typed quantities: nothing panics, and what paper may show reads
+// the same when typed without group marks.
+func FuzzQuantity(f *testing.F) {
+	for _, s := range []string{"7.2 mL/h", "0.1 micrograms/kg/min", "5,000 units", "0.3 mg/kg lean", "10 %", "4 mmol/g", "0.5 µg"} {
+		f.Add(s)
+	}
+	f.Fuzz(func(t *testing.T, text string) {
+		v, _, err := readTyped(text)
+		if err == nil && (v.lack != "" || v.den.Sign() <= 0 || v.num.Sign() < 0) {
+			t.Errorf("typed %q gives %v", text, v)
+		}
+		r, err := readPrinted(text)
+		if err != nil {
+			return
+		}
+		if r.unit.sign() <= 0 || r.whole.den.Sign() <= 0 {
+			t.Errorf("%q gives %v", text, r)
+		}
+		w, _, err := readTyped(strings.NewReplacer(",", "", "\u202f", "", "\u00a0", "").Replace(text))
+		if err != nil || w.dim != r.whole.dim || w.against(r.whole) != 0 {
+			t.Errorf("%q is another quantity when typed: %v", text, err)
+		}
+	})
+}
+
+// Any record and any figure: nothing panics, and a set that passes is covered.
+func FuzzCheck(f *testing.F) {
+	f.Add("[[drug]]\nname = \"x\"\n[[drug.presentation]]\nid = \"a\"\namount = \"1 mg\"\n", ContainerAmount, "1 mg")
+	f.Add("", Row(Ladder, 3, "rate"), "1 mL/h")
+	f.Add("[[drug]]\nname = 'x'", Code, "(91)N01AX07(92)261202073000001003(93)2mg/mL")
+	f.Fuzz(func(t *testing.T, record, name, text string) {
+		s := Stated{Syringe: "f", Drug: "x", Presentation: "a", Record: []byte(record), Figures: []Figure{{"label", name, text}}, Asked: []Figure{{"order", name, text}}}
+		passed, err := Check(s)
+		if (err == nil) != passed.Covers(s.Figures) {
+			t.Errorf("error %v, covered %v", err, passed.Covers(s.Figures))
+		}
+	})
+}
