@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"io"
 	"math/big"
+	"strings"
 
 	"drawup/dilution/body"
 	"drawup/dilution/quantity"
@@ -50,8 +51,8 @@ func readSize(r *request) body.Size {
 	r.need("weight", "every figure goes by it")
 	r.need("height", "every figure goes by it")
 	size := body.Size{
-		Weight: read(r, "weight", quantity.ParseBodyWeight),
-		Height: read(r, "height", quantity.ParseLength),
+		Weight: readWeight(r),
+		Height: readHeight(r),
 		Age:    read(r, "age", body.ParseAge),
 	}
 	if r.given("sex") {
@@ -64,6 +65,9 @@ func readSize(r *request) body.Size {
 			})
 		}
 		size.Sex = sex
+	}
+	if size.Weight.Given() && size.Height.Given() {
+		checkIndex(r, size)
 	}
 	return size
 }
@@ -119,21 +123,29 @@ func bmiJSON(r *request, size body.Size) *quantityJSON {
 	return &quantityJSON{exactText(bmi), r.style.Number(shown.Rat()) + " kg/m²", "kg/m2"}
 }
 
-// leftOut says, once for each reason, why a figure of the body is not there.
+// leftOut says, once for each reason, which figures of the body are not there.
 func (r *request) leftOut(err error) {
-	x := refusal.Reason{Code: refusal.BodySizeOutside, Field: "body size", Message: err.Error() + "; the figure is left out"}
+	x := refusal.Reason{Code: refusal.BodySizeOutside, Field: "body size", Message: err.Error()}
+	figure := ""
 	var outside *body.OutsideEquation
 	var missing *body.MissingError
 	switch {
 	case errors.As(err, &outside):
-		x.Source = outside.Source
+		x.Source, x.Message, figure = outside.Source, outside.Reason, outside.Equation
 		x.Remedy = "use the actual weight, or a local rule for this patient"
 	case errors.As(err, &missing):
-		x.Code = missingCode(missing.What)
-		x.Field = "--" + string(missing.What)
-		x.Message = "without --" + string(missing.What) + " there is no " + missing.Equation
+		x.Code, x.Field, figure = missingCode(missing.What), "--"+string(missing.What), missing.Equation
+		x.Message = string(missing.What) + " is not given"
 		x.Remedy = r.remedyFor(string(missing.What))
 	}
+	const leads = "; left out: "
+	for i, have := range r.faults {
+		if have.Code == x.Code && strings.HasPrefix(have.Message, x.Message+leads) {
+			r.faults[i].Message += ", " + figure
+			return
+		}
+	}
+	x.Message += leads + figure
 	r.caution(x)
 }
 

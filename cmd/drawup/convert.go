@@ -48,7 +48,7 @@ func runConvert(e env, args []string) int {
 }
 
 func tellConvert(w io.Writer, d *convertDocument) {
-	fmt.Fprintf(w, "%s\n", d.Result.Printed)
+	fmt.Fprintf(w, "%s\n", shown(d.Result))
 	if plain(d.Result.Printed) != d.Result.Exact {
 		line(w, "exactly", d.Result.Exact+" "+d.Result.Unit)
 	}
@@ -318,9 +318,29 @@ func (c *conversion) answer(value *big.Rat, one reading, to string) {
 	if one.unit != "" {
 		unit = one.unit
 	}
-	printed := c.r.style.Number(x) + " " + unit
-	if one.sort == sortAmount {
-		printed = c.r.style.AmountIn(quantity.AmountOf(x, one.amt), one.amt)
+	c.doc.Result = &quantityJSON{exactText(x), c.printed(x, one, to, unit), unit}
+}
+
+// printed is x of the unit to in the house style, where the style knows it.
+func (c *conversion) printed(x *big.Rat, one reading, to, unit string) string {
+	s := c.r.style
+	switch one.sort {
+	case sortAmount:
+		return s.AmountIn(quantity.AmountOf(x, one.amt), one.amt)
+	case sortConcentration:
+		perMillilitre, err := quantity.AmountOf(x, one.amt).In(quantity.Millilitres(big.NewRat(1, 1)))
+		if err == nil && strings.HasSuffix(strings.ToLower(to), "/ml") && !strings.ContainsAny(to, "0123456789") {
+			return s.ConcentrationIn(perMillilitre, one.amt)
+		}
+	case sortDose:
+		if d, err := quantity.ParseDose("1 " + to); err == nil {
+			return s.Dose(d.Scaled(x))
+		}
+	case sortDoseRate:
+		if d, err := quantity.ParseDoseRate("1 " + to); err == nil {
+			return s.DoseRate(d.Scaled(x))
+		}
+	case sortNone, sortVolume, sortFlow, sortWeight, sortHeight, sortSurface:
 	}
-	c.doc.Result = &quantityJSON{exactText(x), printed, unit}
+	return s.Number(x) + " " + unit
 }

@@ -28,6 +28,7 @@ type request struct {
 	texts  map[string]*onceText
 	json   bool
 	help   bool
+	broken bool // the flags could not be read to the end
 	style  quantity.Style
 	faults refusal.List
 }
@@ -68,7 +69,7 @@ func newRequest(name string, specs []flagSpec, args []string) *request {
 	r.flags.BoolVar(&r.json, "json", false, "")
 	r.flags.BoolVarP(&r.help, "help", "h", false, "")
 	if err := r.flags.Parse(args); err != nil {
-		r.json = r.json || wantsJSON(args)
+		r.json, r.broken = r.json || wantsJSON(args), true
 		r.add(flagFault(err, r.flagNames()))
 	}
 	for _, extra := range r.flags.Args() {
@@ -156,6 +157,9 @@ func (r *request) count(names ...string) int {
 
 // exactlyOne refuses none and more than one of the flags.
 func (r *request) exactlyOne(names ...string) {
+	if r.broken {
+		return
+	}
 	switch n := r.count(names...); {
 	case n == 0:
 		r.add(refusal.Reason{
@@ -191,7 +195,7 @@ func (r *request) conflict(names []string, want string) {
 
 // need refuses when the flag is missing.
 func (r *request) need(name, why string) {
-	if r.given(name) {
+	if r.given(name) || r.broken {
 		return
 	}
 	r.add(refusal.Reason{

@@ -302,57 +302,48 @@ func balanced(r *request, m mixture) bool {
 // mixParts is how far each measured volume can be off, as a share of the
 // concentration in per cent. It is false when a volume cannot be measured.
 func mixParts(r *request, m mixture, doc *mixDocument) ([]*big.Rat, bool) {
-	var parts []*big.Rat
-	all := true
-	take := func(field string, v, whole quantity.Volume) syringe.Reading {
-		got, ok := r.measure(field, v)
-		if !ok {
-			all = false
-			return got
+	one := big.NewRat(1, 1)
+	p := &widths{r: r, all: true}
+	if m.drug.Given() && !m.drug.IsZero() {
+		weight := one
+		if m.method == methodAdd { // the share of the other volume weighs each reading (GUM)
+			weight = share(m.diluent, m.volume)
 		}
-		width := halfWidth(got)
-		if whole.Given() {
-			width.Mul(width, new(big.Rat).Quo(v.Rat(), whole.Rat()))
+		if got, ok := p.add("drug volume", m.drug, weight); ok {
+			doc.DrugReading = readingOf(r.style, got)
 		}
-		parts = append(parts, width)
-		return got
-	}
-	var none quantity.Volume
-	drug := func(whole quantity.Volume, other quantity.Volume) {
-		if m.drug.IsZero() {
-			return
-		}
-		got, ok := r.measure("drug volume", m.drug)
-		if !ok {
-			all = false
-			return
-		}
-		doc.DrugReading = readingOf(r.style, got)
-		width := halfWidth(got)
-		if whole.Given() {
-			width.Mul(width, new(big.Rat).Quo(other.Rat(), whole.Rat()))
-		}
-		parts = append(parts, width)
 	}
 	switch m.method {
 	case methodMakeUp:
-		drug(none, none)
-		take("final volume", m.volume, none)
-	case methodAdd: // the diluent's share of the final volume weighs both readings (GUM, calculation reference g)
-		drug(m.volume, m.diluent)
-		take("diluent volume", m.diluent, m.volume)
-	case methodAddTo, methodReplace:
-		drug(none, none)
-	case methodNeat:
-		if _, ok := r.measure("drug volume", m.drug); !ok {
-			return nil, false
-		}
-	case methodPowder:
+		p.add("final volume", m.volume, one)
+	case methodAdd, methodPowder:
 		if m.diluent.Given() && !m.diluent.IsZero() {
-			take("diluent volume", m.diluent, m.volume)
+			p.add("diluent volume", m.diluent, share(m.diluent, m.volume))
 		}
-	case methodFinal:
+	case methodNeat, methodFinal: // nothing is diluted, or nothing is known
 		return nil, false
+	case methodAddTo, methodReplace: // the bag's own error is a caution
 	}
-	return parts, all
+	return p.parts, p.all
 }
+
+// widths gathers the half widths of readings in per cent.
+type widths struct {
+	r     *request
+	parts []*big.Rat
+	all   bool // every volume could be measured
+}
+
+// add reads v on a barrel and keeps its half width times weight.
+func (p *widths) add(field string, v quantity.Volume, weight *big.Rat) (syringe.Reading, bool) {
+	got, ok := p.r.measure(field, v)
+	if !ok {
+		p.all = false
+		return got, false
+	}
+	p.parts = append(p.parts, new(big.Rat).Mul(halfWidth(got), weight))
+	return got, true
+}
+
+// share is v as a part of whole.
+func share(v, whole quantity.Volume) *big.Rat { return new(big.Rat).Quo(v.Rat(), whole.Rat()) }

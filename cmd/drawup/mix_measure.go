@@ -121,8 +121,12 @@ func intervalOf(s quantity.Style, c quantity.Concentration, parts []*big.Rat) (*
 	one := big.NewRat(1, 1)
 	low := c.Scaled(new(big.Rat).Sub(one, share))
 	high := c.Scaled(new(big.Rat).Add(one, share))
+	bound := func(x quantity.Concentration) *quantityJSON {
+		u := c.Best() // one unit for both ends
+		return &quantityJSON{x.Exact(u), s.ConcentrationIn(x, u), u.String() + "/mL"}
+	}
 	return &intervalJSON{
-		Low: concentrationJSON(s, low), High: concentrationJSON(s, high), Percent: percentJSON(s, percent),
+		Low: bound(low), High: bound(high), Percent: percentJSON(s, percent),
 		Covers: "measuring syringes (" + syringe.ToleranceSource + "); not the assay of the presentation",
 	}, nil
 }

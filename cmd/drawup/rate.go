@@ -144,12 +144,12 @@ func readAs(r *request, c quantity.Concentration) quantity.DoseRate {
 // readPer is what a dose is counted per. A weight that is missing is refused,
 // and so is one that has no part in the sum: a "/kg" may have been forgotten.
 func readPer(r *request, b quantity.Basis) pump.Per {
-	weight := read(r, "weight", quantity.ParseBodyWeight)
+	weight := readWeight(r)
 	surface := read(r, "surface", quantity.ParseSurface)
 	switch b {
 	case quantity.PerKilogram:
 		r.forbid("the dose is per kg", "surface")
-		if !r.given("weight") {
+		if !r.given("weight") && !r.broken {
 			r.add(refusal.Reason{Code: refusal.WeightMissing, Field: "--weight", Rule: "R3",
 				Message: "the dose is per kg and no body weight is given", Remedy: r.remedyFor("weight")})
 		}

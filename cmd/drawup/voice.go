@@ -71,19 +71,17 @@ func details(w io.Writer, r refusal.Reason) {
 		place += fmt.Sprintf("syringe %d: ", r.Syringe)
 	}
 	fmt.Fprintf(w, "  %s%s\n", place, oneLine(r.Message))
-	if rule := ruleLine(r); rule != "" {
-		fmt.Fprintf(w, "  rule: %s\n", oneLine(rule))
+	switch {
+	case r.Rule != "" && r.Source != "":
+		fmt.Fprintf(w, "  rule: %s; %s\n", oneLine(r.Rule), oneLine(r.Source))
+	case r.Rule != "":
+		fmt.Fprintf(w, "  rule: %s\n", oneLine(r.Rule))
+	case r.Source != "":
+		fmt.Fprintf(w, "  source: %s\n", oneLine(r.Source))
 	}
 	if r.Remedy != "" {
 		fmt.Fprintf(w, "  do: %s\n", oneLine(r.Remedy))
 	}
-}
-
-func ruleLine(r refusal.Reason) string {
-	if r.Rule != "" && r.Source != "" {
-		return r.Rule + "; " + r.Source
-	}
-	return r.Rule + r.Source
 }
 
 // oneLine keeps what was typed from breaking out of its line or from steering
