@@ -25,8 +25,6 @@ func (w *work) certainty() bool {
 			return w.fault(err, "assay", w.o.Pos)
 		}
 		m.Assay, m.AssayAssumed = a, true
-		w.caution(refusal.Reason{Code: refusal.AssayAssumed, Rule: "R9", Field: "assay", Got: "none stored", Want: assumedAssay,
-			Message: "the formulary has no assay limits for this container; plus or minus " + assumedAssay + " is assumed for the interval"})
 	}
 	parts := []quantity.Percent{m.Assay}
 	if m.Method != Neat {
@@ -69,10 +67,7 @@ func (w *work) useBy() bool {
 			best = UseBy{Minutes: s.Minutes, Won: "stability, " + s.Diluent + ", at room temperature", Source: s.Source.Title}
 		}
 	}
-	if !known {
-		w.caution(refusal.Reason{Code: refusal.UseByUnknown, Rule: "R18", Field: "stability", Got: "none stored", Want: "a stability for " + w.fluid(),
-			Message: "the formulary has no room-temperature stability for this preparation; the use-by time follows site policy alone", Remedy: "check the pack and local policy"})
-	}
+	best.Stability = known
 	best.At = w.plan.Prepared.Add(time.Duration(best.Minutes) * time.Minute)
 	if !w.o.Expiry.Given() {
 		w.plan.UseBy = best

@@ -108,9 +108,11 @@ func unique(list []string) []string {
 	return out
 }
 
-// pickDose chooses the row of limits for this dose and patient: of the rows
-// that fit route, age and indication the one with the mildest verdict, the
-// first of equals. It fills plan.Dose once.
+// pickDose holds the dose against the rows of limits that fit route, age and
+// indication, and fills plan.Dose once. Rows of one indication are
+// alternatives: the mildest verdict holds. Indications are not: when they
+// disagree and the order names none, the dose is refused, so that a slip for
+// one purpose never passes as a dose for another.
 func (w *work) pickDose() bool {
 	if w.plan.Dose != nil {
 		return w.doseOK
@@ -119,17 +121,20 @@ func (w *work) pickDose() bool {
 	if !ok {
 		return false
 	}
-	var best *DosePart
-	var verdict verdict
+	var parts []*DosePart
+	var found []judged
 	for _, row := range rows {
 		d, v, err := w.judgeDose(row)
 		if err != nil {
 			return w.sizeFault(err, "dose", w.o.Dose.Pos)
 		}
-		if best == nil || v.rank < verdict.rank {
-			best, verdict = d, v
-		}
+		parts, found = append(parts, d), append(found, judged{row.For, v})
 	}
+	i, ok := w.settle(found, "dose", w.o.Dose.Pos)
+	if !ok {
+		return false
+	}
+	best, verdict := parts[i], found[i].verdict
 	w.plan.Dose, w.doseOK = best, verdict.rank < 3
 	for _, r := range verdict.reasons {
 		w.add(r)
@@ -137,6 +142,45 @@ func (w *work) pickDose() bool {
 	w.unlikeWeight(w.o.DoseBy.Given(), w.o.DoseBy.Value, best.Rule.By, best.Rule.BySource, w.o.DoseBy.Pos)
 	w.weightNotes(best.By)
 	return w.doseOK
+}
+
+// A judged is a verdict and the indication whose row gave it.
+type judged struct {
+	purpose string
+	verdict verdict
+}
+
+// settle picks the row that counts: the mildest of the one indication, or of
+// all when they agree.
+func (w *work) settle(found []judged, field string, pos refusal.Pos) (int, bool) {
+	best := map[string]int{}
+	var purposes []string
+	for i, j := range found {
+		at, seen := best[j.purpose]
+		if !seen {
+			purposes = append(purposes, j.purpose)
+		}
+		if !seen || j.verdict.rank < found[at].verdict.rank {
+			best[j.purpose] = i
+		}
+	}
+	first := best[purposes[0]]
+	for _, p := range purposes[1:] {
+		if found[best[p]].verdict.rank != found[first].verdict.rank {
+			return 0, w.refuse(refusal.Reason{Code: refusal.IndicationUnclear, Field: field, Want: joinOr(quoted(purposes)), Rule: "R10", Pos: pos,
+				Message: fmt.Sprintf("the limits of %s depend on what it is for, and the order does not say: this %s is right for one use and wrong for another", w.plan.Drug.Name, field),
+				Remedy:  "write indication = one of: " + joinOr(quoted(purposes))})
+		}
+	}
+	return first, true
+}
+
+func quoted(list []string) []string {
+	out := make([]string, len(list))
+	for i, s := range list {
+		out[i] = fmt.Sprintf("%q", s)
+	}
+	return out
 }
 
 // fittingRows are the rows for this route, age and indication.

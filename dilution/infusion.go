@@ -6,6 +6,7 @@ import (
 
 	"drawup/dilution/body"
 	"drawup/dilution/formulary"
+	"drawup/dilution/order"
 	"drawup/dilution/pump"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
@@ -53,35 +54,44 @@ func (p *InfusionPart) per() pump.Per {
 	return pump.PerNothing()
 }
 
-// pickRate chooses the row with the mildest verdict over start and range.
+// pickRate settles the row for start and range together, as pickDose does.
 func (w *work) pickRate(rows []formulary.Rule[quantity.DoseRate]) (formulary.Rule[quantity.DoseRate], bool) {
-	best, verdicts := -1, verdict{}
-	for i, row := range rows {
-		var all verdict
-		for _, f := range []struct {
-			rate  quantity.DoseRate
-			given bool
-			name  string
-			pos   refusal.Pos
-		}{{w.o.Start.Value, true, "start", w.o.Start.Pos}, {w.o.From.Value, w.o.From.Given(), "from", w.o.From.Pos}, {w.o.To.Value, w.o.To.Given(), "to", w.o.To.Pos}} {
-			if !f.given {
-				continue
-			}
-			v, err := w.judgeRate(row, f.rate, f.name, f.pos)
-			if err != nil {
-				return row, w.sizeFault(err, f.name, f.pos)
-			}
-			all.rank = max(all.rank, v.rank)
-			all.reasons = append(all.reasons, v.reasons...)
+	var found []judged
+	for _, row := range rows {
+		v, err := w.judgeRange(row)
+		if err != nil {
+			return row, w.sizeFault(err, "start", w.o.Start.Pos)
 		}
-		if best < 0 || all.rank < verdicts.rank {
-			best, verdicts = i, all
-		}
+		found = append(found, judged{row.For, v})
 	}
-	for _, r := range verdicts.reasons {
+	i, ok := w.settle(found, "start", w.o.Start.Pos)
+	if !ok {
+		return formulary.Rule[quantity.DoseRate]{}, false
+	}
+	for _, r := range found[i].verdict.reasons {
 		w.add(r)
 	}
-	return rows[best], verdicts.rank < 3
+	return rows[i], found[i].verdict.rank < 3
+}
+
+// judgeRange holds the start and the ends of the range against one row.
+func (w *work) judgeRange(row formulary.Rule[quantity.DoseRate]) (verdict, error) {
+	var all verdict
+	for _, f := range []struct {
+		field order.Field[quantity.DoseRate]
+		name  string
+	}{{w.o.Start, "start"}, {w.o.From, "from"}, {w.o.To, "to"}} {
+		if !f.field.Given() {
+			continue
+		}
+		v, err := w.judgeRate(row, f.field.Value, f.name, f.field.Pos)
+		if err != nil {
+			return all, err
+		}
+		all.rank = max(all.rank, v.rank)
+		all.reasons = append(all.reasons, v.reasons...)
+	}
+	return all, nil
 }
 
 // judgeRate holds one dose rate against one row, as absolute rates.

@@ -105,6 +105,10 @@ type UseBy struct {
 	Minutes int64
 	Won     string // "site policy", "stability in glucose 5 %", "expiry of the ampoule"
 	Source  string
+
+	// Stability reports whether the formulary has a room-temperature stability
+	// for this preparation at all, whichever limit won.
+	Stability bool
 }
 
 // A Plan is one syringe, worked.

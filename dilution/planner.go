@@ -52,11 +52,36 @@ func NewList(o order.Order, f *formulary.Formulary, at time.Time, leaveOut map[i
 		all = append(all, reasons...)
 		list.Plans = append(list.Plans, p)
 	}
+	list.Cautions = shared(list.Plans)
+	all = append(all, list.Cautions...)
 	if len(list.Plans) == 0 && !all.Refused() {
 		all = append(all, refusal.Reason{Code: refusal.NothingToMake, Severity: refusal.Refuse, Message: "every syringe of the order is left out",
 			Want: "at least one syringe", Remedy: "leave fewer out"})
 	}
 	return list, all
+}
+
+// shared gathers what would otherwise be said of nearly every syringe.
+func shared(plans []Plan) refusal.List {
+	var assay, useBy []string
+	for _, p := range plans {
+		if p.Mixture.AssayAssumed {
+			assay = append(assay, fmt.Sprint(p.Number))
+		}
+		if p.UseBy.Won != "" && !p.UseBy.Stability {
+			useBy = append(useBy, fmt.Sprint(p.Number))
+		}
+	}
+	var out refusal.List
+	if len(assay) > 0 {
+		out = append(out, refusal.Reason{Code: refusal.AssayAssumed, Severity: refusal.Caution, Rule: "R9", Field: "assay", Got: "none stored", Want: assumedAssay,
+			Message: "no assay limits are stored for the containers of syringe " + joinAnd(assay) + "; plus or minus " + assumedAssay + " is assumed for the interval"})
+	}
+	if len(useBy) > 0 {
+		out = append(out, refusal.Reason{Code: refusal.UseByUnknown, Severity: refusal.Caution, Rule: "R18", Field: "stability", Got: "none stored", Want: "a stability at room temperature",
+			Message: "no stability at room temperature is stored for syringe " + joinAnd(useBy) + "; the use-by time follows site policy alone", Remedy: "check the pack and local policy"})
+	}
+	return out
 }
 
 // brokenSyringes are those whose order could not be read whole.
@@ -148,7 +173,7 @@ func (w *work) balance() bool {
 func (w *work) unverified() {
 	var list []string
 	note := func(what string, unverified bool) {
-		if unverified {
+		if unverified && !routeListed(list, what) {
 			list = append(list, what)
 		}
 	}

@@ -2,6 +2,7 @@ package labels
 
 import (
 	"fmt"
+	"sort"
 	"strings"
 	"time"
 
@@ -232,4 +233,15 @@ func Capital(name string) string {
 		return name
 	}
 	return strings.ToUpper(name[:1]) + name[1:]
+}
+
+// All is every figure of the plan as it would stand on one paper, sorted by
+// name. Papers print some of them; the second route may see them all.
+func (w Facts) All(paper string) []recheck.Figure {
+	out := make([]recheck.Figure, 0, len(w.text))
+	for name, text := range w.text {
+		out = append(out, recheck.Figure{Paper: paper, Name: name, Text: text})
+	}
+	sort.Slice(out, func(i, j int) bool { return out[i].Name < out[j].Name })
+	return out
 }

@@ -138,6 +138,7 @@ func asked(p dilution.Plan) []recheck.Figure {
 	add(recheck.Sex, p.Patient.Sex.Text)
 	askedVolume(p, add)
 	askedRates(p, add)
+	askedBarrels(p, add)
 	add(recheck.UseHours, Span(p.UseBy.Minutes))
 	add(recheck.Prepared, p.Prepared.Format("2006-01-02 15:04"))
 	add(recheck.PreparedOffset, p.Prepared.Format("-07:00"))
@@ -145,6 +146,21 @@ func asked(p dilution.Plan) []recheck.Figure {
 		add(recheck.Assay, p.Mixture.Assay.Written())
 	}
 	return out
+}
+
+// askedBarrels is the site's stock: the graduations of the barrels that are
+// used, and the method that the order names or leaves to the tool.
+func askedBarrels(p dilution.Plan, add func(name, text string)) {
+	m, s := p.Mixture, p.Style
+	add(recheck.DrugBarrel, s.Volume(m.DrugReading.Barrel.Nominal()))
+	add(recheck.DrugStep, s.Volume(m.DrugReading.Barrel.Step()))
+	if !m.InBag {
+		add(recheck.FinalBarrel, s.Volume(m.FinalBarrel.Nominal()))
+	}
+	if p.Dose != nil {
+		add(recheck.DoseStep, s.Volume(p.Dose.Step))
+	}
+	add(recheck.Method, m.Method.String())
 }
 
 // askedVolume says which volume the order's number meant (rule R5).

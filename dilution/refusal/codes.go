@@ -87,6 +87,7 @@ const (
 	AgeOutside             Code = "age-outside-range"
 	SlipThousand           Code = "thousandfold-slip"
 	SlipTen                Code = "tenfold-slip"
+	IndicationUnclear      Code = "indication-unclear"
 	SoftLimitNotSigned     Code = "soft-limit-not-acknowledged"
 	Unverified             Code = "figure-unverified"
 	CautionFromFormulary   Code = "formulary-caution"
