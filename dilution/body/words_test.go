@@ -97,7 +97,7 @@ func TestAgeOrder(t *testing.T) {
 	rising := []string{"0 days", "6 days", "1 week", "8 days", "30 days", "1 month", "31 days", "11 months", "52 weeks", "1 year", "13 months", "17 years", "215 months", "18 years", "82 years"}
 	for i, a := range rising {
 		for j, b := range rising {
-			if got := read(a).Less(read(b)); a != "215 months" && b != "215 months" && got != (i < j) {
+			if got := read(a).Less(read(b)); got != (i < j) {
 				t.Errorf("%s before %s: got %v", a, b, got)
 			}
 		}
