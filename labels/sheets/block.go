@@ -1,0 +1,232 @@
+package sheets
+
+import "drawup/labels"
+
+// An Owned is a line and the syringe that its figures belong to; 0 leaves that
+// to the part.
+type Owned struct {
+	Syringe int
+	Line    labels.Line
+}
+
+// A Block is one of Heading, Words, Steps, Table, Pairs, Big, Boxes, Ticks,
+// Cautions, Sign, Chart, Name and Gap.
+type Block interface {
+	// Lines is everything that the block prints, in reading order.
+	Lines() []Owned
+}
+
+// A Heading opens a section.
+type Heading struct{ Line labels.Line }
+
+// A Name is the head of a syringe: its number, the drug, the class word and
+// its colour, the concentration, whom it is for.
+type Name struct {
+	Number        int
+	Drug          string // "Etomidate"
+	Class         labels.Class
+	Concentration labels.Line
+	Below         labels.Line // presentation, patient
+	Large         bool        // on a pump card
+}
+
+// Words is a paragraph.
+type Words struct {
+	Line   labels.Line
+	Strong bool
+	Small  bool
+}
+
+// Steps are acts, one a line, numbered from 1, each with a box to tick.
+type Steps struct{ List []labels.Line }
+
+// A Column is one column of a table.
+type Column struct {
+	Head  string
+	Share int // of the width, in parts of the sum of all shares
+}
+
+// A Row is one row of a table. Syringe is set where a table holds rows of
+// several syringes.
+type Row struct {
+	Syringe int
+	Cells   []labels.Line
+	Mark    string // small word beside the row, "start"
+}
+
+// A Table is rows under a head.
+type Table struct {
+	Columns []Column
+	Rows    []Row
+	Box     bool // a box to tick before every row
+	Large   bool
+}
+
+// A Pair is a word and what it is.
+type Pair struct {
+	Key   string
+	Value labels.Line
+}
+
+// Pairs are rows of a word and its value.
+type Pairs struct{ List []Pair }
+
+// A BigRow is a number that has to be found at once.
+type BigRow struct {
+	Key   string
+	Value labels.Line
+	Note  labels.Line // small, below
+	Most  bool        // the one number of the sheet
+}
+
+// Big are such rows.
+type Big struct{ List []BigRow }
+
+// A Box is an empty box to write in.
+type Box struct {
+	Label string
+	Unit  string // printed behind the box
+	Wide  bool   // takes the whole width
+}
+
+// Boxes are boxes to fill in, two beside each other.
+type Boxes struct{ List []Box }
+
+// Ticks are sentences with a box to tick.
+type Ticks struct{ List []string }
+
+// A Caution is a sentence with its code in small type and its source.
+type Caution struct {
+	Text string
+	Code string // "dose-above-usual"
+	Note string // source key, "unverified", rule
+}
+
+// Cautions are sentences that must be read.
+type Cautions struct{ List []Caution }
+
+// Sign is a row of places to sign, each for one person.
+type Sign struct{ Roles []string }
+
+// A Point is a place on a chart. At is the share of the way along both axes in
+// 10,000 parts; the figures stand at the axes.
+type Point struct {
+	X, Y       int
+	Dose, Rate labels.Line
+	Start      bool
+	Label      bool // its figures are printed at the axes
+}
+
+// A Chart is dose rate against pump rate: one straight line through nought.
+type Chart struct {
+	Points       []Point
+	XWord, YWord string
+}
+
+// A Gap asks for a new page.
+type Gap struct{}
+
+// Lines is the heading.
+func (b Heading) Lines() []Owned { return own(b.Line) }
+
+// Lines is the number, name, concentration, class word and the line below.
+func (b Name) Lines() []Owned {
+	return own(labels.Words(b.Drug), b.Concentration, labels.Words(b.Class.Word), b.Below)
+}
+
+// Lines is the paragraph.
+func (b Words) Lines() []Owned { return own(b.Line) }
+
+// Lines is the steps.
+func (b Steps) Lines() []Owned { return own(b.List...) }
+
+// Lines is the heads and then all cells, row by row.
+func (b Table) Lines() []Owned {
+	var out []Owned
+	for _, c := range b.Columns {
+		out = append(out, Owned{Line: labels.Words(c.Head)})
+	}
+	for _, r := range b.Rows {
+		for _, c := range r.Cells {
+			out = append(out, Owned{r.Syringe, c})
+		}
+		out = append(out, Owned{r.Syringe, labels.Words(r.Mark)})
+	}
+	return out
+}
+
+// Lines is each word and its value.
+func (b Pairs) Lines() []Owned {
+	var out []Owned
+	for _, p := range b.List {
+		out = append(out, own(labels.Words(p.Key), p.Value)...)
+	}
+	return out
+}
+
+// Lines is each word, its number and its note.
+func (b Big) Lines() []Owned {
+	var out []Owned
+	for _, r := range b.List {
+		out = append(out, own(labels.Words(r.Key), r.Value, r.Note)...)
+	}
+	return out
+}
+
+// Lines is the words at the boxes.
+func (b Boxes) Lines() []Owned {
+	var out []Owned
+	for _, x := range b.List {
+		out = append(out, own(labels.Words(x.Label), labels.Words(x.Unit))...)
+	}
+	return out
+}
+
+// Lines is the sentences.
+func (b Ticks) Lines() []Owned {
+	var out []Owned
+	for _, t := range b.List {
+		out = append(out, own(labels.Words(t))...)
+	}
+	return out
+}
+
+// Lines is each sentence, its note and its code.
+func (b Cautions) Lines() []Owned {
+	var out []Owned
+	for _, c := range b.List {
+		out = append(out, own(labels.Words(c.Text), labels.Words(c.Note), labels.Words(c.Code))...)
+	}
+	return out
+}
+
+// Lines is who signs.
+func (b Sign) Lines() []Owned {
+	var out []Owned
+	for _, r := range b.Roles {
+		out = append(out, own(labels.Words(r))...)
+	}
+	return out
+}
+
+// Lines is the words and figures at the axes.
+func (b Chart) Lines() []Owned {
+	out := own(labels.Words(b.XWord), labels.Words(b.YWord))
+	for _, p := range b.Points {
+		if p.Label {
+			out = append(out, own(p.Dose, p.Rate)...)
+		}
+	}
+	return out
+}
+
+// Lines is nothing.
+func (b Gap) Lines() []Owned { return nil }
+
+func own(lines ...labels.Line) []Owned {
+	out := make([]Owned, 0, len(lines))
+	for _, l := range lines {
+		out = append(out, Owned{Line: l})
+	}
+	return out
+}
