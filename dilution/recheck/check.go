@@ -181,6 +181,16 @@ func (c *check) get(name string) value {
 	return v
 }
 
+// once keeps a worked value under a key that no figure can have.
+func (c *check) once(key string, work func() value) value {
+	if v, ok := c.read["="+key]; ok {
+		return v
+	}
+	v := work()
+	c.read["="+key] = v
+	return v
+}
+
 func (c *check) readOnce(name string) value {
 	text, ok := c.texts[name]
 	if !ok {

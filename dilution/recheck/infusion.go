@@ -52,7 +52,11 @@ func ladderDose(c *check, row int, r reading) *objection {
 	if c.was(name) {
 		return exact(r, c.typed(name), "typed as")
 	}
-	if r.whole.dim != c.get(StartDose).dim {
+	start := c.get(StartDose)
+	if start.lack != "" {
+		return object("", start.lack)
+	}
+	if r.whole.dim != start.dim {
 		return object("", "is not of the kind of start.dose")
 	}
 	if !c.has(Row(Ladder, row, "rate")) {

@@ -42,11 +42,11 @@ func TestReadingTolerance(t *testing.T) {
 // Source: calculation notes, part g, after GUM (ISO/IEC Guide 98-3): 1 mL in a
 // 2 mL barrel (5 %) made up to 10 mL in a 10 mL barrel (4 %), ampoule 5 %: u =
 // 4.69 %, U = 9.4 %. Without the final reading U = 2 sqrt(50/3) = 8.165 %.
-func TestInterval(t *testing.T) {
-	build := func(method, diluent, percent, low, high string) Stated {
-		return stated(t, "amount = \"100 mg\"\nvolume = \"10 mL\"\nassay = \"5 %\"\n",
-			fmt.Sprintf("method = %s\ndrug.volume = 1 mL\ndrug.step = 0.1 mL\ndrug.barrel = 2 mL\nfinal.barrel = 10 mL", method),
-			fmt.Sprintf(`container.amount = 100 mg
+func partG(t *testing.T, method, diluent, percent, low, high string) Stated {
+	t.Helper()
+	return stated(t, "amount = \"100 mg\"\nvolume = \"10 mL\"\nassay = \"5 %\"\n",
+		fmt.Sprintf("method = %s\ndrug.volume = 1 mL\ndrug.step = 0.1 mL\ndrug.barrel = 2 mL\nfinal.barrel = 10 mL", method),
+		fmt.Sprintf(`container.amount = 100 mg
 container.volume = 10 mL
 method = %s
 drug.volume = 1 mL
@@ -60,6 +60,11 @@ final.barrel = 10 mL
 interval.percent = %s
 interval.low = %s
 interval.high = %s`, method, diluent, percent, low, high))
+}
+
+func TestInterval(t *testing.T) {
+	build := func(method, diluent, percent, low, high string) Stated {
+		return partG(t, method, diluent, percent, low, high)
 	}
 	agrees(t, "part g", build("make up to", "9 mL", "9.4 %", "0.906 mg/mL", "1.094 mg/mL"))
 	agrees(t, "withdraw, then add", build("withdraw, then add", "9 mL", "8.2 %", "0.918 mg/mL", "1.082 mg/mL"))

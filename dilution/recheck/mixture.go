@@ -16,15 +16,15 @@ const (
 
 // exactStrength is the strength from the container's own words, unrounded.
 func (c *check) exactStrength() value {
-	return c.get(ContainerAmount).over(c.get(ContainerVolume))
+	return c.once(Strength, func() value { return c.get(ContainerAmount).over(c.get(ContainerVolume)) })
 }
 
 func (c *check) exactAmount() value {
-	return c.get(DrugVolume).times(c.exactStrength())
+	return c.once(AmountInSyringe, func() value { return c.get(DrugVolume).times(c.exactStrength()) })
 }
 
 func (c *check) exactConcentration() value {
-	return c.exactAmount().over(c.get(FinalVolume))
+	return c.once(Concentration, func() value { return c.exactAmount().over(c.get(FinalVolume)) })
 }
 
 // counted turns a strength or concentration of mass into one of substance, by

@@ -43,7 +43,7 @@ func sameFigure(change string) bool {
 
 // plans is how many complete plans have every figure altered; some three
 // thousand alterations each.
-const plans = 2
+const plans = 1
 
 // Every alteration of every figure of complete plans is caught.
 func TestEveryAlterationIsCaught(t *testing.T) {
@@ -60,6 +60,102 @@ func TestEveryAlterationIsCaught(t *testing.T) {
 		}
 	}
 	t.Logf("%d alterations tried, %d of them the same quantity in another unit, the rest caught", tried, same)
+}
+
+// The same for the complete hand-written plans, most of them published sums: the
+// sources stand beside the builders.
+func TestPublishedAlterations(t *testing.T) {
+	plans := map[string]Stated{
+		"CCDI adrenaline":     rated(t, "2 mg", "50 mL", "40 mL", "40 micrograms/mL", "70 kg", "0.1 micrograms/kg/min", "0.1 mL/h", "10.5 mL/h"),
+		"LBL-CISA tie":        rated(t, "40 mg", "100 mL", "90 mL", "0.4 mg/mL", "45 kg", "3 micrograms/kg/min", "0.1 mL/h", "20.3 mL/h"),
+		"LBL-CISA whole":      rated(t, "10 mg", "100 mL", "90 mL", "0.1 mg/mL", "45 kg", "1.5 micrograms/kg/min", "1 mL/h", "41 mL/h"),
+		"GAL-NORA":            mixed(t, "4 mg", "50 mL", "40 mL", "80 micrograms/mL", "", ""),
+		"DISP amoxicillin":    amoxicillin(t),
+		"part g interval":     partG(t, "make up to", "9 mL", "9.4 %", "0.906 mg/mL", "1.094 mg/mL"),
+		"clocks go back":      clockChange(t),
+		"invented, lean":      leanPlan(t),
+		"invented, whole amp": wholeAmpoule(t),
+	}
+	tried := 0
+	for what, s := range plans {
+		n, passed := alterEvery(t, s)
+		tried += n
+		for _, change := range passed {
+			if !sameFigure(change) {
+				t.Errorf("%s: passed: %s", what, change)
+			}
+		}
+	}
+	t.Logf("%d alterations tried", tried)
+}
+
+// clockChange is a use-by over the end of summer time (R18).
+func clockChange(t *testing.T) Stated {
+	return stated(t, "", "", `prepared = 24 Oct 2026 20:00
+prepared.offset = +01:00
+use.hours = 24 h
+use.by = 25 Oct 2026 19:00
+use.by.offset = +00:00`)
+}
+
+// wholeAmpoule is an invented order for two whole ampoules.
+func wholeAmpoule(t *testing.T) Stated {
+	return stated(t, "amount = \"5 mg\"\nvolume = \"5 mL\"\n", "container.count = 2\nmethod = make up to\ndrug.step = 0.5 mL", `container.amount = 5 mg
+container.volume = 5 mL
+container.count = 2
+strength = 1 mg/mL
+method = make up to
+drug.volume = 10 mL
+drug.step = 0.5 mL
+diluent.volume = 40 mL
+final.volume = 50 mL
+left.volume = 0 mL
+amount = 10 mg
+concentration = 200 micrograms/mL`)
+}
+
+// leanPlan is an invented infusion by lean weight; the lean weight 51.6 kg (man,
+// 80 kg, 150 cm) is the published one of key CLINPK. Worked by hand: 40 microgram/mL;
+// 0.1 x 51.6 x 60 / 40 = 7.74 mL/h, printed 7.7; 7.7 x 40 / (60 x 51.6) = 0.09948;
+// 50 mL / 7.7 mL/h = 6 h 29.6 min; slips 464.4, 0.129, 77.4, 0.774, 17.0638.
+func leanPlan(t *testing.T) Stated {
+	return stated(t, "amount = \"2 mg\"\nvolume = \"2 mL\"\n", `method = make up to
+amount = 2 mg
+final.volume = 50 mL
+drug.step = 0.1 mL
+weight.actual = 80 kg
+height = 150 cm
+sex = male
+start.dose = 0.1 microgram/kg/min lean
+rate.step = 0.1 mL/h`, `container.amount = 2 mg
+container.volume = 2 mL
+method = make up to
+drug.volume = 2 mL
+drug.step = 0.1 mL
+diluent.volume = 48 mL
+final.volume = 50 mL
+concentration = 40 micrograms/mL
+weight.actual = 80 kg
+height = 150 cm
+sex = male
+weight.lean = 51.6 kg
+rate.weight.by = lean
+rate.weight = 51.6 kg
+rate.step = 0.1 mL/h
+start.dose = 0.1 micrograms/kg/min
+start.rate = 7.7 mL/h
+start.delivered = 0.0995 micrograms/kg/min
+run.time = 6 h 29 min
+slip.1.kind = per minute for per hour
+slip.1.rate = 464.4 mL/h
+slip.2.kind = per hour for per minute
+slip.2.rate = 0.1 mL/h
+slip.3.kind = ten times
+slip.3.rate = 77.4 mL/h
+slip.4.kind = a tenth
+slip.4.rate = 0.8 mL/h
+slip.5.kind = pounds for kilograms
+slip.5.rate = 17.1 mL/h`)
 }
 
 // A ladder row whose dose the order does not name may be altered within its
@@ -134,7 +230,7 @@ func TestMissingPartners(t *testing.T) {
 
 // One figure of each of many other plans, altered in every way. Fixed seeds.
 func TestRandomAlterations(t *testing.T) {
-	for seed := int64(2000); seed < 2080; seed++ {
+	for seed := int64(2000); seed < 2040; seed++ {
 		s := newTruth(seed)
 		f := s.Figures[int(seed*7919)%len(s.Figures)]
 		for _, text := range alterations(f.Name, f.Text) {

@@ -199,8 +199,8 @@ concentration = %s`, amount, each, method, drawn, bag, final, total, conc))
 
 // Key DISP: amoxicillin 250 mg, 5 mL added, displacement 0.2 mL; the whole dose
 // is in 5.2 mL. 48.0769 mg/mL is 48.1 at three digits.
-func TestReconstitution(t *testing.T) {
-	s := stated(t, "amount = \"250 mg\"\nadd = \"5 mL\"\ndisplacement = { value = \"0.2 mL\", source = \"DISP, \\\"chapter\\\" 12, add = 3\" }\n",
+func amoxicillin(t *testing.T) Stated {
+	return stated(t, "amount = \"250 mg\"\nadd = \"5 mL\"\ndisplacement = { value = \"0.2 mL\", source = \"DISP, \\\"chapter\\\" 12, add = 3\" }\n",
 		"dose = 250 mg\ndrug.step = 0.2 mL\ndose.step = 0.2 mL",
 		`container.amount = 250 mg
 powder.added = 5 mL
@@ -222,6 +222,10 @@ dose.amount = 250 mg
 dose.step = 0.2 mL
 dose.volume = 5.2 mL
 dose.delivered = 250 mg`)
+}
+
+func TestReconstitution(t *testing.T) {
+	s := amoxicillin(t)
 	agrees(t, "DISP", s)
 	disagreesAt(t, "displacement forgotten", s.with(ContainerVolume, "5 mL"), ContainerVolume, Strength, Concentration)
 	disagreesAt(t, "50 mg/mL, as if nothing were displaced", s.with(Concentration, "50 mg/mL"), Concentration)
