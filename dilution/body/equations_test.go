@@ -79,6 +79,7 @@ func TestPublishedWeights(t *testing.T) {
 		{"A151", clinpk, jam, Female, "150", "80", "43.502222"},
 		{"A152", clinpk, jam, Male, "150", "50", "40.8"},
 		{"A153", clinpk, bo, Male, "155", "65", "48.6"},
+		{"woman by Boer", "by hand: 16.38 + 73.315 - 48.3", bo, Female, "155", "65", "41.395"},
 		{"A158", nlme, jam, Male, "171", "72", "56.5075"},
 		{"A160", nlme, jam, Male, "170", "90", "63.1246"},
 		{"A162", nlme, jam, Male, "188", "100", "73.7845"},

@@ -19,6 +19,7 @@ type MissingError struct {
 	What     Value
 }
 
+// Error says what was got and what is wanted.
 func (e *MissingError) Error() string {
 	return fmt.Sprintf("got no %s, want one for the %s", e.What, e.Equation)
 }
@@ -31,11 +32,13 @@ type OutsideEquation struct {
 	Source   string
 }
 
+// Error says what was got and what is wanted.
 func (e *OutsideEquation) Error() string { return e.Equation + ": " + e.Reason }
 
 // A NotAWeightError says that a weight was asked of a kind that is none.
 type NotAWeightError struct{ Kind Kind }
 
+// Error says what was got and what is wanted.
 func (e *NotAWeightError) Error() string {
 	return fmt.Sprintf("got %q, want actual, ideal, adjusted or lean weight", e.Kind)
 }

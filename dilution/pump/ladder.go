@@ -20,10 +20,12 @@ type RangeError struct {
 	Why      string
 }
 
+// Error says what was got and what is wanted.
 func (e *RangeError) Error() string {
 	return fmt.Sprintf("got a range from %s to %s: %s", own(e.From), own(e.To), e.Why)
 }
 
+// own is d in its own unit, for errors.
 func own(d quantity.DoseRate) string {
 	if !d.Given() {
 		return "nothing"
@@ -85,4 +87,3 @@ func ends(from, to quantity.DoseRate) (low, high *big.Rat, err error) {
 	ratio := new(big.Rat).Quo(to.Rat(), from.Rat())
 	return low, ratio.Mul(ratio, low), nil
 }
-

@@ -20,6 +20,7 @@ type Setting struct {
 // be rounded to nothing.
 type BelowStep struct{ Exact, Step quantity.FlowRate }
 
+// Error says what was got and what is wanted.
 func (e *BelowStep) Error() string {
 	return fmt.Sprintf("got %s mL/h, want a rate that does not round to zero on steps of %s mL/h", e.Exact.Exact(), e.Step.Exact())
 }

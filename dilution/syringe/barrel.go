@@ -20,6 +20,7 @@ type BarrelError struct {
 	Why           string
 }
 
+// Error says what was got and what is wanted.
 func (e *BarrelError) Error() string {
 	return fmt.Sprintf("got a barrel of %s mL in steps of %s mL: %s", text(e.Nominal), text(e.Step), e.Why)
 }

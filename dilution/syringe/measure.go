@@ -37,6 +37,7 @@ type BelowSmallest struct {
 	Got, OnGraduation, Smallest quantity.Volume
 }
 
+// Error says what was got and what is wanted.
 func (e *BelowSmallest) Error() string {
 	if e.OnGraduation.Given() {
 		return fmt.Sprintf("got %s mL, which reads %s mL, want at least %s mL", text(e.Got), text(e.OnGraduation), text(e.Smallest))
@@ -50,6 +51,7 @@ type NoBarrel struct {
 	Got, Largest quantity.Volume
 }
 
+// Error says what was got and what is wanted.
 func (e *NoBarrel) Error() string {
 	return fmt.Sprintf("got %s mL, want at most %s mL, the largest barrel", text(e.Got), text(e.Largest))
 }
@@ -63,6 +65,7 @@ type OffGraduation struct {
 	Within     quantity.Percent
 }
 
+// Error says what was got and what is wanted.
 func (e *OffGraduation) Error() string {
 	return fmt.Sprintf("got %s mL, nearest line %s mL on the %s mL barrel, a change of %s %%, want at most %s %% either way",
 		text(e.Got), text(e.Moved), text(e.Barrel.nominal), e.Percent.FloatString(1), e.Within.Exact())
