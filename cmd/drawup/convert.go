@@ -58,53 +58,53 @@ func tellConvert(w io.Writer, d *convertDocument) {
 	}
 }
 
-// A sort is what a text turned out to be.
-type sort int
+// A shape is what a text turned out to be.
+type shape int
 
-// Sorts of quantity that convert reads.
+// Shapes of quantity that convert reads.
 const (
-	sortNone sort = iota
-	sortAmount
-	sortVolume
-	sortConcentration
-	sortDose
-	sortDoseRate
-	sortFlow
-	sortWeight
-	sortHeight
-	sortSurface
+	shapeNone shape = iota
+	shapeAmount
+	shapeVolume
+	shapeConcentration
+	shapeDose
+	shapeDoseRate
+	shapeFlow
+	shapeWeight
+	shapeHeight
+	shapeSurface
 )
 
-func (s sort) String() string {
+func (s shape) String() string {
 	switch s {
-	case sortAmount:
+	case shapeAmount:
 		return "an amount"
-	case sortVolume:
+	case shapeVolume:
 		return "a volume"
-	case sortConcentration:
+	case shapeConcentration:
 		return "a concentration"
-	case sortDose:
+	case shapeDose:
 		return "a dose"
-	case sortDoseRate:
+	case shapeDoseRate:
 		return "a dose rate"
-	case sortFlow:
+	case shapeFlow:
 		return "a flow rate"
-	case sortWeight:
+	case shapeWeight:
 		return "a body weight"
-	case sortHeight:
+	case shapeHeight:
 		return "a height"
-	case sortSurface:
+	case shapeSurface:
 		return "a surface area"
-	case sortNone:
+	case shapeNone:
 		return "nothing"
 	}
 	return "nothing"
 }
 
-// A reading is a text read as one sort: its exact value in the base unit, how
+// A reading is a text read as one shape: its exact value in the base unit, how
 // it counts drug and, for doses and rates, per what.
 type reading struct {
-	sort  sort
+	shape shape
 	value *big.Rat
 	kind  quantity.Kind
 	basis quantity.Basis
@@ -112,38 +112,38 @@ type reading struct {
 	amt   quantity.Unit
 }
 
-// readAny reads text as the first sort that fits. Bare amounts win over doses.
+// readAny reads text as the first shape that fits. Bare amounts win over doses.
 func readAny(text string) (reading, bool) {
 	if a, err := quantity.ParseAmount(text); err == nil {
-		return reading{sort: sortAmount, value: a.Rat(), kind: a.Kind(), unit: a.Unit().String(), amt: a.Unit()}, true
+		return reading{shape: shapeAmount, value: a.Rat(), kind: a.Kind(), unit: a.Unit().String(), amt: a.Unit()}, true
 	}
 	if v, err := quantity.ParseVolume(text); err == nil {
-		return reading{sort: sortVolume, value: v.Rat()}, true
+		return reading{shape: shapeVolume, value: v.Rat()}, true
 	}
 	if c, err := quantity.ParseConcentration(text); err == nil {
-		return reading{sort: sortConcentration, value: c.Rat(), kind: c.Kind(), amt: c.Unit()}, true
+		return reading{shape: shapeConcentration, value: c.Rat(), kind: c.Kind(), amt: c.Unit()}, true
 	}
 	if d, err := quantity.ParseDose(text); err == nil {
-		return reading{sort: sortDose, value: d.Rat(), kind: d.Kind(), basis: d.Basis(), unit: d.Unit().String() + plainBasis(d.Basis())}, true
+		return reading{shape: shapeDose, value: d.Rat(), kind: d.Kind(), basis: d.Basis(), unit: d.Unit().String() + plainBasis(d.Basis())}, true
 	}
 	if d, err := quantity.ParseDoseRate(text); err == nil {
-		return reading{sort: sortDoseRate, value: d.Rat(), kind: d.Kind(), basis: d.Basis(), unit: doseRateUnit(d)}, true
+		return reading{shape: shapeDoseRate, value: d.Rat(), kind: d.Kind(), basis: d.Basis(), unit: doseRateUnit(d)}, true
 	}
 	if f, err := quantity.ParseFlowRate(text); err == nil {
-		return reading{sort: sortFlow, value: f.Rat()}, true
+		return reading{shape: shapeFlow, value: f.Rat()}, true
 	}
 	return readBody(text)
 }
 
 func readBody(text string) (reading, bool) {
 	if w, err := quantity.ParseBodyWeight(text); err == nil {
-		return reading{sort: sortWeight, value: w.Rat(), unit: "kg"}, true
+		return reading{shape: shapeWeight, value: w.Rat(), unit: "kg"}, true
 	}
 	if l, err := quantity.ParseLength(text); err == nil {
-		return reading{sort: sortHeight, value: l.Rat()}, true
+		return reading{shape: shapeHeight, value: l.Rat()}, true
 	}
 	if a, err := quantity.ParseSurface(text); err == nil {
-		return reading{sort: sortSurface, value: a.Rat(), unit: "m2"}, true
+		return reading{shape: shapeSurface, value: a.Rat(), unit: "m2"}, true
 	}
 	return otherBody(text)
 }
@@ -158,7 +158,7 @@ func otherBody(text string) (reading, bool) {
 	}
 	pound := big.NewRat(45359237, 100000000)
 	weight := func(f *big.Rat) (reading, bool) {
-		return reading{sort: sortWeight, value: f.Mul(f, n.Rat()), unit: "kg"}, true
+		return reading{shape: shapeWeight, value: f.Mul(f, n.Rat()), unit: "kg"}, true
 	}
 	switch strings.TrimSpace(unit) {
 	case "lb", "lbs", "pound", "pounds":
@@ -166,7 +166,7 @@ func otherBody(text string) (reading, bool) {
 	case "st", "stone", "stones":
 		return weight(pound.Mul(pound, big.NewRat(14, 1)))
 	case "in", "inch", "inches":
-		return reading{sort: sortHeight, value: new(big.Rat).Mul(n.Rat(), big.NewRat(254, 100))}, true
+		return reading{shape: shapeHeight, value: new(big.Rat).Mul(n.Rat(), big.NewRat(254, 100))}, true
 	}
 	return reading{}, false
 }
@@ -199,11 +199,11 @@ func (c *conversion) work() {
 		return
 	}
 	got, ok := readAny(from)
-	if one.sort == sortWeight && got.sort == sortAmount && got.unit == "g" {
-		got = reading{sort: sortWeight, value: new(big.Rat).Quo(got.value, big.NewRat(1000000, 1)), unit: "kg"}
+	if one.shape == shapeWeight && got.shape == shapeAmount && got.unit == "g" {
+		got = reading{shape: shapeWeight, value: new(big.Rat).Quo(got.value, big.NewRat(1000000, 1)), unit: "kg"}
 	}
 	if !ok {
-		c.unread(from, one.sort)
+		c.unread(from, one.shape)
 		return
 	}
 	c.join(got, one, fromForm, toForm, to)
@@ -236,27 +236,27 @@ func (c *conversion) refuse(code refusal.Code, field, got, want, message, remedy
 	c.r.add(refusal.Reason{Code: code, Field: field, Got: got, Want: want, Message: message, Rule: rule, Remedy: remedy})
 }
 
-// unread tells why from cannot be read, in the words of the sort wanted.
-func (c *conversion) unread(from string, want sort) {
+// unread tells why from cannot be read, in the words of the shape wanted.
+func (c *conversion) unread(from string, want shape) {
 	var err error
 	switch want {
-	case sortVolume:
+	case shapeVolume:
 		_, err = quantity.ParseVolume(from)
-	case sortConcentration:
+	case shapeConcentration:
 		_, err = quantity.ParseConcentration(from)
-	case sortDose:
+	case shapeDose:
 		_, err = quantity.ParseDose(from)
-	case sortDoseRate:
+	case shapeDoseRate:
 		_, err = quantity.ParseDoseRate(from)
-	case sortFlow:
+	case shapeFlow:
 		_, err = quantity.ParseFlowRate(from)
-	case sortWeight:
+	case shapeWeight:
 		_, err = quantity.ParseBodyWeight(from)
-	case sortHeight:
+	case shapeHeight:
 		_, err = quantity.ParseLength(from)
-	case sortSurface:
+	case shapeSurface:
 		_, err = quantity.ParseSurface(from)
-	case sortAmount, sortNone:
+	case shapeAmount, shapeNone:
 		_, err = quantity.ParseAmount(from)
 	}
 	if err == nil {
@@ -278,7 +278,7 @@ func form(text string) (rest, word string) {
 
 // join turns got into the unit of one.
 func (c *conversion) join(got, one reading, fromForm, toForm, to string) {
-	if got.sort != one.sort {
+	if got.shape != one.shape {
 		c.unlike(got, one)
 		return
 	}
@@ -295,19 +295,19 @@ func (c *conversion) join(got, one reading, fromForm, toForm, to string) {
 	c.answer(got.value, one, to)
 }
 
-// unlike refuses a change of sort and says what would be needed.
+// unlike refuses a change of shape and says what would be needed.
 func (c *conversion) unlike(got, one reading) {
 	remedy := "check both units"
 	switch {
-	case got.sort == sortVolume && one.sort == sortAmount, got.sort == sortAmount && one.sort == sortVolume:
+	case got.shape == shapeVolume && one.shape == shapeAmount, got.shape == shapeAmount && one.shape == shapeVolume:
 		remedy = "a concentration joins them: use drawup dose or drawup mix"
-	case got.sort == sortFlow && one.sort == sortDoseRate, got.sort == sortDoseRate && one.sort == sortFlow:
+	case got.shape == shapeFlow && one.shape == shapeDoseRate, got.shape == shapeDoseRate && one.shape == shapeFlow:
 		remedy = "a concentration joins them: use drawup rate"
-	case got.sort == sortWeight || one.sort == sortWeight:
+	case got.shape == shapeWeight || one.shape == shapeWeight:
 		remedy = "a body weight is no amount of drug (rule R3)"
 	}
-	c.refuse(refusal.UnitWrongKind, "--from", c.doc.From, one.sort.String(),
-		fmt.Sprintf("got %v, want %v", got.sort, one.sort), remedy)
+	c.refuse(refusal.UnitWrongKind, "--from", c.doc.From, one.shape.String(),
+		fmt.Sprintf("got %v, want %v", got.shape, one.shape), remedy)
 }
 
 // answer puts value, counted in the base unit, into the document in the unit
@@ -324,23 +324,23 @@ func (c *conversion) answer(value *big.Rat, one reading, to string) {
 // printed is x of the unit to in the house style, where the style knows it.
 func (c *conversion) printed(x *big.Rat, one reading, to, unit string) string {
 	s := c.r.style
-	switch one.sort {
-	case sortAmount:
+	switch one.shape {
+	case shapeAmount:
 		return s.AmountIn(quantity.AmountOf(x, one.amt), one.amt)
-	case sortConcentration:
+	case shapeConcentration:
 		perMillilitre, err := quantity.AmountOf(x, one.amt).In(quantity.Millilitres(big.NewRat(1, 1)))
 		if err == nil && strings.HasSuffix(strings.ToLower(to), "/ml") && !strings.ContainsAny(to, "0123456789") {
 			return s.ConcentrationIn(perMillilitre, one.amt)
 		}
-	case sortDose:
+	case shapeDose:
 		if d, err := quantity.ParseDose("1 " + to); err == nil {
 			return s.Dose(d.Scaled(x))
 		}
-	case sortDoseRate:
+	case shapeDoseRate:
 		if d, err := quantity.ParseDoseRate("1 " + to); err == nil {
 			return s.DoseRate(d.Scaled(x))
 		}
-	case sortNone, sortVolume, sortFlow, sortWeight, sortHeight, sortSurface:
+	case shapeNone, shapeVolume, shapeFlow, shapeWeight, shapeHeight, shapeSurface:
 	}
 	return s.Number(x) + " " + unit
 }

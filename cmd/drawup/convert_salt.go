@@ -63,7 +63,7 @@ func (c *conversion) throughSalt(got, one reading, fromForm, toForm, to string) 
 // joinable refuses what no factor joins: units of activity, and anything whose
 // salt is not named.
 func (c *conversion) joinable(got, one reading) bool {
-	if got.sort != sortAmount && got.sort != sortConcentration {
+	if got.shape != shapeAmount && got.shape != shapeConcentration {
 		c.r.add(faultOf("--from", &quantity.KindError{Got: got.kind, Want: one.kind}))
 		return false
 	}
@@ -150,7 +150,7 @@ func milliequivalents(text string) (x *big.Rat, perVolume, ok bool) {
 }
 
 func (c *conversion) fromCharge(charge *big.Rat, perVolume bool, one reading, to string) {
-	if perVolume != (one.sort == sortConcentration) || (one.sort != sortAmount && one.sort != sortConcentration) {
+	if perVolume != (one.shape == shapeConcentration) || (one.shape != shapeAmount && one.shape != shapeConcentration) {
 		c.refuse(refusal.UnitWrongKind, "--to", to, "mmol, mg, mmol/mL or mg/mL", "milliequivalents become mmol or mg, and only per volume on both sides or on neither", "check both units")
 		return
 	}
