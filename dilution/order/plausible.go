@@ -64,13 +64,17 @@ func (r *reader) weightForAge(path []any, p Patient) {
 			low = new(big.Rat)
 		}
 	}
+	want := fmt.Sprintf("%s to %s kg at this age", plain(low), plain(high))
+	if low.Sign() == 0 {
+		want = fmt.Sprintf("at most %s kg at this age", plain(high))
+	}
 	w := p.Weight.Value.Rat()
 	if w.Cmp(low) >= 0 && w.Cmp(high) <= 0 {
 		return
 	}
 	r.refuse(at(path, "weight"), refusal.Reason{
 		Code: refusal.BodyValuesStrange, Got: p.Weight.Text + " at " + p.Age.Text, Source: source,
-		Want:    fmt.Sprintf("%s to %s kg at this age", plain(low), plain(high)),
+		Want:    want,
 		Message: fmt.Sprintf("a weight of %s does not fit an age of %s", p.Weight.Text, p.Age.Text),
 		Remedy:  "check the weight, its unit and the age",
 	})

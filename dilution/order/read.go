@@ -45,7 +45,8 @@ type reader struct {
 	list   refusal.List
 	broken map[int]bool // lines that have a reason of the file's form already
 	zone   *time.Location
-	number int // the syringe that is being read, 0 outside
+	number int    // the syringe that is being read, 0 outside
+	drug   string // its drug, for messages
 	order  Order
 }
 

@@ -124,7 +124,7 @@ func parseClock(s string) (string, error) {
 // parseZone reads an IANA name or a difference from UTC. "Local" is refused:
 // it would mean another time on another machine.
 func parseZone(s string) (*time.Location, error) {
-	fault := &timeError{got: s, want: wantZone, why: "there is no such zone"}
+	fault := &wordError{s, wantZone}
 	if len(s) == 6 && (s[0] == '+' || s[0] == '-') && s[3] == ':' {
 		t, err := time.Parse("15:04", s[1:])
 		seconds := t.Hour()*3600 + t.Minute()*60

@@ -24,6 +24,7 @@ func (r *reader) common(patient int, path []any, s commonRecord) Syringe {
 		AcceptedBy:     r.text(s.AcceptedBy, at(path, "accepted_by")),
 		AcceptedReason: r.text(s.AcceptedReason, at(path, "accepted_reason")),
 	}
+	r.drug = out.Drug.Value
 	r.required(out.Drug.Given(), path, "drug", r.here(), `drug = "etomidate"`)
 	if out.AcceptedBy.Given() != out.AcceptedReason.Given() {
 		r.required(out.AcceptedBy.Given(), path, "accepted_by", r.here(), `accepted_by = "the name of who decides"`)
@@ -33,7 +34,12 @@ func (r *reader) common(patient int, path []any, s commonRecord) Syringe {
 }
 
 // here is the syringe being read, in messages.
-func (r *reader) here() string { return fmt.Sprintf("syringe %d", r.number) }
+func (r *reader) here() string {
+	if r.drug == "" {
+		return fmt.Sprintf("syringe %d", r.number)
+	}
+	return fmt.Sprintf("syringe %d (%s)", r.number, r.drug)
+}
 
 // syringe reads one syringe that is given at once.
 func (r *reader) syringe(patient int, path []any, s syringeRecord) Syringe {
@@ -226,6 +232,6 @@ func (r *reader) needs(path []any, patient int, name string, code refusal.Code, 
 	}
 	p := r.order.Patients[patient]
 	r.refuse(path, refusal.Reason{Code: code, Field: "patient." + name, Got: "nothing", Want: "the " + name + " of " + called(p, patient), Rule: "R3",
-		Message: fmt.Sprintf("%s goes by the body, and %s has no %s", r.here(), called(p, patient), name),
+		Message: fmt.Sprintf("the dose of %s goes by the body, and %s has no %s", r.here(), called(p, patient), name),
 		Remedy:  fmt.Sprintf("add to %s a line such as: %s", called(p, patient), example)})
 }

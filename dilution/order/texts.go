@@ -40,9 +40,10 @@ func textReason(key, text string, err error) refusal.Reason {
 	switch {
 	case errors.As(err, &syntax):
 		r.Want, r.Rule = syntax.Want, "R1"
+		why := strings.Replace(syntax.Why, "is not one of these", "does not fit here", 1)
 		if r.Remedy == "" {
 			r.Code = refusal.Code(syntax.Code)
-			r.Message = fmt.Sprintf("the %s %q cannot be used: %s", spaced(key), text, syntax.Why)
+			r.Message = fmt.Sprintf("the %s %q cannot be used: %s", spaced(key), text, why)
 			if likely = syntax.Likely; likely != "" && syntax.Got != text {
 				likely = strings.Replace(text, syntax.Got, likely, 1)
 			}
@@ -68,7 +69,18 @@ func textReason(key, text string, err error) refusal.Reason {
 	return r
 }
 
-func spaced(key string) string { return strings.ReplaceAll(key, "_", " ") }
+// spaced is a key in words.
+func spaced(key string) string {
+	switch key {
+	case "prepared":
+		return "time prepared"
+	case "barrels":
+		return "barrel"
+	case "from", "to", "start":
+		return key + " rate"
+	}
+	return strings.ReplaceAll(strings.Replace(key, "use_by", "use-by", 1), "_", " ")
+}
 
 // text reads a line of words. A blank text counts as not given. What cannot
 // stand on one line of paper is refused.

@@ -54,8 +54,12 @@ func surveyed(name string, text []byte) (*survey, refusal.List) {
 		}
 		from, to := s.lines.span(s.lines.line(at))
 		line := string(bytes.TrimRight(text[from:to], "\r"))
-		list = append(list, syntaxReason(s.lines.at(at), line, message))
+		reason := syntaxReason(s.lines.at(at), line, message)
 		key, mendable := setAside(line)
+		if mendable {
+			reason.Field = s.field(key, "")
+		}
+		list = append(list, reason)
 		if !mendable || len(list) >= maxFaults {
 			s.places.whole = false
 			return s, append(list, s.list...)

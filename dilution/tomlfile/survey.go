@@ -230,10 +230,18 @@ func (s *survey) repeated(at int, key, what string) {
 		return
 	}
 	s.list = append(s.list, refusal.Reason{
-		Code: refusal.KeyRepeated, Severity: refusal.Refuse, Field: key,
+		Code: refusal.KeyRepeated, Severity: refusal.Refuse, Field: s.field(key, what),
 		Message: fmt.Sprintf("%s %q stands in the same place twice, and it is not clear which one counts", what, key),
 		Got:     "twice", Want: "once", Remedy: "take one of them out", Pos: s.lines.at(at),
 	})
+}
+
+// field is a key with its table, in the user's words.
+func (s *survey) field(key, what string) string {
+	if what == "the table" {
+		return key
+	}
+	return strings.TrimPrefix(s.dotted+"."+key, ".")
 }
 
 // blank overwrites a part of the text with blanks and leaves its line ends, so
