@@ -58,6 +58,7 @@ type check struct {
 	asked   map[string][]string // name to typed texts
 	slips   map[string]int      // kind of slip to how many rows name it
 	read    map[string]value    // name to exact value, filled as figures are needed
+	parsed  map[string]parsed   // printed text to its reading
 	rules   map[string]rule
 	record  record
 	faults  []Fault
@@ -71,6 +72,7 @@ func newCheck(s Stated) *check {
 		asked:   map[string][]string{},
 		slips:   map[string]int{},
 		read:    map[string]value{},
+		parsed:  map[string]parsed{},
 		rules:   allRules(),
 		record:  findRecord(s.Record, s.Drug, s.Presentation),
 	}
@@ -131,7 +133,7 @@ func (c *check) honoured(name, text string) *objection {
 	case UseBy, EmptyAt:
 		return sameMoment(c.asked[name][0], text)
 	}
-	r, err := readPrinted(text)
+	r, err := c.parse(text)
 	if err != nil {
 		return c.sameText(name, text)
 	}
@@ -170,6 +172,22 @@ func isStocked(name string) bool {
 	return false
 }
 
+// A parsed is a printed text as read, or why it cannot be.
+type parsed struct {
+	reading reading
+	err     error
+}
+
+// parse reads each printed text once.
+func (c *check) parse(text string) (reading, error) {
+	p, ok := c.parsed[text]
+	if !ok {
+		p.reading, p.err = readPrinted(text)
+		c.parsed[text] = p
+	}
+	return p.reading, p.err
+}
+
 // get is the exact value of a printed figure, or what is lacking. No sum
 // changes the whole numbers of a value, so one reading serves them all.
 func (c *check) get(name string) value {
@@ -196,7 +214,7 @@ func (c *check) readOnce(name string) value {
 	if !ok {
 		return lacking("needs " + name + ", which is not printed")
 	}
-	r, err := readPrinted(text)
+	r, err := c.parse(text)
 	if err != nil {
 		return lacking("needs " + name + ", which cannot be read")
 	}
@@ -235,7 +253,7 @@ type rule func(c *check, row int, text string) *objection
 // measured makes a rule that first reads the text as number and unit.
 func measured(work func(c *check, row int, r reading) *objection) rule {
 	return func(c *check, row int, text string) *objection {
-		r, err := readPrinted(text)
+		r, err := c.parse(text)
 		if err != nil {
 			return object("", "cannot be read: "+err.Error())
 		}

@@ -97,9 +97,45 @@ func intervalHigh(c *check, _ int, r reading) *objection {
 
 func (c *check) percent() value { return c.get(IntervalPercent).bare(dim{}) }
 
+// drugStep is one of the graduations that were typed, and belongs to the barrel.
+func drugStep(c *check, _ int, r reading) *objection {
+	if o := c.oneOf(DrugStep, r); o != nil {
+		return o
+	}
+	return c.paired()
+}
+
+// paired holds barrel and graduation together: where several of each were
+// typed, the first graduation is that of the first barrel, and so on.
+func (c *check) paired() *objection {
+	barrels, steps := c.asked[DrugBarrel], c.asked[DrugStep]
+	if !c.has(DrugBarrel) || !c.has(DrugStep) || len(barrels) < 2 && len(steps) < 2 {
+		return nil
+	}
+	if len(barrels) != len(steps) {
+		return object("", "the barrels and graduations that were typed do not pair off")
+	}
+	barrel, step := c.get(DrugBarrel), c.get(DrugStep)
+	for i := range barrels {
+		v, _, err := readTyped(barrels[i])
+		w, _, fault := readTyped(steps[i])
+		if err == nil && fault == nil && sameValue(barrel, v) && sameValue(step, w) {
+			return nil
+		}
+	}
+	return object("", "no barrel that was typed has this capacity with this graduation")
+}
+
+func sameValue(a, b value) bool {
+	return a.lack == "" && b.lack == "" && a.dim == b.dim && a.against(b) == 0
+}
+
 // drugBarrel is one of the barrels that were typed, and holds the volume.
 func drugBarrel(c *check, _ int, r reading) *objection {
-	return c.barrel(DrugBarrel, r, DrugVolume)
+	if o := c.barrel(DrugBarrel, r, DrugVolume); o != nil {
+		return o
+	}
+	return c.paired()
 }
 
 func finalBarrel(c *check, _ int, r reading) *objection {

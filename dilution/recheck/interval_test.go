@@ -98,3 +98,49 @@ interval.high = 11 mg/mL`)
 	agrees(t, "neat", s)
 	disagreesAt(t, "2u", s.with(IntervalPercent, "11.5 %"), IntervalPercent)
 }
+
+// Graduations as read in key SYR-READ: 1 mL in 0.01, 3 mL in 0.1, 5 mL in 0.2.
+func TestBarrelsAndGraduationsPair(t *testing.T) {
+	s := stated(t, "amount = \"10 mg\"\nvolume = \"1 mL\"\n",
+		"method = neat\nfinal.volume = 0.8 mL\ndrug.barrel = 1 mL\ndrug.step = 0.01 mL\ndrug.barrel = 3 mL\ndrug.step = 0.1 mL\ndrug.barrel = 5 mL\ndrug.step = 0.2 mL",
+		`container.amount = 10 mg
+container.volume = 1 mL
+container.count = 1
+method = neat
+drug.volume = 0.8 mL
+drug.step = 0.1 mL
+drug.barrel = 3 mL
+final.volume = 0.8 mL
+amount = 8 mg`)
+	agrees(t, "3 mL in 0.1 mL", s)
+	agrees(t, "5 mL in 0.2 mL", s.with(DrugBarrel, "5 mL").with(DrugStep, "0.2 mL"))
+	disagreesAt(t, "graduation of another barrel", s.with(DrugStep, "0.2 mL"), DrugStep, DrugBarrel)
+	disagreesAt(t, "barrel of another graduation", s.with(DrugBarrel, "1 mL"), DrugStep, DrugBarrel)
+	disagreesAt(t, "two containers where one does", s.with(ContainerCount, "2"), ContainerCount)
+}
+
+// An order that asks nothing but a dose: the syringe holds that dose. Invented:
+// 0.3 mg/kg of 10 mg/mL at 72 kg is 21.6 mg, 2.16 mL, 2.2 mL on 0.1 mL.
+func TestNothingButADose(t *testing.T) {
+	s := stated(t, "amount = \"50 mg\"\nvolume = \"5 mL\"\n", "dose = 0.3 mg/kg\nweight.actual = 72 kg\ndose.step = 0.1 mL\ndrug.step = 0.1 mL",
+		`container.amount = 50 mg
+container.volume = 5 mL
+method = neat
+drug.volume = 2.2 mL
+drug.step = 0.1 mL
+final.volume = 2.2 mL
+amount = 22 mg
+concentration = 10 mg/mL
+weight.actual = 72 kg
+dose = 0.3 mg/kg
+dose.weight.by = actual
+dose.weight = 72 kg
+dose.amount = 21.6 mg
+dose.step = 0.1 mL
+dose.volume = 2.2 mL
+dose.delivered = 22 mg`)
+	agrees(t, "dose only", s)
+	more := s.with(DrugVolume, "5 mL").with(FinalVolume, "5 mL").with(AmountInSyringe, "50 mg")
+	disagreesAt(t, "a whole ampoule though only a dose was asked", more, DrugVolume)
+	disagreesAt(t, "a weight that nobody named", s.with(DoseWeightBy, "lean"), DoseWeightBy, DoseWeight)
+}

@@ -37,7 +37,7 @@ func allRules() map[string]rule {
 		ContainerAmount: measured(containerAmount), ContainerVolume: measured(containerVolume), ContainerCount: containerCount,
 		Strength: measured(strength), PowderAdded: measured(powderAdded), PowderDisplaced: measured(powderDisplaced),
 
-		Method: method, DrugVolume: measured(drugVolume), DrugStep: stocked(DrugStep),
+		Method: method, DrugVolume: measured(drugVolume), DrugStep: measured(drugStep),
 		DiluentVolume: measured(diluentVolume), FinalVolume: measured(finalVolume),
 		AmountInSyringe: measured(amountInSyringe), Concentration: measured(concentration),
 		LeftVolume: measured(leftVolume), LeftAmount: measured(leftAmount),

@@ -40,8 +40,7 @@ func plainWords(truth, unit value) string { return decimal(truth.over(unit), 8) 
 func floorTimes(x, step value) value {
 	n := new(big.Int).Mul(x.num, step.den)
 	d := new(big.Int).Mul(x.den, step.num)
-	q, m := new(big.Int).DivMod(n, d, new(big.Int))
-	_ = m
+	q := new(big.Int).Div(n, d)
 	return value{num: q, den: big.NewInt(1)}.times(step)
 }
 
