@@ -1,6 +1,7 @@
 package dilution
 
 import (
+	"fmt"
 	"math/big"
 	"time"
 
@@ -89,6 +90,16 @@ func (w *work) expiry(best UseBy) bool {
 	}
 	w.plan.UseBy = best
 	return true
+}
+
+// lasts cautions when an infusion at its start rate outlives its use-by time.
+func (w *work) lasts() bool {
+	part := w.plan.Infusion
+	if part == nil || part.Minutes <= w.plan.UseBy.Minutes {
+		return true
+	}
+	return w.caution(refusal.Reason{Code: refusal.RunsPastUseBy, Rule: "R18", Field: "start", Got: fmt.Sprintf("%d h", part.Minutes/60), Want: fmt.Sprintf("%d h", w.plan.UseBy.Minutes/60), Pos: w.o.Start.Pos,
+		Message: "at the start rate the syringe would still be running after its use-by time", Remedy: "change it at the use-by time, empty or not"})
 }
 
 func (w *work) stabilityFits(diluent string) bool {

@@ -7,6 +7,7 @@ import (
 	"drawup/dilution/body"
 	"drawup/dilution/formulary"
 	"drawup/dilution/order"
+	"drawup/dilution/pump"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
 )
@@ -108,7 +109,7 @@ func newPlan(s site, f *formulary.Formulary, o order.Order, sy order.Syringe, at
 	}
 	w.size = body.Size{Sex: w.patient.Sex.Value, Age: w.patient.Age.Value, Height: w.patient.Height.Value, Weight: w.patient.Weight.Value}
 	w.plan.Size = w.size
-	for _, step := range []func() bool{w.findDrug, w.choosePresentation, w.mix, w.checkConcentration, w.dose, w.infusion, w.certainty, w.useBy, w.balance} {
+	for _, step := range []func() bool{w.findDrug, w.choosePresentation, w.mix, w.checkConcentration, w.dose, w.infusion, w.certainty, w.useBy, w.lasts, w.balance} {
 		if !step() {
 			break
 		}
@@ -153,6 +154,9 @@ func (w *work) fault(err error, field string, pos refusal.Pos) bool {
 		code = refusal.Code(e.Code)
 	case *quantity.NotGivenError:
 		code = refusal.QuantityMissing
+	case *pump.BelowStep:
+		return w.refuse(refusal.Reason{Code: refusal.RateBelowPump, Field: field, Got: w.plan.Style.FlowRate(e.Exact), Want: "at least half of the pump's step, " + w.plan.Style.FlowRate(e.Step), Rule: "R8", Pos: pos,
+			Message: fmt.Sprintf("the lowest dose of the range needs %s, less than the pump can be set to", w.plan.Style.FlowRate(e.Exact)), Remedy: "use a weaker mixture, or a higher lower end of the range"})
 	}
 	return w.refuse(refusal.Reason{Code: code, Field: field, Rule: rule, Pos: pos, Message: err.Error(), Remedy: "check the order"})
 }

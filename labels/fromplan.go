@@ -135,7 +135,7 @@ func asked(p dilution.Plan) []recheck.Figure {
 	add(recheck.WeightActual, p.Patient.Weight.Text)
 	add(recheck.Height, p.Patient.Height.Text)
 	add(recheck.Age, p.Patient.Age.Text)
-	add(recheck.Sex, p.Patient.Sex.Text)
+	add(recheck.Sex, p.Size.Sex.String()) // the order may say "girl"
 	askedVolume(p, add)
 	askedRates(p, add)
 	askedBarrels(p, add)

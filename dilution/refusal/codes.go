@@ -112,6 +112,7 @@ const (
 	RateBelowPump         Code = "rate-below-pump-step"
 	RateAbovePump         Code = "rate-above-pump"
 	RateRounding          Code = "rate-rounding-large"
+	RunsPastUseBy         Code = "runs-past-use-by"
 	RateSlow              Code = "rate-slow-start"
 )
 

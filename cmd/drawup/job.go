@@ -1,0 +1,139 @@
+package main
+
+import (
+	"crypto/sha256"
+	"encoding/binary"
+	"encoding/hex"
+	"fmt"
+	"path/filepath"
+	"time"
+
+	"drawup/dilution"
+	"drawup/dilution/formulary"
+	"drawup/dilution/order"
+	"drawup/dilution/recheck"
+	"drawup/dilution/refusal"
+	"drawup/dilution/tomlfile"
+	"drawup/labels"
+	"drawup/labels/sheets"
+)
+
+// A job is one order on its way to paper: read, planned, worded, and passed by
+// the second route.
+type job struct {
+	file   string // as typed
+	order  order.Order
+	list   dilution.List
+	facts  []labels.Facts
+	labels []labels.Label
+	making labels.Making
+	drawUp []sheets.Sheet
+	pumps  []sheets.Sheet
+	checks []sheets.Sheet
+	passed map[int]recheck.Passed // by syringe number
+}
+
+// newJob reads and plans the order in file. at, when given, overrides the time
+// prepared; the list of reasons holds everything that is wrong.
+func newJob(file string, f *formulary.Formulary, at func(order.Session) (time.Time, refusal.List), leaveOut map[int]bool) (*job, refusal.List) {
+	data, faults := readFile(file)
+	if faults.Refused() {
+		return nil, faults
+	}
+	o, faults := order.Read(file, data)
+	when, late := at(o.Session)
+	faults = append(faults, late...)
+	faults = append(faults, unknownNumbers(o, leaveOut)...)
+	j := &job{file: file, order: o}
+	list, reasons := dilution.NewList(o, f, when, leaveOut, faults)
+	j.list = list
+	if reasons.Refused() {
+		reasons.Sort()
+		return j, reasons
+	}
+	j.making = makingOf(o, f, when, data)
+	return j, append(reasons, j.word()...)
+}
+
+// unknownNumbers refuses numbers to leave out that no syringe has.
+func unknownNumbers(o order.Order, leaveOut map[int]bool) refusal.List {
+	var out refusal.List
+	for n := range leaveOut {
+		if n < 1 || n > len(o.Syringes) {
+			out = append(out, refusal.Reason{Code: refusal.SyringeNumber, Severity: refusal.Refuse, Field: "--leave-out", Got: fmt.Sprint(n),
+				Want: fmt.Sprintf("a number from 1 to %d", len(o.Syringes)), Message: fmt.Sprintf("the order has no syringe %d", n), Remedy: "check the number in the table or the refusal"})
+		}
+	}
+	return out
+}
+
+// makingOf is what all papers of the run share. The digest binds the order's
+// bytes, the formulary and the time (rule R19).
+func makingOf(o order.Order, f *formulary.Formulary, at time.Time, data []byte) labels.Making {
+	sum := sha256.New()
+	fmt.Fprintf(sum, "%s\n%s\n%d\n", f.Digest, at.Format(time.RFC3339), len(data))
+	sum.Write(data)
+	digest := sum.Sum(nil)
+	style := styleOf(o)
+	return labels.Making{
+		Place: o.Session.Place.Value, Preparer: o.Session.Preparer.Value, Made: labels.Moment(style, at),
+		Formulary: f.Name + " " + f.Version, FormularyDigest: f.Digest[:12], State: f.State(),
+		Digest: hex.EncodeToString(digest)[:8], Serial: fmt.Sprintf("%05d", binary.BigEndian.Uint32(digest)%100000), Invented: o.Session.Invented,
+	}
+}
+
+// word writes labels and sheets and sends every figure through the second
+// route. A disagreement is a fault of this program and stops everything.
+func (j *job) word() refusal.List {
+	for _, p := range j.list.Plans {
+		facts := labels.FactsOf(p)
+		l, err := labels.FromPlan(p, facts, j.making)
+		if err != nil {
+			return refusal.List{ourFault(p.Number, err)}
+		}
+		j.facts, j.labels = append(j.facts, facts), append(j.labels, l)
+	}
+	j.drawUp = sheets.DrawUp(j.list, j.facts, j.making)
+	j.pumps = sheets.PumpCards(j.list, j.facts, j.making)
+	j.checks = sheets.CheckSheets(j.list, j.facts, j.making)
+	return j.check()
+}
+
+// check is the second route over every figure of every paper (rule R17).
+func (j *job) check() refusal.List {
+	j.passed = map[int]recheck.Passed{}
+	var out refusal.List
+	for i, p := range j.list.Plans {
+		figures := j.labels[i].Figures("label")
+		for _, s := range j.allSheets() {
+			figures = append(figures, s.FiguresOf(p.Number)...)
+		}
+		passed, err := recheck.Check(labels.Stated(p, figures))
+		if err != nil {
+			out = append(out, ourFault(p.Number, err))
+			continue
+		}
+		j.passed[p.Number] = passed
+	}
+	return out
+}
+
+func (j *job) allSheets() []sheets.Sheet {
+	var all []sheets.Sheet
+	return append(append(append(all, j.drawUp...), j.pumps...), j.checks...)
+}
+
+// ourFault is a fault of the program, not of the order: exit code 3.
+func ourFault(syringe int, err error) refusal.Reason {
+	return refusal.Reason{Code: refusal.RoutesDisagree, Severity: refusal.Refuse, Syringe: syringe, Rule: "R17", Message: "the two routes disagree: " + err.Error(),
+		Remedy: "do not use any figure of this order; report the order and this message"}
+}
+
+// name is the order's file name without its folder and ending.
+func (j *job) name() string {
+	base := filepath.Base(j.file)
+	return base[:len(base)-len(filepath.Ext(base))]
+}
+
+// readFile reads an order file whole, or says why not.
+func readFile(path string) ([]byte, refusal.List) { return tomlfile.ReadFile(path) }

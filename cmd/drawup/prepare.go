@@ -1,0 +1,311 @@
+package main
+
+import (
+	"errors"
+	"fmt"
+	"io"
+	"path/filepath"
+	"strconv"
+	"strings"
+	"time"
+
+	"github.com/spf13/pflag"
+
+	"drawup/dilution/formulary"
+	"drawup/dilution/order"
+	"drawup/dilution/quantity"
+	"drawup/dilution/recheck"
+	"drawup/dilution/refusal"
+	"drawup/labels"
+	"drawup/layouts"
+	"drawup/layouts/ink"
+)
+
+// paperFlags are the flags that prepare and label share.
+type paperFlags struct {
+	set           *pflag.FlagSet
+	out           string
+	at            string
+	stock         string
+	infusionStock string
+	used          int
+	mono          bool
+	json, help    bool
+	leaveOut      []string
+	syringe       int
+	orders        []string
+}
+
+// asError is errors.As.
+func asError(err error, target any) bool { return errors.As(err, target) }
+
+// readPaperFlags reads the flags of a command that prints.
+func readPaperFlags(name string, args []string) (*paperFlags, refusal.List) {
+	f := &paperFlags{set: pflag.NewFlagSet(name, pflag.ContinueOnError)}
+	f.set.SetOutput(io.Discard)
+	f.set.Usage = func() {}
+	f.set.StringVar(&f.at, "at", "", "time prepared")
+	f.set.StringVar(&f.stock, "stock", "", "stock of blank labels")
+	f.set.BoolVar(&f.mono, "mono", false, "black and white printer")
+	f.set.BoolVar(&f.json, "json", false, "")
+	f.set.BoolVarP(&f.help, "help", "h", false, "")
+	switch name {
+	case "prepare":
+		f.set.StringVar(&f.out, "out", ".", "folder to write to")
+		f.set.StringVar(&f.infusionStock, "infusion-stock", "a4-24", "stock for infusion labels")
+		f.set.IntVar(&f.used, "labels-used", 0, "labels already taken from the first sheet")
+		f.set.StringSliceVar(&f.leaveOut, "leave-out", nil, "syringe numbers to leave out")
+	case "label":
+		f.set.StringVar(&f.out, "out", "", "file to write")
+		f.set.IntVar(&f.syringe, "syringe", 0, "number of the syringe")
+	}
+	if err := f.set.Parse(args); err != nil {
+		f.json = f.json || wantsJSON(args)
+		var names []string
+		f.set.VisitAll(func(x *pflag.Flag) { names = append(names, x.Name) })
+		return f, refusal.List{flagFault(err, names)}
+	}
+	f.orders = f.set.Args()
+	return f, nil
+}
+
+// runPrepare plans orders and writes all papers of each, or none of any.
+func runPrepare(e env, args []string) int {
+	f, faults := readPaperFlags("prepare", args)
+	if f.help {
+		return showHelp(e, "prepare")
+	}
+	doc := &planDocument{Syringes: []syringeJSON{}}
+	leaveOut, bad := f.numbers()
+	faults = append(faults, bad...)
+	if len(f.orders) == 0 && !faults.Refused() {
+		faults = append(faults, refusal.Reason{Code: refusal.FlagMissing, Severity: refusal.Refuse, Field: "ORDER", Want: "an order file",
+			Message: "no order file is named", Remedy: "drawup prepare testdata/orders/harbour-morning.toml --out out"})
+	}
+	if len(f.orders) > 1 && len(leaveOut) > 0 {
+		faults = append(faults, refusal.Reason{Code: refusal.FlagConflict, Severity: refusal.Refuse, Field: "--leave-out", Want: "one order file",
+			Message: "a number to leave out is meant for one order, and several are named", Remedy: "prepare that order by itself"})
+	}
+	if faults.Refused() {
+		return finish(e, f.json, doc, nil, faults)
+	}
+	form, err := formulary.Default()
+	if err != nil {
+		return finish(e, f.json, doc, nil, refusal.List{ourFault(0, err)})
+	}
+	jobs, all := f.work(form, leaveOut)
+	if all.Refused() {
+		return finish(e, f.json, doc, nil, all)
+	}
+	return f.write(e, jobs, all)
+}
+
+// numbers reads --leave-out 3,7.
+func (f *paperFlags) numbers() (map[int]bool, refusal.List) {
+	out := map[int]bool{}
+	for _, s := range f.leaveOut {
+		n, err := strconv.Atoi(strings.TrimSpace(s))
+		if err != nil {
+			return nil, refusal.List{{Code: refusal.FlagConflict, Severity: refusal.Refuse, Field: "--leave-out", Got: s, Want: "syringe numbers such as 3,7",
+				Message: fmt.Sprintf("%q is not the number of a syringe", s), Remedy: "write the numbers as the table shows them"}}
+		}
+		out[n] = true
+	}
+	return out, nil
+}
+
+// work plans every order; all reasons of all orders come back.
+func (f *paperFlags) work(form *formulary.Formulary, leaveOut map[int]bool) ([]*job, refusal.List) {
+	var jobs []*job
+	var all refusal.List
+	for _, path := range f.orders {
+		j, reasons := newJob(path, form, f.when(nil), leaveOut)
+		all = append(all, reasons...)
+		jobs = append(jobs, j)
+	}
+	return jobs, all
+}
+
+// when gives the time prepared: --at, else now if the command works in the
+// moment, else the order's own.
+func (f *paperFlags) when(now func() time.Time) func(order.Session) (time.Time, refusal.List) {
+	return func(s order.Session) (time.Time, refusal.List) {
+		zone := time.UTC
+		if s.Prepared.Given() {
+			zone = s.Prepared.Value.Location()
+		}
+		switch {
+		case f.at != "":
+			t, err := time.ParseInLocation("2006-01-02 15:04", f.at, zone)
+			if err != nil {
+				return t, refusal.List{{Code: refusal.TimeMalformed, Severity: refusal.Refuse, Field: "--at", Got: f.at, Want: `a time such as "2026-12-01 07:30"`, Rule: "R18",
+					Message: fmt.Sprintf("%q is not a date and time", f.at), Remedy: `write --at "2026-12-01 07:30"; it is read in the order's zone`}}
+			}
+			return t, nil
+		case now != nil:
+			return now().In(zone).Truncate(time.Minute), nil
+		}
+		return s.Prepared.Value, nil
+	}
+}
+
+// write places everything in memory, then writes it, then tells the user.
+func (f *paperFlags) write(e env, jobs []*job, all refusal.List) int {
+	doc := &planDocument{Syringes: []syringeJSON{}}
+	var files []file
+	for _, j := range jobs {
+		dir := f.out
+		if len(jobs) > 1 {
+			dir = filepath.Join(f.out, j.name())
+		}
+		made, reasons := f.papers(j, dir, j.cautions(all))
+		all = append(all, reasons...)
+		files = append(files, made...)
+	}
+	if !all.Refused() {
+		all = append(all, writeAll(files)...)
+	}
+	if all.Refused() {
+		return finish(e, f.json, doc, nil, all)
+	}
+	if f.json {
+		return f.tellJSON(e, jobs, files)
+	}
+	var b strings.Builder
+	for _, j := range jobs {
+		table(&b, j)
+	}
+	tellFiles(&b, files)
+	tellCautions(&b, all.Cautions())
+	if _, err := io.WriteString(e.stdout, b.String()); err != nil {
+		return outputFault(e, err)
+	}
+	return exitMade
+}
+
+// tellJSON prints the plan documents themselves: one, or several in a row.
+func (f *paperFlags) tellJSON(e env, jobs []*job, files []file) int {
+	for _, x := range files {
+		if filepath.Base(x.path) != planName {
+			continue
+		}
+		if _, err := e.stdout.Write(x.data); err != nil {
+			return outputFault(e, err)
+		}
+	}
+	return exitMade
+}
+
+// planName is the file that is written last and marks a complete set.
+const planName = "plan.json"
+
+// papers makes the five files of one order in memory.
+func (f *paperFlags) papers(j *job, dir string, cautions refusal.List) ([]file, refusal.List) {
+	var files []file
+	var all refusal.List
+	add := func(name, title string, pages []ink.Page, reasons refusal.List) {
+		all = append(all, reasons...)
+		if reasons.Refused() || len(pages) == 0 {
+			return
+		}
+		data, reasons := pdfOf(pages, title, j)
+		all = append(all, reasons...)
+		files = append(files, file{filepath.Join(dir, name), data})
+	}
+	pages, reasons := layouts.Sheets(j.drawUp, j.proofs())
+	add("draw-up.pdf", "Draw-up sheet", pages, reasons)
+	pages, reasons = f.labelPages(j)
+	add("labels.pdf", "Syringe labels", pages, reasons)
+	pages, reasons = layouts.Sheets(j.pumps, j.proofs())
+	add("pump-cards.pdf", "Pump cards", pages, reasons)
+	pages, reasons = layouts.Sheets(j.checks, j.proofs())
+	add("check-sheets.pdf", "Check sheets", pages, reasons)
+	doc := planOf(j)
+	doc.take(cautions)
+	data, err := encode(doc)
+	if err != nil {
+		all = append(all, ourFault(0, err))
+	}
+	return append(files, file{filepath.Join(dir, planName), data}), all
+}
+
+// labelPages lays bolus labels on one stock and infusion labels on another.
+func (f *paperFlags) labelPages(j *job) ([]ink.Page, refusal.List) {
+	var bolus, infusion []labels.Label
+	for i, p := range j.list.Plans {
+		if p.Infusion != nil {
+			infusion = append(infusion, j.labels[i])
+		} else {
+			bolus = append(bolus, j.labels[i])
+		}
+	}
+	stock := f.stock
+	if stock == "" {
+		stock = "a4-65"
+	}
+	pages, reasons := placeLabels(j, bolus, stock, f.used, f.mono)
+	more, again := placeLabels(j, infusion, f.infusionStock, 0, f.mono)
+	return append(pages, more...), append(reasons, again...)
+}
+
+// placeLabels puts labels on a named stock.
+func placeLabels(j *job, list []labels.Label, name string, used int, mono bool) ([]ink.Page, refusal.List) {
+	if len(list) == 0 {
+		return nil, nil
+	}
+	s, ok := layouts.StockNamed(name)
+	if !ok {
+		return nil, refusal.List{{Code: refusal.StockUnknown, Severity: refusal.Refuse, Field: "--stock", Got: name, Want: stockNames(), Rule: "R15",
+			Message: fmt.Sprintf("there is no stock of labels called %q", name), Remedy: "use one of: " + stockNames()}}
+	}
+	passed := make([]recheck.Passed, len(list))
+	for i, l := range list {
+		passed[i] = j.passed[l.Number]
+	}
+	return layouts.Labels(list, s, passed, layouts.Options{Skip: used, Mono: mono, Foot: j.foot()})
+}
+
+func stockNames() string {
+	var names []string
+	for _, s := range layouts.Stocks() {
+		names = append(names, s.Name)
+	}
+	return strings.Join(names, ", ")
+}
+
+// foot is the note in the margin of a sheet of labels.
+func (j *job) foot() []string {
+	m := j.making
+	foot := []string{"made " + m.Made + " by " + m.Preparer + ", " + m.Place, m.Formulary + ", " + m.State + ", digest " + m.Digest}
+	if m.Invented {
+		foot = append(foot, "invented demonstration")
+	}
+	return foot
+}
+
+// cautions are those of this order among all.
+func (j *job) cautions(all refusal.List) refusal.List {
+	var out refusal.List
+	for _, r := range all.Cautions() {
+		if r.Pos.File == "" || r.Pos.File == j.file {
+			out = append(out, r)
+		}
+	}
+	return out
+}
+
+func styleOf(o order.Order) quantity.Style {
+	if o.Site.Style.Given() {
+		return o.Site.Style.Value
+	}
+	return quantity.UK()
+}
+
+// proofs is what passed, as the layouts want it.
+func (j *job) proofs() map[int]layouts.Proof {
+	out := map[int]layouts.Proof{}
+	for n, p := range j.passed {
+		out[n] = p
+	}
+	return out
+}
