@@ -32,6 +32,7 @@ func Decode(name string, data []byte, into any, known ...string) (*Places, refus
 		return &Places{name: name}, list
 	}
 	s, list := surveyed(name, text)
+	list = append(list, s.miscased(known)...)
 	if s.places.whole {
 		list = append(list, s.decode(into, known)...)
 	}
@@ -112,6 +113,8 @@ func syntaxReason(pos refusal.Pos, line, message string) refusal.Reason {
 		why = "%q is followed by a colon, not by an equals sign"
 	case plain == value:
 		why = "the value of %q is not in quotes"
+	case value[0] == '"' || value[0] == '\'':
+		return r // straight quotes, and something else is wrong
 	}
 	r.Message = fmt.Sprintf("line %d cannot be read: "+why, pos.Line, key)
 	return r

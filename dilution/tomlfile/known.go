@@ -42,6 +42,28 @@ func (s *survey) unknown(missing *toml.StrictMissingError, known []string) refus
 	return list
 }
 
+// miscased explains the keys that differ from a known one in letter case only.
+// TOML tells them apart, the decoder does not.
+func (s *survey) miscased(known []string) refusal.List {
+	exact, lower := map[string]bool{}, map[string]string{}
+	for _, k := range known {
+		name := k[strings.LastIndexByte(k, '.')+1:]
+		exact[name] = true
+		lower[strings.ToLower(name)] = name
+	}
+	var list refusal.List
+	for _, k := range s.spelled {
+		name, ok := lower[strings.ToLower(k.name)]
+		if !ok || exact[k.name] || len(list) >= maxFaults {
+			continue
+		}
+		list = append(list, refusal.Reason{Code: refusal.KeyUnknown, Severity: refusal.Refuse, Field: k.key, Got: k.name, Want: name,
+			Message: fmt.Sprintf("there is no key %q; capital and small letters are not the same", k.name),
+			Remedy:  fmt.Sprintf("write %q, if that is meant", name), Pos: s.lines.at(k.at)})
+	}
+	return list
+}
+
 // noteLikely gives the key that was probably meant the place of the misspelt
 // one, so that it is not called missing as well. A misspelt table hides all its
 // keys.

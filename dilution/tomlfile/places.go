@@ -2,6 +2,7 @@ package tomlfile
 
 import (
 	"strconv"
+	"strings"
 	"unicode/utf8"
 
 	"drawup/dilution/refusal"
@@ -70,8 +71,13 @@ func (p *Places) resolve(path []any) (found string, all bool) {
 func (p *Places) Whole() bool { return p != nil && p.whole }
 
 // A path inside is one text. Names are quoted, so that no two paths share one.
-func named(s string) string { return "/" + strconv.Quote(s) }
+// The decoder does not tell capital letters from small ones in a key, so a path
+// must not either: "Weight" after "weight" would silently win.
+func named(s string) string { return "/" + strconv.Quote(strings.ToLower(s)) }
+
 func numbered(n int) string { return "#" + strconv.Itoa(n) }
+
+// set notes the place of a path that has none yet.
 func (p *Places) set(path string, pos refusal.Pos) {
 	if _, ok := p.at[path]; !ok {
 		p.at[path] = pos

@@ -35,6 +35,13 @@ type expression struct {
 	raw      string // the value's text, where it is one word
 }
 
+// spelling is a key as it is written, and where.
+type spelling struct {
+	at   int
+	name string
+	key  string // with its table
+}
+
 // survey is one pass over the syntax of a file: where everything is, what is
 // there twice, and the first place that does not read.
 type survey struct {
@@ -45,6 +52,9 @@ type survey struct {
 	count  map[string]int
 	// parents is the table of the key that begins at an offset.
 	parents map[int]string
+	// spelled is every key as it is written, to hold its letter case against
+	// the known ones.
+	spelled []spelling
 	list    refusal.List
 	exprs   []expression
 
@@ -99,6 +109,10 @@ func (s *survey) expression(n *unstable.Node) {
 	}
 }
 
+func (s *survey) spell(at int, name string) {
+	s.spelled = append(s.spelled, spelling{at: at, name: name, key: s.field(name, "")})
+}
+
 func keyNames(n *unstable.Node) []string {
 	var names []string
 	for it := n.Key(); it.Next(); {
@@ -129,6 +143,7 @@ func (s *survey) header(n *unstable.Node) {
 		path, ok = s.open(path, e.short, start, n.Kind == unstable.ArrayTable)
 	}
 	s.table, s.dotted, s.dropping = path, e.key, !ok
+	s.spelled = append(s.spelled, spelling{at: start, name: e.short, key: e.key})
 	if !ok {
 		s.places.whole = false
 		s.repeated(start, e.key, "the table")
@@ -186,6 +201,7 @@ func (s *survey) keyValue(path string, n *unstable.Node, depth int) bool {
 			return false
 		}
 	}
+	s.spell(start, names[len(names)-1])
 	s.parents[start] = path
 	path += named(names[len(names)-1])
 	if s.sorts[path] != 0 {
