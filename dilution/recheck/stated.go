@@ -28,19 +28,21 @@ type Figure struct {
 // These names have no sum that could confirm them, so each that is printed must
 // be in Asked under its own name: method (unless neat), drug.step, dose.step,
 // rate.step, drug.barrel, final.barrel, weight.actual, height, age, sex, dose,
-// start.dose, low.dose, high.dose, limit.dose. drug.step, drug.barrel,
-// final.barrel and dose.step may be asked several times: that is the stock to
-// choose from, the first drug.step belonging to the first drug.barrel and so on.
-// A wrong choice from a stock shows only where a sum depends on it, so one entry
-// each binds best. The weight that a
-// dose goes by stands behind the typed dose ("0.3 mg/kg lean") or in Asked under
-// dose.weight.by and rate.weight.by; where it is nowhere, only "actual" passes.
-// How much drug to draw must follow from an asked amount, concentration,
-// drug.volume, container.count, a final.volume drawn neat, or a dose alone.
-// ladder.N.dose is compared where it was asked. prepared, prepared.offset,
-// use.hours and use.by.offset are confirmed by use.by or else must be asked; atc
-// by the drug's line atc in the record, by code or by Asked; serial by code or
-// by Asked.
+// start.dose, low.dose, high.dose, limit.dose.
+//
+// drug.step, drug.barrel, final.barrel and dose.step may be asked several times:
+// that is the stock to choose from, the first drug.step belonging to the first
+// drug.barrel and so on. A wrong choice from a stock shows only where a sum
+// depends on it, so one entry each binds best.
+//
+// The weight that a dose goes by stands behind the typed dose ("0.3 mg/kg lean")
+// or in Asked under dose.weight.by and rate.weight.by; where it is nowhere, only
+// "actual" passes. How much drug to draw must follow from an asked amount,
+// concentration, drug.volume, container.count, a final.volume drawn neat, or a
+// dose alone. ladder.N.dose is compared where it was asked. prepared,
+// prepared.offset, use.hours and use.by.offset are confirmed by use.by or else
+// must be asked; atc by the drug's line atc in the record, by code or by Asked;
+// serial by code or by Asked.
 type Stated struct {
 	Syringe      string
 	Drug         string
