@@ -5,6 +5,8 @@ import (
 	"strings"
 
 	"drawup/dilution"
+	"drawup/dilution/body"
+	"drawup/dilution/order"
 	"drawup/dilution/recheck"
 	"drawup/dilution/refusal"
 	"drawup/labels/gs1"
@@ -157,10 +159,25 @@ func askedBarrels(p dilution.Plan, add func(name, text string)) {
 	if !m.InBag {
 		add(recheck.FinalBarrel, s.Volume(m.FinalBarrel.Nominal()))
 	}
+	add(recheck.Method, m.Method.String())
 	if p.Dose != nil {
 		add(recheck.DoseStep, s.Volume(p.Dose.Step))
+		add(recheck.DoseWeightBy, weightWord(p.Dose.Weight.Given() || p.Dose.Surface.Given(), p.Order.DoseBy, p.Dose.Rule.By))
 	}
-	add(recheck.Method, m.Method.String())
+}
+
+// weightWord is which weight a dose goes by: the order's word, else the
+// formulary's, "actual" where that names none, "none" for an absolute dose.
+func weightWord(scaled bool, ordered order.Field[body.Kind], row body.Kind) string {
+	switch {
+	case !scaled:
+		return body.None.String()
+	case ordered.Given():
+		return ordered.Value.String()
+	case row == body.None || row == 0:
+		return body.Actual.String()
+	}
+	return row.String()
 }
 
 // askedVolume says which volume the order's number meant (rule R5).
@@ -187,6 +204,10 @@ func askedRates(p dilution.Plan, add func(name, text string)) {
 	}
 	part := p.Infusion
 	add(recheck.StartDose, typedDose(p.Order.Start.Text))
+	add(recheck.RateWeightBy, weightWord(part.Weight.Given() || part.Surface.Given(), p.Order.RateBy, part.Rule.By))
+	for i, rung := range part.Ladder {
+		add(recheck.Row(recheck.Ladder, i+1, "dose"), p.Style.DoseRate(rung.Dose))
+	}
 	add(recheck.RateStep, p.Style.FlowRate(part.Step))
 	add(recheck.LowDose, part.Low.Dose.Written())
 	add(recheck.HighDose, part.High.Dose.Written())

@@ -76,6 +76,11 @@ func substanceFactor(c *check, _ int, r reading) *objection {
 	return exact(r, typedLine("substance", text, problem), "the record says")
 }
 
+// assay is what the record says; where it says nothing, the width that was
+// assumed must be among what was asked.
 func assay(c *check, _ int, r reading) *objection {
+	if !c.record.holds("assay") && c.was(Assay) {
+		return exact(r, c.typed(Assay), "was assumed, the record being silent, as")
+	}
 	return exact(r, c.recorded("assay"), "the record says")
 }
