@@ -23,13 +23,11 @@ func (r *reader) patient(i int, p patientRecord) {
 		Pos:       r.places.Of(path...),
 	}
 	r.required(out.ID.Given(), path, "id", fmt.Sprintf("patient %d of the order", i+1), `id = "A"`)
-	for _, other := range r.order.Patients {
-		if out.ID.Given() && other.ID.Value == out.ID.Value {
-			r.refuse(at(path, "id"), refusal.Reason{Code: refusal.KeyRepeated, Got: out.ID.Text, Want: "another id for each patient",
-				Message: fmt.Sprintf("two patients of the order have the id %q", out.ID.Value), Remedy: "give each patient an id of its own, and put all syringes of one patient under one [[patient]]"})
-			break
-		}
+	if out.ID.Given() && r.ids[out.ID.Value] {
+		r.refuse(at(path, "id"), refusal.Reason{Code: refusal.KeyRepeated, Got: out.ID.Text, Want: "another id for each patient",
+			Message: fmt.Sprintf("two patients of the order have the id %q", out.ID.Value), Remedy: "give each patient an id of its own, and put all syringes of one patient under one [[patient]]"})
 	}
+	r.ids[out.ID.Value] = true
 	r.plausible(path, out)
 	r.order.Patients = append(r.order.Patients, out)
 	for j, s := range p.Syringes {

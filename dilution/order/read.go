@@ -20,7 +20,7 @@ import (
 func Read(name string, data []byte) (Order, refusal.List) {
 	var file fileRecord
 	places, list := tomlfile.Decode(name, data, &file, knownKeys()...)
-	r := &reader{places: places, list: list, broken: map[int]bool{}, zone: time.UTC}
+	r := &reader{places: places, list: list, broken: map[int]bool{}, ids: map[string]bool{}, zone: time.UTC}
 	r.order.File = name
 	if !places.Whole() {
 		return r.order, list // what is missing may stand in the part not read
@@ -43,7 +43,8 @@ func Read(name string, data []byte) (Order, refusal.List) {
 type reader struct {
 	places *tomlfile.Places
 	list   refusal.List
-	broken map[int]bool // lines that have a reason of the file's form already
+	broken map[int]bool    // lines that have a reason of the file's form already
+	ids    map[string]bool // of the patients read so far
 	zone   *time.Location
 	number int    // the syringe that is being read, 0 outside
 	drug   string // its drug, for messages

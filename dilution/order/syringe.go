@@ -127,7 +127,8 @@ func (r *reader) infusion(patient int, path []any, s infusionRecord) Syringe {
 	mix := read(r, s.Mix, parseMix, at(path, "mix"))
 	out.MixAmount = Field[quantity.Amount]{Value: mix.Value.amount, Text: mix.Text, Pos: mix.Pos}
 	out.MixVolume = Field[quantity.Volume]{Value: mix.Value.volume, Text: mix.Text, Pos: mix.Pos}
-	standard, mixed := r.places.Has(at(path, "standard")...), r.places.Has(at(path, "mix")...)
+	standard := out.Standard.Given() || r.unread(at(path, "standard"))
+	mixed := r.places.Has(at(path, "mix")...)
 	switch {
 	case standard && mixed:
 		r.refuse(at(path, "mix"), refusal.Reason{Code: refusal.KeyConflict, Got: "standard and mix", Want: "one of the two",

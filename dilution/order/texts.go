@@ -90,12 +90,21 @@ func (r *reader) text(s string, path []any) Field[string] {
 		return Field[string]{Pos: f.Pos}
 	}
 	f.Text = s
-	if strings.ContainsFunc(f.Value, unicode.IsControl) {
+	if strings.ContainsFunc(f.Value, unprintable) {
 		r.refuse(path, refusal.Reason{Code: refusal.ValueWrongType, Got: s, Want: "words on one line",
-			Message: fmt.Sprintf("the %s runs over several lines or holds a control character", spaced(key(path))), Remedy: "write it on one line"})
+			Message: fmt.Sprintf("the %s runs over several lines or holds a character that cannot be seen", spaced(key(path))), Remedy: "write it on one line"})
 		f.Value = ""
 	}
 	return f
+}
+
+// unprintable are line ends, other control characters and the invisible marks
+// that turn the direction of a text: paper would not show what was typed.
+func unprintable(c rune) bool { return unicode.IsControl(c) || unicode.Is(unicode.Cf, c) }
+
+// unread reports a key that is there and has a reason of the file's form.
+func (r *reader) unread(path []any) bool {
+	return r.places.Has(path...) && r.broken[r.places.Of(path...).Line]
 }
 
 // loose reads a value that may be a text or a TOML date or time.
@@ -120,7 +129,7 @@ func (r *reader) loose(v any, path []any) string {
 // required refuses a key that is missing or blank.
 func (r *reader) required(given bool, base []any, name, of, want string) {
 	path := at(base, name)
-	if given || r.places.Has(path...) && r.broken[r.places.Of(path...).Line] {
+	if given || r.unread(path) {
 		return
 	}
 	r.refuse(path, refusal.Reason{Code: refusal.KeyMissing, Message: fmt.Sprintf("%s has no %q", of, name),

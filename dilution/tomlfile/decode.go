@@ -55,6 +55,9 @@ func surveyed(name string, text []byte) (*survey, refusal.List) {
 		}
 		from, to := s.lines.span(s.lines.line(at))
 		line := string(bytes.TrimRight(text[from:to], "\r"))
+		if begins := s.broken(); begins < s.lines.line(at) {
+			message += fmt.Sprintf("; it begins on line %d", begins+1)
+		}
 		reason := syntaxReason(s.lines.at(at), line, message)
 		key, mendable := setAside(line)
 		if mendable {
@@ -70,6 +73,22 @@ func surveyed(name string, text []byte) (*survey, refusal.List) {
 		}
 		blank(text, from, to)
 	}
+}
+
+// broken is the number, from 0, of the line on which the key or header that does
+// not read begins: the first line with content after the last that reads.
+func (s *survey) broken() int {
+	n := 0
+	if len(s.exprs) > 0 {
+		n = s.lines.line(s.exprs[len(s.exprs)-1].to) + 1
+	}
+	for ; n < len(s.lines.starts); n++ {
+		from, to := s.lines.span(n)
+		if line := bytes.TrimSpace(s.lines.text[from:to]); len(line) > 0 && line[0] != '#' {
+			break
+		}
+	}
+	return n
 }
 
 // setAside says whether a broken line can be left out without changing what
@@ -94,6 +113,9 @@ func syntaxReason(pos refusal.Pos, line, message string) refusal.Reason {
 		Remedy: "mend this line",
 	}
 	t := strings.TrimSpace(line)
+	if t == "" {
+		r.Got = "an empty line, or the end of the file"
+	}
 	n := strings.IndexAny(t, "=:")
 	if n <= 0 || strings.HasPrefix(t, "[") {
 		return r

@@ -152,6 +152,8 @@ func TestDecodeFaults(t *testing.T) {
 		"no value":               {"[session]\nplace =\ndate = 'x'\n", []string{"2 file-syntax"}, true},
 		"quote left open":        {"[session]\nplace = \"x\ndate = 'x'\n", []string{"2 file-syntax"}, true},
 		"text left open":         {"[session]\nplace = \"\"\"x\n", []string{"2 file-syntax"}, true},
+		"text open to the end":   {"[session]\nplace = \"\"\"x\n\n", []string{"3 file-syntax"}, false},
+		"nothing to blame":       {"x = [\n\n", []string{"2 file-syntax"}, false},
 		"control character":      {"[session]\nplace = \"a\x00b\"\n", []string{"2 file-syntax"}, true},
 		"letter case":            {"[session]\nPlace = 'x'\n[[Patient]]\nid = 'A'\nID = 'B'\n", []string{"2 key-unknown", "3 key-unknown", "5 key-repeated", "5 key-unknown"}, true},
 		"a line of words":        {"hello there\n", []string{"1 file-syntax"}, false},
@@ -192,6 +194,16 @@ func TestRemedies(t *testing.T) {
 		if len(list) != 1 || list[0].Remedy != want {
 			t.Errorf("%q: got %+v, want the remedy %q", text, list, want)
 		}
+	}
+}
+
+// A text or list that is not closed is found far below; the message says where
+// it begins.
+func TestWhereItBegins(t *testing.T) {
+	var d document
+	_, list := Decode("f", []byte("[session]\nplace = 'x'\n\n# a remark\n[[patient]]\nid = \"\"\"A\n\n[[patient]]\n"), &d)
+	if len(list) != 1 || !strings.Contains(list[0].Message, "it begins on line 6") {
+		t.Errorf("got %v, want one reason that names line 6", list)
 	}
 }
 
