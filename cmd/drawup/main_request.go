@@ -50,11 +50,17 @@ func (t *onceText) Set(s string) error {
 	if t.given {
 		return errGivenTwice
 	}
+	if strings.HasPrefix(s, "--") { // the next flag stands where the value should
+		return errNoValue
+	}
 	t.text, t.given = s, true
 	return nil
 }
 
-var errGivenTwice = errors.New("the flag is given twice")
+var (
+	errGivenTwice = errors.New("the flag is given twice")
+	errNoValue    = errors.New("the flag has no value")
+)
 
 // newRequest reads args for the command name, whose own flags are specs.
 func newRequest(name string, specs []flagSpec, args []string) *request {

@@ -57,19 +57,26 @@ func flagFault(err error, names []string) refusal.Reason {
 		r.Message = fmt.Sprintf("got the flag %q, which this command does not have", name)
 		r.Remedy = nearestOr(name, names, "--", "the flags are "+flagList(names))
 	case errors.As(err, &bare):
-		name := bare.GetSpecifiedName()
-		r.Code, r.Field = refusal.FlagMissing, "--"+name
-		r.Message = "--" + name + " has no value"
-		r.Remedy = `put the value in quotes after it, as in --weight "72 kg"`
+		return noValue(bare.GetSpecifiedName())
+	case errors.Is(err, errNoValue) && errors.As(err, &value):
+		return noValue(value.GetFlag().Name)
 	case errors.Is(err, errGivenTwice) && errors.As(err, &value):
 		name := value.GetFlag().Name
 		r.Code, r.Field, r.Got = refusal.FlagConflict, "--"+name, value.GetValue()
 		r.Message = "--" + name + " is given twice, the second time as " + fmt.Sprintf("%q", value.GetValue())
 		r.Remedy = "give --" + name + " once"
 	default:
-		r.Remedy = "the flags are " + flagList(names)
+		r.Field, r.Remedy = "flags", "the flags are "+flagList(names)
 	}
 	return r
+}
+
+func noValue(name string) refusal.Reason {
+	return refusal.Reason{
+		Code: refusal.FlagMissing, Severity: refusal.Refuse, Field: "--" + name,
+		Message: "--" + name + " has no value",
+		Remedy:  `put the value in quotes after it, as in --weight "72 kg"`,
+	}
 }
 
 // nearestOr is a remedy that names the known word nearest to got, or other
