@@ -41,7 +41,7 @@ func Words(text string) Line {
 // Marks that a label carries when what stands behind it is not approved. They
 // are short because a label is small.
 const (
-	MarkStarter    = "starter data, not approved"
+	MarkStarter    = "unapproved data"
 	MarkUnverified = "unverified figures"
 )
 

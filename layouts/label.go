@@ -57,7 +57,7 @@ func (a arrangement) whitePanels() []ink.Mark {
 		right = d.symbol.x
 	}
 	x := d.panel.x + 300
-	marks = append(marks, box{x, top - 280, right - x, d.panel.bottom() - 250 - top + 280}.filled(ink.White))
+	marks = append(marks, box{x, top - 200, right - x, d.panel.bottom() - 250 - top + 200}.filled(ink.White))
 	if len(a.upper) > 0 && !d.class.Bar {
 		y, low := a.upper[0].base-capital-280, a.upper[len(a.upper)-1].base+capital*31/100+80
 		marks = append(marks, box{x, y, d.panel.w - 600, low - y}.filled(ink.White))

@@ -75,18 +75,25 @@ func (a *arrangement) nameTop(upper []bin, capital ink.Micrometre) ink.Micrometr
 	return top
 }
 
-// fit tries sizes of type from large to small, and each with more and more of
-// the small type in the upper half.
+// fit tries sizes of type from large to small: first, down to 1.36 mm, with
+// every item on a row of its own in the lower half; then with rows shared and
+// more and more of the small type in the upper half.
 func (a *arrangement) fit(l labels.Label) bool {
-	const steps = 12
+	const steps, ample = 12, 2
+	for k := ink.Micrometre(steps); k >= ample; k-- {
+		if a.try(l, 0, k, []packing{apart}) {
+			a.grow(l, 0, k, []packing{apart})
+			return true
+		}
+	}
+	every := []packing{apart, joined, dense, tight}
 	for k := ink.Micrometre(steps); k >= 0; k-- {
-		small, large := smallLow+80*k, concentrationLow+250*k
 		for level := range 3 {
 			if level > 0 && len(upperItems(l, level)) == len(upperItems(l, level-1)) {
 				continue
 			}
-			if a.try(l, level, small, large) {
-				a.grow(l, level, small)
+			if a.try(l, level, k, every) {
+				a.grow(l, level, k, every)
 				return true
 			}
 		}
@@ -94,27 +101,40 @@ func (a *arrangement) fit(l labels.Label) bool {
 	return false
 }
 
+// sizes are the capital heights of the small type and the concentration on
+// step k of a ladder; step 0 is the smallest allowed.
+func sizes(k ink.Micrometre) (small, large ink.Micrometre) {
+	return smallLow + 80*k, concentrationLow + 250*k
+}
+
 // grow makes the concentration larger as long as all still fits.
-func (a *arrangement) grow(l labels.Label, level int, small ink.Micrometre) {
+func (a *arrangement) grow(l labels.Label, level int, k ink.Micrometre, ways []packing) {
+	small, _ := sizes(k)
 	for {
 		larger := *a
-		if a.large+100 > 5000 || !larger.try(l, level, small, a.large+100) || larger.large <= a.large {
+		if a.large+100 > 5000 || !larger.set(l, level, small, a.large+100, ways) || larger.large <= a.large {
 			return
 		}
 		*a = larger
 	}
 }
 
-// try arranges the label with one size of small type. The concentration is
-// never larger than the name.
-func (a *arrangement) try(l labels.Label, level int, small, large ink.Micrometre) bool {
+// try arranges the label on one step of the ladder of sizes.
+func (a *arrangement) try(l labels.Label, level int, k ink.Micrometre, ways []packing) bool {
+	small, large := sizes(k)
+	return a.set(l, level, small, large, ways)
+}
+
+// set arranges the label with one size of small type. The concentration is
+// at most 85 % of the name.
+func (a *arrangement) set(l labels.Label, level int, small, large ink.Micrometre, ways []packing) bool {
 	d := a.design
 	b := block{design: d, capital: small}
 	a.size, a.upper, a.line = b.size(), nil, box{}
 	items := upperItems(l, level)
 	reserve := ink.Micrometre(0)
 	if len(items) > 0 && d.class.Stripes {
-		reserve = ink.Micrometre(len(items))*(small*4/3) + small/2
+		reserve = ink.Micrometre(len(items))*(small*4/3) + (small-smallLow)/2
 	}
 	if len(items) > 0 && !d.class.Stripes {
 		var ok bool
@@ -130,19 +150,20 @@ func (a *arrangement) try(l labels.Label, level int, small, large ink.Micrometre
 	below := a.name.bottom
 	if d.class.Line {
 		a.line = d.line(a.name.bottom + 80)
-		b.top = max(b.top, a.line.bottom()+100)
+		b.top = max(b.top, a.line.bottom()+50)
 		below = a.line.bottom()
 	}
 	if len(items) > 0 && d.class.Stripes {
 		left, right, _ := d.nameArea()
-		a.upper, ok = b.upperRows(items, left, min(right, b.rightAt(d.middle)), below+100)
+		a.upper, ok = b.upperRows(items, left, min(right, b.rightAt(d.middle)), below+80+(small-smallLow)/3)
 		if !ok || a.upper[len(a.upper)-1].base+small*31/100 > d.middle+small/4 {
 			return false
 		}
+		b.top = max(b.top, a.upper[len(a.upper)-1].base+small*31/100)
 	}
-	b.large = min(large, a.name.capital)
+	b.large = min(large, max(concentrationLow, a.name.capital*85/100))
 	a.large = b.large
-	return a.fitLower(l, b, level)
+	return a.fitLower(l, b, level, ways)
 }
 
 // upperRows sets items row by row between left and right from y down.
@@ -173,36 +194,64 @@ func (b block) upperRows(items []item, left, right, y ink.Micrometre) ([]bin, bo
 
 // fitLower arranges the lower half: rows far apart before near, each item on
 // a row of its own before several together.
-func (a *arrangement) fitLower(l labels.Label, b block, level int) bool {
+func (a *arrangement) fitLower(l labels.Label, b block, level int, ways []packing) bool {
 	list, ok := b.concentrations(l)
 	if !ok {
 		return false
 	}
-	foot, more, ok := b.footRow(l)
-	if !ok {
-		return false
-	}
-	items := append(lowerItems(l, level), more...)
-	for _, pitch := range []ink.Micrometre{165, 145, 133} {
+	for _, pitch := range pitches(b.capital) {
 		b.pitch = b.capital * pitch / 100
-		base := list[len(list)-1].bin.base
-		for _, joined := range []bool{false, true} {
-			if rows, ok := b.inOrder(items, b.slots(base), joined); ok {
-				a.stated, a.rows, a.foot = list, rows, foot
-				return true
+		last := &list[len(list)-1].bin
+		for _, how := range ways {
+			end, more, ok := b.footRow(l, how)
+			if !ok {
+				return false
 			}
-		}
-		beside, end := list[len(list)-1].bin, foot.copied()
-		if b.design.class.Dim() || l.Second != "" {
-			beside.right = beside.left
-		}
-		if rows, ok := b.byWidth(items, b.slots(base), &beside, &end); ok {
-			list[len(list)-1].bin = beside
+			items := append(lowerItems(l, level), more...)
+			beside := last.copied()
+			if b.design.class.Dim() || l.Second != "" {
+				beside.right = beside.left
+			}
+			rows, ok := b.pack(how, items, &beside, &end)
+			if !ok {
+				continue
+			}
+			last.items, last.order, last.used = beside.items, beside.order, beside.used
 			a.stated, a.rows, a.foot = list, rows, end
 			return true
 		}
 	}
 	return false
+}
+
+// A packing is a way to put items on rows.
+type packing int
+
+const (
+	apart  packing = iota + 1 // each item on a row of its own
+	joined                    // in order, several on a row, the use-by first on its row
+	dense                     // in order, several on a row
+	tight                     // the widest first
+)
+
+func (b block) pack(how packing, items []item, beside, foot *bin) ([]bin, bool) {
+	slots := b.slots(beside.base)
+	switch how {
+	case apart, joined, dense:
+		return b.inOrder(items, slots, how, beside)
+	case tight:
+		return b.byWidth(items, slots, beside, foot)
+	}
+	return nil, false
+}
+
+// pitches are the distances of rows to try, in hundredths of the capital
+// height. Only the smallest type is set close.
+func pitches(capital ink.Micrometre) []ink.Micrometre {
+	if capital > smallLow {
+		return []ink.Micrometre{165, 152}
+	}
+	return []ink.Micrometre{165, 152, 140, 133}
 }
 
 // copied is the row with lists of its own.

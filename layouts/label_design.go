@@ -9,7 +9,8 @@ import (
 // clause is given; the others are our choice.
 const (
 	stripeGap = 530 // 5.4.4: at least 0.5 mm from the stripes to the top of the name; 0.03 mm for the rounding of type sizes
-	lineLow   = 400 // least thickness of the reversal line
+	lineLow   = 350 // least thickness of the reversal line
+	legGap    = 350 // the stripes beside the name end this far above the concentration
 	edge      = 900 // type stays this far inside the panel
 	hairline  = 100
 )
@@ -32,9 +33,9 @@ type design struct {
 // because 5.4.3 keeps the lower half free for the concentration.
 func newDesign(panel box, c labels.Class, mono bool, symbol box) design {
 	d := design{panel: panel, class: c, mono: mono, middle: panel.y + panel.h/2, symbol: symbol}
-	d.legEnd = d.middle
+	d.legEnd = d.middle - legGap
 	if symbol.w > 0 {
-		d.legEnd = min(d.middle, symbol.y-300)
+		d.legEnd = min(d.legEnd, symbol.y-300)
 	}
 	if c.Stripes {
 		d.band = (panel.h + 4) / 5
@@ -56,7 +57,7 @@ func (d design) lineHeight() ink.Micrometre {
 	if !d.class.Line {
 		return 0
 	}
-	return max(lineLow, d.panel.h/36)
+	return max(lineLow, d.panel.h/43)
 }
 
 func colour(c labels.RGB) ink.Colour { return ink.Colour{R: c.R, G: c.G, B: c.B} }

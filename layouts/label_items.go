@@ -1,6 +1,8 @@
 package layouts
 
 import (
+	"strings"
+
 	"drawup/labels"
 	"drawup/layouts/ink"
 )
@@ -26,18 +28,31 @@ type item struct {
 	// beside allows the item to stand on the row of the concentration, and
 	// foot on that of the class word.
 	beside, foot bool
+	// whole keeps plain words of a cell together, such as a person's name.
+	whole bool
+	// start begins a row where rows are filled in order.
+	start bool
 }
 
 func plain(l labels.Line) item { return item{line: l, face: ink.CondensedRegular, foot: true} }
+
+// prepared is broken, if at all, before the name of who prepared.
+func prepared(l labels.Label) item {
+	it := plain(l.Prepared)
+	it.whole = true
+	return it
+}
 
 func strong(text string) item {
 	return item{line: labels.Words(text), face: ink.CondensedSemiBold}
 }
 
-// Lengths to write on by hand: a name, and a pump rate.
+// Room to write by hand: the length for a name and for a pump rate, and the
+// height of the row.
 const (
-	writeName = 15000
-	writeRate = 9000
+	writeName   = 15000
+	writeRate   = 9000
+	writeHeight = 3000
 )
 
 // lowerItems lists the small type of the lower half in reading order. From
@@ -54,9 +69,9 @@ func lowerItems(l labels.Label, level int) []item {
 	if l.Route != "" {
 		items = append(items, strong(l.Route))
 	}
-	items = append(items, item{line: l.UseBy, face: ink.CondensedSemiBold})
+	items = append(items, item{line: l.UseBy, face: ink.CondensedSemiBold, start: true})
 	if level < 2 {
-		items = append(items, plain(l.Prepared), plain(labels.Words(l.Digest)))
+		items = append(items, prepared(l), plain(labels.Words(l.Digest)))
 	}
 	items = append(items, handwritten(l)...)
 	if level < 1 {
@@ -95,7 +110,7 @@ func upperItems(l labels.Label, level int) []item {
 		}
 	}
 	if level >= 2 {
-		items = append(items, plain(l.Prepared), plain(labels.Words(l.Digest)))
+		items = append(items, prepared(l), plain(labels.Words(l.Digest)))
 	}
 	return filled(items)
 }
@@ -119,6 +134,9 @@ func (it item) split(size, width ink.Micrometre) ([]item, bool) {
 		return nil, false
 	}
 	rows, ok := Wrap(it.line, it.face, size, width)
+	if it.whole {
+		rows, ok = it.cells(size, width)
+	}
 	var out []item
 	for _, row := range rows {
 		part := it
@@ -126,6 +144,24 @@ func (it item) split(size, width ink.Micrometre) ([]item, bool) {
 		out = append(out, part)
 	}
 	return out, ok
+}
+
+// cells breaks the line before plain cells that begin with a blank.
+func (it item) cells(size, width ink.Micrometre) ([]labels.Line, bool) {
+	var rows []labels.Line
+	for _, c := range it.line {
+		if len(rows) == 0 || c.Figure == "" && strings.HasPrefix(c.Text, " ") {
+			rows = append(rows, nil)
+		}
+		rows[len(rows)-1] = append(rows[len(rows)-1], c)
+	}
+	for i, row := range rows {
+		rows[i] = trimmed(row)
+		if Width(rows[i], it.face, size) > width {
+			return nil, false
+		}
+	}
+	return rows, true
 }
 
 // width is the item's length at an em size, with its line to write on.

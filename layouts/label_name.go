@@ -77,6 +77,9 @@ func (d design) tryName(rows []labels.Line, face ink.Face, capital, top, reserve
 	if d.class.Line {
 		spare -= d.lineHeight() + 100
 	}
+	if capital > nameLow {
+		spare -= legGap // air before the concentration
+	}
 	switch {
 	case spare > 0 && !d.class.Stripes:
 		for i := range n.bases {

@@ -46,7 +46,7 @@ func (b block) foot() ink.Micrometre {
 	if b.design.class.Dim() && !b.design.mono {
 		return b.design.panel.bottom() - 550
 	}
-	return b.design.panel.bottom() - 350
+	return b.design.panel.bottom() - 270 - (b.capital-smallLow)/2
 }
 
 // A stated is one concentration with its unit and what follows it in small
@@ -69,7 +69,12 @@ func (b block) concentrations(l labels.Label) ([]stated, bool) {
 		}
 		list = append(list, stated{cell: l.SecondConcentration, tail: l.Second})
 	}
-	y := b.top + 100
+	y := b.top + 60
+	if b.large > concentrationLow {
+		y += 120 + (b.large-concentrationLow)/4
+	} else if b.design.class.Bar && b.design.panel.h > ink.MM(15) {
+		y += 150
+	}
 	for i := range list {
 		s := &list[i]
 		base := y + b.large
@@ -101,17 +106,25 @@ func (b block) statedWidth(s stated) ink.Micrometre {
 
 // slots are the rows between the concentration at base and the class word.
 func (b block) slots(base ink.Micrometre) []bin {
-	y := base + b.large*31/100 + b.capital*5/4
+	y := base + b.large/4 + b.pitch*9/10
+	if b.large > concentrationLow {
+		y = base + b.large*31/100 + b.pitch*9/10
+	}
 	var out []bin
-	for ; y+b.pitch <= b.foot(); y += b.pitch {
+	last := b.pitch
+	if b.capital == smallLow {
+		last = b.capital * 132 / 100 // the class word has no ascenders
+	}
+	for ; y+last <= b.foot(); y += b.pitch {
 		out = append(out, bin{base: y, left: b.left(), right: b.rightAt(y + b.capital*31/100)})
 	}
 	return out
 }
 
-// footRow is the row of the class word, with the serial at its right end
-// where there is room; else the serial is an item like the others.
-func (b block) footRow(l labels.Label) (bin, []item, bool) {
+// footRow is the row of the class word, with the serial at its right end where
+// there is room; else, and where rows are packed tight, the serial is an item
+// like the others.
+func (b block) footRow(l labels.Label, how packing) (bin, []item, bool) {
 	row := bin{base: b.foot(), left: b.left(), right: b.rightAt(b.foot())}
 	word := item{line: labels.Words(l.Class.Word), face: ink.CondensedSemiBold}
 	if word.width(b.size()) > row.right-row.left {
@@ -122,11 +135,13 @@ func (b block) footRow(l labels.Label) (bin, []item, bool) {
 		return row, nil, true
 	}
 	serial := plain(labels.Line{l.Serial})
-	if row.room(b.gap()) >= serial.width(b.size()) {
+	if how != tight && row.room(b.gap()) >= serial.width(b.size()) {
 		row.add(serial, 1000, b.size(), b.gap())
 		return row, nil, true
 	}
-	return row, []item{serial}, true
+	// Away from its corner the number says what it is: it could be read as
+	// part of an amount.
+	return row, []item{plain(labels.Line{{Text: "no. "}, l.Serial})}, true
 }
 
 // gap parts two items on one row.
@@ -150,17 +165,22 @@ func (r *bin) add(it item, order int, size, gap ink.Micrometre) {
 	r.order = append(r.order, order)
 }
 
-// inOrder fills the slots from the top. Joined lets an item follow another on
-// its row; else each has a row of its own. A line to write on takes as many
-// rows as make 3.2 mm, its own the last of them.
-func (b block) inOrder(items []item, slots []bin, joined bool) ([]bin, bool) {
+// inOrder fills the slots from the top: apart gives each item a row of its
+// own, joined and dense let it follow another or stand beside the
+// concentration. A line to write on takes as many rows as make writeHeight,
+// its own the last of them.
+func (b block) inOrder(items []item, slots []bin, how packing, beside *bin) ([]bin, bool) {
 	size, at := b.size(), 0
 	for i, it := range items {
-		rows := int((3200 + b.pitch - 1) / b.pitch)
+		if how != apart && it.beside && at == 0 && beside.room(b.gap()) >= it.width(size) {
+			beside.add(it, i, size, b.gap())
+			continue
+		}
+		rows := int((writeHeight + b.pitch - 1) / b.pitch)
 		if it.blank == 0 {
 			rows = 1
 		}
-		if joined && at > 0 && slots[at-1].room(b.gap()) >= it.width(size) && (rows == 1 || slots[at-1].taken) {
+		if (how == joined && !it.start || how == dense) && at > 0 && slots[at-1].room(b.gap()) >= it.width(size) && (rows == 1 || slots[at-1].taken) {
 			slots[at-1].add(it, i, size, b.gap())
 			continue
 		}
@@ -186,17 +206,16 @@ func (b block) inOrder(items []item, slots []bin, joined bool) ([]bin, bool) {
 
 // byWidth packs the items tightly, the widest first; short ones may stand
 // beside the concentration or the class word. Rows keep the order of their
-// first item. It does not take lines to write on.
+// first item. It takes neither lines to write on nor items that must wrap.
 func (b block) byWidth(items []item, slots []bin, beside, foot *bin) ([]bin, bool) {
 	size := b.size()
 	narrow := b.rightAt(b.foot())
 	var parts []item
 	for _, it := range items {
-		rows, ok := it.split(size, narrow-b.left())
-		if !ok || it.blank > 0 {
+		if it.blank > 0 || it.width(size) > narrow-b.left() {
 			return nil, false
 		}
-		parts = append(parts, rows...)
+		parts = append(parts, it)
 	}
 	order := make([]int, len(parts))
 	for i := range order {
@@ -243,7 +262,8 @@ func (b block) choose(it item, slots []bin, beside, foot *bin) *bin {
 			return &slots[i]
 		}
 	}
-	if it.foot && foot.room(b.gap()) >= width {
+	_, dips := faceOf(it.face).Extents(it.line.Text(), int64(b.size()))
+	if it.foot && foot.room(b.gap()) >= width && foot.base+ink.Micrometre(dips) <= b.design.panel.bottom() {
 		return foot
 	}
 	return nil

@@ -34,7 +34,9 @@ const Paper = "label"
 // cover every figure of list[i]. It refuses the whole list when one label is
 // incomplete, not covered, has a letter that no face can show, or does not fit
 // the stock: name, concentration and use-by are never cut, made smaller than
-// their least size, or left out (R15).
+// their least size, or left out (R15). The line of the dose alone may be left
+// out for want of room, with a caution in the list; the pages are there unless
+// the list is Refused.
 func Labels[P Proof](list []labels.Label, s Stock, passed []P, opt Options) ([]ink.Page, refusal.List) {
 	var refused refusal.List
 	if opt.Skip < 0 || opt.Skip >= s.PerPage() && !s.Roll() {
@@ -88,7 +90,17 @@ func newArranger(l labels.Label, s Stock, mono bool) (arranger, *refusal.Reason)
 				Got: l.Code.Text, Want: "a code after the GS1 rules"}
 		}
 	}
-	if _, why := arrange(l, s.panel(ink.Point{}), s, mono, a.modules); why != "" {
+	_, why := arrange(l, s.panel(ink.Point{}), s, mono, a.modules)
+	if why != "" && !l.Infusion && len(l.Dose) > 0 {
+		a.label.Dose = nil
+		if _, still := arrange(a.label, s.panel(ink.Point{}), s, mono, a.modules); still == "" {
+			return a, &refusal.Reason{Code: refusal.TextTooLong, Severity: refusal.Caution, Syringe: l.Number,
+				Message: fmt.Sprintf("The label of %s has no room for the dose; the draw-up sheet has it.", l.Name), Field: "stock",
+				Got: s.Name, Want: "a larger stock, if the label must show it"}
+		}
+		a.label = l
+	}
+	if why != "" {
 		return a, &refusal.Reason{Code: refusal.LabelTooSmall, Severity: refusal.Refuse, Syringe: l.Number,
 			Message: fmt.Sprintf("The label of %s does not fit stock %s: no room for %s.", l.Name, s.Name, why),
 			Field:   "stock", Got: s.Name, Want: a.larger(s, mono), Rule: "R15",

@@ -2,6 +2,7 @@ package layouts
 
 import (
 	"fmt"
+	"strings"
 
 	"drawup/labels"
 	"drawup/layouts/ink"
@@ -23,7 +24,7 @@ func (s Stock) edgeNote(foot []string, page, total int) []ink.Mark {
 	}
 	if !s.NoMargin {
 		marks := noteRows([]string{said[0]}, s.Left, ink.MM(6), s.PageW-2*s.Left)
-		marks = append(marks, noteRows([]string{joined(said[1:])}, s.Left, ink.Tenths(90), s.PageW-2*s.Left)...)
+		marks = append(marks, noteRows([]string{strings.Join(said[1:], " ")}, s.Left, ink.Tenths(90), s.PageW-2*s.Left)...)
 		y := s.PageH - s.Top + ink.Tenths(32)
 		marks = append(marks, ruler(s.Left, y)...)
 		return append(marks, noteRows(foot, s.Left+ink.MM(52), y, s.PageW-2*s.Left-ink.MM(52))...)
@@ -31,17 +32,6 @@ func (s Stock) edgeNote(foot []string, page, total int) []ink.Mark {
 	p := s.panel(s.Place(s.Columns*s.Rows - 1))
 	said = append(said, foot...)
 	return append(noteRows(said, p.x, p.y+noteSize, p.w), ruler(p.x, p.bottom()-ink.MM(1))...)
-}
-
-func joined(said []string) string {
-	out := ""
-	for _, t := range said {
-		if out != "" {
-			out += " "
-		}
-		out += t
-	}
-	return out
 }
 
 // noteRows sets texts one under the other from the baseline y on, each wrapped
