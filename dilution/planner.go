@@ -38,7 +38,7 @@ func NewList(o order.Order, f *formulary.Formulary, at time.Time, leaveOut map[i
 	}
 	s, err := siteOf(o)
 	if err != nil {
-		return list, append(all, refusal.Reason{Code: refusal.FormularyBlank, Severity: refusal.Refuse, Message: err.Error()})
+		return list, append(all, refusal.Reason{Code: refusal.ValueUnknown, Severity: refusal.Refuse, Field: "site", Rule: "R8", Pos: o.Site.Tolerance.Pos, Message: err.Error(), Remedy: "mend the [site] table of the order"})
 	}
 	broken := brokenSyringes(faults)
 	for _, sy := range o.Syringes {

@@ -2,6 +2,7 @@ package dilution
 
 import (
 	"fmt"
+	"math/big"
 	"time"
 
 	"drawup/dilution/order"
@@ -36,6 +37,10 @@ const (
 	defaultSource    = "default of this tool, unverified: 4 h for immediate use after USP <797> (2023), 24 h for infusions; set the site's own"
 )
 
+// widestTolerance is the most that a site may let a graduation move a volume,
+// in per cent: our choice, the assay limits' own width.
+const widestTolerance = 10
+
 // siteOf reads the site's settings; quantities in the order are already valid.
 func siteOf(o order.Order) (site, error) {
 	s := site{style: quantity.UK(), barrels: syringe.Stocked(),
@@ -59,6 +64,9 @@ func siteOf(o order.Order) (site, error) {
 	}
 	if in.Tolerance.Given() {
 		s.tolerance = in.Tolerance.Value
+	}
+	if s.tolerance.Rat().Cmp(big.NewRat(widestTolerance, 1)) > 0 {
+		return s, fmt.Errorf("got a tolerance of %s, want at most %d %%: a graduation that far off measures nothing", s.tolerance.Written(), widestTolerance)
 	}
 	if in.PumpStep.Given() {
 		s.step = in.PumpStep.Value

@@ -184,7 +184,7 @@ func weightWord(scaled bool, ordered order.Field[body.Kind], row body.Kind) stri
 func askedVolume(p dilution.Plan, add func(name, text string)) {
 	text := p.Order.Volume.Text
 	if p.Order.Infusion {
-		amount, volume := p.Order.MixAmount.Text, p.Order.MixVolume.Text
+		amount, volume, _ := strings.Cut(p.Order.MixAmount.Text, " in ")
 		if s, ok := p.Drug.Standard(p.Standard); ok {
 			amount, volume = s.Amount.Written(), s.Volume.Written()
 		}
