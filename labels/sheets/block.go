@@ -9,8 +9,8 @@ type Owned struct {
 	Line    labels.Line
 }
 
-// A Block is one of Heading, Words, Steps, Table, Pairs, Big, Boxes, Ticks,
-// Cautions, Sign, Chart, Name and Gap.
+// A Block is one of Heading, Name, Words, Steps, Table, Blank, Pairs, Big,
+// Boxes, Ticks, Cautions, Sign, Chart and Beside.
 type Block interface {
 	// Lines is everything that the block prints, in reading order.
 	Lines() []Owned
@@ -25,7 +25,7 @@ type Name struct {
 	Number        int
 	Drug          string // "Etomidate"
 	Class         labels.Class
-	Concentration labels.Line
+	Concentration labels.Line // nil on a blind page
 	Below         labels.Line // presentation, patient
 	Large         bool        // on a pump card
 }
@@ -38,7 +38,11 @@ type Words struct {
 }
 
 // Steps are acts, one a line, numbered from 1, each with a box to tick.
-type Steps struct{ List []labels.Line }
+type Steps struct {
+	List   []labels.Line
+	Strong []string // names of the figures that are the act itself
+	Plain  bool     // nothing to tick
+}
 
 // A Column is one column of a table.
 type Column struct {
@@ -51,7 +55,7 @@ type Column struct {
 type Row struct {
 	Syringe int
 	Cells   []labels.Line
-	Mark    string // small word beside the row, "start"
+	Strong  bool
 }
 
 // A Table is rows under a head.
@@ -59,7 +63,6 @@ type Table struct {
 	Columns []Column
 	Rows    []Row
 	Box     bool // a box to tick before every row
-	Large   bool
 }
 
 // A Pair is a word and what it is.
@@ -69,7 +72,10 @@ type Pair struct {
 }
 
 // Pairs are rows of a word and its value.
-type Pairs struct{ List []Pair }
+type Pairs struct {
+	List  []Pair
+	Small bool
+}
 
 // A BigRow is a number that has to be found at once.
 type BigRow struct {
@@ -108,23 +114,35 @@ type Cautions struct{ List []Caution }
 // Sign is a row of places to sign, each for one person.
 type Sign struct{ Roles []string }
 
-// A Point is a place on a chart. At is the share of the way along both axes in
-// 10,000 parts; the figures stand at the axes.
+// A Point is a place on the line of a chart. At is the share of the way from
+// nought to the top in 10,000 parts, the same on both axes.
 type Point struct {
-	X, Y       int
-	Dose, Rate labels.Line
+	At         int
+	Dose, Rate labels.Line // at the two axes
 	Start      bool
-	Label      bool // its figures are printed at the axes
 }
 
-// A Chart is dose rate against pump rate: one straight line through nought.
+// A Chart is dose rate, upwards, against pump rate: one straight line through
+// nought, thick within the range from Low to High. Points stand in order of
+// weight: where two would print over each other, the later one is left out.
 type Chart struct {
 	Points       []Point
+	Low, High    int
 	XWord, YWord string
 }
 
-// A Gap asks for a new page.
-type Gap struct{}
+// A Blank is a table to fill in by hand: heads and empty rows.
+type Blank struct {
+	Columns []Column
+	Rows    int
+}
+
+// A Beside is two runs of blocks next to each other. LeftShare is the left
+// one's part of the width in per cent.
+type Beside struct {
+	LeftShare   int
+	Left, Right []Block
+}
 
 // Lines is the heading.
 func (b Heading) Lines() []Owned { return own(b.Line) }
@@ -150,7 +168,6 @@ func (b Table) Lines() []Owned {
 		for _, c := range r.Cells {
 			out = append(out, Owned{r.Syringe, c})
 		}
-		out = append(out, Owned{r.Syringe, labels.Words(r.Mark)})
 	}
 	return out
 }
@@ -213,15 +230,30 @@ func (b Sign) Lines() []Owned {
 func (b Chart) Lines() []Owned {
 	out := own(labels.Words(b.XWord), labels.Words(b.YWord))
 	for _, p := range b.Points {
-		if p.Label {
-			out = append(out, own(p.Dose, p.Rate)...)
-		}
+		out = append(out, own(p.Dose, p.Rate)...)
 	}
 	return out
 }
 
-// Lines is nothing.
-func (b Gap) Lines() []Owned { return nil }
+// Lines is the heads.
+func (b Blank) Lines() []Owned {
+	var out []Owned
+	for _, c := range b.Columns {
+		out = append(out, Owned{Line: labels.Words(c.Head)})
+	}
+	return out
+}
+
+// Lines is the left blocks, then the right ones.
+func (b Beside) Lines() []Owned {
+	var out []Owned
+	for _, side := range [][]Block{b.Left, b.Right} {
+		for _, x := range side {
+			out = append(out, x.Lines()...)
+		}
+	}
+	return out
+}
 
 func own(lines ...labels.Line) []Owned {
 	out := make([]Owned, 0, len(lines))
@@ -230,3 +262,7 @@ func own(lines ...labels.Line) []Owned {
 	}
 	return out
 }
+
+func heading(text string) Heading { return Heading{labels.Words(text)} }
+
+func words(key, value string) Pair { return Pair{key, labels.Words(value)} }

@@ -1,0 +1,184 @@
+package sheets
+
+import (
+	"fmt"
+
+	"drawup/dilution"
+	"drawup/dilution/body"
+	"drawup/dilution/quantity"
+	"drawup/labels"
+)
+
+// CheckSheets is two sheets for each syringe of the list, in making order: the
+// blind page for the second person, then the preparer's figures and working.
+// Facts has one entry a plan, in the order of list.Plans.
+func CheckSheets(list dilution.List, facts []labels.Facts, m labels.Making) []Sheet {
+	var out []Sheet
+	for _, s := range scribesOf(list, facts) {
+		name := labels.Capital(s.drug())
+		out = append(out,
+			Sheet{Paper: PaperCheck, Size: A4, Title: "Check sheet: the second person", Note: fmt.Sprintf("syringe %d", s.p.Number),
+				Bookmark: fmt.Sprintf("%d %s, second person", s.p.Number, name), Syringe: s.p.Number, Foot: footOf(m), Parts: s.blindParts()},
+			Sheet{Paper: PaperCheck, Size: A4, Title: "Check sheet: the preparer's figures", Note: "open only after the page before is filled in",
+				Bookmark: fmt.Sprintf("%d %s, preparer", s.p.Number, name), Syringe: s.p.Number, Foot: footOf(m), Parts: s.openParts(list)})
+	}
+	return out
+}
+
+// blindParts is the page of the second person. It takes nothing from the
+// facts: only what was typed, what stands on the container, and empty boxes.
+func (s scribe) blindParts() []Part {
+	n := s.p.Number
+	return []Part{
+		{n, []Block{s.name(nil, nil, false),
+			Words{Line: labels.Words("Work alone and work it out yourself. Do not ask for the preparer's figures, and do not open the next page before this one is filled in."), Strong: true}}},
+		{n, []Block{Beside{LeftShare: 50,
+			Left:  []Block{heading("The order, as typed"), Pairs{List: s.ordered()}},
+			Right: []Block{heading("The patient, as typed"), Pairs{List: s.body()}, heading("The container, as its label should read"), Pairs{List: s.pack()}}}}},
+		{n, []Block{heading("What you read"), Boxes{s.readBoxes()}}},
+		{n, []Block{heading("What you work out"), Boxes{s.workBoxes()}}},
+		{n, []Block{heading("What you see"), Ticks{s.looks()}}},
+		{n, []Block{heading("Only now open the next page and compare line by line"),
+			Ticks{[]string{"all lines agree", "a line differs: stop, do not give it, and let a third person settle it"}},
+			Sign{[]string{"second person, name", "date and time", "third person, where a line differed"}}}},
+	}
+}
+
+// ordered is the order's own words.
+func (s scribe) ordered() []Pair {
+	o := s.p.Order
+	var out []Pair
+	add := func(key, text string) {
+		if text != "" {
+			out = append(out, words(key, text))
+		}
+	}
+	add("drug", o.Drug.Text)
+	add("presentation", o.Presentation.Text)
+	add("indication", o.Indication.Text)
+	add("dose", o.Dose.Text)
+	add("amount", o.Amount.Text)
+	add("concentration", o.Concentration.Text)
+	add("volume", o.Volume.Text)
+	add("standard", o.Standard.Text)
+	add("mix", mixText(s.p))
+	add("method", o.Method.Text)
+	add("diluent", o.Diluent.Text)
+	add("route", o.Route.Text)
+	add("line", o.Line.Text)
+	add("start", o.Start.Text)
+	add("from", o.From.Text)
+	add("to", o.To.Text)
+	add("syringe size", o.Size.Text)
+	add("batch", o.Batch.Text)
+	add("expiry", o.Expiry.Text)
+	return out
+}
+
+// mixText is a mixture as typed, "4 mg in 50 mL".
+func mixText(p dilution.Plan) string {
+	a, v := p.Order.MixAmount.Text, p.Order.MixVolume.Text
+	if a == "" || v == "" || a == v {
+		return a
+	}
+	return a + " in " + v
+}
+
+// body is the patient as typed.
+func (s scribe) body() []Pair {
+	p := s.p.Patient
+	out := []Pair{words("id", p.ID.Text)}
+	add := func(key, text string) {
+		if text != "" {
+			out = append(out, words(key, text))
+		}
+	}
+	add("name", p.Name.Text)
+	add("sex", p.Sex.Text)
+	add("age", p.Age.Text)
+	add("height", p.Height.Text)
+	weight := p.Weight.Text
+	if weight != "" && p.Estimated {
+		weight += ", an estimate"
+	}
+	add("weight", weight)
+	add("weighed", p.Weighed.Text)
+	return out
+}
+
+// pack is the container in the words of the formulary.
+func (s scribe) pack() []Pair {
+	out := []Pair{words(s.p.Presentation.Container, s.drug()+", "+s.p.Presentation.ID)}
+	if s.p.Presentation.Powder() {
+		out = append(out, words("form", "powder: read on the pack what to add and what it gives"))
+	}
+	return out
+}
+
+// readBoxes are what the second person reads off pack and syringe.
+func (s scribe) readBoxes() []Box {
+	amount := s.p.Presentation.Amount.Unit().String()
+	out := []Box{{Label: "drug name on the container"}, {Label: "strength on it", Unit: amount + " in ____ mL"},
+		{Label: "containers opened", Unit: s.p.Presentation.Container + "s"}, {Label: "lot"}, {Label: "expiry"}}
+	if s.p.Presentation.Powder() {
+		out = append(out, Box{Label: "fluid added to each", Unit: "mL"})
+	}
+	out = append(out, Box{Label: "volume drawn", Unit: "mL"})
+	if s.p.Mixture.Method != dilution.Neat {
+		out = append(out, Box{Label: "diluent"}, Box{Label: "diluent volume", Unit: "mL"})
+	}
+	return append(out, Box{Label: "final volume on the scale", Unit: "mL"})
+}
+
+// workBoxes are what the second person works out.
+func (s scribe) workBoxes() []Box {
+	amount := s.p.Presentation.Amount.Unit().String()
+	out := []Box{{Label: "drug volume it takes", Unit: "mL"}, {Label: "amount in it", Unit: amount}, {Label: "concentration", Unit: amount + "/mL"}}
+	if d := s.p.Dose; d != nil {
+		out = append(scalarBox(d.By, d.Surface.Given(), d.Weight.Given()), out...)
+		out = append(out, Box{Label: "one dose, amount", Unit: d.Ordered.Unit().String()}, Box{Label: "one dose, volume", Unit: "mL"})
+	}
+	if i := s.p.Infusion; i != nil {
+		out = append(scalarBox(i.By, i.Surface.Given(), i.Weight.Given()), out...)
+		out = append(out, Box{Label: "pump rate for the start", Unit: "mL/h"}, Box{Label: "back: the dose rate it gives", Unit: rateUnit(i.Start.Dose)})
+	}
+	return append(out, Box{Label: "use by, on the label"})
+}
+
+// scalarBox asks for the weight or surface that the order goes by.
+func scalarBox(by body.Kind, surface, weight bool) []Box {
+	switch {
+	case surface:
+		return []Box{{Label: "body surface", Unit: "m²"}}
+	case weight:
+		return []Box{{Label: by.String() + " weight", Unit: "kg"}}
+	}
+	return nil
+}
+
+// rateUnit is the unit of a dose rate in words.
+func rateUnit(d quantity.DoseRate) string {
+	per := ""
+	switch d.Basis() {
+	case quantity.PerKilogram:
+		per = "/kg"
+	case quantity.PerSquareMetre:
+		per = "/m²"
+	case quantity.Absolute:
+	}
+	return d.Unit().String() + per + "/" + d.Period().String()
+}
+
+// looks are what is checked by eye and aloud.
+func (s scribe) looks() []string {
+	look := "the content is clear, without particles"
+	if s.p.Presentation.Form == "emulsion" {
+		look = "the content is even and white, nothing has separated"
+	}
+	out := []string{"label and " + s.p.Presentation.Container + " read aloud against each other: drug, concentration, use-by", look,
+		"the label is on the right syringe, and the scale can be read", "the patient on the order is the patient on the label"}
+	if s.p.Infusion != nil {
+		out = append(out, "the pump shows drug, concentration, weight and dose rate of the order")
+	}
+	return out
+}

@@ -1,0 +1,160 @@
+package sheets
+
+import (
+	"fmt"
+	"math/big"
+
+	"drawup/dilution"
+	"drawup/dilution/body"
+	"drawup/dilution/pump"
+	"drawup/dilution/recheck"
+	"drawup/labels"
+)
+
+// PumpCards is one card for each infusion of the list, in making order. Facts
+// has one entry a plan, in the order of list.Plans.
+func PumpCards(list dilution.List, facts []labels.Facts, m labels.Making) []Sheet {
+	var out []Sheet
+	for _, s := range scribesOf(list, facts) {
+		if s.p.Infusion == nil {
+			continue
+		}
+		name := labels.Capital(s.drug())
+		out = append(out, Sheet{Paper: PaperPump, Size: A5, Title: "Pump card", Note: fmt.Sprintf("syringe %d", s.p.Number),
+			Bookmark: fmt.Sprintf("%d %s", s.p.Number, name), Syringe: s.p.Number, Foot: footOf(m), Parts: s.pumpParts(list)})
+	}
+	return out
+}
+
+// pumpParts is the card: what is entered, the range, the ladder, slips, the
+// end of the syringe, the next syringe, who did it.
+func (s scribe) pumpParts(list dilution.List) []Part {
+	n := s.p.Number
+	holds := joined(s.say("{amount} in {final.volume}"), labels.Words(s.inDiluent()+"; "+s.patient()))
+	parts := []Part{
+		{n, []Block{s.name(s.say(s.concentration()), holds, true), Big{s.entries()}}},
+		{n, []Block{s.rangeTable()}},
+		{n, []Block{Beside{LeftShare: 50, Left: []Block{s.ladder()}, Right: []Block{s.chart(), s.slips()}}}},
+		{n, []Block{Words{Line: s.say("Started at {prepared} and left unchanged, it is empty at {empty.at}, after {run.time}."), Strong: true}}},
+		{n, []Block{heading("Next syringe: read its label; is the concentration the same?"), Blank{Columns: []Column{{"time", 14}, {"same?", 12}, {"old rate, mL/h", 26}, {"new rate, mL/h", 26}, {"initials", 16}, {"initials", 16}}, Rows: 2}}},
+		{n, []Block{Sign{[]string{"programmed by, time", "checked alone by, time"}}}},
+	}
+	if c := s.cautions(list); len(c) > 0 {
+		parts = append(parts, Part{n, []Block{Cautions{c}}})
+	}
+	return parts
+}
+
+func (s scribe) inDiluent() string {
+	if s.p.Mixture.Diluent == "" {
+		return ", undiluted"
+	}
+	return " " + s.p.Mixture.Diluent
+}
+
+// entries are what the pump asks for, in the order in which it is entered,
+// then the rate that must come out.
+func (s scribe) entries() []BigRow {
+	conc := BigRow{Key: "1  concentration", Value: s.say(s.concentration()), Note: s.say("{amount} in {final.volume}")}
+	holder := BigRow{Key: "2  syringe", Value: s.say("{final.barrel}"), Note: s.say("holds {final.volume}")}
+	if s.bag() {
+		holder = BigRow{Key: "2  bag", Value: s.say("{final.volume}")}
+	}
+	rows := []BigRow{conc, holder}
+	switch {
+	case s.p.Infusion.Weight.Given():
+		rows = append(rows, BigRow{Key: "3  weight", Value: s.say("{rate.weight}"), Note: s.weighed()})
+	case s.p.Infusion.Surface.Given():
+		rows = append(rows, BigRow{Key: "3  body surface", Value: s.say("{rate.weight}"), Note: labels.Words("Mosteller 1987")})
+	}
+	rows = append(rows, BigRow{Key: fmt.Sprintf("%d  dose rate", len(rows)+1), Value: s.say("{start.dose}"), Note: labels.Words("ordered")})
+	return append(rows, BigRow{Key: "then it shows", Value: s.say("{start.rate}"), Note: s.say("which gives {start.delivered}"), Most: true})
+}
+
+// weighed says which weight it is and where it comes from.
+func (s scribe) weighed() labels.Line {
+	note := s.say("{rate.weight.by} weight")
+	switch {
+	case s.p.Infusion.By != body.Actual:
+		note = joined(note, labels.Words(", worked out"))
+	case s.p.Patient.Estimated:
+		note = joined(note, labels.Words(", an estimate"))
+	}
+	if s.p.Infusion.By == body.Actual && s.p.Patient.Weighed.Given() {
+		note = joined(note, labels.Words(", "+s.p.Patient.Weighed.Value))
+	}
+	return note
+}
+
+// rangeTable is the range to titrate in and the hard limit, in both units.
+func (s scribe) rangeTable() Table {
+	t := Table{Columns: []Column{{"Range", 26}, {"dose rate", 44}, {"pump rate", 30}}}
+	t.Rows = append(t.Rows,
+		Row{Cells: []labels.Line{labels.Words("lowest"), s.say("{low.dose}"), s.say("{low.rate}")}},
+		Row{Cells: []labels.Line{labels.Words("highest"), s.say("{high.dose}"), s.say("{high.rate}")}})
+	if s.f.Has(recheck.LimitDose) {
+		return t.with(Row{Cells: []labels.Line{labels.Words("HARD LIMIT"), s.say("{limit.dose}"), s.say("{limit.rate}")}, Strong: true})
+	}
+	return t.with(Row{Cells: []labels.Line{labels.Words("hard limit"), labels.Words("none stored"), labels.Words("stay in the range")}})
+}
+
+func (t Table) with(r Row) Table {
+	t.Rows = append(t.Rows, r)
+	return t
+}
+
+// ladder is the table to titrate by.
+func (s scribe) ladder() Table {
+	t := Table{Columns: []Column{{"dose rate", 46}, {"mL/h", 24}, {"gives", 46}}}
+	for i, rung := range s.p.Infusion.Ladder {
+		row := Row{Cells: []labels.Line{s.rung(i, "dose"), s.rung(i, "rate"), s.rung(i, "delivered")}}
+		if n, err := rung.Dose.Cmp(s.p.Infusion.Start.Dose); err == nil && n == 0 {
+			row.Strong = true
+		}
+		t.Rows = append(t.Rows, row)
+	}
+	return t
+}
+
+func (s scribe) rung(i int, column string) labels.Line {
+	return s.say("{" + recheck.Row(recheck.Ladder, i+1, column) + "}")
+}
+
+// slips are readings of the pump that mean a slip.
+func (s scribe) slips() Table {
+	t := Table{Columns: []Column{{"Stop if it shows", 40}, {"likely slip", 60}}}
+	for i := range s.p.Infusion.Slips {
+		t.Rows = append(t.Rows, Row{Cells: []labels.Line{
+			s.say("{" + recheck.Row(recheck.Slip, i+1, "rate") + "}"), s.say("{" + recheck.Row(recheck.Slip, i+1, "kind") + "}")}})
+	}
+	return t
+}
+
+// chart is the straight line of dose rate against pump rate; its ticks are the
+// figures of the ladder and of the start.
+func (s scribe) chart() Chart {
+	part := s.p.Infusion
+	c := Chart{XWord: "pump rate", YWord: "dose rate"}
+	top := part.High
+	if n := len(part.Ladder); n > 0 {
+		if last := part.Ladder[n-1]; last.Exact.Rat().Cmp(top.Exact.Rat()) > 0 {
+			top = last
+		}
+	}
+	at := func(x pump.Setting) int { return share(x.Exact.Rat(), top.Exact.Rat()) }
+	c.Low, c.High = at(part.Low), at(part.High)
+	c.Points = append(c.Points, Point{At: at(part.Start), Dose: s.say("{start.dose}"), Rate: s.say("{start.rate}"), Start: true})
+	for i := len(part.Ladder) - 1; i >= 0; i-- {
+		c.Points = append(c.Points, Point{At: at(part.Ladder[i]), Dose: s.rung(i, "dose"), Rate: s.rung(i, "rate")})
+	}
+	return c
+}
+
+// share is a/b in 10,000 parts.
+func share(a, b *big.Rat) int {
+	if b.Sign() <= 0 {
+		return 0
+	}
+	x := new(big.Rat).Mul(new(big.Rat).Quo(a, b), big.NewRat(10000, 1))
+	return int(new(big.Int).Div(x.Num(), x.Denom()).Int64())
+}

@@ -1,0 +1,184 @@
+package sheets
+
+import (
+	"math/big"
+
+	"drawup/dilution"
+	"drawup/dilution/body"
+	"drawup/dilution/formulary"
+	"drawup/labels"
+)
+
+// A limitRow is one figure of a row of limits under its name.
+type limitRow[T any] struct {
+	name string
+	fig  formulary.Figure[T]
+}
+
+// limitRows are the figures of a row of limits, from the lowest to the highest.
+func limitRows[T any](r formulary.Rule[T]) []limitRow[T] {
+	return []limitRow[T]{{"hard lowest", r.HardLow}, {"usual lowest", r.UsualLow}, {"usual highest", r.UsualHigh}, {"soft highest", r.SoftHigh}, {"hard highest", r.HardHigh}}
+}
+
+// working are the steps of the sum with what each rounding lost (rule R2).
+func (s scribe) working() []labels.Line {
+	var out []labels.Line
+	add := func(l labels.Line) {
+		if len(l) > 0 {
+			out = append(out, l)
+		}
+	}
+	add(s.weightLine())
+	if s.p.Dose != nil && s.f.Has("dose.weight") {
+		add(s.say("dose: {dose} times {dose.weight} is {dose.amount}"))
+	}
+	if s.p.Presentation.Powder() {
+		add(s.say("volume after mixing: {powder.added} added and {powder.displaced} taken by the powder make {container.volume}"))
+	}
+	add(s.say("strength: {container.amount} in {container.volume} is {strength}"))
+	add(joined(s.say("drug volume: {drug.volume} on the {drug.barrel} barrel in steps of {drug.step}; rounding: "), labels.Words(change(s.p.Mixture.DrugReading.MovedPercent))))
+	add(s.say("containers: {drug.volume} out of {container.volume} each takes {container.count}"))
+	if s.p.Mixture.Method != dilution.Neat {
+		add(s.diluentLine())
+	}
+	add(s.say("amount: {drug.volume} of {strength} is {amount}"))
+	add(s.say("concentration: {amount} in {final.volume} is {concentration}"))
+	if s.f.Has("substance.amount") {
+		add(s.say("amount of substance: {amount} at {substance.factor} is {substance.amount}, {substance.concentration}"))
+	}
+	if s.f.Has("second.amount") {
+		add(joined(labels.Words("second drug, "+s.p.Presentation.SecondName+": "), s.say("{second.container} a container give {second.amount}, {second.concentration}")))
+	}
+	s.doseWorking(add)
+	s.rateWorking(add)
+	add(s.say("balance: {container.count} of {container.amount} taken; {amount} in it and {left.amount} ({left.volume}) left over"))
+	add(joined(s.say("interval: plus or minus {interval.percent}, {interval.low} to {interval.high}; "), s.largest()))
+	add(joined(s.say("use by: {prepared} and {use.hours} is {use.by}; "), labels.Words(s.p.UseBy.Won+" ends first ("+s.p.UseBy.Source+")")))
+	return out
+}
+
+// weightLine is the equation behind a weight that was worked out.
+func (s scribe) weightLine() labels.Line {
+	by := body.Kind(0)
+	pattern := ""
+	switch {
+	case s.p.Dose != nil && s.f.Has("dose.weight"):
+		by, pattern = s.p.Dose.By, "{dose.weight}"
+	case s.p.Infusion != nil && s.f.Has("rate.weight"):
+		by, pattern = s.p.Infusion.By, "{rate.weight}"
+	}
+	if by.Equation() == "" {
+		return nil
+	}
+	exact := "a root"
+	if by != body.Surface {
+		exact = exactWeight(s.p.Size, by)
+	}
+	from := ""
+	for _, f := range []string{"sex", "height", "weight.actual"} {
+		if s.f.Has(f) && !(by == body.Ideal && f == "weight.actual") && !(by == body.Surface && f == "sex") {
+			from += ", {" + f + "}"
+		}
+	}
+	return joined(labels.Words(by.Equation()), s.say(from), labels.Words(": "+exact), s.say(", used as "+pattern))
+}
+
+func exactWeight(size body.Size, by body.Kind) string {
+	var r *big.Rat
+	switch by {
+	case body.Ideal:
+		if w, err := size.Ideal(); err == nil {
+			r = w.Rat()
+		}
+	case body.Adjusted:
+		if w, err := size.Adjusted(); err == nil {
+			r = w.Rat()
+		}
+	case body.Lean:
+		if w, err := size.Lean(); err == nil {
+			r = w.Rat()
+		}
+	case body.Actual, body.Surface, body.None:
+	}
+	if r == nil {
+		return "as typed"
+	}
+	return rounded(r) + " kg"
+}
+
+func (s scribe) diluentLine() labels.Line {
+	switch s.p.Mixture.Method {
+	case dilution.AddTo:
+		return s.say("method: {method}; final volume: {diluent.volume} in the bag and {drug.volume} make {final.volume}")
+	case dilution.WithdrawThenAdd:
+		return s.say("method: {method}; {drug.volume} out of the bag leave {diluent.volume}, and with the drug it is {final.volume} again")
+	case dilution.MakeUpTo:
+		return s.say("method: {method}; diluent: {final.volume} less {drug.volume} is {diluent.volume}")
+	case dilution.Neat:
+	}
+	return nil
+}
+
+// doseWorking is one dose out of the syringe.
+func (s scribe) doseWorking(add func(labels.Line)) {
+	d := s.p.Dose
+	if d == nil {
+		return
+	}
+	exact, err := d.Amount.DrawnAt(s.p.Mixture.Concentration)
+	if err != nil {
+		return
+	}
+	add(joined(s.say("one dose: {dose.amount} at {concentration} is "), labels.Words(rounded(exact.Rat())+" mL"),
+		s.say("; read as {dose.volume} in steps of {dose.step}: "), labels.Words(change(moved(d.Volume.Rat(), exact.Rat()))), s.say("; that gives {dose.delivered}")))
+}
+
+// rateWorking is the start rate of the pump.
+func (s scribe) rateWorking(add func(labels.Line)) {
+	i := s.p.Infusion
+	if i == nil {
+		return
+	}
+	times := ""
+	if s.f.Has("rate.weight") {
+		times = " times {rate.weight}"
+	}
+	add(joined(s.say("pump rate: {start.dose}"+times+" at {concentration} is "), labels.Words(rounded(i.Start.Exact.Rat())+" mL/h"),
+		s.say("; set to {start.rate} in steps of {rate.step}: "), labels.Words(change(i.Start.LostPercent)), s.say("; that gives {start.delivered}")))
+	add(s.say("ends of the range: {low.dose} rounded up is {low.rate}, {high.dose} rounded down is {high.rate}"))
+	add(s.say("time: {final.volume} at {start.rate} last {run.time}, to {empty.at}"))
+}
+
+// moved is how far from b a lies, in per cent of b; nil for a b of nothing.
+func moved(a, b *big.Rat) *big.Rat {
+	if b.Sign() == 0 {
+		return nil
+	}
+	d := new(big.Rat).Sub(a, b)
+	return d.Mul(d, big.NewRat(100, 1)).Quo(d, b)
+}
+
+// largest names what the interval comes from most (rule R9).
+func (s scribe) largest() labels.Line {
+	m := s.p.Mixture
+	best, name := m.Assay.Rat(), "the assay limits of the container"
+	if m.AssayAssumed {
+		name += ", which are assumed"
+	}
+	pattern := "most of it from " + name + ", {assay}"
+	if m.Method == dilution.Neat {
+		return s.say(pattern)
+	}
+	if r := m.DrugReading.Relative(); r.Given() && r.Rat().Cmp(best) > 0 {
+		best, pattern = r.Rat(), "most of it from reading {drug.volume} on the {drug.barrel} barrel"
+	}
+	if !m.InBag && m.FinalBarrel.Given() && m.FinalVolume.Given() && !m.FinalVolume.IsZero() {
+		if tol := m.FinalBarrel.Tolerance(m.FinalVolume); tol.Given() {
+			share := new(big.Rat).Quo(tol.Rat(), m.FinalVolume.Rat())
+			if share.Mul(share, big.NewRat(100, 1)).Cmp(best) > 0 {
+				pattern = "most of it from reading {final.volume} on the {final.barrel} barrel"
+			}
+		}
+	}
+	return s.say(pattern)
+}
