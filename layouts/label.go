@@ -53,9 +53,6 @@ func (a arrangement) whitePanels() []ink.Mark {
 		}
 	}
 	right := d.panel.right() - 300
-	if len(a.modules) > 0 {
-		right = d.symbol.x
-	}
 	x := d.panel.x + 300
 	marks = append(marks, box{x, top - 200, right - x, d.panel.bottom() - 250 - top + 200}.filled(ink.White))
 	if len(a.upper) > 0 && !d.class.Bar {

@@ -86,16 +86,25 @@ func (a *arrangement) fit(l labels.Label) bool {
 			return true
 		}
 	}
-	every := []packing{apart, joined, dense, tight}
-	for k := ink.Micrometre(steps); k >= 0; k-- {
-		for level := range 3 {
-			if level > 0 && len(upperItems(l, level)) == len(upperItems(l, level-1)) {
-				continue
-			}
-			if a.try(l, level, k, every) {
-				a.grow(l, level, k, every)
+	for _, ways := range [][]packing{{apart, joined, tight, tightest}, {dense}} {
+		for k := ink.Micrometre(steps); k >= 0; k-- {
+			if a.levels(l, k, ways) {
 				return true
 			}
+		}
+	}
+	return false
+}
+
+// levels tries one step of the ladder with more and more in the upper half.
+func (a *arrangement) levels(l labels.Label, k ink.Micrometre, ways []packing) bool {
+	for level := range 3 {
+		if level > 0 && len(upperItems(l, level)) == len(upperItems(l, level-1)) {
+			continue
+		}
+		if a.try(l, level, k, ways) {
+			a.grow(l, level, k, ways)
+			return true
 		}
 	}
 	return false
@@ -228,10 +237,11 @@ func (a *arrangement) fitLower(l labels.Label, b block, level int, ways []packin
 type packing int
 
 const (
-	apart  packing = iota + 1 // each item on a row of its own
-	joined                    // in order, several on a row, the use-by first on its row
-	dense                     // in order, several on a row
-	tight                     // the widest first
+	apart    packing = iota + 1 // each item on a row of its own
+	joined                      // in order, several on a row, the use-by first on its row
+	dense                       // in order, several on a row
+	tight                       // the widest first
+	tightest                    // the widest first, the serial with them
 )
 
 func (b block) pack(how packing, items []item, beside, foot *bin) ([]bin, bool) {
@@ -239,7 +249,7 @@ func (b block) pack(how packing, items []item, beside, foot *bin) ([]bin, bool) 
 	switch how {
 	case apart, joined, dense:
 		return b.inOrder(items, slots, how, beside)
-	case tight:
+	case tight, tightest:
 		return b.byWidth(items, slots, beside, foot)
 	}
 	return nil, false

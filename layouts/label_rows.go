@@ -122,8 +122,8 @@ func (b block) slots(base ink.Micrometre) []bin {
 }
 
 // footRow is the row of the class word, with the serial at its right end where
-// there is room; else, and where rows are packed tight, the serial is an item
-// like the others.
+// there is room; else, and where rows are packed tightest, the serial is an
+// item like the others.
 func (b block) footRow(l labels.Label, how packing) (bin, []item, bool) {
 	row := bin{base: b.foot(), left: b.left(), right: b.rightAt(b.foot())}
 	word := item{line: labels.Words(l.Class.Word), face: ink.CondensedSemiBold}
@@ -135,7 +135,7 @@ func (b block) footRow(l labels.Label, how packing) (bin, []item, bool) {
 		return row, nil, true
 	}
 	serial := plain(labels.Line{l.Serial})
-	if how != tight && row.room(b.gap()) >= serial.width(b.size()) {
+	if how != tightest && row.room(b.gap()) >= serial.width(b.size()) {
 		row.add(serial, 1000, b.size(), b.gap())
 		return row, nil, true
 	}

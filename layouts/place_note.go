@@ -17,7 +17,7 @@ const noteSize = 1700
 func (s Stock) edgeNote(foot []string, page, total int) []ink.Mark {
 	said := []string{
 		fmt.Sprintf("%s, sheet %d of %d. Print at 100 %%, without fitting to the page.", s.Name, page, total),
-		labels.Layout + ".",
+		"Design: " + labels.Layout + ".",
 	}
 	if s.Note != "" {
 		said = append(said, "Note: "+s.Note+".")
