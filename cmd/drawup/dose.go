@@ -87,7 +87,11 @@ func doseAmount(r *request, dose quantity.Dose) (quantity.Amount, string, error)
 }
 
 func tellDose(w io.Writer, d *doseDocument) {
-	fmt.Fprintf(w, "give %s\n", shown(d.Volume))
+	if d.Reading != nil {
+		fmt.Fprintf(w, "give %s\n", shown(d.Volume))
+	} else {
+		fmt.Fprintf(w, "%s: %s\n", shown(d.Volume), notMeasured)
+	}
 	line(w, "amount", shown(d.Amount))
 	line(w, "concentration", shown(d.Concentration))
 	if d.Reading != nil {

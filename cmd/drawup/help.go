@@ -133,7 +133,7 @@ func overview() string {
 	return b.String()
 }
 
-// flagsOf is the flags of the commands of this file's kind, by name.
+// flagsOf is the flags and an example of a quick sum; false for other commands.
 func flagsOf(name string) ([]flagSpec, string, bool) {
 	switch name {
 	case "mix":

@@ -165,8 +165,8 @@ func TestExportedNamesAreExplained(t *testing.T) {
 }
 
 // unexplained lists exported names without a comment. Runs of one-line
-// functions under one comment, with no blank line between, count as a group, and so do methods that every
-// error, stringer and JSON type has.
+// functions under one comment, with no blank line between, count as a group, and so do Error,
+// String and Unwrap; methods of hidden types need none.
 func unexplained(set *token.FileSet, f *ast.File) []string {
 	var out []string
 	line := func(p token.Pos) int { return set.Position(p).Line }
@@ -174,7 +174,7 @@ func unexplained(set *token.FileSet, f *ast.File) []string {
 	for _, d := range f.Decls {
 		switch d := d.(type) {
 		case *ast.FuncDecl:
-			if d.Doc != nil || !d.Name.IsExported() || customary(d.Name.Name) {
+			if d.Doc != nil || !d.Name.IsExported() || customary(d.Name.Name) || ofHiddenType(d) {
 				commented = line(d.End())
 				continue
 			}
@@ -200,6 +200,19 @@ func unexplained(set *token.FileSet, f *ast.File) []string {
 
 func customary(name string) bool {
 	return slices.Contains([]string{"Error", "String", "Unwrap"}, name)
+}
+
+// ofHiddenType reports a method whose type is not exported.
+func ofHiddenType(d *ast.FuncDecl) bool {
+	if d.Recv == nil || len(d.Recv.List) != 1 {
+		return false
+	}
+	typ := d.Recv.List[0].Type
+	if star, ok := typ.(*ast.StarExpr); ok {
+		typ = star.X
+	}
+	name, ok := typ.(*ast.Ident)
+	return ok && !name.IsExported()
 }
 
 func unexplainedSpecs(d *ast.GenDecl) []string {

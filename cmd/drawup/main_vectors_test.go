@@ -125,6 +125,9 @@ func checkVector(t *testing.T, v vector) {
 		if got.exact.Cmp(api) != 0 {
 			t.Errorf("the command gives %s, the packages %s", got.exact.RatString(), api.RatString())
 		}
+		if _, decimals, _ := strings.Cut(strings.Fields(v.answer)[0], "."); v.kind == "rate" && v.agrees == "yes" && len(decimals) == 1 {
+			checkPump(t, v, got.doc)
+		}
 		if v.agrees == "nominal" && !holdsCaution(got.doc, "bag-fill-unknown") {
 			t.Error("the figures differ and no caution says so")
 		}
@@ -137,6 +140,21 @@ func checkVector(t *testing.T, v vector) {
 		t.Errorf("got %s %s, want %s (%s)", got.FloatString(8), unit, v.recomputed, v.source)
 	}
 	checkPublished(t, v, api)
+}
+
+// checkPump wants the published rate, which has one decimal, as the rate that a
+// pump with a step of 0.1 mL/h is set to.
+func checkPump(t *testing.T, v vector, doc map[string]any) {
+	t.Helper()
+	q, ok := doc["pump_rate"].(map[string]any)
+	if !ok {
+		t.Fatal("no pump_rate")
+	}
+	got, _ := new(big.Rat).SetString(q["exact"].(string))
+	want, _ := new(big.Rat).SetString(strings.Fields(v.answer)[0])
+	if got == nil || got.Cmp(want) != 0 {
+		t.Errorf("pump rate: got %v, want %s", q["exact"], v.answer)
+	}
 }
 
 // checkPublished compares with the published answer as the column agrees says.

@@ -233,9 +233,9 @@ func (m *mixture) closePowder(r *request) error {
 	case add && displaced:
 		m.volume = m.diluent.Plus(m.displaced)
 	case final && displaced:
-		m.diluent, err = m.volume.Minus(m.displaced)
+		m.diluent, err = m.rest(r, m.displaced)
 	case final && add:
-		m.displaced, err = m.volume.Minus(m.diluent)
+		m.displaced, err = m.rest(r, m.diluent)
 	case final && r.given("final"):
 	default:
 		return refusal.Reason{
@@ -245,6 +245,20 @@ func (m *mixture) closePowder(r *request) error {
 		}
 	}
 	return err
+}
+
+// rest is what the final volume leaves beside part.
+func (m *mixture) rest(r *request, part quantity.Volume) (quantity.Volume, error) {
+	left, err := m.volume.Minus(part)
+	if err != nil {
+		return left, refusal.Reason{
+			Code: refusal.ContradictoryAmounts, Severity: refusal.Refuse, Field: "--final", Rule: "R7",
+			Got: r.style.Volume(m.volume), Want: "at least " + r.style.Volume(part),
+			Message: fmt.Sprintf("%s alone is more than the volume after mixing, %s", r.style.Volume(part), r.style.Volume(m.volume)),
+			Remedy:  "check the volumes, and the concentration if one is given",
+		}
+	}
+	return left, nil
 }
 
 func workMix(r *request, m mixture, doc *mixDocument) {

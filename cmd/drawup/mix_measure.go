@@ -16,6 +16,9 @@ const (
 	withinPercent  = 5 // common practice, no source
 )
 
+// notMeasured marks a volume that the cautions below speak of.
+const notMeasured = "no single stocked syringe measures it"
+
 // A readingJSON is how a stocked barrel measures a volume.
 type readingJSON struct {
 	Barrel *quantityJSON `json:"barrel"`

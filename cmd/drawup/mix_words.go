@@ -63,17 +63,24 @@ func mixWorking(r *request, m mixture, d *mixDocument) []string {
 
 // act is what to do, in one line, for each method.
 func (d *mixDocument) act() string {
+	drug := ""
+	if d.DrugVolume != nil {
+		drug = shown(d.DrugVolume)
+		if d.DrugReading == nil {
+			drug += " (" + notMeasured + ")"
+		}
+	}
 	switch d.Method {
 	case methodNeat:
-		return fmt.Sprintf("draw %s, add nothing", shown(d.DrugVolume))
+		return fmt.Sprintf("draw %s, add nothing", drug)
 	case methodMakeUp:
-		return fmt.Sprintf("draw %s of drug, make up to %s with diluent (%s)", shown(d.DrugVolume), shown(d.FinalVolume), shown(d.DiluentVolume))
+		return fmt.Sprintf("draw %s of drug, make up to %s with diluent (%s)", drug, shown(d.FinalVolume), shown(d.DiluentVolume))
 	case methodAdd:
-		return fmt.Sprintf("draw %s of drug, add %s of diluent", shown(d.DrugVolume), shown(d.DiluentVolume))
+		return fmt.Sprintf("draw %s of drug, add %s of diluent", drug, shown(d.DiluentVolume))
 	case methodAddTo:
-		return fmt.Sprintf("add %s of drug to the %s in the bag: %s", shown(d.DrugVolume), shown(d.DiluentVolume), shown(d.FinalVolume))
+		return fmt.Sprintf("add %s of drug to the %s in the bag: %s", drug, shown(d.DiluentVolume), shown(d.FinalVolume))
 	case methodReplace:
-		return fmt.Sprintf("withdraw %s from the bag (%s stays), then add %s of drug", shown(d.DrugVolume), shown(d.DiluentVolume), shown(d.DrugVolume))
+		return fmt.Sprintf("withdraw %s from the bag (%s stays), then add %s of drug", shown(d.DrugVolume), shown(d.DiluentVolume), drug)
 	case methodPowder:
 		if d.DiluentVolume == nil {
 			return fmt.Sprintf("mix the powder to %s", shown(d.FinalVolume))

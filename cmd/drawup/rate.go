@@ -273,7 +273,7 @@ func rateWorking(r *request, s rateSum, doc *rateDocument) []string {
 
 func tellRate(w io.Writer, d *rateDocument, fromFlow bool) {
 	if fromFlow {
-		fmt.Fprintf(w, "%s\n", d.DoseRate.Printed)
+		fmt.Fprintf(w, "%s\n", shown(d.DoseRate))
 	} else {
 		fmt.Fprintf(w, "set the pump to %s\n", d.PumpRate.Printed)
 	}
