@@ -51,8 +51,8 @@ fraction such as 28/3.
 `
 
 const helpExitCodes = `0  made: the result is there
-1  refused: the request was read, and a rule or a limit stands against it
-2  the request cannot be read: a flag, a number or a unit is wrong or missing
+1  refused: a rule, a limit, a number or a unit stands against it
+2  the request cannot be read: a flag is wrong or missing, or a file is not one
 3  the two routes disagree: a fault of the program; nothing may be used
 `
 
@@ -70,6 +70,40 @@ code, message, field, got, want, rule, source and remedy.
 
 The quick sums check no limit of any drug (limits-not-checked). Local policy, the
 pack in the hand and licensed staff decide.
+`
+
+const helpPrepare = `drawup prepare: plan an order: sheets, labels, pump cards, check sheets, plan.json
+  drawup prepare testdata/orders/harbour-morning.toml --out out
+
+  drawup prepare ORDER... [flags]
+
+  --out              out             folder to write to; the current one if left out
+  --leave-out        3,7             numbers of syringes to leave out; the papers say so
+  --at               "2026-12-01 07:30"
+                                     time prepared, in place of the order's
+  --stock            a4-65           stock for syringe labels
+  --infusion-stock   a4-24           stock for infusion labels
+  --labels-used      5               labels already taken from the first sheet
+  --mono                             for a printer without colours
+  --json                             print plan.json in place of the table
+
+Everything is worked and placed before anything is written: a refusal leaves no
+file. With several orders each gets a folder of its own. plan.json is written
+last; a folder without it is not a complete set.
+`
+
+const helpLabel = `drawup label: one label, at the moment its syringe is filled
+  drawup label testdata/orders/harbour-morning.toml --syringe 3 --out label.pdf
+
+  drawup label ORDER --syringe N [flags]
+
+  --syringe          3               number in the table of drawup prepare
+  --out              label.pdf       file to write; label-N.pdf if left out
+  --at               "2026-12-01 07:30"
+                                     time the syringe was filled; now if left out
+  --stock            roll-40x15      stock; the roll that fits if left out
+  --mono                             for a printer without colours
+  --json                             print the plan of this syringe
 `
 
 func runHelp(e env, args []string) int {
@@ -156,6 +190,12 @@ func helpText(name string) (string, bool) {
 		if t.name == name {
 			return t.text, true
 		}
+	}
+	switch name {
+	case "prepare":
+		return helpPrepare, true
+	case "label":
+		return helpLabel, true
 	}
 	flags, example, ok := flagsOf(name)
 	if !ok {

@@ -9,14 +9,11 @@ import (
 )
 
 // unreadable holds the codes that say: the request itself cannot be read. All
-// other refusals concern a request that was understood.
+// other refusals concern a request that was understood, a malformed number
+// included: what is wrong with it, and what was meant, is told.
 func unreadable(c refusal.Code) bool {
 	switch c {
-	case refusal.QuantityMissing, refusal.NumberWithComma, refusal.NumberMalformed, refusal.NumberTooLong,
-		refusal.UnitUnknown, refusal.UnitWrongKind, refusal.QuantityZero, refusal.RatioStrength,
-		refusal.FileUnreadable, refusal.FileEmpty, refusal.FileTooLarge, refusal.FileNotText, refusal.FileSyntax,
-		refusal.KeyUnknown, refusal.KeyRepeated, refusal.KeyMissing, refusal.KeyConflict,
-		refusal.ValueWrongType, refusal.ValueUnknown, refusal.TimeMalformed,
+	case refusal.FileUnreadable, refusal.FileEmpty, refusal.FileTooLarge, refusal.FileNotText, refusal.FileSyntax,
 		refusal.FlagMissing, refusal.FlagConflict, refusal.FlagUnknown:
 		return true
 	}
