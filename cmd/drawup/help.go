@@ -122,13 +122,13 @@ func runHelp(e env, args []string) int {
 			return e.print(text)
 		}
 		r.add(refusal.Reason{
-			Code: refusal.ValueUnknown, Field: "topic", Got: args[0], Want: "a command or a topic",
+			Code: refusal.FlagUnknown, Field: "topic", Got: args[0], Want: "a command or a topic",
 			Message: fmt.Sprintf("got %q, want a command or a topic", args[0]),
 			Remedy:  nearestOr(args[0], helpNames(), "", "type drawup help for the list"),
 		})
 	default:
 		r.add(refusal.Reason{
-			Code: refusal.ValueUnknown, Field: "topic", Got: strings.Join(args, " "), Want: "one topic",
+			Code: refusal.FlagUnknown, Field: "topic", Got: strings.Join(args, " "), Want: "one topic",
 			Message: fmt.Sprintf("got %d topics, want one", len(args)), Remedy: "ask for one at a time",
 		})
 	}

@@ -82,7 +82,7 @@ func unknownCommand(e env, name string, rest []string) int {
 		names = append(names, c.name)
 	}
 	list := refusal.List{{
-		Code: refusal.ValueUnknown, Severity: refusal.Refuse, Field: "command",
+		Code: refusal.FlagUnknown, Severity: refusal.Refuse, Field: "command",
 		Message: fmt.Sprintf("got %q, want a command", name), Got: name, Want: "a command",
 		Remedy: nearestOr(name, names, "", "type drawup help for the list of commands"),
 	}}

@@ -80,7 +80,7 @@ func newRequest(name string, specs []flagSpec, args []string) *request {
 	}
 	for _, extra := range r.flags.Args() {
 		r.add(refusal.Reason{
-			Code: refusal.ValueUnknown, Field: "argument", Got: extra, Want: "flags only",
+			Code: refusal.FlagUnknown, Field: "argument", Got: extra, Want: "flags only",
 			Message: fmt.Sprintf("got %q, want flags only", extra),
 			Remedy:  `put the quantity in quotes and its flag before it: --weight "72 kg"`,
 		})

@@ -62,9 +62,10 @@ func TestExitCodes(t *testing.T) {
 		{refusal.List{reason(refusal.LimitsNotChecked, refusal.Caution)}, exitMade},
 		{refusal.List{reason(refusal.FlagMissing, refusal.Caution)}, exitMade},
 		{refusal.List{reason(refusal.WeightMissing, refusal.Refuse)}, exitRefused},
-		{refusal.List{reason(refusal.WeightMissing, refusal.Refuse), reason(refusal.NumberMalformed, refusal.Refuse)}, exitUnreadable},
-		{refusal.List{reason(refusal.NumberMalformed, refusal.Refuse), reason(refusal.WeightMissing, refusal.Refuse)}, exitUnreadable},
-		{refusal.List{reason(refusal.NumberMalformed, refusal.Refuse), reason(refusal.RoutesDisagree, refusal.Refuse)}, exitDisagree},
+		{refusal.List{reason(refusal.NumberMalformed, refusal.Refuse)}, exitRefused},
+		{refusal.List{reason(refusal.WeightMissing, refusal.Refuse), reason(refusal.FlagUnknown, refusal.Refuse)}, exitUnreadable},
+		{refusal.List{reason(refusal.FileSyntax, refusal.Refuse), reason(refusal.WeightMissing, refusal.Refuse)}, exitUnreadable},
+		{refusal.List{reason(refusal.FileSyntax, refusal.Refuse), reason(refusal.RoutesDisagree, refusal.Refuse)}, exitDisagree},
 	} {
 		if got := exitCode(c.list); got != c.want {
 			t.Errorf("%v: got %d, want %d", c.list.Codes(), got, c.want)
@@ -89,12 +90,12 @@ func TestVoice(t *testing.T) {
 }
 
 // TestFaultCodes holds that every fault of a quantity's text has its code in
-// the catalogue of refusals and counts as unreadable.
+// the catalogue of refusals and is a refusal, not an unreadable request.
 func TestFaultCodes(t *testing.T) {
 	for _, f := range []quantity.Fault{quantity.EmptyText, quantity.CommaNumber, quantity.BadNumber, quantity.UnknownUnit,
 		quantity.WrongUnit, quantity.RatioText, quantity.ZeroOrLess, quantity.TooManyDigit} {
 		r := faultOf("--dose", &quantity.SyntaxError{Got: "x", Want: "y", Why: "z", Code: f})
-		if !unreadable(r.Code) || string(r.Code) != string(f) {
+		if unreadable(r.Code) || string(r.Code) != string(f) {
 			t.Errorf("%s: got code %q, unreadable %v", f, r.Code, unreadable(r.Code))
 		}
 	}

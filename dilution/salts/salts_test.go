@@ -226,3 +226,29 @@ func TestRefusals(t *testing.T) {
 		t.Error("calcium chloride without its water was found")
 	}
 }
+
+// TestPharmacopoeialMasses compares with masses printed by pharmacopoeias and
+// labels, within one in five thousand: older tables use older atomic weights.
+func TestPharmacopoeialMasses(t *testing.T) {
+	for _, c := range []struct{ salt, mass, source string }{
+		{"ketamine hydrochloride", "274.2", "British Pharmacopoeia, Ph. Eur. monograph 1020"},
+		{"morphine sulfate pentahydrate", "758.83", "United States Pharmacopeia 32"},
+		{"atropine sulfate monohydrate", "694.83", "United States Pharmacopeia 32"},
+		{"lidocaine hydrochloride monohydrate", "288.81", "United States Pharmacopeia 35"},
+		{"fentanyl citrate", "528.60", "United States Pharmacopeia 2025"},
+		{"dopamine hydrochloride", "189.64", "US prescribing information, dopamine"},
+		{"phenylephrine hydrochloride", "203.67", "University of Zurich, veterinary drug compendium"},
+		{"potassium dihydrogen phosphate", "136.1", "intensive-care teaching text: 1.361 g in 10 mL is 1 mmol/mL"},
+		{"glucose monohydrate", "198.17", "US product labels"},
+	} {
+		want, _ := new(big.Rat).SetString(c.mass)
+		off := new(big.Rat).Sub(mustFind(t, c.salt).GramsPerMole(), want)
+		if off.Abs(off).Cmp(want.Quo(want, big.NewRat(5000, 1))) > 0 {
+			t.Errorf("%s: got %s, want %s (%s)", c.salt, mustFind(t, c.salt).GramsPerMole().FloatString(3), c.mass, c.source)
+		}
+	}
+	base, err := mustFind(t, "dopamine hydrochloride").ToBase(quantity.AmountOf(big.NewRat(80, 1), quantity.Milligram()))
+	if err != nil || base.Rat().FloatString(1) != "64.6" {
+		t.Errorf("80 mg of dopamine hydrochloride: got %v, %v, want 64.6 mg of base (US prescribing information)", base.Rat(), err)
+	}
+}
