@@ -46,8 +46,9 @@ type Steps struct {
 
 // A Column is one column of a table.
 type Column struct {
-	Head  string
-	Share int // of the width, in parts of the sum of all shares
+	Head   string
+	Share  int  // of the width, in parts of the sum of all shares
+	Strong bool // the column to find at once
 }
 
 // A Row is one row of a table. Syringe is set where a table holds rows of
@@ -73,8 +74,9 @@ type Pair struct {
 
 // Pairs are rows of a word and its value.
 type Pairs struct {
-	List  []Pair
-	Small bool
+	List   []Pair
+	Strong []string // names of the figures to find at once
+	Small  bool
 }
 
 // A BigRow is a number that has to be found at once.

@@ -61,7 +61,7 @@ func listCautions(list dilution.List) []Caution {
 
 // fetchPart is the table of containers, fluids and syringes, one row a syringe.
 func fetchPart(all []scribe) Part {
-	t := Table{Box: true, Columns: []Column{{"No.", 6}, {"Drug", 29}, {"Containers", 42}, {"Fluid", 32}, {"Draw with", 16}, {"Fill", 22}}}
+	t := Table{Box: true, Columns: []Column{{Head: "No.", Share: 6}, {Head: "Drug", Share: 29}, {Head: "Containers", Share: 41}, {Head: "Fluid", Share: 43}, {Head: "Draw with", Share: 15}, {Head: "Fill", Share: 20}}}
 	for _, s := range all {
 		m := s.p.Mixture
 		with := s.say("{" + recheck.DrugBarrel + "}")
@@ -170,7 +170,7 @@ func (s scribe) drawUpPart(list dilution.List, sources *sourceList) Part {
 	blocks := []Block{
 		s.name(s.say(s.concentration()), below, false),
 		Steps{List: s.steps(), Strong: []string{recheck.DrugVolume, recheck.FinalVolume, recheck.PowderAdded}},
-		Pairs{List: s.results()},
+		Pairs{List: s.results(), Strong: []string{recheck.DoseVolume, recheck.UseBy, recheck.StartRate}},
 	}
 	if c := append(s.cautions(list), sources.notes(s)...); len(c) > 0 {
 		blocks = append(blocks, Cautions{c})
@@ -229,7 +229,7 @@ func (s scribe) doseLine() labels.Line {
 
 // wastePart is what is left in the containers, to be discarded.
 func wastePart(all []scribe) Part {
-	t := Table{Columns: []Column{{"No.", 8}, {"Drug", 40}, {"Left over", 24}, {"That is", 28}, {"Discarded by", 38}, {"Witness", 38}}}
+	t := Table{Columns: []Column{{Head: "No.", Share: 8}, {Head: "Drug", Share: 40}, {Head: "Left over", Share: 24}, {Head: "That is", Share: 28}, {Head: "Discarded by", Share: 38}, {Head: "Witness", Share: 38}}}
 	for _, s := range all {
 		if !s.p.Mixture.LeftVolume.Given() || s.p.Mixture.LeftVolume.IsZero() {
 			continue

@@ -34,7 +34,7 @@ func (s scribe) openParts(list dilution.List) []Part {
 
 // compare is the figures in the order of the boxes of the page before.
 func (s scribe) compare() Table {
-	t := Table{Box: true, Columns: []Column{{"tick if the same", 70}, {"preparer's figure", 110}}}
+	t := Table{Box: true, Columns: []Column{{Head: "tick if the same", Share: 70}, {Head: "preparer's figure", Share: 110}}}
 	add := func(key, pattern string) {
 		t.Rows = append(t.Rows, Row{Cells: []labels.Line{labels.Words(key), s.say(pattern)}})
 	}
@@ -99,7 +99,7 @@ func (s scribe) agreement() labels.Line {
 
 // limits are the rows of the formulary that the order was held against.
 func (s scribe) limits(sources *sourceList) Table {
-	t := Table{Columns: []Column{{"limit", 50}, {"figure", 60}, {"from", 70}}}
+	t := Table{Columns: []Column{{Head: "limit", Share: 80}, {Head: "figure", Share: 45}, {Head: "from", Share: 55}}}
 	add := func(what, figure, from string) {
 		t.Rows = append(t.Rows, Row{Cells: []labels.Line{labels.Words(what), labels.Words(figure), labels.Words(from)}})
 	}

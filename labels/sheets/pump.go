@@ -34,10 +34,11 @@ func (s scribe) pumpParts(list dilution.List) []Part {
 	parts := []Part{
 		{n, []Block{s.name(s.say(s.concentration()), holds, true), Big{s.entries()}}},
 		{n, []Block{s.rangeTable()}},
-		{n, []Block{Beside{LeftShare: 50, Left: []Block{s.ladder()}, Right: []Block{s.chart(), s.slips()}}}},
+		{n, []Block{Beside{LeftShare: 60, Left: []Block{s.ladder()}, Right: []Block{s.chart(), s.slips()}}}},
 		{n, []Block{Words{Line: s.say("Started at {prepared} and left unchanged, it is empty at {empty.at}, after {run.time}."), Strong: true}}},
-		{n, []Block{heading("Next syringe: read its label; is the concentration the same?"), Blank{Columns: []Column{{"time", 14}, {"same?", 12}, {"old rate, mL/h", 26}, {"new rate, mL/h", 26}, {"initials", 16}, {"initials", 16}}, Rows: 2}}},
 		{n, []Block{Sign{[]string{"programmed by, time", "checked alone by, time"}}}},
+		{n, []Block{heading("Next syringe: read its label; is the concentration the same?"), Blank{Rows: 4, Columns: []Column{{Head: "time", Share: 16}, {Head: "same?", Share: 14},
+			{Head: "old rate, mL/h", Share: 26}, {Head: "new rate, mL/h", Share: 26}, {Head: "initials", Share: 18}, {Head: "initials", Share: 18}}}}},
 	}
 	if c := s.cautions(list); len(c) > 0 {
 		parts = append(parts, Part{n, []Block{Cautions{c}}})
@@ -88,7 +89,7 @@ func (s scribe) weighed() labels.Line {
 
 // rangeTable is the range to titrate in and the hard limit, in both units.
 func (s scribe) rangeTable() Table {
-	t := Table{Columns: []Column{{"Range", 26}, {"dose rate", 44}, {"pump rate", 30}}}
+	t := Table{Columns: []Column{{Head: "Range", Share: 26}, {Head: "dose rate", Share: 44}, {Head: "pump rate", Share: 30, Strong: true}}}
 	t.Rows = append(t.Rows,
 		Row{Cells: []labels.Line{labels.Words("lowest"), s.say("{low.dose}"), s.say("{low.rate}")}},
 		Row{Cells: []labels.Line{labels.Words("highest"), s.say("{high.dose}"), s.say("{high.rate}")}})
@@ -105,7 +106,7 @@ func (t Table) with(r Row) Table {
 
 // ladder is the table to titrate by.
 func (s scribe) ladder() Table {
-	t := Table{Columns: []Column{{"dose rate", 46}, {"mL/h", 24}, {"gives", 46}}}
+	t := Table{Columns: []Column{{Head: "dose rate", Share: 46}, {Head: "pump rate", Share: 26, Strong: true}, {Head: "gives", Share: 46}}}
 	for i, rung := range s.p.Infusion.Ladder {
 		row := Row{Cells: []labels.Line{s.rung(i, "dose"), s.rung(i, "rate"), s.rung(i, "delivered")}}
 		if n, err := rung.Dose.Cmp(s.p.Infusion.Start.Dose); err == nil && n == 0 {
@@ -122,7 +123,7 @@ func (s scribe) rung(i int, column string) labels.Line {
 
 // slips are readings of the pump that mean a slip.
 func (s scribe) slips() Table {
-	t := Table{Columns: []Column{{"Stop if it shows", 40}, {"likely slip", 60}}}
+	t := Table{Columns: []Column{{Head: "STOP if it shows", Share: 40, Strong: true}, {Head: "likely slip", Share: 60}}}
 	for i := range s.p.Infusion.Slips {
 		t.Rows = append(t.Rows, Row{Cells: []labels.Line{
 			s.say("{" + recheck.Row(recheck.Slip, i+1, "rate") + "}"), s.say("{" + recheck.Row(recheck.Slip, i+1, "kind") + "}")}})

@@ -38,9 +38,7 @@ func (s scribe) working() []labels.Line {
 	add(s.say("strength: {container.amount} in {container.volume} is {strength}"))
 	add(joined(s.say("drug volume: {drug.volume} on the {drug.barrel} barrel in steps of {drug.step}; rounding: "), labels.Words(change(s.p.Mixture.DrugReading.MovedPercent))))
 	add(s.say("containers: {drug.volume} out of {container.volume} each takes {container.count}"))
-	if s.p.Mixture.Method != dilution.Neat {
-		add(s.diluentLine())
-	}
+	add(s.diluentLine())
 	add(s.say("amount: {drug.volume} of {strength} is {amount}"))
 	add(s.say("concentration: {amount} in {final.volume} is {concentration}"))
 	if s.f.Has("substance.amount") {
@@ -53,36 +51,40 @@ func (s scribe) working() []labels.Line {
 	s.rateWorking(add)
 	add(s.say("balance: {container.count} of {container.amount} taken; {amount} in it and {left.amount} ({left.volume}) left over"))
 	add(joined(s.say("interval: plus or minus {interval.percent}, {interval.low} to {interval.high}; "), s.largest()))
-	add(joined(s.say("use by: {prepared} and {use.hours} is {use.by}; "), labels.Words(s.p.UseBy.Won+" ends first ("+s.p.UseBy.Source+")")))
+	add(joined(s.say("use by: {prepared} ({prepared.offset} from UTC) and {use.hours} is {use.by} ({use.by.offset}); "), labels.Words(s.p.UseBy.Won+" ends first ("+s.p.UseBy.Source+")")))
 	return out
 }
 
-// weightLine is the equation behind a weight that was worked out.
+// weightLine is the weight or surface that the order goes by: as typed, or the
+// equation behind it with what it starts from.
 func (s scribe) weightLine() labels.Line {
 	by := body.Kind(0)
-	pattern := ""
 	switch {
 	case s.p.Dose != nil && s.f.Has("dose.weight"):
-		by, pattern = s.p.Dose.By, "{dose.weight}"
+		by = s.p.Dose.By
 	case s.p.Infusion != nil && s.f.Has("rate.weight"):
-		by, pattern = s.p.Infusion.By, "{rate.weight}"
+		by = s.p.Infusion.By
 	}
-	if by.Equation() == "" {
-		return nil
+	line := func(from, used string) labels.Line {
+		return joined(labels.Words(by.Equation()), s.say(from), labels.Words(", is "+exactWeight(s.p.Size, by)), s.say("; used: "+used))
 	}
-	exact := "a root"
-	if by != body.Surface {
-		exact = exactWeight(s.p.Size, by)
+	switch by {
+	case body.Actual:
+		return s.say("weight: {weight.actual}, as typed")
+	case body.Ideal:
+		return line(": {sex}, {height}", "{weight.ideal}")
+	case body.Adjusted:
+		return line(": {weight.actual} against {weight.ideal} ideal ({sex}, {height})", "{weight.adjusted}")
+	case body.Lean:
+		return line(": {sex}, {height}, {weight.actual}", "{weight.lean}")
+	case body.Surface:
+		return joined(labels.Words(by.Equation()), s.say(": {height}, {weight.actual}; the root rounded to {surface}"))
+	case body.None:
 	}
-	from := ""
-	for _, f := range []string{"sex", "height", "weight.actual"} {
-		if s.f.Has(f) && !(by == body.Ideal && f == "weight.actual") && !(by == body.Surface && f == "sex") {
-			from += ", {" + f + "}"
-		}
-	}
-	return joined(labels.Words(by.Equation()), s.say(from), labels.Words(": "+exact), s.say(", used as "+pattern))
+	return nil
 }
 
+// exactWeight is the weight before it was rounded to 0.1 kg.
 func exactWeight(size body.Size, by body.Kind) string {
 	var r *big.Rat
 	switch by {
@@ -115,6 +117,7 @@ func (s scribe) diluentLine() labels.Line {
 	case dilution.MakeUpTo:
 		return s.say("method: {method}; diluent: {final.volume} less {drug.volume} is {diluent.volume}")
 	case dilution.Neat:
+		return s.say("method: {method}; final volume: {final.volume}, nothing added")
 	}
 	return nil
 }

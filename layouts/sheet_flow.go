@@ -1,0 +1,193 @@
+package layouts
+
+import (
+	"fmt"
+
+	"drawup/dilution/refusal"
+	"drawup/labels"
+	"drawup/labels/sheets"
+	"drawup/layouts/ink"
+)
+
+// A slab is a piece of a sheet that is never split over pages. Its marks count
+// from its own top left corner.
+type slab struct {
+	h     ink.Micrometre
+	marks []ink.Mark
+	keep  bool  // stays on the page of the slab after it
+	head  *slab // printed again above it where it opens a page
+}
+
+// at are the marks of the slab with its corner at x, y.
+func (b slab) at(x, y ink.Micrometre) []ink.Mark {
+	out := make([]ink.Mark, len(b.marks))
+	for i, m := range b.marks {
+		out[i] = shifted(m, x, y)
+	}
+	return out
+}
+
+// A format is the measures of one size of paper.
+type format struct {
+	w, h, margin             ink.Micrometre
+	body, small, table, head ink.Micrometre // em sizes
+	gap                      ink.Micrometre // between parts
+}
+
+func formatOf(s sheets.Size) format {
+	if s == sheets.A5 {
+		return format{w: ink.MM(148), h: ink.MM(210), margin: ink.MM(9), body: 3000, small: 2500, table: 2500, head: 4200, gap: 2200}
+	}
+	return format{w: ink.MM(210), h: ink.MM(297), margin: ink.MM(15), body: 3500, small: 2800, table: 3000, head: 5000, gap: 4000}
+}
+
+// A flow fills the pages of one sheet.
+type flow struct {
+	sheet       sheets.Sheet
+	f           format
+	set         setter
+	top, bottom ink.Micrometre
+	y           ink.Micrometre
+	pages       []ink.Page
+	foot        footing
+	refused     refusal.List
+}
+
+func newFlow(s sheets.Sheet) *flow {
+	f := &flow{sheet: s, f: formatOf(s.Size)}
+	f.set = setter{f: f.f, width: f.f.w - 2*f.f.margin, sheet: s, refused: &f.refused}
+	f.foot = newFooting(f.set, s.Foot)
+	f.top = f.f.margin + bold(f.f.head).lead() + 3000
+	f.bottom = f.f.h - f.f.margin - f.foot.h - 1500
+	return f
+}
+
+// run places every part: whole on the rest of the page, else whole on a new
+// page, else slab by slab.
+func (f *flow) run() {
+	f.open()
+	for _, p := range f.sheet.Parts {
+		f.set.syringe = p.Syringe
+		slabs := f.set.part(p)
+		total := heightOf(slabs)
+		if f.y > f.top {
+			f.y += f.f.gap
+		}
+		if f.y+total > f.bottom && total <= f.bottom-f.top && f.y > f.top {
+			f.open()
+		}
+		for i, b := range slabs {
+			f.place(b, slabs[i:])
+		}
+	}
+}
+
+// place sets one slab; with it must fit those that it stays with.
+func (f *flow) place(b slab, rest []slab) {
+	need := b.h
+	for i := 0; i+1 < len(rest) && rest[i].keep; i++ {
+		need += rest[i+1].h
+	}
+	if f.y+need > f.bottom && f.y > f.top {
+		f.open()
+		if b.head != nil {
+			f.put(*b.head)
+		}
+	}
+	if f.y+b.h > f.bottom {
+		f.set.tooLong("a piece of the sheet", "a piece that fits on one page")
+		return
+	}
+	f.put(b)
+}
+
+func (f *flow) put(b slab) {
+	f.pages[len(f.pages)-1].Add(b.at(f.f.margin, f.y)...)
+	f.y += b.h
+}
+
+// open begins a page with the sheet's title.
+func (f *flow) open() {
+	page := ink.Page{W: f.f.w, H: f.f.h}
+	title := bold(f.f.head)
+	text := labels.Words(f.sheet.Title)
+	if len(f.pages) == 0 {
+		page.Bookmark = f.sheet.Bookmark
+	} else {
+		text = labels.Words(f.sheet.Title + ", continued")
+	}
+	m := f.f.margin
+	page.Add(title.marks(m, m, text)...)
+	note := bold(f.f.body)
+	w := note.width(labels.Words(f.sheet.Note))
+	if title.width(text)+w+3000 > f.set.width {
+		f.set.tooLong(f.sheet.Note, "a shorter title")
+	}
+	page.Add(note.marks(f.f.w-m-w, m+title.base()-note.base(), labels.Words(f.sheet.Note))...)
+	page.Add(ink.Rule(m, f.top-2500, f.set.width, 300))
+	f.pages = append(f.pages, page)
+	f.y = f.top
+}
+
+func heightOf(list []slab) ink.Micrometre {
+	var h ink.Micrometre
+	for _, b := range list {
+		h += b.h
+	}
+	return h
+}
+
+// A footing is the foot of every page of a sheet.
+type footing struct {
+	slab slab
+	h    ink.Micrometre
+	f    format
+}
+
+// newFooting sets who, when, from which formulary, and the advice.
+func newFooting(s setter, foot sheets.Foot) footing {
+	h := regular(s.f.small - 200)
+	strong := bold(s.f.small - 200)
+	place := ""
+	if foot.Place != "" {
+		place = ", " + foot.Place
+	}
+	rows := []struct {
+		hand hand
+		text string
+	}{
+		{h, fmt.Sprintf("Made %s by %s%s. Digest %s.", foot.Made, foot.Preparer, place, foot.Digest)},
+		{h, fmt.Sprintf("Formulary: %s, digest %s. State: %s.", foot.Formulary, foot.FormularyDigest, foot.State)},
+		{strong, sheets.Advice},
+	}
+	if foot.Invented {
+		rows = append(rows, struct {
+			hand hand
+			text string
+		}{strong, "INVENTED DEMONSTRATION: no patient, no prescription."})
+	}
+	out := footing{f: s.f}
+	out.slab.marks = []ink.Mark{ink.Rule(0, 0, s.width, 200)}
+	y := ink.Micrometre(700)
+	for i, r := range rows {
+		width := s.width
+		if i == 0 {
+			width -= ink.MM(24) // the page number stands there
+		}
+		for _, row := range s.rows(labels.Words(r.text), &r.hand, width) {
+			out.slab.marks = append(out.slab.marks, r.hand.marks(0, y, row)...)
+			y += r.hand.lead()
+		}
+	}
+	out.h, out.slab.h = y, y
+	return out
+}
+
+// marks is the foot of page n of the file.
+func (t footing) marks(n, of int) []ink.Mark {
+	y := t.f.h - t.f.margin - t.h
+	out := t.slab.at(t.f.margin, y)
+	h := bold(t.f.small)
+	text := labels.Words(fmt.Sprintf("page %d of %d", n, of))
+	return append(out, h.marks(t.f.w-t.f.margin-h.width(text), y+600, text)...)
+}
