@@ -283,9 +283,15 @@ func (w *work) scalar(basis quantity.Basis, by body.Kind) (quantity.BodyWeight, 
 		if by == body.None || by == body.Surface || by == 0 {
 			by = body.Actual
 		}
+		if w.fixed != nil && w.fixed.Weight.Given() {
+			return w.fixed.Weight, quantity.BodySurfaceArea{}, by, nil
+		}
 		weight, err := w.size.Used(by)
 		return weight, quantity.BodySurfaceArea{}, by, err
 	case quantity.PerSquareMetre:
+		if w.fixed != nil && w.fixed.Surface.Given() {
+			return quantity.BodyWeight{}, w.fixed.Surface, body.Surface, nil
+		}
 		s, err := w.size.UsedSurface()
 		return quantity.BodyWeight{}, s, body.Surface, err
 	}
@@ -314,7 +320,7 @@ func (w *work) unlikeWeight(given bool, ordered, row body.Kind, source formulary
 
 // weightNotes adds what there is to say about the weight that was used.
 func (w *work) weightNotes(by body.Kind) {
-	if by == body.None || by == 0 || w.noted[by] {
+	if by == body.None || by == 0 || w.noted[by] || w.fixed != nil {
 		return
 	}
 	if w.noted == nil {

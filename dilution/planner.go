@@ -23,6 +23,7 @@ type work struct {
 	plan    Plan
 	doseOK  bool               // verdict of pickDose
 	noted   map[body.Kind]bool // weights already commented on
+	fixed   *Quick             // a quick sum: its weight goes for every kind
 	reasons refusal.List
 }
 

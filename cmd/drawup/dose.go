@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"io"
 
+	"drawup/dilution"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
 )
@@ -11,7 +12,7 @@ import (
 func doseFlags() []flagSpec {
 	return append([]flagSpec{
 		{"dose", "0.3 mg/kg", "the dose: absolute, per kg or per m²"},
-	}, patientAndMixFlags()...)
+	}, append(patientAndMixFlags(), limitFlags()...)...)
 }
 
 // A doseDocument is the answer of drawup dose. Reading is what a stocked barrel
@@ -65,7 +66,8 @@ func workDose(r *request, dose quantity.Dose, c quantity.Concentration, doc *dos
 	if got, ok := r.measure("volume", volume); ok {
 		doc.Reading = readingOf(r.style, got)
 	}
-	r.noLimits()
+	weight, surface := quickScalar(r)
+	r.checkLimits(dilution.Quick{Concentration: c, Dose: dose, Weight: weight, Surface: surface})
 }
 
 // doseAmount is the absolute dose and the words for what it was multiplied by.

@@ -5,13 +5,14 @@ import (
 	"io"
 	"math/big"
 
+	"drawup/dilution"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
 	"drawup/dilution/syringe"
 )
 
 func mixFlags() []flagSpec {
-	return []flagSpec{
+	return append([]flagSpec{
 		{"amount", "4 mg", "amount of drug in the syringe, with --final"},
 		{"concentration", "80 microgram/mL", "concentration in the syringe, with --final or --powder"},
 		{"final", "50 mL", "volume in the end"},
@@ -24,7 +25,7 @@ func mixFlags() []flagSpec {
 		{"powder", "250 mg", "amount of powder in the vial"},
 		{"add", "4.8 mL", "fluid added to the powder"},
 		{"displacement", "0.2 mL", "volume that the powder itself takes, from its record"},
-	}
+	}, limitFlags()...)
 }
 
 // A mixDocument is the answer of drawup mix.
@@ -285,7 +286,7 @@ func workMix(r *request, m mixture, doc *mixDocument) {
 		}
 	}
 	mixCautions(r, m)
-	r.noLimits()
+	r.checkLimits(dilution.Quick{Concentration: m.conc, Strength: m.strength})
 }
 
 // balanced checks at run time that nothing is lost (rule R6): the parts make

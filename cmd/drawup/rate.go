@@ -7,6 +7,7 @@ import (
 	"math/big"
 	"strings"
 
+	"drawup/dilution"
 	"drawup/dilution/pump"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
@@ -25,7 +26,7 @@ func rateFlags() []flagSpec {
 		{"rate", "5.3 mL/h", "the pump rate; the dose rate is worked"},
 		{"as", "microgram/kg/min", "with --rate: the unit of the dose rate; without it the drug's unit per hour"},
 		{"step", "0.1 mL/h", "the pump's step, 0.1 mL/h unless given"},
-	}, patientAndMixFlags()...)
+	}, append(patientAndMixFlags(), limitFlags()...)...)
 }
 
 func patientAndMixFlags() []flagSpec {
@@ -156,10 +157,15 @@ func readPer(r *request, b quantity.Basis) pump.Per {
 		return pump.PerWeight(weight)
 	case quantity.PerSquareMetre:
 		r.forbid("the dose is per m²", "weight")
-		r.need("surface", "the dose is per m²")
+		if !r.given("surface") && !r.broken {
+			r.add(refusal.Reason{Code: refusal.SurfaceMissing, Field: "--surface", Rule: "R3",
+				Message: "the dose is per m² and no surface area is given", Remedy: r.remedyFor("surface")})
+		}
 		return pump.PerSurface(surface)
 	case quantity.Absolute:
-		r.forbid("the dose is neither per kg nor per m²", "weight", "surface")
+		if !r.given("drug") { // limits per kg need a weight even then
+			r.forbid("the dose is neither per kg nor per m²", "weight", "surface")
+		}
 		return pump.PerNothing()
 	}
 	return pump.Per{}
@@ -188,7 +194,8 @@ func workRate(r *request, s rateSum, doc *rateDocument) {
 	if r.given("dose") {
 		ladder(r, s, doc)
 	}
-	r.noLimits()
+	weight, surface := quickScalar(r)
+	r.checkLimits(dilution.Quick{Infusion: true, Concentration: s.conc, Rate: set.Dose, Weight: weight, Surface: surface})
 }
 
 // rateFault is a fault of setting the pump in words.

@@ -40,6 +40,7 @@ const (
 const (
 	WeightMissing     Code = "weight-missing"
 	WeightImplausible Code = "weight-implausible"
+	SurfaceMissing    Code = "surface-missing"
 	HeightMissing     Code = "height-missing"
 	HeightImplausible Code = "height-implausible"
 	SexMissing        Code = "sex-missing"
@@ -125,6 +126,7 @@ const (
 	TextTooLong      Code = "text-too-long"
 	SyringesLeftOut  Code = "syringes-left-out"
 	LimitsNotChecked Code = "limits-not-checked"
+	QuickCheck       Code = "quick-sum-checked"
 	RoutesDisagree   Code = "routes-disagree"
 	FlagMissing      Code = "flag-missing"
 	FlagConflict     Code = "flags-contradict"

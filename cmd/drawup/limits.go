@@ -1,0 +1,106 @@
+package main
+
+import (
+	"drawup/dilution"
+	"drawup/dilution/body"
+	"drawup/dilution/formulary"
+	"drawup/dilution/quantity"
+	"drawup/dilution/refusal"
+)
+
+// limitFlags are the flags that hold a quick sum against the formulary.
+func limitFlags() []flagSpec {
+	return []flagSpec{
+		{"drug", "etomidate", "hold the sum against the formulary's limits for this drug"},
+		{"use", "bolus", "with --drug: bolus or infusion, where the command leaves it open"},
+		{"indication", "induction", "with --drug: what it is for, where the limits depend on it"},
+		{"age", "54 years", "with --drug: the patient's age, where the limits depend on it"},
+		{"route", "IV", "with --drug: the route, IV unless given"},
+		{"line", "central", "with --drug: peripheral or central, peripheral unless given"},
+		{"fluid", "sodium chloride 0.9 %", "with --drug: the diluent's name"},
+	}
+}
+
+// checkLimits holds q against the formulary when --drug is given, and says
+// that no limits were checked when it is not.
+func (r *request) checkLimits(q dilution.Quick) {
+	if !r.given("drug") {
+		r.forbid("it goes with --drug", "use", "indication", "age", "route", "line", "fluid")
+		r.noLimits()
+		return
+	}
+	q.Drug, q.Indication, q.Route, q.Line, q.Diluent, q.Style = r.texts["drug"].text, r.texts["indication"].text, r.texts["route"].text, r.texts["line"].text, r.texts["fluid"].text, r.style
+	q.Age = read(r, "age", body.ParseAge)
+	r.oneOf("line", "peripheral", "central")
+	if !r.readUse(&q) || r.refused() {
+		return
+	}
+	f, err := formulary.Default()
+	if err != nil {
+		r.add(ourFault(0, err))
+		return
+	}
+	r.faults = append(r.faults, q.Check(f)...)
+	if !r.refused() {
+		r.limitsNote(q, f)
+	}
+}
+
+// readUse settles bolus or infusion: a dose rate is an infusion, a dose a
+// bolus; a mixture says which.
+func (r *request) readUse(q *dilution.Quick) bool {
+	if !r.given("use") {
+		return true
+	}
+	if !r.oneOf("use", "bolus", "infusion") {
+		return false
+	}
+	infusion := r.texts["use"].text == "infusion"
+	if (q.Dose.Given() && infusion) || (q.Rate.Given() && !infusion) {
+		r.add(refusal.Reason{Code: refusal.FlagConflict, Field: "--use", Got: r.texts["use"].text, Want: "the use that the command is for",
+			Message: "--use contradicts the command: a dose is a bolus, a dose rate an infusion", Remedy: "leave --use out"})
+		return false
+	}
+	q.Infusion = infusion
+	return true
+}
+
+// oneOf refuses a text that is not one of the words.
+func (r *request) oneOf(name string, words ...string) bool {
+	if !r.given(name) {
+		return true
+	}
+	for _, w := range words {
+		if r.texts[name].text == w {
+			return true
+		}
+	}
+	r.add(refusal.Reason{Code: refusal.ValueUnknown, Field: "--" + name, Got: r.texts[name].text, Want: words[0] + " or " + words[1], Rule: "R10",
+		Message: "--" + name + ": got " + r.texts[name].text + ", want " + words[0] + " or " + words[1], Remedy: "write one of the two"})
+	return false
+}
+
+// limitsNote says what was checked, and what a quick sum cannot know.
+func (r *request) limitsNote(q dilution.Quick, f *formulary.Formulary) {
+	words := "checked against the " + f.State()
+	if q.Weight.Given() || q.Surface.Given() {
+		words += "; the weight or surface given is taken as the one that the limits go by"
+	}
+	if !q.Dose.Given() && !q.Rate.Given() {
+		words += "; its concentration was checked, no dose"
+	}
+	r.caution(refusal.Reason{Code: refusal.QuickCheck, Field: "--drug", Got: q.Drug, Rule: "R13", Message: words, Remedy: "an order file checks presentation, diluent, weight and stability as well"})
+}
+
+// quickScalar is the weight and the surface that were typed.
+func quickScalar(r *request) (quantity.BodyWeight, quantity.BodySurfaceArea) {
+	var w quantity.BodyWeight
+	var s quantity.BodySurfaceArea
+	if r.given("weight") {
+		w = read(r, "weight", quantity.ParseBodyWeight)
+	}
+	if r.given("surface") {
+		s = read(r, "surface", quantity.ParseSurface)
+	}
+	return w, s
+}
