@@ -164,13 +164,23 @@ func (s Style) ConcentrationIn(c Concentration, u Unit) string {
 	return text + " " + s.word(u, y) + "/mL"
 }
 
-// Volume is v in mL, exact when it has at most four significant digits.
+// Volume is v in mL. What a scale or a pump can show, two decimals or fewer,
+// is printed exactly; anything else by the SHORT rule.
 func (s Style) Volume(v Volume) string {
 	if !v.Given() {
 		return ""
 	}
-	_, text, _ := s.short(v.x)
-	return text + " mL"
+	return s.shown(v.x) + " mL"
+}
+
+// shown is x exactly when two decimals are enough, else by the SHORT rule.
+func (s Style) shown(x exact) string {
+	if places, ok := x.places(); ok && places <= 2 {
+		text, _ := x.decimal()
+		return s.group(text)
+	}
+	_, text, _ := s.short(x)
+	return text
 }
 
 // Dose is d in its own unit.
@@ -201,13 +211,12 @@ func (s Style) DoseRate(d DoseRate) string {
 	return text + " " + s.word(d.unit, y) + basisTail(d.basis) + "/" + d.period.String()
 }
 
-// FlowRate is f in mL/h, by the SHORT rule.
+// FlowRate is f in mL/h, written as a volume is.
 func (s Style) FlowRate(f FlowRate) string {
 	if !f.Given() {
 		return ""
 	}
-	_, text, _ := s.short(f.x)
-	return text + " mL/h"
+	return s.shown(f.x) + " mL/h"
 }
 
 // BodyWeight is w in kg.

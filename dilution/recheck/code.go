@@ -8,16 +8,24 @@ import (
 // code takes the barcode's words apart from the left and holds every part
 // against the figure that it repeats.
 func code(c *check, _ int, text string) *objection {
-	for _, name := range []string{ATC, UseBy, Serial, Concentration} {
+	for _, name := range []string{UseBy, Serial, Concentration} {
 		if !c.has(name) {
 			return object("", "needs "+name+", which is not printed")
 		}
+	}
+	drug := c.texts[ATC]
+	if drug == "" {
+		known, problem := c.record.drug("atc")
+		if problem != "" {
+			return object("", "needs atc: it is not printed, and "+problem)
+		}
+		drug = known
 	}
 	until, ok := readMoment(c.texts[UseBy])
 	if !ok {
 		return object("", "needs use.by, which cannot be read")
 	}
-	start := "(91)" + c.texts[ATC] + "(92)" + until.Format("0601021504") + c.texts[Serial] + "(93)"
+	start := "(91)" + drug + "(92)" + until.Format("0601021504") + c.texts[Serial] + "(93)"
 	strength, found := strings.CutPrefix(text, start)
 	if !found {
 		return object(start+"...", "from atc, use.by and serial")
