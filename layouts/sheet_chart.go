@@ -17,7 +17,7 @@ type plot struct {
 // thick within the range, with the start in a diamond and dashed lines to both
 // axes. Figures of the dose stand beside the line, where the field is empty.
 func (s setter) chart(b sheets.Chart) []slab {
-	const high, above, below = 24000, 3600, 7000
+	const high, above, below = 24000, 5400, 7000
 	h := regular(2400).narrow()
 	p := plot{x: 1500, y: above + high, w: s.width - 1500 - 6000, h: high, hand: h}
 	out := slab{h: above + high + below}
@@ -68,7 +68,7 @@ func (p *plot) point(point sheets.Point) []ink.Mark {
 		out = append(out, h.marks(rate.x, rate.y, point.Rate)...)
 		out = append(out, ink.Line{X1: at.X, Y1: p.y, X2: at.X, Y2: p.y + 700, Width: 200, Colour: ink.Black})
 	}
-	if dose, ok := p.beside(at, h.width(point.Dose), h.lead()); ok {
+	if dose, ok := p.beside(at, h.width(point.Dose), h.lead(), point.Start); ok {
 		p.taken = append(p.taken, dose.grown(500))
 		out = append(out, h.marks(dose.x, dose.y, point.Dose)...)
 		out = append(out, ink.Line{X1: p.x, Y1: at.Y, X2: p.x + 900, Y2: at.Y, Width: 200, Colour: ink.Black})
@@ -76,16 +76,16 @@ func (p *plot) point(point sheets.Point) []ink.Mark {
 	return out
 }
 
-// beside is room for a figure at the height of a point: left of the line, else
-// right of it, clear of both.
-func (p plot) beside(at ink.Point, w, h ink.Micrometre) (box, bool) {
+// beside is room for a figure at the height of a point: left of the line, for
+// the start else right of it, clear of both.
+func (p plot) beside(at ink.Point, w, h ink.Micrometre, start bool) (box, bool) {
 	const clear = 2600
 	left := box{p.x + 1400, at.Y - h/2, w, h}
 	if left.right()+clear <= at.X && p.free(left) {
 		return left, true
 	}
 	right := box{at.X + clear, at.Y - h/2, w, h}
-	if right.right() <= p.x+p.w+5000 && right.bottom() < p.y && p.free(right) {
+	if start && right.right() <= p.x+p.w+5000 && right.bottom() < p.y && p.free(right) {
 		return right, true
 	}
 	return box{}, false

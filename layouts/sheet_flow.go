@@ -29,16 +29,16 @@ func (b slab) at(x, y ink.Micrometre) []ink.Mark {
 
 // A format is the measures of one size of paper.
 type format struct {
-	w, h, margin             ink.Micrometre
+	w, h, margin, edge       ink.Micrometre
 	body, small, table, head ink.Micrometre // em sizes
 	gap                      ink.Micrometre // between parts
 }
 
 func formatOf(s sheets.Size) format {
 	if s == sheets.A5 {
-		return format{w: ink.MM(148), h: ink.MM(210), margin: ink.MM(9), body: 3000, small: 2500, table: 2500, head: 4200, gap: 2200}
+		return format{w: ink.MM(148), h: ink.MM(210), margin: ink.MM(9), edge: ink.MM(9), body: 3000, small: 2500, table: 2500, head: 4200, gap: 2200}
 	}
-	return format{w: ink.MM(210), h: ink.MM(297), margin: ink.MM(15), body: 3500, small: 2800, table: 3000, head: 5000, gap: 4000}
+	return format{w: ink.MM(210), h: ink.MM(297), margin: ink.MM(15), edge: ink.MM(11), body: 3500, small: 2800, table: 3000, head: 5000, gap: 4000}
 }
 
 // A flow fills the pages of one sheet.
@@ -57,8 +57,8 @@ func newFlow(s sheets.Sheet) *flow {
 	f := &flow{sheet: s, f: formatOf(s.Size)}
 	f.set = setter{f: f.f, width: f.f.w - 2*f.f.margin, sheet: s, refused: &f.refused}
 	f.foot = newFooting(f.set, s.Foot)
-	f.top = f.f.margin + bold(f.f.head).lead() + 3000
-	f.bottom = f.f.h - f.f.margin - f.foot.h - 1500
+	f.top = f.f.edge + bold(f.f.head).lead() + 3000
+	f.bottom = f.f.h - f.f.edge - f.foot.h - 1500
 	return f
 }
 
@@ -109,21 +109,26 @@ func (f *flow) put(b slab) {
 // open begins a page with the sheet's title.
 func (f *flow) open() {
 	page := ink.Page{W: f.f.w, H: f.f.h}
-	title := bold(f.f.head)
-	text := labels.Words(f.sheet.Title)
+	title, note := bold(f.f.head), bold(f.f.body)
+	text, right := labels.Words(f.sheet.Title), labels.Words(f.sheet.Note)
 	if len(f.pages) == 0 {
 		page.Bookmark = f.sheet.Bookmark
 	} else {
 		text = labels.Words(f.sheet.Title + ", continued")
+		if f.sheet.Of != "" {
+			right = labels.Words(f.sheet.Of)
+		}
 	}
 	m := f.f.margin
-	page.Add(title.marks(m, m, text)...)
-	note := bold(f.f.body)
-	w := note.width(labels.Words(f.sheet.Note))
-	if title.width(text)+w+3000 > f.set.width {
-		f.set.tooLong(f.sheet.Note, "a shorter title")
+	page.Add(title.marks(m, f.f.edge, text)...)
+	room := f.set.width - title.width(text) - 3000
+	if note.width(right) > room {
+		note = note.narrow()
 	}
-	page.Add(note.marks(f.f.w-m-w, m+title.base()-note.base(), labels.Words(f.sheet.Note))...)
+	if note.width(right) > room {
+		f.set.tooLong(right.Text(), "words that fit beside the title of the sheet")
+	}
+	page.Add(note.marks(f.f.w-m-note.width(right), f.f.edge+title.base()-note.base(), right)...)
 	page.Add(ink.Rule(m, f.top-2500, f.set.width, 300))
 	f.pages = append(f.pages, page)
 	f.y = f.top
@@ -185,7 +190,7 @@ func newFooting(s setter, foot sheets.Foot) footing {
 
 // marks is the foot of page n of the file.
 func (t footing) marks(n, of int) []ink.Mark {
-	y := t.f.h - t.f.margin - t.h
+	y := t.f.h - t.f.edge - t.h
 	out := t.slab.at(t.f.margin, y)
 	h := bold(t.f.small)
 	text := labels.Words(fmt.Sprintf("page %d of %d", n, of))

@@ -155,7 +155,7 @@ func (s setter) big(b sheets.Big) []slab {
 }
 
 func (s setter) bigRow(r sheets.BigRow) slab {
-	size, pad := ink.Micrometre(4600), ink.Micrometre(200)
+	size, pad := ink.Micrometre(5000), ink.Micrometre(350)
 	if r.Most {
 		size, pad = 10000, 700
 	}
@@ -175,7 +175,7 @@ func (s setter) bigRow(r sheets.BigRow) slab {
 	}
 	if r.Most {
 		out.marks = append(out.marks, ink.Outlined(400, 0, s.width-800, h, 800, ink.Black))
-		return out
+		return slab{h: h + 1500, marks: out.at(0, 1200)}
 	}
 	out.marks = append(out.marks, ink.Rule(0, h, s.width, 80))
 	return out

@@ -15,12 +15,11 @@ import (
 func CheckSheets(list dilution.List, facts []labels.Facts, m labels.Making) []Sheet {
 	var out []Sheet
 	for _, s := range scribesOf(list, facts) {
-		name := labels.Capital(s.drug())
 		out = append(out,
-			Sheet{Paper: PaperCheck, Size: A4, Title: "Check sheet: the second person", Note: fmt.Sprintf("syringe %d", s.p.Number),
-				Bookmark: fmt.Sprintf("%d %s, second person", s.p.Number, name), Syringe: s.p.Number, Foot: footOf(m), Parts: s.blindParts()},
-			Sheet{Paper: PaperCheck, Size: A4, Title: "Check sheet: the preparer's figures", Note: "open only after the page before is filled in",
-				Bookmark: fmt.Sprintf("%d %s, preparer", s.p.Number, name), Syringe: s.p.Number, Foot: footOf(m), Parts: s.openParts(list)})
+			Sheet{Paper: PaperCheck, Size: A4, Title: "Check sheet: the second person", Note: fmt.Sprintf("syringe %d", s.p.Number), Of: s.of(),
+				Bookmark: s.of() + ", second person", Syringe: s.p.Number, Foot: footOf(m), Parts: s.blindParts()},
+			Sheet{Paper: PaperCheck, Size: A4, Title: "Check sheet: the preparer's figures", Note: "open only after the page before is filled in", Of: s.of(),
+				Bookmark: s.of() + ", preparer", Syringe: s.p.Number, Foot: footOf(m), Parts: s.openParts(list)})
 	}
 	return out
 }
@@ -37,9 +36,10 @@ func (s scribe) blindParts() []Part {
 			Right: []Block{heading("The patient, as typed"), Pairs{List: s.body()}, heading("The container, as its label should read"), Pairs{List: s.pack()}}}}},
 		{n, []Block{heading("What you read"), Boxes{s.readBoxes()}}},
 		{n, []Block{heading("What you work out"), Boxes{s.workBoxes()}}},
-		{n, []Block{heading("What you see"), Ticks{s.looks()}}},
-		{n, []Block{heading("Only now open the next page and compare line by line"),
-			Ticks{[]string{"all lines agree", "a line differs: stop, do not give it, and let a third person settle it"}},
+		{n, []Block{Beside{LeftShare: 50,
+			Left: []Block{heading("What you see"), Ticks{s.looks()}},
+			Right: []Block{heading("Only now open the next page"), Words{Line: labels.Words("Compare line by line."), Small: true},
+				Ticks{[]string{"all lines agree", "a line differs: STOP, do not give it, and let a third person settle it"}}}},
 			Sign{[]string{"second person, name", "date and time", "third person, where a line differed"}}}},
 	}
 }
@@ -175,7 +175,7 @@ func (s scribe) looks() []string {
 	if s.p.Presentation.Form == "emulsion" {
 		look = "the content is even and white, nothing has separated"
 	}
-	out := []string{"label and " + s.p.Presentation.Container + " read aloud against each other: drug, concentration, use-by", look,
+	out := []string{"label read aloud against the " + s.p.Presentation.Container + ": drug, concentration, use-by", look,
 		"the label is on the right syringe, and the scale can be read", "the patient on the order is the patient on the label"}
 	if s.p.Infusion != nil {
 		out = append(out, "the pump shows drug, concentration, weight and dose rate of the order")

@@ -166,7 +166,7 @@ func barrels(all []scribe) string {
 
 // drawUpPart is one syringe: head, steps, what results, cautions.
 func (s scribe) drawUpPart(list dilution.List, sources *sourceList) Part {
-	below := joined(labels.Words(s.patient()+"; "), s.say(s.container()))
+	below := joined(labels.Words(s.patient()+"; "+s.p.Route+"; "), s.say(s.container()))
 	blocks := []Block{
 		s.name(s.say(s.concentration()), below, false),
 		Steps{List: s.steps(), Strong: []string{recheck.DrugVolume, recheck.FinalVolume, recheck.PowderAdded}},
@@ -193,6 +193,9 @@ func (s scribe) results() []Pair {
 	}
 	if s.p.Infusion != nil {
 		out = append(out, Pair{"Pump", s.say("start {start.rate}; see the pump card")})
+	}
+	if flags := s.flags(); flags != "" {
+		out = append(out, words("Marked", flags))
 	}
 	return append(out, Pair{"Use by", joined(s.say("{use.by}, after {use.hours}"), labels.Words(": "+s.p.UseBy.Won+" ends first"))})
 }

@@ -1,9 +1,8 @@
 package sheets
 
 import (
-	"fmt"
-
 	"drawup/dilution"
+	"drawup/dilution/body"
 	"drawup/dilution/formulary"
 	"drawup/dilution/recheck"
 	"drawup/labels"
@@ -36,7 +35,7 @@ func (s scribe) openParts(list dilution.List) []Part {
 func (s scribe) compare() Table {
 	t := Table{Box: true, Columns: []Column{{Head: "tick if the same", Share: 70}, {Head: "preparer's figure", Share: 110}}}
 	add := func(key, pattern string) {
-		t.Rows = append(t.Rows, Row{Cells: []labels.Line{labels.Words(key), s.say(pattern)}})
+		t.Rows = append(t.Rows, Row{Strong: true, Cells: []labels.Line{s.say(key), s.say(pattern)}})
 	}
 	add(s.p.Presentation.Container, s.contents())
 	add("containers opened", "{container.count}")
@@ -65,9 +64,6 @@ func (s scribe) compare() Table {
 		add("dose rate it gives", "{start.delivered}; ordered {start.dose}")
 	}
 	add("use by", "{use.by}")
-	for i := range t.Rows {
-		t.Rows[i].Strong = true
-	}
 	return t
 }
 
@@ -99,7 +95,7 @@ func (s scribe) agreement() labels.Line {
 
 // limits are the rows of the formulary that the order was held against.
 func (s scribe) limits(sources *sourceList) Table {
-	t := Table{Columns: []Column{{Head: "limit", Share: 80}, {Head: "figure", Share: 45}, {Head: "from", Share: 55}}}
+	t := Table{Columns: []Column{{Head: "limit", Share: 55}, {Head: "figure", Share: 60}, {Head: "from", Share: 65}}}
 	add := func(what, figure, from string) {
 		t.Rows = append(t.Rows, Row{Cells: []labels.Line{labels.Words(what), labels.Words(figure), labels.Words(from)}})
 	}
@@ -160,44 +156,41 @@ func (s scribe) doseLimits(sources *sourceList, add func(what, figure, from stri
 	if d == nil {
 		return
 	}
-	r := d.Rule
-	row := "dose, " + ruleName(r.For, r.Ages())
-	blank := true
-	for _, x := range limitRows(r) {
-		if x.fig.Given() {
-			add(row+", "+x.name, x.fig.Text, sources.mark(x.fig.Source, x.fig.Unverified))
-			blank = blank && x.name != "hard highest"
-		}
-	}
-	if blank {
-		add(row+", hard highest", "none stored", "the highest stored figure holds as the limit")
-	}
-	if r.TotalMax.Given() {
-		add(row+", most at once", r.TotalMax.Text, sources.mark(r.TotalMax.Source, r.TotalMax.Unverified))
-	}
-	if r.BySource.Title != "" {
-		add("goes by", r.By.String()+" weight", sources.mark(r.BySource, false))
+	addLimits("dose", d.Rule, sources, add)
+	if m := d.Rule.TotalMax; m.Given() {
+		add("dose, most at once", m.Text, sources.mark(m.Source, m.Unverified))
 	}
 }
 
 func (s scribe) rateLimits(sources *sourceList, add func(what, figure, from string)) {
-	if s.p.Infusion == nil {
-		return
+	if s.p.Infusion != nil {
+		addLimits("dose rate", s.p.Infusion.Rule, sources, add)
 	}
-	r := s.p.Infusion.Rule
-	row := "dose rate, " + ruleName(r.For, r.Ages())
-	blank := true
+}
+
+// addLimits adds the figures of one row of limits; where no hard limit is
+// stored it says so.
+func addLimits[T any](what string, r formulary.Rule[T], sources *sourceList, add func(what, figure, from string)) {
+	by := r.By.String() + " weight"
+	switch r.By {
+	case body.Surface:
+		by = "body surface"
+	case body.None:
+		by = "no weight"
+	case body.Actual, body.Ideal, body.Adjusted, body.Lean:
+	}
+	from := "no source"
+	if r.BySource.Title != "" {
+		from = sources.mark(r.BySource, false)
+	}
+	add(what+" for", ruleName(r.For, r.Ages()), "goes by "+by+", "+from)
 	for _, x := range limitRows(r) {
 		if x.fig.Given() {
-			add(row+", "+x.name, x.fig.Text, sources.mark(x.fig.Source, x.fig.Unverified))
-			blank = blank && x.name != "hard highest"
+			add(what+", "+x.name, x.fig.Text, sources.mark(x.fig.Source, x.fig.Unverified))
 		}
 	}
-	if blank {
-		add(row+", hard highest", "none stored", "the highest stored figure holds as the limit")
-	}
-	if r.BySource.Title != "" {
-		add("goes by", r.By.String()+" weight", sources.mark(r.BySource, false))
+	if !r.HardHigh.Given() {
+		add(what+", hard highest", "none stored", "the highest stored figure is the limit")
 	}
 }
 
@@ -205,5 +198,5 @@ func ruleName(purpose, ages string) string {
 	if ages == "" {
 		return purpose
 	}
-	return fmt.Sprintf("%s, %s", purpose, ages)
+	return purpose + ", " + ages
 }

@@ -19,9 +19,8 @@ func PumpCards(list dilution.List, facts []labels.Facts, m labels.Making) []Shee
 		if s.p.Infusion == nil {
 			continue
 		}
-		name := labels.Capital(s.drug())
-		out = append(out, Sheet{Paper: PaperPump, Size: A5, Title: "Pump card", Note: fmt.Sprintf("syringe %d", s.p.Number),
-			Bookmark: fmt.Sprintf("%d %s", s.p.Number, name), Syringe: s.p.Number, Foot: footOf(m), Parts: s.pumpParts(list)})
+		out = append(out, Sheet{Paper: PaperPump, Size: A5, Title: "Pump card", Note: fmt.Sprintf("syringe %d", s.p.Number), Of: s.of(),
+			Bookmark: s.of(), Syringe: s.p.Number, Foot: footOf(m), Parts: s.pumpParts(list)})
 	}
 	return out
 }
@@ -30,18 +29,27 @@ func PumpCards(list dilution.List, facts []labels.Facts, m labels.Making) []Shee
 // end of the syringe, the next syringe, who did it.
 func (s scribe) pumpParts(list dilution.List) []Part {
 	n := s.p.Number
+	var sources sourceList
 	holds := joined(s.say("{amount} in {final.volume}"), labels.Words(s.inDiluent()+"; "+s.patient()))
 	parts := []Part{
-		{n, []Block{s.name(s.say(s.concentration()), holds, true), Big{s.entries()}}},
+		{n, []Block{s.name(nil, holds, true), Big{s.entries()}}},
 		{n, []Block{s.rangeTable()}},
 		{n, []Block{Beside{LeftShare: 60, Left: []Block{s.ladder()}, Right: []Block{s.chart(), s.slips()}}}},
-		{n, []Block{Words{Line: s.say("Started at {prepared} and left unchanged, it is empty at {empty.at}, after {run.time}."), Strong: true}}},
+		{n, []Block{Pairs{Strong: []string{recheck.EmptyAt, recheck.UseBy}, List: []Pair{
+			{"Empty", s.say("{empty.at}, after {run.time}, if started at {prepared} and left unchanged")},
+			{"Use by", s.say("{use.by}: change it then, empty or not")}}}}},
 		{n, []Block{Sign{[]string{"programmed by, time", "checked alone by, time"}}}},
-		{n, []Block{heading("Next syringe: read its label; is the concentration the same?"), Blank{Rows: 4, Columns: []Column{{Head: "time", Share: 16}, {Head: "same?", Share: 14},
+		{n, []Block{heading("Next syringe: read its label; is the concentration the same?"), Blank{Rows: 6, Columns: []Column{{Head: "time", Share: 16}, {Head: "same?", Share: 14},
 			{Head: "old rate, mL/h", Share: 26}, {Head: "new rate, mL/h", Share: 26}, {Head: "initials", Share: 18}, {Head: "initials", Share: 18}}}}},
 	}
-	if c := s.cautions(list); len(c) > 0 {
+	if flags := s.flags(); flags != "" {
+		parts = append(parts, Part{n, []Block{Pairs{List: []Pair{words("Marked", flags)}}}})
+	}
+	if c := append(s.cautions(list), sources.notes(s)...); len(c) > 0 {
 		parts = append(parts, Part{n, []Block{Cautions{c}}})
+	}
+	if p := sources.part(n); len(p.Blocks) > 0 {
+		parts = append(parts, p)
 	}
 	return parts
 }
@@ -104,10 +112,14 @@ func (t Table) with(r Row) Table {
 	return t
 }
 
-// ladder is the table to titrate by.
+// ladder is the table to titrate by. A rung whose rounded rate passes an end
+// of the range is left out: the ends stand in the range, rounded inwards.
 func (s scribe) ladder() Table {
 	t := Table{Columns: []Column{{Head: "dose rate", Share: 46}, {Head: "pump rate", Share: 26, Strong: true}, {Head: "gives", Share: 46}}}
 	for i, rung := range s.p.Infusion.Ladder {
+		if !s.inRange(rung) {
+			continue
+		}
 		row := Row{Cells: []labels.Line{s.rung(i, "dose"), s.rung(i, "rate"), s.rung(i, "delivered")}}
 		if n, err := rung.Dose.Cmp(s.p.Infusion.Start.Dose); err == nil && n == 0 {
 			row.Strong = true
@@ -115,6 +127,12 @@ func (s scribe) ladder() Table {
 		t.Rows = append(t.Rows, row)
 	}
 	return t
+}
+
+// inRange reports that the rounded rate lies within the range.
+func (s scribe) inRange(x pump.Setting) bool {
+	i := s.p.Infusion
+	return x.Rate.Rat().Cmp(i.Low.Rate.Rat()) >= 0 && x.Rate.Rat().Cmp(i.High.Rate.Rat()) <= 0
 }
 
 func (s scribe) rung(i int, column string) labels.Line {
@@ -132,21 +150,18 @@ func (s scribe) slips() Table {
 }
 
 // chart is the straight line of dose rate against pump rate; its ticks are the
-// figures of the ladder and of the start.
+// figures of the start, of the upper end and of the ladder.
 func (s scribe) chart() Chart {
 	part := s.p.Infusion
-	c := Chart{XWord: "pump rate", YWord: "dose rate"}
-	top := part.High
-	if n := len(part.Ladder); n > 0 {
-		if last := part.Ladder[n-1]; last.Exact.Rat().Cmp(top.Exact.Rat()) > 0 {
-			top = last
-		}
-	}
-	at := func(x pump.Setting) int { return share(x.Exact.Rat(), top.Exact.Rat()) }
-	c.Low, c.High = at(part.Low), at(part.High)
-	c.Points = append(c.Points, Point{At: at(part.Start), Dose: s.say("{start.dose}"), Rate: s.say("{start.rate}"), Start: true})
+	c := Chart{XWord: "pump rate", YWord: "dose rate", High: 10000}
+	at := func(x pump.Setting) int { return share(x.Exact.Rat(), part.High.Exact.Rat()) }
+	c.Low = at(part.Low)
+	c.Points = append(c.Points, Point{At: at(part.Start), Dose: s.say("{start.dose}"), Rate: s.say("{start.rate}"), Start: true},
+		Point{At: at(part.High), Dose: s.say("{high.dose}"), Rate: s.say("{high.rate}")})
 	for i := len(part.Ladder) - 1; i >= 0; i-- {
-		c.Points = append(c.Points, Point{At: at(part.Ladder[i]), Dose: s.rung(i, "dose"), Rate: s.rung(i, "rate")})
+		if s.inRange(part.Ladder[i]) {
+			c.Points = append(c.Points, Point{At: at(part.Ladder[i]), Dose: s.rung(i, "dose"), Rate: s.rung(i, "rate")})
+		}
 	}
 	return c
 }

@@ -99,6 +99,12 @@ func (s scribe) name(conc labels.Line, below labels.Line, large bool) Name {
 	return Name{Number: s.p.Number, Drug: drug, Class: class, Concentration: conc, Below: below, Large: large}
 }
 
+// of names the syringe on pages that continue and in the outline.
+func (s scribe) of() string { return fmt.Sprintf("%d %s", s.p.Number, labels.Capital(s.drug())) }
+
+// flags are the marks that the formulary's record gives the drug.
+func (s scribe) flags() string { return strings.Join(s.p.Drug.Flags, ", ") }
+
 // concentration is the pattern of what stands on the label, per mL.
 func (s scribe) concentration() string {
 	if s.f.Has("second.concentration") {

@@ -34,6 +34,7 @@ type Sheet struct {
 	Size     Size
 	Title    string // printed at the head of each of its pages
 	Note     string // printed beside the title, "open only after …"
+	Of       string // printed instead of it on pages that continue, "7 Noradrenaline"
 	Bookmark string // in the outline of the file
 	Syringe  int    // number in making order; 0 for several
 	Parts    []Part
@@ -112,7 +113,7 @@ func (s Sheet) walk(visit func(syringe int, c labels.Cell)) {
 
 // Text is every line of the sheet in reading order, empty ones left out.
 func (s Sheet) Text() []string {
-	out := []string{s.Title, s.Note}
+	out := []string{s.Title, s.Note, s.Of}
 	for _, p := range s.Parts {
 		for _, b := range p.Blocks {
 			for _, o := range b.Lines() {

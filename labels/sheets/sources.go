@@ -4,6 +4,7 @@ import (
 	"fmt"
 
 	"drawup/dilution/formulary"
+	"drawup/labels"
 )
 
 // A sourceList numbers the sources that a sheet names, so that a sentence
@@ -60,24 +61,29 @@ func (l *sourceList) part(syringe int) Part {
 	if len(l.list) == 0 {
 		return Part{}
 	}
-	pairs := Pairs{Small: true}
+	var left, right Pairs
+	left.Small, right.Small = true, true
 	for i, s := range l.list {
-		pairs.List = append(pairs.List, words(fmt.Sprintf("source %d", i+1), s.Title+" ("+grade(s.Grade)+")"))
+		pair := words(fmt.Sprintf("source %d", i+1), s.Title+" ("+grade(s.Grade)+")")
+		if i < (len(l.list)+1)/2 {
+			left.List = append(left.List, pair)
+		} else {
+			right.List = append(right.List, pair)
+		}
 	}
-	return Part{Syringe: syringe, Blocks: []Block{heading("Sources"), pairs}}
+	return Part{Syringe: syringe, Blocks: []Block{
+		heading("Sources"),
+		Beside{LeftShare: 50, Left: []Block{left}, Right: []Block{right}},
+		Words{Line: labels.Words(grades), Small: true},
+	}}
 }
 
-// grade spells the formulary's letter out.
+// grades says what the formulary's letters mean.
+const grades = "Grade A: label, guideline, standard or paper. B: handbook or hospital guide. C: weak. P: common practice, no source."
+
 func grade(g string) string {
-	switch g {
-	case "A":
-		return "grade A: label, guideline, standard or paper"
-	case "B":
-		return "grade B: handbook or hospital guide"
-	case "C":
-		return "grade C: weak"
-	case "P":
-		return "common practice"
+	if g == "" {
+		return "grade not known"
 	}
-	return "grade not known"
+	return "grade " + g
 }
