@@ -1,0 +1,171 @@
+package main
+
+import (
+	"fmt"
+	"math/big"
+	"regexp"
+	"strings"
+	"testing"
+
+	"drawup/dilution"
+	"drawup/dilution/formulary"
+	"drawup/dilution/recheck"
+	"drawup/labels"
+)
+
+const demo = "../../testdata/orders/harbour-morning.toml"
+
+// demoJob is the demonstration list, worked and passed.
+func demoJob(t testing.TB) *job {
+	t.Helper()
+	f, err := formulary.Default()
+	if err != nil {
+		t.Fatal(err)
+	}
+	flags, _ := readPaperFlags("prepare", nil)
+	j, reasons := newJob(demo, f, flags.when(nil), nil)
+	if reasons.Refused() {
+		t.Fatalf("the demonstration list is refused:\n%v", reasons.Refusals())
+	}
+	return j
+}
+
+// figuresOf is every figure of every paper of the i-th syringe.
+func (j *job) figuresOf(i int) []recheck.Figure {
+	figures := j.labels[i].Figures("label")
+	for _, s := range j.allSheets() {
+		figures = append(figures, s.FiguresOf(j.list.Plans[i].Number)...)
+	}
+	return figures
+}
+
+// TestAlteredFigures alters every printed figure of the whole demonstration
+// list, on one paper and on all papers at once, and demands that the second
+// route stops each (rule R17; the issue's list: last digit, ×10, ÷10, ×60, mg
+// for microgram and its like).
+func TestAlteredFigures(t *testing.T) {
+	j := demoJob(t)
+	tried := 0
+	var passed []string
+	for i, p := range j.list.Plans {
+		figures := j.figuresOf(i)
+		if _, err := recheck.Check(labels.Stated(p, figures)); err != nil {
+			t.Fatalf("syringe %d unaltered: %v", p.Number, err)
+		}
+		seen := map[string]bool{}
+		for at, f := range figures {
+			if seen[f.Name] {
+				continue
+			}
+			seen[f.Name] = true
+			for _, text := range alterations(f.Text) {
+				tried += 2
+				if stands(p, figures, func(k int) bool { return k == at }, text) && repeated(figures, f.Name) {
+					passed = append(passed, fmt.Sprintf("syringe %d, one paper: %s %q as %q", p.Number, f.Name, f.Text, text))
+				}
+				if stands(p, figures, func(k int) bool { return figures[k].Name == f.Name }, text) {
+					passed = append(passed, fmt.Sprintf("syringe %d, all papers: %s %q as %q", p.Number, f.Name, f.Text, text))
+				}
+			}
+		}
+	}
+	for _, s := range passed {
+		t.Error("an altered figure passed: " + s)
+	}
+	if tried < 10000 {
+		t.Errorf("only %d alterations were tried", tried)
+	}
+	t.Logf("%d alterations tried, %d passed", tried, len(passed))
+}
+
+// stands reports whether the second route passes the figures with those that
+// pick chooses altered to text.
+func stands(p dilution.Plan, figures []recheck.Figure, pick func(int) bool, text string) bool {
+	changed := append([]recheck.Figure(nil), figures...)
+	for k := range changed {
+		if pick(k) {
+			changed[k].Text = text
+		}
+	}
+	_, err := recheck.Check(labels.Stated(p, changed))
+	return err == nil
+}
+
+func repeated(figures []recheck.Figure, name string) bool {
+	n := 0
+	for _, f := range figures {
+		if f.Name == name {
+			n++
+		}
+	}
+	return n > 1
+}
+
+var firstNumber = regexp.MustCompile(`\d[\d,]*(\.\d+)?`)
+
+// alterations are wrong readings of a printed figure.
+func alterations(text string) []string {
+	var out []string
+	at := firstNumber.FindStringIndex(text)
+	if at != nil {
+		number := text[at[0]:at[1]]
+		for _, n := range wrongNumbers(number) {
+			out = append(out, text[:at[0]]+n+text[at[1]:])
+		}
+	}
+	if strings.HasPrefix(text, "0 ") { // nothing is nothing in any unit
+		return out
+	}
+	for _, swap := range [][2]string{{"mg", "micrograms"}, {"micrograms", "mg"}, {"microgram", "mg"}, {"mg", "g"}, {"units", "mg"}, {"mmol", "mg"},
+		{"/min", "/h"}, {"/h", "/min"}, {"/kg", ""}, {"mL/h", "L/h"}, {" mL", " L"}, {" h", " min"}, {" kg", " g"}, {" cm", " m"},
+		{"make up to", "add to"}, {"neat", "make up to"}, {"lean", "actual"}, {"actual", "lean"}, {"adjusted", "ideal"}, {"male", "female"}, {"Dec", "Nov"}, {"years", "months"}} {
+		if s := strings.Replace(text, swap[0], swap[1], 1); s != text {
+			out = append(out, s)
+		}
+	}
+	return out
+}
+
+// wrongNumbers are the number with its last digit changed, ten times, a tenth,
+// sixty times, a sixtieth and a thousand times, written as paper would.
+func wrongNumbers(number string) []string {
+	bare := strings.ReplaceAll(number, ",", "")
+	r, ok := new(big.Rat).SetString(bare)
+	if !ok {
+		return nil
+	}
+	unit := big.NewRat(1, 1)
+	if _, tail, point := strings.Cut(bare, "."); point {
+		unit.SetFrac(big.NewInt(1), new(big.Int).Exp(big.NewInt(10), big.NewInt(int64(len(tail))), nil))
+	}
+	var out []string
+	for _, v := range []*big.Rat{new(big.Rat).Add(r, unit), new(big.Rat).Sub(r, unit), mul(r, 10, 1), mul(r, 1, 10), mul(r, 60, 1), mul(r, 1, 60), mul(r, 1000, 1)} {
+		if v.Sign() < 0 || v.Cmp(r) == 0 {
+			continue
+		}
+		text := v.FloatString(4)
+		text = strings.TrimSuffix(strings.TrimRight(text, "0"), ".")
+		if len(bare) == 2 && bare[0] == '0' { // a day or an hour, "01"
+			text = fmt.Sprintf("%02s", text)
+		}
+		out = append(out, grouped(text))
+	}
+	return out
+}
+
+func mul(r *big.Rat, a, b int64) *big.Rat { return new(big.Rat).Mul(r, big.NewRat(a, b)) }
+
+func grouped(text string) string {
+	head, tail, point := strings.Cut(text, ".")
+	var b strings.Builder
+	for i, d := range head {
+		if i > 0 && (len(head)-i)%3 == 0 {
+			b.WriteByte(',')
+		}
+		b.WriteRune(d)
+	}
+	if point {
+		return b.String() + "." + tail
+	}
+	return b.String()
+}
