@@ -38,7 +38,7 @@ func formatOf(s sheets.Size) format {
 	if s == sheets.A5 {
 		return format{w: ink.MM(148), h: ink.MM(210), margin: ink.MM(9), edge: ink.MM(9), body: 3000, small: 2500, table: 2500, head: 4200, gap: 2200}
 	}
-	return format{w: ink.MM(210), h: ink.MM(297), margin: ink.MM(15), edge: ink.MM(11), body: 3500, small: 2800, table: 3000, head: 5000, gap: 4000}
+	return format{w: ink.MM(210), h: ink.MM(297), margin: ink.MM(15), edge: ink.MM(11), body: 3500, small: 2800, table: 3000, head: 5000, gap: 3300}
 }
 
 // A flow fills the pages of one sheet.

@@ -127,7 +127,7 @@ func (s setter) steps(b sheets.Steps) []slab {
 	h.act = b.Strong
 	indent := ink.Micrometre(tick + 2000 + 5500)
 	if b.Plain {
-		h, indent = regular(s.f.small+200), 5500
+		h, indent = regular(s.f.small), 5500
 	}
 	for i, l := range b.List {
 		step := s.lines(l, h, indent, s.width-indent)
@@ -153,7 +153,7 @@ func (s setter) steps(b sheets.Steps) []slab {
 func (s setter) pairs(b sheets.Pairs) []slab {
 	size := s.f.body
 	if b.Small {
-		size = s.f.small
+		size = s.f.small - 200
 	}
 	key, value := regular(size), regular(size)
 	value.act = b.Strong

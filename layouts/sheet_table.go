@@ -46,12 +46,16 @@ func (s setter) table(b sheets.Table) []slab {
 	starts, widths := columns(b.Columns, from, s.width)
 	head := s.tableHead(b.Columns, from)
 	out := []slab{head}
+	size, gap := s.f.table, ink.Micrometre(600)
+	if b.Small {
+		size, gap = s.f.small-100, 400
+	}
 	for _, r := range b.Rows {
 		row := slab{head: &head}
 		for i, cell := range r.Cells[:min(len(r.Cells), len(b.Columns))] {
-			h := regular(s.f.table)
+			h := regular(size)
 			if b.Columns[i].Strong || r.Strong && (i > 0 || !b.Box) {
-				h = bold(s.f.table)
+				h = bold(size)
 			}
 			c := s.lines(cell, h, starts[i], widths[i]-1200)
 			row.marks = append(row.marks, c.marks...)
@@ -61,8 +65,8 @@ func (s setter) table(b sheets.Table) []slab {
 			row.h = max(row.h, tick+600)
 			row.marks = append(row.marks, ink.Outlined(200, 350, tick, tick, 250, ink.Black))
 		}
-		row.h += 600
-		row.marks = append(row.marks, ink.Rule(0, row.h-300, s.width, 80))
+		row.h += gap
+		row.marks = append(row.marks, ink.Rule(0, row.h-gap/2, s.width, 80))
 		out = append(out, row)
 	}
 	return out
@@ -130,7 +134,7 @@ func (s setter) ticks(b sheets.Ticks) []slab {
 
 // sign is a line for each person with the word below.
 func (s setter) sign(b sheets.Sign) []slab {
-	const gutter, above = 5000, 8500
+	const gutter, above = 5000, 7000
 	n := ink.Micrometre(max(len(b.Roles), 1))
 	each := (s.width - gutter*(n-1)) / n
 	out := slab{}

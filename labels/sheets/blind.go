@@ -2,6 +2,8 @@ package sheets
 
 import (
 	"fmt"
+	"math/big"
+	"strings"
 
 	"drawup/dilution"
 	"drawup/dilution/body"
@@ -117,7 +119,7 @@ func (s scribe) pack() []Pair {
 
 // readBoxes are what the second person reads off pack and syringe.
 func (s scribe) readBoxes() []Box {
-	amount := s.p.Presentation.Amount.Unit().String()
+	amount := s.unit(s.p.Presentation.Amount.Unit())
 	out := []Box{{Label: "drug name on the container"}, {Label: "strength on it", Unit: amount + " in ____ mL"},
 		{Label: "containers opened", Unit: s.p.Presentation.Container + "s"}, {Label: "lot"}, {Label: "expiry"}}
 	if s.p.Presentation.Powder() {
@@ -132,15 +134,15 @@ func (s scribe) readBoxes() []Box {
 
 // workBoxes are what the second person works out.
 func (s scribe) workBoxes() []Box {
-	amount := s.p.Presentation.Amount.Unit().String()
+	amount := s.unit(s.p.Presentation.Amount.Unit())
 	out := []Box{{Label: "drug volume it takes", Unit: "mL"}, {Label: "amount in it", Unit: amount}, {Label: "concentration", Unit: amount + "/mL"}}
 	if d := s.p.Dose; d != nil {
 		out = append(scalarBox(d.By, d.Surface.Given(), d.Weight.Given()), out...)
-		out = append(out, Box{Label: "one dose, amount", Unit: d.Ordered.Unit().String()}, Box{Label: "one dose, volume", Unit: "mL"})
+		out = append(out, Box{Label: "one dose, amount", Unit: s.unit(d.Ordered.Unit())}, Box{Label: "one dose, volume", Unit: "mL"})
 	}
 	if i := s.p.Infusion; i != nil {
 		out = append(scalarBox(i.By, i.Surface.Given(), i.Weight.Given()), out...)
-		out = append(out, Box{Label: "pump rate for the start", Unit: "mL/h"}, Box{Label: "back: the dose rate it gives", Unit: rateUnit(i.Start.Dose)})
+		out = append(out, Box{Label: "pump rate for the start", Unit: "mL/h"}, Box{Label: "back: the dose rate it gives", Unit: s.rateUnit(i.Start.Dose)})
 	}
 	return append(out, Box{Label: "use by, on the label"})
 }
@@ -156,17 +158,16 @@ func scalarBox(by body.Kind, surface, weight bool) []Box {
 	return nil
 }
 
-// rateUnit is the unit of a dose rate in words.
-func rateUnit(d quantity.DoseRate) string {
-	per := ""
-	switch d.Basis() {
-	case quantity.PerKilogram:
-		per = "/kg"
-	case quantity.PerSquareMetre:
-		per = "/m²"
-	case quantity.Absolute:
-	}
-	return d.Unit().String() + per + "/" + d.Period().String()
+// unit is a unit in the words of the house style, in the plural.
+func (s scribe) unit(u quantity.Unit) string {
+	text := s.p.Style.AmountIn(quantity.AmountOf(big.NewRat(2, 1), u), u)
+	return strings.TrimPrefix(text, "2 ")
+}
+
+// rateUnit is the unit of a dose rate in the words of the house style.
+func (s scribe) rateUnit(d quantity.DoseRate) string {
+	_, unit, _ := strings.Cut(s.p.Style.DoseRate(d), " ")
+	return unit
 }
 
 // looks are what is checked by eye and aloud.

@@ -64,6 +64,7 @@ type Table struct {
 	Columns []Column
 	Rows    []Row
 	Box     bool // a box to tick before every row
+	Small   bool
 }
 
 // A Pair is a word and what it is.

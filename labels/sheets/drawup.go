@@ -2,11 +2,13 @@ package sheets
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 
 	"drawup/dilution"
 	"drawup/dilution/recheck"
 	"drawup/dilution/refusal"
+	"drawup/dilution/syringe"
 	"drawup/labels"
 )
 
@@ -61,7 +63,7 @@ func listCautions(list dilution.List) []Caution {
 
 // fetchPart is the table of containers, fluids and syringes, one row a syringe.
 func fetchPart(all []scribe) Part {
-	t := Table{Box: true, Columns: []Column{{Head: "No.", Share: 6}, {Head: "Drug", Share: 29}, {Head: "Containers", Share: 41}, {Head: "Fluid", Share: 43}, {Head: "Draw with", Share: 15}, {Head: "Fill", Share: 20}}}
+	t := Table{Box: true, Columns: []Column{{Head: "No.", Share: 6}, {Head: "Drug", Share: 26}, {Head: "Containers", Share: 46}, {Head: "Fluid", Share: 43}, {Head: "Draw with", Share: 15}, {Head: "Fill", Share: 20}}}
 	for _, s := range all {
 		m := s.p.Mixture
 		with := s.say("{" + recheck.DrugBarrel + "}")
@@ -132,31 +134,26 @@ func (s scribe) eachPowder() string {
 
 // barrels counts the syringes to lay out by size, the smallest first.
 func barrels(all []scribe) string {
-	type size struct {
-		text string
-		n    int
-	}
-	var sizes []size
-	count := func(text string) {
-		for i := range sizes {
-			if sizes[i].text == text {
-				sizes[i].n++
-				return
-			}
+	var sizes []syringe.Barrel
+	counts := map[string]int{}
+	count := func(b syringe.Barrel) {
+		if !b.Given() {
+			return
 		}
-		if text != "" {
-			sizes = append(sizes, size{text, 1})
+		if counts[b.Nominal().Exact()]++; counts[b.Nominal().Exact()] == 1 {
+			sizes = append(sizes, b)
 		}
 	}
 	for _, s := range all {
-		count(s.f.Text(recheck.FinalBarrel))
+		count(s.p.Mixture.FinalBarrel)
 		if !s.oneSyringe() {
-			count(s.f.Text(recheck.DrugBarrel))
+			count(s.p.Mixture.DrugReading.Barrel)
 		}
 	}
+	slices.SortFunc(sizes, func(a, b syringe.Barrel) int { return a.Nominal().Cmp(b.Nominal()) })
 	var out []string
-	for _, x := range sizes {
-		out = append(out, fmt.Sprintf("%d of %s", x.n, x.text))
+	for _, b := range sizes {
+		out = append(out, fmt.Sprintf("%d of %s mL", counts[b.Nominal().Exact()], b.Nominal().Exact()))
 	}
 	if len(out) == 0 {
 		return ""

@@ -95,7 +95,7 @@ func (s scribe) agreement() labels.Line {
 
 // limits are the rows of the formulary that the order was held against.
 func (s scribe) limits(sources *sourceList) Table {
-	t := Table{Columns: []Column{{Head: "limit", Share: 55}, {Head: "figure", Share: 60}, {Head: "from", Share: 65}}}
+	t := Table{Small: true, Columns: []Column{{Head: "limit", Share: 62}, {Head: "figure", Share: 58}, {Head: "from", Share: 60}}}
 	add := func(what, figure, from string) {
 		t.Rows = append(t.Rows, Row{Cells: []labels.Line{labels.Words(what), labels.Words(figure), labels.Words(from)}})
 	}

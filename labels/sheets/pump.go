@@ -36,10 +36,10 @@ func (s scribe) pumpParts(list dilution.List) []Part {
 		{n, []Block{s.rangeTable()}},
 		{n, []Block{Beside{LeftShare: 60, Left: []Block{s.ladder()}, Right: []Block{s.chart(), s.slips()}}}},
 		{n, []Block{Pairs{Strong: []string{recheck.EmptyAt, recheck.UseBy}, List: []Pair{
-			{"Empty", s.say("{empty.at}, after {run.time}, if started at {prepared} and left unchanged")},
+			{"Empty", s.say("{empty.at}, if started {prepared} at this rate ({run.time})")},
 			{"Use by", s.say("{use.by}: change it then, empty or not")}}}}},
 		{n, []Block{Sign{[]string{"programmed by, time", "checked alone by, time"}}}},
-		{n, []Block{heading("Next syringe: read its label; is the concentration the same?"), Blank{Rows: 6, Columns: []Column{{Head: "time", Share: 16}, {Head: "same?", Share: 14},
+		{n, []Block{heading("Next syringe: read its label; is the concentration the same?"), Blank{Rows: 4, Columns: []Column{{Head: "time", Share: 16}, {Head: "same?", Share: 14},
 			{Head: "old rate, mL/h", Share: 26}, {Head: "new rate, mL/h", Share: 26}, {Head: "initials", Share: 18}, {Head: "initials", Share: 18}}}}},
 	}
 	if flags := s.flags(); flags != "" {
