@@ -13,6 +13,7 @@ type arrangement struct {
 	name    named
 	line    box // reversal line, empty without
 	size    ink.Micrometre
+	fitted  fitted
 	large   ink.Micrometre
 	upper   []bin
 	stated  []stated
@@ -152,7 +153,7 @@ func (a *arrangement) set(l labels.Label, level int, small, large ink.Micrometre
 		}
 	}
 	var ok bool
-	if a.name, ok = d.fitName(l, a.nameTop(a.upper, small), reserve); !ok {
+	if a.name, ok = a.fitted.fit(d, l, a.nameTop(a.upper, small), reserve); !ok {
 		return false
 	}
 	b.top = max(d.middle, a.name.bottom)

@@ -55,6 +55,22 @@ func (d design) fitName(l labels.Label, top, reserve ink.Micrometre) (named, boo
 	return named{}, false
 }
 
+// A fitted remembers the last name that was fitted: most steps of the search
+// for the right size of type leave it where it is.
+type fitted struct {
+	top, reserve ink.Micrometre
+	name         named
+	ok, known    bool
+}
+
+func (f *fitted) fit(d design, l labels.Label, top, reserve ink.Micrometre) (named, bool) {
+	if !f.known || f.top != top || f.reserve != reserve {
+		name, ok := d.fitName(l, top, reserve)
+		*f = fitted{top: top, reserve: reserve, name: name, ok: ok, known: true}
+	}
+	return f.name, f.ok
+}
+
 // tryName sets the name at one size. At the least size descenders may hang
 // into the lower half, as long as the baseline stays in the upper one.
 func (d design) tryName(rows []labels.Line, face ink.Face, capital, top, reserve ink.Micrometre) (named, bool) {

@@ -70,8 +70,9 @@ func Labels[P Proof](list []labels.Label, s Stock, passed []P, opt Options) ([]i
 
 // An arranger is a label that is known to fit its stock.
 type arranger struct {
-	label   labels.Label
-	modules []string
+	label    labels.Label
+	modules  []string
+	arranged arrangement // on a label at 0, 0
 }
 
 // newArranger makes sure that the label fits the stock, and says why not.
@@ -90,23 +91,25 @@ func newArranger(l labels.Label, s Stock, mono bool) (arranger, *refusal.Reason)
 				Got: l.Code.Text, Want: "a code after the GS1 rules"}
 		}
 	}
-	_, why := arrange(l, s.panel(ink.Point{}), s, mono, a.modules)
-	if why != "" && !l.Infusion && len(l.Dose) > 0 {
+	var why string
+	if a.arranged, why = arrange(l, s.panel(ink.Point{}), s, mono, a.modules); why == "" {
+		return a, nil
+	}
+	if !l.Infusion && len(l.Dose) > 0 {
 		a.label.Dose = nil
-		if _, still := arrange(a.label, s.panel(ink.Point{}), s, mono, a.modules); still == "" {
+		var still string
+		if a.arranged, still = arrange(a.label, s.panel(ink.Point{}), s, mono, a.modules); still == "" {
 			return a, &refusal.Reason{Code: refusal.TextTooLong, Severity: refusal.Caution, Syringe: l.Number,
 				Message: fmt.Sprintf("The label of %s has no room for the dose; the draw-up sheet has it.", l.Name), Field: "stock",
 				Got: s.Name, Want: "a larger stock, if the label must show it"}
 		}
 		a.label = l
 	}
-	if why != "" {
-		return a, &refusal.Reason{Code: refusal.LabelTooSmall, Severity: refusal.Refuse, Syringe: l.Number,
-			Message: fmt.Sprintf("The label of %s does not fit stock %s: no room for %s.", l.Name, s.Name, why),
-			Field:   "stock", Got: s.Name, Want: a.larger(s, mono), Rule: "R15",
-			Source: "ISO 26825:2020, 5.4.2 and 5.4.3 for the name", Remedy: a.larger(s, mono)}
-	}
-	return a, nil
+	larger := a.larger(s, mono)
+	return a, &refusal.Reason{Code: refusal.LabelTooSmall, Severity: refusal.Refuse, Syringe: l.Number,
+		Message: fmt.Sprintf("The label of %s does not fit stock %s: no room for %s.", l.Name, s.Name, why),
+		Field:   "stock", Got: s.Name, Want: "a stock that holds every line of the label", Rule: "R15",
+		Source: "ISO 26825:2020, 5.4.2 and 5.4.3 for the name", Remedy: larger}
 }
 
 // larger names the next larger stock that holds the label.
@@ -157,15 +160,42 @@ func pagesOf(list []arranger, s Stock, opt Options) []ink.Page {
 		}
 		panel := s.panel(s.Place(at % per))
 		page := &pages[len(pages)-1]
-		// It fits, or newArranger had refused it; where it lies does not matter.
-		arranged, _ := arrange(a.label, panel, s, opt.Mono, a.modules)
-		page.Add(arranged.draw()...)
+		corner := s.Place(at % per)
+		for _, mark := range a.arranged.draw() {
+			page.Add(moved(mark, corner.X, corner.Y))
+		}
 		if s.Inset > 0 {
 			page.Add(ink.Outlined(panel.x, panel.y, panel.w, panel.h, hairline, ink.Black))
 		}
 		at++
 	}
 	return pages
+}
+
+// moved is the mark further along and down the page.
+func moved(mark ink.Mark, dx, dy ink.Micrometre) ink.Mark {
+	switch m := mark.(type) {
+	case ink.Text:
+		m.X, m.Y = m.X+dx, m.Y+dy
+		return m
+	case ink.Rect:
+		m.X, m.Y = m.X+dx, m.Y+dy
+		return m
+	case ink.Line:
+		m.X1, m.Y1, m.X2, m.Y2 = m.X1+dx, m.Y1+dy, m.X2+dx, m.Y2+dy
+		return m
+	case ink.Polygon:
+		points := make([]ink.Point, len(m.Points))
+		for i, p := range m.Points {
+			points[i] = ink.Point{X: p.X + dx, Y: p.Y + dy}
+		}
+		m.Points = points
+		return m
+	case ink.Symbol:
+		m.X, m.Y = m.X+dx, m.Y+dy
+		return m
+	}
+	return nil // the writer refuses a mark that is none of the five
 }
 
 func bookmark(l labels.Label, s Stock, page, total int) string {
