@@ -177,13 +177,22 @@ func (s scale) soft(v *verdict) {
 	v.say(3, r)
 }
 
-// tooMuch names a likely slip when the value would be right without it.
+// How far above the highest stored figure a value must lie before a slip is
+// named: our own choice. Wide ranges would otherwise turn every larger dose
+// into a "tenfold slip". The value is refused either way.
+const (
+	farTen      = 5
+	farThousand = 50
+)
+
+// tooMuch refuses a value above the highest stored figure. It names a likely
+// slip when the value would be right without it.
 func (s scale) tooMuch() refusal.Reason {
 	switch {
-	case s.wouldFit(1000):
-		return s.reason(refusal.SlipThousand, s.top(), "about a thousand times the stored range; is milligram written for microgram?")
-	case s.wouldFit(10):
-		return s.reason(refusal.SlipTen, s.top(), "about ten times the stored range; is a decimal point wrong?")
+	case s.wouldFit(1000) && s.beyond(farThousand):
+		return s.reason(refusal.SlipThousand, s.top(), "far above the stored range, and a thousandth of it would fit; is milligram written for microgram?")
+	case s.wouldFit(10) && s.beyond(farTen):
+		return s.reason(refusal.SlipTen, s.top(), "far above the stored range, and a tenth of it would fit; is a decimal point wrong?")
 	}
 	r := s.reason(s.codes.aboveHard, s.top(), "more than the highest that the formulary allows")
 	if !s.hardHigh.given {
@@ -200,8 +209,18 @@ func (s scale) wouldFit(n int64) bool {
 	return v.Cmp(s.bottom().value) >= 0 && v.Cmp(s.top().value) <= 0
 }
 
+// beyond reports whether the value is n times the highest stored figure or more.
+func (s scale) beyond(n int64) bool { return s.value.Cmp(times(s.top().value, n)) >= 0 }
+
+// slipUnder names the larger slip downwards when ten times the value is still
+// too little and a thousand times it would fit, or when it is that far off.
 func (s scale) slipUnder(other refusal.Code) refusal.Code {
-	if s.usualLow.given && times(s.value, 500).Cmp(s.usualLow.value) <= 0 {
+	if !s.usualLow.given || times(s.value, 10).Cmp(s.usualLow.value) >= 0 {
+		return other
+	}
+	thousand := times(s.value, 1000)
+	fits := thousand.Cmp(s.bottom().value) >= 0 && thousand.Cmp(s.top().value) <= 0
+	if fits || times(s.value, 500).Cmp(s.usualLow.value) <= 0 {
 		return refusal.SlipThousand
 	}
 	return other

@@ -43,10 +43,11 @@ func NewList(o order.Order, f *formulary.Formulary, at time.Time, leaveOut map[i
 	}
 	broken := brokenSyringes(faults)
 	for _, sy := range o.Syringes {
-		if broken[sy.Number] && !leaveOut[sy.Number] {
+		unread := broken[sy.Number] || unreadable(o.Patients[sy.Patient])
+		if unread && !leaveOut[sy.Number] {
 			continue
 		}
-		p, reasons := newPlan(s, f, o, sy, at, broken[sy.Number])
+		p, reasons := newPlan(s, f, o, sy, at, unread)
 		if leaveOut[sy.Number] {
 			list.LeftOut = append(list.LeftOut, LeftOut{sy.Number, sy.Drug.Value, append(faults.Of(sy.Number), reasons.Refusals()...)})
 			continue
@@ -95,6 +96,14 @@ func brokenSyringes(faults refusal.List) map[int]bool {
 		}
 	}
 	return broken
+}
+
+// unreadable reports that a value of the patient stands in the order and could
+// not be read. The reading refused it; a second reason that calls it missing
+// would mislead.
+func unreadable(p order.Patient) bool {
+	return p.Weight.Given() && !p.Weight.Value.Given() || p.Height.Given() && !p.Height.Value.Given() ||
+		p.Age.Given() && !p.Age.Value.Given() || p.Sex.Given() && p.Sex.Value == 0
 }
 
 // newPlan works one syringe. A syringe whose order could not be read whole is

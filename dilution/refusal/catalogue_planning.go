@@ -40,8 +40,8 @@ func limitEntries() []Entry {
 		warns(RateAboveUsual, Limits, "R10", "The dose rate is above what is usual."),
 		stops(RateBelowHard, Limits, "R11", "The dose rate is below the lowest that may be given."),
 		warns(RateBelowSoft, Limits, "R10", "The dose rate is below what is usual."),
-		stops(SlipThousand, Limits, "R10", "The figure is about a thousand times too large or too small: a unit is wrong."),
-		stops(SlipTen, Limits, "R10", "The figure is about ten times too large or too small: a decimal point is wrong."),
+		stops(SlipThousand, Limits, "R10", "The figure is far outside the limits, as when a unit is written for another."),
+		stops(SlipTen, Limits, "R10", "The figure is outside the limits by a tenfold or more, as when a decimal point slips."),
 		stops(SoftLimitNotSigned, Limits, "R11", "The figure is above the soft limit and nobody has signed for it."),
 		stops(ContradictoryAmounts, Limits, "R5", "Amounts, volumes and doses of one syringe cannot all hold."),
 	}
