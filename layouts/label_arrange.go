@@ -38,7 +38,7 @@ func arrange(l labels.Label, panel box, s Stock, mono bool, modules []string) (a
 		if !ok {
 			continue
 		}
-		a := arrangement{design: newDesign(panel, l.Class, mono, symbol), modules: modules, module: module}
+		a := arrangement{design: newDesign(panel, s, l.Class, mono, symbol), modules: modules, module: module}
 		if _, ok := a.design.fitName(l, a.nameTop(nil, 0), 0); !ok {
 			why = "the drug name in capitals of 2.5 mm"
 			continue
@@ -148,7 +148,7 @@ func (a *arrangement) set(l labels.Label, level int, small, large ink.Micrometre
 	}
 	if len(items) > 0 && !d.class.Stripes {
 		var ok bool
-		if a.upper, ok = b.upperRows(items, d.panel.x+edge, d.panel.right()-edge, d.panel.y+500); !ok {
+		if a.upper, ok = b.upperRows(items, d.panel.x+d.edge, d.panel.right()-d.edge, d.panel.y+500); !ok {
 			return false
 		}
 	}
@@ -205,33 +205,39 @@ func (b block) upperRows(items []item, left, right, y ink.Micrometre) ([]bin, bo
 // fitLower arranges the lower half: rows far apart before near, each item on
 // a row of its own before several together.
 func (a *arrangement) fitLower(l labels.Label, b block, level int, ways []packing) bool {
-	list, ok := b.concentrations(l)
-	if !ok {
-		return false
-	}
 	for _, pitch := range pitches(b.capital) {
 		b.pitch = b.capital * pitch / 100
-		last := &list[len(list)-1].bin
 		for _, how := range ways {
-			end, more, ok := b.footRow(l, how)
-			if !ok {
-				return false
+			if a.packed(l, b, lowerItems(l, level), how) {
+				return true
 			}
-			items := append(lowerItems(l, level), more...)
-			beside := last.copied()
-			if b.design.class.Dim() || l.Second != "" {
-				beside.right = beside.left
-			}
-			rows, ok := b.pack(how, items, &beside, &end)
-			if !ok {
-				continue
-			}
-			last.items, last.order, last.used = beside.items, beside.order, beside.used
-			a.stated, a.rows, a.foot = list, rows, end
-			return true
 		}
 	}
 	return false
+}
+
+// packed arranges the lower half in one way.
+func (a *arrangement) packed(l labels.Label, b block, items []item, how packing) bool {
+	list, ok := b.concentrations(l, how)
+	if !ok {
+		return false
+	}
+	foot, more, ok := b.footRow(l, how)
+	if !ok {
+		return false
+	}
+	last := &list[len(list)-1].bin
+	beside := *last
+	if b.design.class.Dim() || l.Second != "" {
+		beside.right = beside.left // nothing stands there
+	}
+	rows, ok := b.pack(how, append(items, more...), &beside, &foot)
+	if !ok {
+		return false
+	}
+	last.items, last.order, last.used = beside.items, beside.order, beside.used
+	a.stated, a.rows, a.foot = list, rows, foot
+	return true
 }
 
 // A packing is a way to put items on rows.

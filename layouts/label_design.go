@@ -11,13 +11,13 @@ const (
 	stripeGap = 530 // 5.4.4: at least 0.5 mm from the stripes to the top of the name; 0.03 mm for the rounding of type sizes
 	lineLow   = 350 // least thickness of the reversal line
 	legGap    = 350 // the stripes beside the name end this far above the concentration
-	edge      = 900 // type stays this far inside the panel
 	hairline  = 100
 )
 
 // A design is the coloured part of a label on its panel.
 type design struct {
 	panel  box
+	edge   ink.Micrometre // type stays this far inside the panel's left and right end
 	class  labels.Class
 	mono   bool
 	middle ink.Micrometre // border of the upper and the lower half
@@ -31,8 +31,11 @@ type design struct {
 // at least the upper 20 % of the label's width, and at least 15 % of its
 // length on each side of the name (5.4.4). They end with the upper half,
 // because 5.4.3 keeps the lower half free for the concentration.
-func newDesign(panel box, c labels.Class, mono bool, symbol box) design {
-	d := design{panel: panel, class: c, mono: mono, middle: panel.y + panel.h/2, symbol: symbol}
+func newDesign(panel box, s Stock, c labels.Class, mono bool, symbol box) design {
+	d := design{panel: panel, edge: 900, class: c, mono: mono, middle: panel.y + panel.h/2, symbol: symbol}
+	if s.Inset > 0 {
+		d.edge = 600 // the panel is clear of the label's edge already
+	}
 	d.legEnd = d.middle - legGap
 	if symbol.w > 0 {
 		d.legEnd = min(d.legEnd, symbol.y-300)
@@ -49,7 +52,7 @@ func (d design) nameArea() (left, right, top ink.Micrometre) {
 	if d.class.Stripes {
 		return d.panel.x + d.leg + 400, d.panel.right() - d.leg - 400, d.panel.y + d.band + stripeGap
 	}
-	return d.panel.x + edge, d.panel.right() - edge, d.panel.y + 600
+	return d.panel.x + d.edge, d.panel.right() - d.edge, d.panel.y + 600
 }
 
 // lineHeight is the thickness of the reversal line, 0 without.

@@ -35,10 +35,10 @@ func (b block) rightAt(low ink.Micrometre) ink.Micrometre {
 	if b.design.symbol.w > 0 && low > b.design.symbol.y-250 {
 		return b.design.symbol.x - 400
 	}
-	return b.design.panel.right() - edge
+	return b.design.panel.right() - b.design.edge
 }
 
-func (b block) left() ink.Micrometre { return b.design.panel.x + edge }
+func (b block) left() ink.Micrometre { return b.design.panel.x + b.design.edge }
 
 // foot is the baseline of the class word. The white panel of a dim class ends
 // a little above the edge.
@@ -59,8 +59,12 @@ type stated struct {
 }
 
 // concentrations sets the one or two concentrations at the top of the block,
-// in Bold, else in Condensed SemiBold.
-func (b block) concentrations(l labels.Label) ([]stated, bool) {
+// in Bold, else or where rows are packed tightest in Condensed SemiBold.
+func (b block) concentrations(l labels.Label, how packing) ([]stated, bool) {
+	faces := []ink.Face{ink.Bold, ink.CondensedSemiBold}
+	if how == tightest {
+		faces = faces[1:]
+	}
 	list := []stated{{cell: l.Concentration, tail: l.As}}
 	if l.Second != "" {
 		list[0].tail = l.Name
@@ -82,7 +86,7 @@ func (b block) concentrations(l labels.Label) ([]stated, bool) {
 		low := base + ink.Micrometre(below)
 		s.bin = bin{base: base, left: b.left(), right: b.rightAt(low)}
 		fits := false
-		for _, s.face = range []ink.Face{ink.Bold, ink.CondensedSemiBold} {
+		for _, s.face = range faces {
 			s.bin.used = b.statedWidth(*s)
 			if fits = s.bin.used <= s.bin.right-s.bin.left; fits {
 				break

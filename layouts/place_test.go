@@ -38,8 +38,8 @@ func TestPlaces(t *testing.T) {
 				n += 7
 			}
 			// 38.1 x 21.2 mm, 40.6 mm apart, from 4.7 and 10.7 mm; the word
-			// begins 1.9 mm from the label's left edge, at its foot.
-			x, y := ink.Micrometre(4700+40600*(n%5)+1900), ink.Micrometre(10700+21200*(n/5+1))
+			// begins 1.6 mm from the label's left edge, at its foot.
+			x, y := ink.Micrometre(4700+40600*(n%5)+1600), ink.Micrometre(10700+21200*(n/5+1))
 			if d := run.StartX - x; d < -60 || d > 60 || run.StartY > y-1000 || run.StartY < y-2000 {
 				t.Errorf("page %d, label %d: got %d,%d, want %d and a little above %d", page+1, n, run.StartX, run.StartY, x, y)
 			}
