@@ -6,23 +6,62 @@ import (
 )
 
 // exact is a fraction that never changes after it is made. A nil fraction
-// means "not given".
+// means "not given"; what is worked from it is not given either.
 type exact struct {
 	_ [0]func() // forbids ==
 	r *big.Rat
 }
 
-func whole(n int64) exact         { return exact{r: new(big.Rat).SetInt64(n)} }
-func fraction(a, b int64) exact   { return exact{r: big.NewRat(a, b)} }
-func (x exact) given() bool       { return x.r != nil }
-func (x exact) mul(y exact) exact { return exact{r: new(big.Rat).Mul(x.r, y.r)} }
-func (x exact) quo(y exact) exact { return exact{r: new(big.Rat).Quo(x.r, y.r)} }
-func (x exact) add(y exact) exact { return exact{r: new(big.Rat).Add(x.r, y.r)} }
-func (x exact) sub(y exact) exact { return exact{r: new(big.Rat).Sub(x.r, y.r)} }
-func (x exact) cmp(y exact) int   { return x.r.Cmp(y.r) }
-func (x exact) sign() int         { return x.r.Sign() }
-func (x exact) copyRat() *big.Rat { return new(big.Rat).Set(x.r) }
-func fromRat(r *big.Rat) exact    { return exact{r: new(big.Rat).Set(r)} }
+func whole(n int64) exact       { return exact{r: new(big.Rat).SetInt64(n)} }
+func fraction(a, b int64) exact { return exact{r: big.NewRat(a, b)} }
+func (x exact) given() bool     { return x.r != nil }
+
+// fromRat copies r, so that nobody can change it later.
+func fromRat(r *big.Rat) exact {
+	if r == nil {
+		return exact{}
+	}
+	return exact{r: new(big.Rat).Set(r)}
+}
+
+// notNegative copies r; a negative r is not given.
+func notNegative(r *big.Rat) exact {
+	if r == nil || r.Sign() < 0 {
+		return exact{}
+	}
+	return fromRat(r)
+}
+
+func (x exact) copyRat() *big.Rat { return fromRat(x.r).r }
+
+// with works op on x and y if both are given.
+func (x exact) with(y exact, op func(z, a, b *big.Rat) *big.Rat) exact {
+	if !x.given() || !y.given() {
+		return exact{}
+	}
+	return exact{r: op(new(big.Rat), x.r, y.r)}
+}
+
+func (x exact) mul(y exact) exact { return x.with(y, (*big.Rat).Mul) }
+func (x exact) add(y exact) exact { return x.with(y, (*big.Rat).Add) }
+func (x exact) sub(y exact) exact { return x.with(y, (*big.Rat).Sub) }
+
+// quo is x divided by y; nothing divided by zero is given.
+func (x exact) quo(y exact) exact {
+	if y.given() && y.sign() == 0 {
+		return exact{}
+	}
+	return x.with(y, (*big.Rat).Quo)
+}
+
+// cmp and sign want values that are given.
+func (x exact) cmp(y exact) int { return x.r.Cmp(y.r) }
+func (x exact) sign() int       { return x.r.Sign() }
+
+// positive reports a given value above zero.
+func (x exact) positive() bool { return x.given() && x.sign() > 0 }
+
+// floorDiv is how many whole times y, above zero, goes into x, rounded down.
 func (x exact) floorDiv(y exact) *big.Int {
 	q := new(big.Rat).Quo(x.r, y.r)
 	return new(big.Int).Div(q.Num(), q.Denom())
@@ -41,8 +80,11 @@ const (
 // toStep moves x to a multiple of step. It is the only place where a value is
 // rounded on its way to a syringe or a pump.
 func (x exact) toStep(step exact, d Direction) (exact, error) {
-	if !x.given() || !step.given() || step.sign() <= 0 {
-		return exact{}, &NotGivenError{What: "step"}
+	if !x.given() {
+		return exact{}, &NotGivenError{What: "a value to round"}
+	}
+	if !step.positive() {
+		return exact{}, &NotGivenError{What: "a step above zero"}
 	}
 	var n *big.Int
 	switch d {
@@ -51,10 +93,9 @@ func (x exact) toStep(step exact, d Direction) (exact, error) {
 	case Down:
 		n = x.floorDiv(step)
 	case Up:
-		neg := exact{r: new(big.Rat).Neg(x.r)}
-		n = new(big.Int).Neg(neg.floorDiv(step))
+		n = new(big.Int).Neg(whole(0).sub(x).floorDiv(step))
 	default:
-		return exact{}, &NotGivenError{What: "rounding direction"}
+		return exact{}, &NotGivenError{What: "a rounding direction"}
 	}
 	return exact{r: new(big.Rat).Mul(new(big.Rat).SetInt(n), step.r)}, nil
 }
@@ -78,6 +119,7 @@ func (x exact) places() (int, bool) {
 	return max(two, five), true
 }
 
+// factorOut divides n, above zero, by p as often as it goes and counts how often.
 func factorOut(n *big.Int, p int64) int {
 	count, prime, rest := 0, big.NewInt(p), new(big.Int)
 	for {
@@ -91,7 +133,7 @@ func factorOut(n *big.Int, p int64) int {
 }
 
 // text is the exact value in full: a decimal if it ends, else a fraction in
-// lowest terms such as "28/3".
+// lowest terms such as "28/3". It is "" if nothing is given.
 func (x exact) text() string {
 	if !x.given() {
 		return ""
@@ -102,6 +144,7 @@ func (x exact) text() string {
 	return x.r.RatString()
 }
 
+// trimZeros drops zeros after the last digit that counts behind a point.
 func trimZeros(s string) string {
 	if !strings.Contains(s, ".") {
 		return s

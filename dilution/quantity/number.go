@@ -14,19 +14,19 @@ const maxNumber = 15
 func splitNumber(s string) (number, rest string) {
 	for i, r := range s {
 		if !isNumberRune(r, s[i:]) {
-			return s[:i], strings.TrimLeft(s[i:], " \u00a0\u202f")
+			return s[:i], strings.TrimLeft(s[i:], " ")
 		}
 	}
 	return s, ""
 }
 
 // isNumberRune also takes in the characters of wrong numbers, so that they
-// are refused as a whole and not half read.
+// are refused as a whole and not half read. from is the text from r on.
 func isNumberRune(r rune, from string) bool {
 	switch {
 	case unicode.IsDigit(r) || unicode.In(r, unicode.No, unicode.Nl):
 		return true
-	case strings.ContainsRune(".,+-\u2212\u2013'_", r):
+	case strings.ContainsRune(".,'_+"+dashes, r):
 		return true
 	case r == 'e' || r == 'E' || r == 'x':
 		next, _ := utf8.DecodeRuneInString(from[1:])
@@ -35,30 +35,40 @@ func isNumberRune(r rune, from string) bool {
 	return false
 }
 
-// parseNumber reads digits with at most one point that has digits on both
-// sides. Zero is allowed; callers refuse it where it means nothing.
-func parseNumber(whole, number, want string) (exact, error) {
-	fault := func(code Fault, why, likely string) (exact, error) {
-		if likely != "" {
-			likely = strings.Replace(whole, number, likely, 1)
-		}
-		return exact{}, &SyntaxError{Got: whole, Want: want, Why: why, Likely: likely, Code: code}
-	}
+// dashes are the characters that stand for "minus" or "to".
+const dashes = "-\u2010\u2011\u2012\u2013\u2014\u2212"
+
+// goesOn reports that what follows a number is more of a number: "1 000 mg",
+// "1 1/2 mL", "1/2 mL". from is the text behind the number, blanks cut.
+func goesOn(from string) bool {
+	from = strings.TrimPrefix(from, "/")
+	r, _ := utf8.DecodeRuneInString(from)
+	return from != "" && isNumberRune(r, from)
+}
+
+// readNumber reads digits with at most one point that has digits on both
+// sides. Zero is allowed; callers refuse it where it means nothing. A number
+// that does not read gives its fault and why.
+func readNumber(number string) (x exact, code Fault, why string) {
 	switch {
 	case number == "":
-		return fault(BadNumber, "there is no number", "")
-	case len(number) > maxNumber:
-		return fault(TooManyDigit, "the number is longer than 15 characters", "")
+		return exact{}, BadNumber, "there is no number in front"
+	case utf8.RuneCountInString(number) > maxNumber:
+		return exact{}, TooManyDigit, "the number is longer than 15 characters"
 	case strings.Contains(number, ","):
-		return fault(CommaNumber, "a comma can mean a decimal or a thousand", likelyComma(number))
+		return exact{}, CommaNumber, "a comma can mean a decimal or a thousand"
+	case strings.ContainsAny(number, "+"+dashes):
+		return exact{}, BadNumber, "a sign or a range is not a plain number"
+	case len(number) > 1 && number[0] == '0' && number[1] != '.':
+		return exact{}, BadNumber, "a number that begins with 0 may have lost its point"
 	case !plainNumber(number):
-		return fault(BadNumber, "the number is not plain digits with at most one point between digits", likelyNumber(number))
+		return exact{}, BadNumber, "the number is not plain digits with at most one point between digits"
 	}
 	r, ok := new(big.Rat).SetString(number)
 	if !ok {
-		return fault(BadNumber, "the number cannot be read", "")
+		return exact{}, BadNumber, "the number cannot be read"
 	}
-	return exact{r: r}, nil
+	return exact{r: r}, "", ""
 }
 
 // plainNumber is the strict pattern of rule R1: 0, 12, 0.5, 12.25.
@@ -79,52 +89,22 @@ func allDigits(s string) bool {
 	return s != ""
 }
 
-// likelyComma says what a number with a comma probably meant.
-func likelyComma(s string) string {
-	head, tail, _ := strings.Cut(s, ",")
-	if !allDigits(head) {
-		return ""
+// ungroup joins digits set off in threes by mark: "12'500", "1,000.5". The
+// first group must not begin with 0; decimals may follow if mark is no point.
+func ungroup(s, mark string) (string, bool) {
+	tail := ""
+	if mark != "." {
+		var point bool
+		if s, tail, point = strings.Cut(s, "."); point {
+			tail = "." + tail
+		}
 	}
-	if len(tail) == 3 && allDigits(tail) {
-		return head + tail
+	groups := strings.Split(s, mark)
+	for i, g := range groups {
+		if !allDigits(g) || len(g) > 3 || (i > 0 && len(g) != 3) || (i == 0 && g[0] == '0') {
+			return "", false
+		}
 	}
-	if allDigits(tail) {
-		return head + "." + tail
-	}
-	return ""
-}
-
-var fractionsInWords = map[string]string{"½": "0.5", "¼": "0.25", "¾": "0.75", "⅛": "0.125", "⅕": "0.2"}
-
-// likelyNumber says what a malformed number probably meant.
-func likelyNumber(s string) string {
-	if words, ok := fractionsInWords[s]; ok {
-		return words
-	}
-	t := strings.Trim(s, "+-\u2212\u2013_'")
-	switch {
-	case plainNumber(t):
-		return t
-	case strings.HasPrefix(t, ".") && plainNumber("0"+t):
-		return "0" + t
-	case strings.HasSuffix(t, ".") && plainNumber(strings.TrimSuffix(t, ".")):
-		return strings.TrimSuffix(t, ".")
-	}
-	return likelyExponent(t)
-}
-
-func likelyExponent(s string) string {
-	i := strings.IndexAny(s, "eE")
-	if i < 0 || !plainNumber(s[:i]) || len(s)-i > 3 {
-		return ""
-	}
-	r, ok := new(big.Rat).SetString(s)
-	if !ok {
-		return ""
-	}
-	text, ok := exact{r: r}.decimal()
-	if !ok {
-		return ""
-	}
-	return text
+	joined := strings.Join(groups, "") + tail
+	return joined, len(groups) > 1 && plainNumber(joined)
 }

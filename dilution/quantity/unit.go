@@ -10,6 +10,7 @@ const (
 	BySubstance                 // mole and its parts
 )
 
+// String is the kind in words, "nothing" for the zero value.
 func (k Kind) String() string {
 	switch k {
 	case ByMass:
@@ -27,11 +28,12 @@ type Basis int
 
 // Bases of a dose or dose rate.
 const (
-	Absolute Basis = iota + 1
-	PerKilogram
-	PerSquareMetre
+	Absolute       Basis = iota + 1 // for the patient as a whole
+	PerKilogram                     // for each kilogram of body weight
+	PerSquareMetre                  // for each square metre of body surface
 )
 
+// String is the basis in words, "nothing" for the zero value.
 func (b Basis) String() string {
 	switch b {
 	case Absolute:
@@ -52,27 +54,38 @@ type Unit struct {
 	scale exact // in mg, units or mmol
 }
 
-func (u Unit) given() bool { return u.word != "" }
-
 // Kind is how the unit counts.
 func (u Unit) Kind() Kind { return u.kind }
 
 // String is the unit's plain name, singular.
 func (u Unit) String() string { return u.word }
 
-// Units of amount.
-func Gram() Unit      { return Unit{"g", ByMass, whole(1000)} }
+// Gram is the gram, 1000 mg.
+func Gram() Unit { return Unit{"g", ByMass, whole(1000)} }
+
+// Milligram is the milligram, the base of what is counted by mass.
 func Milligram() Unit { return Unit{"mg", ByMass, whole(1)} }
+
+// Microgram is the microgram, a thousandth of a milligram.
 func Microgram() Unit { return Unit{"microgram", ByMass, fraction(1, 1000)} }
-func Nanogram() Unit  { return Unit{"nanogram", ByMass, fraction(1, 1000000)} }
-func Units() Unit     { return Unit{"unit", ByActivity, whole(1)} }
-func Milliunits() Unit {
-	return Unit{"milliunit", ByActivity, fraction(1, 1000)}
-}
+
+// Nanogram is the nanogram, a thousandth of a microgram.
+func Nanogram() Unit { return Unit{"nanogram", ByMass, fraction(1, 1000000)} }
+
+// Units is the unit of biological activity, each drug's own.
+func Units() Unit { return Unit{"unit", ByActivity, whole(1)} }
+
+// Milliunits is a thousandth of a unit of biological activity.
+func Milliunits() Unit { return Unit{"milliunit", ByActivity, fraction(1, 1000)} }
+
+// Millimole is the millimole, the base of what is counted by amount of
+// substance.
 func Millimole() Unit { return Unit{"mmol", BySubstance, whole(1)} }
+
+// Micromole is the micromole, a thousandth of a millimole.
 func Micromole() Unit { return Unit{"micromol", BySubstance, fraction(1, 1000)} }
 
-// unitNamed reads the spelling of a unit of amount (design.md section 5).
+// unitNamed reads the spelling of a unit of amount.
 func unitNamed(s string) (Unit, bool) {
 	switch s {
 	case "g", "gram", "grams":
@@ -98,11 +111,11 @@ func unitNamed(s string) (Unit, bool) {
 // A Period is the unit of time in a rate. The zero value means "not given".
 type Period int
 
-// Periods.
+// Periods of a rate.
 const (
-	PerMinute Period = iota + 1
-	PerHour
-	PerDay
+	PerMinute Period = iota + 1 // 60 in an hour
+	PerHour                     // the base
+	PerDay                      // of 24 hours
 )
 
 // perHour is how many of this period make an hour.
@@ -118,6 +131,7 @@ func (p Period) perHour() exact {
 	return exact{}
 }
 
+// String is the period as paper writes it: min, h, day; "" for the zero value.
 func (p Period) String() string {
 	switch p {
 	case PerMinute:
@@ -130,6 +144,7 @@ func (p Period) String() string {
 	return ""
 }
 
+// periodNamed reads the spelling of a unit of time.
 func periodNamed(s string) (Period, bool) {
 	switch s {
 	case "min", "minute", "mins":
@@ -140,4 +155,15 @@ func periodNamed(s string) (Period, bool) {
 		return PerDay, true
 	}
 	return 0, false
+}
+
+// volumeScale reads the spelling of a unit of volume: how many mL it holds.
+func volumeScale(s string) (exact, bool) {
+	switch s {
+	case "mL", "ml", "millilitre", "millilitres":
+		return whole(1), true
+	case "L", "l", "litre", "litres":
+		return whole(1000), true
+	}
+	return exact{}, false
 }
