@@ -123,7 +123,7 @@ func (w *work) pickDose() bool {
 	}
 	var parts []*DosePart
 	var found []judged
-	for _, row := range rows {
+	for _, row := range countedAlike(rows, w.o.Dose.Value.Basis(), quantity.Dose.Basis) {
 		d, v, err := w.judgeDose(row)
 		if err != nil {
 			return w.sizeFault(err, "dose", w.o.Dose.Pos)
@@ -142,6 +142,32 @@ func (w *work) pickDose() bool {
 	w.unlikeWeight(w.o.DoseBy.Given(), w.o.DoseBy.Value, best.Rule.By, best.Rule.BySource, w.o.DoseBy.Pos)
 	w.weightNotes(best.By)
 	return w.doseOK
+}
+
+// countedAlike keeps, of each indication, the rows that are counted as the
+// order is: per kg, per square metre or absolute. Where there is none, all of
+// that indication stay. Otherwise a tenth of a dose per kg would pass as a small
+// absolute dose.
+func countedAlike[T any](rows []formulary.Rule[T], basis quantity.Basis, of func(T) quantity.Basis) []formulary.Rule[T] {
+	alike := func(r formulary.Rule[T]) bool {
+		for _, f := range []formulary.Figure[T]{r.UsualHigh, r.SoftHigh, r.HardHigh} {
+			if f.Given() {
+				return of(f.Value) == basis
+			}
+		}
+		return false
+	}
+	some := map[string]bool{}
+	for _, r := range rows {
+		some[r.For] = some[r.For] || alike(r)
+	}
+	var out []formulary.Rule[T]
+	for _, r := range rows {
+		if alike(r) || !some[r.For] {
+			out = append(out, r)
+		}
+	}
+	return out
 }
 
 // A judged is a verdict and the indication whose row gave it.

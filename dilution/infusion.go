@@ -56,6 +56,7 @@ func (p *InfusionPart) per() pump.Per {
 
 // pickRate settles the row for start and range together, as pickDose does.
 func (w *work) pickRate(rows []formulary.Rule[quantity.DoseRate]) (formulary.Rule[quantity.DoseRate], bool) {
+	rows = countedAlike(rows, w.o.Start.Value.Basis(), quantity.DoseRate.Basis)
 	var found []judged
 	for _, row := range rows {
 		v, err := w.judgeRange(row)
@@ -200,7 +201,11 @@ func (w *work) rangeEnds(part *InfusionPart) (low, high quantity.DoseRate) {
 	if w.o.To.Given() {
 		high = w.o.To.Value
 	}
-	return widen(low, high, start)
+	low, high = widen(low, high, start)
+	if n, err := low.Cmp(high); err == nil && n == 0 {
+		low = high.Scaled(big.NewRat(1, 2)) // one figure is no range: it opens downwards only
+	}
+	return low, high
 }
 
 // widen makes sure that the start lies inside the range.

@@ -1,0 +1,309 @@
+package dilution_test
+
+import (
+	"fmt"
+	"math/big"
+	"slices"
+	"strings"
+	"testing"
+
+	"drawup/dilution/body"
+	"drawup/dilution/formulary"
+	"drawup/dilution/refusal"
+)
+
+// A row is one row of stored limits, with its figures as they are written, so
+// that boluses and infusions share the tests below.
+type row struct {
+	drug               formulary.Drug
+	use                string // bolus, infusion
+	purpose            string
+	routes             []string
+	fits               func(body.Age) bool
+	hardLow, usualLow  string
+	usualHigh, highest string
+	total              bool
+}
+
+func (r row) String() string {
+	return fmt.Sprintf("%s, %s, %s, %s", r.drug.Name, r.use, r.purpose, strings.Join(r.routes, " "))
+}
+
+// lowest is the lowest stored figure that a slip downwards is held against.
+func (r row) lowest() string {
+	if r.hardLow != "" {
+		return r.hardLow
+	}
+	return r.usualLow
+}
+
+func rowOf[T any](d formulary.Drug, use string, x formulary.Rule[T]) row {
+	r := row{drug: d, use: use, purpose: x.For, routes: x.Routes, fits: x.Fits, hardLow: x.HardLow.Text,
+		usualLow: x.UsualLow.Text, usualHigh: x.UsualHigh.Text, total: x.TotalMax.Given()}
+	for _, f := range []formulary.Figure[T]{x.UsualHigh, x.SoftHigh, x.HardHigh} {
+		if f.Given() {
+			r.highest = f.Text
+		}
+	}
+	return r
+}
+
+// rowsOf is every row of the formulary.
+func rowsOf(f *formulary.Formulary) []row {
+	var out []row
+	for _, d := range f.Drugs() {
+		for _, x := range d.Doses {
+			out = append(out, rowOf(d, "bolus", x))
+		}
+		for _, x := range d.Rates {
+			out = append(out, rowOf(d, "infusion", x))
+		}
+	}
+	return out
+}
+
+// times multiplies the number at the head of a figure, "0.3 mg/kg", exactly.
+func times(t testing.TB, figure string, by *big.Rat) string {
+	t.Helper()
+	number, unit, ok := strings.Cut(figure, " ")
+	x, good := new(big.Rat).SetString(number)
+	if !ok || !good {
+		t.Fatalf("got the figure %q, want a number and a unit", figure)
+	}
+	x.Mul(x, by)
+	text := x.FloatString(12)
+	text = strings.TrimRight(strings.TrimRight(text, "0"), ".")
+	return text + " " + unit
+}
+
+// fitting are invented patients whose ages the row covers; two of them are
+// light, for rows with an absolute maximum.
+func fitting(t *testing.T, r row) []string {
+	t.Helper()
+	var out []string
+	for _, p := range []struct{ age, height, weight string }{
+		{"40 years", "168 cm", "70 kg"}, {"70 years", "168 cm", "70 kg"}, {"41 years", "150 cm", "37 kg"},
+		{"4 years", "102 cm", "16 kg"}, {"7 years", "122 cm", "23 kg"}, {"14 years", "160 cm", "50 kg"},
+		{"2 years", "86 cm", "12 kg"}, {"6 months", "66 cm", "7.5 kg"}, {"20 days", "52 cm", "3.6 kg"},
+	} {
+		age, err := body.ParseAge(p.age)
+		if err != nil {
+			t.Fatal(err)
+		}
+		if r.fits(age) {
+			out = append(out, "\n[[patient]]\n"+lines(key("id", "A"), key("sex", "female"), key("age", p.age), key("height", p.height), key("weight", p.weight)))
+		}
+	}
+	if len(out) == 0 {
+		t.Fatalf("%v: no patient of the test fits", r)
+	}
+	return out
+}
+
+// ways are the orders in which the drug may be asked for, without the dose:
+// each presentation as it is, and diluted to either end of its bounds.
+func (r row) ways(t *testing.T) (table string, ways []string) {
+	t.Helper()
+	for _, p := range r.drug.Presentations {
+		if !p.For(r.use) {
+			continue
+		}
+		head := lines(key("drug", r.drug.Name), key("presentation", p.ID), key("indication", r.purpose), key("route", r.routes[0]))
+		if r.use == "bolus" {
+			ways = append(ways, head)
+		}
+		for _, b := range r.drug.Bounds {
+			if b.Use == r.use {
+				ways = append(ways, r.diluted(t, head, p, b)...)
+			}
+		}
+	}
+	if r.use == "infusion" {
+		return "infusion", ways
+	}
+	return "syringe", ways
+}
+
+func (r row) diluted(t *testing.T, head string, p formulary.Presentation, b formulary.Bounds) []string {
+	t.Helper()
+	line, diluents := b.Line, []string{""}
+	if line == "any" {
+		line = "peripheral"
+	}
+	if len(p.Diluents) > 0 {
+		diluents = append(diluents, key("diluent", p.Diluents[0].Name)+"\n")
+	}
+	var out []string
+	for i, c := range []string{b.Low.Text, b.High.Text} {
+		for _, d := range diluents {
+			if r.use == "bolus" {
+				out = append(out, head+d+lines(key("concentration", c), key("volume", []string{"10 mL", "20 mL"}[i])))
+				continue
+			}
+			amount := strings.TrimSuffix(times(t, c, big.NewRat(50, 1)), "/mL")
+			out = append(out, head+d+lines(key("mix", amount+" in 50 mL"), key("line", line)))
+		}
+	}
+	return out
+}
+
+// asked is the way with the dose or dose rate in it.
+func (r row) asked(way, figure string) string {
+	if r.use == "infusion" {
+		return way + key("start", figure) + "\n"
+	}
+	return way + key("dose", figure) + "\n"
+}
+
+// limitCodes are the refusals that a stored limit gives.
+var limitCodes = []refusal.Code{refusal.SlipThousand, refusal.SlipTen, refusal.DoseAboveHard, refusal.DoseBelowHard, refusal.DoseAboveTotal,
+	refusal.RateAboveHard, refusal.RateBelowHard, refusal.SoftLimitNotSigned, refusal.FormularyBlank}
+
+// slips are the figures that must never pass: the lowest and the highest times
+// 1000, the highest times ten, a tenth and a thousandth of the lowest.
+func (r row) slips(t *testing.T) []string {
+	out := []string{times(t, r.highest, big.NewRat(1000, 1)), times(t, r.highest, big.NewRat(10, 1))}
+	if low := r.lowest(); low != "" {
+		out = append(out, times(t, low, big.NewRat(1000, 1)), times(t, low, big.NewRat(1, 10)), times(t, low, big.NewRat(1, 1000)))
+	}
+	return out
+}
+
+// Every slip is refused in every way in which the drug can be asked for, and
+// by the limits themselves in every way in which the dose is reached.
+func TestSlipsOnEveryStoredRange(t *testing.T) {
+	f := starter(t)
+	rows := rowsOf(f)
+	if len(rows) < 80 {
+		t.Fatalf("got %d rows, want the whole starter formulary", len(rows))
+	}
+	tried := 0
+	for _, r := range rows {
+		patient := fitting(t, r)[0]
+		table, ways := r.ways(t)
+		_, mute := unmakeable()[r.String()]
+		for _, figure := range r.slips(t) {
+			reached := false
+			for _, way := range ways {
+				tried++
+				codes := codesOf(t, f, patient, table, r.asked(way, figure))
+				limited := slices.ContainsFunc(codes, func(c refusal.Code) bool { return slices.Contains(limitCodes, c) })
+				reached = reached || limited
+				if len(codes) == 0 || !limited && !unmixed(codes) {
+					t.Errorf("%v: got %v for %s, want a refusal by a limit, as\n%s", r, codes, figure, way)
+				}
+			}
+			if reached == mute {
+				t.Errorf("%v: %s was held against a limit: %v; the test says that the row can be made: %v", r, figure, reached, !mute)
+			}
+		}
+	}
+	t.Logf("%d rows, %d slips", len(rows), tried)
+}
+
+// unmixed reports that the mixture itself was refused, so that the dose was
+// never reached: that way of asking says nothing of the limits.
+func unmixed(codes []refusal.Code) bool {
+	for _, c := range []refusal.Code{refusal.DisplacementBlank, refusal.MustBeDiluted, refusal.DiluentMissing, refusal.DiluentNotListed,
+		refusal.ConcentrationTooHigh, refusal.ConcentrationTooLow, refusal.VolumeOffGraduation, refusal.VolumeBelowMeasurable} {
+		if slices.Contains(codes, c) {
+			return true
+		}
+	}
+	return false
+}
+
+// The usual figures of every row can be made in some way, unless the test says
+// why not.
+func TestUsualFiguresPass(t *testing.T) {
+	f := starter(t)
+	used := map[string]bool{}
+	for _, r := range rowsOf(f) {
+		for _, figure := range []string{r.usualLow, r.usualHigh} {
+			if figure == "" {
+				continue
+			}
+			name := r.String()
+			why, excused := unmakeable()[name]
+			if !excused {
+				name += ": " + figure
+				why, excused = tooSmallToRead()[name]
+			}
+			used[name] = used[name] || excused
+			switch made, codes := r.made(t, f, figure); {
+			case !made && !excused:
+				t.Errorf("%s %s cannot be made in any way: %v", r, figure, codes)
+			case made && excused:
+				t.Errorf("%s %s can be made, though the test says: %s", r, figure, why)
+			}
+		}
+	}
+	for _, list := range []map[string]string{unmakeable(), tooSmallToRead()} {
+		for name := range list {
+			if !used[name] {
+				t.Errorf("the test excuses %q, which is no row", name)
+			}
+		}
+	}
+}
+
+// made reports whether any way gives the figure to any fitting patient, and
+// otherwise all codes that stand against it.
+func (r row) made(t *testing.T, f *formulary.Formulary, figure string) (bool, []refusal.Code) {
+	table, ways := r.ways(t)
+	var all []refusal.Code
+	for _, patient := range fitting(t, r) {
+		for _, way := range ways {
+			codes := codesOf(t, f, patient, table, r.asked(way, figure))
+			if len(codes) == 0 {
+				return true, nil
+			}
+			for _, c := range codes {
+				if !slices.Contains(all, c) {
+					all = append(all, c)
+				}
+			}
+		}
+	}
+	return false, all
+}
+
+// unmakeable are the rows that no container of the starter formulary can
+// serve, and why.
+func unmakeable() map[string]string {
+	return map[string]string{
+		"cefazolin, bolus, prophylaxis before surgery, slow injection, IV": "no displacement of the powder is stored",
+		"flumazenil, infusion, reversal in intensive care, IV":             "no concentration bounds for infusion are stored",
+	}
+}
+
+// tooSmallToRead are usual figures that no single dilution to an end of the
+// bounds lets a graduation show.
+func tooSmallToRead() map[string]string {
+	return map[string]string{
+		"adrenaline, bolus, push dose, IV: 5 microgram":        "0.5 mL of 10 micrograms/mL lies between the 0.2 mL marks of a 10 mL barrel",
+		"remifentanil, bolus, induction, IV: 0.5 microgram/kg": "about 1.1 mL of 20 micrograms/mL, between the same marks",
+	}
+}
+
+// A row without a lower figure cannot catch a slip downwards; every plan by it
+// says so.
+func TestRowsWithoutLowerFigureSaySo(t *testing.T) {
+	f := starter(t)
+	n := 0
+	for _, r := range rowsOf(f) {
+		if r.lowest() != "" {
+			continue
+		}
+		n++
+		patient := fitting(t, r)[0]
+		table, ways := r.ways(t)
+		for _, way := range ways {
+			_, reasons := plan(t, f, session+patient+"\n[[patient."+table+"]]\n"+r.asked(way, r.highest))
+			if !reasons.Refused() && !slices.Contains(reasons.Cautions().Codes(), refusal.FormularyBlank) {
+				t.Errorf("%v: passes without a word that it was checked upwards only", r)
+			}
+		}
+	}
+	t.Logf("%d rows without a lower figure", n)
+}
