@@ -69,7 +69,7 @@ type Label struct {
 	Dose      Line // "dose 7.2 mL = 14.4 mg"; optional
 
 	Route   string // printed when not empty, "infiltration only"
-	Patient string // optional
+	Patient string // optional, "HM-01"; printed after the word patient
 	Serial  Cell   // eight digits
 	Code    Cell   // what the barcode holds, in human-readable form; empty for a label without
 

@@ -11,7 +11,8 @@ type arrangement struct {
 	modules []string // rows of the barcode, none without
 	module  ink.Micrometre
 	name    named
-	line    box // reversal line, empty without
+	full    ink.Micrometre // greatest capital height of the name without small type above it
+	line    box            // reversal line, empty without
 	size    ink.Micrometre
 	fitted  fitted
 	large   ink.Micrometre
@@ -21,9 +22,41 @@ type arrangement struct {
 	foot    bin
 }
 
-// arrange finds the largest type with which the label fits its panel: first
-// with the best size of barcode module, then with the smaller ones. When none
-// fits it says what did not.
+// An attempt is one try at the label: its sizes of type, how rows are filled,
+// and how much of the name's greatest size must be left when small type stands
+// in the upper half with it, in per cent.
+type attempt struct {
+	level        int
+	small, large ink.Micrometre // heights of capitals of small type and concentration
+	ways         []packing
+	share        ink.Micrometre
+}
+
+// A pass is a row of attempts from large type to small.
+type pass struct {
+	steps  []ink.Micrometre // of the ladder of sizes
+	levels int              // how many to try
+	ways   []packing
+	share  ink.Micrometre
+}
+
+// passes are tried in groups. The first: every item on a row of its own in the
+// lower half, down to 1.36 mm; then rows shared and some of the small type in
+// the upper half. The second: rows shared more freely. The last, for labels
+// that would be refused else: the name gives way as far as 2.5 mm.
+func passes() [][]pass {
+	every := []ink.Micrometre{12, 11, 10, 9, 8, 7, 6, 5, 4, 3, 2, 1, 0}
+	shared := []packing{apart, joined, tight, tightest}
+	return [][]pass{
+		{{every[:11], 1, []packing{apart}, 0}, {every, 3, shared, 75}},
+		{{every, 3, []packing{dense}, 75}},
+		{{every, 3, append(shared, dense), 0}},
+	}
+}
+
+// arrange finds the largest type with which the label fits its panel, for each
+// group of passes first with the best size of barcode module and then with the
+// smaller ones. When none fits it says what did not.
 func arrange(l labels.Label, panel box, s Stock, mono bool, modules []string) (arrangement, string) {
 	widths := []ink.Micrometre{0}
 	if len(modules) > 0 {
@@ -33,20 +66,27 @@ func arrange(l labels.Label, panel box, s Stock, mono bool, modules []string) (a
 		}
 	}
 	why := "its barcode"
-	for _, module := range widths {
-		symbol, ok := symbolBox(panel, s, module, len(modules))
-		if !ok {
-			continue
+	for _, group := range passes() {
+		for _, module := range widths {
+			symbol, ok := symbolBox(panel, s, module, len(modules))
+			if !ok {
+				continue
+			}
+			a := arrangement{design: newDesign(panel, s, l.Class, mono, symbol), modules: modules, module: module}
+			_, _, top := a.design.nameArea()
+			name, ok := a.design.fitName(l, top, 0)
+			if !ok {
+				why = "the drug name in capitals of 2.5 mm"
+				continue
+			}
+			a.full = name.capital
+			for _, p := range group {
+				if a.fit(l, p) {
+					return a, ""
+				}
+			}
+			why = "its lines in the smallest type allowed"
 		}
-		a := arrangement{design: newDesign(panel, s, l.Class, mono, symbol), modules: modules, module: module}
-		if _, ok := a.design.fitName(l, a.nameTop(nil, 0), 0); !ok {
-			why = "the drug name in capitals of 2.5 mm"
-			continue
-		}
-		if a.fit(l) {
-			return a, ""
-		}
-		why = "its lines in the smallest type allowed"
 	}
 	return arrangement{}, why
 }
@@ -76,20 +116,17 @@ func (a *arrangement) nameTop(upper []bin, capital ink.Micrometre) ink.Micrometr
 	return top
 }
 
-// fit tries sizes of type from large to small: first, down to 1.36 mm, with
-// every item on a row of its own in the lower half; then with rows shared and
-// more and more of the small type in the upper half.
-func (a *arrangement) fit(l labels.Label) bool {
-	const steps, ample = 12, 2
-	for k := ink.Micrometre(steps); k >= ample; k-- {
-		if a.try(l, 0, k, []packing{apart}) {
-			a.grow(l, 0, k, []packing{apart})
-			return true
-		}
-	}
-	for _, ways := range [][]packing{{apart, joined, tight, tightest}, {dense}} {
-		for k := ink.Micrometre(steps); k >= 0; k-- {
-			if a.levels(l, k, ways) {
+// fit tries a pass, and within each size of type more and more of the small
+// type in the upper half.
+func (a *arrangement) fit(l labels.Label, p pass) bool {
+	for _, k := range p.steps {
+		for level := range p.levels {
+			if level > 0 && len(upperItems(l, level)) == len(upperItems(l, level-1)) {
+				continue
+			}
+			t := attempt{level, smallLow + 80*k, concentrationLow + 250*k, p.ways, p.share}
+			if a.set(l, t) {
+				a.grow(l, t)
 				return true
 			}
 		}
@@ -97,51 +134,24 @@ func (a *arrangement) fit(l labels.Label) bool {
 	return false
 }
 
-// levels tries one step of the ladder with more and more in the upper half.
-func (a *arrangement) levels(l labels.Label, k ink.Micrometre, ways []packing) bool {
-	for level := range 3 {
-		if level > 0 && len(upperItems(l, level)) == len(upperItems(l, level-1)) {
-			continue
-		}
-		if a.try(l, level, k, ways) {
-			a.grow(l, level, k, ways)
-			return true
-		}
-	}
-	return false
-}
-
-// sizes are the capital heights of the small type and the concentration on
-// step k of a ladder; step 0 is the smallest allowed.
-func sizes(k ink.Micrometre) (small, large ink.Micrometre) {
-	return smallLow + 80*k, concentrationLow + 250*k
-}
-
 // grow makes the concentration larger as long as all still fits.
-func (a *arrangement) grow(l labels.Label, level int, k ink.Micrometre, ways []packing) {
-	small, _ := sizes(k)
-	for {
+func (a *arrangement) grow(l labels.Label, t attempt) {
+	for t.large = a.large + 100; t.large <= 5000; t.large += 100 {
 		larger := *a
-		if a.large+100 > 5000 || !larger.set(l, level, small, a.large+100, ways) || larger.large <= a.large {
+		if !larger.set(l, t) || larger.large <= a.large {
 			return
 		}
 		*a = larger
 	}
 }
 
-// try arranges the label on one step of the ladder of sizes.
-func (a *arrangement) try(l labels.Label, level int, k ink.Micrometre, ways []packing) bool {
-	small, large := sizes(k)
-	return a.set(l, level, small, large, ways)
-}
-
-// set arranges the label with one size of small type. The concentration is
-// at most 85 % of the name.
-func (a *arrangement) set(l labels.Label, level int, small, large ink.Micrometre, ways []packing) bool {
+// set makes one attempt. The concentration is at most 85 % of the name.
+func (a *arrangement) set(l labels.Label, t attempt) bool {
+	small := t.small
 	d := a.design
 	b := block{design: d, capital: small}
 	a.size, a.upper, a.line = b.size(), nil, box{}
-	items := upperItems(l, level)
+	items := upperItems(l, t.level)
 	reserve := ink.Micrometre(0)
 	if len(items) > 0 && d.class.Stripes {
 		reserve = ink.Micrometre(len(items))*(small*4/3) + (small-smallLow)/2
@@ -154,6 +164,9 @@ func (a *arrangement) set(l labels.Label, level int, small, large ink.Micrometre
 	}
 	var ok bool
 	if a.name, ok = a.fitted.fit(d, l, a.nameTop(a.upper, small), reserve); !ok {
+		return false
+	}
+	if a.name.capital*100 < a.full*t.share {
 		return false
 	}
 	b.top = max(d.middle, a.name.bottom)
@@ -171,9 +184,9 @@ func (a *arrangement) set(l labels.Label, level int, small, large ink.Micrometre
 		}
 		b.top = max(b.top, a.upper[len(a.upper)-1].base+small*31/100)
 	}
-	b.large = min(large, max(concentrationLow, a.name.capital*85/100))
+	b.large = min(t.large, max(concentrationLow, a.name.capital*85/100))
 	a.large = b.large
-	return a.fitLower(l, b, level, ways)
+	return a.fitLower(l, b, t)
 }
 
 // upperRows sets items row by row between left and right from y down.
@@ -204,11 +217,11 @@ func (b block) upperRows(items []item, left, right, y ink.Micrometre) ([]bin, bo
 
 // fitLower arranges the lower half: rows far apart before near, each item on
 // a row of its own before several together.
-func (a *arrangement) fitLower(l labels.Label, b block, level int, ways []packing) bool {
+func (a *arrangement) fitLower(l labels.Label, b block, t attempt) bool {
 	for _, pitch := range pitches(b.capital) {
 		b.pitch = b.capital * pitch / 100
-		for _, how := range ways {
-			if a.packed(l, b, lowerItems(l, level), how) {
+		for _, how := range t.ways {
+			if a.packed(l, b, lowerItems(l, t.level), how) {
 				return true
 			}
 		}

@@ -88,7 +88,7 @@ func handwritten(l labels.Label) []item {
 	var items []item
 	switch {
 	case l.Patient != "":
-		items = append(items, plain(labels.Words(l.Patient)))
+		items = append(items, plain(labels.Words("patient "+l.Patient)))
 	case l.Infusion:
 		items = append(items, item{line: labels.Words("patient"), face: ink.CondensedRegular, blank: 2 * writeName})
 	}

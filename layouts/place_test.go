@@ -240,7 +240,7 @@ func TestInfusionFields(t *testing.T) {
 	}
 	known := infusion()
 	known.Patient = "Test Person, 01 Jan 1970, 000"
-	if text := words(placed(t, []labels.Label{known}, stock(t, "a4-24"), layouts.Options{})); !strings.Contains(text, known.Patient) || strings.Contains(text, "patient") {
+	if text := words(placed(t, []labels.Label{known}, stock(t, "a4-24"), layouts.Options{})); !strings.Contains(text, "patient "+known.Patient) {
 		t.Errorf("got %q, want the patient printed", text)
 	}
 }
