@@ -64,25 +64,53 @@ func NewList(o order.Order, f *formulary.Formulary, at time.Time, leaveOut map[i
 	return list, all
 }
 
+// syringes names the syringes of numbers, runs of them short: "syringes 1, 3 to
+// 5 and 8"; "all syringes" when they are all.
+func syringes(numbers []int, all int) string {
+	if len(numbers) == all && all > 1 {
+		return "all syringes"
+	}
+	var parts []string
+	for i := 0; i < len(numbers); {
+		end := i
+		for end+1 < len(numbers) && numbers[end+1] == numbers[end]+1 {
+			end++
+		}
+		switch end - i {
+		case 0:
+			parts = append(parts, fmt.Sprint(numbers[i]))
+		case 1:
+			parts = append(parts, fmt.Sprint(numbers[i]), fmt.Sprint(numbers[end]))
+		default:
+			parts = append(parts, fmt.Sprintf("%d to %d", numbers[i], numbers[end]))
+		}
+		i = end + 1
+	}
+	if len(numbers) == 1 {
+		return "syringe " + parts[0]
+	}
+	return "syringes " + joinAnd(parts)
+}
+
 // shared gathers what would otherwise be said of nearly every syringe.
 func shared(plans []Plan) refusal.List {
-	var assay, useBy []string
+	var assay, useBy []int
 	for _, p := range plans {
 		if p.Mixture.AssayAssumed {
-			assay = append(assay, fmt.Sprint(p.Number))
+			assay = append(assay, p.Number)
 		}
 		if p.UseBy.Won != "" && !p.UseBy.Stability {
-			useBy = append(useBy, fmt.Sprint(p.Number))
+			useBy = append(useBy, p.Number)
 		}
 	}
 	var out refusal.List
 	if len(assay) > 0 {
 		out = append(out, refusal.Reason{Code: refusal.AssayAssumed, Severity: refusal.Caution, Rule: "R9", Field: "assay", Got: "none stored", Want: assumedAssay,
-			Message: "no assay limits are stored for the containers of syringe " + joinAnd(assay) + "; plus or minus " + assumedAssay + " is assumed for the interval"})
+			Message: "no assay limits are stored for the containers of " + syringes(assay, len(plans)) + "; plus or minus " + assumedAssay + " is assumed for the interval"})
 	}
 	if len(useBy) > 0 {
 		out = append(out, refusal.Reason{Code: refusal.UseByUnknown, Severity: refusal.Caution, Rule: "R18", Field: "stability", Got: "none stored", Want: "a stability at room temperature",
-			Message: "no stability at room temperature is stored for syringe " + joinAnd(useBy) + "; the use-by time follows site policy alone", Remedy: "check the pack and local policy"})
+			Message: "no stability at room temperature is stored for " + syringes(useBy, len(plans)) + "; the use-by time follows site policy alone", Remedy: "check the pack and local policy"})
 	}
 	return out
 }

@@ -6,6 +6,7 @@ import (
 	"encoding/hex"
 	"fmt"
 	"path/filepath"
+	"strings"
 	"time"
 
 	"drawup/dilution"
@@ -52,7 +53,21 @@ func newJob(file string, f *formulary.Formulary, at func(order.Session) (time.Ti
 		return j, reasons
 	}
 	j.making = makingOf(o, f, when, data)
+	reasons = append(reasons, leftOut(list)...)
 	return j, append(reasons, j.word()...)
+}
+
+// leftOut is the caution that names what was left out on request.
+func leftOut(l dilution.List) refusal.List {
+	if len(l.LeftOut) == 0 {
+		return nil
+	}
+	var words []string
+	for _, x := range l.LeftOut {
+		words = append(words, fmt.Sprintf("%d (%s)", x.Number, x.Drug))
+	}
+	return refusal.List{{Code: refusal.SyringesLeftOut, Severity: refusal.Caution, Field: "--leave-out", Got: strings.Join(words, ", "),
+		Message: "left out on request: syringe " + strings.Join(words, ", "), Remedy: "make these another way, or mend the order"}}
 }
 
 // unknownNumbers refuses numbers to leave out that no syringe has.

@@ -229,23 +229,57 @@ func (f *paperFlags) papers(j *job, dir string, cautions refusal.List) ([]file, 
 	return append(files, file{filepath.Join(dir, planName), data}), all
 }
 
-// labelPages lays bolus labels on one stock and infusion labels on another.
+// labelPages lays bolus labels on one stock and infusion labels on another. A
+// bolus label that its stock cannot hold goes to the larger one, and a caution
+// says so: nothing on it is cut, shrunk or dropped (rule R15).
 func (f *paperFlags) labelPages(j *job) ([]ink.Page, refusal.List) {
-	var bolus, infusion []labels.Label
-	for i, p := range j.list.Plans {
-		if p.Infusion != nil {
-			infusion = append(infusion, j.labels[i])
-		} else {
-			bolus = append(bolus, j.labels[i])
-		}
-	}
 	stock := f.stock
 	if stock == "" {
 		stock = "a4-65"
 	}
-	pages, reasons := placeLabels(j, bolus, stock, f.used, f.mono)
-	more, again := placeLabels(j, infusion, f.infusionStock, 0, f.mono)
-	return append(pages, more...), append(reasons, again...)
+	var small, large []labels.Label
+	var moved refusal.List
+	for i, p := range j.list.Plans {
+		l := j.labels[i]
+		switch {
+		case p.Infusion != nil:
+			large = append(large, l)
+		case stock != f.infusionStock && tooSmall(j, l, stock, f.mono):
+			large = append(large, l)
+			moved = append(moved, movedCaution(l, stock, f.infusionStock))
+		default:
+			small = append(small, l)
+		}
+	}
+	moved = append(moved, together(len(j.labels))...)
+	pages, reasons := placeLabels(j, small, stock, f.used, f.mono)
+	more, again := placeLabels(j, large, f.infusionStock, 0, f.mono)
+	return append(pages, more...), append(append(moved, reasons...), again...)
+}
+
+// together is the caution that goes with every list of labels: the rule is to
+// label a syringe when it is filled, before it leaves the hand (NPSA 2007 and
+// EBA, as quoted in Anaesthesia News, February 2021).
+func together(n int) refusal.List {
+	if n < 2 {
+		return nil
+	}
+	return refusal.List{{Code: refusal.LabelsTogether, Severity: refusal.Caution, Field: "labels", Got: fmt.Sprintf("%d labels at once", n), Want: "one label when its syringe is filled",
+		Source:  "NPSA 2007 and European Board of Anaesthesiology, quoted in Anaesthesia News, February 2021",
+		Message: "labels lie ready before the syringes are filled; label each syringe after filling, before it leaves the hand, and finish one drug before the next",
+		Remedy:  "drawup label ORDER --syringe N prints one label at its moment"}}
+}
+
+// tooSmall reports that the stock cannot hold the label, and that alone.
+func tooSmall(j *job, l labels.Label, stock string, mono bool) bool {
+	_, reasons := placeLabels(j, []labels.Label{l}, stock, 0, mono)
+	codes := reasons.Refusals().Codes()
+	return len(codes) == 1 && codes[0] == refusal.LabelTooSmall
+}
+
+func movedCaution(l labels.Label, from, to string) refusal.Reason {
+	return refusal.Reason{Code: refusal.LabelMoved, Severity: refusal.Caution, Syringe: l.Number, Field: "--stock", Got: from, Want: to, Rule: "R15",
+		Message: fmt.Sprintf("the label of syringe %d, %s, does not fit %s and stands on the sheet of %s", l.Number, l.Name, from, to), Remedy: "load that sheet for it"}
 }
 
 // placeLabels puts labels on a named stock.

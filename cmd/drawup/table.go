@@ -94,13 +94,13 @@ func tellFiles(w io.Writer, files []file) {
 // tellCautions counts the cautions and says where they stand; those that
 // concern the whole list are written out.
 func tellCautions(w io.Writer, l refusal.List) {
-	fmt.Fprintf(w, "\nlabels are for syringes that are already filled: fill, label, then the next drug\n")
 	if len(l) == 0 {
 		return
 	}
-	fmt.Fprintf(w, "%d cautions stand on the draw-up sheet; of these, for the list as a whole:\n", len(l))
+	fmt.Fprintln(w)
+	fmt.Fprintf(w, "%d cautions stand on the draw-up sheet; of these, before you start:\n", len(l))
 	for _, r := range l {
-		if r.Syringe == 0 {
+		if r.Syringe == 0 || r.Code == refusal.LabelMoved {
 			for _, line := range wrap(string(r.Code)+": "+r.Message, widest-2) {
 				fmt.Fprintf(w, "  %s\n", line)
 			}

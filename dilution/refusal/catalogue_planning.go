@@ -68,6 +68,8 @@ func measuringEntries() []Entry {
 func paperEntries() []Entry {
 	return []Entry{
 		stops(LabelTooSmall, Papers, "R15", "A label cannot hold name, concentration and use-by on that stock."),
+		warns(LabelMoved, Papers, "R15", "A label does not fit its stock and stands on the sheet of larger ones."),
+		warns(LabelsTogether, Papers, "", "Labels of a whole list are printed at once, before the syringes are filled."),
 		stops(GlyphMissing, Papers, "R15", "A text has a letter that no embedded face can show."),
 		either(TextTooLong, Papers, "R15", "A text does not fit: refused on a sheet, left to the draw-up sheet on a label."),
 		warns(SyringesLeftOut, Papers, "", "Syringes were left out on request."),

@@ -112,6 +112,8 @@ const (
 // Faults of paper.
 const (
 	LabelTooSmall    Code = "label-too-small"
+	LabelMoved       Code = "label-on-larger-stock"
+	LabelsTogether   Code = "labels-printed-together"
 	StockUnknown     Code = "stock-unknown"
 	GlyphMissing     Code = "glyph-missing"
 	TextTooLong      Code = "text-too-long"
