@@ -78,7 +78,7 @@ type Label struct {
 	CheckedBy bool // leaves a line for the second person's name
 
 	Marks  []string // MarkStarter, MarkUnverified, …
-	Digest string   // of order, formulary and time; printed in small type when not empty
+	Digest string   // of order, formulary and time; printed after "ref" when not empty
 }
 
 // lines lists all lines and cells in reading order.

@@ -46,11 +46,11 @@ type pass struct {
 // that would be refused else: the name gives way as far as 2.5 mm.
 func passes() [][]pass {
 	every := []ink.Micrometre{12, 11, 10, 9, 8, 7, 6, 5, 4, 3, 2, 1, 0}
-	shared := []packing{apart, joined, tight, tightest}
+	shared := []packing{apart, joined, tight, tighter, tightest}
 	return [][]pass{
-		{{every[:11], 1, []packing{apart}, 0}, {every, 3, shared, 75}},
-		{{every, 3, []packing{dense}, 75}},
-		{{every, 3, append(shared, dense), 0}},
+		{{every[:11], 1, []packing{apart}, 0}, {every, 4, shared, 75}},
+		{{every, 4, []packing{dense}, 75}},
+		{{every, 4, append(shared, dense), 0}},
 	}
 }
 
@@ -261,7 +261,8 @@ const (
 	joined                      // in order, several on a row, the use-by first on its row
 	dense                       // in order, several on a row
 	tight                       // the widest first
-	tightest                    // the widest first, the serial with them
+	tighter                     // the same with the concentration condensed
+	tightest                    // the same with the serial among the items
 )
 
 func (b block) pack(how packing, items []item, beside, foot *bin) ([]bin, bool) {
@@ -269,7 +270,7 @@ func (b block) pack(how packing, items []item, beside, foot *bin) ([]bin, bool) 
 	switch how {
 	case apart, joined, dense:
 		return b.inOrder(items, slots, how, beside)
-	case tight, tightest:
+	case tight, tighter, tightest:
 		return b.byWidth(items, slots, beside, foot)
 	}
 	return nil, false

@@ -36,6 +36,14 @@ type item struct {
 
 func plain(l labels.Line) item { return item{line: l, face: ink.CondensedRegular, foot: true} }
 
+// digest says what it is: digits beside an amount could be read as part of it.
+func digest(l labels.Label) item {
+	if l.Digest == "" {
+		return item{}
+	}
+	return plain(labels.Words("ref " + l.Digest))
+}
+
 // prepared is broken, if at all, before the name of who prepared.
 func prepared(l labels.Label) item {
 	it := plain(l.Prepared)
@@ -57,7 +65,7 @@ const (
 
 // lowerItems lists the small type of the lower half in reading order. From
 // level 1 on the marks stand in the upper half, from level 2 on also what
-// tells of the preparation.
+// tells of the preparation, on level 3 the digest.
 func lowerItems(l labels.Label, level int) []item {
 	var items []item
 	for _, line := range []labels.Line{l.Amount, l.Substance, l.Dose} {
@@ -71,7 +79,10 @@ func lowerItems(l labels.Label, level int) []item {
 	}
 	items = append(items, item{line: l.UseBy, face: ink.CondensedSemiBold, start: true})
 	if level < 2 {
-		items = append(items, prepared(l), plain(labels.Words(l.Digest)))
+		items = append(items, prepared(l))
+	}
+	if level < 3 {
+		items = append(items, digest(l))
 	}
 	items = append(items, handwritten(l)...)
 	if level < 1 {
@@ -110,7 +121,10 @@ func upperItems(l labels.Label, level int) []item {
 		}
 	}
 	if level >= 2 {
-		items = append(items, prepared(l), plain(labels.Words(l.Digest)))
+		items = append(items, prepared(l))
+	}
+	if level >= 3 {
+		items = append(items, digest(l))
 	}
 	return filled(items)
 }

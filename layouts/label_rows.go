@@ -59,10 +59,10 @@ type stated struct {
 }
 
 // concentrations sets the one or two concentrations at the top of the block,
-// in Bold, else or where rows are packed tightest in Condensed SemiBold.
+// in Bold, else or where rows are packed tighter in Condensed SemiBold.
 func (b block) concentrations(l labels.Label, how packing) ([]stated, bool) {
 	faces := []ink.Face{ink.Bold, ink.CondensedSemiBold}
-	if how == tightest {
+	if how == tighter || how == tightest {
 		faces = faces[1:]
 	}
 	list := []stated{{cell: l.Concentration, tail: l.As}}
