@@ -196,5 +196,10 @@ func (r *reader) badText(got string, err error, path ...any) {
 		r.fault(refusal.Code(s.Code), got, s.Want, err.Error(), path...)
 		return
 	}
+	var k *quantity.KindError
+	if errors.As(err, &k) {
+		r.fault(refusal.AmountKindDiffer, got, "a quantity counted by "+k.Want.String(), err.Error(), path...)
+		return
+	}
 	r.fault(refusal.ValueUnknown, got, "a value that reads", err.Error(), path...)
 }
