@@ -73,20 +73,26 @@ func (p *plot) point(point sheets.Point) []ink.Mark {
 		out = append(out, h.marks(dose.x, dose.y, point.Dose)...)
 		out = append(out, ink.Line{X1: p.x, Y1: at.Y, X2: p.x + 900, Y2: at.Y, Width: 200, Colour: ink.Black})
 	}
+	if point.Start { // the dashed lines are no place for figures
+		p.taken = append(p.taken, box{p.x, at.Y - 300, at.X - p.x, 600})
+	}
 	return out
 }
 
-// beside is room for a figure at the height of a point: left of the line, for
-// the start else right of it, clear of both.
+// beside is room for a figure at the height of a point: left of the line; for
+// the start right of it, else above its dashed line.
 func (p plot) beside(at ink.Point, w, h ink.Micrometre, start bool) (box, bool) {
 	const clear = 2600
 	left := box{p.x + 1400, at.Y - h/2, w, h}
+	if start {
+		right := box{at.X + clear, at.Y - h/2, w, h}
+		if right.right() <= p.x+p.w+5000 && right.bottom() < p.y && p.free(right) {
+			return right, true
+		}
+		left.y = at.Y - h - 200
+	}
 	if left.right()+clear <= at.X && p.free(left) {
 		return left, true
-	}
-	right := box{at.X + clear, at.Y - h/2, w, h}
-	if start && right.right() <= p.x+p.w+5000 && right.bottom() < p.y && p.free(right) {
-		return right, true
 	}
 	return box{}, false
 }

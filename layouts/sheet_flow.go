@@ -59,6 +59,7 @@ func newFlow(s sheets.Sheet) *flow {
 	f.foot = newFooting(f.set, s.Foot)
 	f.top = f.f.edge + bold(f.f.head).lead() + 3000
 	f.bottom = f.f.h - f.f.edge - f.foot.h - 1500
+	f.set.room = f.bottom - f.top
 	return f
 }
 

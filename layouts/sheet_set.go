@@ -2,6 +2,7 @@ package layouts
 
 import (
 	"fmt"
+	"slices"
 
 	"drawup/dilution/refusal"
 	"drawup/labels"
@@ -16,6 +17,7 @@ const tick = 3200
 type setter struct {
 	f       format
 	width   ink.Micrometre
+	room    ink.Micrometre // height of an empty page
 	sheet   sheets.Sheet
 	syringe int
 	refused *refusal.List
@@ -152,8 +154,11 @@ func (s setter) steps(b sheets.Steps) []slab {
 // pairs is one slab a row: the word, then its value.
 func (s setter) pairs(b sheets.Pairs) []slab {
 	size := s.f.body
-	if b.Small {
+	switch {
+	case b.Small:
 		size = s.f.small - 200
+	case b.Dense:
+		size = s.f.table
 	}
 	key, value := regular(size), regular(size)
 	value.act = b.Strong
@@ -207,7 +212,8 @@ func (s setter) cautions(b sheets.Cautions) []slab {
 	return out
 }
 
-// beside is two columns as one slab.
+// beside is two columns as one slab, or one below the other where they would
+// not fit on a page.
 func (s setter) beside(b sheets.Beside) []slab {
 	const gutter = 5000
 	left, right := s, s
@@ -217,7 +223,9 @@ func (s setter) beside(b sheets.Beside) []slab {
 	out := stacked(l)
 	other := stacked(r)
 	out.marks = append(out.marks, other.at(left.width+gutter, 0)...)
-	out.h = max(out.h, other.h)
+	if out.h = max(out.h, other.h); out.h > s.room*3/4 {
+		return s.part(sheets.Part{Syringe: s.syringe, Blocks: slices.Concat(b.Left, b.Right)})
+	}
 	return []slab{out}
 }
 

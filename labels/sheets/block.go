@@ -77,7 +77,8 @@ type Pair struct {
 type Pairs struct {
 	List   []Pair
 	Strong []string // names of the figures to find at once
-	Small  bool
+	Dense  bool
+	Small  bool // for reference only
 }
 
 // A BigRow is a number that has to be found at once.

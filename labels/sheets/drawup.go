@@ -27,11 +27,10 @@ func DrawUp(list dilution.List, facts []labels.Facts, m labels.Making) []Sheet {
 	for _, s := range all {
 		sheet.Parts = append(sheet.Parts, s.drawUpPart(list, &sources))
 	}
-	for _, p := range []Part{wastePart(all), leftOutPart(list), sources.part(0)} {
-		if len(p.Blocks) > 0 {
-			sheet.Parts = append(sheet.Parts, p)
-		}
-	}
+	sheet.Parts = append(sheet.Parts, wastePart(all), leftOutPart(list))
+	sheet.Parts = append(sheet.Parts, notesParts(all, &sources)...)
+	sheet.Parts = append(sheet.Parts, sources.part(0))
+	sheet.Parts = slices.DeleteFunc(sheet.Parts, func(p Part) bool { return len(p.Blocks) == 0 })
 	return []Sheet{sheet}
 }
 
@@ -164,37 +163,51 @@ func barrels(all []scribe) string {
 // drawUpPart is one syringe: head, steps, what results, cautions.
 func (s scribe) drawUpPart(list dilution.List, sources *sourceList) Part {
 	below := joined(labels.Words(s.patient()+"; "+s.p.Route+"; "), s.say(s.container()))
-	blocks := []Block{
+	steps := Steps{List: s.steps(), Strong: []string{recheck.DrugVolume, recheck.FinalVolume, recheck.PowderAdded}}
+	right := []Block{Pairs{Dense: true, List: s.results(), Strong: []string{recheck.DoseVolume, recheck.UseBy, recheck.StartRate}}}
+	if c := append(s.cautions(list), sources.short(s)...); len(c) > 0 {
+		right = append(right, Cautions{c})
+	}
+	return Part{Syringe: s.p.Number, Blocks: []Block{
 		s.name(s.say(s.concentration()), below, false),
-		Steps{List: s.steps(), Strong: []string{recheck.DrugVolume, recheck.FinalVolume, recheck.PowderAdded}},
-		Pairs{List: s.results(), Strong: []string{recheck.DoseVolume, recheck.UseBy, recheck.StartRate}},
-	}
-	if c := append(s.cautions(list), sources.notes(s)...); len(c) > 0 {
-		blocks = append(blocks, Cautions{c})
-	}
-	return Part{Syringe: s.p.Number, Blocks: blocks}
+		Beside{LeftShare: 52, Left: []Block{steps}, Right: right},
+	}}
 }
 
 // results are what the syringe holds when the steps are done.
 func (s scribe) results() []Pair {
-	out := []Pair{{"Holds", s.say("{amount} in {final.volume}, " + s.concentration() + s.countedAs())}}
-	if s.f.Has(recheck.SubstanceAmount) {
-		out = append(out, Pair{"That is", s.say("{substance.amount}, {substance.concentration}")})
-	}
-	if s.f.Has(recheck.SecondAmount) {
-		out = append(out, Pair{"With", s.say("{second.amount} " + s.p.Presentation.SecondName + ", {second.concentration}")})
-	}
-	out = append(out, Pair{"True strength", joined(s.say("between {interval.low} and {interval.high}, plus or minus {interval.percent}"), labels.Words(s.assumed()))})
+	var out []Pair
 	if s.p.Dose != nil {
 		out = append(out, Pair{"One dose", s.doseLine()})
 	}
 	if s.p.Infusion != nil {
 		out = append(out, Pair{"Pump", s.say("start {start.rate}; see the pump card")})
 	}
+	out = append(out, Pair{"Use by", joined(s.say("{use.by}, after {use.hours}"), labels.Words(": "+s.p.UseBy.Won+" ends first"))})
+	out = append(out, Pair{"Holds", s.say("{amount} in {final.volume}, " + s.concentration() + s.countedAs())})
+	if s.f.Has(recheck.SubstanceAmount) {
+		out = append(out, Pair{"That is", s.say("{substance.amount}, {substance.concentration}")})
+	}
+	if s.f.Has(recheck.SecondAmount) {
+		out = append(out, Pair{"With", s.say("{second.amount} " + s.p.Presentation.SecondName + ", {second.concentration}")})
+	}
+	out = append(out, Pair{"Truly", joined(s.say("{interval.low} to {interval.high}, plus or minus {interval.percent}"), labels.Words(s.assumed()))})
 	if flags := s.flags(); flags != "" {
 		out = append(out, words("Marked", flags))
 	}
-	return append(out, Pair{"Use by", joined(s.say("{use.by}, after {use.hours}"), labels.Words(": "+s.p.UseBy.Won+" ends first"))})
+	return append(out, s.noted()...)
+}
+
+// noted points to the notes at the end of the sheet.
+func (s scribe) noted() []Pair {
+	n := len(s.p.Drug.Cautions)
+	switch n {
+	case 0:
+		return nil
+	case 1:
+		return []Pair{words("Notes", "1 of the formulary, at the end")}
+	}
+	return []Pair{words("Notes", fmt.Sprintf("%d of the formulary, at the end", n))}
 }
 
 func (s scribe) countedAs() string {
@@ -225,6 +238,24 @@ func (s scribe) doseLine() labels.Line {
 		whole = ", the whole syringe"
 	}
 	return s.say("{dose.volume} gives {dose.delivered}" + whole + "; ordered {dose}" + by)
+}
+
+// notesParts are the formulary's notes, once a drug, in order of making.
+func notesParts(all []scribe, sources *sourceList) []Part {
+	var out []Part
+	seen := map[string]bool{}
+	for _, s := range all {
+		name := s.p.Drug.Name
+		c := sources.cautions(s.p.Drug.Cautions)
+		if seen[name] || len(c) == 0 {
+			continue
+		}
+		seen[name] = true
+		half := (len(c) + 1) / 2
+		out = append(out, Part{Blocks: []Block{heading("Notes of the formulary on " + s.drug()),
+			Beside{LeftShare: 50, Left: []Block{Cautions{c[:half]}}, Right: []Block{Cautions{c[half:]}}}}})
+	}
+	return out
 }
 
 // wastePart is what is left in the containers, to be discarded.

@@ -35,23 +35,27 @@ func (l *sourceList) mark(s formulary.Source, unverified bool) string {
 	return text
 }
 
-// notes are the cautions that the formulary holds for the drug, each with the
-// mark of its source.
-func (l *sourceList) notes(s scribe) []Caution {
-	var out []Caution
-	add := func(n formulary.Note) {
-		out = append(out, Caution{Text: sentence(n.Text), Note: l.mark(n.Source, n.Unverified)})
-	}
-	for _, n := range s.p.Presentation.Notes {
-		add(n)
-	}
-	for _, n := range s.p.Drug.Cautions {
-		add(n)
-	}
+// short are the formulary's words on this very container, and those on what
+// the drug is never used for, each with the mark of its source.
+func (l *sourceList) short(s scribe) []Caution {
+	out := l.cautions(s.p.Presentation.Notes)
 	for _, n := range []*formulary.Note{s.p.Drug.NeverAsInfusion, s.p.Drug.NeverAsBolus} {
 		if n != nil {
-			add(*n)
+			out = append(out, l.cautions([]formulary.Note{*n})...)
 		}
+	}
+	return out
+}
+
+// notes are all that the formulary says of the container and the drug.
+func (l *sourceList) notes(s scribe) []Caution {
+	return append(l.short(s), l.cautions(s.p.Drug.Cautions)...)
+}
+
+func (l *sourceList) cautions(notes []formulary.Note) []Caution {
+	var out []Caution
+	for _, n := range notes {
+		out = append(out, Caution{Text: sentence(n.Text), Note: l.mark(n.Source, n.Unverified)})
 	}
 	return out
 }
@@ -61,21 +65,24 @@ func (l *sourceList) part(syringe int) Part {
 	if len(l.list) == 0 {
 		return Part{}
 	}
-	var left, right Pairs
-	left.Small, right.Small = true, true
-	for i, s := range l.list {
-		pair := words(fmt.Sprintf("source %d", i+1), s.Title+" ("+grade(s.Grade)+")")
-		if i < (len(l.list)+1)/2 {
-			left.List = append(left.List, pair)
-		} else {
-			right.List = append(right.List, pair)
-		}
+	const group = 12 // sources that stand beside each other, half of them on each side
+	blocks := []Block{heading("Sources")}
+	for from := 0; from < len(l.list); from += group {
+		to := min(from+group, len(l.list))
+		half := from + (to-from+1)/2
+		blocks = append(blocks, Beside{LeftShare: 50, Left: []Block{l.pairs(from, half)}, Right: []Block{l.pairs(half, to)}})
 	}
-	return Part{Syringe: syringe, Blocks: []Block{
-		heading("Sources"),
-		Beside{LeftShare: 50, Left: []Block{left}, Right: []Block{right}},
-		Words{Line: labels.Words(grades), Small: true},
-	}}
+	return Part{Syringe: syringe, Blocks: append(blocks, Words{Line: labels.Words(grades), Small: true})}
+}
+
+// pairs are the sources from one place in the list up to another.
+func (l *sourceList) pairs(from, to int) Pairs {
+	out := Pairs{Small: true}
+	for i := from; i < to; i++ {
+		s := l.list[i]
+		out.List = append(out.List, words(fmt.Sprintf("source %d", i+1), s.Title+" ("+grade(s.Grade)+")"))
+	}
+	return out
 }
 
 // grades says what the formulary's letters mean.
