@@ -136,6 +136,9 @@ func (s scribe) readBoxes() []Box {
 func (s scribe) workBoxes() []Box {
 	amount := s.unit(s.p.Presentation.Amount.Unit())
 	out := []Box{{Label: "drug volume it takes", Unit: "mL"}, {Label: "amount in it", Unit: amount}, {Label: "concentration", Unit: amount + "/mL"}}
+	if second := s.p.Presentation.SecondAmount; second.Given() {
+		out = append(out, Box{Label: s.p.Presentation.SecondName + ", concentration", Unit: s.unit(second.Unit()) + "/mL"})
+	}
 	if d := s.p.Dose; d != nil {
 		out = append(scalarBox(d.By, d.Surface.Given(), d.Weight.Given()), out...)
 		out = append(out, Box{Label: "one dose, amount", Unit: s.unit(d.Ordered.Unit())}, Box{Label: "one dose, volume", Unit: "mL"})
