@@ -85,11 +85,11 @@ func mixFault(s, head, tail string, errA, errV error) error {
 
 // mended is the part as it was probably meant, and its fault, if any.
 func mended(part string, err error) (string, *SyntaxError) {
-	fault, ok := err.(*SyntaxError)
-	if !ok {
-		return part, nil
+	if fault, ok := err.(*SyntaxError); ok {
+		return fault.Likely, fault
 	}
-	return fault.Likely, fault
+	number, unit := splitNumber(part)
+	return trimZeros(number) + " " + unit, nil
 }
 
 // ParseFlowRate reads "5.3 mL/h", "0.5 mL/min", "1 L/day". It must be above

@@ -80,7 +80,7 @@ func perMended(r reading, number, unit string) string {
 	if n == "" {
 		return ""
 	}
-	return r.number + " " + slashParts(r.unit)[0] + "/" + n + " " + unit
+	return trimZeros(r.number) + " " + slashParts(r.unit)[0] + "/" + n + " " + unit
 }
 
 // ratioOf cuts the n out of "1:n", "1 : n" and "1 in n". "1 in 5 mL" is none.
