@@ -24,7 +24,7 @@ func starter(t testing.TB) *formulary.Formulary {
 }
 
 // plan reads an order from text and plans it, as the command does.
-func plan(t testing.TB, f *formulary.Formulary, text string) (dilution.List, refusal.List) {
+func plan(t interface{ Helper() }, f *formulary.Formulary, text string) (dilution.List, refusal.List) {
 	t.Helper()
 	o, faults := order.Read("order.toml", []byte(text))
 	return dilution.NewList(o, f, o.Session.Prepared.Value, nil, faults)
