@@ -36,7 +36,7 @@ func (w *work) dose() bool {
 	if err != nil {
 		return w.fault(err, "dose", w.o.Dose.Pos)
 	}
-	d.Step = m.FinalBarrel.Step()
+	d.Wanted, d.Step = exact, m.FinalBarrel.Step()
 	if d.Volume, _, err = exact.ToStep(d.Step, quantity.HalfUp); err != nil {
 		return w.fault(err, "dose", w.o.Dose.Pos)
 	}

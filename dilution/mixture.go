@@ -205,7 +205,7 @@ func (w *work) draw(t target) bool {
 	if !ok {
 		return false
 	}
-	m.DrugReading, m.DrugVolume = r, r.Volume
+	m.DrugWanted, m.DrugReading, m.DrugVolume = need, r, r.Volume
 	n, err := m.DrugVolume.Containers(w.plan.Presentation.Volume)
 	if err != nil {
 		return w.fault(err, t.field, t.pos)

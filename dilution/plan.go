@@ -48,6 +48,7 @@ type Mixture struct {
 	Method        Method
 	Containers    int
 	Strength      quantity.Concentration // of the presentation, after mixing a powder
+	DrugWanted    quantity.Volume // exact, before the graduation
 	DrugVolume    quantity.Volume
 	DrugReading   syringe.Reading
 	Diluent       string // "" when neat
@@ -77,6 +78,7 @@ type DosePart struct {
 	Weight    quantity.BodyWeight // the rounded weight it goes by, if any
 	Surface   quantity.BodySurfaceArea
 	Amount    quantity.Amount // exact
+	Wanted    quantity.Volume // exact, before the graduation
 	Volume    quantity.Volume // on the giving barrel's graduation
 	Step      quantity.Volume
 	Delivered quantity.Amount

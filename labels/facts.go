@@ -2,6 +2,7 @@ package labels
 
 import (
 	"fmt"
+	"math/big"
 	"sort"
 	"strings"
 	"time"
@@ -81,6 +82,8 @@ func (w Facts) container(p dilution.Plan) {
 func (w Facts) mixture(p dilution.Plan) {
 	s, m := w.style, p.Mixture
 	w.put(recheck.Method, m.Method.String())
+	w.put(recheck.DrugWanted, s.Volume(m.DrugWanted))
+	w.put(recheck.DrugMoved, movedText(s, m.DrugReading.MovedPercent))
 	w.put(recheck.DrugVolume, s.Volume(m.DrugVolume))
 	w.put(recheck.DrugStep, s.Volume(m.DrugReading.Barrel.Step()))
 	w.put(recheck.DrugBarrel, s.Volume(m.DrugReading.Barrel.Nominal()))
@@ -124,14 +127,15 @@ func (w Facts) patient(p dilution.Plan) {
 		used[p.Infusion.By] = true
 	}
 	for _, k := range []struct {
-		kind body.Kind
-		name string
-	}{{body.Ideal, recheck.WeightIdeal}, {body.Adjusted, recheck.WeightAdjusted}, {body.Lean, recheck.WeightLean}} {
+		kind       body.Kind
+		name, full string
+	}{{body.Ideal, recheck.WeightIdeal, recheck.IdealFull}, {body.Adjusted, recheck.WeightAdjusted, recheck.AdjustedFull}, {body.Lean, recheck.WeightLean, recheck.LeanFull}} {
 		if !used[k.kind] && !(k.kind == body.Ideal && used[body.Adjusted]) {
 			continue
 		}
 		if weight, err := size.Used(k.kind); err == nil {
 			w.put(k.name, s.BodyWeight(weight))
+			w.put(k.full, fullWeight(size, k.kind))
 		}
 	}
 	if used[body.Surface] {
@@ -150,9 +154,56 @@ func (w Facts) dose(p dilution.Plan) {
 	w.put(recheck.DoseWeightBy, d.By.String())
 	w.put(recheck.DoseWeight, scalarText(s, d.Weight, d.Surface))
 	w.put(recheck.DoseAmount, s.Amount(d.Amount))
+	w.put(recheck.DoseWanted, s.Volume(d.Wanted))
+	w.put(recheck.DoseMoved, movedText(s, share(d.Volume, d.Wanted)))
 	w.put(recheck.DoseVolume, s.Volume(d.Volume))
 	w.put(recheck.DoseStep, s.Volume(d.Step))
 	w.put(recheck.DoseDelivered, s.Amount(d.Delivered))
+}
+
+// movedText is what a rounding lost: "1.12 % more", "0.7 % less", "nothing".
+func movedText(s quantity.Style, percent *big.Rat) string {
+	if percent == nil || percent.Sign() == 0 {
+		return "nothing"
+	}
+	text := s.Percent(quantity.PerCent(new(big.Rat).Abs(percent)))
+	if percent.Sign() > 0 {
+		return text + " more"
+	}
+	return text + " less"
+}
+
+// share is how far got lies from wanted, in per cent of wanted.
+func share(got, wanted quantity.Volume) *big.Rat {
+	if !wanted.Given() || wanted.IsZero() {
+		return nil
+	}
+	d := new(big.Rat).Sub(got.Rat(), wanted.Rat())
+	return d.Mul(d, big.NewRat(100, 1)).Quo(d, wanted.Rat())
+}
+
+// fullWeight is a computed weight before it is rounded to 0.1 kg, to four
+// decimals.
+func fullWeight(size body.Size, kind body.Kind) string {
+	var weight quantity.BodyWeight
+	var err error
+	switch kind {
+	case body.Ideal:
+		weight, err = size.Ideal()
+	case body.Adjusted:
+		weight, err = size.Adjusted()
+	case body.Lean:
+		weight, err = size.Lean()
+	case body.Actual, body.Surface, body.None:
+		return ""
+	}
+	if err != nil {
+		return ""
+	}
+	if weight, err = weight.ToStep(big.NewRat(1, 10000), quantity.HalfUp); err != nil {
+		return ""
+	}
+	return weight.Exact() + " kg"
 }
 
 func scalarText(s quantity.Style, weight quantity.BodyWeight, area quantity.BodySurfaceArea) string {
@@ -171,6 +222,8 @@ func (w *Facts) infusion(p dilution.Plan) {
 	w.put(recheck.RateWeight, scalarText(s, part.Weight, part.Surface))
 	w.put(recheck.RateStep, s.FlowRate(part.Step))
 	w.put(recheck.StartDose, s.DoseRate(part.Start.Dose))
+	w.put(recheck.StartFlow, s.FlowRate(part.Start.Exact))
+	w.put(recheck.StartMoved, movedText(s, part.Start.LostPercent))
 	w.put(recheck.StartRate, s.FlowRate(part.Start.Rate))
 	w.put(recheck.StartDelivered, s.DoseRate(part.Start.Delivered))
 	for _, x := range []struct {

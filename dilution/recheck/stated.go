@@ -138,6 +138,31 @@ const (
 	Serial = "serial" // eight digits
 )
 
+// Values before they were rounded, and what the rounding lost (rule R2).
+const (
+	DrugWanted = "drug.wanted" // volume that the order takes exactly, by RULE SHORT: asked amount, or concentration x final volume, or dose.amount, over the strength
+	DrugMoved  = "drug.moved"  // (drug.volume - wanted) / wanted: "1.12 % more", "0.7 % less", "nothing"; the number by RULE SHORT
+	DoseWanted = "dose.wanted" // dose.amount (exact) / concentration (exact), by RULE SHORT
+	DoseMoved  = "dose.moved"  // (dose.volume - wanted) / wanted, written like drug.moved
+	StartFlow  = "start.flow"  // exact flow of start.dose; exactly when two decimals are enough, else by RULE SHORT
+	StartMoved = "start.moved" // (start.rate - flow) / flow, written like drug.moved
+
+	IdealFull    = "weight.ideal.full"    // before rounding to 0.1 kg: half up to four decimals, trailing zeros dropped
+	AdjustedFull = "weight.adjusted.full" // likewise
+	LeanFull     = "weight.lean.full"     // likewise
+)
+
+// Names of sentences that hold figures: Row(Said, 3, "text"). A sentence that
+// stands word for word in the record is right. In any other, every number, with
+// its unit where it has one, must be a value that another figure of this
+// syringe, the order as typed, or the drug's block of the record holds.
+// Row(Bound, 3, "text") is one limit of the formulary as printed: its quantity
+// must stand in the drug's block of the record, whatever the spelling.
+const (
+	Said  = "said"
+	Bound = "bound"
+)
+
 // Names of table rows: Row("ladder", 3, "rate") is "ladder.3.rate".
 //
 //	ladder.N.dose       a dose rate
