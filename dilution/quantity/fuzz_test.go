@@ -13,9 +13,19 @@ type readBack struct {
 	same  func(words string) bool
 }
 
+type reader func(string) (readBack, error)
+
 // readers give the read-back of a text, or the error.
-func readers() map[string]func(string) (readBack, error) {
-	return map[string]func(string) (readBack, error){
+func readers() map[string]reader {
+	all := drugReaders()
+	for name, r := range bodyReaders() {
+		all[name] = r
+	}
+	return all
+}
+
+func drugReaders() map[string]reader {
+	return map[string]reader{
 		"amount": func(s string) (readBack, error) {
 			a, err := ParseAmount(s)
 			return readBack{a.Exact(a.Unit()) + " " + a.Unit().String(), func(w string) bool {
@@ -58,6 +68,11 @@ func readers() map[string]func(string) (readBack, error) {
 			f, err := ParseFlowRate(s)
 			return readBack{f.Exact() + " mL/h", func(w string) bool { b, err := ParseFlowRate(w); return err == nil && b.Cmp(f) == 0 }}, err
 		},
+	}
+}
+
+func bodyReaders() map[string]reader {
+	return map[string]reader{
 		"weight": func(s string) (readBack, error) {
 			v, err := ParseBodyWeight(s)
 			return readBack{v.Exact() + " kg", func(w string) bool { b, err := ParseBodyWeight(w); return err == nil && b.Cmp(v) == 0 }}, err

@@ -89,8 +89,8 @@ func allDigits(s string) bool {
 	return s != ""
 }
 
-// ungroup joins digits set off in threes by mark: "12'500", "1,000.5". The
-// first group must not begin with 0; decimals may follow if mark is no point.
+// ungroup joins digits set off in threes by mark: "12'500", "1,000.5". Decimals
+// may follow if mark is no point. What it joins must be a plain number.
 func ungroup(s, mark string) (string, bool) {
 	tail := ""
 	if mark != "." {
@@ -101,7 +101,7 @@ func ungroup(s, mark string) (string, bool) {
 	}
 	groups := strings.Split(s, mark)
 	for i, g := range groups {
-		if !allDigits(g) || len(g) > 3 || (i > 0 && len(g) != 3) || (i == 0 && g[0] == '0') {
+		if !allDigits(g) || len(g) > 3 || (i > 0 && len(g) != 3) {
 			return "", false
 		}
 	}

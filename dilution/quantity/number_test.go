@@ -42,7 +42,7 @@ func TestNumbersRefused(t *testing.T) {
 		{"5,0", CommaNumber, "5 mg"}, {"1,000", CommaNumber, "1000 mg"}, {"12,500", CommaNumber, "12500 mg"},
 		{"1,000,000", CommaNumber, "1000000 mg"}, {"1,000.5", CommaNumber, "1000.5 mg"}, {"1.000,5", CommaNumber, "1000.5 mg"},
 		{"1,5,2", CommaNumber, ""}, {",5", CommaNumber, ""}, {"5,", CommaNumber, ""}, {"-1,5", CommaNumber, ""}, {"1,0000", CommaNumber, ""},
-		{"007,5", CommaNumber, ""},
+		{"007,5", CommaNumber, ""}, {"0,005", CommaNumber, "0.005 mg"}, {"1234,567", CommaNumber, "1234.567 mg"}, {"1234,567,890", CommaNumber, ""}, {"1,00,000", CommaNumber, ""},
 		{"1.2.3", BadNumber, ""}, {"1..5", BadNumber, "1.5 mg"}, {"1.000.000", BadNumber, "1000000 mg"},
 		{".5", BadNumber, "0.5 mg"}, {".50", BadNumber, "0.5 mg"}, {"5.", BadNumber, "5 mg"}, {"50.0.", BadNumber, "50 mg"}, {".", BadNumber, ""},
 		{"5-", BadNumber, ""}, {"-5", BadNumber, ""}, {"\u22125", BadNumber, ""}, {"\u20135", BadNumber, ""}, {"-.5", BadNumber, ""},
@@ -100,6 +100,14 @@ func TestErrorWords(t *testing.T) {
 	for _, want := range []string{`got "0,5 cc"`, `want a volume`, `was "0.5 mL" meant?`} {
 		if !strings.Contains(err.Error(), want) {
 			t.Errorf("got %q, want %q in it", err, want)
+		}
+	}
+	for text, want := range map[string]string{
+		"-5 mg": "a sign or a range", "5-10 mg": "a sign or a range", "05 mg": "may have lost its point", "1,5 mg": "a decimal or a thousand",
+		"5 mL": `the unit "mL" does not fit here`, "5 IU": `the unit "IU" is not known`, "5": "the unit is missing", "1 1/2 mg": "in two parts", "five mg": "no number",
+	} {
+		if _, err := ParseAmount(text); !strings.Contains(err.Error(), want) {
+			t.Errorf("%s: got %q, want %q in it", text, err, want)
 		}
 	}
 	for err, want := range map[error]string{

@@ -198,6 +198,9 @@ func TestNotGiven(t *testing.T) {
 		a.Scaled(nil, Gram()).Given() || (Amount{}).Scaled(one, Gram()).Given() || c.Scaled(new(big.Rat)).Given() || r.Scaled(minus).Given() || f.Scaled(nil).Given() || (Dose{}).Scaled(one).Given() {
 		t.Error("a value that cannot be is given")
 	}
+	if whole(1).quo(whole(0)).given() {
+		t.Error("something divided by nothing is given")
+	}
 	if k := (Amount{}).Scaled(one, Gram()).Kind(); k != 0 {
 		t.Errorf("a value that is not given is counted by %v", k)
 	}

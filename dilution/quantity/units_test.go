@@ -1,6 +1,10 @@
 package quantity
 
-import "testing"
+import (
+	"slices"
+	"strings"
+	"testing"
+)
 
 // TestUnitsAccepted: every spelling that the manual lists for input. The
 // factors are those of the SI (SI Brochure, table of prefixes), of the day of
@@ -139,5 +143,68 @@ func TestWeightsRefused(t *testing.T) {
 	}
 	if w, err := ParseBodyWeight("3.4 kg"); err != nil || w.Exact() != "3.4" {
 		t.Errorf("3.4 kg: got %s, %v", w.Exact(), err)
+	}
+}
+
+// TestMisspelt: every spelling that is mended, where its unit is wanted. The
+// first of each row is on the ISMP list of error-prone abbreviations or the
+// Joint Commission "Do Not Use" list where it has one; the others are common
+// slips, without a source.
+func TestMisspelt(t *testing.T) {
+	for want, spellings := range map[string][]string{
+		"amount 5 units":        {"IU", "U", "iu", "I.U.", "i.u.", "u", "UI", "IE", "Unit", "Units", "UNIT", "UNITS"},
+		"volume 5 mL":           {"cc", "ccm", "cm3", "ML", "Ml", "mls", "mLs", "mils", "mL."},
+		"amount 5 microgram":    {"ug", "ugm", "mcgm", "mcgs", "Mcg", "MCG", "gamma", "mikrogram"},
+		"amount 5 mg":           {"mgs", "mgm", "mgms", "MG", "Mg", "mg."},
+		"amount 5 g":            {"gm", "gms", "gs", "G"},
+		"amount 5 nanogram":     {"nanog", "ngs", "NG"},
+		"amount 5 mmol":         {"mmols", "mMol", "mmoles"},
+		"weight 5 kg":           {"kgs", "Kg", "KG", "kilo", "kilos", "kilogram", "kilograms"},
+		"flow rate 5 mL/h":      {"mL/hrs", "mL/H", "mL/Hr", "mL/HR", "mL/hours"},
+		"flow rate 5 mL/min":    {"mL/minutes", "mL/Min", "mL/MIN"},
+		"flow rate 5 mL/day":    {"mL/D", "mL/days", "mL/Day"},
+		"surface 5 m2":          {"m^2", "M2", "sqm", "sq m"},
+		"height 5 cm":           {"Cm", "CM", "cms", "centimetre", "centimetres"},
+		"height 5 m":            {"M", "metre", "metres"},
+		"dose rate 5 mg/m2/day": {"MG/m^2/days"},
+	} {
+		name, text, _ := strings.Cut(want, " 5 ")
+		for _, s := range spellings {
+			err := sortNamed(t, name).parse("5.0 " + s)
+			if fault := faultIn(t, s, err); fault.Code != UnknownUnit || fault.Likely != "5 "+text {
+				t.Errorf("%s %q: got %s, likely %q, want %s, %q", name, s, fault.Code, fault.Likely, UnknownUnit, "5 "+text)
+			}
+		}
+	}
+	for _, name := range []string{"dose", "dose rate", "flow rate"} {
+		text := map[string]string{"dose": "0 mg/kg", "dose rate": "0 mg/h", "flow rate": "0 mL/h"}[name]
+		if err := sortNamed(t, name).parse(text); faultIn(t, text, err).Code != ZeroOrLess {
+			t.Errorf("%s: got %v, want %s", text, err, ZeroOrLess)
+		}
+	}
+}
+
+// TestWords: what a value was read from, and the names of kinds, bases, periods.
+func TestWords(t *testing.T) {
+	a, _ := ParseAmount(" 4\u00a0mg ")
+	v, _ := ParseVolume("1 L")
+	c, _ := ParseConcentration("1:1000")
+	d, _ := ParseDose("0.3 mg/kg")
+	r, _ := ParseDoseRate("5 units/hr")
+	f, _ := ParseFlowRate("5 ml/hr")
+	w, _ := ParseBodyWeight("72 kg")
+	s, _ := ParseSurface("1.8 m2")
+	l, _ := ParseLength("1.78 m")
+	p, _ := ParsePercent("10%")
+	got := []string{a.Written(), v.Written(), c.Written(), d.Written(), r.Written(), f.Written(), w.Written(), s.Written(), l.Written(), p.Written()}
+	want := []string{"4 mg", "1 L", "1:1000", "0.3 mg/kg", "5 units/hr", "5 ml/hr", "72 kg", "1.8 m2", "1.78 m", "10%"}
+	if !slices.Equal(got, want) {
+		t.Errorf("written: got %q, want %q", got, want)
+	}
+	got = []string{d.Kind().String(), r.Kind().String(), BySubstance.String(), Kind(0).String(), d.Basis().String(), Absolute.String(), PerSquareMetre.String(), Basis(0).String(),
+		r.Period().String(), PerMinute.String(), PerDay.String(), Period(0).String(), r.Unit().String(), Micromole().String(), Unit{}.String()}
+	want = []string{"mass", "units", "amount of substance", "nothing", "per kg", "absolute", "per m²", "nothing", "h", "min", "day", "", "unit", "micromol", ""}
+	if !slices.Equal(got, want) {
+		t.Errorf("names: got %q, want %q", got, want)
 	}
 }
