@@ -44,10 +44,11 @@ func NewList(o order.Order, f *formulary.Formulary, at time.Time, leaveOut map[i
 	broken := brokenSyringes(faults)
 	for _, sy := range o.Syringes {
 		unread := broken[sy.Number] || unreadable(o.Patients[sy.Patient])
+		p, reasons := newPlan(s, f, o, sy, at, unread)
 		if unread && !leaveOut[sy.Number] {
+			all = append(all, reasons.Refusals()...)
 			continue
 		}
-		p, reasons := newPlan(s, f, o, sy, at, unread)
 		if leaveOut[sy.Number] {
 			list.LeftOut = append(list.LeftOut, LeftOut{sy.Number, sy.Drug.Value, append(faults.Of(sy.Number), reasons.Refusals()...)})
 			continue
@@ -135,7 +136,8 @@ func unreadable(p order.Patient) bool {
 }
 
 // newPlan works one syringe. A syringe whose order could not be read whole is
-// not worked: its reasons are those of the reading.
+// not worked, but its drug and presentation are looked up, so that these faults
+// show at once too.
 func newPlan(s site, f *formulary.Formulary, o order.Order, sy order.Syringe, at time.Time, broken bool) (Plan, refusal.List) {
 	w := &work{site: s, f: f, o: sy, patient: o.Patients[sy.Patient]}
 	w.plan = Plan{Number: sy.Number, Order: sy, Patient: w.patient, Style: s.style, Prepared: at, Route: "IV"}
@@ -143,7 +145,10 @@ func newPlan(s site, f *formulary.Formulary, o order.Order, sy order.Syringe, at
 		w.plan.Route = sy.Route.Value
 	}
 	if broken {
-		return w.plan, nil
+		if sy.Drug.Given() && w.findDrug() {
+			w.choosePresentation()
+		}
+		return w.plan, w.reasons
 	}
 	w.size = body.Size{Sex: w.patient.Sex.Value, Age: w.patient.Age.Value, Height: w.patient.Height.Value, Weight: w.patient.Weight.Value}
 	w.plan.Size = w.size
