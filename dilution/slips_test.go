@@ -101,13 +101,18 @@ func fitting(t *testing.T, r row) []string {
 }
 
 // ways are the orders in which the drug may be asked for, without the dose:
-// each presentation as it is, and diluted to either end of its bounds.
+// each presentation as it is, and diluted to either end of its bounds. Of
+// presentations alike in strength and use one stands for all.
 func (r row) ways(t *testing.T) (table string, ways []string) {
 	t.Helper()
+	seen := map[string]bool{}
 	for _, p := range r.drug.Presentations {
-		if !p.For(r.use) {
+		strength, _ := p.Amount.In(p.Volume)
+		alike := fmt.Sprint(uk().Concentration(strength), p.Neat, p.Powder(), len(p.Diluents), p.Uses)
+		if !p.For(r.use) || p.Volume.Given() && seen[alike] {
 			continue
 		}
+		seen[alike] = true
 		head := lines(key("drug", r.drug.Name), key("presentation", p.ID), key("indication", r.purpose), key("route", r.routes[0]))
 		if r.use == "bolus" {
 			ways = append(ways, head)
