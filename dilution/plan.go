@@ -48,7 +48,7 @@ type Mixture struct {
 	Method        Method
 	Containers    int
 	Strength      quantity.Concentration // of the presentation, after mixing a powder
-	DrugWanted    quantity.Volume // exact, before the graduation
+	DrugWanted    quantity.Volume        // exact, before the graduation
 	DrugVolume    quantity.Volume
 	DrugReading   syringe.Reading
 	Diluent       string // "" when neat

@@ -76,23 +76,29 @@ func (q Quick) order() order.Syringe {
 }
 
 // quickDiluent checks the diluent against the presentations of the drug that
-// have the strength at hand, or against all when no strength is given: one
-// that any of them forbids is refused, one that none lists is refused.
+// have the strength at hand, or against all when no strength is given: a fluid
+// that any of them forbids is refused, and so is one that none of them lists.
 func (w *work) quickDiluent(name string) {
-	var last *work
+	listed := false
+	var unlisted refusal.List
 	for _, p := range w.usable() {
 		if c, err := p.Amount.In(p.Volume); w.fixed.Strength.Given() && (err != nil || !c.Equal(w.fixed.Strength)) {
 			continue
 		}
 		trial := &work{f: w.f, o: w.o, plan: w.plan, fixed: w.fixed}
 		trial.plan.Presentation = p
-		ok := trial.forbiddenOr(name, func() bool { return trial.listedDiluent(name) })
-		if ok {
+		forbidden := !trial.forbiddenOr(name, func() bool { return true })
+		if forbidden {
+			w.reasons = append(w.reasons, trial.reasons...)
 			return
 		}
-		last = trial
+		if trial.listedDiluent(name) {
+			listed = true
+		} else {
+			unlisted = trial.reasons
+		}
 	}
-	if last != nil {
-		w.reasons = append(w.reasons, last.reasons...)
+	if !listed {
+		w.reasons = append(w.reasons, unlisted...)
 	}
 }

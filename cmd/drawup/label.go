@@ -63,7 +63,7 @@ func newOneJob(f *paperFlags, form *formulary.Formulary, e env) (*job, refusal.L
 // writeLabel places the one label and writes it.
 func (f *paperFlags) writeLabel(e env, j *job, all refusal.List) int {
 	doc := planOf(j)
-	doc.LeftOut = nil
+	doc.LeftOut, all = nil, without(all, refusal.SyringesLeftOut) // the others are left alone, not left out
 	l, p := j.labels[0], j.list.Plans[0]
 	stock := f.stock
 	switch {
@@ -104,4 +104,15 @@ func readOrder(path string) (order.Order, refusal.List) {
 		return order.Order{}, faults
 	}
 	return order.Read(path, data)
+}
+
+// without is l less the reasons of one code.
+func without(l refusal.List, code refusal.Code) refusal.List {
+	var out refusal.List
+	for _, r := range l {
+		if r.Code != code {
+			out = append(out, r)
+		}
+	}
+	return out
 }
