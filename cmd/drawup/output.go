@@ -35,16 +35,22 @@ func pdfOf(pages []ink.Page, title string, j *job) ([]byte, refusal.List) {
 
 // writeAll writes every file or none: each goes to a temporary name beside its
 // place first; only when all are whole are they renamed. The last file of the
-// list is renamed last and removed first, so that it marks a complete set.
+// list is removed first and renamed last, so that it marks a complete set.
 func writeAll(files []file) refusal.List {
-	var temps []string
+	var temps, made []string
 	undo := func() {
 		for _, t := range temps {
 			os.Remove(t)
 		}
+		for i := len(made) - 1; i >= 0; i-- {
+			os.Remove(made[i]) // only folders that are new, and only while empty
+		}
 	}
 	for _, dir := range folders(files) {
-		if err := os.MkdirAll(dir, 0o755); err != nil {
+		fresh, err := makeFolder(dir)
+		made = append(made, fresh...)
+		if err != nil {
+			undo()
 			return unwritable(dir, err)
 		}
 	}
@@ -66,10 +72,23 @@ func writeAll(files []file) refusal.List {
 	for i, f := range files {
 		if err := os.Rename(temps[i], f.path); err != nil {
 			undo()
-			return unwritable(f.path, err)
+			return incomplete(f.path, err)
 		}
 	}
 	return nil
+}
+
+// makeFolder makes dir with its parents and names those that were not there,
+// outermost first.
+func makeFolder(dir string) ([]string, error) {
+	var fresh []string
+	for d := filepath.Clean(dir); ; d = filepath.Dir(d) {
+		if _, err := os.Stat(d); err == nil || d == filepath.Dir(d) {
+			break
+		}
+		fresh = append([]string{d}, fresh...)
+	}
+	return fresh, os.MkdirAll(dir, 0o755)
 }
 
 // writeTemp writes f in full beside its place, to disk, and returns the name.
@@ -108,4 +127,12 @@ func folders(files []file) []string {
 func unwritable(path string, err error) refusal.List {
 	return refusal.List{{Code: refusal.OutputUnwritable, Severity: refusal.Refuse, Field: "--out", Got: path, Want: "a folder with room that can be written",
 		Message: fmt.Sprintf("%s cannot be written: %v; nothing was made", path, err), Remedy: "check the folder, its rights and the free space"}}
+}
+
+// incomplete says that the set at a place is mixed: some files are new, others
+// are not. It can come only from the file system between two renames.
+func incomplete(path string, err error) refusal.List {
+	l := unwritable(path, err)
+	l[0].Message = fmt.Sprintf("%s cannot be put in its place: %v; the set there is not complete and must not be used", path, err)
+	return l
 }

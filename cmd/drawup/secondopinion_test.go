@@ -121,11 +121,7 @@ func TestSecondOpinionFullDisk(t *testing.T) {
 	if !strings.Contains(stderr.String(), "output-unwritable") || stdout.Len() != 0 {
 		t.Errorf("stdout %q, stderr %q", stdout.String(), stderr.String())
 	}
-	left, err := os.ReadDir(out)
-	if err != nil && !os.IsNotExist(err) {
-		t.Fatal(err)
-	}
-	for _, e := range left {
-		t.Errorf("left behind: %s", e.Name())
+	if _, err := os.Stat(out); !os.IsNotExist(err) {
+		t.Errorf("the folder is left behind: %v", err)
 	}
 }
