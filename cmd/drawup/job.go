@@ -23,6 +23,7 @@ import (
 // the second route.
 type job struct {
 	file   string // as typed
+	tell   progress
 	order  order.Order
 	list   dilution.List
 	facts  []labels.Facts
@@ -36,7 +37,7 @@ type job struct {
 
 // newJob reads and plans the order in file. at, when given, overrides the time
 // prepared; the list of reasons holds everything that is wrong.
-func newJob(file string, f *formulary.Formulary, at func(order.Session) (time.Time, refusal.List), leaveOut map[int]bool) (*job, refusal.List) {
+func newJob(file string, f *formulary.Formulary, at func(order.Session) (time.Time, refusal.List), leaveOut map[int]bool, tell progress) (*job, refusal.List) {
 	data, faults := readFile(file)
 	if faults.Refused() {
 		return nil, faults
@@ -45,7 +46,7 @@ func newJob(file string, f *formulary.Formulary, at func(order.Session) (time.Ti
 	when, late := at(o.Session)
 	faults = append(faults, late...)
 	faults = append(faults, unknownNumbers(o, leaveOut)...)
-	j := &job{file: file, order: o}
+	j := &job{file: file, order: o, tell: tell}
 	list, reasons := dilution.NewList(o, f, when, leaveOut, faults)
 	j.list = list
 	if reasons.Refused() {
@@ -100,7 +101,8 @@ func makingOf(o order.Order, f *formulary.Formulary, at time.Time, data []byte) 
 // word writes labels and sheets and sends every figure through the second
 // route. A disagreement is a fault of this program and stops everything.
 func (j *job) word() refusal.List {
-	for _, p := range j.list.Plans {
+	for i, p := range j.list.Plans {
+		j.tell("wording", i+1, len(j.list.Plans))
 		facts := labels.FactsOf(p)
 		l, err := labels.FromPlan(p, facts, j.making)
 		if err != nil {
@@ -119,6 +121,7 @@ func (j *job) check() refusal.List {
 	j.passed = map[int]recheck.Passed{}
 	var out refusal.List
 	for i, p := range j.list.Plans {
+		j.tell("working again", i+1, len(j.list.Plans))
 		figures := j.labels[i].Figures("label")
 		for _, s := range j.allSheets() {
 			figures = append(figures, s.FiguresOf(p.Number)...)

@@ -57,7 +57,7 @@ func newOneJob(f *paperFlags, form *formulary.Formulary, e env) (*job, refusal.L
 			others[s.Number] = true
 		}
 	}
-	return newJob(f.orders[0], form, f.when(e.now), others)
+	return newJob(f.orders[0], form, f.when(e.now), others, silent)
 }
 
 // writeLabel places the one label and writes it.

@@ -93,7 +93,7 @@ func runPrepare(e env, args []string) int {
 	if err != nil {
 		return finish(e, f.json, doc, nil, refusal.List{ourFault(0, err)})
 	}
-	jobs, all := f.work(form, leaveOut)
+	jobs, all := f.work(form, leaveOut, progressOn(e))
 	if all.Refused() {
 		return finish(e, f.json, doc, nil, all)
 	}
@@ -115,11 +115,11 @@ func (f *paperFlags) numbers() (map[int]bool, refusal.List) {
 }
 
 // work plans every order; all reasons of all orders come back.
-func (f *paperFlags) work(form *formulary.Formulary, leaveOut map[int]bool) ([]*job, refusal.List) {
+func (f *paperFlags) work(form *formulary.Formulary, leaveOut map[int]bool, tell progress) ([]*job, refusal.List) {
 	var jobs []*job
 	var all refusal.List
 	for _, path := range f.orders {
-		j, reasons := newJob(path, form, f.when(nil), leaveOut)
+		j, reasons := newJob(path, form, f.when(nil), leaveOut, tell)
 		all = append(all, reasons...)
 		jobs = append(jobs, j)
 	}
