@@ -128,18 +128,46 @@ func (c *check) exactJames() value {
 }
 
 // weightIs compares a printed weight with one worked in plain kilograms.
-func weightIs(r reading, kilograms value) *objection {
+func weightIs(r reading, kilograms, step value) *objection {
 	kilogram := one(inWeight)
 	if kilograms.lack == "" && kilograms.sign() <= 0 {
 		return object(decimal(kilograms, 3), "no weight comes out")
 	}
-	return onStep(r, kilograms.ofKind(kilogram), pair(1, 10).ofKind(kilogram), halfUp)
+	return onStep(r, kilograms.ofKind(kilogram), step.ofKind(kilogram), halfUp)
 }
 
-func weightIdeal(c *check, _ int, r reading) *objection    { return weightIs(r, c.exactIdeal()) }
-func weightAdjusted(c *check, _ int, r reading) *objection { return weightIs(r, c.exactAdjusted()) }
-func weightLean(c *check, _ int, r reading) *objection     { return weightIs(r, c.exactLean()) }
-func weightJames(c *check, _ int, r reading) *objection    { return weightIs(r, c.exactJames()) }
+// tenthKilogram is the step of a weight that doses go by; fourDecimals that of
+// the same weight before it was brought there.
+func tenthKilogram() value { return pair(1, 10) }
+func fourDecimals() value  { return pair(1, 10_000) }
+
+func weightIdeal(c *check, _ int, r reading) *objection {
+	return weightIs(r, c.exactIdeal(), tenthKilogram())
+}
+
+func weightAdjusted(c *check, _ int, r reading) *objection {
+	return weightIs(r, c.exactAdjusted(), tenthKilogram())
+}
+
+func weightLean(c *check, _ int, r reading) *objection {
+	return weightIs(r, c.exactLean(), tenthKilogram())
+}
+
+func weightJames(c *check, _ int, r reading) *objection {
+	return weightIs(r, c.exactJames(), tenthKilogram())
+}
+
+func idealFull(c *check, _ int, r reading) *objection {
+	return weightIs(r, c.exactIdeal(), fourDecimals())
+}
+
+func adjustedFull(c *check, _ int, r reading) *objection {
+	return weightIs(r, c.exactAdjusted(), fourDecimals())
+}
+
+func leanFull(c *check, _ int, r reading) *objection {
+	return weightIs(r, c.exactLean(), fourDecimals())
+}
 
 // surfaceArea is Mosteller 1987, the root of H W / 3600. No root is taken:
 // (printed - half a step) squared and (printed + half a step) squared must

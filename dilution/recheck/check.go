@@ -61,6 +61,8 @@ type check struct {
 	parsed  map[string]parsed   // printed text to its reading
 	rules   map[string]rule
 	record  record
+	all     *known // what a sentence may repeat, filled when one is met
+	own     *known // what a bound may repeat
 	faults  []Fault
 }
 

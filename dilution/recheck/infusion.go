@@ -15,8 +15,7 @@ func (c *check) rateFrom(dose value, r reading, how rounding) *objection {
 	if dose.lack != "" {
 		return object("", dose.lack)
 	}
-	perHour := whole(1).ofKind(one(inVolume)).over(whole(60).ofKind(one(inTime)))
-	if r.unit.dim != perHour.dim || r.unit.against(perHour) != 0 {
+	if r.unit.dim != perHour().dim || r.unit.against(perHour()) != 0 {
 		return object("", "a pump rate is printed in mL/h")
 	}
 	step := c.get(RateStep)

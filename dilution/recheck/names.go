@@ -15,7 +15,7 @@ func Row(table string, row int, column string) string {
 // "ladder.*.rate" and 3. Other names come back as they are.
 func splitRow(name string) (string, int) {
 	parts := strings.Split(name, ".")
-	if len(parts) != 3 || (parts[0] != Ladder && parts[0] != Slip) {
+	if len(parts) != 3 || !isTable(parts[0]) {
 		return name, 0
 	}
 	row, err := strconv.Atoi(parts[1])
@@ -23,6 +23,14 @@ func splitRow(name string) (string, int) {
 		return name, 0
 	}
 	return parts[0] + ".*." + parts[2], row
+}
+
+func isTable(word string) bool {
+	switch word {
+	case Ladder, Slip, Said, Bound:
+		return true
+	}
+	return false
 }
 
 func isSlipKind(name string) bool {
@@ -64,6 +72,12 @@ func allRules() map[string]rule {
 		Slip + ".*.kind": slipKind, Slip + ".*.rate": measured(slipRate),
 
 		Prepared: prepared, PreparedOffset: preparedOffset, UseHours: useHours, UseBy: useBy, UseByOffset: useByOffset,
-		Code: code, ATC: atc, Serial: serial,
+		Code: code, ATC: atc, Serial: serial, Stock: stock,
+
+		DrugWanted: measured(drugWanted), DrugMoved: drugMoved, DoseWanted: measured(doseWanted), DoseMoved: doseMoved,
+		StartFlow: measured(startFlow), StartMoved: startMoved,
+		IdealFull: measured(idealFull), AdjustedFull: measured(adjustedFull), LeanFull: measured(leanFull),
+
+		Said + ".*.text": said, Bound + ".*.text": bound,
 	}
 }

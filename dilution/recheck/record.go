@@ -14,6 +14,14 @@ type record struct {
 	problem string
 	own     map[string]string
 	pack    map[string]string
+	place   place
+}
+
+// A place says where a drug's lines stand: in a piece of the raw text, as the
+// nth of so many drugs, counted from 0.
+type place struct {
+	piece   string
+	nth, of int
 }
 
 func (r record) presentation(key string) (string, string) { return r.line(r.pack, key) }
@@ -46,6 +54,7 @@ type block struct {
 type drugBlock struct {
 	block
 	packs []block
+	place place
 }
 
 // findRecord looks up the drug by name and the presentation by id. Two of the
@@ -70,7 +79,7 @@ func findRecord(raw []byte, drug, presentation string) record {
 	if key := found[0].twice + packs[0].twice; key != "" {
 		return record{problem: fmt.Sprintf("the record of %q has a line twice: %s", drug, key)}
 	}
-	return record{own: found[0].lines, pack: packs[0].lines}
+	return record{own: found[0].lines, pack: packs[0].lines, place: found[0].place}
 }
 
 // drugsNamed cuts the text at its [[drug]] lines and reads only the pieces in
@@ -87,8 +96,10 @@ func drugsNamed(text, name string) []drugBlock {
 		if !strings.Contains(piece, `"`+name+`"`) && !strings.Contains(piece, "'"+name+"'") {
 			continue
 		}
-		for _, d := range readBlocks(piece) {
+		drugs := readBlocks(piece)
+		for i, d := range drugs {
 			if d.lines["name"] == name {
+				d.place = place{piece: piece, nth: i, of: len(drugs)}
 				found = append(found, d)
 			}
 		}

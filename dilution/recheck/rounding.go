@@ -100,7 +100,8 @@ func shortStep(x value) value {
 	return power(x, 2)
 }
 
-// short objects unless the figure is truth printed by RULE SHORT in its unit.
+// short objects unless the figure is truth printed by RULE SHORT in its unit;
+// volumes in mL and flow rates in mL/h that two decimals hold are exact.
 func short(r reading, truth value) *objection {
 	if truth.lack != "" {
 		return object("", truth.lack)
@@ -108,10 +109,28 @@ func short(r reading, truth value) *objection {
 	if r.whole.dim != truth.dim {
 		return object("", "kinds do not match: printed "+r.whole.dim.words()+", worked "+truth.dim.words())
 	}
-	if isShort(r.number, truth.over(r.unit)) {
+	x := truth.over(r.unit)
+	if onScale(r.unit, x) {
+		if r.number.against(x) == 0 {
+			return nil
+		}
+		return object(decimal(x, 2), "two decimals hold it")
+	}
+	if isShort(r.number, x) {
 		return nil
 	}
 	return object(shortWords(truth, r.unit), "")
+}
+
+// onScale says whether a number of mL or mL/h is printed exactly because two
+// decimals are enough, however many digits stand before them.
+func onScale(unit, x value) bool {
+	for _, u := range []value{whole(1).ofKind(one(inVolume)), perHour()} {
+		if unit.dim == u.dim && unit.against(u) == 0 {
+			return x.isMultiple(pair(1, 100))
+		}
+	}
+	return false
 }
 
 // exact objects unless the figure is truth, digit for digit.

@@ -136,6 +136,10 @@ const (
 	Code   = "code"   // "(91)N01AX07(92)261202073000001003(93)2mg/mL"
 	ATC    = "atc"    // "N01AX07"
 	Serial = "serial" // eight digits
+
+	// Stock is the name of the blank labels, as typed; where it is printed, or a
+	// sentence repeats it, it must be in Asked.
+	Stock = "stock"
 )
 
 // Values before they were rounded, and what the rounding lost (rule R2).
@@ -152,12 +156,20 @@ const (
 	LeanFull     = "weight.lean.full"     // likewise
 )
 
-// Names of sentences that hold figures: Row(Said, 3, "text"). A sentence that
-// stands word for word in the record is right. In any other, every number, with
-// its unit where it has one, must be a value that another figure of this
-// syringe, the order as typed, or the drug's block of the record holds.
-// Row(Bound, 3, "text") is one limit of the formulary as printed: its quantity
-// must stand in the drug's block of the record, whatever the spelling.
+// Names of sentences that hold figures: Row(Said, 3, "text") is one sentence,
+// Row(Bound, 3, "text") one limit of the formulary, both as printed.
+//
+// A sentence that stands word for word (blanks folded) as a text of the drug's
+// block in the record is right. In any other, every number with its unit must
+// be a value that another figure of this syringe (other sentences, code and slip
+// rates apart), a text of Asked, or a text of the drug's block holds, in
+// whatever spelling; the reading tolerance of drug.volume in drug.barrel passes
+// as well, by the rule of volumes. A number without a unit must stand there
+// without a unit, or behind "syringe" in Syringe. A date or time must be one of
+// theirs. A word that holds digits must stand there as it is. A bound is held
+// against the drug's block alone. Words, and which of the known values a
+// sentence takes, are not judged; a sentence without any number passes, an empty
+// one does not.
 const (
 	Said  = "said"
 	Bound = "bound"

@@ -8,7 +8,7 @@ import (
 // A dim counts the kinds in a unit, up for each above the stroke, down for each
 // below it. Body weight is a kind of its own and never cancels drug mass;
 // mass, units of activity and amount of substance never meet (rules R3, R4).
-type dim [8]int8
+type dim [9]int8
 
 const (
 	inMass = iota
@@ -19,6 +19,7 @@ const (
 	inLength
 	inArea
 	inTime
+	inMonths // years and months of the calendar, which are no fixed number of days
 )
 
 func one(kind int) dim {
@@ -35,7 +36,7 @@ func (d dim) with(e dim, sign int8) dim {
 }
 
 func (d dim) words() string {
-	names := [...]string{"mass", "units of activity", "amount of substance", "volume", "body weight", "length", "surface area", "time"}
+	names := [...]string{"mass", "units of activity", "amount of substance", "volume", "body weight", "length", "surface area", "time", "calendar time"}
 	var above, below []string
 	for i, n := range d {
 		for ; n > 0; n-- {

@@ -1,0 +1,239 @@
+package recheck
+
+import (
+	"slices"
+	"strconv"
+	"strings"
+)
+
+// This file holds the figures of sentences against what else is known of the
+// syringe. It does not understand the words between them.
+
+// A known is everything that a sentence may repeat.
+type known struct {
+	quantities []value
+	plain      []value
+	moments    []token
+	words      map[string]bool
+	// printed confirms a quantity that is allowed by a rule of its own.
+	printed func(reading) bool
+	// syringe holds the numbers of the syringe's own name.
+	syringe []value
+}
+
+func (k *known) has(list []value, v value) bool {
+	return slices.ContainsFunc(list, func(w value) bool { return sameValue(v, w) })
+}
+
+// learn takes every figure out of a text, and the text as a whole where it is
+// one typed quantity.
+func (k *known) learn(text string) {
+	if v, _, err := readTyped(text); err == nil {
+		k.quantities = append(k.quantities, v)
+	}
+	for _, t := range tokens(text) {
+		k.words[t.word] = true
+		switch t.kind {
+		case withUnit:
+			k.quantities = append(k.quantities, t.number.times(t.unit))
+		case withoutUnit:
+			k.plain = append(k.plain, t.number)
+		case dateOrTime:
+			k.moments = append(k.moments, t)
+		case wordWithDigits:
+		}
+	}
+}
+
+// allKnown is what a sentence may repeat: the other figures, what was asked,
+// and the drug's block of the record.
+func (c *check) allKnown() *known {
+	if c.all != nil {
+		return c.all
+	}
+	k := &known{words: map[string]bool{}}
+	for _, name := range c.names {
+		switch key, _ := splitRow(name); key {
+		case Said + ".*.text", Bound + ".*.text", Code, Slip + ".*.rate":
+			// A slip's rate is wrong by design; no sentence may take it.
+		default:
+			k.learn(c.texts[name])
+		}
+	}
+	for name, texts := range c.asked {
+		for _, text := range texts {
+			k.learn(text)
+			if v, ok := readOldStrength(text); ok && name == Concentration {
+				k.quantities = append(k.quantities, v)
+			}
+		}
+	}
+	for _, text := range c.blockTexts() {
+		k.learn(text)
+	}
+	for _, t := range tokens(c.syringe) {
+		if t.kind == withoutUnit {
+			k.syringe = append(k.syringe, t.number)
+		}
+	}
+	tolerance := readingTolerance(c.get(DrugVolume), c.get(DrugBarrel)).times(c.get(DrugVolume))
+	k.printed = func(r reading) bool { return short(r, tolerance) == nil }
+	c.all = k
+	return k
+}
+
+// ownKnown is what a bound may repeat: the drug's block of the record alone.
+func (c *check) ownKnown() *known {
+	if c.own != nil {
+		return c.own
+	}
+	k := &known{words: map[string]bool{}, printed: func(reading) bool { return false }}
+	for _, text := range c.blockTexts() {
+		k.learn(text)
+	}
+	c.own = k
+	return k
+}
+
+// blockTexts lists the texts of the drug's block; none where the record cannot
+// be read, so that nothing is confirmed by it.
+func (c *check) blockTexts() []string {
+	if c.record.problem != "" {
+		return nil
+	}
+	texts, ok := c.record.place.texts()
+	if !ok {
+		return nil
+	}
+	return texts
+}
+
+func said(c *check, _ int, text string) *objection {
+	folded := fold(text)
+	if folded == "" {
+		return object("", "is empty")
+	}
+	if c.inBlock(folded) {
+		return nil
+	}
+	rest, o := withoutFixed(folded)
+	if o != nil {
+		return o
+	}
+	return c.allKnown().confirm(rest, "stands in no other figure, in nothing that was asked and not in the drug's record")
+}
+
+func bound(c *check, _ int, text string) *objection {
+	folded := fold(text)
+	if folded == "" {
+		return object("", "is empty")
+	}
+	if c.record.problem != "" {
+		return object("", c.record.problem)
+	}
+	if c.inBlock(folded) {
+		return nil
+	}
+	return c.ownKnown().confirm(folded, "does not stand in the drug's record")
+}
+
+func (c *check) inBlock(folded string) bool {
+	return slices.ContainsFunc(c.blockTexts(), func(s string) bool { return fold(s) == folded })
+}
+
+// confirm objects to every figure of the sentence that is not known.
+func (k *known) confirm(text, why string) *objection {
+	var faults []string
+	for _, t := range tokens(text) {
+		switch {
+		case t.fault != "":
+			faults = append(faults, t.fault)
+		case !k.knows(t):
+			faults = append(faults, strconv.Quote(t.text)+" "+why)
+		}
+	}
+	if len(faults) == 0 {
+		return nil
+	}
+	return object("", strings.Join(faults, "; "))
+}
+
+func (k *known) knows(t token) bool {
+	if t.odd && !k.words[t.word] {
+		return false
+	}
+	switch t.kind {
+	case withUnit:
+		return k.has(k.quantities, t.number.times(t.unit)) || k.printed(t.reading())
+	case withoutUnit:
+		return k.has(k.plain, t.number) || isSyringe(t.before) && k.has(k.syringe, t.number)
+	case dateOrTime:
+		return slices.ContainsFunc(k.moments, func(m token) bool {
+			return (t.day == "" || t.day == m.day) && (t.clock == "" || t.clock == m.clock)
+		})
+	case wordWithDigits:
+		return k.words[t.word]
+	}
+	return false
+}
+
+func isSyringe(word string) bool { return word == "syringe" || word == "Syringe" }
+
+// A fixedSaying is a sentence of the tool itself that holds a figure of its
+// own. Wherever its words stand, its figures must stand as well.
+type fixedSaying struct{ whole, words string }
+
+// fixedSayings are two. That a syringe pump is slow to begin at low rates is a
+// fixed warning, no sum; the clauses are those of the label's design.
+func fixedSayings() []fixedSaying {
+	return []fixedSaying{
+		{"below 1 mL/h a syringe pump may take many minutes to begin delivering", "a syringe pump may take many minutes to begin delivering"},
+		{"layout after ISO 26825:2020, 5.2 to 5.4", "layout after ISO"},
+	}
+}
+
+// withoutFixed takes the fixed sayings out of a sentence, and objects where
+// one stands with other figures.
+func withoutFixed(text string) (string, *objection) {
+	for _, f := range fixedSayings() {
+		text = bounded(text, f.whole)
+		if strings.Contains(text, f.words) {
+			return "", object(f.whole, "is a fixed sentence with other figures")
+		}
+	}
+	return text, nil
+}
+
+// bounded takes a saying out where it ends with the sentence or at a mark, so
+// that a digit more does not pass.
+func bounded(text, saying string) string {
+	front, back, found := strings.Cut(text, saying)
+	if !found || back != "" && !strings.ContainsAny(back[:1], closingMarks+" ") || strings.HasPrefix(back, ".") && len(back) > 1 && back[1] != ' ' {
+		return text
+	}
+	if front != "" && !strings.HasSuffix(front, " ") && !strings.HasSuffix(front, "(") {
+		return text
+	}
+	return front + "…" + back
+}
+
+// isStandard knows the standards that sentences name. Their numbers measure
+// nothing: ISO 7886-1 gives the reading tolerance of barrels, ISO 26825 the
+// design of labels.
+func isStandard(words string) bool {
+	switch words {
+	case "ISO 7886-1", "ISO 7886-1:1993", "ISO 26825", "ISO 26825:2020":
+		return true
+	}
+	return false
+}
+
+// isOwnRule knows the names of this project's rules, R1 to R19.
+func isOwnRule(word string) bool {
+	number, ok := strings.CutPrefix(word, "R")
+	n, err := strconv.Atoi(number)
+	return ok && err == nil && n >= 1 && n <= 19 && strconv.Itoa(n) == number
+}
+
+// stock is the name of the blank labels, repeated letter by letter.
+func stock(c *check, _ int, text string) *objection { return c.sameText(Stock, text) }
