@@ -32,6 +32,7 @@ func (r *reader) drug(rec drugRecord, i int) Drug {
 	d.NeverAsInfusion = r.note(rec.NoInfusion, "drug", i, "never_as_infusion")
 	d.NeverAsBolus = r.note(rec.NoBolus, "drug", i, "never_as_bolus")
 	d.Substance = figure(r, rec.Substance, parseFactor, "drug", i, "substance")
+	d.Salt = r.salt(rec.Salt, "drug", i, "salt")
 	for j, p := range rec.Presentations {
 		d.Presentations = append(d.Presentations, r.presentation(p, d.Kind, "drug", i, "presentation", j))
 	}
@@ -79,6 +80,25 @@ func (r *reader) identity(d *Drug, rec drugRecord, i int) {
 	default:
 		r.fault(refusal.ValueUnknown, rec.Counted, "mass, units or substance", "the file does not say how the drug is counted", "drug", i, "counted")
 	}
+}
+
+// salt reads the salt of a drug that is counted as its base; nil stays nil.
+func (r *reader) salt(rec *saltRecord, path ...any) *Salt {
+	if rec == nil {
+		return nil
+	}
+	a, err := quantity.ParseAmount(rec.PerMg)
+	if err == nil && a.Kind() != quantity.ByMass {
+		err = &quantity.KindError{Got: a.Kind(), Want: quantity.ByMass}
+	}
+	if err != nil {
+		r.badText(rec.PerMg, err, path...)
+	}
+	if rec.Name == "" {
+		r.fault(refusal.KeyMissing, "", "the name of the salt", "the salt has no name", path...)
+	}
+	s := r.source(rec.Source, path...)
+	return &Salt{Name: rec.Name, PerMg: a, Source: s, Unverified: rec.Unverified || s.Grade == "C"}
 }
 
 // parseFactor reads "4 mmol/g".

@@ -56,6 +56,7 @@ type Drug struct {
 	NeverAsInfusion *Note
 	NeverAsBolus    *Note
 	Substance       Figure[Factor]
+	Salt            *Salt
 	Presentations   []Presentation
 	Bounds          []Bounds
 	Doses           []Rule[quantity.Dose]
@@ -69,6 +70,15 @@ type Drug struct {
 
 // A Factor converts this drug's mass to amount of substance, mmol per g.
 type Factor struct{ PerGram quantity.Amount }
+
+// A Salt is what the pack holds where the drug is counted as something else:
+// PerMg of it for each mg as counted.
+type Salt struct {
+	Name       string
+	PerMg      quantity.Amount
+	Source     Source
+	Unverified bool
+}
 
 // A Presentation is an ampoule, vial or syringe as supplied.
 type Presentation struct {

@@ -45,12 +45,21 @@ type drugRecord struct {
 	NoInfusion     *textRecord           `toml:"never_as_infusion"`
 	NoBolus        *textRecord           `toml:"never_as_bolus"`
 	Substance      *figureRecord         `toml:"substance"` // "4 mmol/g"
+	Salt           *saltRecord           `toml:"salt"`      // where the label counts base and the pack holds salt
 	Presentations  []presentationRecord  `toml:"presentation"`
 	Concentrations []concentrationRecord `toml:"concentration"`
 	Doses          []doseRecord          `toml:"dose"`
 	Infusions      []infusionRecord      `toml:"infusion"`
 	Standards      []standardRecord      `toml:"standard"`
 	Stability      []stabilityRecord     `toml:"stability"`
+}
+
+// saltRecord says how much salt there is for one mg as counted.
+type saltRecord struct {
+	Name       string `toml:"name"`   // "acid tartrate"
+	PerMg      string `toml:"per_mg"` // "2 mg"
+	Source     string `toml:"source"`
+	Unverified bool   `toml:"unverified"`
 }
 
 type presentationRecord struct {
