@@ -112,8 +112,14 @@ func alteredWords(text string) []string {
 		{"actual", "ideal", "adjusted", "lean", "surface", "none", "james"},
 		{"per minute for per hour", "per hour for per minute", "ten times", "a tenth", "pounds for kilograms"},
 		{"male", "female"},
+		{"nothing", "1 % more", "0.1 % less", "0 % more"},
 	}
 	var out []string
+	for from, to := range map[string]string{" more": " less", " less": " more"} {
+		if front, ok := strings.CutSuffix(text, from); ok {
+			out = append(out, front+to, front, "nothing")
+		}
+	}
 	for _, words := range lists {
 		if slices.Contains(words, text) {
 			out = append(out, words...)

@@ -61,3 +61,55 @@ func FuzzCheck(f *testing.F) {
 		}
 	})
 }
+
+// Any sentence: nothing panics, a text confirms the figures that it holds itself,
+// and nothing at all confirms a sentence exactly when it holds no figure.
+func FuzzSentence(f *testing.F) {
+	for _, s := range []string{"0.3 mL is under a fifth of the 2 mL barrel", "9 h 48 min", "6 to 8 h", "0.1–0.2 mg/kg", "01 Dec 2026 07:30",
+		"2026-12-01", "a4-65, ISO 7886-1", "1,000\u00a0mL", "½ 00.3 mg", "3. mL", "10.0 mg", "0.3 mg/kg lean"} {
+		f.Add(s)
+	}
+	none := func(reading) bool { return false }
+	f.Fuzz(func(t *testing.T, text string) {
+		if len(text) > mostSentence {
+			return
+		}
+		k := &known{words: map[string]bool{}, printed: none}
+		k.learn(text)
+		list := tokens(text)
+		for _, tok := range list {
+			if tok.kind < withUnit || tok.kind > wordWithDigits || tok.kind == withUnit && tok.unit.sign() <= 0 {
+				t.Errorf("%q: token %+v", text, tok)
+			}
+			if !k.knows(tok) {
+				t.Errorf("%q does not know its own %+v", text, tok)
+			}
+		}
+		nothing := &known{words: map[string]bool{}, printed: none}
+		if (nothing.confirm(text, "") == nil) != (len(list) == 0) {
+			t.Errorf("%q holds %d figures, yet nothing confirms it, or refuses it without one", text, len(list))
+		}
+	})
+}
+
+// Any record: the reader of texts comes to an end, and takes nothing from a
+// piece that it has not understood.
+func FuzzTexts(f *testing.F) {
+	for _, s := range []string{saidRecord, invented, "[[drug]]\na = \"\\u00e9\"", "[[drug]]\na = \"\"\"\\\n b\"\"\"", "[[drug]]\na = '''x''' ] }", "  [[drug]]\n[[drug]]\nb = \"2\""} {
+		f.Add(s)
+	}
+	f.Fuzz(func(t *testing.T, text string) {
+		drugs := readBlocks(text)
+		for i := range drugs {
+			texts, ok := place{piece: text, nth: i, of: len(drugs)}.texts()
+			if !ok && texts != nil {
+				t.Errorf("%q: texts of a piece that was not understood", text)
+			}
+			for _, s := range texts {
+				if !strings.Contains(text, "\\") && !strings.Contains(text, s) {
+					t.Errorf("%q: %q does not stand in it", text, s)
+				}
+			}
+		}
+	})
+}

@@ -119,3 +119,27 @@ func TestDisagreementWords(t *testing.T) {
 		}
 	}
 }
+
+// Every text in quotes of one drug's block, and of no other; the escapes after
+// TOML 1.0.0, "String".
+func TestTextsOfABlock(t *testing.T) {
+	r := findRecord([]byte(saidRecord), "invented", "ampoule 32.9 mg in 4.7 mL")
+	got, ok := r.place.texts()
+	want := []string{"invented", "N01AX07", "Not for the \"frail\":\tone dose lasts 17 to 35 h – see G5.", "ETO1", `Filter of 5 micrometres \ none`, "SMPC-MG",
+		"First line, 13 days,\nsecond line.", "verified 2026-05-04", "ampoule 32.9 mg in 4.7 mL", "32.9 mg", "4.7 mL", "7 %", "BP-ADR", "65 years",
+		"0.23 mg/kg", "ETO1", "0.37 mg/kg", "ETO1", "3500 microgram", "ETO1", "0.41 mg/kg/min", "31 mmol"}
+	if !ok || strings.Join(got, "|") != strings.Join(want, "|") {
+		t.Errorf("got %q %v, want %q", got, ok, want)
+	}
+	good := map[string]string{`"a\"b\\c"`: `a"b\c`, `"\u00e9\U0001F600"`: "é😀", `'a\'`: `a\`, "'''\na'b'''": "a'b", "\"\"\"a \\\n   b\"\"\"": "a b", `""`: ""}
+	for text, want := range good {
+		if got, rest, ok := tomlText(text + "x"); !ok || got != want || rest != "x" {
+			t.Errorf("%s: got %q %q %v, want %q", text, got, rest, ok, want)
+		}
+	}
+	for _, bad := range []string{`"a`, "\"a\nb\"", `"\q"`, `"\u12"`, `"\uD800"`, `"\U00110000"`, "'''a''", `"\`, "\"\\\n\"", `"\x41"`} {
+		if _, _, ok := tomlText(bad); ok {
+			t.Errorf("%q was read, want a refusal", bad)
+		}
+	}
+}

@@ -4,10 +4,15 @@ import (
 	"slices"
 	"strconv"
 	"strings"
+	"unicode"
 )
 
 // This file holds the figures of sentences against what else is known of the
 // syringe. It does not understand the words between them.
+
+// mostSentence bounds the texts that are cut into figures, in bytes. A longer
+// one is neither confirmed nor confirms anything.
+const mostSentence = 4 << 10
 
 // A known is everything that a sentence may repeat.
 type known struct {
@@ -26,10 +31,17 @@ func (k *known) has(list []value, v value) bool {
 }
 
 // learn takes every figure out of a text, and the text as a whole where it is
-// one typed quantity.
+// one quantity typed in a way that no sentence shows.
 func (k *known) learn(text string) {
+	if len(text) > mostSentence || !strings.ContainsFunc(text, unicode.IsNumber) {
+		return
+	}
 	if v, _, err := readTyped(text); err == nil {
 		k.quantities = append(k.quantities, v)
+		if fields := strings.Fields(text); len(fields) == 2 {
+			k.words[fields[0]] = true
+			return
+		}
 	}
 	for _, t := range tokens(text) {
 		k.words[t.word] = true
@@ -57,7 +69,7 @@ func (c *check) allKnown() *known {
 		case Said + ".*.text", Bound + ".*.text", Code, Slip + ".*.rate":
 			// A slip's rate is wrong by design; no sentence may take it.
 		default:
-			k.learn(c.texts[name])
+			c.learnFigure(k, c.texts[name])
 		}
 	}
 	for name, texts := range c.asked {
@@ -80,6 +92,15 @@ func (c *check) allKnown() *known {
 	k.printed = func(r reading) bool { return short(r, tolerance) == nil }
 	c.all = k
 	return k
+}
+
+// learnFigure takes a figure that is one quantity as it has been read already.
+func (c *check) learnFigure(k *known, text string) {
+	if r, err := c.parse(text); err == nil {
+		k.quantities = append(k.quantities, r.whole)
+		return
+	}
+	k.learn(text)
 }
 
 // ownKnown is what a bound may repeat: the drug's block of the record alone.
@@ -109,12 +130,9 @@ func (c *check) blockTexts() []string {
 }
 
 func said(c *check, _ int, text string) *objection {
-	folded := fold(text)
-	if folded == "" {
-		return object("", "is empty")
-	}
-	if c.inBlock(folded) {
-		return nil
+	folded, o := readable(text)
+	if o != nil || c.inBlock(folded) {
+		return o
 	}
 	rest, o := withoutFixed(folded)
 	if o != nil {
@@ -124,9 +142,9 @@ func said(c *check, _ int, text string) *objection {
 }
 
 func bound(c *check, _ int, text string) *objection {
-	folded := fold(text)
-	if folded == "" {
-		return object("", "is empty")
+	folded, o := readable(text)
+	if o != nil {
+		return o
 	}
 	if c.record.problem != "" {
 		return object("", c.record.problem)
@@ -135,6 +153,18 @@ func bound(c *check, _ int, text string) *objection {
 		return nil
 	}
 	return c.ownKnown().confirm(folded, "does not stand in the drug's record")
+}
+
+// readable folds a sentence, and objects to an empty and to an endless one.
+func readable(text string) (string, *objection) {
+	if len(text) > mostSentence {
+		return "", object("", "is too long to be checked")
+	}
+	folded := fold(text)
+	if folded == "" {
+		return "", object("", "is empty")
+	}
+	return folded, nil
 }
 
 func (c *check) inBlock(folded string) bool {

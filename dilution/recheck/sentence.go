@@ -157,7 +157,7 @@ func numberAt(words []piece, i int, t token) (token, int) {
 		return t, 2
 	}
 	minutes, odd, ok := sentenceNumber(words[i+2].core)
-	if !ok || odd {
+	if !ok || odd || minutes.against(whole(60)) >= 0 {
 		return t, 2
 	}
 	t.text += " " + words[i+2].core + " min"

@@ -18,7 +18,10 @@ func (p place) texts() ([]string, bool) {
 			return nil, false
 		}
 	}
-	return w.found, w.drug+1 == p.of
+	if w.drug+1 != p.of {
+		return nil, false
+	}
+	return w.found, true
 }
 
 // A walk is the way through the piece: which drug it is in, whether under one

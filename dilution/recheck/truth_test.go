@@ -82,6 +82,26 @@ func shortRat(r *big.Rat) *big.Rat {
 	return decimalOf(r.FloatString(max(places, 0)))
 }
 
+// volumeText prints a volume or a flow rate: exactly when two decimals hold it.
+func volumeText(r *big.Rat, unit string) string {
+	if !mul(r, rat(100, 1)).IsInt() {
+		r = shortRat(r)
+	}
+	return figureOf(r, unit)
+}
+
+// movedText says in per cent how far a rounding went.
+func movedText(rounded, exact *big.Rat) string {
+	percent := mul(quo(sub(rounded, exact), exact), rat(100, 1))
+	switch percent.Sign() {
+	case 1:
+		return figureOf(shortRat(percent), "% more")
+	case -1:
+		return figureOf(shortRat(percent.Neg(percent)), "% less")
+	}
+	return "nothing"
+}
+
 // sizes of units against the smallest of their kind, written for this file.
 var unitSizes = map[string]*big.Rat{
 	"g": rat(1000000, 1), "mg": rat(1000, 1), "micrograms": rat(1, 1), "nanograms": rat(1, 1000),
@@ -117,7 +137,7 @@ type truth struct {
 	drug, fin  *big.Rat
 	weights    map[string]*big.Rat
 	start      *big.Rat // pump rate
-	doseUnit   string
+	assay      string
 	papers     []string
 }
 
@@ -193,12 +213,17 @@ func (p *truth) container() {
 	count := floorRat(upStep(quo(p.drug, volume), rat(1, 1))).Int64()
 	p.print(ContainerCount, comma(fmt.Sprint(count)))
 	left := sub(mul(rat(count, 1), volume), p.drug)
-	p.print(LeftVolume, figureOf(shortRat(left), "mL"))
+	p.print(LeftVolume, volumeText(left, "mL"))
 	p.print(LeftAmount, drugText(mul(left, p.strength), p.family, ""))
 	p.extras(amount)
 	off := mul(step, rat(int64(p.r.Intn(90)-45), 100))
 	wanted := mul(add(p.drug, off), p.strength)
-	p.ask(AmountInSyringe, quo(wanted, unitSizes[u]).FloatString(9)+" "+u)
+	typed := quo(wanted, unitSizes[u]).FloatString(9)
+	p.ask(AmountInSyringe, typed+" "+u)
+	exact := quo(mul(decimalOf(typed), unitSizes[u]), p.strength)
+	p.print(DrugWanted, volumeText(exact, "mL"))
+	p.print(DrugMoved, movedText(p.drug, exact))
+	p.print(Row(Said, 1, "text"), volumeText(exact, "mL")+" is moved to the nearest graduation, "+figureOf(p.drug, "mL")+": "+movedText(p.drug, exact)+" than asked")
 }
 
 func (p *truth) extras(amount *big.Rat) {
@@ -281,6 +306,7 @@ func root(r *big.Rat) *big.Rat {
 
 func (p *truth) sureness() {
 	assay := decimalOf(p.pick("5", "10", "2.5"))
+	p.assay = figureOf(assay, "%")
 	p.print(Assay, figureOf(assay, "%"))
 	p.record = append(p.record, "assay = \""+plain(assay)+" %\"")
 	parts := []*big.Rat{quo(assay, rat(100, 1))}
@@ -337,6 +363,10 @@ func (p *truth) body() {
 	p.print(WeightIdeal, figureOf(p.weights["ideal"], "kg"))
 	p.print(WeightAdjusted, figureOf(p.weights["adjusted"], "kg"))
 	p.print(WeightLean, figureOf(p.weights["lean"], "kg"))
+	tenThousandth := func(r *big.Rat) *big.Rat { return toStep(r, rat(1, 10000), rat(1, 2)) }
+	p.print(IdealFull, figureOf(tenThousandth(ideal), "kg"))
+	p.print(AdjustedFull, figureOf(tenThousandth(adjusted), "kg"))
+	p.print(LeanFull, figureOf(tenThousandth(lean), "kg"))
 	p.print(WeightJames, figureOf(tenth(james), "kg"))
 	p.print(SurfaceArea, figureOf(surface, "m²"))
 	p.print(BMI, comma(plain(tenth(bmi))))
@@ -388,6 +418,8 @@ func (p *truth) dose() {
 	p.both(DoseStep, figureOf(step, "mL"))
 	volume := toStep(quo(amount, p.conc), step, rat(1, 2))
 	p.print(DoseVolume, figureOf(volume, "mL"))
+	p.print(DoseWanted, volumeText(quo(amount, p.conc), "mL"))
+	p.print(DoseMoved, movedText(volume, quo(amount, p.conc)))
 	p.print(DoseDelivered, drugText(mul(volume, p.conc), p.family, ""))
 }
 
@@ -415,6 +447,10 @@ func (p *truth) infusion() {
 	p.start = toStep(flow(number), step, half)
 	p.print(StartRate, figureOf(p.start, "mL/h"))
 	p.print(StartDelivered, given(p.start))
+	p.print(StartFlow, volumeText(flow(number), "mL/h"))
+	p.print(StartMoved, movedText(p.start, flow(number)))
+	p.print(Row(Said, 2, "text"), "rounding to the pump's step changes the start dose; it gives "+given(p.start))
+	p.print(Row(Bound, 1, "text"), "assay within "+p.assay)
 	low, high, limit := quo(number, rat(2, 1)), mul(number, rat(2, 1)), mul(number, rat(4, 1))
 	p.both(LowDose, figureOf(low, unitText))
 	p.print(LowRate, figureOf(upStep(flow(low), step), "mL/h"))
