@@ -16,8 +16,8 @@ func (a arrangement) draw() []ink.Mark {
 		letters = colour(d.class.LetterOnBar)
 	}
 	marks = append(marks, a.whitePanels()...)
-	for _, row := range a.upper {
-		marks = append(marks, a.row(row, letters)...)
+	for _, row := range a.strips {
+		marks = append(marks, a.fromRight(row, a.stripSize(), letters)...)
 	}
 	marks = append(marks, a.name.marks(letters)...)
 	if d.class.Line {
@@ -29,7 +29,8 @@ func (a arrangement) draw() []ink.Mark {
 	for _, row := range a.rows {
 		marks = append(marks, a.row(row, ink.Black)...)
 	}
-	marks = append(marks, a.footMarks()...)
+	marks = append(marks, a.row(a.foot, ink.Black)...)
+	marks = append(marks, a.fromRight(a.right, a.size, ink.Black)...)
 	if len(a.modules) > 0 {
 		marks = append(marks, d.symbol.filled(ink.White),
 			ink.Symbol{X: d.symbol.x + a.module, Y: d.symbol.y + a.module, Module: a.module, Rows: a.modules, Colour: ink.Black})
@@ -44,23 +45,40 @@ func (a arrangement) whitePanels() []ink.Mark {
 	if !d.class.Dim() || d.mono {
 		return nil
 	}
+	x, right := d.panel.x+300, d.panel.right()-300
+	behind := func(left, base, capital ink.Micrometre) box {
+		top, low := base-capital-220, base+capital*drop/100+80
+		return box{left, top, right - left, low - top}
+	}
 	var marks []ink.Mark
-	capital := ink.Micrometre(faceOf(ink.CondensedRegular).CapHeight(int64(a.size)))
-	top := a.foot.base - capital
+	top := a.foot.base - a.capital
 	for _, row := range a.rows {
 		if len(row.items) > 0 {
-			top = min(top, row.base-capital)
+			top = min(top, row.base-a.capital)
 		}
 	}
-	right := d.panel.right() - 300
-	x := d.panel.x + 300
-	marks = append(marks, box{x, top - 200, right - x, d.panel.bottom() - 250 - top + 200}.filled(ink.White))
-	if len(a.upper) > 0 && !d.class.Bar {
-		y, low := a.upper[0].base-capital-280, a.upper[len(a.upper)-1].base+capital*31/100+80
-		marks = append(marks, box{x, y, d.panel.w - 600, low - y}.filled(ink.White))
+	for _, s := range a.stated {
+		if n := len(s.bin.items); n > 0 {
+			left := s.bin.right - 300
+			for _, it := range s.bin.items {
+				left -= it.width(a.size) + a.gap
+			}
+			marks = append(marks, behind(left+a.gap, s.bin.base, a.capital).filled(ink.White))
+		}
+	}
+	marks = append(marks, box{x, top - 180, right - x, d.panel.bottom() - 250 - top + 180}.filled(ink.White))
+	if !d.class.Bar {
+		for _, row := range a.strips {
+			if len(row.items) > 0 {
+				marks = append(marks, behind(row.right-row.used-300, row.base, smallLow).filled(ink.White))
+			}
+		}
 	}
 	return marks
 }
+
+// stripSize is the em size of the small type along the top edge.
+func (a arrangement) stripSize() ink.Micrometre { return newBlock(a.design, 0, smallLow).size }
 
 // row draws the items of a row from its left end.
 func (a arrangement) row(r bin, c ink.Colour) []ink.Mark {
@@ -68,45 +86,41 @@ func (a arrangement) row(r bin, c ink.Colour) []ink.Mark {
 	x := r.left
 	for _, it := range r.items {
 		marks = append(marks, it.marks(x, r.base, a.size, c)...)
-		x += it.width(a.size) + a.gap()
+		x += it.width(a.size) + a.gap
 	}
 	return marks
 }
 
-func (a arrangement) gap() ink.Micrometre {
-	return ink.Micrometre(faceOf(ink.CondensedRegular).CapHeight(int64(a.size))) * 5 / 4
+// fromRight draws the items of a row against its right end.
+func (a arrangement) fromRight(r bin, size ink.Micrometre, c ink.Colour) []ink.Mark {
+	x := r.right
+	gap := a.gap
+	if size != a.size {
+		gap = smallLow * 3 / 4
+	}
+	for i, it := range r.items {
+		x -= it.width(size)
+		if i > 0 {
+			x -= gap
+		}
+	}
+	var marks []ink.Mark
+	for _, it := range r.items {
+		marks = append(marks, it.marks(x, r.base, size, c)...)
+		x += it.width(size) + gap
+	}
+	return marks
 }
 
 // statedMarks draws one concentration, what follows it, and what stands
-// beside it.
+// beside it, against the right end.
 func (a arrangement) statedMarks(s stated) []ink.Mark {
 	size := SizeFor(s.face, a.large)
 	line := labels.Line{s.cell}
 	marks := []ink.Mark{Set(s.bin.left, s.bin.base, line, s.face, size, ink.Black)}
 	if s.tail != "" {
-		x := s.bin.left + Width(line, s.face, size) + a.gap()*3/5
+		x := s.bin.left + Width(line, s.face, size) + a.gap
 		marks = append(marks, Set(x, s.bin.base, labels.Words(s.tail), ink.CondensedSemiBold, a.size, ink.Black))
 	}
-	// What stands beside it is set against the right end.
-	x := s.bin.right
-	for i := len(s.bin.items) - 1; i >= 0; i-- {
-		it := s.bin.items[i]
-		x -= it.width(a.size)
-		marks = append(marks, it.marks(x, s.bin.base, a.size, ink.Black)...)
-		x -= a.gap()
-	}
-	return marks
-}
-
-// footMarks draws the class word along the bottom edge, the serial against
-// the right end.
-func (a arrangement) footMarks() []ink.Mark {
-	row := a.foot.copied()
-	var marks []ink.Mark
-	if n := len(row.items); n > 1 {
-		last := row.items[n-1]
-		row.items = row.items[:n-1]
-		marks = last.marks(row.right-last.width(a.size), row.base, a.size, ink.Black)
-	}
-	return append(a.row(row, ink.Black), marks...)
+	return append(marks, a.fromRight(s.bin, a.size, ink.Black)...)
 }

@@ -11,84 +11,114 @@ type arrangement struct {
 	modules []string // rows of the barcode, none without
 	module  ink.Micrometre
 	name    named
-	full    ink.Micrometre // greatest capital height of the name without small type above it
-	line    box            // reversal line, empty without
-	size    ink.Micrometre
-	fitted  fitted
-	large   ink.Micrometre
-	upper   []bin
+	line    box // reversal line, empty without
+	strips  []bin
+	size    ink.Micrometre // em size of the small type
+	capital ink.Micrometre // its capitals
+	gap     ink.Micrometre // between two items on one row
+	large   ink.Micrometre // capitals of the concentration
 	stated  []stated
 	rows    []bin
-	foot    bin
+	foot    bin // class word
+	right   bin // what stands at the right end of its row
 }
 
-// An attempt is one try at the label: its sizes of type, how rows are filled,
-// and how much of the name's greatest size must be left when small type stands
-// in the upper half with it, in per cent.
-type attempt struct {
-	level        int
-	small, large ink.Micrometre // heights of capitals of small type and concentration
-	ways         []packing
-	share        ink.Micrometre
+// A tier is a way to fill a label; the next is tried only when none of the
+// barcode modules makes this one fit.
+type tier struct {
+	where  place
+	strips int            // rows of small type along the top edge
+	large  ink.Micrometre // least capitals of the concentration
+	tight  bool
 }
 
-// A pass is a row of attempts from large type to small.
-type pass struct {
-	steps  []ink.Micrometre // of the ladder of sizes
-	levels int              // how many to try
-	ways   []packing
-	share  ink.Micrometre
-}
-
-// passes are tried in groups. The first: every item on a row of its own in the
-// lower half, down to 1.36 mm; then rows shared and some of the small type in
-// the upper half. The second: rows shared more freely. The last, for labels
-// that would be refused else: the name gives way as far as 2.5 mm.
-func passes() [][]pass {
-	every := []ink.Micrometre{12, 11, 10, 9, 8, 7, 6, 5, 4, 3, 2, 1, 0}
-	shared := []packing{apart, joined, tight, tighter, tightest}
-	return [][]pass{
-		{{every[:11], 1, []packing{apart}, 0}, {every, 4, shared, 75}},
-		{{every, 4, []packing{dense}, 75}},
-		{{every, 4, append(shared, dense), 0}},
+// tiers are those of a label with stripes, which leave no room at the top
+// edge, or of one without.
+func tiers(c labels.Class) []tier {
+	if c.Stripes {
+		return []tier{{below, 0, concentrationLow, false}, {below, 0, concentrationLast, false}, {below, 0, concentrationLast, true}}
+	}
+	return []tier{
+		{atEdge, 1, concentrationLow, false}, {allAbove, 1, concentrationLow, false}, {allAbove, 2, concentrationLow, false},
+		{atEdge, 1, concentrationLast, true}, {allAbove, 1, concentrationLast, true}, {allAbove, 2, concentrationLast, true},
 	}
 }
 
-// arrange finds the largest type with which the label fits its panel, for each
-// group of passes first with the best size of barcode module and then with the
-// smaller ones. When none fits it says what did not.
+// tallLabel is the height from which a label has room for larger type.
+const tallLabel = 20_000
+
+// smallSteps are the heights of capitals that small type may have.
+func smallSteps(panel box) []ink.Micrometre {
+	if panel.h >= tallLabel {
+		return []ink.Micrometre{2200, 1900, 1650, 1450, 1300, smallLow}
+	}
+	return []ink.Micrometre{1500, 1350, smallLow}
+}
+
+// largeSteps are the heights of capitals that the concentration may have above
+// the least.
+func largeSteps() []ink.Micrometre {
+	return []ink.Micrometre{5000, 4200, 3600, 3000, 2600, 2300, concentrationLow}
+}
+
+// A way is how rows are filled and how far apart they are, in hundredths of
+// the capital height.
+type way struct {
+	how   packing
+	pitch ink.Micrometre
+}
+
+// ways are tried in turn. Only the smallest type is set close.
+func ways(capital ink.Micrometre, tight bool) []way {
+	switch {
+	case tight:
+		return []way{{filling, 150}, {filling, 129}}
+	case capital > smallLow:
+		return []way{{apart, 165}, {grouped, 165}, {apart, 150}, {grouped, 150}}
+	}
+	return []way{{apart, 150}, {grouped, 150}, {apart, 129}, {grouped, 129}, {dense, 150}, {dense, 129}}
+}
+
+// arrange finds the first tier with which the label fits its panel, each with
+// the best size of barcode module first. When none fits it says what did not.
 func arrange(l labels.Label, panel box, s Stock, mono bool, modules []string) (arrangement, string) {
-	widths := []ink.Micrometre{0}
-	if len(modules) > 0 {
-		widths = widths[:0]
-		for _, dots := range s.Dots {
-			widths = append(widths, s.module(dots))
-		}
-	}
 	why := "its barcode"
-	for _, group := range passes() {
-		for _, module := range widths {
+	var c content
+	var where place
+	for _, t := range tiers(l.Class) {
+		if t.where != where {
+			c, where = contentOf(l, t.where), t.where
+		}
+		for _, module := range moduleSizes(s, modules) {
 			symbol, ok := symbolBox(panel, s, module, len(modules))
 			if !ok {
 				continue
 			}
 			a := arrangement{design: newDesign(panel, s, l.Class, mono, symbol), modules: modules, module: module}
-			_, _, top := a.design.nameArea()
-			name, ok := a.design.fitName(l, top, 0)
-			if !ok {
+			now := c
+			if !a.upper(l, &now, t.strips) {
 				why = "the drug name in capitals of 2.5 mm"
 				continue
 			}
-			a.full = name.capital
-			for _, p := range group {
-				if a.fit(l, p) {
-					return a, ""
-				}
+			if a.lower(l, now, t) {
+				return a, ""
 			}
 			why = "its lines in the smallest type allowed"
 		}
 	}
 	return arrangement{}, why
+}
+
+// moduleSizes are the sizes of module to try, the best first.
+func moduleSizes(s Stock, modules []string) []ink.Micrometre {
+	if len(modules) == 0 {
+		return []ink.Micrometre{0}
+	}
+	var out []ink.Micrometre
+	for _, dots := range s.Dots {
+		out = append(out, s.module(dots))
+	}
+	return out
 }
 
 // symbolBox is the white panel of the barcode, quiet zone of one module
@@ -107,187 +137,162 @@ func symbolBox(panel box, s Stock, module ink.Micrometre, count int) (box, bool)
 	return b, b.y >= panel.y+panel.h/2-1500 && b.x > panel.x+panel.w/2
 }
 
-// nameTop is where the name may begin: below the small type above it.
-func (a *arrangement) nameTop(upper []bin, capital ink.Micrometre) ink.Micrometre {
-	_, _, top := a.design.nameArea()
-	if len(upper) > 0 && !a.design.class.Stripes {
-		return upper[len(upper)-1].base + capital*31/100 + 250
-	}
-	return top
-}
+// Baseline of the first row of small type below the top edge, and from there
+// to the next.
+const (
+	stripBase  = 1750
+	stripPitch = 1560
+)
 
-// fit tries a pass, and within each size of type more and more of the small
-// type in the upper half.
-func (a *arrangement) fit(l labels.Label, p pass) bool {
-	for _, k := range p.steps {
-		for level := range p.levels {
-			if level > 0 && len(upperItems(l, level)) == len(upperItems(l, level-1)) {
-				continue
-			}
-			t := attempt{level, smallLow + 80*k, concentrationLow + 250*k, p.ways, p.share}
-			if a.set(l, t) {
-				a.grow(l, t)
-				return true
-			}
-		}
-	}
-	return false
-}
-
-// grow makes the concentration larger as long as all still fits.
-func (a *arrangement) grow(l labels.Label, t attempt) {
-	for t.large = a.large + 100; t.large <= 5000; t.large += 100 {
-		larger := *a
-		if !larger.set(l, t) || larger.large <= a.large {
-			return
-		}
-		*a = larger
-	}
-}
-
-// set makes one attempt. The concentration is at most 85 % of the name.
-func (a *arrangement) set(l labels.Label, t attempt) bool {
-	small := t.small
+// upper places small type along the top edge, name and reversal line. What
+// has no room at the top edge is put among the other small type.
+func (a *arrangement) upper(l labels.Label, c *content, strips int) bool {
 	d := a.design
-	b := block{design: d, capital: small}
-	a.size, a.upper, a.line = b.size(), nil, box{}
-	items := upperItems(l, t.level)
-	reserve := ink.Micrometre(0)
-	if len(items) > 0 && d.class.Stripes {
-		reserve = ink.Micrometre(len(items))*(small*4/3) + (small-smallLow)/2
+	b := newBlock(d, 0, smallLow)
+	for i := range strips {
+		a.strips = append(a.strips, bin{base: d.panel.y + stripBase + ink.Micrometre(i)*stripPitch, left: d.panel.x + d.edge, right: d.panel.right() - d.edge})
 	}
-	if len(items) > 0 && !d.class.Stripes {
-		var ok bool
-		if a.upper, ok = b.upperRows(items, d.panel.x+d.edge, d.panel.right()-d.edge, d.panel.y+500); !ok {
-			return false
+	at := 0
+	for _, it := range c.strip {
+		for at < strips && a.strips[at].room(b.gap) < it.width(b.size) {
+			at++
 		}
-	}
-	var ok bool
-	if a.name, ok = a.fitted.fit(d, l, a.nameTop(a.upper, small), reserve); !ok {
-		return false
-	}
-	if a.name.capital*100 < a.full*t.share {
-		return false
-	}
-	b.top = max(d.middle, a.name.bottom)
-	below := a.name.bottom
-	if d.class.Line {
-		a.line = d.line(a.name.bottom + 80)
-		b.top = max(b.top, a.line.bottom()+50)
-		below = a.line.bottom()
-	}
-	if len(items) > 0 && d.class.Stripes {
-		left, right, _ := d.nameArea()
-		a.upper, ok = b.upperRows(items, left, min(right, b.rightAt(d.middle)), below+80+(small-smallLow)/3)
-		if !ok || a.upper[len(a.upper)-1].base+small*31/100 > d.middle+small/4 {
-			return false
-		}
-		b.top = max(b.top, a.upper[len(a.upper)-1].base+small*31/100)
-	}
-	b.large = min(t.large, max(concentrationLow, a.name.capital*85/100))
-	a.large = b.large
-	return a.fitLower(l, b, t)
-}
-
-// upperRows sets items row by row between left and right from y down.
-func (b block) upperRows(items []item, left, right, y ink.Micrometre) ([]bin, bool) {
-	size := b.size()
-	var rows []bin
-	for i, it := range items {
-		if n := len(rows); n > 0 && rows[n-1].room(b.gap()) >= it.width(size) {
-			rows[n-1].add(it, i, size, b.gap())
+		if at == strips {
+			c.rows = append(c.rows[:len(c.rows):len(c.rows)], it)
 			continue
 		}
-		parts, ok := it.split(size, right-left)
-		if !ok {
-			return nil, false
-		}
-		for _, part := range parts {
-			base := y + b.capital*112/100
-			if n := len(rows); n > 0 {
-				base = rows[n-1].base + b.capital*133/100
-			}
-			row := bin{base: base, left: left, right: right}
-			row.add(part, i, size, b.gap())
-			rows = append(rows, row)
-		}
+		a.strips[at].add(it, b.size, b.gap)
 	}
-	return rows, true
-}
-
-// fitLower arranges the lower half: rows far apart before near, each item on
-// a row of its own before several together.
-func (a *arrangement) fitLower(l labels.Label, b block, t attempt) bool {
-	for _, pitch := range pitches(b.capital) {
-		b.pitch = b.capital * pitch / 100
-		for _, how := range t.ways {
-			if a.packed(l, b, lowerItems(l, t.level), how) {
-				return true
-			}
-		}
+	_, _, top := d.nameArea()
+	if strips > 0 {
+		// The room is kept without any words too: names stand alike.
+		top = a.strips[strips-1].base + smallLow*drop/100 + 80
 	}
-	return false
-}
-
-// packed arranges the lower half in one way.
-func (a *arrangement) packed(l labels.Label, b block, items []item, how packing) bool {
-	list, ok := b.concentrations(l, how)
-	if !ok {
+	var ok bool
+	if a.name, ok = d.fitName(l, top); !ok {
 		return false
 	}
-	foot, more, ok := b.footRow(l, how)
-	if !ok {
-		return false
+	if d.class.Line {
+		a.line = d.line(a.name.bottom + lineAir)
 	}
-	last := &list[len(list)-1].bin
-	beside := *last
-	if b.design.class.Dim() || l.Second != "" {
-		beside.right = beside.left // nothing stands there
-	}
-	rows, ok := b.pack(how, append(items, more...), &beside, &foot)
-	if !ok {
-		return false
-	}
-	last.items, last.order, last.used = beside.items, beside.order, beside.used
-	a.stated, a.rows, a.foot = list, rows, foot
 	return true
 }
 
-// A packing is a way to put items on rows.
-type packing int
-
-const (
-	apart    packing = iota + 1 // each item on a row of its own
-	joined                      // in order, several on a row, the use-by first on its row
-	dense                       // in order, several on a row
-	tight                       // the widest first
-	tighter                     // the same with the concentration condensed
-	tightest                    // the same with the serial among the items
-)
-
-func (b block) pack(how packing, items []item, beside, foot *bin) ([]bin, bool) {
-	slots := b.slots(beside.base)
-	switch how {
-	case apart, joined, dense:
-		return b.inOrder(items, slots, how, beside)
-	case tight, tighter, tightest:
-		return b.byWidth(items, slots, beside, foot)
+// lower finds the largest small type with which the lower half fits, and then
+// the largest concentration.
+func (a *arrangement) lower(l labels.Label, c content, t tier) bool {
+	top := max(a.design.middle, a.name.bottom)
+	if a.design.class.Line {
+		top = max(top, a.line.bottom()+50)
 	}
-	return nil, false
-}
-
-// pitches are the distances of rows to try, in hundredths of the capital
-// height. Only the smallest type is set close.
-func pitches(capital ink.Micrometre) []ink.Micrometre {
-	if capital > smallLow {
-		return []ink.Micrometre{165, 152}
+	most := a.name.capital * 85 / 100
+	for _, small := range smallSteps(a.design.panel) {
+		b := newBlock(a.design, top, small)
+		if t.tight {
+			b.gap = small / 2
+		}
+		large := min(t.large+(small-smallLow)*2, max(most, t.large))
+		for _, w := range ways(small, t.tight) {
+			b.pitch = small * w.pitch / 100
+			if !a.place(l, c, b, w.how, large) {
+				continue
+			}
+			a.size, a.capital, a.gap = b.size, small, b.gap
+			a.grow(l, c, b, w.how, most)
+			return true
+		}
 	}
-	return []ink.Micrometre{165, 152, 140, 133}
+	return false
 }
 
-// copied is the row with lists of its own.
-func (r bin) copied() bin {
-	r.items = append([]item{}, r.items...)
-	r.order = append([]int{}, r.order...)
-	return r
+// grow makes the concentration larger as long as all still fits and nothing
+// has to leave its row for it. It is at most 85 % of the name.
+func (a *arrangement) grow(l labels.Label, c content, b block, how packing, most ink.Micrometre) {
+	for _, large := range largeSteps() {
+		if large > most {
+			continue
+		}
+		if large <= a.large {
+			return
+		}
+		larger := *a
+		if larger.place(l, c, b, how, large) && larger.like(*a) {
+			*a = larger
+			return
+		}
+	}
 }
+
+// like says whether the same stands beside the concentrations, in the same
+// faces.
+func (a arrangement) like(o arrangement) bool {
+	for i, s := range a.stated {
+		if s.face != o.stated[i].face || len(s.bin.items) != len(o.stated[i].bin.items) {
+			return false
+		}
+	}
+	return true
+}
+
+// place arranges the lower half with as few rows as it takes.
+func (a *arrangement) place(l labels.Label, c content, b block, how packing, large ink.Micrometre) bool {
+	word, right, more, ok := b.footRow(l, c)
+	if !ok {
+		return false
+	}
+	items := append(c.rows[:len(c.rows):len(c.rows)], more...)
+	for n := 0; ; n++ {
+		end := b.foot() - ink.Micrometre(n)*b.pitch - b.capital*102/100
+		if end <= b.top {
+			return false
+		}
+		list, rest, ok := b.head(l, items, how, large, end)
+		if !ok && n == 0 {
+			continue // a row further up may be wider
+		}
+		if !ok {
+			return false
+		}
+		beside := &list[len(list)-1].bin
+		if l.Second != "" {
+			beside = &bin{} // nothing stands beside two concentrations
+		}
+		slots := b.slots(n)
+		if b.pack(rest, slots, how, beside) {
+			a.large, a.stated, a.rows, a.foot, a.right = large, list, slots, word, right
+			return true
+		}
+	}
+}
+
+// head sets the concentration and beside it, against the right end, the
+// amount. It is in Bold; in Condensed SemiBold where it does not fit else, or
+// where that makes room for the amount.
+func (b block) head(l labels.Label, items []item, how packing, large, end ink.Micrometre) ([]stated, []item, bool) {
+	faces := []ink.Face{ink.Bold, ink.CondensedSemiBold}
+	if how == filling {
+		faces = faces[1:]
+	}
+	for first := range faces {
+		list, rest := statedOf(l), items
+		if !b.concentrations(list, faces[first:], large, end) {
+			return nil, nil, false
+		}
+		bin := &list[len(list)-1].bin
+		for l.Second == "" && len(rest) > 0 && rest[0].beside && bin.room(b.gap) >= rest[0].width(b.size) {
+			bin.add(rest[0], b.size, b.gap)
+			rest = rest[1:]
+		}
+		if first == len(faces)-1 || len(rest) < len(items) || l.Second != "" || b.noneBeside(items) {
+			return list, rest, true
+		}
+		wide := statedOf(l)
+		b.concentrations(wide, faces[first+1:], large, end)
+		if bin := wide[0].bin; bin.room(b.gap) < items[0].width(b.size) {
+			return list, rest, true
+		}
+	}
+	return nil, nil, false
+}
+
+func (b block) noneBeside(items []item) bool { return len(items) == 0 || !items[0].beside }

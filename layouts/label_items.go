@@ -1,6 +1,7 @@
 package layouts
 
 import (
+	"slices"
 	"strings"
 
 	"drawup/labels"
@@ -13,46 +14,65 @@ import (
 // printer still draws with strokes of two dots. Common practice, no source.
 const smallLow = 1200
 
-// concentrationLow is the least height of capitals of the concentration: our
-// choice, between the name's 2.5 mm and the small type.
-const concentrationLow = 2000
+// concentrationLow is the least height of capitals of the concentration, and
+// concentrationLast that of labels which would be refused else: our choice,
+// between the name's 2.5 mm and the small type.
+const (
+	concentrationLow  = 2000
+	concentrationLast = 1800
+)
 
 // An item is one line of small type.
 type item struct {
 	line labels.Line
 	face ink.Face
+	span span // of the line
 	// blank is the length of a line to write on, after the text; tail follows
 	// it.
 	blank ink.Micrometre
 	tail  string
-	// beside allows the item to stand on the row of the concentration, and
-	// foot on that of the class word.
-	beside, foot bool
+	// beside allows the item to stand on the row of the concentration.
+	beside bool
 	// whole keeps plain words of a cell together, such as a person's name.
 	whole bool
-	// start begins a row where rows are filled in order.
+	// start begins a row, except where rows are packed densely.
 	start bool
+	// late items may stand wherever there is room, once the others have their
+	// rows.
+	late bool
+	// serial marks the serial number: labels that differ in nothing else are
+	// arranged once.
+	serial bool
 }
 
-func plain(l labels.Line) item { return item{line: l, face: ink.CondensedRegular, foot: true} }
+func newItem(l labels.Line, f ink.Face) item {
+	return item{line: l, face: f, span: spanOf(l.Text(), f)}
+}
+
+func plain(l labels.Line) item { return newItem(l, ink.CondensedRegular) }
+
+func strong(text string) item { return newItem(labels.Words(text), ink.CondensedSemiBold) }
+
+func (it item) starting() item {
+	it.start = true
+	return it
+}
 
 // digest says what it is: digits beside an amount could be read as part of it.
 func digest(l labels.Label) item {
 	if l.Digest == "" {
 		return item{}
 	}
-	return plain(labels.Words("ref " + l.Digest))
+	it := plain(labels.Words("ref " + l.Digest))
+	it.late = true
+	return it
 }
 
 // prepared is broken, if at all, before the name of who prepared.
 func prepared(l labels.Label) item {
-	it := plain(l.Prepared)
+	it := plain(l.Prepared).starting()
 	it.whole = true
 	return it
-}
-
-func strong(text string) item {
-	return item{line: labels.Words(text), face: ink.CondensedSemiBold}
 }
 
 // Room to write by hand: the length for a name and for a pump rate, and the
@@ -63,34 +83,69 @@ const (
 	writeHeight = 3000
 )
 
-// lowerItems lists the small type of the lower half in reading order. From
-// level 1 on the marks stand in the upper half, from level 2 on also what
-// tells of the preparation, on level 3 the digest.
-func lowerItems(l labels.Label, level int) []item {
-	var items []item
-	for _, line := range []labels.Line{l.Amount, l.Substance, l.Dose} {
+// A content is the small type of a label, sorted by where it stands.
+type content struct {
+	strip  []item // along the top edge
+	rows   []item // lower half, in reading order
+	word   item   // class word
+	foot   []item // what may stand on its row, before the serial; from the right
+	serial item
+}
+
+// A place is where the words about the making of the label stand, which say
+// nothing about what is in the syringe.
+type place int
+
+const (
+	below    place = iota + 1 // in the last rows
+	atEdge                    // along the top edge, but for who made it and when
+	allAbove                  // all along the top edge
+)
+
+// contentOf sorts the small type.
+func contentOf(l labels.Label, where place) content {
+	c := content{word: strong(l.Class.Word), serial: plain(labels.Line{l.Serial})}
+	c.serial.serial = true
+	for _, line := range []labels.Line{l.Amount, l.Substance} {
 		it := plain(line)
 		it.beside = true
-		items = append(items, it)
+		c.rows = append(c.rows, it)
 	}
-	items = append(items, plain(l.Diluent))
+	c.rows = append(c.rows, plain(l.Diluent))
 	if l.Route != "" {
-		items = append(items, strong(l.Route))
+		c.rows = append(c.rows, strong(l.Route))
 	}
-	items = append(items, item{line: l.UseBy, face: ink.CondensedSemiBold, start: true})
-	if level < 2 {
-		items = append(items, prepared(l))
+	dose := plain(l.Dose)
+	dose.late = true
+	c.rows = append(c.rows, newItem(l.UseBy, ink.CondensedSemiBold).starting(), dose)
+	made, marks, ref := prepared(l), markItems(l), filled([]item{digest(l)})
+	switch where {
+	case below:
+		c.rows = append(c.rows, made)
+		c.rows = append(c.rows, handwritten(l)...)
+		slices.Reverse(marks)
+		c.foot = append(ref, marks...)
+	case atEdge:
+		c.rows = append(c.rows, made)
+		c.rows = append(c.rows, handwritten(l)...)
+		c.strip = append(marks, ref...)
+	case allAbove:
+		c.rows = append(c.rows, handwritten(l)...)
+		c.strip = filled(append(append(marks, ref...), made))
 	}
-	if level < 3 {
-		items = append(items, digest(l))
+	c.rows = filled(c.rows)
+	return c
+}
+
+// markItems is one item a mark; the first begins a row.
+func markItems(l labels.Label) []item {
+	var out []item
+	for i, m := range l.Marks {
+		it := plain(labels.Words(m))
+		it.start, it.late = i == 0, true
+		out = append(out, it)
 	}
-	items = append(items, handwritten(l)...)
-	if level < 1 {
-		for _, m := range l.Marks {
-			items = append(items, strong(m))
-		}
-	}
-	return filled(items)
+	return out
 }
 
 // handwritten lists patient, check and pump rate: printed where known, else
@@ -101,38 +156,27 @@ func handwritten(l labels.Label) []item {
 	case l.Patient != "":
 		items = append(items, plain(labels.Words("patient "+l.Patient)))
 	case l.Infusion:
-		items = append(items, item{line: labels.Words("patient"), face: ink.CondensedRegular, blank: 2 * writeName})
+		it := plain(labels.Words("patient"))
+		it.blank = 2 * writeName
+		items = append(items, it)
 	}
 	if l.CheckedBy || l.Infusion {
-		items = append(items, item{line: labels.Words("checked by"), face: ink.CondensedRegular, blank: writeName})
+		it := plain(labels.Words("checked by"))
+		it.blank = writeName
+		items = append(items, it)
 	}
 	if l.Infusion {
-		items = append(items, item{line: labels.Words("pump rate"), face: ink.CondensedRegular, blank: writeRate, tail: "mL/h"})
+		it := plain(labels.Words("pump rate"))
+		it.blank, it.tail = writeRate, "mL/h"
+		items = append(items, it)
 	}
 	return items
-}
-
-// upperItems lists the small type of the upper half.
-func upperItems(l labels.Label, level int) []item {
-	var items []item
-	if level >= 1 {
-		for _, m := range l.Marks {
-			items = append(items, strong(m))
-		}
-	}
-	if level >= 2 {
-		items = append(items, prepared(l))
-	}
-	if level >= 3 {
-		items = append(items, digest(l))
-	}
-	return filled(items)
 }
 
 func filled(items []item) []item {
 	var out []item
 	for _, it := range items {
-		if it.line.Text() != "" {
+		if it.span > 0 {
 			out = append(out, it)
 		}
 	}
@@ -154,7 +198,7 @@ func (it item) split(size, width ink.Micrometre) ([]item, bool) {
 	var out []item
 	for _, row := range rows {
 		part := it
-		part.line = row
+		part.line, part.span = row, spanOf(row.Text(), it.face)
 		out = append(out, part)
 	}
 	return out, ok
@@ -180,7 +224,7 @@ func (it item) cells(size, width ink.Micrometre) ([]labels.Line, bool) {
 
 // width is the item's length at an em size, with its line to write on.
 func (it item) width(size ink.Micrometre) ink.Micrometre {
-	w := Width(it.line, it.face, size)
+	w := it.span.at(size)
 	if it.blank > 0 {
 		w += it.blank + size
 		if it.tail != "" {
@@ -194,7 +238,7 @@ func (it item) width(size ink.Micrometre) ink.Micrometre {
 func (it item) marks(x, y, size ink.Micrometre, c ink.Colour) []ink.Mark {
 	out := []ink.Mark{Set(x, y, it.line, it.face, size, c)}
 	if it.blank > 0 {
-		x += Width(it.line, it.face, size) + size/2
+		x += it.span.at(size) + size/2
 		out = append(out, ink.Rule(x, y+150, it.blank, 120))
 		if it.tail != "" {
 			out = append(out, Set(x+it.blank+size/2, y, labels.Words(it.tail), it.face, size, c))

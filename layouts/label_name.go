@@ -3,111 +3,150 @@ package layouts
 import (
 	"strings"
 
+	"drawup/fonts"
 	"drawup/labels"
 	"drawup/layouts/ink"
 )
 
 // nameLow is the least height of capitals of the drug name (ISO 26825:2020,
-// 5.4.2: at least 2.5 mm; measured on the capital), nameHigh our greatest.
+// 5.4.2: at least 2.5 mm; measured on the capital).
+const nameLow = 2500
+
+// nameSteps are the heights of capitals that a drug name may have, the
+// greatest first, a fifth to a quarter apart: 5.4.2 asks for letters as large
+// as possible, and names of like length look alike. Our choice but for the last.
+func nameSteps() []ink.Micrometre { return []ink.Micrometre{7000, 5600, 4200, 3400, 2800, nameLow} }
+
+// Reach of letters above and below the baseline in hundredths of the capital
+// height, for the bold face and a little to spare: l, d and b above, g, p and
+// y below.
 const (
-	nameLow  = 2500
-	nameHigh = 7000
+	rise = 114
+	drop = 32
 )
+
+// nameAir parts the name from the concentration.
+const nameAir = 250
 
 // A named is the drug name as it was fitted.
 type named struct {
-	rows    []labels.Line
+	rows    []nameRow
 	face    ink.Face
 	size    ink.Micrometre
 	capital ink.Micrometre
-	left    ink.Micrometre
-	bases   []ink.Micrometre // baseline of each row
-	bottom  ink.Micrometre   // where the ink of the last row ends
+	bottom  ink.Micrometre // where the ink of the last row ends
+}
+
+// A nameRow is one row of the name with its place.
+type nameRow struct {
+	text       string
+	left, base ink.Micrometre
 }
 
 // nameRows are the ways to break the name, the best first: one row, then two.
 // A mixture breaks before "with", a name of two words between them.
-func nameRows(l labels.Label) [][]labels.Line {
+func nameRows(l labels.Label) [][]string {
 	if l.Second != "" {
 		with := "with " + l.Second
-		return [][]labels.Line{{labels.Words(l.Name + " " + with)}, {labels.Words(l.Name), labels.Words(with)}}
+		return [][]string{{l.Name + " " + with}, {l.Name, with}}
 	}
-	ways := [][]labels.Line{{labels.Words(l.Name)}}
+	ways := [][]string{{l.Name}}
 	if i := strings.LastIndex(l.Name, " "); i > 0 {
-		ways = append(ways, []labels.Line{labels.Words(l.Name[:i]), labels.Words(l.Name[i+1:])})
+		ways = append(ways, []string{l.Name[:i], l.Name[i+1:]})
 	}
 	return ways
 }
 
-// fitName sets the name as large as it fits between top and the middle of the
-// label, less what is reserved there for small type: in Bold, else in Condensed SemiBold, else on two rows. It is false
-// when 2.5 mm do not fit; the name is never cut and never smaller.
-func (d design) fitName(l labels.Label, top, reserve ink.Micrometre) (named, bool) {
+// fitName sets the name at the greatest step that fits between top and the
+// middle of the label: on one row before two, in Bold before Condensed
+// SemiBold. It is false when 2.5 mm do not fit; the name is never cut and
+// never smaller.
+func (d design) fitName(l labels.Label, top ink.Micrometre) (named, bool) {
 	for _, rows := range nameRows(l) {
-		for _, face := range []ink.Face{ink.Bold, ink.CondensedSemiBold} {
-			for capital := ink.Micrometre(nameHigh); capital >= nameLow; capital -= 50 {
-				if n, ok := d.tryName(rows, face, capital, top, reserve); ok {
-					return n, true
-				}
+		bold, condensed := spansOf(rows, ink.Bold), spansOf(rows, ink.CondensedSemiBold)
+		for _, capital := range nameSteps() {
+			if n, ok := d.tryName(rows, bold, ink.Bold, capital, top); ok {
+				return n, true
+			}
+			if n, ok := d.tryName(rows, condensed, ink.CondensedSemiBold, capital, top); ok {
+				return n, true
 			}
 		}
 	}
 	return named{}, false
 }
 
-// A fitted remembers the last name that was fitted: most steps of the search
-// for the right size of type leave it where it is.
-type fitted struct {
-	top, reserve ink.Micrometre
-	name         named
-	ok, known    bool
+func spansOf(rows []string, f ink.Face) []span {
+	out := make([]span, len(rows))
+	for i, row := range rows {
+		out[i] = spanOf(row, f)
+	}
+	return out
 }
 
-func (f *fitted) fit(d design, l labels.Label, top, reserve ink.Micrometre) (named, bool) {
-	if !f.known || f.top != top || f.reserve != reserve {
-		name, ok := d.fitName(l, top, reserve)
-		*f = fitted{top: top, reserve: reserve, name: name, ok: ok, known: true}
+// nameEnd is where the ink of the name must end.
+func (d design) nameEnd() ink.Micrometre {
+	if d.class.Line {
+		return d.middle - d.lineHeight() - 2*lineAir
 	}
-	return f.name, f.ok
+	return d.middle - nameAir
+}
+
+// nameBase is the baseline of every name on one row, whatever its size: that
+// of the greatest step that the height allows, in the middle of its room.
+func (d design) nameBase(top ink.Micrometre) ink.Micrometre {
+	room := d.nameEnd() - top
+	for _, step := range nameSteps() {
+		if need := step * (rise + drop) / 100; need <= room {
+			return top + (room-need)/2 + step*rise/100
+		}
+	}
+	return d.nameEnd() - nameLow*drop/100
 }
 
 // tryName sets the name at one size. At the least size descenders may hang
 // into the lower half, as long as the baseline stays in the upper one.
-func (d design) tryName(rows []labels.Line, face ink.Face, capital, top, reserve ink.Micrometre) (named, bool) {
+func (d design) tryName(rows []string, spans []span, face ink.Face, capital, top ink.Micrometre) (named, bool) {
 	left, right, _ := d.nameArea()
-	n := named{rows: rows, face: face, size: SizeFor(face, capital), capital: capital, left: left}
+	n := named{face: face, size: SizeFor(face, capital), capital: capital}
 	y, widest := top, ink.Micrometre(0)
+	if len(rows) == 1 && capital > nameLow && capital*(rise+drop)/100 > d.nameEnd()-top {
+		return named{}, false // whatever its letters: names of like length look alike
+	}
 	for i, row := range rows {
-		above, below := faceOf(face).Extents(row.Text(), int64(n.size))
+		width := spans[i].at(n.size)
+		if width > right-left {
+			return named{}, false
+		}
+		above, below := faceOf(face).Extents(row, int64(n.size))
 		if i > 0 {
 			y += 150
 		}
-		n.bases = append(n.bases, y+ink.Micrometre(above))
+		n.rows = append(n.rows, nameRow{row, left, y + ink.Micrometre(above)})
+		if d.class.Stripes {
+			n.rows[i].left += (right - left - width) / 2
+		}
 		y += ink.Micrometre(above + below)
-		widest = max(widest, Width(row, face, n.size))
+		widest = max(widest, n.rows[i].left-left+width)
 	}
-	if widest > right-left {
-		return named{}, false
-	}
-	spare := d.middle - reserve - y
-	if d.class.Line {
-		spare -= d.lineHeight() + 100
-	}
-	if capital > nameLow {
-		spare -= legGap // air before the concentration
-	}
+	last := &n.rows[len(n.rows)-1]
+	spare := d.nameEnd() - y
 	switch {
-	case spare > 0 && !d.class.Stripes:
-		for i := range n.bases {
-			n.bases[i] += spare / 2
+	case spare < 0 && (capital > nameLow || last.base > d.middle):
+		return named{}, false
+	case spare >= 0 && len(rows) == 1:
+		// A letter that reaches further than most moves the baseline.
+		down := min(max(d.nameBase(top)-last.base, 0), spare)
+		last.base, y = last.base+down, y+down
+	case spare >= 0:
+		for i := range n.rows {
+			n.rows[i].base += spare / 2
 		}
 		y += spare / 2
-	case spare < 0 && (capital > nameLow || reserve > 0 || n.bases[len(n.bases)-1] > d.middle):
-		return named{}, false
 	}
 	n.bottom = y
 	ink := box{left, top, widest, y - top}
-	if d.symbol.w > 0 && ink.meets(d.symbol.grown(300)) {
+	if d.symbol.w > 0 && ink.meets(d.symbol.grown(100)) {
 		return named{}, false
 	}
 	return n, true
@@ -116,8 +155,26 @@ func (d design) tryName(rows []labels.Line, face ink.Face, capital, top, reserve
 // marks draws the name.
 func (n named) marks(c ink.Colour) []ink.Mark {
 	var out []ink.Mark
-	for i, row := range n.rows {
-		out = append(out, Set(n.left, n.bases[i], row, n.face, n.size, c))
+	for _, row := range n.rows {
+		out = append(out, ink.Text{X: row.left, Y: row.base, Size: n.size, Face: n.face, Colour: c, String: row.text})
 	}
 	return out
+}
+
+// A span is how far a text reaches at an em of 127 mm, that is 36 000
+// hundredths of a point: as all widths grow with the em, it gives the width at
+// any size without looking at the letters again.
+type span int64
+
+const spanEm = 127_000
+
+func spanOf(text string, f ink.Face) span { return span(faceOf(f).Width(text, spanEm)) }
+
+// at is the width at an em size, rounded up; see fonts.Face.Width.
+func (s span) at(size ink.Micrometre) ink.Micrometre {
+	if size <= 0 {
+		return 0
+	}
+	const em = spanEm * 36 / 127
+	return ink.Micrometre((int64(s)*fonts.Hundredths(int64(size)) + em - 1) / em)
 }
