@@ -62,7 +62,7 @@ func unproven[P Proof](s sheets.Sheet, passed map[int]P) refusal.List {
 func unshowable(s sheets.Sheet) refusal.List {
 	f := s.Foot
 	var missing []rune
-	for _, text := range append(s.Text(), f.Made, f.Preparer, f.Place, f.Formulary, f.State, s.Bookmark) {
+	for _, text := range append(s.Text(), f.Made, f.Preparer, f.Place, f.Formulary, f.State, f.LeftOut, s.Bookmark) {
 		for _, face := range []ink.Face{ink.Regular, ink.Bold, ink.CondensedRegular, ink.CondensedSemiBold} {
 			for _, r := range Missing(text, face) {
 				if !slices.Contains(missing, r) {

@@ -17,8 +17,8 @@ type plot struct {
 // thick within the range, with the start in a diamond and dashed lines to both
 // axes. Figures of the dose stand beside the line, where the field is empty.
 func (s setter) chart(b sheets.Chart) []slab {
-	const high, above, below = 24000, 5400, 7000
-	h := regular(2400).narrow()
+	const high, above, below = 15000, 4000, 6300
+	h := regular(2300).narrow()
 	p := plot{x: 1500, y: above + high, w: s.width - 1500 - 6000, h: high, hand: h}
 	out := slab{h: above + high + below}
 	out.marks = append(out.marks, h.marks(0, 0, labels.Words(b.YWord))...)

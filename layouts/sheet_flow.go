@@ -2,6 +2,7 @@ package layouts
 
 import (
 	"fmt"
+	"slices"
 
 	"drawup/dilution/refusal"
 	"drawup/labels"
@@ -31,14 +32,19 @@ func (b slab) at(x, y ink.Micrometre) []ink.Mark {
 type format struct {
 	w, h, margin, edge       ink.Micrometre
 	body, small, table, head ink.Micrometre // em sizes
-	gap                      ink.Micrometre // between parts
+	caution, foot            ink.Micrometre // em sizes of cautions and of the foot
+	gap, row                 ink.Micrometre // between parts, between rows
+	write                    ink.Micrometre // height of a place to write in
+	under                    ink.Micrometre // between the title and what follows
 }
 
 func formatOf(s sheets.Size) format {
 	if s == sheets.A5 {
-		return format{w: ink.MM(148), h: ink.MM(210), margin: ink.MM(9), edge: ink.MM(9), body: 3000, small: 2500, table: 2500, head: 4200, gap: 2200}
+		return format{w: ink.MM(148), h: ink.MM(210), margin: ink.MM(9), edge: ink.Tenths(85), body: 2800, small: 2400, table: 2400, head: 3600,
+			caution: 2400, foot: 2200, gap: 1300, row: 350, write: 5600, under: 2200}
 	}
-	return format{w: ink.MM(210), h: ink.MM(297), margin: ink.MM(15), edge: ink.MM(11), body: 3500, small: 2800, table: 3000, head: 5000, gap: 3300}
+	return format{w: ink.MM(210), h: ink.MM(297), margin: ink.MM(15), edge: ink.MM(11), body: 3500, small: 2800, table: 3000, head: 5000,
+		caution: 3000, foot: 2600, gap: 3300, row: 600, write: 7000, under: 3000}
 }
 
 // A flow fills the pages of one sheet.
@@ -57,17 +63,21 @@ func newFlow(s sheets.Sheet) *flow {
 	f := &flow{sheet: s, f: formatOf(s.Size)}
 	f.set = setter{f: f.f, width: f.f.w - 2*f.f.margin, sheet: s, refused: &f.refused}
 	f.foot = newFooting(f.set, s.Foot)
-	f.top = f.f.edge + bold(f.f.head).lead() + 3000
+	f.top = f.f.edge + bold(f.f.head).lead() + f.f.under
 	f.bottom = f.f.h - f.f.edge - f.foot.h - 1500
 	f.set.room = f.bottom - f.top
 	return f
 }
 
 // run places every part: whole on the rest of the page, else whole on a new
-// page, else slab by slab.
+// page, else slab by slab. A sheet of one page is refused where it takes two.
 func (f *flow) run() {
 	f.open()
-	for _, p := range f.sheet.Parts {
+	parts := f.sheet.Parts
+	if f.sheet.OnePage {
+		parts = f.onOnePage()
+	}
+	for _, p := range parts {
 		f.set.syringe = p.Syringe
 		slabs := f.set.part(p)
 		total := heightOf(slabs)
@@ -81,6 +91,48 @@ func (f *flow) run() {
 			f.place(b, slabs[i:])
 		}
 	}
+	if f.sheet.OnePage && len(f.pages) > 1 {
+		f.set.syringe = f.sheet.Syringe
+		f.set.tooLong(f.sheet.Of, "what fits on one page")
+	}
+}
+
+// onOnePage leaves out the last of those cautions that may be left out, one
+// after the other, until the sheet fits on a page or none is left.
+func (f *flow) onOnePage() []sheets.Part {
+	trial := f.set
+	trial.refused = &refusal.List{}
+	for fewer := 0; ; fewer++ {
+		parts, more := shortened(f.sheet.Parts, fewer)
+		h := -f.f.gap
+		for _, p := range parts {
+			h += heightOf(trial.part(p)) + f.f.gap
+		}
+		if h <= f.set.room || !more {
+			return parts
+		}
+	}
+}
+
+// shortened leaves out the last cautions of a block that says where they stand
+// otherwise, and says so. It is false when there are no more to leave out.
+func shortened(parts []sheets.Part, fewer int) ([]sheets.Part, bool) {
+	out := slices.Clone(parts)
+	more := false
+	for i := range out {
+		out[i].Blocks = slices.Clone(out[i].Blocks)
+		for j, b := range out[i].Blocks {
+			c, ok := b.(sheets.Cautions)
+			if !ok || c.Rest == "" || fewer == 0 {
+				more = more || ok && c.Rest != "" && len(c.List) > 0
+				continue
+			}
+			left := max(0, len(c.List)-fewer)
+			more = more || left > 0
+			out[i].Blocks[j] = sheets.Cautions{List: append(slices.Clone(c.List[:left]), sheets.Caution{Text: labels.Words(c.Rest)})}
+		}
+	}
+	return out, more
 }
 
 // place sets one slab; with it must fit those that it stays with.
@@ -130,7 +182,7 @@ func (f *flow) open() {
 		f.set.tooLong(right.Text(), "words that fit beside the title of the sheet")
 	}
 	page.Add(note.marks(f.f.w-m-note.width(right), f.f.edge+title.base()-note.base(), right)...)
-	page.Add(ink.Rule(m, f.top-2500, f.set.width, 300))
+	page.Add(ink.Rule(m, f.top-f.f.under+400, f.set.width, 300))
 	f.pages = append(f.pages, page)
 	f.y = f.top
 }
@@ -152,26 +204,27 @@ type footing struct {
 
 // newFooting sets who, when, from which formulary, and the advice.
 func newFooting(s setter, foot sheets.Foot) footing {
-	h := regular(s.f.small - 200)
-	strong := bold(s.f.small - 200)
+	h, strong := regular(s.f.foot), bold(s.f.foot)
 	place := ""
 	if foot.Place != "" {
 		place = ", " + foot.Place
 	}
-	rows := []struct {
+	type row struct {
 		hand hand
 		text string
-	}{
+	}
+	rows := []row{
 		{h, fmt.Sprintf("Made %s by %s%s. Digest %s.", foot.Made, foot.Preparer, place, foot.Digest)},
 		{h, fmt.Sprintf("Formulary: %s, digest %s. State: %s.", foot.Formulary, foot.FormularyDigest, foot.State)},
-		{strong, sheets.Advice},
 	}
+	if foot.LeftOut != "" {
+		rows = append(rows, row{strong, foot.LeftOut})
+	}
+	last := sheets.Advice
 	if foot.Invented {
-		rows = append(rows, struct {
-			hand hand
-			text string
-		}{strong, "INVENTED DEMONSTRATION: no patient, no prescription."})
+		last += " INVENTED DEMONSTRATION: no patient, no prescription."
 	}
+	rows = append(rows, row{strong, last})
 	out := footing{f: s.f}
 	out.slab.marks = []ink.Mark{ink.Rule(0, 0, s.width, 200)}
 	y := ink.Micrometre(700)
@@ -180,8 +233,8 @@ func newFooting(s setter, foot sheets.Foot) footing {
 		if i == 0 {
 			width -= ink.MM(24) // the page number stands there
 		}
-		for _, row := range s.rows(labels.Words(r.text), &r.hand, width) {
-			out.slab.marks = append(out.slab.marks, r.hand.marks(0, y, row)...)
+		for _, line := range s.rows(labels.Words(r.text), &r.hand, width) {
+			out.slab.marks = append(out.slab.marks, r.hand.marks(0, y, line)...)
 			y += r.hand.lead()
 		}
 	}

@@ -14,7 +14,7 @@ import (
 func (s setter) name(b sheets.Name) []slab {
 	size := ink.Micrometre(5600)
 	if b.Large {
-		size = 7600
+		size = 7000
 	}
 	h := bold(size)
 	square := h.lead() + 1400

@@ -184,29 +184,29 @@ func (s setter) cautions(b sheets.Cautions) []slab {
 	const indent = 3000
 	var out []slab
 	for _, c := range b.List {
-		h, tail := regular(s.f.small+200), regular(s.f.small-300).narrow()
-		rows := s.rows(labels.Words(c.Text), &h, s.width-indent)
+		h, tail := regular(s.f.caution), regular(max(2200, s.f.small-300)).narrow()
+		rows := s.rows(c.Text, &h, s.width-indent)
 		row := slab{}
 		for _, r := range rows {
 			row.marks = append(row.marks, h.marks(indent, row.h, r)...)
 			row.h += h.lead()
 		}
-		small := c.Note
-		if small != "" && c.Code != "" {
-			small += "; "
+		small := append(labels.Line{}, c.Note...)
+		if len(small) > 0 && c.Code != "" {
+			small = append(small, labels.Cell{Text: "; "})
 		}
-		if small += c.Code; small != "" && len(rows) > 0 {
+		if small = append(small, labels.Words(c.Code)...); len(small) > 0 && len(rows) > 0 {
 			x := indent + h.width(rows[len(rows)-1]) + 1500
-			if w := tail.width(labels.Words(small)); x+w <= s.width {
-				row.marks = append(row.marks, tail.marks(x, row.h-h.lead()+h.base()-tail.base(), labels.Words(small))...)
+			if w := tail.width(small); x+w <= s.width {
+				row.marks = append(row.marks, tail.marks(x, row.h-h.lead()+h.base()-tail.base(), small)...)
 			} else {
-				below := s.lines(labels.Words(small), tail, indent, s.width-indent)
+				below := s.lines(small, tail, indent, s.width-indent)
 				row.marks = append(row.marks, below.at(0, row.h)...)
 				row.h += below.h
 			}
 		}
 		row.marks = append(row.marks, ink.Filled(800, 400, 900, row.h-400, ink.Black))
-		row.h += 700
+		row.h += s.f.row
 		out = append(out, row)
 	}
 	return out

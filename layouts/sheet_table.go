@@ -46,7 +46,7 @@ func (s setter) table(b sheets.Table) []slab {
 	starts, widths := columns(b.Columns, from, s.width)
 	head := s.tableHead(b.Columns, from)
 	out := []slab{head}
-	size, gap := s.f.table, ink.Micrometre(600)
+	size, gap := s.f.table, s.f.row
 	if b.Small {
 		size, gap = s.f.small-100, 400
 	}
@@ -74,7 +74,7 @@ func (s setter) table(b sheets.Table) []slab {
 
 // blank is a grid with heads and rows to write in.
 func (s setter) blank(b sheets.Blank) []slab {
-	const high = 7000
+	high := s.f.write
 	starts, widths := columns(b.Columns, 0, s.width)
 	out := s.tableHead(b.Columns, 0)
 	out.marks = out.marks[:len(out.marks)-1]
@@ -134,13 +134,13 @@ func (s setter) ticks(b sheets.Ticks) []slab {
 
 // sign is a line for each person with the word below.
 func (s setter) sign(b sheets.Sign) []slab {
-	const gutter, above = 5000, 7000
+	gutter, above := ink.Micrometre(5000), s.f.write
 	n := ink.Micrometre(max(len(b.Roles), 1))
 	each := (s.width - gutter*(n-1)) / n
 	out := slab{}
 	for i, r := range b.Roles {
 		x := ink.Micrometre(i) * (each + gutter)
-		word := s.lines(labels.Words(r), regular(s.f.small-200), x, each)
+		word := s.lines(labels.Words(r), regular(max(2200, s.f.small-200)), x, each)
 		out.marks = append(out.marks, ink.Rule(x, above, each, 250))
 		out.marks = append(out.marks, word.at(0, above+300)...)
 		out.h = max(out.h, above+300+word.h)
@@ -159,9 +159,9 @@ func (s setter) big(b sheets.Big) []slab {
 }
 
 func (s setter) bigRow(r sheets.BigRow) slab {
-	size, pad := ink.Micrometre(5000), ink.Micrometre(350)
+	size, pad := ink.Micrometre(4300), ink.Micrometre(200)
 	if r.Most {
-		size, pad = 10000, 700
+		size, pad = 8400, 400
 	}
 	wide := s.width * 22 / 100
 	value := bold(size)
@@ -179,7 +179,7 @@ func (s setter) bigRow(r sheets.BigRow) slab {
 	}
 	if r.Most {
 		out.marks = append(out.marks, ink.Outlined(400, 0, s.width-800, h, 800, ink.Black))
-		return slab{h: h + 1500, marks: out.at(0, 1200)}
+		return slab{h: h + 1200, marks: out.at(0, 900)}
 	}
 	out.marks = append(out.marks, ink.Rule(0, h, s.width, 80))
 	return out

@@ -387,7 +387,7 @@ func TestWhatCannotBeSetIsRefused(t *testing.T) {
 func TestLongCautionsWrap(t *testing.T) {
 	var list []sheets.Caution
 	for i := range 80 {
-		list = append(list, sheets.Caution{Text: fmt.Sprintf("Caution number %d: %s", i, strings.Repeat("give 12 mL and no more than 0.5 mg in 24 h, ", 6)), Code: "dose-above-usual", Note: "source 1"})
+		list = append(list, sheets.Caution{Text: labels.Words(fmt.Sprintf("Caution number %d: %s", i, strings.Repeat("give 12 mL and no more than 0.5 mg in 24 h, ", 6))), Code: "dose-above-usual", Note: labels.Words("source 1")})
 	}
 	sheet := said("")[0]
 	sheet.Parts[0].Blocks = []sheets.Block{sheets.Cautions{List: list}}

@@ -5,6 +5,7 @@ import (
 	"strings"
 
 	"drawup/labels"
+	"drawup/labels/sheets"
 	"drawup/layouts/ink"
 )
 
@@ -99,10 +100,14 @@ func (h hand) wrap(l labels.Line, width ink.Micrometre) ([]labels.Line, bool) {
 	return rows, true
 }
 
-// glued keeps a number and its unit in plain words on one row (rule N26).
+// glued keeps a number and its unit in words on one row (rule N26). Sentences
+// with figures are words here: they break at their blanks.
 func glued(l labels.Line) labels.Line {
 	out := append(labels.Line{}, l...)
 	for i := range out {
+		if sheets.IsSentence(out[i]) {
+			out[i].Figure = ""
+		}
 		if out[i].Figure == "" {
 			out[i].Text = glue(out[i].Text)
 		}

@@ -16,12 +16,12 @@ import (
 // Facts has one entry a plan, in the order of list.Plans.
 func CheckSheets(list dilution.List, facts []labels.Facts, m labels.Making) []Sheet {
 	var out []Sheet
-	for _, s := range scribesOf(list, facts) {
+	for _, s := range scribesOf(list, facts, PaperCheck) {
 		out = append(out,
 			Sheet{Paper: PaperCheck, Size: A4, Title: "Check sheet: the second person", Note: fmt.Sprintf("syringe %d", s.p.Number), Of: s.of(),
-				Bookmark: s.of() + ", second person", Syringe: s.p.Number, Foot: footOf(m), Parts: s.blindParts()},
+				Bookmark: s.of() + ", second person", Syringe: s.p.Number, Foot: footSaying(list, m), Parts: s.blindParts()},
 			Sheet{Paper: PaperCheck, Size: A4, Title: "Check sheet: the preparer's figures", Note: "open only after the page before is filled in", Of: s.of(),
-				Bookmark: s.of() + ", preparer", Syringe: s.p.Number, Foot: footOf(m), Parts: s.openParts(list)})
+				Bookmark: s.of() + ", preparer", Syringe: s.p.Number, Foot: footSaying(list, m), Parts: s.openParts(list)})
 	}
 	return out
 }
@@ -110,7 +110,7 @@ func (s scribe) body() []Pair {
 
 // pack is the container in the words of the formulary.
 func (s scribe) pack() []Pair {
-	out := []Pair{words(s.p.Presentation.Container, s.drug()+", "+s.p.Presentation.ID)}
+	out := []Pair{pair("container", joined(labels.Words(s.drug()+", "), s.said(s.p.Presentation.ID)))}
 	if s.p.Presentation.Powder() {
 		out = append(out, words("form", "powder: read on the pack what to add and what it gives"))
 	}

@@ -105,15 +105,22 @@ type Boxes struct{ List []Box }
 // Ticks are sentences with a box to tick.
 type Ticks struct{ List []string }
 
-// A Caution is a sentence with its code in small type and its source.
+// A Caution is a sentence with its code in small type and its source. Syringe
+// is set where the sentences belong to several syringes.
 type Caution struct {
-	Text string
-	Code string // "dose-above-usual"
-	Note string // source key, "unverified", rule
+	Text    labels.Line
+	Code    string      // "dose-above-usual"
+	Note    labels.Line // source, "unverified"
+	Syringe int
 }
 
-// Cautions are sentences that must be read.
-type Cautions struct{ List []Caution }
+// Cautions are sentences that must be read, the gravest first. Where Rest is
+// set and the page has no room for all of them, the last ones may be left out,
+// and Rest, which says where they stand, is printed in their place.
+type Cautions struct {
+	List []Caution
+	Rest string
+}
 
 // Sign is a row of places to sign, each for one person.
 type Sign struct{ Roles []string }
@@ -216,7 +223,7 @@ func (b Ticks) Lines() []Owned {
 func (b Cautions) Lines() []Owned {
 	var out []Owned
 	for _, c := range b.List {
-		out = append(out, own(labels.Words(c.Text), labels.Words(c.Note), labels.Words(c.Code))...)
+		out = append(out, Owned{c.Syringe, c.Text}, Owned{c.Syringe, c.Note}, Owned{Line: labels.Words(c.Code)})
 	}
 	return out
 }
@@ -269,4 +276,6 @@ func own(lines ...labels.Line) []Owned {
 
 func heading(text string) Heading { return Heading{labels.Words(text)} }
 
-func words(key, value string) Pair { return Pair{key, labels.Words(value)} }
+func words(key, value string) Pair { return pair(key, labels.Words(value)) }
+
+func pair(key string, value labels.Line) Pair { return Pair{key, value} }

@@ -20,10 +20,10 @@ const Labelling = "Label each syringe when it is full, before it leaves the hand
 // in making order, what is left over, what was left out. Facts has one entry a
 // plan, in the order of list.Plans.
 func DrawUp(list dilution.List, facts []labels.Facts, m labels.Making) []Sheet {
-	all := scribesOf(list, facts)
+	all := scribesOf(list, facts, PaperDrawUp)
 	var sources sourceList
 	sheet := Sheet{Paper: PaperDrawUp, Size: A4, Title: "Draw-up sheet", Bookmark: "Draw-up sheet", Foot: footOf(m)}
-	sheet.Parts = append(sheet.Parts, before(list), fetchPart(all))
+	sheet.Parts = append(sheet.Parts, before(list, all), fetchPart(all), barrelsPart(all))
 	for _, s := range all {
 		sheet.Parts = append(sheet.Parts, s.drawUpPart(list, &sources))
 	}
@@ -35,38 +35,40 @@ func DrawUp(list dilution.List, facts []labels.Facts, m labels.Making) []Sheet {
 }
 
 // before is what must be read first.
-func before(list dilution.List) Part {
+func before(list dilution.List, all []scribe) Part {
 	p := Part{Blocks: []Block{Words{Line: labels.Words(Labelling), Strong: true}}}
-	if n := len(list.LeftOut); n > 0 {
-		var numbers []string
-		for _, l := range list.LeftOut {
-			numbers = append(numbers, fmt.Sprintf("%d (%s)", l.Number, l.Drug))
-		}
-		p.Blocks = append(p.Blocks, Cautions{[]Caution{{Code: string(refusal.SyringesLeftOut),
-			Text: "Not on this sheet: syringe " + strings.Join(numbers, ", ") + ". The reasons stand at the end."}}})
+	if names := leftOutNames(list); names != "" {
+		p.Blocks = append(p.Blocks, Cautions{List: []Caution{{Code: string(refusal.SyringesLeftOut),
+			Text: labels.Words("Not on this sheet: " + names + ". The reasons stand at the end.")}}})
 	}
-	if c := listCautions(list); len(c) > 0 {
-		p.Blocks = append(p.Blocks, Cautions{c})
+	if c := listCautions(list, all); len(c) > 0 {
+		p.Blocks = append(p.Blocks, Cautions{List: c})
 	}
 	return p
 }
 
-// listCautions are those that concern no single syringe.
-func listCautions(list dilution.List) []Caution {
+// listCautions are those that concern several syringes. A figure in one of
+// them is said of the first syringe whose assay limits are assumed, since it
+// is the only figure that they share.
+func listCautions(list dilution.List, all []scribe) []Caution {
 	var out []Caution
+	at := max(0, slices.IndexFunc(all, func(s scribe) bool { return s.p.Mixture.AssayAssumed }))
+	if len(all) == 0 {
+		return nil
+	}
 	for _, r := range list.Cautions.Of(0) {
-		out = append(out, cautionOf(r))
+		out = append(out, Caution{Text: all[at].saidOfAll(inFull(r)), Code: string(r.Code), Syringe: all[at].p.Number})
 	}
 	return out
 }
 
 // fetchPart is the table of containers, fluids and syringes, one row a syringe.
 func fetchPart(all []scribe) Part {
-	t := Table{Box: true, Columns: []Column{{Head: "No.", Share: 6}, {Head: "Drug", Share: 26}, {Head: "Containers", Share: 46}, {Head: "Fluid", Share: 43}, {Head: "Draw with", Share: 15}, {Head: "Fill", Share: 20}}}
+	t := Table{Box: true, Columns: []Column{{Head: "No.", Share: 6}, {Head: "For", Share: 15}, {Head: "Drug", Share: 27}, {Head: "Containers", Share: 49}, {Head: "Fluid", Share: 40}, {Head: "Draw with", Share: 15}, {Head: "Fill", Share: 13}}}
 	for _, s := range all {
 		m := s.p.Mixture
 		with := s.say("{" + recheck.DrugBarrel + "}")
-		into := s.say("{" + recheck.FinalBarrel + "} syringe")
+		into := s.say("{" + recheck.FinalBarrel + "}")
 		switch {
 		case s.bag():
 			into = labels.Words("bag")
@@ -74,15 +76,11 @@ func fetchPart(all []scribe) Part {
 			with = labels.Words("the same")
 		}
 		t.Rows = append(t.Rows, Row{Syringe: s.p.Number, Cells: []labels.Line{
-			labels.Words(fmt.Sprint(s.p.Number)), labels.Words(s.drug()), s.say(s.containers() + s.each() + s.contents()),
+			labels.Words(fmt.Sprint(s.p.Number)), labels.Words(s.p.Patient.ID.Value), labels.Words(s.drug()), s.say(s.containers() + s.each() + s.contents()),
 			s.fluids(m), with, into,
 		}})
 	}
-	blocks := []Block{heading("Fetch"), t}
-	if sums := barrels(all); sums != "" {
-		blocks = append(blocks, Words{Line: labels.Words(sums), Small: true})
-	}
-	return Part{Blocks: blocks}
+	return Part{Blocks: []Block{heading("Fetch"), t}}
 }
 
 // each stands between the count of containers and what one of them holds.
@@ -103,15 +101,15 @@ func (s scribe) oneSyringe() bool {
 func (s scribe) fluids(m dilution.Mixture) labels.Line {
 	var parts []labels.Line
 	if s.f.Has(recheck.PowderAdded) {
-		parts = append(parts, s.say("{"+recheck.PowderAdded+"} "+m.AddFluid+" for the powder"+s.eachPowder()))
+		parts = append(parts, s.say("{"+recheck.PowderAdded+"} {="+m.AddFluid+"} for the powder"+s.eachPowder()))
 	}
 	switch m.Method {
 	case dilution.AddTo:
-		parts = append(parts, s.say("bag of {"+recheck.DiluentVolume+"} "+m.Diluent))
+		parts = append(parts, s.say("bag of {"+recheck.DiluentVolume+"} {="+m.Diluent+"}"))
 	case dilution.WithdrawThenAdd:
-		parts = append(parts, s.say("bag of {"+recheck.FinalVolume+"} "+m.Diluent))
+		parts = append(parts, s.say("bag of {"+recheck.FinalVolume+"} {="+m.Diluent+"}"))
 	case dilution.MakeUpTo:
-		parts = append(parts, s.say("{"+recheck.DiluentVolume+"} "+m.Diluent))
+		parts = append(parts, s.say("{"+recheck.DiluentVolume+"} {="+m.Diluent+"}"))
 	case dilution.Neat:
 	}
 	if len(parts) == 0 {
@@ -131,33 +129,45 @@ func (s scribe) eachPowder() string {
 	return ""
 }
 
-// barrels counts the syringes to lay out by size, the smallest first.
-func barrels(all []scribe) string {
+// barrelsPart is the syringes to lay out by size, the smallest first, each
+// with the numbers that it is for.
+func barrelsPart(all []scribe) Part {
 	var sizes []syringe.Barrel
-	counts := map[string]int{}
-	count := func(b syringe.Barrel) {
+	rows := map[string]*Row{}
+	numbers := map[string][]string{}
+	add := func(s scribe, b syringe.Barrel, name string) {
 		if !b.Given() {
 			return
 		}
-		if counts[b.Nominal().Exact()]++; counts[b.Nominal().Exact()] == 1 {
+		key := b.Nominal().Exact()
+		if rows[key] == nil {
 			sizes = append(sizes, b)
+			rows[key] = &Row{Syringe: s.p.Number, Cells: []labels.Line{s.say("{" + name + "}")}}
 		}
+		numbers[key] = append(numbers[key], fmt.Sprint(s.p.Number))
 	}
 	for _, s := range all {
-		count(s.p.Mixture.FinalBarrel)
+		add(s, s.p.Mixture.FinalBarrel, recheck.FinalBarrel)
 		if !s.oneSyringe() {
-			count(s.p.Mixture.DrugReading.Barrel)
+			add(s, s.p.Mixture.DrugReading.Barrel, recheck.DrugBarrel)
 		}
 	}
+	if len(sizes) == 0 {
+		return Part{}
+	}
 	slices.SortFunc(sizes, func(a, b syringe.Barrel) int { return a.Nominal().Cmp(b.Nominal()) })
-	var out []string
+	t := Table{Box: true, Small: true, Columns: []Column{{Head: "Syringes", Share: 20, Strong: true}, {Head: "one each for", Share: 160}}}
 	for _, b := range sizes {
-		out = append(out, fmt.Sprintf("%d of %s mL", counts[b.Nominal().Exact()], b.Nominal().Exact()))
+		key := b.Nominal().Exact()
+		word := "syringes "
+		if len(numbers[key]) == 1 {
+			word = "syringe "
+		}
+		row := *rows[key]
+		row.Cells = append(row.Cells, labels.Words(word+strings.Join(numbers[key], ", ")))
+		t.Rows = append(t.Rows, row)
 	}
-	if len(out) == 0 {
-		return ""
-	}
-	return "Syringes in all: " + strings.Join(out, ", ") + "."
+	return Part{Blocks: []Block{t}}
 }
 
 // drawUpPart is one syringe: head, steps, what results, cautions.
@@ -166,7 +176,7 @@ func (s scribe) drawUpPart(list dilution.List, sources *sourceList) Part {
 	steps := Steps{List: s.steps(), Strong: []string{recheck.DrugVolume, recheck.FinalVolume, recheck.PowderAdded}}
 	right := []Block{Pairs{Dense: true, List: s.results(), Strong: []string{recheck.DoseVolume, recheck.UseBy, recheck.StartRate}}}
 	if c := append(s.cautions(list), sources.short(s)...); len(c) > 0 {
-		right = append(right, Cautions{c})
+		right = append(right, Cautions{List: c})
 	}
 	return Part{Syringe: s.p.Number, Blocks: []Block{
 		s.name(s.say(s.concentration()), below, false),
@@ -178,36 +188,41 @@ func (s scribe) drawUpPart(list dilution.List, sources *sourceList) Part {
 func (s scribe) results() []Pair {
 	var out []Pair
 	if s.p.Dose != nil {
-		out = append(out, Pair{"One dose", s.doseLine()})
+		out = append(out, pair("One dose", s.doseLine()))
 	}
 	if s.p.Infusion != nil {
-		out = append(out, Pair{"Pump", s.say("start {start.rate}; see the pump card")})
+		out = append(out, pair("Pump", s.say("start {start.rate}; see the pump card")))
 	}
-	out = append(out, Pair{"Use by", joined(s.say("{use.by}, after {use.hours}"), labels.Words(": "+s.p.UseBy.Won+" ends first"))})
-	out = append(out, Pair{"Holds", s.say("{amount} in {final.volume}, " + s.concentration() + s.countedAs())})
+	out = append(out, pair("Use by", joined(s.say("{use.by}, after {use.hours}: "), s.won(), labels.Words(" ends first"))))
+	out = append(out, pair("Holds", s.say("{amount} in {final.volume}, "+s.concentration()+s.countedAs())))
 	if s.f.Has(recheck.SubstanceAmount) {
-		out = append(out, Pair{"That is", s.say("{substance.amount}, {substance.concentration}")})
+		out = append(out, pair("That is", s.say("{substance.amount}, {substance.concentration}")))
 	}
 	if s.f.Has(recheck.SecondAmount) {
-		out = append(out, Pair{"With", s.say("{second.amount} " + s.p.Presentation.SecondName + ", {second.concentration}")})
+		out = append(out, pair("With", s.say("{second.amount} "+s.p.Presentation.SecondName+", {second.concentration}")))
 	}
-	out = append(out, Pair{"Truly", joined(s.say("{interval.low} to {interval.high}, plus or minus {interval.percent}"), labels.Words(s.assumed()))})
+	out = append(out, pair("Truly", joined(s.say("{interval.low} to {interval.high}, plus or minus {interval.percent}"), labels.Words(s.assumed()))))
 	if flags := s.flags(); flags != "" {
 		out = append(out, words("Marked", flags))
 	}
-	return append(out, s.noted()...)
+	if len(s.p.Drug.Cautions) > 0 {
+		out = append(out, words("Notes", "of the formulary: at the end"))
+	}
+	return out
 }
 
-// noted points to the notes at the end of the sheet.
-func (s scribe) noted() []Pair {
-	n := len(s.p.Drug.Cautions)
-	switch n {
-	case 0:
-		return nil
-	case 1:
-		return []Pair{words("Notes", "1 of the formulary, at the end")}
+// won is which limit of the use-by time ends first. A stability that the
+// formulary gives for any fluid, or for the drug undiluted, names none.
+func (s scribe) won() labels.Line {
+	name, ok := strings.CutPrefix(s.p.UseBy.Won, "stability, ")
+	if !ok {
+		return labels.Words(s.p.UseBy.Won)
 	}
-	return []Pair{words("Notes", fmt.Sprintf("%d of the formulary, at the end", n))}
+	fluid, _, _ := strings.Cut(name, ", at ")
+	if fluid == "any" || fluid == "neat" {
+		return labels.Words("stability at room temperature")
+	}
+	return joined(labels.Words("stability in "), s.said(fluid), labels.Words(" at room temperature"))
 }
 
 func (s scribe) countedAs() string {
@@ -246,14 +261,14 @@ func notesParts(all []scribe, sources *sourceList) []Part {
 	seen := map[string]bool{}
 	for _, s := range all {
 		name := s.p.Drug.Name
-		c := sources.cautions(s.p.Drug.Cautions)
+		c := sources.cautions(s, s.p.Drug.Cautions)
 		if seen[name] || len(c) == 0 {
 			continue
 		}
 		seen[name] = true
 		half := (len(c) + 1) / 2
-		out = append(out, Part{Blocks: []Block{heading("Notes of the formulary on " + s.drug()),
-			Beside{LeftShare: 50, Left: []Block{Cautions{c[:half]}}, Right: []Block{Cautions{c[half:]}}}}})
+		out = append(out, Part{Syringe: s.p.Number, Blocks: []Block{heading("Notes of the formulary on " + s.drug()),
+			Beside{LeftShare: 50, Left: []Block{Cautions{List: c[:half]}}, Right: []Block{Cautions{List: c[half:]}}}}})
 	}
 	return out
 }
@@ -285,14 +300,22 @@ func leftOutPart(list dilution.List) Part {
 	}
 	blocks := []Block{heading("Left out on request")}
 	for _, l := range list.LeftOut {
-		c := []Caution{}
-		for _, r := range l.Reasons {
-			c = append(c, cautionOf(r))
-		}
-		if len(c) == 0 {
-			c = append(c, Caution{Text: "Nothing spoke against it."})
-		}
-		blocks = append(blocks, Words{Line: labels.Words(fmt.Sprintf("Syringe %d, %s", l.Number, l.Drug)), Strong: true}, Cautions{c})
+		blocks = append(blocks, Words{Line: labels.Words(fmt.Sprintf("Syringe %d, %s", l.Number, l.Drug)), Strong: true}, Cautions{List: whyLeftOut(l)})
 	}
-	return Part{Blocks: blocks}
+	return Part{Blocks: append(blocks, Words{Line: labels.Words("The figures of these reasons were not worked again and stand on no paper. To see them, prepare the order with nothing left out."), Small: true})}
+}
+
+// whyLeftOut is what spoke against a syringe: each reason once, in the words
+// of its code. A syringe that is not made has no second route, so none of its
+// figures is printed.
+func whyLeftOut(l dilution.LeftOut) []Caution {
+	var out []Caution
+	for _, code := range l.Reasons.Refusals().Codes() {
+		entry, _ := refusal.Lookup(code)
+		out = append(out, Caution{Text: labels.Words(entry.Says), Code: string(code)})
+	}
+	if len(out) == 0 {
+		out = append(out, Caution{Text: labels.Words("Nothing spoke against it.")})
+	}
+	return out
 }

@@ -23,7 +23,7 @@ func (s scribe) openParts(list dilution.List) []Part {
 		parts = append(parts, Part{n, []Block{heading("Soft limit"), Pairs{List: []Pair{words("accepted by", by.Value), words("because", s.p.Order.AcceptedReason.Value)}}}})
 	}
 	if c := s.cautions(list); len(c) > 0 {
-		parts = append(parts, Part{n, []Block{heading("Cautions"), Cautions{c}}})
+		parts = append(parts, Part{n, []Block{heading("Cautions"), Cautions{List: c}}})
 	}
 	if p := sources.part(n); len(p.Blocks) > 0 {
 		parts = append(parts, p)
@@ -40,7 +40,7 @@ func (s scribe) compare() Table {
 	add(s.p.Presentation.Container, s.contents())
 	add("containers opened", "{container.count}")
 	if s.f.Has(recheck.PowderAdded) {
-		add("fluid added to each", "{powder.added} of "+s.p.Mixture.AddFluid)
+		add("fluid added to each", "{powder.added} of {="+s.p.Mixture.AddFluid+"}")
 	}
 	if s.f.Has(recheck.DoseWeight) {
 		add(scalarWord(s.p.Dose.Surface.Given(), "{dose.weight.by}"), "{dose.weight}")
@@ -50,7 +50,7 @@ func (s scribe) compare() Table {
 	}
 	add("drug volume", "{drug.volume}, {drug.barrel} syringe")
 	if s.p.Mixture.Method != dilution.Neat {
-		add("diluent", "{diluent.volume} of "+s.p.Mixture.Diluent)
+		add("diluent", "{diluent.volume} of {="+s.p.Mixture.Diluent+"}")
 	}
 	add("final volume", s.fill())
 	add("amount in it", "{amount}")
@@ -93,41 +93,68 @@ func (s scribe) agreement() labels.Line {
 	return joined(s.say(pattern), labels.Words("; the same value in another unit is the same. Common practice, no source."))
 }
 
+// A limitTable is written row by row: what the limit is, its figure, where it
+// comes from.
+type limitTable struct {
+	s       scribe
+	sources *sourceList
+	table   Table
+}
+
+func (t *limitTable) add(what string, figure labels.Line, from string) {
+	t.table.Rows = append(t.table.Rows, Row{Cells: []labels.Line{labels.Words(what), figure, labels.Words(from)}})
+}
+
+// limit adds one limit as the formulary writes it; nothing for a blank.
+func (t *limitTable) limit(what, text string, source formulary.Source, unverified bool) {
+	if text != "" {
+		t.add(what, t.s.bound(text), t.sources.mark(source, unverified))
+	}
+}
+
+// words adds words of the formulary.
+func (t *limitTable) words(what, text string, source formulary.Source, unverified bool) {
+	t.add(what, t.s.said(text), t.sources.mark(source, unverified))
+}
+
 // limits are the rows of the formulary that the order was held against.
 func (s scribe) limits(sources *sourceList) Table {
-	t := Table{Small: true, Columns: []Column{{Head: "limit", Share: 62}, {Head: "figure", Share: 58}, {Head: "from", Share: 60}}}
-	add := func(what, figure, from string) {
-		t.Rows = append(t.Rows, Row{Cells: []labels.Line{labels.Words(what), labels.Words(figure), labels.Words(from)}})
+	t := &limitTable{s: s, sources: sources, table: Table{Small: true, Columns: []Column{{Head: "limit", Share: 62}, {Head: "figure", Share: 58}, {Head: "from", Share: 60}}}}
+	if d := s.p.Dose; d != nil {
+		addLimits(t, "dose", d.Rule)
+		most := d.Rule.TotalMax
+		t.limit("dose, most at once", most.Text, most.Source, most.Unverified)
 	}
-	s.doseLimits(sources, add)
-	s.rateLimits(sources, add)
 	use := "bolus"
 	if s.p.Order.Infusion {
 		use = "infusion"
 	}
+	if s.p.Infusion != nil {
+		addLimits(t, "dose rate", s.p.Infusion.Rule)
+	}
 	for _, b := range s.bounds(use) {
 		what := "concentration, " + use + ", " + b.Line + " line"
-		if b.Low.Given() {
-			add(what+", lowest", b.Low.Text, sources.mark(b.Low.Source, b.Low.Unverified))
-		}
-		if b.High.Given() {
-			add(what+", highest", b.High.Text, sources.mark(b.High.Source, b.High.Unverified))
-		}
+		t.limit(what+", lowest", b.Low.Text, b.Low.Source, b.Low.Unverified)
+		t.limit(what+", highest", b.High.Text, b.High.Source, b.High.Unverified)
 	}
+	s.packLimits(t)
+	return t.table
+}
+
+// packLimits are the rows on the container, its diluent and the standard
+// preparation.
+func (s scribe) packLimits(t *limitTable) {
 	pr := s.p.Presentation
-	add("contents of the container", pr.ID, sources.mark(pr.Source, pr.Unverified))
-	if pr.Displacement.Given() {
-		add("volume of the powder itself", pr.Displacement.Text, sources.mark(pr.Displacement.Source, pr.Displacement.Unverified))
-	}
+	t.words("contents of the container", pr.ID, pr.Source, pr.Unverified)
+	t.limit("volume of the powder itself", pr.Displacement.Text, pr.Displacement.Source, pr.Displacement.Unverified)
 	for _, d := range pr.Diluents {
 		if d.Name == s.p.Mixture.Diluent {
-			add("diluent", d.Name, sources.mark(d.Source, d.Unverified))
+			t.words("diluent", d.Name, d.Source, d.Unverified)
 		}
 	}
 	if std, ok := s.p.Drug.Standard(s.p.Standard); ok && s.p.Standard != "" {
-		add("standard preparation", std.ID, sources.mark(std.Source, std.Unverified))
+		t.words("standard preparation", std.ID, std.Source, std.Unverified)
 	}
-	return t
 }
 
 // bounds are the rows for this use: those for the very line, else for any.
@@ -151,26 +178,9 @@ func (s scribe) bounds(use string) []formulary.Bounds {
 	return any
 }
 
-func (s scribe) doseLimits(sources *sourceList, add func(what, figure, from string)) {
-	d := s.p.Dose
-	if d == nil {
-		return
-	}
-	addLimits("dose", d.Rule, sources, add)
-	if m := d.Rule.TotalMax; m.Given() {
-		add("dose, most at once", m.Text, sources.mark(m.Source, m.Unverified))
-	}
-}
-
-func (s scribe) rateLimits(sources *sourceList, add func(what, figure, from string)) {
-	if s.p.Infusion != nil {
-		addLimits("dose rate", s.p.Infusion.Rule, sources, add)
-	}
-}
-
 // addLimits adds the figures of one row of limits; where no hard limit is
 // stored it says so.
-func addLimits[T any](what string, r formulary.Rule[T], sources *sourceList, add func(what, figure, from string)) {
+func addLimits[T any](t *limitTable, what string, r formulary.Rule[T]) {
 	by := r.By.String() + " weight"
 	switch r.By {
 	case body.Surface:
@@ -181,16 +191,14 @@ func addLimits[T any](what string, r formulary.Rule[T], sources *sourceList, add
 	}
 	from := "no source"
 	if r.BySource.Title != "" {
-		from = sources.mark(r.BySource, false)
+		from = t.sources.mark(r.BySource, false)
 	}
-	add(what+" for", ruleName(r.For, r.Ages()), "goes by "+by+", "+from)
+	t.add(what+" for", t.s.said(ruleName(r.For, r.Ages())), "goes by "+by+", "+from)
 	for _, x := range limitRows(r) {
-		if x.fig.Given() {
-			add(what+", "+x.name, x.fig.Text, sources.mark(x.fig.Source, x.fig.Unverified))
-		}
+		t.limit(what+", "+x.name, x.fig.Text, x.fig.Source, x.fig.Unverified)
 	}
 	if !r.HardHigh.Given() {
-		add(what+", hard highest", "none stored", "the highest stored figure is the limit")
+		t.add(what+", hard highest", labels.Words("none stored"), "the highest stored figure is the limit")
 	}
 }
 

@@ -15,50 +15,59 @@ import (
 // has one entry a plan, in the order of list.Plans.
 func PumpCards(list dilution.List, facts []labels.Facts, m labels.Making) []Sheet {
 	var out []Sheet
-	for _, s := range scribesOf(list, facts) {
+	for _, s := range scribesOf(list, facts, PaperPump) {
 		if s.p.Infusion == nil {
 			continue
 		}
 		out = append(out, Sheet{Paper: PaperPump, Size: A5, Title: "Pump card", Note: fmt.Sprintf("syringe %d", s.p.Number), Of: s.of(),
-			Bookmark: s.of(), Syringe: s.p.Number, Foot: footOf(m), Parts: s.pumpParts(list)})
+			Bookmark: s.of(), Syringe: s.p.Number, OnePage: true, Foot: footSaying(list, m), Parts: s.pumpParts(list)})
 	}
 	return out
 }
 
 // pumpParts is the card: what is entered, the range, the ladder, slips, the
-// end of the syringe, the next syringe, who did it.
+// end of the syringe, who set it, the next syringe, what to mind.
 func (s scribe) pumpParts(list dilution.List) []Part {
 	n := s.p.Number
-	var sources sourceList
-	holds := joined(s.say("{amount} in {final.volume}"), labels.Words(s.inDiluent()+"; "+s.patient()))
-	parts := []Part{
+	holds := joined(s.say("{amount} in {final.volume}"+s.inDiluent()), labels.Words("; "+s.patient()))
+	return []Part{
 		{n, []Block{s.name(nil, holds, true), Big{s.entries()}}},
 		{n, []Block{s.rangeTable()}},
-		{n, []Block{Beside{LeftShare: 60, Left: []Block{s.ladder()}, Right: []Block{s.chart(), s.slips()}}}},
+		{n, []Block{Beside{LeftShare: 61, Left: []Block{s.ladder()}, Right: []Block{s.chart(), s.slips()}}}},
 		{n, []Block{Pairs{Strong: []string{recheck.EmptyAt, recheck.UseBy}, List: []Pair{
-			{"Empty", s.say("{empty.at}, if started {prepared} at this rate ({run.time})")},
-			{"Use by", s.say("{use.by}: change it then, empty or not")}}}}},
+			pair("Empty", s.say("{empty.at}, if started {prepared} at this rate ({run.time})")),
+			pair("Use by", s.say("{use.by}: change it then, empty or not"))}}}},
 		{n, []Block{Sign{[]string{"programmed by, time", "checked alone by, time"}}}},
-		{n, []Block{heading("Next syringe: read its label; is the concentration the same?"), Blank{Rows: 4, Columns: []Column{{Head: "time", Share: 16}, {Head: "same?", Share: 14},
-			{Head: "old rate, mL/h", Share: 26}, {Head: "new rate, mL/h", Share: 26}, {Head: "initials", Share: 18}, {Head: "initials", Share: 18}}}}},
+		{n, []Block{Words{Line: labels.Words("Next syringe: read its label; is the concentration the same?"), Strong: true},
+			Blank{Rows: 2, Columns: []Column{{Head: "time", Share: 16}, {Head: "same?", Share: 14},
+				{Head: "old rate, mL/h", Share: 26}, {Head: "new rate, mL/h", Share: 26}, {Head: "initials", Share: 18}, {Head: "initials", Share: 18}}}}},
+		{n, s.minded(list)},
 	}
+}
+
+// minded is what the card says of the drug: its marks and the plan's own
+// cautions, the gravest first. What the formulary adds, and where it comes
+// from, stands on the draw-up sheet.
+func (s scribe) minded(list dilution.List) []Block {
+	var out []Block
 	if flags := s.flags(); flags != "" {
-		parts = append(parts, Part{n, []Block{Pairs{List: []Pair{words("Marked", flags)}}}})
+		out = append(out, Words{Line: labels.Words("Marked: " + flags), Small: true})
 	}
-	if c := append(s.cautions(list), sources.notes(s)...); len(c) > 0 {
-		parts = append(parts, Part{n, []Block{Cautions{c}}})
+	c := gravest(s.cautions(list))
+	for i := range c {
+		c[i].Note = nil // sources stand on the draw-up sheet
 	}
-	if p := sources.part(n); len(p.Blocks) > 0 {
-		parts = append(parts, p)
+	if len(c) > 0 {
+		out = append(out, Cautions{List: c, Rest: "More cautions: draw-up sheet."})
 	}
-	return parts
+	return append(out, Words{Line: labels.Words("Notes and sources: draw-up sheet."), Small: true})
 }
 
 func (s scribe) inDiluent() string {
 	if s.p.Mixture.Diluent == "" {
 		return ", undiluted"
 	}
-	return " " + s.p.Mixture.Diluent
+	return " {=" + s.p.Mixture.Diluent + "}"
 }
 
 // entries are what the pump asks for, in the order in which it is entered,
@@ -74,7 +83,7 @@ func (s scribe) entries() []BigRow {
 	case s.p.Infusion.Weight.Given():
 		rows = append(rows, BigRow{Key: "3  weight", Value: s.say("{rate.weight}"), Note: s.weighed()})
 	case s.p.Infusion.Surface.Given():
-		rows = append(rows, BigRow{Key: "3  body surface", Value: s.say("{rate.weight}"), Note: labels.Words("Mosteller 1987")})
+		rows = append(rows, BigRow{Key: "3  body surface", Value: s.say("{rate.weight}"), Note: s.say("{rate.weight.by}, by Mosteller")})
 	}
 	rows = append(rows, BigRow{Key: fmt.Sprintf("%d  dose rate", len(rows)+1), Value: s.say("{start.dose}"), Note: labels.Words("ordered")})
 	return append(rows, BigRow{Key: "then it shows", Value: s.say("{start.rate}"), Note: s.say("which gives {start.delivered}"), Most: true})
@@ -90,32 +99,26 @@ func (s scribe) weighed() labels.Line {
 		note = joined(note, labels.Words(", an estimate"))
 	}
 	if s.p.Infusion.By == body.Actual && s.p.Patient.Weighed.Given() {
-		note = joined(note, labels.Words(", "+s.p.Patient.Weighed.Value))
+		note = joined(note, labels.Words(", "), labels.Words(s.p.Patient.Weighed.Value))
 	}
 	return note
 }
 
 // rangeTable is the range to titrate in and the hard limit, in both units.
 func (s scribe) rangeTable() Table {
-	t := Table{Columns: []Column{{Head: "Range", Share: 26}, {Head: "dose rate", Share: 44}, {Head: "pump rate", Share: 30, Strong: true}}}
-	t.Rows = append(t.Rows,
-		Row{Cells: []labels.Line{labels.Words("lowest"), s.say("{low.dose}"), s.say("{low.rate}")}},
-		Row{Cells: []labels.Line{labels.Words("highest"), s.say("{high.dose}"), s.say("{high.rate}")}})
+	t := Table{Columns: []Column{{Head: "Range", Share: 22}, {Head: "lowest", Share: 36}, {Head: "highest", Share: 36}, {Head: "HARD LIMIT", Share: 36}},
+		Rows: []Row{{Cells: []labels.Line{labels.Words("dose rate"), s.say("{low.dose}"), s.say("{high.dose}"), labels.Words("none stored")}},
+			{Strong: true, Cells: []labels.Line{labels.Words("pump rate"), s.say("{low.rate}"), s.say("{high.rate}"), labels.Words("stay in the range")}}}}
 	if s.f.Has(recheck.LimitDose) {
-		return t.with(Row{Cells: []labels.Line{labels.Words("HARD LIMIT"), s.say("{limit.dose}"), s.say("{limit.rate}")}, Strong: true})
+		t.Rows[0].Cells[3], t.Rows[1].Cells[3] = s.say("{limit.dose}"), s.say("{limit.rate}")
 	}
-	return t.with(Row{Cells: []labels.Line{labels.Words("hard limit"), labels.Words("none stored"), labels.Words("stay in the range")}})
-}
-
-func (t Table) with(r Row) Table {
-	t.Rows = append(t.Rows, r)
 	return t
 }
 
 // ladder is the table to titrate by. A rung whose rounded rate passes an end
 // of the range is left out: the ends stand in the range, rounded inwards.
 func (s scribe) ladder() Table {
-	t := Table{Columns: []Column{{Head: "dose rate", Share: 46}, {Head: "pump rate", Share: 26, Strong: true}, {Head: "gives", Share: 46}}}
+	t := Table{Columns: []Column{{Head: "dose rate", Share: 52}, {Head: "pump rate", Share: 26, Strong: true}, {Head: "gives", Share: 48}}}
 	for i, rung := range s.p.Infusion.Ladder {
 		if !s.inRange(rung) {
 			continue

@@ -2,7 +2,7 @@ package sheets
 
 import (
 	"fmt"
-	"math/big"
+	"slices"
 	"strings"
 
 	"drawup/dilution"
@@ -10,18 +10,19 @@ import (
 	"drawup/labels"
 )
 
-// A scribe writes the lines of one syringe.
+// A scribe writes the lines of one syringe on one paper.
 type scribe struct {
-	p dilution.Plan
-	f labels.Facts
+	p    dilution.Plan
+	f    labels.Facts
+	rows *register
 }
 
 // scribesOf pairs plans with their facts. A plan without facts is written with
 // empty figures, which no proof covers, so that it is never printed.
-func scribesOf(list dilution.List, facts []labels.Facts) []scribe {
+func scribesOf(list dilution.List, facts []labels.Facts, paper string) []scribe {
 	out := make([]scribe, len(list.Plans))
 	for i, p := range list.Plans {
-		out[i].p = p
+		out[i].p, out[i].rows = p, newRegister(paper)
 		if i < len(facts) {
 			out[i].f = facts[i]
 		}
@@ -30,9 +31,9 @@ func scribesOf(list dilution.List, facts []labels.Facts) []scribe {
 }
 
 // say is a line with the figures that stand in braces: "make up to
-// {final.volume}". A figure that the plan does not have is an empty cell under
-// its name, which no proof covers. Words that a user typed never go through
-// here.
+// {final.volume}"; words of the formulary stand after a "=": "add {=glucose 5 %}".
+// A figure that the plan does not have is an empty cell under its name, which
+// no proof covers. Words that a user typed never go through here.
 func (s scribe) say(pattern string) labels.Line {
 	var out labels.Line
 	for pattern != "" {
@@ -44,8 +45,12 @@ func (s scribe) say(pattern string) labels.Line {
 			break
 		}
 		name, tail, _ := strings.Cut(rest, "}")
-		out = append(out, labels.Cell{Text: s.f.Text(name), Figure: name})
 		pattern = tail
+		if quoted, ok := strings.CutPrefix(name, "="); ok {
+			out = append(out, s.said(quoted)...)
+			continue
+		}
+		out = append(out, labels.Cell{Text: s.f.Text(name), Figure: name})
 	}
 	return out
 }
@@ -127,24 +132,51 @@ func (s scribe) cautions(list dilution.List) []Caution {
 	var out []Caution
 	seen := map[string]bool{}
 	for _, r := range append(append(refusal.List{}, s.p.Cautions...), list.Cautions.Of(s.p.Number)...) {
-		c := cautionOf(r)
-		if !seen[c.Text] {
-			seen[c.Text] = true
+		c := Caution{Text: s.cautioned(r), Code: string(r.Code)}
+		if r.Source != "" {
+			c.Note = labels.Words("source: " + r.Source)
+		}
+		if text := c.Text.Text(); !seen[text] {
+			seen[text] = true
 			out = append(out, c)
 		}
 	}
 	return out
 }
 
-func cautionOf(r refusal.Reason) Caution {
-	c := Caution{Text: sentence(r.Message), Code: string(r.Code)}
-	if r.Remedy != "" {
-		c.Text += " " + sentence(r.Remedy)
+// cautioned is a caution as a sentence with figures. One on the reach of a
+// body equation names the bounds of the published study, which no figure of
+// the syringe could confirm: it stands in words.
+func (s scribe) cautioned(r refusal.Reason) labels.Line {
+	switch r.Code {
+	case refusal.BodySizeOutside, refusal.LeanPlateau, refusal.AgeMissing:
+		return labels.Words(inFull(r))
+	case refusal.RateSlow: // the second route knows this sentence as it was written
+		return joined(labels.Words("Slow start: "), s.said(r.Message+". "+sentence(r.Remedy)))
 	}
-	if r.Source != "" {
-		c.Note = "source: " + r.Source
+	return s.said(inFull(r))
+}
+
+// inFull is what a reason says and what to do about it.
+func inFull(r refusal.Reason) string {
+	if r.Remedy == "" {
+		return sentence(r.Message)
 	}
-	return c
+	return sentence(r.Message) + " " + sentence(r.Remedy)
+}
+
+// gravity orders cautions for a sheet that may not hold all of them: what
+// touches a limit first, then time, then what was measured, then the patient.
+func gravity(c Caution) int {
+	entry, _ := refusal.Lookup(refusal.Code(c.Code))
+	return slices.Index([]refusal.Family{refusal.Choices, refusal.Patients, refusal.Measuring, refusal.Times, refusal.Limits}, entry.Family)
+}
+
+// gravest is the cautions with the gravest first, in their order otherwise.
+func gravest(list []Caution) []Caution {
+	out := slices.Clone(list)
+	slices.SortStableFunc(out, func(a, b Caution) int { return gravity(b) - gravity(a) })
+	return out
 }
 
 // sentence gives a text a capital and a full stop.
@@ -155,41 +187,10 @@ func sentence(text string) string {
 	}
 	first := []rune(text)[0]
 	text = strings.ToUpper(string(first)) + text[len(string(first)):]
-	if strings.HasSuffix(text, ".") || strings.HasSuffix(text, "?") {
+	if stopped(text) {
 		return text
 	}
 	return text + "."
 }
 
-// rounded is r in at most seven significant digits for the eye, "about" before
-// it when that is not all of it. It serves working lines only; the figures
-// themselves are printed from the facts.
-func rounded(r *big.Rat) string {
-	exact := r.FloatString(12)
-	exact = strings.TrimRight(strings.TrimRight(exact, "0"), ".")
-	if x, ok := new(big.Rat).SetString(exact); ok && x.Cmp(r) == 0 && len(exact) < 9 {
-		return exact
-	}
-	text := r.FloatString(4)
-	if r.Cmp(big.NewRat(1, 10)) < 0 {
-		text = r.FloatString(8)
-	}
-	return "about " + strings.TrimRight(strings.TrimRight(text, "0"), ".")
-}
-
-// change is how far rounding moved a value, in words.
-func change(percent *big.Rat) string {
-	if percent == nil || percent.Sign() == 0 {
-		return "nothing lost"
-	}
-	word := "more"
-	if percent.Sign() < 0 {
-		word = "less"
-	}
-	text := new(big.Rat).Abs(percent).FloatString(2)
-	text = strings.TrimRight(strings.TrimRight(text, "0"), ".")
-	if text == "0" {
-		return fmt.Sprintf("under 0.01 %% %s", word)
-	}
-	return fmt.Sprintf("%s %% %s", text, word)
-}
+func stopped(text string) bool { return strings.HasSuffix(text, ".") || strings.HasSuffix(text, "?") }

@@ -8,6 +8,10 @@
 package sheets
 
 import (
+	"fmt"
+	"strings"
+
+	"drawup/dilution"
 	"drawup/dilution/recheck"
 	"drawup/labels"
 )
@@ -37,6 +41,7 @@ type Sheet struct {
 	Of       string // printed instead of it on pages that continue, "7 Noradrenaline"
 	Bookmark string // in the outline of the file
 	Syringe  int    // number in making order; 0 for several
+	OnePage  bool   // refused where it does not fit on one page
 	Parts    []Part
 	Foot     Foot
 }
@@ -55,6 +60,7 @@ type Foot struct {
 	State                      string // approval line of the formulary
 	Digest                     string // of order, formulary and time
 	Invented                   bool
+	LeftOut                    string // which syringes were left out, where the sheet itself does not say
 }
 
 // Advice stands on every page.
@@ -64,6 +70,33 @@ const Advice = "Local policy, the pack in the hand and licensed staff decide."
 func footOf(m labels.Making) Foot {
 	return Foot{Made: m.Made, Preparer: m.Preparer, Place: m.Place, Formulary: m.Formulary,
 		FormularyDigest: m.FormularyDigest, State: m.State, Digest: m.Digest, Invented: m.Invented}
+}
+
+// footSaying is the foot of a sheet that points to the draw-up sheet for what
+// was left out.
+func footSaying(list dilution.List, m labels.Making) Foot {
+	foot := footOf(m)
+	var numbers []string
+	for _, l := range list.LeftOut {
+		numbers = append(numbers, fmt.Sprint(l.Number))
+	}
+	switch len(numbers) {
+	case 0:
+	case 1:
+		foot.LeftOut = "Left out: syringe " + numbers[0] + ", see draw-up sheet."
+	default:
+		foot.LeftOut = "Left out: syringes " + strings.Join(numbers, ", ") + ", see draw-up sheet."
+	}
+	return foot
+}
+
+// leftOutNames is "syringe 4 (ephedrine), syringe 7 (propofol)", "" for none.
+func leftOutNames(list dilution.List) string {
+	var out []string
+	for _, l := range list.LeftOut {
+		out = append(out, fmt.Sprintf("syringe %d (%s)", l.Number, l.Drug))
+	}
+	return strings.Join(out, ", ")
 }
 
 // Syringes lists the syringes of which the sheet prints figures, in the order

@@ -2,6 +2,7 @@ package sheets_test
 
 import (
 	"fmt"
+	"regexp"
 	"slices"
 	"strings"
 	"testing"
@@ -330,11 +331,118 @@ func TestFootCarriesTheMaking(t *testing.T) {
 	for _, s := range r.all() {
 		m := r.making
 		want := sheets.Foot{Made: m.Made, Preparer: m.Preparer, Place: m.Place, Formulary: m.Formulary, FormularyDigest: m.FormularyDigest, State: m.State, Digest: m.Digest, Invented: true}
+		if s.Paper != sheets.PaperDrawUp { // it says so itself, with the reasons
+			want.LeftOut = "Left out: syringe 4, see draw-up sheet."
+		}
 		if s.Foot != want {
 			t.Errorf("%s: got foot %+v, want %+v", s.Title, s.Foot, want)
 		}
 	}
+	for _, s := range papers(t, demo, 0).all() {
+		if s.Foot.LeftOut != "" {
+			t.Errorf("%s: got %q with nothing left out, want no such line", s.Title, s.Foot.LeftOut)
+		}
+	}
 	if got := fmt.Sprint(len(r.drawUp), len(r.pump), len(r.check)); got != "1 3 16" {
 		t.Errorf("got %s sheets, want 1 draw-up sheet, 3 cards, 2 check sheets for each of 8 syringes", got)
+	}
+}
+
+// A pump card holds what is needed at the pump. Notes and sources of the
+// formulary stand on the draw-up sheet, and the card says so.
+func TestPumpCardLeavesNotesToTheDrawUpSheet(t *testing.T) {
+	r := papers(t, demo, leftOut)
+	drawUp := strings.Join(r.drawUp[0].Text(), "\n")
+	for _, card := range r.pump {
+		if !card.OnePage || card.Size != sheets.A5 {
+			t.Errorf("%s: got one page %v, size %s, want one page of A5", card.Of, card.OnePage, card.Size)
+		}
+		text := strings.Join(card.Text(), "\n")
+		if !strings.Contains(text, "Notes and sources: draw-up sheet.") || regexp.MustCompile(`source [0-9]|source:`).MatchString(text) {
+			t.Errorf("%s: got sources on the card or no word where they stand:\n%s", card.Of, text)
+		}
+		p := planOf(r, card.Syringe)
+		if len(p.Drug.Cautions) == 0 {
+			t.Errorf("%s: got a drug without notes, want one to test with", card.Of)
+		}
+		for _, n := range p.Drug.Cautions {
+			note := strings.TrimSuffix(n.Text, ".")
+			if strings.Contains(text, note) {
+				t.Errorf("%s: got the note %q on the card, want it on the draw-up sheet", card.Of, note)
+			}
+			if !strings.Contains(drawUp, note) {
+				t.Errorf("%s: got no note %q on the draw-up sheet, want it", card.Of, note)
+			}
+		}
+		for _, c := range p.Cautions {
+			if !strings.Contains(text, c.Message[1:]) {
+				t.Errorf("%s: got no caution %q on the card, want all of the plan's own", card.Of, c.Message)
+			}
+		}
+	}
+}
+
+func planOf(r run, number int) dilution.Plan {
+	for _, p := range r.list.Plans {
+		if p.Number == number {
+			return p
+		}
+	}
+	return dilution.Plan{}
+}
+
+// Whichever limit of the use-by time ends first is named in words that read:
+// propofol's stability is stored for any fluid, and no fluid is named then.
+func TestUseByReasonReads(t *testing.T) {
+	r := papers(t, demo, leftOut)
+	text := strings.Join(append(r.drawUp[0].Text(), r.check[5].Text()...), "\n")
+	if !strings.Contains(text, ": stability at room temperature ends first") || strings.Contains(text, "stability,") || strings.Contains(text, "in any") {
+		t.Errorf("got no plain reason of the use-by time, want \"stability at room temperature\" in:\n%s", text)
+	}
+}
+
+// The second person reads the container's name once.
+func TestContainerIsNamedOnce(t *testing.T) {
+	for _, line := range papers(t, demo, leftOut).check[0].Text() {
+		if strings.Count(line, "ampoule") > 1 {
+			t.Errorf("got %q, want the container named once", line)
+		}
+	}
+}
+
+// Every row of the containers to fetch says for whom it is.
+func TestFetchNamesThePatient(t *testing.T) {
+	r := papers(t, demo, leftOut)
+	rows := 0
+	for _, p := range r.drawUp[0].Parts {
+		for _, b := range p.Blocks {
+			table, ok := b.(sheets.Table)
+			if !ok || len(table.Columns) < 2 || table.Columns[1].Head != "For" {
+				continue
+			}
+			for _, row := range table.Rows {
+				rows++
+				if got, want := row.Cells[1].Text(), planOf(r, row.Syringe).Patient.ID.Value; got != want {
+					t.Errorf("syringe %d: got patient %q, want %q", row.Syringe, got, want)
+				}
+			}
+		}
+	}
+	if rows != len(r.list.Plans) {
+		t.Errorf("got %d rows to fetch, want %d", rows, len(r.list.Plans))
+	}
+}
+
+// A syringe that is left out is not planned, so none of its figures can be
+// worked again: its reasons stand in the words of their codes.
+func TestLeftOutReasonsHoldNoFigure(t *testing.T) {
+	r := papers(t, strings.Replace(demo, "  dose = \"2 mg/kg lean\"", "  dose = \"90 mg/kg lean\"", 1), 3)
+	_, after, _ := strings.Cut(strings.Join(r.drawUp[0].Text(), "\n"), "Left out on request")
+	part, _, _ := strings.Cut(after, "Notes of the formulary")
+	if !strings.Contains(part, "Syringe 3, propofol") || !strings.Contains(part, "slip-ten-times") && !strings.Contains(part, "dose-above") && !strings.Contains(part, "formulary-blank") {
+		t.Errorf("got no reason for the syringe that was left out in:\n%s", part)
+	}
+	if strings.Contains(part, "90 mg") {
+		t.Errorf("got a figure that no second route has seen in:\n%s", part)
 	}
 }

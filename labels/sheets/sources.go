@@ -38,24 +38,20 @@ func (l *sourceList) mark(s formulary.Source, unverified bool) string {
 // short are the formulary's words on this very container, and those on what
 // the drug is never used for, each with the mark of its source.
 func (l *sourceList) short(s scribe) []Caution {
-	out := l.cautions(s.p.Presentation.Notes)
+	out := l.cautions(s, s.p.Presentation.Notes)
 	for _, n := range []*formulary.Note{s.p.Drug.NeverAsInfusion, s.p.Drug.NeverAsBolus} {
 		if n != nil {
-			out = append(out, l.cautions([]formulary.Note{*n})...)
+			out = append(out, l.cautions(s, []formulary.Note{*n})...)
 		}
 	}
 	return out
 }
 
-// notes are all that the formulary says of the container and the drug.
-func (l *sourceList) notes(s scribe) []Caution {
-	return append(l.short(s), l.cautions(s.p.Drug.Cautions)...)
-}
-
-func (l *sourceList) cautions(notes []formulary.Note) []Caution {
+// cautions are notes of the formulary on the drug of s.
+func (l *sourceList) cautions(s scribe, notes []formulary.Note) []Caution {
 	var out []Caution
 	for _, n := range notes {
-		out = append(out, Caution{Text: sentence(n.Text), Note: l.mark(n.Source, n.Unverified)})
+		out = append(out, Caution{Text: s.note(n.Text), Note: labels.Words(l.mark(n.Source, n.Unverified))})
 	}
 	return out
 }

@@ -48,7 +48,7 @@ func (s scribe) dissolve(act func(string)) {
 	if s.p.Mixture.Containers > 1 {
 		each = "each of {container.count} " + s.p.Presentation.Container + "s"
 	}
-	act("Add {powder.added} of " + s.p.Mixture.AddFluid + " to " + each + " of " + s.drug() + ", {container.amount}.")
+	act("Add {powder.added} of {=" + s.p.Mixture.AddFluid + "} to " + each + " of " + s.drug() + ", {container.amount}.")
 	act("Let all of the powder dissolve: each " + s.p.Presentation.Container + " now holds {container.volume}, {strength}.")
 }
 
@@ -72,13 +72,13 @@ func (s scribe) draw(act func(string)) {
 		if !s.oneSyringe() {
 			act("Put it into the {final.barrel} syringe.")
 		}
-		act("Add " + m.Diluent + " up to {final.volume}; that is {diluent.volume}.")
+		act("Add {=" + m.Diluent + "} up to {final.volume}; that is {diluent.volume}.")
 	case dilution.AddTo:
-		act("Take a bag of {diluent.volume} of " + m.Diluent + ".")
+		act("Take a bag of {diluent.volume} of {=" + m.Diluent + "}.")
 		act("Draw up {drug.volume}" + from + with)
 		act("Add it to the full bag; the bag then holds {final.volume}.")
 	case dilution.WithdrawThenAdd:
-		act("Take a bag of {final.volume} of " + m.Diluent + ".")
+		act("Take a bag of {final.volume} of {=" + m.Diluent + "}.")
 		act("Withdraw {drug.volume} from the bag and discard it; {diluent.volume} stay.")
 		act("Draw up {drug.volume}" + from + with)
 		act("Add it to the bag; the bag again holds {final.volume}.")

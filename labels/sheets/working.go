@@ -36,7 +36,7 @@ func (s scribe) working() []labels.Line {
 		add(s.say("volume after mixing: {powder.added} added and {powder.displaced} taken by the powder make {container.volume}"))
 	}
 	add(s.say("strength: {container.amount} in {container.volume} is {strength}"))
-	add(joined(s.say("drug volume: {drug.volume} on the {drug.barrel} barrel in steps of {drug.step}; rounding: "), labels.Words(change(s.p.Mixture.DrugReading.MovedPercent))))
+	add(s.say("drug volume: {drug.wanted}, read as {drug.volume} on the {drug.barrel} barrel in steps of {drug.step}; rounding: {drug.moved}"))
 	add(s.say("containers: {drug.volume} out of {container.volume} each takes {container.count}"))
 	add(s.diluentLine())
 	add(s.say("amount: {drug.volume} of {strength} is {amount}"))
@@ -51,7 +51,7 @@ func (s scribe) working() []labels.Line {
 	s.rateWorking(add)
 	add(s.say("balance: {container.count} of {container.amount} taken; {amount} in it and {left.amount} ({left.volume}) left over"))
 	add(joined(s.say("interval: plus or minus {interval.percent}, {interval.low} to {interval.high}; "), s.largest()))
-	add(joined(s.say("use by: {prepared} ({prepared.offset} from UTC) and {use.hours} is {use.by} ({use.by.offset}); "), labels.Words(s.p.UseBy.Won+" ends first ("+s.p.UseBy.Source+")")))
+	add(joined(s.say("use by: {prepared} ({prepared.offset} from UTC) and {use.hours} is {use.by} ({use.by.offset}); "), s.won(), labels.Words(" ends first ("+s.p.UseBy.Source+")")))
 	return out
 }
 
@@ -65,47 +65,23 @@ func (s scribe) weightLine() labels.Line {
 	case s.p.Infusion != nil && s.f.Has("rate.weight"):
 		by = s.p.Infusion.By
 	}
-	line := func(from, used string) labels.Line {
-		return joined(labels.Words(by.Equation()), s.say(from), labels.Words(", is "+exactWeight(s.p.Size, by)), s.say("; used: "+used))
+	line := func(from, name string) labels.Line {
+		return joined(labels.Words(by.Equation()), s.say(from+", is {"+name+".full}; used: {"+name+"}"))
 	}
 	switch by {
 	case body.Actual:
 		return s.say("weight: {weight.actual}, as typed")
 	case body.Ideal:
-		return line(": {sex}, {height}", "{weight.ideal}")
+		return line(": {sex}, {height}", "weight.ideal")
 	case body.Adjusted:
-		return line(": {weight.actual} against {weight.ideal} ideal ({sex}, {height})", "{weight.adjusted}")
+		return line(": {weight.actual} against {weight.ideal} ideal ({sex}, {height})", "weight.adjusted")
 	case body.Lean:
-		return line(": {sex}, {height}, {weight.actual}", "{weight.lean}")
+		return line(": {sex}, {height}, {weight.actual}", "weight.lean")
 	case body.Surface:
 		return joined(labels.Words(by.Equation()), s.say(": {height}, {weight.actual}; the root rounded to {surface}"))
 	case body.None:
 	}
 	return nil
-}
-
-// exactWeight is the weight before it was rounded to 0.1 kg.
-func exactWeight(size body.Size, by body.Kind) string {
-	var r *big.Rat
-	switch by {
-	case body.Ideal:
-		if w, err := size.Ideal(); err == nil {
-			r = w.Rat()
-		}
-	case body.Adjusted:
-		if w, err := size.Adjusted(); err == nil {
-			r = w.Rat()
-		}
-	case body.Lean:
-		if w, err := size.Lean(); err == nil {
-			r = w.Rat()
-		}
-	case body.Actual, body.Surface, body.None:
-	}
-	if r == nil {
-		return "as typed"
-	}
-	return rounded(r) + " kg"
 }
 
 func (s scribe) diluentLine() labels.Line {
@@ -124,41 +100,24 @@ func (s scribe) diluentLine() labels.Line {
 
 // doseWorking is one dose out of the syringe.
 func (s scribe) doseWorking(add func(labels.Line)) {
-	d := s.p.Dose
-	if d == nil {
+	if s.p.Dose == nil {
 		return
 	}
-	exact, err := d.Amount.DrawnAt(s.p.Mixture.Concentration)
-	if err != nil {
-		return
-	}
-	add(joined(s.say("one dose: {dose.amount} at {concentration} is "), labels.Words(rounded(exact.Rat())+" mL"),
-		s.say("; read as {dose.volume} in steps of {dose.step}: "), labels.Words(change(moved(d.Volume.Rat(), exact.Rat()))), s.say("; that gives {dose.delivered}")))
+	add(s.say("one dose: {dose.amount} at {concentration} is {dose.wanted}, read as {dose.volume} in steps of {dose.step}; rounding: {dose.moved}; that gives {dose.delivered}"))
 }
 
 // rateWorking is the start rate of the pump.
 func (s scribe) rateWorking(add func(labels.Line)) {
-	i := s.p.Infusion
-	if i == nil {
+	if s.p.Infusion == nil {
 		return
 	}
 	times := ""
 	if s.f.Has("rate.weight") {
 		times = " times {rate.weight}"
 	}
-	add(joined(s.say("pump rate: {start.dose}"+times+" at {concentration} is "), labels.Words(rounded(i.Start.Exact.Rat())+" mL/h"),
-		s.say("; set to {start.rate} in steps of {rate.step}: "), labels.Words(change(i.Start.LostPercent)), s.say("; that gives {start.delivered}")))
+	add(s.say("pump rate: {start.dose}" + times + " at {concentration} is {start.flow}, set to {start.rate} in steps of {rate.step}; rounding: {start.moved}; that gives {start.delivered}"))
 	add(s.say("ends of the range: {low.dose} rounded up is {low.rate}, {high.dose} rounded down is {high.rate}"))
 	add(s.say("time: {final.volume} at {start.rate} last {run.time}, to {empty.at}"))
-}
-
-// moved is how far from b a lies, in per cent of b; nil for a b of nothing.
-func moved(a, b *big.Rat) *big.Rat {
-	if b.Sign() == 0 {
-		return nil
-	}
-	d := new(big.Rat).Sub(a, b)
-	return d.Mul(d, big.NewRat(100, 1)).Quo(d, b)
 }
 
 // largest names what the interval comes from most (rule R9).
