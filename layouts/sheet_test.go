@@ -144,7 +144,13 @@ func spaced(s string) string {
 // independent renderer reads it. Figures of the chart and of the foot apart,
 // nothing may be left out.
 func TestSheetsReadBack(t *testing.T) {
-	r := runOf(t, sheetOrder)
+	for _, text := range []string{sheetOrder, bagOrder} {
+		readBack(t, runOf(t, text))
+	}
+}
+
+func readBack(t *testing.T, r paperRun) {
+	t.Helper()
 	for _, name := range paperNames {
 		pages, data := r.placed(t, name)
 		file := readback.Open(t, data)
@@ -223,7 +229,13 @@ func TestEveryPageHasItsFoot(t *testing.T) {
 // Nothing stands over anything else: the boxes of two texts never meet, as the
 // renderer measures them, and every text keeps clear of the edge.
 func TestTextsDoNotMeet(t *testing.T) {
-	r := runOf(t, sheetOrder)
+	for _, text := range []string{sheetOrder, bagOrder} {
+		doNotMeet(t, runOf(t, text))
+	}
+}
+
+func doNotMeet(t *testing.T, r paperRun) {
+	t.Helper()
 	const slack = 130 // the renderer widens a box by up to some 60 micrometres
 	for _, name := range paperNames {
 		pages, data := r.placed(t, name)
@@ -300,7 +312,7 @@ func TestSheetsBreakWhereTheyShould(t *testing.T) {
 	}
 	_, data = r.placed(t, "pump cards")
 	front := spaced(readback.Open(t, data).AllText(1))
-	for _, want := range []string{"Noradrenaline", "then it shows", "2 mL/h", "hard limit", "checked alone by, time"} {
+	for _, want := range []string{"Noradrenaline", "then it shows", "2 mL/h", "HARD LIMIT", "checked alone by, time"} {
 		if !strings.Contains(front, want) {
 			t.Errorf("front of the first card: got no %q, want it", want)
 		}
