@@ -52,32 +52,33 @@ var (
 // adrenaline (2008: the label's own colour, which on black is too dim for red),
 // the look of heparin and protamine, and which class "everything else" is.
 // Stripes: clauses 5.2.2 and 5.4.4. Line: clause 5.4.4, a "should".
-func Classes() []Class {
-	return []Class{
-		{Code: "IND", Word: "INDUCTION", Fill: yellow},
-		{Code: "BZD", Word: "BENZODIAZEPINE", Fill: orange},
-		{Code: "BZD-A", Parent: "BZD", Word: "BENZODIAZEPINE ANTAGONIST", Fill: orange, Stripes: true},
-		{Code: "NMB", Word: "RELAXANT", Fill: red},
-		{Code: "SUX", Parent: "NMB", Word: "RELAXANT", Fill: red, Bar: true, LetterOnBar: white},
-		{Code: "NMB-R", Parent: "NMB", Word: "REVERSAL", Fill: red, Stripes: true, Line: true},
-		{Code: "OPI", Word: "OPIOID", Fill: blue},
-		{Code: "OPI-A", Parent: "OPI", Word: "OPIOID ANTAGONIST", Fill: blue, Stripes: true},
-		{Code: "VAS", Word: "VASOPRESSOR", Fill: violet},
-		{Code: "ADR", Parent: "VAS", Word: "VASOPRESSOR", Fill: violet, Bar: true, LetterOnBar: white},
-		{Code: "HYP", Parent: "VAS", Word: "HYPOTENSIVE", Fill: violet, Stripes: true},
-		{Code: "LA", Word: "LOCAL ANAESTHETIC", Fill: grey},
-		{Code: "ACH", Word: "ANTICHOLINERGIC", Fill: green},
-		{Code: "AEM", Word: "ANTI-EMETIC", Fill: salmon},
-		{Code: "HEP", Word: "HEPARIN", Fill: white},
-		{Code: "PRO", Parent: "HEP", Word: "PROTAMINE", Fill: black, Stripes: true},
-		{Code: "OTH", Word: "OTHER", Fill: white},
-	}
+func Classes() []Class { return append([]Class{}, classes[:]...) }
+
+// classes is the table; it never changes.
+var classes = [...]Class{
+	{Code: "IND", Word: "INDUCTION", Fill: yellow},
+	{Code: "BZD", Word: "BENZODIAZEPINE", Fill: orange},
+	{Code: "BZD-A", Parent: "BZD", Word: "BENZODIAZEPINE ANTAGONIST", Fill: orange, Stripes: true},
+	{Code: "NMB", Word: "RELAXANT", Fill: red},
+	{Code: "SUX", Parent: "NMB", Word: "RELAXANT", Fill: red, Bar: true, LetterOnBar: white},
+	{Code: "NMB-R", Parent: "NMB", Word: "REVERSAL", Fill: red, Stripes: true, Line: true},
+	{Code: "OPI", Word: "OPIOID", Fill: blue},
+	{Code: "OPI-A", Parent: "OPI", Word: "OPIOID ANTAGONIST", Fill: blue, Stripes: true},
+	{Code: "VAS", Word: "VASOPRESSOR", Fill: violet},
+	{Code: "ADR", Parent: "VAS", Word: "VASOPRESSOR", Fill: violet, Bar: true, LetterOnBar: white},
+	{Code: "HYP", Parent: "VAS", Word: "HYPOTENSIVE", Fill: violet, Stripes: true},
+	{Code: "LA", Word: "LOCAL ANAESTHETIC", Fill: grey},
+	{Code: "ACH", Word: "ANTICHOLINERGIC", Fill: green},
+	{Code: "AEM", Word: "ANTI-EMETIC", Fill: salmon},
+	{Code: "HEP", Word: "HEPARIN", Fill: white},
+	{Code: "PRO", Parent: "HEP", Word: "PROTAMINE", Fill: black, Stripes: true},
+	{Code: "OTH", Word: "OTHER", Fill: white},
 }
 
 // ClassOf finds a class by its code. An unknown code is no class: nothing is
 // derived from a drug's name or code.
 func ClassOf(code string) (Class, bool) {
-	for _, c := range Classes() {
+	for _, c := range &classes {
 		if c.Code == code {
 			return c, true
 		}

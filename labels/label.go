@@ -93,6 +93,21 @@ func (l Label) lines() []Line {
 	return append(lines, Words(l.Class.Word), Line{l.Serial}, Words(l.Digest), Line{l.Code})
 }
 
+// Each calls see with every text of the label, the barcode's included.
+func (l Label) Each(see func(text string)) {
+	for _, text := range []string{l.Name, l.Second, l.Concentration.Text, l.As, l.SecondConcentration.Text, l.Route, l.Patient, l.Class.Word, l.Serial.Text, l.Digest, l.Code.Text} {
+		see(text)
+	}
+	for _, line := range []Line{l.Amount, l.Substance, l.Dose, l.Diluent, l.UseBy, l.Prepared} {
+		for _, c := range line {
+			see(c.Text)
+		}
+	}
+	for _, m := range l.Marks {
+		see(m)
+	}
+}
+
 // Figures is every figure of the label, as the second route wants it. Paper
 // is the name of the paper, "label".
 func (l Label) Figures(paper string) []recheck.Figure {

@@ -13,7 +13,11 @@ func faceOf(f ink.Face) *fonts.Face { return fonts.Get(fonts.Name(f)) }
 
 // Width is how far a line reaches at an em size, rounded up.
 func Width(l labels.Line, f ink.Face, size ink.Micrometre) ink.Micrometre {
-	return ink.Micrometre(faceOf(f).Width(l.Text(), int64(size)))
+	var sum span
+	for _, c := range l {
+		sum += spanOf(c.Text, f)
+	}
+	return sum.at(size)
 }
 
 // SizeFor is the smallest em size whose capitals are at least capital high.

@@ -5,37 +5,47 @@ import (
 	"drawup/layouts/ink"
 )
 
+// A drawing is the marks of a label at 0, 0, and which of them differ between
+// labels that are alike but for serial number and barcode; -1 for none.
+type drawing struct {
+	marks          []ink.Mark
+	serial, symbol int
+}
+
+func (to *drawing) add(m ink.Mark) { to.marks = append(to.marks, m) }
+
 // draw gives the marks of an arranged label: layout after ISO 26825:2020, 5.2
 // to 5.4. Type in the lower half is black and so is the name, except in a
 // black bar.
-func (a arrangement) draw() []ink.Mark {
+func (a arrangement) draw() drawing {
 	d := a.design
-	marks := d.background()
+	to := &drawing{marks: d.background(), serial: -1, symbol: -1}
 	letters := ink.Black
 	if d.class.Bar {
 		letters = colour(d.class.LetterOnBar)
 	}
-	marks = append(marks, a.whitePanels()...)
+	to.marks = append(to.marks, a.whitePanels()...)
 	for _, row := range a.strips {
-		marks = append(marks, a.fromRight(row, a.stripSize(), letters)...)
+		a.fromRight(to, row, a.stripSize(), letters)
 	}
-	marks = append(marks, a.name.marks(letters)...)
+	to.marks = append(to.marks, a.name.marks(letters)...)
 	if d.class.Line {
-		marks = append(marks, a.line.filled(ink.Black))
+		to.add(a.line.filled(ink.Black))
 	}
 	for _, s := range a.stated {
-		marks = append(marks, a.statedMarks(s)...)
+		a.drawStated(to, s)
 	}
 	for _, row := range a.rows {
-		marks = append(marks, a.row(row, ink.Black)...)
+		a.row(to, row, ink.Black)
 	}
-	marks = append(marks, a.row(a.foot, ink.Black)...)
-	marks = append(marks, a.fromRight(a.right, a.size, ink.Black)...)
+	a.row(to, a.foot, ink.Black)
+	a.fromRight(to, a.right, a.size, ink.Black)
 	if len(a.modules) > 0 {
-		marks = append(marks, d.symbol.filled(ink.White),
-			ink.Symbol{X: d.symbol.x + a.module, Y: d.symbol.y + a.module, Module: a.module, Rows: a.modules, Colour: ink.Black})
+		to.add(d.symbol.filled(ink.White))
+		to.symbol = len(to.marks)
+		to.add(ink.Symbol{X: d.symbol.x + a.module, Y: d.symbol.y + a.module, Module: a.module, Rows: a.modules, Colour: ink.Black})
 	}
-	return marks
+	return *to
 }
 
 // whitePanels lie behind small type on a class colour on which it would be
@@ -81,18 +91,16 @@ func (a arrangement) whitePanels() []ink.Mark {
 func (a arrangement) stripSize() ink.Micrometre { return newBlock(a.design, 0, smallLow).size }
 
 // row draws the items of a row from its left end.
-func (a arrangement) row(r bin, c ink.Colour) []ink.Mark {
-	var marks []ink.Mark
+func (a arrangement) row(to *drawing, r bin, c ink.Colour) {
 	x := r.left
 	for _, it := range r.items {
-		marks = append(marks, it.marks(x, r.base, a.size, c)...)
+		it.draw(to, x, r.base, a.size, c)
 		x += it.width(a.size) + a.gap
 	}
-	return marks
 }
 
 // fromRight draws the items of a row against its right end.
-func (a arrangement) fromRight(r bin, size ink.Micrometre, c ink.Colour) []ink.Mark {
+func (a arrangement) fromRight(to *drawing, r bin, size ink.Micrometre, c ink.Colour) {
 	x := r.right
 	gap := a.gap
 	if size != a.size {
@@ -104,23 +112,21 @@ func (a arrangement) fromRight(r bin, size ink.Micrometre, c ink.Colour) []ink.M
 			x -= gap
 		}
 	}
-	var marks []ink.Mark
 	for _, it := range r.items {
-		marks = append(marks, it.marks(x, r.base, size, c)...)
+		it.draw(to, x, r.base, size, c)
 		x += it.width(size) + gap
 	}
-	return marks
 }
 
-// statedMarks draws one concentration, what follows it, and what stands
-// beside it, against the right end.
-func (a arrangement) statedMarks(s stated) []ink.Mark {
-	size := SizeFor(s.face, a.large)
-	line := labels.Line{s.cell}
-	marks := []ink.Mark{Set(s.bin.left, s.bin.base, line, s.face, size, ink.Black)}
+// drawStated draws one concentration, what follows it, and what stands beside
+// it, against the right end.
+func (a arrangement) drawStated(to *drawing, s stated) {
+	face := statedFaces()[s.face]
+	size := SizeFor(face, a.large)
+	to.add(Set(s.bin.left, s.bin.base, labels.Line{s.cell}, face, size, ink.Black))
 	if s.tail != "" {
-		x := s.bin.left + Width(line, s.face, size) + a.gap
-		marks = append(marks, Set(x, s.bin.base, labels.Words(s.tail), ink.CondensedSemiBold, a.size, ink.Black))
+		x := s.bin.left + s.wide[s.face].at(size) + a.gap
+		to.add(Set(x, s.bin.base, labels.Words(s.tail), ink.CondensedSemiBold, a.size, ink.Black))
 	}
-	return append(marks, a.fromRight(s.bin, a.size, ink.Black)...)
+	a.fromRight(to, s.bin, a.size, ink.Black)
 }

@@ -21,6 +21,17 @@ type arrangement struct {
 	rows    []bin
 	foot    bin // class word
 	right   bin // what stands at the right end of its row
+	chosen  choice
+}
+
+// A choice is how the search for an arrangement ended: with it a label whose
+// texts are as wide is arranged without a search.
+type choice struct {
+	tier   int
+	module ink.Micrometre
+	small  ink.Micrometre
+	way    way
+	large  ink.Micrometre
 }
 
 // A tier is a way to fill a label; the next is tried only when none of the
@@ -85,7 +96,7 @@ func arrange(l labels.Label, panel box, s Stock, mono bool, modules []string) (a
 	why := "its barcode"
 	var c content
 	var where place
-	for _, t := range tiers(l.Class) {
+	for i, t := range tiers(l.Class) {
 		if t.where != where {
 			c, where = contentOf(l, t.where), t.where
 		}
@@ -101,12 +112,32 @@ func arrange(l labels.Label, panel box, s Stock, mono bool, modules []string) (a
 				continue
 			}
 			if a.lower(l, now, t) {
+				a.chosen.tier, a.chosen.module = i, module
 				return a, ""
 			}
 			why = "its lines in the smallest type allowed"
 		}
 	}
 	return arrangement{}, why
+}
+
+// repeat arranges a label by a choice that was made for another with texts of
+// the same widths.
+func repeat(l labels.Label, panel box, s Stock, mono bool, modules []string, made choice) (arrangement, bool) {
+	t := tiers(l.Class)[made.tier]
+	symbol, ok := symbolBox(panel, s, made.module, len(modules))
+	if !ok {
+		return arrangement{}, false
+	}
+	a := arrangement{design: newDesign(panel, s, l.Class, mono, symbol), modules: modules, module: made.module}
+	c := contentOf(l, t.where)
+	if !a.upper(l, &c, t.strips) {
+		return arrangement{}, false
+	}
+	b := a.block(made.small, t)
+	b.pitch = made.small * made.way.pitch / 100
+	a.size, a.capital, a.gap = b.size, made.small, b.gap
+	return a, a.place(l, c, b, made.way.how, made.large)
 }
 
 // moduleSizes are the sizes of module to try, the best first.
@@ -178,19 +209,25 @@ func (a *arrangement) upper(l labels.Label, c *content, strips int) bool {
 	return true
 }
 
-// lower finds the largest small type with which the lower half fits, and then
-// the largest concentration.
-func (a *arrangement) lower(l labels.Label, c content, t tier) bool {
+// block is the lower half below name and reversal line.
+func (a *arrangement) block(small ink.Micrometre, t tier) block {
 	top := max(a.design.middle, a.name.bottom)
 	if a.design.class.Line {
 		top = max(top, a.line.bottom()+50)
 	}
+	b := newBlock(a.design, top, small)
+	if t.tight {
+		b.gap = small / 2
+	}
+	return b
+}
+
+// lower finds the largest small type with which the lower half fits, and then
+// the largest concentration.
+func (a *arrangement) lower(l labels.Label, c content, t tier) bool {
 	most := a.name.capital * 85 / 100
 	for _, small := range smallSteps(a.design.panel) {
-		b := newBlock(a.design, top, small)
-		if t.tight {
-			b.gap = small / 2
-		}
+		b := a.block(small, t)
 		large := min(t.large+(small-smallLow)*2, max(most, t.large))
 		for _, w := range ways(small, t.tight) {
 			b.pitch = small * w.pitch / 100
@@ -199,6 +236,7 @@ func (a *arrangement) lower(l labels.Label, c content, t tier) bool {
 			}
 			a.size, a.capital, a.gap = b.size, small, b.gap
 			a.grow(l, c, b, w.how, most)
+			a.chosen = choice{small: small, way: w, large: a.large}
 			return true
 		}
 	}
@@ -246,7 +284,7 @@ func (a *arrangement) place(l labels.Label, c content, b block, how packing, lar
 		if end <= b.top {
 			return false
 		}
-		list, rest, ok := b.head(l, items, how, large, end)
+		list, rest, ok := b.head(c.stated, items, how, large, end)
 		if !ok && n == 0 {
 			continue // a row further up may be wider
 		}
@@ -254,7 +292,7 @@ func (a *arrangement) place(l labels.Label, c content, b block, how packing, lar
 			return false
 		}
 		beside := &list[len(list)-1].bin
-		if l.Second != "" {
+		if len(list) > 1 {
 			beside = &bin{} // nothing stands beside two concentrations
 		}
 		slots := b.slots(n)
@@ -268,31 +306,29 @@ func (a *arrangement) place(l labels.Label, c content, b block, how packing, lar
 // head sets the concentration and beside it, against the right end, the
 // amount. It is in Bold; in Condensed SemiBold where it does not fit else, or
 // where that makes room for the amount.
-func (b block) head(l labels.Label, items []item, how packing, large, end ink.Micrometre) ([]stated, []item, bool) {
-	faces := []ink.Face{ink.Bold, ink.CondensedSemiBold}
+func (b block) head(said []stated, items []item, how packing, large, end ink.Micrometre) ([]stated, []item, bool) {
+	list := append([]stated{}, said...)
+	alone := len(list) > 1 || len(items) == 0 || !items[0].beside
+	first := 0
 	if how == filling {
-		faces = faces[1:]
+		first = 1
 	}
-	for first := range faces {
-		list, rest := statedOf(l), items
-		if !b.concentrations(list, faces[first:], large, end) {
-			return nil, nil, false
-		}
-		bin := &list[len(list)-1].bin
-		for l.Second == "" && len(rest) > 0 && rest[0].beside && bin.room(b.gap) >= rest[0].width(b.size) {
-			bin.add(rest[0], b.size, b.gap)
-			rest = rest[1:]
-		}
-		if first == len(faces)-1 || len(rest) < len(items) || l.Second != "" || b.noneBeside(items) {
-			return list, rest, true
-		}
-		wide := statedOf(l)
-		b.concentrations(wide, faces[first+1:], large, end)
-		if bin := wide[0].bin; bin.room(b.gap) < items[0].width(b.size) {
-			return list, rest, true
+	if !b.concentrations(list, first, large, end) {
+		return nil, nil, false
+	}
+	if alone {
+		return list, items, true
+	}
+	if first == 0 && list[0].bin.room(b.gap) < items[0].width(b.size) {
+		bold := list[0]
+		b.concentrations(list, 1, large, end)
+		if list[0].bin.room(b.gap) < items[0].width(b.size) {
+			list[0] = bold
 		}
 	}
-	return nil, nil, false
+	for len(items) > 0 && items[0].beside && list[0].bin.room(b.gap) >= items[0].width(b.size) {
+		list[0].bin.add(items[0], b.size, b.gap)
+		items = items[1:]
+	}
+	return list, items, true
 }
-
-func (b block) noneBeside(items []item) bool { return len(items) == 0 || !items[0].beside }

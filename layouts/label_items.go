@@ -31,6 +31,7 @@ type item struct {
 	// it.
 	blank ink.Micrometre
 	tail  string
+	after span // of the tail
 	// beside allows the item to stand on the row of the concentration.
 	beside bool
 	// whole keeps plain words of a cell together, such as a person's name.
@@ -46,7 +47,11 @@ type item struct {
 }
 
 func newItem(l labels.Line, f ink.Face) item {
-	return item{line: l, face: f, span: spanOf(l.Text(), f)}
+	it := item{line: l, face: f}
+	for _, c := range l {
+		it.span += spanOf(c.Text, f)
+	}
+	return it
 }
 
 func plain(l labels.Line) item { return newItem(l, ink.CondensedRegular) }
@@ -90,6 +95,7 @@ type content struct {
 	word   item   // class word
 	foot   []item // what may stand on its row, before the serial; from the right
 	serial item
+	stated []stated // concentrations
 }
 
 // A place is where the words about the making of the label stand, which say
@@ -104,7 +110,7 @@ const (
 
 // contentOf sorts the small type.
 func contentOf(l labels.Label, where place) content {
-	c := content{word: strong(l.Class.Word), serial: plain(labels.Line{l.Serial})}
+	c := content{word: strong(l.Class.Word), serial: plain(labels.Line{l.Serial}), stated: statedOf(l)}
 	c.serial.serial = true
 	for _, line := range []labels.Line{l.Amount, l.Substance} {
 		it := plain(line)
@@ -167,7 +173,7 @@ func handwritten(l labels.Label) []item {
 	}
 	if l.Infusion {
 		it := plain(labels.Words("pump rate"))
-		it.blank, it.tail = writeRate, "mL/h"
+		it.blank, it.tail, it.after = writeRate, "mL/h", spanOf("mL/h", it.face)
 		items = append(items, it)
 	}
 	return items
@@ -228,21 +234,23 @@ func (it item) width(size ink.Micrometre) ink.Micrometre {
 	if it.blank > 0 {
 		w += it.blank + size
 		if it.tail != "" {
-			w += Width(labels.Words(it.tail), it.face, size)
+			w += it.after.at(size)
 		}
 	}
 	return w
 }
 
-// marks draws the item with its baseline at x, y.
-func (it item) marks(x, y, size ink.Micrometre, c ink.Colour) []ink.Mark {
-	out := []ink.Mark{Set(x, y, it.line, it.face, size, c)}
+// draw sets the item with its baseline at x, y.
+func (it item) draw(to *drawing, x, y, size ink.Micrometre, c ink.Colour) {
+	if it.serial {
+		to.serial = len(to.marks)
+	}
+	to.add(Set(x, y, it.line, it.face, size, c))
 	if it.blank > 0 {
 		x += it.span.at(size) + size/2
-		out = append(out, ink.Rule(x, y+150, it.blank, 120))
+		to.add(ink.Rule(x, y+150, it.blank, 120))
 		if it.tail != "" {
-			out = append(out, Set(x+it.blank+size/2, y, labels.Words(it.tail), it.face, size, c))
+			to.add(Set(x+it.blank+size/2, y, labels.Words(it.tail), it.face, size, c))
 		}
 	}
-	return out
 }

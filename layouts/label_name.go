@@ -3,7 +3,6 @@ package layouts
 import (
 	"strings"
 
-	"drawup/fonts"
 	"drawup/labels"
 	"drawup/layouts/ink"
 )
@@ -118,15 +117,16 @@ func (d design) tryName(rows []string, spans []span, face ink.Face, capital, top
 		if width > right-left {
 			return named{}, false
 		}
-		above, below := faceOf(face).Extents(row, int64(n.size))
+		up, down := reachOf(row, face)
+		above, below := up.at(n.size), down.at(n.size)
 		if i > 0 {
 			y += 150
 		}
-		n.rows = append(n.rows, nameRow{row, left, y + ink.Micrometre(above)})
+		n.rows = append(n.rows, nameRow{row, left, y + above})
 		if d.class.Stripes {
 			n.rows[i].left += (right - left - width) / 2
 		}
-		y += ink.Micrometre(above + below)
+		y += above + below
 		widest = max(widest, n.rows[i].left-left+width)
 	}
 	last := &n.rows[len(n.rows)-1]
@@ -159,22 +159,4 @@ func (n named) marks(c ink.Colour) []ink.Mark {
 		out = append(out, ink.Text{X: row.left, Y: row.base, Size: n.size, Face: n.face, Colour: c, String: row.text})
 	}
 	return out
-}
-
-// A span is how far a text reaches at an em of 127 mm, that is 36 000
-// hundredths of a point: as all widths grow with the em, it gives the width at
-// any size without looking at the letters again.
-type span int64
-
-const spanEm = 127_000
-
-func spanOf(text string, f ink.Face) span { return span(faceOf(f).Width(text, spanEm)) }
-
-// at is the width at an em size, rounded up; see fonts.Face.Width.
-func (s span) at(size ink.Micrometre) ink.Micrometre {
-	if size <= 0 {
-		return 0
-	}
-	const em = spanEm * 36 / 127
-	return ink.Micrometre((int64(s)*fonts.Hundredths(int64(size)) + em - 1) / em)
 }

@@ -86,9 +86,15 @@ func (r *bin) add(it item, size, gap ink.Micrometre) {
 type stated struct {
 	cell labels.Cell
 	tail string
-	face ink.Face
+	wide [2]span // of the cell in each of statedFaces
+	dips span    // below the baseline
+	tags span    // of the tail
+	face int     // of statedFaces
 	bin  bin
 }
+
+// statedFaces are the faces that a concentration may have, the best first.
+func statedFaces() [2]ink.Face { return [2]ink.Face{ink.Bold, ink.CondensedSemiBold} }
 
 // statedOf lists the one or two concentrations.
 func statedOf(l labels.Label) []stated {
@@ -99,6 +105,14 @@ func statedOf(l labels.Label) []stated {
 			list[0].tail = l.Name + " " + l.As
 		}
 		list = append(list, stated{cell: l.SecondConcentration, tail: l.Second})
+	}
+	for i := range list {
+		s := &list[i]
+		for k, f := range statedFaces() {
+			s.wide[k] = spanOf(s.cell.Text, f)
+		}
+		_, s.dips = reachOf(s.cell.Text, ink.Bold)
+		s.tags = spanOf(s.tail, ink.CondensedSemiBold)
 	}
 	return list
 }
@@ -112,22 +126,20 @@ func (b block) concentrationAir() ink.Micrometre {
 	return 120
 }
 
-// concentrations sets list in the room above end, each in the first of faces
-// that fits. What is to spare beyond
-// 0.25 mm below is shared above and below.
-func (b block) concentrations(list []stated, faces []ink.Face, large, end ink.Micrometre) bool {
+// concentrations sets list in the room above end, each in the first of the
+// faces from first on that fits. What is to spare beyond 0.25 mm below is shared
+// above and below.
+func (b block) concentrations(list []stated, first int, large, end ink.Micrometre) bool {
 	air := b.concentrationAir()
 	if large > concentrationLow {
 		air += 240
 		end -= 250
 	}
 	y := b.top + air
-	lows := make([]ink.Micrometre, len(list))
 	need := y
+	bold := SizeFor(ink.Bold, large)
 	for i, s := range list {
-		_, below := faceOf(ink.Bold).Extents(s.cell.Text, int64(SizeFor(ink.Bold, large)))
-		lows[i] = ink.Micrometre(below)
-		need += large + lows[i]
+		need += large + s.dips.at(bold)
 		if i > 0 {
 			need += 150
 		}
@@ -137,33 +149,33 @@ func (b block) concentrations(list []stated, faces []ink.Face, large, end ink.Mi
 	}
 	down := min(max(end-need-250, 0)/2, 700)
 	dips := b.capital * drop / 100
-	if first := y + large + dips; b.rightAt(first+down) < b.rightAt(first) {
+	if low := y + large + dips; b.rightAt(low+down) < b.rightAt(low) {
 		down = 0 // lower down it would meet the barcode
 	}
 	y += down
 	for i := range list {
 		s := &list[i]
-		base := y + large
+		base, low := y+large, y+large+s.dips.at(bold)
 		s.bin = bin{base: base, left: b.left(), right: b.rightAt(base + dips)}
 		fits := false
-		for _, s.face = range faces {
+		for s.face = first; s.face < len(s.wide); s.face++ {
 			s.bin.used = b.statedWidth(*s, large)
-			if fits = s.bin.used <= b.rightAt(base+lows[i])-s.bin.left; fits {
+			if fits = s.bin.used <= b.rightAt(low)-s.bin.left; fits {
 				break
 			}
 		}
 		if !fits {
 			return false
 		}
-		y = base + lows[i] + 150
+		y = low + 150
 	}
 	return true
 }
 
 func (b block) statedWidth(s stated, large ink.Micrometre) ink.Micrometre {
-	w := Width(labels.Line{s.cell}, s.face, SizeFor(s.face, large))
+	w := s.wide[s.face].at(SizeFor(statedFaces()[s.face], large))
 	if s.tail != "" {
-		w += b.capital*3/4 + Width(labels.Words(s.tail), ink.CondensedSemiBold, b.size)
+		w += b.capital*3/4 + s.tags.at(b.size)
 	}
 	return w
 }

@@ -2,7 +2,6 @@ package layouts
 
 import (
 	"fmt"
-	"strings"
 
 	"drawup/dilution/recheck"
 	"drawup/dilution/refusal"
@@ -44,132 +43,84 @@ func Labels[P Proof](list []labels.Label, s Stock, passed []P, opt Options) ([]i
 			Message: "More labels are said to be used than the sheet has.", Field: "skip",
 			Got: fmt.Sprint(opt.Skip), Want: fmt.Sprintf("0 to %d on stock %s", s.PerPage()-1, s.Name)})
 	}
-	drawn := make([]arranger, len(list))
+	whole := !refused.Refused()
+	p := newPlacer(s, opt, len(list))
 	for i, l := range list {
 		if reasons := l.Check(); len(reasons) > 0 {
-			refused = append(refused, reasons...)
+			refused, whole = append(refused, reasons...), false
 			continue
 		}
 		if i >= len(passed) || !passed[i].Covers(l.Figures(Paper)) {
-			refused = append(refused, refusal.Reason{Code: refusal.RoutesDisagree, Severity: refusal.Refuse, Syringe: l.Number,
+			refused, whole = append(refused, refusal.Reason{Code: refusal.RoutesDisagree, Severity: refusal.Refuse, Syringe: l.Number,
 				Message: "The figures of the label of " + l.Name + " have not passed the second route.", Field: "label", Rule: "R17",
 				Got: "figures that were not worked again", Want: "every figure worked again from the printed words",
-				Remedy: "report this fault of the program; make the syringe by hand calculation"})
+				Remedy: "report this fault of the program; make the syringe by hand calculation"}), false
 			continue
 		}
-		var why *refusal.Reason
-		if drawn[i], why = newArranger(l, s, opt.Mono); why != nil {
+		seen, modules, why := p.arranger.set(l)
+		if why != nil {
 			refused = append(refused, *why)
+			whole = whole && why.Severity != refusal.Refuse
+		}
+		if whole {
+			p.put(l, seen, modules)
 		}
 	}
 	if refused.Refused() {
 		return nil, refused
 	}
-	return pagesOf(drawn, s, opt), refused
+	return p.pages, refused
 }
 
-// An arranger is a label that is known to fit its stock.
-type arranger struct {
-	label    labels.Label
-	modules  []string
-	arranged arrangement // on a label at 0, 0
+// A placer puts labels on pages, one after the other.
+type placer struct {
+	stock     Stock
+	opt       Options
+	arranger  arranger
+	pages     []ink.Page
+	at, total int // place of the next label, number of pages
 }
 
-// newArranger makes sure that the label fits the stock, and says why not.
-func newArranger(l labels.Label, s Stock, mono bool) (arranger, *refusal.Reason) {
-	if missing := missingRunes(l); len(missing) > 0 {
-		return arranger{}, &refusal.Reason{Code: refusal.GlyphMissing, Severity: refusal.Refuse, Syringe: l.Number,
-			Message: fmt.Sprintf("The label of %s has letters that cannot be printed: %q.", l.Name, string(missing)), Field: "label",
-			Got: fmt.Sprintf("%q", string(missing)), Want: "letters of the embedded faces", Remedy: "spell it in other letters"}
-	}
-	a := arranger{label: l}
-	if l.Code.Text != "" {
-		var err error
-		if a.modules, err = dataMatrix(l.Code.Text); err != nil {
-			return a, &refusal.Reason{Code: refusal.TextTooLong, Severity: refusal.Refuse, Syringe: l.Number,
-				Message: "The barcode of " + l.Name + " cannot be made: " + err.Error() + ".", Field: "barcode",
-				Got: l.Code.Text, Want: "a code after the GS1 rules"}
-		}
-	}
-	var why string
-	if a.arranged, why = arrange(l, s.panel(ink.Point{}), s, mono, a.modules); why == "" {
-		return a, nil
-	}
-	if !l.Infusion && len(l.Dose) > 0 {
-		a.label.Dose = nil
-		var still string
-		if a.arranged, still = arrange(a.label, s.panel(ink.Point{}), s, mono, a.modules); still == "" {
-			return a, &refusal.Reason{Code: refusal.TextTooLong, Severity: refusal.Caution, Syringe: l.Number,
-				Message: fmt.Sprintf("The label of %s has no room for the dose; the draw-up sheet has it.", l.Name), Field: "stock",
-				Got: s.Name, Want: "a larger stock, if the label must show it"}
-		}
-		a.label = l
-	}
-	larger := a.larger(s, mono)
-	return a, &refusal.Reason{Code: refusal.LabelTooSmall, Severity: refusal.Refuse, Syringe: l.Number,
-		Message: fmt.Sprintf("The label of %s does not fit stock %s: no room for %s.", l.Name, s.Name, why),
-		Field:   "stock", Got: s.Name, Want: "a stock that holds every line of the label", Rule: "R15",
-		Source: "ISO 26825:2020, 5.4.2 and 5.4.3 for the name", Remedy: larger}
-}
-
-// larger names the next larger stock that holds the label.
-func (a arranger) larger(than Stock, mono bool) string {
-	for _, s := range Stocks() {
-		if s.LabelW*s.LabelH <= than.LabelW*than.LabelH {
-			continue
-		}
-		if _, why := arrange(a.label, s.panel(ink.Point{}), s, mono, a.modules); why == "" {
-			return "use stock " + s.Name
-		}
-	}
-	return "no larger stock holds it: shorten the words of the label"
-}
-
-// missingRunes is every rune of the label that a face it may be set in cannot
-// show.
-func missingRunes(l labels.Label) []rune {
-	var missing []rune
-	for _, text := range l.Text() {
-		for _, f := range []ink.Face{ink.Bold, ink.CondensedSemiBold, ink.CondensedRegular} {
-			for _, r := range Missing(text, f) {
-				if !strings.ContainsRune(string(missing), r) {
-					missing = append(missing, r)
-				}
-			}
-		}
-	}
-	return missing
-}
-
-// pagesOf puts the labels on pages.
-func pagesOf(list []arranger, s Stock, opt Options) []ink.Page {
-	var pages []ink.Page
-	at, total := 0, 0
+func newPlacer(s Stock, opt Options, count int) *placer {
+	p := &placer{stock: s, opt: opt, arranger: newArranger(s, opt.Mono)}
 	if !s.Roll() {
-		at = opt.Skip
+		p.at = opt.Skip
 	}
 	per := s.PerPage()
-	total = (at + len(list) + per - 1) / per
-	for _, a := range list {
-		if at%per == 0 || len(pages) == 0 {
-			page := ink.Page{W: s.PageW, H: s.PageH, Bookmark: bookmark(a.label, s, len(pages)+1, total)}
-			if !s.Roll() {
-				page.Add(s.edgeNote(opt.Foot, len(pages)+1, total)...)
-			}
-			pages = append(pages, page)
+	p.total = (p.at + count + per - 1) / per
+	return p
+}
+
+// put places the next label.
+func (p *placer) put(l labels.Label, seen pattern, modules []string) {
+	s, per := p.stock, p.stock.PerPage()
+	if p.at%per == 0 || len(p.pages) == 0 {
+		page := ink.Page{W: s.PageW, H: s.PageH, Bookmark: bookmark(l, s, len(p.pages)+1, p.total)}
+		if !s.Roll() {
+			page.Marks = make([]ink.Mark, 0, 32+per*(len(seen.marks)+2))
+			page.Add(s.edgeNote(p.opt.Foot, len(p.pages)+1, p.total)...)
 		}
-		panel := s.panel(s.Place(at % per))
-		page := &pages[len(pages)-1]
-		corner := s.Place(at % per)
-		for _, mark := range a.arranged.draw() {
-			page.Add(moved(mark, corner.X, corner.Y))
-		}
-		if s.Inset > 0 {
-			page.Add(ink.Outlined(panel.x, panel.y, panel.w, panel.h, hairline, ink.Black))
-		}
-		at++
+		p.pages = append(p.pages, page)
 	}
-	return pages
+	page := &p.pages[len(p.pages)-1]
+	corner := s.Place(p.at % per)
+	for i, mark := range seen.marks {
+		switch m := mark.(type) {
+		case ink.Text:
+			if i == seen.serial {
+				m.String = seen.before + l.Serial.Text
+			}
+			mark = m
+		case ink.Symbol:
+			m.Rows = modules
+			mark = m
+		}
+		page.Add(moved(mark, corner.X, corner.Y))
+	}
+	if panel := s.panel(corner); s.Inset > 0 {
+		page.Add(ink.Outlined(panel.x, panel.y, panel.w, panel.h, hairline, ink.Black))
+	}
+	p.at++
 }
 
 // moved is the mark further along and down the page.

@@ -2,6 +2,7 @@ package layouts
 
 import (
 	"fmt"
+	"image/color"
 
 	"drawup/labels/gs1"
 	"drawup/layouts/ink"
@@ -28,17 +29,22 @@ func dataMatrix(hri string) ([]string, error) {
 		return nil, err
 	}
 	side := code.Bounds()
-	rows := make([]string, 0, side.Dy())
+	w, h := side.Dx(), side.Dy()
+	all := make([]byte, 0, w*h)
 	for y := side.Min.Y; y < side.Max.Y; y++ {
-		row := make([]byte, 0, side.Dx())
 		for x := side.Min.X; x < side.Max.X; x++ {
-			if r, _, _, _ := code.At(x, y).RGBA(); r == 0 {
-				row = append(row, ink.Dark)
-			} else {
-				row = append(row, ink.Light)
+			module := byte(ink.Light)
+			if code.At(x, y) == color.Black {
+				module = ink.Dark
 			}
+			all = append(all, module)
 		}
-		rows = append(rows, string(row))
+	}
+	// The rows share one string.
+	text := string(all)
+	rows := make([]string, h)
+	for y := range rows {
+		rows[y] = text[y*w : (y+1)*w]
 	}
 	return rows, nil
 }

@@ -2,6 +2,7 @@ package pdf
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 	"unicode/utf8"
 
@@ -60,13 +61,68 @@ func (e BadDocument) Error() string {
 // (ISO 32000-1:2008, annex C.2, 14 400 units).
 const widest ink.Micrometre = 5_080_000
 
+// letters are the runes of one face that a document uses.
+type letters struct {
+	face ink.Face
+	low  [256]bool
+	high map[rune]bool
+}
+
+// add notes the runes of a text.
+func (l *letters) add(text string) {
+	for _, r := range text {
+		if int(r) < len(l.low) {
+			l.low[r] = true
+			continue
+		}
+		if l.high == nil {
+			l.high = map[rune]bool{}
+		}
+		l.high[r] = true
+	}
+}
+
+// text is every rune once, as it is drawn, in order.
+func (l *letters) text() string {
+	var all []rune
+	for r := range l.low {
+		if l.low[r] {
+			all = append(all, rune(r))
+		}
+	}
+	for r := range l.high {
+		all = append(all, r)
+	}
+	slices.Sort(all)
+	return fonts.Normalise(string(all))
+}
+
+// A checker checks one document. It remembers texts that it has measured: most
+// stand on page after page.
+type checker struct {
+	used []*letters
+	seen map[measured]reach
+}
+
+// A measured is a text in a face and size, a reach its box about its origin.
+type measured struct {
+	face ink.Face
+	size ink.Micrometre
+	text string
+}
+
+type reach struct{ width, above, below ink.Micrometre }
+
+// keptTexts bounds what a checker remembers.
+const keptTexts = 4096
+
 // check finds the first fault of a document. Without one it returns the faces
-// in use, in the order of fonts.Names.
-func check(doc Document) ([]ink.Face, error) {
+// in use with their letters, in the order of fonts.Names.
+func check(doc Document) ([]letters, error) {
 	if err := checkAbout(doc); err != nil {
 		return nil, err
 	}
-	used := map[ink.Face]bool{}
+	c := checker{seen: map[measured]reach{}}
 	for i, page := range doc.Pages {
 		if page.W <= 0 || page.H <= 0 || page.W > widest || page.H > widest {
 			return nil, BadDocument{"page size", fmt.Sprintf("got %dx%d micrometres on page %d, want 1 to %d each", page.W, page.H, i+1, widest)}
@@ -77,24 +133,58 @@ func check(doc Document) ([]ink.Face, error) {
 			}
 			// The library encodes a bookmark in Unicode only while such a
 			// face is chosen.
-			used[ink.Regular] = used[ink.Regular] || len(used) == 0
+			if len(c.used) == 0 {
+				c.letters(ink.Regular)
+			}
 		}
 		for _, mark := range page.Marks {
-			if err := checkMark(i+1, page, mark); err != nil {
+			if err := c.checkMark(i+1, page, mark); err != nil {
 				return nil, err
-			}
-			if text, ok := mark.(ink.Text); ok {
-				used[text.Face] = true
 			}
 		}
 	}
-	var faces []ink.Face
+	var faces []letters
 	for _, name := range fonts.Names() {
-		if used[ink.Face(name)] {
-			faces = append(faces, ink.Face(name))
+		for _, l := range c.used {
+			if l.face == ink.Face(name) {
+				faces = append(faces, *l)
+			}
 		}
 	}
 	return faces, nil
+}
+
+// letters finds the list of a face, a new one if need be.
+func (c *checker) letters(face ink.Face) *letters {
+	for _, l := range c.used {
+		if l.face == face {
+			return l
+		}
+	}
+	l := &letters{face: face}
+	c.used = append(c.used, l)
+	return l
+}
+
+// measure notes the letters of a text that has no fault of its own and gives
+// its reach, or the first rune that its face cannot show.
+func (c *checker) measure(m ink.Text) (reach, rune, bool) {
+	key := measured{m.Face, m.Size, m.String}
+	if r, ok := c.seen[key]; ok {
+		return r, 0, true
+	}
+	face := faceOf(m.Face)
+	if missing := face.Missing(m.String); len(missing) > 0 {
+		return reach{}, missing[0], false
+	}
+	above, below := face.Extents(m.String, int64(m.Size))
+	r := reach{ink.Micrometre(face.Width(m.String, int64(m.Size))), ink.Micrometre(above), ink.Micrometre(below)}
+	c.letters(m.Face).add(m.String)
+	if len(c.seen) >= keptTexts {
+		clear(c.seen)
+	}
+	c.seen[key] = r
+	return r, 0, true
 }
 
 func checkAbout(doc Document) error {
@@ -148,16 +238,17 @@ func (b box) within(page ink.Page) bool {
 }
 
 // checkMark checks one mark by itself and against the page's edges.
-func checkMark(number int, page ink.Page, mark ink.Mark) error {
+func (c *checker) checkMark(number int, page ink.Page, mark ink.Mark) error {
 	var reason string
 	var b box
 	switch m := mark.(type) {
 	case ink.Text:
-		reason, b = textFault(m), textBox(m)
-		if reason == "" {
-			if missing := faceOf(m.Face).Missing(m.String); len(missing) > 0 {
-				return MissingGlyph{missing[0], m.String, number}
+		if reason = textFault(m); reason == "" {
+			r, missing, ok := c.measure(m)
+			if !ok {
+				return MissingGlyph{missing, m.String, number}
 			}
+			b = textBox(m, r)
 		}
 	case ink.Rect:
 		reason, b = rectFault(m), rectBox(m)
@@ -210,15 +301,11 @@ func textFault(m ink.Text) string {
 
 // textBox is the box of the ink: accents and descenders count only if the
 // text has them.
-func textBox(m ink.Text) box {
-	face := faceOf(m.Face)
-	width := ink.Micrometre(face.Width(m.String, int64(m.Size)))
-	rise, drop := face.Extents(m.String, int64(m.Size))
-	above, below := ink.Micrometre(rise), ink.Micrometre(drop)
+func textBox(m ink.Text, r reach) box {
 	if m.Rotate == 90 {
-		return box{m.X - above, m.Y - width, m.X + below, m.Y}
+		return box{m.X - r.above, m.Y - r.width, m.X + r.below, m.Y}
 	}
-	return box{m.X, m.Y - above, m.X + width, m.Y + below}
+	return box{m.X, m.Y - r.above, m.X + r.width, m.Y + r.below}
 }
 
 func rectFault(m ink.Rect) string {
@@ -294,7 +381,7 @@ func symbolFault(m ink.Symbol) string {
 		if len(row) != len(m.Rows[0]) {
 			return fmt.Sprintf("got %d modules in row %d, want %d as in the first", len(row), i+1, len(m.Rows[0]))
 		}
-		if rest := strings.Trim(row, "#."); rest != "" {
+		if rest := strings.TrimLeft(row, "#."); rest != "" {
 			return fmt.Sprintf("got row %q, want only %q and %q", row, ink.Dark, ink.Light)
 		}
 	}

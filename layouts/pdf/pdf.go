@@ -13,6 +13,7 @@ package pdf
 import (
 	"fmt"
 	"io"
+	"strings"
 	"time"
 
 	"drawup/layouts/ink"
@@ -43,11 +44,11 @@ func Write(w io.Writer, doc Document) error {
 	if err != nil {
 		return err
 	}
-	lib, err := open(doc, faces)
+	lib, names, err := open(doc, faces)
 	if err != nil {
 		return err
 	}
-	p := pen{lib: lib}
+	p := pen{lib: lib, names: names}
 	bottom := points(doc.Pages[len(doc.Pages)-1].H)
 	for _, page := range doc.Pages {
 		lib.AddPageFormat("P", size(page))
@@ -64,8 +65,9 @@ func Write(w io.Writer, doc Document) error {
 	return finish(w, lib, doc)
 }
 
-// open starts a document in points with the faces it needs.
-func open(doc Document, faces []ink.Face) (*fpdf.Fpdf, error) {
+// open starts a document in points with the letters of the faces it needs, and
+// returns the names of the faces in the file.
+func open(doc Document, faces []letters) (*fpdf.Fpdf, map[ink.Face]string, error) {
 	lib := fpdf.NewCustom(&fpdf.InitType{OrientationStr: "P", UnitStr: "pt", Size: size(doc.Pages[0])})
 	lib.SetCatalogSort(true)
 	lib.SetCreationDate(doc.Made)
@@ -76,15 +78,54 @@ func open(doc Document, faces []ink.Face) (*fpdf.Fpdf, error) {
 	lib.SetKeywords(doc.Keywords, true)
 	lib.SetCreator(doc.Creator, true)
 	lib.SetProducer(doc.Creator, true)
-	for _, face := range faces {
-		lib.AddUTF8FontFromBytes(family(face), "", faceOf(face).File())
+	names := map[ink.Face]string{}
+	for _, f := range faces {
+		lib.AddUTF8FontFromBytes(family(f.face), "", faceOf(f.face).File())
 		// A face that the library could not read shows only here.
-		lib.SetFont(family(face), "", 1)
+		lib.SetFont(family(f.face), "", 1)
+		if err := lib.Error(); err != nil {
+			return nil, nil, fmt.Errorf("pdf library: %w", err)
+		}
+		name, err := note(lib, f)
+		if err != nil {
+			return nil, nil, err
+		}
+		names[f.face] = name
 	}
 	if err := lib.Error(); err != nil {
-		return nil, fmt.Errorf("pdf library: %w", err)
+		return nil, nil, fmt.Errorf("pdf library: %w", err)
 	}
-	return lib, nil
+	return lib, names, nil
+}
+
+// note has the library take the letters of a face into the file, and returns
+// the name under which its operators choose the face. Both are done in
+// templates that are used nowhere: the library notes letters as it sets them,
+// and shows the name in the operators it writes. The pen then writes text
+// itself, as one run of operators for a page.
+func note(lib *fpdf.Fpdf, f letters) (string, error) {
+	var err error
+	chosen := lib.CreateTemplate(func(t *fpdf.Tpl) {
+		t.SetFont(family(f.face), "", 1)
+		err = t.Error()
+	})
+	if err == nil {
+		lib.CreateTemplate(func(t *fpdf.Tpl) {
+			t.SetFont(family(f.face), "", 1)
+			t.Text(0, 0, f.text())
+			err = t.Error()
+		})
+	}
+	if err != nil {
+		return "", fmt.Errorf("pdf library: %w", err)
+	}
+	said := string(chosen.Bytes())
+	_, rest, found := strings.Cut(said, "BT /")
+	name, rest, ended := strings.Cut(rest, " ")
+	if !found || !ended || !strings.HasPrefix(rest, "1.00 Tf ET") {
+		return "", fmt.Errorf("pdf library: got %q for a choice of face, want its name and size", said)
+	}
+	return name, nil
 }
 
 // points gives a length in points, rounded to the hundredth that the library

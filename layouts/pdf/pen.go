@@ -21,10 +21,11 @@ func family(face ink.Face) string { return strings.ReplaceAll(string(face), "-",
 // set on the page so that nothing is set twice.
 type pen struct {
 	lib          *fpdf.Fpdf
-	out          []byte // operators not yet handed to the library
+	names        map[ink.Face]string // of the faces in the file
+	out          []byte              // operators not yet handed to the library
 	height       ink.Micrometre
 	face         ink.Face
-	em           int64       // hundredths of a point; 0 before the first text
+	em           int64       // hundredths of a point; 0 before the first text of a page
 	fill, stroke *ink.Colour // nil: unknown
 	width        ink.Micrometre
 	dash         bool
@@ -34,6 +35,7 @@ type pen struct {
 func (p *pen) draw(page ink.Page) {
 	p.height = page.H
 	p.fill, p.stroke, p.width, p.dash = nil, nil, 0, false
+	p.face, p.em = "", 0
 	for _, mark := range page.Marks {
 		switch m := mark.(type) {
 		case ink.Text:
@@ -59,35 +61,55 @@ func (p *pen) flush() {
 	}
 }
 
-// text goes through the library, which notes the letters for the subset.
+// text writes what the library's Text would write, with its letters as UTF-16
+// in a string.
 func (p *pen) text(m ink.Text) {
 	if m.String == "" {
 		return
 	}
 	p.setFill(m.Colour)
-	p.flush()
 	// The face must be set before the matrix is saved, or restoring that
 	// would undo it unnoticed.
 	if em := fonts.Hundredths(int64(m.Size)); em != p.em || m.Face != p.face {
 		p.face, p.em = m.Face, em
-		p.lib.SetFont(family(m.Face), "", float64(em)/100)
+		p.op("BT /")
+		p.op(p.names[m.Face])
+		p.out = decimal(append(p.out, ' '), em, 2)
+		p.op(" Tf ET\n")
 	}
 	if m.Rotate == 90 {
 		p.op("q 0 1 -1 0")
 		p.place(m.X, m.Y)
-		p.op(" cm\n")
-		p.flush()
+		p.op(" cm\nBT 0 0 Td (")
+	} else {
+		p.op("BT ")
+		p.out = decimal(p.out, hundredths(m.X), 2)
+		p.out = decimal(append(p.out, ' '), hundredths(p.height-m.Y), 2)
+		p.op(" Td (")
 	}
-	// The library turns y round at its own page height; handing it that
-	// height less ours makes it print ours.
-	x, up := points(m.X), points(p.height-m.Y)
-	if m.Rotate == 90 {
-		x, up = 0, 0
+	for _, r := range m.String {
+		if r == '\u03bc' {
+			r = '\u00b5' // see fonts.Normalise
+		}
+		p.byte(byte(r >> 8))
+		p.byte(byte(r))
 	}
-	_, top := p.lib.GetPageSize()
-	p.lib.Text(x, top-up, fonts.Normalise(m.String))
+	p.op(") Tj ET\n")
 	if m.Rotate == 90 {
 		p.op("Q\n")
+	}
+}
+
+// byte writes a byte of a string, with a backslash where it has a meaning
+// there (ISO 32000-1:2008, 7.3.4.2).
+func (p *pen) byte(b byte) {
+	switch b {
+	case '\\', '(', ')':
+		p.out = append(p.out, '\\', b)
+	case '\r':
+		p.op("\\r")
+	default:
+		p.out = append(p.out, b)
 	}
 }
 
