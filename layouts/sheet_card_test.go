@@ -101,7 +101,7 @@ func TestEveryCardIsOnePage(t *testing.T) {
 			longest = max(longest, len(p.Infusion.Ladder))
 			text := spaced(file.AllText(i + 1))
 			for _, want := range []string{labels.Capital(p.Drug.LabelName(p.Style)), fmt.Sprintf("page %d of %d", i+1, len(cards)), p.Style.FlowRate(p.Infusion.Start.Rate),
-				"HARD LIMIT", "STOP if it shows", "checked alone by, time", "Next syringe", "new rate, mL/h", "Notes and sources: draw-up sheet."} {
+				"HARD LIMIT", "STOP if it shows", "checked alone by, time", ": read its label; is the concentration the same?", "new rate, mL/h", "Notes and sources: draw-up sheet."} {
 				if !strings.Contains(text, want) {
 					t.Errorf("%s, %s: got no %q, want it on the card", name, card.Of, want)
 				}

@@ -80,22 +80,27 @@ func (p *plot) point(point sheets.Point) []ink.Mark {
 }
 
 // beside is room for a figure at the height of a point: left of the line; for
-// the start right of it, else above its dashed line.
+// the start right of it and below the line, else above its dashed line. The
+// line is flat, so that a figure keeps clear of it along its whole height.
 func (p plot) beside(at ink.Point, w, h ink.Micrometre, start bool) (box, bool) {
-	const clear = 2600
+	const clear, near, far = 2600, 900, 6500 // far: a figure there would seem to belong to another point
 	left := box{p.x + 1400, at.Y - h/2, w, h}
 	if start {
-		right := box{at.X + clear, at.Y - h/2, w, h}
-		if right.right() <= p.x+p.w+5000 && right.bottom() < p.y && p.free(right) {
+		y := min(at.Y-clear*p.h/p.w+near, p.y-h-300)
+		right := box{max(at.X+clear, p.across(y-near)), y, w, h}
+		if right.x <= at.X+far && right.right() <= p.x+p.w+5000 && p.free(right) {
 			return right, true
 		}
 		left.y = at.Y - h - 200
 	}
-	if left.right()+clear <= at.X && p.free(left) {
+	if left.right()+near <= p.across(left.bottom()) && p.free(left) {
 		return left, true
 	}
 	return box{}, false
 }
+
+// across is where the line stands at a height.
+func (p plot) across(y ink.Micrometre) ink.Micrometre { return p.x + (p.y-y)*p.w/p.h }
 
 func (p plot) free(b box) bool {
 	for _, t := range p.taken {

@@ -38,7 +38,7 @@ func (s scribe) pumpParts(list dilution.List) []Part {
 			pair("Empty", s.say("{empty.at}, if started {prepared} at this rate ({run.time})")),
 			pair("Use by", s.say("{use.by}: change it then, empty or not"))}}}},
 		{n, []Block{Sign{[]string{"programmed by, time", "checked alone by, time"}}}},
-		{n, []Block{Words{Line: labels.Words("Next syringe: read its label; is the concentration the same?"), Strong: true},
+		{n, []Block{Words{Line: labels.Words("Next " + s.vessel() + ": read its label; is the concentration the same?"), Strong: true},
 			Blank{Rows: 2, Columns: []Column{{Head: "time", Share: 16}, {Head: "same?", Share: 14},
 				{Head: "old rate, mL/h", Share: 26}, {Head: "new rate, mL/h", Share: 26}, {Head: "initials", Share: 18}, {Head: "initials", Share: 18}}}}},
 		{n, s.minded(list)},
