@@ -46,21 +46,22 @@ func (s scribe) pumpParts(list dilution.List) []Part {
 }
 
 // minded is what the card says of the drug: its marks and the plan's own
-// cautions, the gravest first. What the formulary adds, and where it comes
-// from, stands on the draw-up sheet.
+// cautions, the gravest first. Their codes, what the formulary adds, and where
+// it comes from stand on the draw-up sheet.
 func (s scribe) minded(list dilution.List) []Block {
-	var out []Block
+	text := "Notes and sources: draw-up sheet."
 	if flags := s.flags(); flags != "" {
-		out = append(out, Words{Line: labels.Words("Marked: " + flags), Small: true})
+		text = "Marked: " + flags + ". " + text
 	}
+	out := []Block{Words{Line: labels.Words(text), Small: true}}
 	c := gravest(s.cautions(list))
 	for i := range c {
-		c[i].Note = nil // sources stand on the draw-up sheet
+		c[i].Note, c[i].Code = nil, ""
 	}
 	if len(c) > 0 {
 		out = append(out, Cautions{List: c, Rest: "More cautions: draw-up sheet."})
 	}
-	return append(out, Words{Line: labels.Words("Notes and sources: draw-up sheet."), Small: true})
+	return out
 }
 
 func (s scribe) inDiluent() string {
