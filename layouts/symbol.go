@@ -24,13 +24,20 @@ func dataMatrix(hri string) ([]string, error) {
 	if again != hri {
 		return nil, fmt.Errorf("got %q back from the code, want %q", again, hri)
 	}
+	if rows, ok := smallMatrix(symbol); ok {
+		return rows, nil
+	}
+	return libraryMatrix(symbol)
+}
+
+// libraryMatrix makes a symbol of any size.
+func libraryMatrix(symbol []byte) ([]string, error) {
 	code, err := datamatrix.Encode(string(symbol))
 	if err != nil {
 		return nil, err
 	}
 	side := code.Bounds()
-	w, h := side.Dx(), side.Dy()
-	all := make([]byte, 0, w*h)
+	all := make([]byte, 0, side.Dx()*side.Dy())
 	for y := side.Min.Y; y < side.Max.Y; y++ {
 		for x := side.Min.X; x < side.Max.X; x++ {
 			module := byte(ink.Light)
@@ -40,11 +47,5 @@ func dataMatrix(hri string) ([]string, error) {
 			all = append(all, module)
 		}
 	}
-	// The rows share one string.
-	text := string(all)
-	rows := make([]string, h)
-	for y := range rows {
-		rows[y] = text[y*w : (y+1)*w]
-	}
-	return rows, nil
+	return rowsOf(string(all), side.Dx()), nil
 }

@@ -156,7 +156,8 @@ func (p *pen) polygon(m ink.Polygon) {
 }
 
 // symbol writes the dark runs of all rows, in modules under one matrix, as
-// one path with one fill.
+// one path with one fill. Equal runs in rows that follow each other are one
+// rectangle.
 func (p *pen) symbol(m ink.Symbol) {
 	p.setFill(m.Colour)
 	side := millionths(m.Module)
@@ -175,13 +176,41 @@ func (p *pen) symbol(m ink.Symbol) {
 			for x < len(row) && row[x] == ink.Dark {
 				x++
 			}
-			p.out = strconv.AppendInt(p.out, int64(start), 10)
-			p.out = strconv.AppendInt(append(p.out, ' '), int64(y), 10)
-			p.out = strconv.AppendInt(append(p.out, ' '), int64(x-start), 10)
-			p.op(" 1 re\n")
+			if y > 0 && isRun(m.Rows[y-1], start, x) {
+				continue // part of the one that began above
+			}
+			high := 1
+			for y+high < len(m.Rows) && isRun(m.Rows[y+high], start, x) {
+				high++
+			}
+			p.whole(start, ' ')
+			p.whole(y, ' ')
+			p.whole(x-start, ' ')
+			p.whole(high, ' ')
+			p.op("re\n")
 		}
 	}
 	p.op("f Q\n")
+}
+
+// isRun says whether the modules from start up to end are a dark run of a row,
+// neither shorter nor longer.
+func isRun(row string, start, end int) bool {
+	for _, module := range []byte(row[start:end]) {
+		if module != ink.Dark {
+			return false
+		}
+	}
+	return (start == 0 || row[start-1] != ink.Dark) && (end == len(row) || row[end] != ink.Dark)
+}
+
+// whole writes a number that is not negative, and what follows it.
+func (p *pen) whole(n int, after byte) {
+	if n < 10 {
+		p.out = append(p.out, byte('0'+n), after)
+		return
+	}
+	p.out = append(strconv.AppendInt(p.out, int64(n), 10), after)
 }
 
 func (p *pen) setFill(c ink.Colour) {
