@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"runtime"
 	"runtime/metrics"
+	"strings"
 	"testing"
 	"time"
 
@@ -30,7 +31,8 @@ func batch(n int) []labels.Label {
 	return list
 }
 
-// mixed is n labels of all classes of which no two have the same words.
+// mixed is n labels of all classes of which no two have the same words: their
+// figures differ.
 func mixed(n int) []labels.Label {
 	kinds := samples()
 	list := make([]labels.Label, n)
@@ -43,6 +45,23 @@ func mixed(n int) []labels.Label {
 		l.Prepared[1].Text = fmt.Sprintf("%02d Dec 2026 07:%02d", 1+i%28, i/28%60)
 		l.Code.Text = l.Code.Text[:len("(91)N01AX07(92)2612011930")] + l.Serial.Text + l.Code.Text[len("(91)N01AX07(92)261201193000001003"):]
 		list[i] = l
+	}
+	return list
+}
+
+// unlike is n labels whose letters differ too, so that each is arranged from
+// the beginning.
+func unlike(n int) []labels.Label {
+	list := mixed(n)
+	for i := range list {
+		name := " A. "
+		for k := i; ; k /= 20 {
+			name += string(rune('a' + k%20))
+			if k < 20 {
+				break
+			}
+		}
+		list[i].Prepared[2].Text = name
 	}
 	return list
 }
@@ -187,11 +206,13 @@ func BenchmarkLabels1(b *testing.B) { measure(b, mixed(1), ours) }
 func BenchmarkLabels1000(b *testing.B) {
 	b.Run("batch", func(b *testing.B) { measure(b, batch(1000), ours) })
 	b.Run("mixed", func(b *testing.B) { measure(b, mixed(1000), ours) })
+	b.Run("unlike", func(b *testing.B) { measure(b, unlike(1000), ours) })
 }
 
 func BenchmarkLabels10000(b *testing.B) {
 	b.Run("batch", func(b *testing.B) { measure(b, batch(10_000), ours) })
 	b.Run("mixed", func(b *testing.B) { measure(b, mixed(10_000), ours) })
+	b.Run("unlike", func(b *testing.B) { measure(b, unlike(10_000), ours) })
 	b.Run("batch-parts", func(b *testing.B) { measure(b, batch(10_000), inParts) })
 	b.Run("mixed-parts", func(b *testing.B) { measure(b, mixed(10_000), inParts) })
 }
@@ -216,7 +237,10 @@ func TestBenchmarkLists(t *testing.T) {
 	for _, l := range mixed(2000) {
 		seen[l.Name+l.Amount.Text()+l.Prepared.Text()] = true
 	}
-	if len(seen) != 2000 {
-		t.Errorf("got %d different labels of 2000", len(seen))
+	for _, l := range unlike(2000) {
+		seen[strings.TrimLeft(l.Prepared[2].Text, " A.")] = true
+	}
+	if len(seen) != 4000 {
+		t.Errorf("got %d different labels of 4000", len(seen))
 	}
 }

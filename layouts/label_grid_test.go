@@ -1,6 +1,7 @@
 package layouts_test
 
 import (
+	"reflect"
 	"slices"
 	"strings"
 	"testing"
@@ -149,4 +150,53 @@ func TestNaloxoneFits(t *testing.T) {
 	if text := words(pages); !strings.Contains(text, "one dose") {
 		t.Errorf("got %q, want the dose", text)
 	}
+}
+
+// A label looks the same whether it is arranged by itself or after another
+// that it shares the arrangement with: one that differs in serial number and
+// barcode, and one that differs in figures.
+func TestArrangedOnceOrAnew(t *testing.T) {
+	for _, name := range []string{"a4-65", "a4-24", "roll-40x15"} {
+		s := stock(t, name)
+		for _, l := range samples() {
+			if name == "roll-40x15" && strings.HasSuffix(l.Class.Code, "-A") {
+				continue // too small for these class words
+			}
+			l.Dose = nil
+			for _, change := range []func(*labels.Label){
+				func(l *labels.Label) {},
+				func(l *labels.Label) {
+					l.UseBy = labels.Line{l.UseBy[0], {Text: "27 Dec 2026 08:45", Figure: recheck.UseBy}}
+				},
+				func(l *labels.Label) { l.Name, l.Concentration.Text = "Lidocaine", "7 mg/mL" },
+			} {
+				other := l
+				other.Serial.Text = "00002718"
+				other.Code.Text = strings.Replace(l.Code.Text, l.Serial.Text, other.Serial.Text, 1)
+				change(&other)
+				both := placed(t, []labels.Label{l, other}, s, layouts.Options{})
+				alone := placed(t, []labels.Label{other}, s, layouts.Options{Skip: 1})
+				got, want := both[len(both)-1].Marks, alone[len(alone)-1].Marks
+				if len(got) < len(want) {
+					t.Fatalf("%s %s: got %d marks, want %d or more", name, l.Name, len(got), len(want))
+				}
+				// The sheet's own marks come first, the last label's last.
+				n := marksOf(t, other, s)
+				own := len(want) - n
+				got = append(got[:own:own], got[len(got)-n:]...)
+				if !reflect.DeepEqual(got, want) {
+					t.Errorf("%s %s: looks otherwise after another label", name, other.Name)
+				}
+			}
+		}
+	}
+}
+
+// marksOf counts the marks of one label, without those of its sheet.
+func marksOf(t *testing.T, l labels.Label, s layouts.Stock) int {
+	one, both := placed(t, []labels.Label{l}, s, layouts.Options{}), placed(t, []labels.Label{l, l}, s, layouts.Options{})
+	if s.Roll() {
+		return len(one[0].Marks)
+	}
+	return len(both[0].Marks) - len(one[0].Marks)
 }
