@@ -144,6 +144,9 @@ func asked(p dilution.Plan) []recheck.Figure {
 	add(recheck.UseHours, Span(p.UseBy.Minutes))
 	add(recheck.Prepared, p.Prepared.Format("2006-01-02 15:04"))
 	add(recheck.PreparedOffset, p.Prepared.Format("-07:00"))
+	for _, text := range []string{o.AcceptedBy.Text, o.AcceptedReason.Text, o.Batch.Text, o.Expiry.Text, o.Indication.Text} {
+		add(recheck.Typed, text)
+	}
 	if p.Mixture.AssayAssumed {
 		add(recheck.Assay, p.Mixture.Assay.Written())
 	}
@@ -162,19 +165,22 @@ func askedBarrels(p dilution.Plan, add func(name, text string)) {
 	add(recheck.Method, m.Method.String())
 	if p.Dose != nil {
 		add(recheck.DoseStep, s.Volume(p.Dose.Step))
-		add(recheck.DoseWeightBy, weightWord(p.Dose.Weight.Given() || p.Dose.Surface.Given(), p.Order.DoseBy, p.Dose.Rule.By))
+		add(recheck.DoseWeightBy, weightWord(p.Dose.Weight.Given(), p.Dose.Surface.Given(), p.Order.DoseBy, p.Dose.Rule.By))
 	}
 }
 
 // weightWord is which weight a dose goes by: the order's word, else the
-// formulary's, "actual" where that names none, "none" for an absolute dose.
-func weightWord(scaled bool, ordered order.Field[body.Kind], row body.Kind) string {
+// formulary's, "actual" where that names none; "surface" for a dose per m², and
+// "none" for an absolute one.
+func weightWord(weight, surface bool, ordered order.Field[body.Kind], row body.Kind) string {
 	switch {
-	case !scaled:
+	case surface:
+		return body.Surface.String()
+	case !weight:
 		return body.None.String()
 	case ordered.Given():
 		return ordered.Value.String()
-	case row == body.None || row == 0:
+	case row == body.None || row == 0 || row == body.Surface:
 		return body.Actual.String()
 	}
 	return row.String()
@@ -204,7 +210,7 @@ func askedRates(p dilution.Plan, add func(name, text string)) {
 	}
 	part := p.Infusion
 	add(recheck.StartDose, typedDose(p.Order.Start.Text))
-	add(recheck.RateWeightBy, weightWord(part.Weight.Given() || part.Surface.Given(), p.Order.RateBy, part.Rule.By))
+	add(recheck.RateWeightBy, weightWord(part.Weight.Given(), part.Surface.Given(), p.Order.RateBy, part.Rule.By))
 	for i, rung := range part.Ladder {
 		add(recheck.Row(recheck.Ladder, i+1, "dose"), p.Style.DoseRate(rung.Dose))
 	}

@@ -122,11 +122,8 @@ func (j *job) check() refusal.List {
 	var out refusal.List
 	for i, p := range j.list.Plans {
 		j.tell("working again", i+1, len(j.list.Plans))
-		figures := j.labels[i].Figures("label")
-		for _, s := range j.allSheets() {
-			figures = append(figures, s.FiguresOf(p.Number)...)
-		}
-		passed, err := recheck.Check(labels.Stated(p, figures))
+		figures := j.figuresOf(i)
+		passed, err := recheck.Check(j.stated(i, figures, figures))
 		if err != nil {
 			out = append(out, ourFault(p.Number, err))
 			continue
@@ -134,6 +131,28 @@ func (j *job) check() refusal.List {
 		j.passed[p.Number] = passed
 	}
 	return out
+}
+
+// figuresOf is every figure of every paper of the i-th syringe.
+func (j *job) figuresOf(i int) []recheck.Figure {
+	figures := j.labels[i].Figures("label")
+	for _, s := range j.allSheets() {
+		figures = append(figures, s.FiguresOf(j.list.Plans[i].Number)...)
+	}
+	return figures
+}
+
+// stated is what the second route gets for the i-th syringe: the figures as
+// they stand on paper, and beside what was typed the sentences and limits as
+// the papers were given them.
+func (j *job) stated(i int, printed, given []recheck.Figure) recheck.Stated {
+	s := labels.Stated(j.list.Plans[i], printed)
+	for _, f := range given {
+		if strings.HasPrefix(f.Name, recheck.Said+".") || strings.HasPrefix(f.Name, recheck.Bound+".") {
+			s.Asked = append(s.Asked, recheck.Figure{Paper: f.Paper, Name: f.Name, Text: f.Text})
+		}
+	}
+	return s
 }
 
 func (j *job) allSheets() []sheets.Sheet {

@@ -63,6 +63,7 @@ type check struct {
 	record  record
 	all     *known // what a sentence may repeat, filled when one is met
 	own     *known // what a bound may repeat
+	block   *block // texts of the drug's block
 	faults  []Fault
 }
 
@@ -168,7 +169,7 @@ func (c *check) checkAsked() {
 // from: what the site has in stock.
 func isStocked(name string) bool {
 	switch name {
-	case DrugStep, DoseStep, DrugBarrel, FinalBarrel:
+	case DrugStep, DoseStep, DrugBarrel, FinalBarrel, Typed:
 		return true
 	}
 	return false

@@ -72,7 +72,7 @@ func allRules() map[string]rule {
 		Slip + ".*.kind": slipKind, Slip + ".*.rate": measured(slipRate),
 
 		Prepared: prepared, PreparedOffset: preparedOffset, UseHours: useHours, UseBy: useBy, UseByOffset: useByOffset,
-		Code: code, ATC: atc, Serial: serial, Stock: stock,
+		Code: code, ATC: atc, Serial: serial, Typed: typedOnly, Stock: stock,
 
 		DrugWanted: measured(drugWanted), DrugMoved: drugMoved, DoseWanted: measured(doseWanted), DoseMoved: doseMoved,
 		StartFlow: measured(startFlow), StartMoved: startMoved,

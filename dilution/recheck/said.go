@@ -73,6 +73,9 @@ func (c *check) allKnown() *known {
 		}
 	}
 	for name, texts := range c.asked {
+		if key, _ := splitRow(name); key == Said+".*.text" || key == Bound+".*.text" {
+			continue // what a sentence was to say confirms no figure in it
+		}
 		for _, text := range texts {
 			k.learn(text)
 			if v, ok := readOldStrength(text); ok && name == Concentration {
@@ -80,7 +83,7 @@ func (c *check) allKnown() *known {
 			}
 		}
 	}
-	for _, text := range c.blockTexts() {
+	for _, text := range c.blockTexts().texts {
 		k.learn(text)
 	}
 	for _, t := range tokens(c.syringe) {
@@ -109,29 +112,49 @@ func (c *check) ownKnown() *known {
 		return c.own
 	}
 	k := &known{words: map[string]bool{}, printed: func(reading) bool { return false }}
-	for _, text := range c.blockTexts() {
+	for _, text := range c.blockTexts().texts {
 		k.learn(text)
 	}
 	c.own = k
 	return k
 }
 
-// blockTexts lists the texts of the drug's block; none where the record cannot
+// A block is the texts of the drug's block of the record: as they are, with
+// blanks folded, and the latter without figures.
+type block struct{ texts, folded, words []string }
+
+// blockTexts reads the drug's block once; it is empty where the record cannot
 // be read, so that nothing is confirmed by it.
-func (c *check) blockTexts() []string {
+func (c *check) blockTexts() *block {
+	if c.block != nil {
+		return c.block
+	}
+	c.block = &block{}
 	if c.record.problem != "" {
-		return nil
+		return c.block
 	}
 	texts, ok := c.record.place.texts()
 	if !ok {
-		return nil
+		return c.block
 	}
-	return texts
+	for _, t := range texts {
+		folded := fold(t)
+		c.block.texts = append(c.block.texts, t)
+		c.block.folded = append(c.block.folded, folded)
+		c.block.words = append(c.block.words, withoutFigures(folded))
+	}
+	return c.block
 }
 
-func said(c *check, _ int, text string) *objection {
+func said(c *check, row int, text string) *objection {
+	if o := c.asGiven(Row(Said, row, "text"), text); o != nil {
+		return o
+	}
 	folded, o := readable(text)
 	if o != nil || c.inBlock(folded) {
+		return o
+	}
+	if o := c.misquoted(folded); o != nil {
 		return o
 	}
 	rest, o := withoutFixed(folded)
@@ -141,7 +164,10 @@ func said(c *check, _ int, text string) *objection {
 	return c.allKnown().confirm(rest, "stands in no other figure, in nothing that was asked and not in the drug's record")
 }
 
-func bound(c *check, _ int, text string) *objection {
+func bound(c *check, row int, text string) *objection {
+	if o := c.asGiven(Row(Bound, row, "text"), text); o != nil {
+		return o
+	}
 	folded, o := readable(text)
 	if o != nil {
 		return o
@@ -153,6 +179,43 @@ func bound(c *check, _ int, text string) *objection {
 		return nil
 	}
 	return c.ownKnown().confirm(folded, "does not stand in the drug's record")
+}
+
+// asGiven holds a sentence or limit against the text that the paper was given,
+// where that is among what was asked.
+func (c *check) asGiven(name, text string) *objection {
+	if c.was(name) && c.asked[name][0] != text {
+		return object(c.asked[name][0], "was to be printed")
+	}
+	return nil
+}
+
+// misquoted objects to a sentence that has the words of one in the record and
+// other figures.
+func (c *check) misquoted(folded string) *objection {
+	words := withoutFigures(folded)
+	if len(words) < 12 { // too few words to tell one sentence from another
+		return nil
+	}
+	if i := slices.Index(c.blockTexts().words, words); i >= 0 {
+		return object(c.blockTexts().folded[i], "stands in the record with other figures")
+	}
+	return nil
+}
+
+// withoutFigures is a sentence less its digits and the marks inside numbers.
+func withoutFigures(s string) string {
+	return strings.Map(func(r rune) rune {
+		if unicode.IsNumber(r) || r == '.' || r == ',' {
+			return -1
+		}
+		return r
+	}, s)
+}
+
+// typedOnly objects to a figure under the name of free texts.
+func typedOnly(*check, int, string) *objection {
+	return object("", "is a name for texts of the order, not for a figure")
 }
 
 // readable folds a sentence, and objects to an empty and to an endless one.
@@ -168,7 +231,7 @@ func readable(text string) (string, *objection) {
 }
 
 func (c *check) inBlock(folded string) bool {
-	return slices.ContainsFunc(c.blockTexts(), func(s string) bool { return fold(s) == folded })
+	return slices.Contains(c.blockTexts().folded, folded)
 }
 
 // confirm objects to every figure of the sentence that is not known.

@@ -170,9 +170,17 @@ const (
 // against the drug's block alone. Words, and which of the known values a
 // sentence takes, are not judged; a sentence without any number passes, an empty
 // one does not.
+//
+// Where Asked holds a row of that name too, it is the text that the paper was
+// given to say, and the printed one must be equal to it.
+//
+// Asked may hold any number of texts under Typed: other words of the order (who
+// accepted a limit and why, batch, expiry, the site's settings). Sentences may
+// repeat their numbers; no figure has this name.
 const (
 	Said  = "said"
 	Bound = "bound"
+	Typed = "typed"
 )
 
 // Names of table rows: Row("ladder", 3, "rate") is "ladder.3.rate".
