@@ -61,9 +61,9 @@ type check struct {
 	parsed  map[string]parsed   // printed text to its reading
 	rules   map[string]rule
 	record  record
-	all     *known // what a sentence may repeat, filled when one is met
-	own     *known // what a bound may repeat
-	block   *block // texts of the drug's block
+	all     *known     // what a sentence may repeat, filled when one is met
+	own     *known     // what a bound may repeat
+	block   *blockText // texts of the drug's block
 	faults  []Fault
 }
 

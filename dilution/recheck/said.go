@@ -119,17 +119,17 @@ func (c *check) ownKnown() *known {
 	return k
 }
 
-// A block is the texts of the drug's block of the record: as they are, with
+// A blockText is the texts of the drug's block of the record: as they are, with
 // blanks folded, and the latter without figures.
-type block struct{ texts, folded, words []string }
+type blockText struct{ texts, folded, words []string }
 
 // blockTexts reads the drug's block once; it is empty where the record cannot
 // be read, so that nothing is confirmed by it.
-func (c *check) blockTexts() *block {
+func (c *check) blockTexts() *blockText {
 	if c.block != nil {
 		return c.block
 	}
-	c.block = &block{}
+	c.block = &blockText{}
 	if c.record.problem != "" {
 		return c.block
 	}
