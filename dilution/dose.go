@@ -340,8 +340,16 @@ func (w *work) unlikeWeight(given bool, ordered, row body.Kind, source formulary
 	if !given || ordered == row || row == body.None || row == 0 {
 		return
 	}
-	w.caution(refusal.Reason{Code: refusal.WeightBasisUnlike, Field: "dose", Got: ordered.String() + " weight", Want: row.String() + " weight", Rule: "R3", Source: source.Title, Pos: pos,
-		Message: fmt.Sprintf("the order goes by %s weight, the formulary by %s weight; the limits were checked as absolute amounts", ordered, row)})
+	w.caution(refusal.Reason{Code: refusal.WeightBasisUnlike, Field: "dose", Got: scalarWord(ordered), Want: scalarWord(row), Rule: "R3", Source: source.Title, Pos: pos,
+		Message: fmt.Sprintf("the order goes by %s, the formulary by %s; the limits were checked as absolute amounts", scalarWord(ordered), scalarWord(row))})
+}
+
+// scalarWord is what a dose goes by, in words.
+func scalarWord(k body.Kind) string {
+	if k == body.Surface {
+		return "body surface"
+	}
+	return k.String() + " weight"
 }
 
 // weightNotes adds what there is to say about the weight that was used.

@@ -214,8 +214,12 @@ func (f *paperFlags) papers(j *job, dir string, cautions refusal.List) ([]file, 
 	}
 	pages, reasons := layouts.Sheets(j.drawUp, j.proofs())
 	add("draw-up.pdf", "Draw-up sheet", pages, reasons)
-	pages, reasons = f.labelPages(j)
-	add("labels.pdf", "Syringe labels", pages, reasons)
+	parts, reasons := f.labelParts(j)
+	all = append(all, reasons...)
+	for i, part := range parts {
+		pages, reasons := part.pages(j, f.mono)
+		add(partName(i, len(parts)), "Syringe labels", pages, reasons)
+	}
 	pages, reasons = layouts.Sheets(j.pumps, j.proofs())
 	add("pump-cards.pdf", "Pump cards", pages, reasons)
 	pages, reasons = layouts.Sheets(j.checks, j.proofs())
@@ -229,16 +233,47 @@ func (f *paperFlags) papers(j *job, dir string, cautions refusal.List) ([]file, 
 	return append(files, file{filepath.Join(dir, planName), data}), all
 }
 
-// labelPages lays bolus labels on one stock and infusion labels on another. A
+// A labelPart is the labels of one file: runs on their stocks.
+type labelPart struct{ runs []labelRun }
+
+// A labelRun is labels that go on one stock; used of the first sheet are gone.
+type labelRun struct {
+	list  []labels.Label
+	stock string
+	used  int
+}
+
+// pages places the runs of a part one after the other.
+func (p labelPart) pages(j *job, mono bool) ([]ink.Page, refusal.List) {
+	var pages []ink.Page
+	var all refusal.List
+	for _, r := range p.runs {
+		more, reasons := placeLabels(j, r.list, r.stock, r.used, mono)
+		pages, all = append(pages, more...), append(all, reasons...)
+	}
+	return pages, all
+}
+
+// partName is labels.pdf, or labels-1.pdf and so on when the job is cut.
+func partName(i, parts int) string {
+	if parts == 1 {
+		return "labels.pdf"
+	}
+	return fmt.Sprintf("labels-%d.pdf", i+1)
+}
+
+// labelParts sorts bolus labels on one stock and infusion labels on another. A
 // bolus label that its stock cannot hold goes to the larger one, and a caution
-// says so: nothing on it is cut, shrunk or dropped (rule R15).
-func (f *paperFlags) labelPages(j *job) ([]ink.Page, refusal.List) {
+// says so: nothing on it is cut, shrunk or dropped (rule R15). Beyond
+// layouts.PartSize labels the job is cut into several files, so that memory
+// stops growing.
+func (f *paperFlags) labelParts(j *job) ([]labelPart, refusal.List) {
 	stock := f.stock
 	if stock == "" {
 		stock = "a4-65"
 	}
 	var small, large []labels.Label
-	var moved refusal.List
+	var reasons refusal.List
 	for i, p := range j.list.Plans {
 		l := j.labels[i]
 		switch {
@@ -246,15 +281,44 @@ func (f *paperFlags) labelPages(j *job) ([]ink.Page, refusal.List) {
 			large = append(large, l)
 		case stock != f.infusionStock && tooSmall(j, l, stock, f.mono):
 			large = append(large, l)
-			moved = append(moved, movedCaution(l, stock, f.infusionStock))
+			reasons = append(reasons, movedCaution(l, stock, f.infusionStock))
 		default:
 			small = append(small, l)
 		}
 	}
-	moved = append(moved, together(len(j.labels))...)
-	pages, reasons := placeLabels(j, small, stock, f.used, f.mono)
-	more, again := placeLabels(j, large, f.infusionStock, 0, f.mono)
-	return append(pages, more...), append(append(moved, reasons...), again...)
+	reasons = append(reasons, together(len(j.labels))...)
+	var parts []labelPart
+	for _, group := range []labelRun{{small, stock, f.used}, {large, f.infusionStock, 0}} {
+		for _, run := range group.cut() {
+			if n := len(parts); n > 0 && len(j.labels) <= layouts.PartSize {
+				parts[n-1].runs = append(parts[n-1].runs, run)
+			} else {
+				parts = append(parts, labelPart{[]labelRun{run}})
+			}
+		}
+	}
+	return parts, reasons
+}
+
+// cut is the run in parts that one file may hold. A stock that does not exist
+// stays whole: placing it refuses.
+func (r labelRun) cut() []labelRun {
+	if len(r.list) == 0 {
+		return nil
+	}
+	s, ok := layouts.StockNamed(r.stock)
+	if !ok {
+		return []labelRun{r}
+	}
+	var out []labelRun
+	for i, list := range layouts.Parts(r.list, s, r.used, layouts.PartSize) {
+		run := labelRun{list: list, stock: r.stock}
+		if i == 0 {
+			run.used = r.used
+		}
+		out = append(out, run)
+	}
+	return out
 }
 
 // together is the caution that goes with every list of labels: the rule is to

@@ -206,7 +206,11 @@ func spellings(text string) []string {
 func TestLabelsDecode(t *testing.T) {
 	j := demoJob(t)
 	flags, _ := readPaperFlags("prepare", nil)
-	pages, reasons := flags.labelPages(j)
+	parts, reasons := flags.labelParts(j)
+	if reasons.Refused() || len(parts) != 1 {
+		t.Fatal(len(parts), reasons.Refusals())
+	}
+	pages, reasons := parts[0].pages(j, false)
 	if reasons.Refused() {
 		t.Fatal(reasons.Refusals())
 	}
