@@ -26,7 +26,7 @@ func (a arrangement) draw() drawing {
 	}
 	to.marks = append(to.marks, a.whitePanels()...)
 	for _, row := range a.strips {
-		a.fromRight(to, row, a.stripSize(), letters)
+		a.fromRight(to, row, a.stripSize(), stripGap, letters)
 	}
 	to.marks = append(to.marks, a.name.marks(letters)...)
 	if d.class.Line {
@@ -39,7 +39,7 @@ func (a arrangement) draw() drawing {
 		a.row(to, row, ink.Black)
 	}
 	a.row(to, a.foot, ink.Black)
-	a.fromRight(to, a.right, a.size, ink.Black)
+	a.fromRight(to, a.right, a.size, a.gap, ink.Black)
 	if len(a.modules) > 0 {
 		to.add(d.symbol.filled(ink.White))
 		to.symbol = len(to.marks)
@@ -80,7 +80,7 @@ func (a arrangement) whitePanels() []ink.Mark {
 	if !d.class.Bar {
 		for _, row := range a.strips {
 			if len(row.items) > 0 {
-				marks = append(marks, behind(row.right-row.used-300, row.base, smallLow).filled(ink.White))
+				marks = append(marks, behind(max(row.right-row.used-300, x), row.base, smallLow).filled(ink.White))
 			}
 		}
 	}
@@ -100,12 +100,8 @@ func (a arrangement) row(to *drawing, r bin, c ink.Colour) {
 }
 
 // fromRight draws the items of a row against its right end.
-func (a arrangement) fromRight(to *drawing, r bin, size ink.Micrometre, c ink.Colour) {
+func (a arrangement) fromRight(to *drawing, r bin, size, gap ink.Micrometre, c ink.Colour) {
 	x := r.right
-	gap := a.gap
-	if size != a.size {
-		gap = smallLow * 3 / 4
-	}
 	for i, it := range r.items {
 		x -= it.width(size)
 		if i > 0 {
@@ -128,5 +124,5 @@ func (a arrangement) drawStated(to *drawing, s stated) {
 		x := s.bin.left + s.wide[s.face].at(size) + a.gap
 		to.add(Set(x, s.bin.base, labels.Words(s.tail), ink.CondensedSemiBold, a.size, ink.Black))
 	}
-	a.fromRight(to, s.bin, a.size, ink.Black)
+	a.fromRight(to, s.bin, a.size, a.gap, ink.Black)
 }

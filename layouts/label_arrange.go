@@ -168,11 +168,13 @@ func symbolBox(panel box, s Stock, module ink.Micrometre, count int) (box, bool)
 	return b, b.y >= panel.y+panel.h/2-1500 && b.x > panel.x+panel.w/2
 }
 
-// Baseline of the first row of small type below the top edge, and from there
-// to the next.
+// Baseline of the first row of small type below the top edge, from there to
+// the next, and what parts two items: two marks and a digest of any eight
+// letters fit one row of the sheet of 65.
 const (
 	stripBase  = 1750
 	stripPitch = 1560
+	stripGap   = 600
 )
 
 // upper places small type along the top edge, name and reversal line. What
@@ -181,18 +183,18 @@ func (a *arrangement) upper(l labels.Label, c *content, strips int) bool {
 	d := a.design
 	b := newBlock(d, 0, smallLow)
 	for i := range strips {
-		a.strips = append(a.strips, bin{base: d.panel.y + stripBase + ink.Micrometre(i)*stripPitch, left: d.panel.x + d.edge, right: d.panel.right() - d.edge})
+		a.strips = append(a.strips, bin{base: d.panel.y + stripBase + ink.Micrometre(i)*stripPitch, left: d.panel.x + 300, right: d.panel.right() - d.edge})
 	}
 	at := 0
 	for _, it := range c.strip {
-		for at < strips && a.strips[at].room(b.gap) < it.width(b.size) {
+		for at < strips && a.strips[at].room(stripGap) < it.width(b.size) {
 			at++
 		}
 		if at == strips {
 			c.rows = append(c.rows[:len(c.rows):len(c.rows)], it)
 			continue
 		}
-		a.strips[at].add(it, b.size, b.gap)
+		a.strips[at].add(it, b.size, stripGap)
 	}
 	_, _, top := d.nameArea()
 	if strips > 0 {

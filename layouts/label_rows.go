@@ -261,8 +261,9 @@ func (b block) pack(items []item, slots []bin, how packing, beside *bin) bool {
 	return b.fill(late, slots, beside)
 }
 
-// fill puts late items, the widest first, on the first row with room; the
-// first may stand beside the concentration when nothing else does.
+// fill puts late items, the widest first, on the first row with room: before
+// others beside the concentration when nothing else stands there, after them
+// when something does.
 func (b block) fill(late []item, slots []bin, beside *bin) bool {
 	slices.SortStableFunc(late, func(a, b item) int { return cmp.Compare(b.span, a.span) })
 	for _, it := range late {
@@ -278,6 +279,8 @@ func (b block) fill(late []item, slots []bin, beside *bin) bool {
 			beside.add(it, b.size, b.gap)
 		case row >= 0:
 			slots[row].add(it, b.size, b.gap)
+		case beside.room(b.gap) >= it.width(b.size):
+			beside.add(it, b.size, b.gap)
 		default:
 			return false
 		}
