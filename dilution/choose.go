@@ -11,7 +11,7 @@ import (
 func (w *work) findDrug() bool {
 	d, near, ok := w.f.Find(w.o.Drug.Value)
 	if !ok {
-		remedy := "add it to a formulary of your own, or check the spelling"
+		remedy := "add it to the formulary (whoever keeps it does that), or check the spelling; drawup formulary list shows what there is"
 		if len(near) > 0 {
 			remedy = "was " + joinOr(near) + " meant?"
 		}
@@ -51,7 +51,7 @@ func (w *work) choosePresentation() bool {
 	switch len(fits) {
 	case 0:
 		return w.refuse(refusal.Reason{Code: refusal.FormularyBlank, Field: "presentation", Want: "a presentation for " + w.use(), Rule: "R10", Pos: w.o.Drug.Pos,
-			Message: fmt.Sprintf("the formulary lists no presentation of %s for use as %s", d.Name, w.use()), Remedy: "add one with its source to a formulary of your own"})
+			Message: fmt.Sprintf("the formulary lists no presentation of %s for use as %s", d.Name, w.use()), Remedy: "add one with its source to the formulary (whoever keeps it does that)"})
 	case 1:
 		w.plan.Presentation = fits[0]
 		return w.powderKnown()
@@ -90,5 +90,5 @@ func (w *work) powderKnown() bool {
 	}
 	return w.refuse(refusal.Reason{Code: refusal.DisplacementBlank, Field: "displacement", Want: "a displacement volume, or a source that calls it negligible", Rule: "R7", Pos: w.o.Drug.Pos,
 		Message: fmt.Sprintf("the formulary does not say how much volume the powder of %s takes, so no concentration can be worked out", p.ID),
-		Remedy:  "add the displacement of the product in your hand, with its source, to a formulary of your own"})
+		Remedy:  "add the displacement of the product in your hand, with its source, to the formulary (whoever keeps it does that)"})
 }

@@ -95,7 +95,7 @@ func (w *work) noDose() bool {
 
 func (w *work) routeUnlisted(routes []string) bool {
 	return w.refuse(refusal.Reason{Code: refusal.RouteNotListed, Field: "route", Got: w.plan.Route, Want: joinOr(unique(routes)), Rule: "R10", Pos: w.o.Pos,
-		Message: fmt.Sprintf("the formulary lists no dose of %s by the route %q", w.plan.Drug.Name, w.plan.Route), Remedy: "check the route; add it with its source to a formulary of your own if it is right"})
+		Message: fmt.Sprintf("the formulary lists no dose of %s by the route %q", w.plan.Drug.Name, w.plan.Route), Remedy: "check the route; add it with its source to the formulary (whoever keeps it does that) if it is right"})
 }
 
 func unique(list []string) []string {
@@ -213,7 +213,7 @@ func quoted(list []string) []string {
 func fittingRows[T any](w *work, rules []formulary.Rule[T], field string) ([]formulary.Rule[T], bool) {
 	if len(rules) == 0 {
 		return nil, w.refuse(refusal.Reason{Code: refusal.FormularyBlank, Field: field, Want: "limits for " + w.use(), Rule: "R10", Pos: w.o.Pos,
-			Message: fmt.Sprintf("the formulary has no %s limits of %s for %s", field, w.plan.Drug.Name, w.use()), Remedy: "add them with their source to a formulary of your own"})
+			Message: fmt.Sprintf("the formulary has no %s limits of %s for %s", field, w.plan.Drug.Name, w.use()), Remedy: "add them with their source to the formulary (whoever keeps it does that)"})
 	}
 	var rows []formulary.Rule[T]
 	var routes, bands, fors []string
@@ -248,7 +248,7 @@ func fittingRows[T any](w *work, rules []formulary.Rule[T], field string) ([]for
 			Message: fmt.Sprintf("the %s limits of %s depend on age, and the patient has none", field, w.plan.Drug.Name), Remedy: "write the patient's age"})
 	}
 	return nil, w.refuse(refusal.Reason{Code: refusal.AgeOutside, Field: "patient.age", Got: w.size.Age.String(), Want: joinOr(unique(bands)), Rule: "R10", Pos: w.patient.Age.Pos,
-		Message: fmt.Sprintf("the formulary has no %s of %s for a patient of %s", field, w.plan.Drug.Name, w.size.Age), Remedy: "check the age; add the age band with its source to a formulary of your own if it is right"})
+		Message: fmt.Sprintf("the formulary has no %s of %s for a patient of %s", field, w.plan.Drug.Name, w.size.Age), Remedy: "check the age; add the age band with its source to the formulary (whoever keeps it does that) if it is right"})
 }
 
 // judgeDose holds the ordered dose against one row, as absolute amounts.

@@ -18,7 +18,7 @@ func (w *work) checkConcentration() bool {
 	}
 	rows, central := w.boundsFor(line)
 	if len(rows) == 0 {
-		remedy := "add bounds with their source to a formulary of your own"
+		remedy := "add bounds with their source to the formulary (whoever keeps it does that)"
 		if central {
 			remedy = "if it goes into a central line, write line = \"central\"; otherwise " + remedy
 		}
@@ -59,7 +59,7 @@ func (w *work) within(b formulary.Bounds) bool {
 	c, s := w.plan.Mixture.Concentration, w.plan.Style
 	if !b.Low.Given() || !b.High.Given() {
 		return w.refuse(refusal.Reason{Code: refusal.FormularyBlank, Field: "concentration bounds", Want: "a lowest and a highest concentration", Rule: "R12", Pos: w.o.Pos,
-			Message: fmt.Sprintf("the formulary lacks one end of the concentration bounds of %s for %s", w.plan.Drug.Name, b.Use), Remedy: "add it with its source to a formulary of your own"})
+			Message: fmt.Sprintf("the formulary lacks one end of the concentration bounds of %s for %s", w.plan.Drug.Name, b.Use), Remedy: "add it with its source to the formulary (whoever keeps it does that)"})
 	}
 	if n, err := c.Cmp(b.High.Value); err != nil {
 		return w.fault(err, "concentration", w.o.Pos)
@@ -198,7 +198,7 @@ func (s scale) tooMuch() refusal.Reason {
 	if !s.hardHigh.given {
 		r.Code, r.Rule = refusal.FormularyBlank, "R10"
 		r.Message = fmt.Sprintf("%s %s is above the highest figure stored (%s), and no hard limit is stored for %s", s.what, s.text, s.top().text, s.row)
-		r.Remedy = "stay within the stored range, or add a hard limit with its source to a formulary of your own"
+		r.Remedy = "stay within the stored range, or add a hard limit with its source to the formulary (whoever keeps it does that)"
 	}
 	return r
 }

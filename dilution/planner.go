@@ -228,17 +228,17 @@ func (w *work) unverified() {
 	note("contents of the container", p.Presentation.Unverified)
 	if p.Dose != nil {
 		for _, f := range []formulary.Figure[quantity.Dose]{p.Dose.Rule.HardLow, p.Dose.Rule.UsualLow, p.Dose.Rule.UsualHigh, p.Dose.Rule.SoftHigh, p.Dose.Rule.HardHigh} {
-			note("dose "+f.Text, f.Unverified)
+			note("dose "+p.Style.Dose(f.Value), f.Unverified)
 		}
 	}
 	if p.Infusion != nil {
 		for _, f := range []formulary.Figure[quantity.DoseRate]{p.Infusion.Rule.HardLow, p.Infusion.Rule.UsualLow, p.Infusion.Rule.UsualHigh, p.Infusion.Rule.SoftHigh, p.Infusion.Rule.HardHigh} {
-			note("dose rate "+f.Text, f.Unverified)
+			note("dose rate "+p.Style.DoseRate(f.Value), f.Unverified)
 		}
 	}
 	for _, b := range p.Drug.Bounds {
-		note("concentration "+b.Low.Text, b.Low.Unverified && b.Use == w.use())
-		note("concentration "+b.High.Text, b.High.Unverified && b.Use == w.use())
+		note("concentration "+p.Style.Concentration(b.Low.Value), b.Low.Unverified && b.Use == w.use())
+		note("concentration "+p.Style.Concentration(b.High.Value), b.High.Unverified && b.Use == w.use())
 	}
 	if len(list) > 0 {
 		w.caution(refusal.Reason{Code: refusal.Unverified, Rule: "R13", Field: "formulary", Got: joinAnd(list),

@@ -41,7 +41,8 @@ const (
 // in per cent: our choice, the assay limits' own width.
 const widestTolerance = 10
 
-// siteOf reads the site's settings; quantities in the order are already valid.
+// siteOf reads the site's settings. A value that could not be read was refused
+// then; the default stands in for it, so that the other faults show too.
 func siteOf(o order.Order) (site, error) {
 	s := site{style: quantity.UK(), barrels: syringe.Stocked(),
 		bolus: useByPolicy{defaultBolus, defaultSource}, infusion: useByPolicy{defaultInfusion, defaultSource}}
@@ -56,35 +57,41 @@ func siteOf(o order.Order) (site, error) {
 		return s, err
 	}
 	in := o.Site
-	if in.Style.Given() {
+	if in.Style.Value.String() != "" {
 		s.style = in.Style.Value
 	}
-	if in.Smallest.Given() {
+	if in.Smallest.Value.Given() {
 		s.smallest = in.Smallest.Value
 	}
-	if in.Tolerance.Given() {
+	if in.Tolerance.Value.Given() {
 		s.tolerance = in.Tolerance.Value
 	}
 	if s.tolerance.Rat().Cmp(big.NewRat(widestTolerance, 1)) > 0 {
 		return s, fmt.Errorf("got a tolerance of %s, want at most %d %%: a graduation that far off measures nothing", s.tolerance.Written(), widestTolerance)
 	}
-	if in.PumpStep.Given() {
+	if in.PumpStep.Value.Given() {
 		s.step = in.PumpStep.Value
 	}
-	if in.BolusUseBy.Given() {
+	if in.BolusUseBy.Value > 0 {
 		s.bolus = useByPolicy{int64(in.BolusUseBy.Value / time.Minute), "site policy in the order file"}
 	}
-	if in.InfusionUseBy.Given() {
+	if in.InfusionUseBy.Value > 0 {
 		s.infusion = useByPolicy{int64(in.InfusionUseBy.Value / time.Minute), "site policy in the order file"}
 	}
 	if len(in.Barrels) > 0 {
 		s.barrels = nil
 		for _, f := range in.Barrels {
+			if !f.Value.Given() {
+				continue // refused when it was read
+			}
 			b, ok := syringe.Find(f.Value)
 			if !ok {
 				return s, fmt.Errorf("got a barrel of %q, want a size whose graduation is on record", f.Text)
 			}
 			s.barrels = append(s.barrels, b)
+		}
+		if len(s.barrels) == 0 {
+			s.barrels = syringe.Stocked()
 		}
 	}
 	return s, nil

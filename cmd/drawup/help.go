@@ -68,8 +68,8 @@ the same form, starts with "caution:" and stands below the answer: the answer
 holds, and a person has to weigh it. With --json both are lists of objects with
 code, message, field, got, want, rule, source and remedy.
 
-The quick sums check no limit of any drug (limits-not-checked). Local policy, the
-pack in the hand and licensed staff decide.
+Without --drug a quick sum checks no limit of any drug (limits-not-checked).
+Local policy, the pack in the hand and licensed staff decide.
 `
 
 const helpPrepare = `drawup prepare: plan an order: sheets, labels, pump cards, check sheets, plan.json
