@@ -42,10 +42,27 @@ func (w *work) dose() bool {
 	}
 	if w.doseIsWhole() {
 		d.Volume, d.Step = m.DrugVolume, m.DrugReading.Barrel.Step()
-	} else if !w.doseReadable(exact, d) {
+	} else if !w.keepLimit(exact, d) || !w.doseReadable(exact, d) {
 		return false
 	}
 	if d.Delivered, err = d.Volume.Holds(m.Concentration); err != nil {
+		return w.fault(err, "dose", w.o.Dose.Pos)
+	}
+	return true
+}
+
+// keepLimit moves a dose that its nearest graduation would carry past a limit
+// to the graduation below (rule R11).
+func (w *work) keepLimit(exact quantity.Volume, d *DosePart) bool {
+	given, err := d.Volume.Holds(w.plan.Mixture.Concentration)
+	if err != nil {
+		return w.fault(err, "dose", w.o.Dose.Pos)
+	}
+	if passed(d.ceilings, d.Amount.Rat(), given.Rat()) == nil {
+		return true
+	}
+	d.Down = true
+	if d.Volume, _, err = exact.ToStep(d.Step, quantity.Down); err != nil {
 		return w.fault(err, "dose", w.o.Dose.Pos)
 	}
 	return true
@@ -75,7 +92,7 @@ func (w *work) doseReadable(exact quantity.Volume, d *DosePart) bool {
 	}
 	if moved.Sign() != 0 {
 		w.caution(refusal.Reason{Code: refusal.VolumeOffGraduation, Field: "dose", Got: s.Volume(exact), Want: s.Volume(d.Volume), Rule: "R2", Pos: w.o.Dose.Pos,
-			Message: fmt.Sprintf("one dose is %s; the nearest graduation is %s: %s %s", s.Volume(exact), s.Volume(d.Volume), percentOf(s, moved), moreOrLess(moved.Sign()))})
+			Message: fmt.Sprintf("one dose is %s; "+graduationWord(d.Down)+" is %s: %s %s", s.Volume(exact), s.Volume(d.Volume), percentOf(s, moved), moreOrLess(moved.Sign()))})
 	}
 	return true
 }
@@ -286,6 +303,10 @@ func (w *work) judgeDose(row formulary.Rule[quantity.Dose]) (*DosePart, verdict,
 	}
 	v := s.judge()
 	w.totalMax(row, d, &v)
+	d.ceilings = s.ceilings()
+	if f := row.TotalMax; f.Given() {
+		d.ceilings = append(d.ceilings, bound{true, f.Value.Rat(), w.plan.Style.Amount(f.Value), sourceWords(f.Source, f.Unverified)})
+	}
 	return d, v, nil
 }
 

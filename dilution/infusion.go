@@ -97,21 +97,27 @@ func (w *work) judgeRange(row formulary.Rule[quantity.DoseRate]) (verdict, error
 
 // judgeRate holds one dose rate against one row, as absolute rates.
 func (w *work) judgeRate(row formulary.Rule[quantity.DoseRate], rate quantity.DoseRate, field string, pos refusal.Pos) (verdict, error) {
+	s, err := w.rateScale(row, rate, field, pos)
+	if err != nil {
+		return verdict{}, err
+	}
+	return s.judge(), nil
+}
+
+// rateScale is one row with the rate held against it, as absolute rates.
+func (w *work) rateScale(row formulary.Rule[quantity.DoseRate], rate quantity.DoseRate, field string, pos refusal.Pos) (scale, error) {
 	by := row.By
 	if w.o.RateBy.Given() {
 		by = w.o.RateBy.Value
 	}
 	value, err := w.absoluteRate(rate, by)
 	if err != nil {
-		return verdict{}, err
+		return scale{}, err
 	}
 	s := scale{what: "dose rate", field: field, value: value, text: w.plan.Style.DoseRate(rate), codes: rateCodes, pos: pos,
 		acceptedBy: w.o.AcceptedBy.Value, acceptedReason: w.o.AcceptedReason.Value}
 	err = fillScale(&s, row, w.plan.Style.DoseRate, func(x quantity.DoseRate) (*big.Rat, error) { return w.absoluteRate(x, row.By) })
-	if err != nil {
-		return verdict{}, err
-	}
-	return s.judge(), nil
+	return s, err
 }
 
 // absoluteRate is the rate for this patient in mg, units or mmol per hour.
@@ -147,6 +153,10 @@ func (w *work) setPump(part *InfusionPart) bool {
 		return w.fault(err, "start", w.o.Start.Pos)
 	}
 	part.Start = start
+	if !w.startWithin(part) {
+		return false
+	}
+	start = part.Start
 	if new(big.Rat).Abs(start.LostPercent).Cmp(w.site.tolerance.Rat()) > 0 {
 		w.caution(refusal.Reason{Code: refusal.RateRounding, Field: "start", Got: s.FlowRate(start.Exact), Want: s.FlowRate(start.Rate), Rule: "R2", Pos: w.o.Start.Pos,
 			Message: fmt.Sprintf("rounding to the pump's step changes the start dose by %s; it gives %s", percentOf(s, start.LostPercent), s.DoseRate(start.Delivered)), Remedy: "a weaker mixture rounds less"})
@@ -154,6 +164,29 @@ func (w *work) setPump(part *InfusionPart) bool {
 	if start.Rate.Rat().Cmp(one()) < 0 {
 		w.caution(refusal.Reason{Code: refusal.RateSlow, Field: "start", Got: s.FlowRate(start.Rate), Want: "1 mL/h or more", Rule: "R8", Pos: w.o.Start.Pos, Source: "Neff et al., Paediatr Anaesth 2001;11:561-565",
 			Message: "below 1 mL/h a syringe pump may take many minutes to begin delivering", Remedy: "purge the line on the pump before connecting, or use a weaker mixture"})
+	}
+	return true
+}
+
+// startWithin rounds the start rate down where the pump's nearest step would
+// carry it past a limit that the order keeps (rule R11).
+func (w *work) startWithin(part *InfusionPart) bool {
+	c := w.plan.Mixture.Concentration
+	row, err := w.rateScale(part.Rule, w.o.Start.Value, "start", w.o.Start.Pos)
+	if err != nil {
+		return w.sizeFault(err, "start", w.o.Start.Pos)
+	}
+	given := new(big.Rat).Mul(part.Start.Rate.Rat(), c.Rat())
+	if passed(row.ceilings(), row.value, given) == nil {
+		return true
+	}
+	part.Down = true
+	if part.Start, err = pump.SetNotAbove(w.o.Start.Value, part.per(), c, part.Step); err != nil {
+		return w.fault(err, "start", w.o.Start.Pos)
+	}
+	if part.Start.Rate.Rat().Sign() <= 0 {
+		return w.refuse(refusal.Reason{Code: refusal.RateBelowPump, Field: "start", Got: w.plan.Style.FlowRate(part.Start.Exact), Want: "at least the pump's step", Rule: "R8", Pos: w.o.Start.Pos,
+			Message: "below the limit there is no rate that the pump can be set to", Remedy: "use a weaker mixture"})
 	}
 	return true
 }

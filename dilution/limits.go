@@ -131,6 +131,26 @@ func (s scale) top() bound {
 	return bound{}
 }
 
+// ceilings are the figures that rounding must not pass: the highest stored, and
+// a soft limit that nobody has signed for.
+func (s scale) ceilings() []bound {
+	out := []bound{s.top()}
+	if s.softHigh.given && (s.acceptedBy == "" || s.acceptedReason == "") {
+		out = append(out, s.softHigh)
+	}
+	return out
+}
+
+// passed is the ceiling that wanted keeps and given does not, nil if none.
+func passed(ceilings []bound, wanted, given *big.Rat) *bound {
+	for i, c := range ceilings {
+		if c.given && wanted.Cmp(c.value) <= 0 && given.Cmp(c.value) > 0 {
+			return &ceilings[i]
+		}
+	}
+	return nil
+}
+
 // bottom is the lowest figure that the row stores.
 func (s scale) bottom() bound {
 	for _, b := range []bound{s.hardLow, s.usualLow, s.usualHigh} {

@@ -3,6 +3,7 @@ package dilution
 import (
 	"errors"
 	"fmt"
+	"math/big"
 	"strings"
 
 	"drawup/dilution/formulary"
@@ -201,7 +202,7 @@ func (w *work) draw(t target) bool {
 	if err != nil {
 		return w.fault(err, t.field, t.pos)
 	}
-	r, ok := w.measure(need, t.field, t.pos)
+	r, ok := w.measure(need, t.field, t.pos, w.ceiling(t))
 	if !ok {
 		return false
 	}
@@ -219,7 +220,7 @@ func (w *work) draw(t target) bool {
 }
 
 // measure finds the barrel for v and turns its errors into reasons (R8).
-func (w *work) measure(v quantity.Volume, field string, pos refusal.Pos) (syringe.Reading, bool) {
+func (w *work) measure(v quantity.Volume, field string, pos refusal.Pos, passes func(quantity.Volume) bool) (syringe.Reading, bool) {
 	s := w.plan.Style
 	r, err := syringe.Measure(v, w.site.barrels, w.site.smallest, w.site.tolerance)
 	var below *syringe.BelowSmallest
@@ -238,6 +239,12 @@ func (w *work) measure(v quantity.Volume, field string, pos refusal.Pos) (syring
 	case err != nil:
 		return r, w.fault(err, field, pos)
 	}
+	if passes(r.Volume) {
+		var ok bool
+		if r, ok = w.lowered(r, v, field, pos); !ok {
+			return r, false
+		}
+	}
 	if r.UnderFifth {
 		w.caution(refusal.Reason{Code: refusal.VolumeUnderFifth, Field: field, Got: s.Volume(r.Volume), Want: "a fifth of the barrel or more", Rule: "R8", Pos: pos,
 			Source:  "ISO 7886-1 tolerance table; compounding study of volumes under a fifth of the capacity (abstract)",
@@ -245,9 +252,52 @@ func (w *work) measure(v quantity.Volume, field string, pos refusal.Pos) (syring
 	}
 	if r.MovedPercent.Sign() != 0 {
 		w.caution(refusal.Reason{Code: refusal.VolumeOffGraduation, Field: field, Got: s.Volume(v), Want: s.Volume(r.Volume), Rule: "R2", Pos: pos,
-			Message: fmt.Sprintf("%s is moved to the nearest graduation, %s: %s %s", s.Volume(v), s.Volume(r.Volume), percentOf(s, r.MovedPercent), moreOrLess(r.MovedPercent.Sign()))})
+			Message: fmt.Sprintf("%s is moved to "+graduationWord(w.plan.Dose != nil && w.plan.Dose.Down)+", %s: %s %s", s.Volume(v), s.Volume(r.Volume), percentOf(s, r.MovedPercent), moreOrLess(r.MovedPercent.Sign()))})
 	}
 	return r, true
+}
+
+// graduationWord names the graduation that was taken.
+func graduationWord(lowered bool) string {
+	if lowered {
+		return "the graduation below, so that no limit is passed"
+	}
+	return "the nearest graduation"
+}
+
+// ceiling tells whether a drawn volume would give more than a limit allows,
+// where the ordered dose itself keeps it. It matters only where the syringe
+// holds just the dose.
+func (w *work) ceiling(t target) func(quantity.Volume) bool {
+	return func(v quantity.Volume) bool {
+		d := w.plan.Dose
+		if t.field != "dose" || d == nil {
+			return false
+		}
+		given, err := v.Holds(w.plan.Mixture.Strength)
+		return err == nil && passed(d.ceilings, d.Amount.Rat(), given.Rat()) != nil
+	}
+}
+
+// lowered takes the graduation below for a volume whose nearest one would pass
+// a limit (rule R11), if it is close enough (rule R8).
+func (w *work) lowered(r syringe.Reading, v quantity.Volume, field string, pos refusal.Pos) (syringe.Reading, bool) {
+	s := w.plan.Style
+	down, moved, err := v.ToStep(r.Barrel.Step(), quantity.Down)
+	if err != nil {
+		return r, w.fault(err, field, pos)
+	}
+	if new(big.Rat).Abs(moved).Cmp(w.site.tolerance.Rat()) > 0 || down.Cmp(w.site.smallest) < 0 {
+		return r, w.refuse(refusal.Reason{Code: refusal.RoundedPastLimit, Field: field, Got: s.Volume(r.Volume), Want: "a volume that keeps the limit", Rule: "R11", Pos: pos,
+			Message: fmt.Sprintf("the graduation nearest to %s, %s, gives more than the limit, and the one below, %s, is too far off", s.Volume(v), s.Volume(r.Volume), s.Volume(down)), Remedy: "order less, or a weaker mixture"})
+	}
+	low, err := r.Barrel.Read(down, w.site.smallest, w.site.tolerance)
+	if err != nil {
+		return r, w.fault(err, field, pos)
+	}
+	low.MovedPercent = moved
+	w.plan.Dose.Down = true
+	return low, true
 }
 
 func moreOrLess(sign int) string {

@@ -83,6 +83,11 @@ type DosePart struct {
 	Step      quantity.Volume
 	Delivered quantity.Amount
 	Rule      formulary.Rule[quantity.Dose]
+
+	// Down says that the graduation below was taken, because the nearest one
+	// would have passed a limit.
+	Down     bool
+	ceilings []bound // that the delivered dose must not pass by rounding
 }
 
 // An InfusionPart is how the pump is set.
@@ -92,6 +97,7 @@ type InfusionPart struct {
 	Surface quantity.BodySurfaceArea
 	Step    quantity.FlowRate
 	Start   pump.Setting
+	Down    bool         // the start rate was rounded down, because the nearest step passes a limit
 	Low     pump.Setting // ends of the range to titrate in
 	High    pump.Setting
 	Limit   pump.Setting // hard limit of the formulary, if it has one

@@ -306,6 +306,8 @@ func tooSmallToRead() map[string]string {
 	return map[string]string{
 		"adrenaline, bolus, push dose, IV: 5 microgram":        "0.5 mL of 10 micrograms/mL lies between the 0.2 mL marks of a 10 mL barrel",
 		"remifentanil, bolus, induction, IV: 0.5 microgram/kg": "about 1.1 mL of 20 micrograms/mL, between the same marks",
+		"remifentanil, bolus, induction, IV: 1 microgram/kg":   "it is the limit: the mark above passes it, the one below is too far off",
+		"suxamethonium, bolus, intubation, IM: 4 mg/kg":        "it is the limit: the mark above passes it, the one below is too far off, and heavier patients meet the absolute maximum",
 	}
 }
 

@@ -165,6 +165,9 @@ func askedBarrels(p dilution.Plan, add func(name, text string)) {
 	add(recheck.Method, m.Method.String())
 	if p.Dose != nil {
 		add(recheck.DoseStep, s.Volume(p.Dose.Step))
+		if p.Dose.Down {
+			add(recheck.DoseRounding, "down")
+		}
 		add(recheck.DoseWeightBy, weightWord(p.Dose.Weight.Given(), p.Dose.Surface.Given(), p.Order.DoseBy, p.Dose.Rule.By))
 	}
 }
@@ -210,6 +213,9 @@ func askedRates(p dilution.Plan, add func(name, text string)) {
 	}
 	part := p.Infusion
 	add(recheck.StartDose, typedDose(p.Order.Start.Text))
+	if part.Down {
+		add(recheck.RateRounding, "down")
+	}
 	add(recheck.RateWeightBy, weightWord(part.Weight.Given(), part.Surface.Given(), p.Order.RateBy, part.Rule.By))
 	for i, rung := range part.Ladder {
 		add(recheck.Row(recheck.Ladder, i+1, "dose"), p.Style.DoseRate(rung.Dose))

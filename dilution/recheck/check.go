@@ -131,7 +131,7 @@ func (c *check) honoured(name, text string) *objection {
 		return nil
 	}
 	switch name {
-	case AmountInSyringe, Concentration, ContainerCount, Age, Sex, Prepared:
+	case AmountInSyringe, Concentration, ContainerCount, Age, Sex, Prepared, UseHours:
 		return nil
 	case UseBy, EmptyAt:
 		return sameMoment(c.asked[name][0], text)

@@ -140,7 +140,7 @@ func doseAmount(c *check, _ int, r reading) *objection { return short(r, c.exact
 func doseVolume(c *check, _ int, r reading) *objection {
 	step, dose := c.get(DoseStep), c.exactDose()
 	strength := c.counted(c.exactConcentration(), drugKind(dose))
-	return onStep(r, dose.over(strength), step, halfUp)
+	return onStep(r, dose.over(strength), step, c.roundingOf(DoseRounding))
 }
 
 func doseDelivered(c *check, _ int, r reading) *objection {

@@ -9,6 +9,20 @@ func rateOf(dose string, how rounding) rule {
 	})
 }
 
+// startRate is half up, or down where a limit would have been passed.
+func startRate(c *check, _ int, r reading) *objection {
+	return c.rateFrom(c.get(StartDose), r, c.roundingOf(RateRounding))
+}
+
+// roundingOf is how a dose or rate was rounded: down is the safe side, so it
+// needs no more than to be told.
+func (c *check) roundingOf(name string) rounding {
+	if c.was(name) && c.asked[name][0] == "down" {
+		return downward
+	}
+	return halfUp
+}
+
 // rateFrom compares in the dose's own kind: rate x concentration against dose
 // x weight, the step likewise.
 func (c *check) rateFrom(dose value, r reading, how rounding) *objection {

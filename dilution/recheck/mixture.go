@@ -181,7 +181,7 @@ func (c *check) holdsTheDose(r reading) *objection {
 	}
 	step := c.get(DrugStep)
 	stock := c.counted(c.exactStrength(), drugKind(c.get(Dose)))
-	return onStep(r, c.exactDose().over(stock), step, halfUp)
+	return onStep(r, c.exactDose().over(stock), step, c.roundingOf(DoseRounding))
 }
 
 func (c *check) stepFault(r reading) bool {

@@ -63,7 +63,7 @@ func allRules() map[string]rule {
 		DoseVolume: measured(doseVolume), DoseStep: stocked(DoseStep), DoseDelivered: measured(doseDelivered),
 
 		RateWeightBy: rateWeightBy, RateWeight: measured(rateWeight), RateStep: asTyped(RateStep),
-		StartDose: asTyped(StartDose), StartRate: rateOf(StartDose, halfUp), StartDelivered: measured(startDelivered),
+		StartDose: asTyped(StartDose), StartRate: measured(startRate), StartDelivered: measured(startDelivered),
 		LowDose: asTyped(LowDose), LowRate: rateOf(LowDose, upward), HighDose: asTyped(HighDose), HighRate: rateOf(HighDose, downward),
 		LimitDose: asTyped(LimitDose), LimitRate: rateOf(LimitDose, downward),
 		RunTime: runTime, EmptyAt: emptyAt, EmptyOffset: emptyOffset,
@@ -72,7 +72,7 @@ func allRules() map[string]rule {
 		Slip + ".*.kind": slipKind, Slip + ".*.rate": measured(slipRate),
 
 		Prepared: prepared, PreparedOffset: preparedOffset, UseHours: useHours, UseBy: useBy, UseByOffset: useByOffset,
-		Code: code, ATC: atc, Serial: serial, Typed: typedOnly, Stock: stock,
+		Code: code, ATC: atc, Serial: serial, Typed: typedOnly, DoseRounding: typedOnly, RateRounding: typedOnly, Stock: stock,
 
 		DrugWanted: measured(drugWanted), DrugMoved: drugMoved, DoseWanted: measured(doseWanted), DoseMoved: doseMoved,
 		StartFlow: measured(startFlow), StartMoved: startMoved,

@@ -162,6 +162,42 @@ func TestUseByOverClockChange(t *testing.T) {
 	disagreesAt(t, "offset misread", build("01 Dec 2026 07:30", "+1:00", "24 h", "02 Dec 2026 07:30", "+01:00"), PreparedOffset, UseBy)
 }
 
+// The span until the use-by time is printed in hours and minutes; every span of
+// an order or a formulary that is whole minutes has such a form. The moments
+// are counted by hand.
+func TestUseHoursWords(t *testing.T) {
+	build := func(hours, until string) Stated {
+		return stated(t, "", "", "prepared = 01 Dec 2026 07:30\nprepared.offset = +00:00\nuse.hours = "+hours+"\nuse.by = "+until+"\nuse.by.offset = +00:00")
+	}
+	good := map[string]string{
+		"1 min": "01 Dec 2026 07:31", "45 min": "01 Dec 2026 08:15", "1 h": "01 Dec 2026 08:30", "1 h 30 min": "01 Dec 2026 09:00",
+		"2 h 14 min": "01 Dec 2026 09:44", "12 h": "01 Dec 2026 19:30", "720 h": "31 Dec 2026 07:30", "1,000 h": "11 Jan 2027 23:30",
+	}
+	for hours, until := range good {
+		agrees(t, hours, build(hours, until))
+		for _, altered := range alterations(UseHours, hours) {
+			disagreesAt(t, hours+" altered to "+altered, build(altered, until), UseBy)
+		}
+	}
+	for _, hours := range []string{"90 min", "1.5 h", "1 h 0 min", "0 h 30 min", "0 min", "1 h 60 min", "30 min 1 h", "1 day", "1 h 30", "1000 h"} {
+		disagreesAt(t, hours, build(hours, "01 Dec 2026 09:00"), UseHours, UseBy)
+	}
+}
+
+// What was typed for the span is held against it in either form of words.
+func TestUseHoursAsTyped(t *testing.T) {
+	build := func(typed string) Stated {
+		s := stated(t, "", "", "prepared = 01 Dec 2026 07:30\nprepared.offset = +00:00\nuse.hours = 1 h 30 min\nuse.by = 01 Dec 2026 09:00\nuse.by.offset = +00:00")
+		s.Asked = []Figure{{Paper: "order", Name: UseHours, Text: typed}}
+		return s
+	}
+	agrees(t, "typed as printed", build("1 h 30 min"))
+	agrees(t, "typed in minutes", build("90 min"))
+	disagreesAt(t, "typed otherwise", build("91 min"), UseHours)
+	disagreesAt(t, "typed in other parts", build("1 h 31 min"), UseHours)
+	disagreesAt(t, "typed as a volume", build("90 mL"), UseHours)
+}
+
 func TestRunTimeWords(t *testing.T) {
 	good := map[string]int64{"9 h 25 min": 565, "45 min": 45, "9 h": 540, "0 min": 0, "1,000 h 1 min": 60001}
 	for text, want := range good {

@@ -128,7 +128,7 @@ const (
 	// Time.
 	Prepared       = "prepared"        // date and time, as the number style writes it
 	PreparedOffset = "prepared.offset" // "+01:00"
-	UseHours       = "use.hours"       // "24 h", "30 min"
+	UseHours       = "use.hours"       // "24 h", "30 min", "1 h 30 min"
 	UseBy          = "use.by"          // prepared + use.hours, absolute hours (R18)
 	UseByOffset    = "use.by.offset"
 
@@ -140,6 +140,14 @@ const (
 	// Stock is the name of the blank labels, as typed; where it is printed, or a
 	// sentence repeats it, it must be in Asked.
 	Stock = "stock"
+)
+
+// How a dose or the start rate was rounded, in Asked only: "down" when the
+// nearest graduation or pump step would have passed a limit, so that the one
+// below was taken; half up otherwise. No figure has these names.
+const (
+	DoseRounding = "dose.rounding"
+	RateRounding = "rate.rounding"
 )
 
 // Values before they were rounded, and what the rounding lost (rule R2).

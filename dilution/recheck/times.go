@@ -76,13 +76,11 @@ func (c *check) instant(name, offset string) (int64, string) {
 	return t.Unix()/60 - minutes, ""
 }
 
-// spanMinutes reads "24 h" or "30 min" as printed.
-func spanMinutes(text string) (value, string) {
-	r, err := readPrinted(text)
-	if err != nil || r.whole.dim != one(inTime) || !r.whole.isMultiple(whole(1)) {
-		return value{}, "needs use.hours, which cannot be read as whole minutes"
-	}
-	return r.whole, ""
+// spanMinutes reads "24 h", "30 min" or "1 h 30 min" as printed. A span of
+// nothing is no span.
+func spanMinutes(text string) (value, bool) {
+	minutes, ok := readRun(text)
+	return minutes, ok && minutes.sign() > 0
 }
 
 // spans says whether a span reaches from one instant to the other.
@@ -114,9 +112,9 @@ func useBy(c *check, _ int, text string) *objection {
 	if !ok {
 		return object("", "needs use.hours, which is not printed")
 	}
-	minutes, lack := spanMinutes(hours)
-	if lack != "" {
-		return object("", lack)
+	minutes, ok := spanMinutes(hours)
+	if !ok {
+		return object("", "needs use.hours, which cannot be read as hours and minutes")
 	}
 	return c.spans(Prepared, PreparedOffset, UseBy, UseByOffset, minutes)
 }
@@ -178,13 +176,23 @@ func emptyOffset(c *check, _ int, text string) *objection {
 }
 
 func useHours(c *check, _ int, text string) *objection {
-	if _, lack := spanMinutes(text); lack != "" {
-		return object("", "cannot be read as whole minutes")
+	minutes, ok := spanMinutes(text)
+	if !ok {
+		return object("", "cannot be read as hours and minutes")
 	}
-	if c.was(UseHours) {
-		return asTyped(UseHours)(c, 0, text)
+	if !c.was(UseHours) {
+		return c.partOf(UseHours, text, UseBy)
 	}
-	return c.partOf(UseHours, text, UseBy)
+	typed, ok := spanMinutes(c.asked[UseHours][0])
+	if !ok {
+		typed = c.typed(UseHours)
+	}
+	return exact(spanReading(minutes), typed, "typed as")
+}
+
+// spanReading is a span of minutes as a reading in minutes.
+func spanReading(minutes value) reading {
+	return reading{number: minutes.bare(one(inTime)), unit: whole(1).ofKind(one(inTime)), whole: minutes}
 }
 
 // readRun reads "9 h 25 min", "9 h" or "45 min" in minutes; an hour is never
@@ -225,9 +233,7 @@ func runTime(c *check, _ int, text string) *objection {
 	if !ok {
 		return object("", "cannot be read as hours and minutes")
 	}
-	minute := whole(1).ofKind(one(inTime))
-	r := reading{number: minutes.bare(one(inTime)), unit: minute, whole: minutes}
-	return onStep(r, c.get(FinalVolume).over(c.get(StartRate)), minute, downward)
+	return onStep(spanReading(minutes), c.get(FinalVolume).over(c.get(StartRate)), whole(1).ofKind(one(inTime)), downward)
 }
 
 func emptyAt(c *check, _ int, text string) *objection {

@@ -485,10 +485,8 @@ func (p *truth) times() {
 	from := time.Date(2026, 1, 1, 0, p.r.Intn(60*24*700), 0, 0, zone(first))
 	p.print(Prepared, from.Format(layout))
 	p.print(PreparedOffset, first)
-	minutes, text := 30, "30 min"
-	if p.r.Intn(3) > 0 {
-		minutes, text = 24*60, "24 h"
-	}
+	text := p.pick("30 min", "24 h", "1 h 30 min", "2 h 14 min", "45 min", "12 h")
+	minutes := map[string]int{"30 min": 30, "24 h": 1440, "1 h 30 min": 90, "2 h 14 min": 134, "45 min": 45, "12 h": 720}[text]
 	p.print(UseHours, text)
 	until := from.Add(time.Duration(minutes) * time.Minute).In(zone(second))
 	p.print(UseBy, until.Format(layout))

@@ -42,6 +42,7 @@ func limitEntries() []Entry {
 		warns(RateBelowSoft, Limits, "R10", "The dose rate is below what is usual."),
 		stops(SlipThousand, Limits, "R10", "The figure is far outside the limits, as when a unit is written for another."),
 		stops(SlipTen, Limits, "R10", "The figure is outside the limits by a tenfold or more, as when a decimal point slips."),
+		stops(RoundedPastLimit, Limits, "R11", "A dose or rate within its limit would pass it on the nearest graduation or pump step."),
 		stops(SoftLimitNotSigned, Limits, "R11", "The figure is above the soft limit and nobody has signed for it."),
 		stops(ContradictoryAmounts, Limits, "R5", "Amounts, volumes and doses of one syringe cannot all hold."),
 	}

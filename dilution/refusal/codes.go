@@ -85,6 +85,7 @@ const (
 	SlipThousand           Code = "thousandfold-slip"
 	SlipTen                Code = "tenfold-slip"
 	IndicationUnclear      Code = "indication-unclear"
+	RoundedPastLimit       Code = "limit-passed-by-rounding"
 	SoftLimitNotSigned     Code = "soft-limit-not-acknowledged"
 	Unverified             Code = "figure-unverified"
 	AssayAssumed           Code = "assay-limits-assumed"
