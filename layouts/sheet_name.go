@@ -9,8 +9,9 @@ import (
 )
 
 // name is the head of a syringe: number in black, a small band of the class
-// colour, drug and concentration large, the class word and the rest below. The
-// colour says nothing that the word does not say (R16).
+// colour, the drug large and at the right, as large, the concentration or what
+// to draw; the class word and the rest below. The colour says nothing that the
+// word does not say (R16).
 func (s setter) name(b sheets.Name) []slab {
 	size := ink.Micrometre(5600)
 	if b.Large {
@@ -30,7 +31,10 @@ func (s setter) name(b sheets.Name) []slab {
 	out.marks = append(out.marks, ink.Filled(0, y, square, square, ink.Black))
 	out.marks = append(out.marks, whitened(digits.marks((square-digits.width(number))/2, y+(square-digits.lead())/2, number))...)
 	out.marks = append(out.marks, classBand(b.Class, square+1200, y, 3200, square)...)
-	drug, conc := labels.Words(b.Drug), b.Concentration
+	drug, large := labels.Words(b.Drug), b.Concentration
+	if len(b.Act) > 0 {
+		large = b.Act
+	}
 	top := y - 200
 	nameHand := h
 	rows := s.rows(drug, &nameHand, s.width-left)
@@ -40,15 +44,20 @@ func (s setter) name(b sheets.Name) []slab {
 		out.marks = append(out.marks, nameHand.marks(left, top, r)...)
 		top += nameHand.lead()
 	}
-	if len(conc) > 0 {
-		w := h.width(conc)
+	if len(large) > 0 {
+		w := h.width(large)
 		if len(rows) == 1 && left+wide+4000+w <= s.width {
-			out.marks = append(out.marks, h.marks(s.width-w, text-200, conc)...)
+			out.marks = append(out.marks, h.marks(s.width-w, text-200, large)...)
 		} else {
-			c := s.lines(conc, h, left, s.width-left)
+			c := s.lines(large, h, left, s.width-left)
 			out.marks = append(out.marks, c.at(0, top)...)
 			top += c.h
 		}
+	}
+	if len(b.Act) > 0 {
+		second := s.second(b, left)
+		out.marks = append(out.marks, second.at(0, top)...)
+		top += second.h
 	}
 	word := bold(s.f.small).narrow()
 	x := left
@@ -60,6 +69,20 @@ func (s setter) name(b sheets.Name) []slab {
 	out.marks = append(out.marks, below.at(0, top-200)...)
 	out.h = max(y+square, top+max(below.h, word.lead())) + 700
 	return []slab{out}
+}
+
+// second is the row below the drug and what to draw: the concentration at the
+// left, what becomes of the drawn volume at the right, or below each other
+// where they are too wide.
+func (s setter) second(b sheets.Name, left ink.Micrometre) slab {
+	h := bold(s.f.body + 300)
+	w := h.width(b.Then)
+	if left+h.width(b.Concentration)+4000+w <= s.width {
+		out := slab{h: h.lead() + 400}
+		out.marks = append(h.marks(left, 0, b.Concentration), h.marks(s.width-w, 0, b.Then)...)
+		return out
+	}
+	return stacked([]slab{s.lines(b.Concentration, h, left, s.width-left), s.lines(b.Then, h, left, s.width-left)})
 }
 
 func rows0(rows []labels.Line) labels.Line {

@@ -1,7 +1,6 @@
 package sheets
 
 import (
-	"fmt"
 	"math/big"
 	"strings"
 
@@ -18,7 +17,7 @@ func CheckSheets(list dilution.List, facts []labels.Facts, m labels.Making) []Sh
 	var out []Sheet
 	for _, s := range scribesOf(list, facts, PaperCheck) {
 		out = append(out,
-			Sheet{Paper: PaperCheck, Size: A4, Title: "Check sheet: the second person", Note: fmt.Sprintf("syringe %d", s.p.Number), Of: s.of(),
+			Sheet{Paper: PaperCheck, Size: A4, Title: "Check sheet: the second person", Note: s.numbered(), Of: s.of(),
 				Bookmark: s.of() + ", second person", Syringe: s.p.Number, Foot: footSaying(list, m), Parts: s.blindParts()},
 			Sheet{Paper: PaperCheck, Size: A4, Title: "Check sheet: the preparer's figures", Note: "open only after the page before is filled in", Of: s.of(),
 				Bookmark: s.of() + ", preparer", Syringe: s.p.Number, Foot: footSaying(list, m), Parts: s.openParts(list)})
@@ -179,8 +178,12 @@ func (s scribe) looks() []string {
 	if s.p.Presentation.Form == "emulsion" {
 		look = "the content is even and white, nothing has separated"
 	}
+	onRight := "the label is on the right syringe, and the scale can be read"
+	if s.bag() {
+		onRight = "the label is on the right bag, and its own print can be read"
+	}
 	out := []string{"label read aloud against the " + s.p.Presentation.Container + ": drug, concentration, use-by", look,
-		"the label is on the right syringe, and the scale can be read", "the patient on the order is the patient on the label"}
+		onRight, "the patient on the order is the patient on the label"}
 	if s.p.Infusion != nil {
 		out = append(out, "the pump shows drug, concentration, weight and dose rate of the order")
 	}

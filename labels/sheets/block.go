@@ -26,6 +26,7 @@ type Name struct {
 	Drug          string // "Etomidate"
 	Class         labels.Class
 	Concentration labels.Line // nil on a blind page
+	Act, Then     labels.Line // on a draw-up sheet: what to draw, large in place of the concentration, and what becomes of it
 	Below         labels.Line // presentation, patient
 	Large         bool        // on a pump card
 }
@@ -158,9 +159,9 @@ type Beside struct {
 // Lines is the heading.
 func (b Heading) Lines() []Owned { return own(b.Line) }
 
-// Lines is the number, name, concentration, class word and the line below.
+// Lines is the name, what to do, concentration, class word and the line below.
 func (b Name) Lines() []Owned {
-	return own(labels.Words(b.Drug), b.Concentration, labels.Words(b.Class.Word), b.Below)
+	return own(labels.Words(b.Drug), b.Act, b.Concentration, b.Then, labels.Words(b.Class.Word), b.Below)
 }
 
 // Lines is the paragraph.

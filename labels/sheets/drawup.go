@@ -179,9 +179,40 @@ func (s scribe) drawUpPart(list dilution.List, sources *sourceList) Part {
 		right = append(right, Cautions{List: c})
 	}
 	return Part{Syringe: s.p.Number, Blocks: []Block{
-		s.name(s.say(s.concentration()), below, false),
+		s.drawName(below),
 		Beside{LeftShare: 52, Left: []Block{steps}, Right: right},
 	}}
+}
+
+// drawName is the head of the syringe with the volume to draw large, since the
+// preparer needs it first, and the concentration below the name.
+func (s scribe) drawName(below labels.Line) Name {
+	name := s.name(s.say(s.concentration()), below, false)
+	draw := "draw {drug.volume}"
+	if s.p.Presentation.Powder() {
+		draw = "add {powder.added}"
+		if s.p.Mixture.Containers > 1 {
+			draw += " to each"
+		}
+		draw += ", draw {drug.volume}"
+	}
+	name.Act, name.Then = s.say(draw), s.say(s.filling())
+	return name
+}
+
+// filling is the pattern of what becomes of the drawn volume (rule R5).
+func (s scribe) filling() string {
+	switch s.p.Mixture.Method {
+	case dilution.Neat:
+		return "neat"
+	case dilution.MakeUpTo:
+		return "make up to {final.volume}"
+	case dilution.AddTo:
+		return "add to the full bag: {final.volume} in all"
+	case dilution.WithdrawThenAdd:
+		return "first withdraw as much from the bag; {final.volume} in all"
+	}
+	return "{method}" // not known: the second route stops it
 }
 
 // results are what the syringe holds when the steps are done.

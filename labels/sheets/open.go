@@ -1,6 +1,8 @@
 package sheets
 
 import (
+	"strings"
+
 	"drawup/dilution"
 	"drawup/dilution/body"
 	"drawup/dilution/formulary"
@@ -105,11 +107,24 @@ func (t *limitTable) add(what string, figure labels.Line, from string) {
 	t.table.Rows = append(t.table.Rows, Row{Cells: []labels.Line{labels.Words(what), figure, labels.Words(from)}})
 }
 
-// limit adds one limit as the formulary writes it; nothing for a blank.
-func (t *limitTable) limit(what, text string, source formulary.Source, unverified bool) {
-	if text != "" {
-		t.add(what, t.s.bound(text), t.sources.mark(source, unverified))
+// addLimit adds one limit in the house style (rule R14), behind a word that
+// says which way it binds; nothing for a blank.
+func addLimit[T any](t *limitTable, what, binds string, fig formulary.Figure[T], print func(T) string) {
+	if fig.Given() {
+		t.add(what, t.s.bound(binds+styled(fig.Text, print(fig.Value))), t.sources.mark(fig.Source, fig.Unverified))
 	}
+}
+
+// styled is a limit as the house style prints it. A limit is never rounded: one
+// with more digits than the style prints exactly, or that is a word, stays as
+// the formulary writes it.
+func styled(raw, printed string) string {
+	number, _, _ := strings.Cut(raw, " ")
+	digits := strings.Trim(strings.ReplaceAll(number, ".", ""), "0")
+	if printed == "" || len(digits) > 4 {
+		return raw
+	}
+	return printed
 }
 
 // words adds words of the formulary.
@@ -121,21 +136,20 @@ func (t *limitTable) words(what, text string, source formulary.Source, unverifie
 func (s scribe) limits(sources *sourceList) Table {
 	t := &limitTable{s: s, sources: sources, table: Table{Small: true, Columns: []Column{{Head: "limit", Share: 62}, {Head: "figure", Share: 58}, {Head: "from", Share: 60}}}}
 	if d := s.p.Dose; d != nil {
-		addLimits(t, "dose", d.Rule)
-		most := d.Rule.TotalMax
-		t.limit("dose, most at once", most.Text, most.Source, most.Unverified)
+		addLimits(t, "dose", d.Rule, s.p.Style.Dose)
+		addLimit(t, "dose, most at once", upTo, d.Rule.TotalMax, s.p.Style.Amount)
 	}
 	use := "bolus"
 	if s.p.Order.Infusion {
 		use = "infusion"
 	}
 	if s.p.Infusion != nil {
-		addLimits(t, "dose rate", s.p.Infusion.Rule)
+		addLimits(t, "dose rate", s.p.Infusion.Rule, s.p.Style.DoseRate)
 	}
 	for _, b := range s.bounds(use) {
 		what := "concentration, " + use + ", " + b.Line + " line"
-		t.limit(what+", lowest", b.Low.Text, b.Low.Source, b.Low.Unverified)
-		t.limit(what+", highest", b.High.Text, b.High.Source, b.High.Unverified)
+		addLimit(t, what+", lowest", from, b.Low, s.p.Style.Concentration)
+		addLimit(t, what+", highest", upTo, b.High, s.p.Style.Concentration)
 	}
 	s.packLimits(t)
 	return t.table
@@ -146,7 +160,7 @@ func (s scribe) limits(sources *sourceList) Table {
 func (s scribe) packLimits(t *limitTable) {
 	pr := s.p.Presentation
 	t.words("contents of the container", pr.ID, pr.Source, pr.Unverified)
-	t.limit("volume of the powder itself", pr.Displacement.Text, pr.Displacement.Source, pr.Displacement.Unverified)
+	addLimit(t, "volume of the powder itself", "", pr.Displacement, s.p.Style.Volume)
 	for _, d := range pr.Diluents {
 		if d.Name == s.p.Mixture.Diluent {
 			t.words("diluent", d.Name, d.Source, d.Unverified)
@@ -180,7 +194,7 @@ func (s scribe) bounds(use string) []formulary.Bounds {
 
 // addLimits adds the figures of one row of limits; where no hard limit is
 // stored it says so.
-func addLimits[T any](t *limitTable, what string, r formulary.Rule[T]) {
+func addLimits[T any](t *limitTable, what string, r formulary.Rule[T], print func(T) string) {
 	by := r.By.String() + " weight"
 	switch r.By {
 	case body.Surface:
@@ -189,13 +203,13 @@ func addLimits[T any](t *limitTable, what string, r formulary.Rule[T]) {
 		by = "no weight"
 	case body.Actual, body.Ideal, body.Adjusted, body.Lean:
 	}
-	from := "no source"
+	source := "no source"
 	if r.BySource.Title != "" {
-		from = t.sources.mark(r.BySource, false)
+		source = t.sources.mark(r.BySource, false)
 	}
-	t.add(what+" for", t.s.said(ruleName(r.For, r.Ages())), "goes by "+by+", "+from)
+	t.add(what+" for", t.s.said(ruleName(r.For, r.Ages())), "goes by "+by+", "+source)
 	for _, x := range limitRows(r) {
-		t.limit(what+", "+x.name, x.fig.Text, x.fig.Source, x.fig.Unverified)
+		addLimit(t, what+", "+x.name, x.binds, x.fig, print)
 	}
 	if !r.HardHigh.Given() {
 		t.add(what+", hard highest", labels.Words("none stored"), "the highest stored figure is the limit")

@@ -19,7 +19,7 @@ func PumpCards(list dilution.List, facts []labels.Facts, m labels.Making) []Shee
 		if s.p.Infusion == nil {
 			continue
 		}
-		out = append(out, Sheet{Paper: PaperPump, Size: A5, Title: "Pump card", Note: fmt.Sprintf("syringe %d", s.p.Number), Of: s.of(),
+		out = append(out, Sheet{Paper: PaperPump, Size: A5, Title: "Pump card", Note: s.numbered(), Of: s.of(),
 			Bookmark: s.of(), Syringe: s.p.Number, OnePage: true, Foot: footSaying(list, m), Parts: s.pumpParts(list)})
 	}
 	return out

@@ -61,6 +61,9 @@ func (s scribe) drug() string { return s.p.Drug.LabelName(s.p.Style) }
 // bag reports whether the mixture is made in a bag, not in a syringe.
 func (s scribe) bag() bool { return s.p.Mixture.InBag }
 
+// numbered is what a paper is of, by its number in making order: "bag 3".
+func (s scribe) numbered() string { return fmt.Sprintf("%s %d", s.vessel(), s.p.Number) }
+
 // contents is the pattern of what is in one container as supplied.
 func (s scribe) contents() string {
 	second := ""
@@ -94,7 +97,7 @@ func (s scribe) patient() string {
 	return out
 }
 
-// name is the head of the syringe.
+// name is the head of the syringe with its concentration large.
 func (s scribe) name(conc labels.Line, below labels.Line, large bool) Name {
 	class, _ := labels.ClassOf(s.p.Drug.Class) // no class, no band: the label itself is refused then
 	drug := labels.Capital(s.drug())

@@ -11,13 +11,20 @@ import (
 
 // A limitRow is one figure of a row of limits under its name.
 type limitRow[T any] struct {
-	name string
-	fig  formulary.Figure[T]
+	name, binds string
+	fig         formulary.Figure[T]
 }
+
+// Which way a limit binds.
+const (
+	from = "from "
+	upTo = "up to "
+)
 
 // limitRows are the figures of a row of limits, from the lowest to the highest.
 func limitRows[T any](r formulary.Rule[T]) []limitRow[T] {
-	return []limitRow[T]{{"hard lowest", r.HardLow}, {"usual lowest", r.UsualLow}, {"usual highest", r.UsualHigh}, {"soft highest", r.SoftHigh}, {"hard highest", r.HardHigh}}
+	return []limitRow[T]{{"hard lowest", from, r.HardLow}, {"usual lowest", from, r.UsualLow}, {"usual highest", upTo, r.UsualHigh},
+		{"soft highest", upTo, r.SoftHigh}, {"hard highest", upTo, r.HardHigh}}
 }
 
 // working are the steps of the sum with what each rounding lost (rule R2).
@@ -50,7 +57,11 @@ func (s scribe) working() []labels.Line {
 	s.doseWorking(add)
 	s.rateWorking(add)
 	add(s.say("balance: {container.count} of {container.amount} taken; {amount} in it and {left.amount} ({left.volume}) left over"))
-	add(joined(s.say("interval: plus or minus {interval.percent}, {interval.low} to {interval.high}; "), s.largest()))
+	assumed := ""
+	if s.p.Mixture.AssayAssumed {
+		assumed = ", assumed"
+	}
+	add(joined(s.say("interval: plus or minus {interval.percent}, {interval.low} to {interval.high}; assay limits plus or minus {assay}"+assumed+"; "), s.largest()))
 	add(joined(s.say("use by: {prepared} ({prepared.offset} from UTC) and {use.hours} is {use.by} ({use.by.offset}); "), s.won(), labels.Words(" ends first ("+s.p.UseBy.Source+")")))
 	return out
 }
@@ -120,14 +131,12 @@ func (s scribe) rateWorking(add func(labels.Line)) {
 	add(s.say("time: {final.volume} at {start.rate} last {run.time}, to {empty.at}"))
 }
 
-// largest names what the interval comes from most (rule R9).
+// largest names what the interval comes from most (rule R9). The assay itself
+// stands beside the interval whatever is largest: without it nobody could work
+// the interval again.
 func (s scribe) largest() labels.Line {
 	m := s.p.Mixture
-	best, name := m.Assay.Rat(), "the assay limits of the container"
-	if m.AssayAssumed {
-		name += ", which are assumed"
-	}
-	pattern := "most of it from " + name + ", {assay}"
+	best, pattern := m.Assay.Rat(), "most of it from the assay"
 	if m.Method == dilution.Neat {
 		return s.say(pattern)
 	}
