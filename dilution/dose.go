@@ -157,6 +157,7 @@ func (w *work) pickDose() bool {
 		w.add(r)
 	}
 	w.unlikeWeight(w.o.DoseBy.Given(), w.o.DoseBy.Value, best.Rule.By, best.Rule.BySource, w.o.DoseBy.Pos)
+	w.takenWeight(w.o.DoseBy.Given(), best.By, best.Weight, best.Rule.BySource, w.o.Dose.Pos)
 	w.weightNotes(best.By)
 	return w.doseOK
 }
@@ -333,6 +334,9 @@ func (w *work) scalar(basis quantity.Basis, by body.Kind) (quantity.BodyWeight, 
 		if w.fixed != nil && w.fixed.Weight.Given() {
 			return w.fixed.Weight, quantity.BodySurfaceArea{}, by, nil
 		}
+		if w.fixed != nil {
+			return quantity.BodyWeight{}, quantity.BodySurfaceArea{}, by, &body.MissingError{Equation: "a limit per kg by " + by.String() + " weight", What: body.NeedWeight}
+		}
 		weight, err := w.size.Used(by)
 		return weight, quantity.BodySurfaceArea{}, by, err
 	case quantity.PerSquareMetre:
@@ -363,6 +367,17 @@ func (w *work) unlikeWeight(given bool, ordered, row body.Kind, source formulary
 	}
 	w.caution(refusal.Reason{Code: refusal.WeightBasisUnlike, Field: "dose", Got: scalarWord(ordered), Want: scalarWord(row), Rule: "R3", Source: source.Title, Pos: pos,
 		Message: fmt.Sprintf("the order goes by %s, the formulary by %s; the limits were checked as absolute amounts", scalarWord(ordered), scalarWord(row))})
+}
+
+// takenWeight cautions when a dose per kg names no weight and the formulary's
+// choice is another than the actual one: the preparer has to see it.
+func (w *work) takenWeight(named bool, by body.Kind, weight quantity.BodyWeight, source formulary.Source, pos refusal.Pos) {
+	if named || w.fixed != nil || !weight.Given() || by == body.Actual {
+		return
+	}
+	w.caution(refusal.Reason{Code: refusal.WeightFromFormulary, Field: "dose", Got: "no weight named", Want: scalarWord(by), Rule: "R3", Source: source.Title, Pos: pos,
+		Message: fmt.Sprintf("the order does not say which weight the dose goes by; the formulary's %s, %s, is taken, not the actual one", scalarWord(by), w.plan.Style.BodyWeight(weight)),
+		Remedy:  "write the word after the dose, such as \"mg/kg " + by.String() + "\""})
 }
 
 // scalarWord is what a dose goes by, in words.

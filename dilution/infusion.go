@@ -39,6 +39,7 @@ func (w *work) infusion() bool {
 	}
 	w.plan.Infusion = part
 	w.unlikeWeight(w.o.RateBy.Given(), w.o.RateBy.Value, row.By, row.BySource, w.o.RateBy.Pos)
+	w.takenWeight(w.o.RateBy.Given(), part.By, part.Weight, row.BySource, w.o.Start.Pos)
 	w.weightNotes(part.By)
 	return w.setPump(part) && w.setRange(part) && w.extras(part)
 }

@@ -31,9 +31,16 @@ type Quick struct {
 	Style         quantity.Style
 }
 
+// QuickLimits is what the row of limits says that a quick sum was held against.
+type QuickLimits struct {
+	By  body.Kind         // the weight that an order would go by; None or 0 for none
+	Top quantity.DoseRate // the highest dose rate stored, if one was checked
+}
+
 // Check holds q against f. It returns every refusal and caution; an empty list
 // means that all limits that could be checked allow it.
-func (q Quick) Check(f *formulary.Formulary) refusal.List {
+func (q Quick) Check(f *formulary.Formulary) (refusal.List, QuickLimits) {
+	var limits QuickLimits
 	w := &work{f: f, o: q.order(), fixed: &q}
 	w.size = body.Size{Age: q.Age, Weight: q.Weight}
 	w.plan = Plan{Order: w.o, Size: w.size, Style: q.Style, Route: "IV"}
@@ -41,7 +48,7 @@ func (q Quick) Check(f *formulary.Formulary) refusal.List {
 		w.plan.Route = q.Route
 	}
 	if !w.findDrug() {
-		return w.reasons
+		return w.reasons, limits
 	}
 	if q.Concentration.Given() {
 		w.plan.Mixture.Concentration = q.Concentration
@@ -52,16 +59,30 @@ func (q Quick) Check(f *formulary.Formulary) refusal.List {
 	}
 	switch {
 	case q.Dose.Given():
-		w.pickDose()
+		if w.pickDose() {
+			limits.By = w.plan.Dose.Rule.By
+		}
 	case q.Rate.Given():
 		if rows, ok := fittingRows(w, w.plan.Drug.Rates, "dose rate"); ok {
-			w.pickRate(rows)
+			if row, ok := w.pickRate(rows); ok {
+				limits = QuickLimits{row.By, topOf(row)}
+			}
 		}
 	}
 	for i := range w.reasons {
 		w.reasons[i].Syringe = 0
 	}
-	return w.reasons
+	return w.reasons, limits
+}
+
+// topOf is the highest dose rate that a row stores.
+func topOf(row formulary.Rule[quantity.DoseRate]) quantity.DoseRate {
+	for _, f := range []formulary.Figure[quantity.DoseRate]{row.HardHigh, row.SoftHigh, row.UsualHigh} {
+		if f.Given() {
+			return f.Value
+		}
+	}
+	return quantity.DoseRate{}
 }
 
 // order is q in the words of an order.

@@ -65,6 +65,9 @@ func FromPlan(p dilution.Plan, w Facts, m Making) (Label, error) {
 	}
 	if p.Dose != nil {
 		l.Dose = doseLine(p, w)
+		if p.Dose.Weight.Given() || p.Dose.Surface.Given() {
+			l.Patient = p.Patient.ID.Value // a dose worked for one body is for nobody else
+		}
 	}
 	if p.Route != "IV" || p.Infusion != nil {
 		l.Route = p.Route

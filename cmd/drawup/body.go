@@ -169,7 +169,7 @@ func tellBody(w io.Writer, d *bodyDocument) {
 		q         *quantityJSON
 	}{
 		{"ideal weight", "Devine 1974", d.Ideal},
-		{"adjusted weight", "ideal + 0.4 (actual - ideal)", d.Adjusted},
+		{"adjusted weight", "ideal + 0.4 (actual - ideal); the actual weight where that is below the ideal", d.Adjusted},
 		{"lean weight", "Janmahasatian 2005", d.Lean},
 		{"lean weight", "James 1976", d.James},
 		{"surface area", "Mosteller 1987", d.Mosteller},

@@ -90,11 +90,12 @@ func makingOf(o order.Order, f *formulary.Formulary, at time.Time, data []byte) 
 	fmt.Fprintf(sum, "%s\n%s\n%d\n", f.Digest, at.Format(time.RFC3339), len(data))
 	sum.Write(data)
 	digest := sum.Sum(nil)
+	order := sha256.Sum256(append([]byte(f.Digest+"\n"), data...)) // without the time: a label printed at its moment keeps its serial
 	style := styleOf(o)
 	return labels.Making{
 		Place: o.Session.Place.Value, Preparer: o.Session.Preparer.Value, Made: labels.Moment(style, at),
 		Formulary: f.Name + " " + f.Version, FormularyDigest: f.Digest[:12], State: f.State(),
-		Digest: hex.EncodeToString(digest)[:8], Serial: fmt.Sprintf("%05d", binary.BigEndian.Uint32(digest)%100000), Invented: o.Session.Invented,
+		Digest: hex.EncodeToString(digest)[:8], Serial: fmt.Sprintf("%05d", binary.BigEndian.Uint32(order[:])%100000), Invented: o.Session.Invented,
 	}
 }
 
@@ -167,9 +168,11 @@ func ourFault(syringe int, err error) refusal.Reason {
 }
 
 // name is the order's file name without its folder and ending.
-func (j *job) name() string {
-	base := filepath.Base(j.file)
-	return base[:len(base)-len(filepath.Ext(base))]
+func (j *job) name() string { return nameOf(j.file) }
+
+func nameOf(path string) string {
+	base := filepath.Base(path)
+	return strings.TrimSuffix(base, filepath.Ext(base))
 }
 
 // readFile reads an order file whole, or says why not.

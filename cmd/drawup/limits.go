@@ -23,27 +23,31 @@ func limitFlags() []flagSpec {
 
 // checkLimits holds q against the formulary when --drug is given, and says
 // that no limits were checked when it is not.
-func (r *request) checkLimits(q dilution.Quick) {
+// It returns what the row says that the sum was held against.
+func (r *request) checkLimits(q dilution.Quick) dilution.QuickLimits {
+	var limits dilution.QuickLimits
 	if !r.given("drug") {
 		r.forbid("it goes with --drug", "use", "indication", "age", "route", "line", "fluid")
 		r.noLimits()
-		return
+		return limits
 	}
 	q.Drug, q.Indication, q.Route, q.Line, q.Diluent, q.Style = r.texts["drug"].text, r.texts["indication"].text, r.texts["route"].text, r.texts["line"].text, r.texts["fluid"].text, r.style
 	q.Age = read(r, "age", body.ParseAge)
 	r.oneOf("line", "peripheral", "central")
 	if !r.readUse(&q) || r.refused() {
-		return
+		return limits
 	}
 	f, err := formulary.Default()
 	if err != nil {
 		r.add(ourFault(0, err))
-		return
+		return limits
 	}
-	r.faults = append(r.faults, q.Check(f)...)
+	reasons, limits := q.Check(f)
+	r.faults = append(r.faults, reasons...)
 	if !r.refused() {
-		r.limitsNote(q, f)
+		r.limitsNote(q, f, limits)
 	}
+	return limits
 }
 
 // readUse settles bolus or infusion: a dose rate is an infusion, a dose a
@@ -81,10 +85,10 @@ func (r *request) oneOf(name string, words ...string) bool {
 }
 
 // limitsNote says what was checked, and what a quick sum cannot know.
-func (r *request) limitsNote(q dilution.Quick, f *formulary.Formulary) {
+func (r *request) limitsNote(q dilution.Quick, f *formulary.Formulary, limits dilution.QuickLimits) {
 	words := "checked against the " + f.State()
-	if q.Weight.Given() || q.Surface.Given() {
-		words += "; the weight or surface given is taken as the one that the limits go by"
+	if q.Weight.Given() && limits.By != body.None && limits.By != 0 {
+		words += "; an order would go by " + limits.By.String() + " weight, and the weight given is taken as that"
 	}
 	if !q.Dose.Given() && !q.Rate.Given() {
 		words += "; its concentration was checked, no dose"

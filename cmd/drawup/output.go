@@ -2,10 +2,12 @@ package main
 
 import (
 	"bytes"
+	"errors"
 	"fmt"
 	"os"
 	"path/filepath"
 	"sort"
+	"strings"
 
 	"drawup/dilution/refusal"
 	"drawup/layouts/ink"
@@ -26,17 +28,27 @@ func pdfOf(pages []ink.Page, title string, j *job) ([]byte, refusal.List) {
 		return b.Bytes(), nil
 	}
 	code := refusal.OutputUnwritable
+	remedy := "take the character or text out of the order"
 	if glyph := (*pdf.MissingGlyph)(nil); asError(err, &glyph) {
 		code = refusal.GlyphMissing
 	}
+	if off := (*pdf.OffPage)(nil); asError(err, &off) {
+		code, remedy = refusal.TextTooLong, "shorten the long texts of the order, such as the place or the preparer"
+	}
 	return nil, refusal.List{{Code: code, Severity: refusal.Refuse, Field: title, Rule: "R15", Message: "the page cannot be drawn: " + err.Error(),
-		Remedy: "take the character or text out of the order"}}
+		Remedy: remedy}}
 }
 
 // writeAll writes every file or none: each goes to a temporary name beside its
 // place first; only when all are whole are they renamed. The last file of the
 // list is removed first and renamed last, so that it marks a complete set.
-func writeAll(files []file) refusal.List {
+//
+// inputs are the files that were read; none of them is ever written over, and
+// neither is a folder.
+func writeAll(files []file, inputs []string) refusal.List {
+	if l := overwrites(files, inputs); l.Refused() {
+		return l
+	}
 	var temps, made []string
 	undo := func() {
 		for _, t := range temps {
@@ -69,6 +81,10 @@ func writeAll(files []file) refusal.List {
 		undo()
 		return unwritable(mark, err)
 	}
+	if err := clearOld(files); err != nil {
+		undo()
+		return incomplete(filepath.Dir(mark), err)
+	}
 	for i, f := range files {
 		if err := os.Rename(temps[i], f.path); err != nil {
 			undo()
@@ -76,6 +92,45 @@ func writeAll(files []file) refusal.List {
 		}
 	}
 	return nil
+}
+
+// paperNames are the files that a set of papers may hold, for filepath.Glob.
+var paperNames = []string{"draw-up.pdf", "labels.pdf", "labels-*.pdf", "pump-cards.pdf", "check-sheets.pdf"}
+
+// clearOld takes away papers of an earlier set that the new one does not have,
+// so that no pump card of another list lies beside it. It does so only where a
+// set is written, not for a single label.
+func clearOld(files []file) error {
+	last := files[len(files)-1].path
+	if filepath.Base(last) != planName {
+		return nil
+	}
+	keep := map[string]bool{}
+	for _, f := range files {
+		keep[filepath.Clean(f.path)] = true
+	}
+	for _, dir := range folders(files) {
+		for _, name := range paperNames {
+			old, err := filepath.Glob(filepath.Join(escapeGlob(dir), name))
+			if err != nil {
+				return err
+			}
+			for _, path := range old {
+				if keep[filepath.Clean(path)] {
+					continue
+				}
+				if err := os.Remove(path); err != nil {
+					return err
+				}
+			}
+		}
+	}
+	return nil
+}
+
+// escapeGlob makes a folder's own name plain for filepath.Glob.
+func escapeGlob(dir string) string {
+	return strings.NewReplacer(`*`, `\*`, `?`, `\?`, `[`, `\[`).Replace(dir)
 }
 
 // makeFolder makes dir with its parents and names those that were not there,
@@ -135,4 +190,24 @@ func incomplete(path string, err error) refusal.List {
 	l := unwritable(path, err)
 	l[0].Message = fmt.Sprintf("%s cannot be put in its place: %v; the set there is not complete and must not be used", path, err)
 	return l
+}
+
+// overwrites refuses to put a paper where a folder or an order file is.
+func overwrites(files []file, inputs []string) refusal.List {
+	var out refusal.List
+	for _, f := range files {
+		there, err := os.Stat(f.path)
+		if err != nil {
+			continue
+		}
+		if there.IsDir() {
+			out = append(out, unwritable(f.path, errors.New("a folder of that name is there"))...)
+		}
+		for _, in := range inputs {
+			if order, err := os.Stat(in); err == nil && os.SameFile(order, there) {
+				out = append(out, unwritable(f.path, errors.New("it is the order file itself"))...)
+			}
+		}
+	}
+	return out
 }

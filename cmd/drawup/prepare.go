@@ -1,6 +1,7 @@
 package main
 
 import (
+	"bytes"
 	"errors"
 	"fmt"
 	"io"
@@ -86,6 +87,7 @@ func runPrepare(e env, args []string) int {
 		faults = append(faults, refusal.Reason{Code: refusal.FlagConflict, Severity: refusal.Refuse, Field: "--leave-out", Want: "one order file",
 			Message: "a number to leave out is meant for one order, and several are named", Remedy: "prepare that order by itself"})
 	}
+	faults = append(faults, f.places()...)
 	if faults.Refused() {
 		return finish(e, f.json, doc, nil, faults)
 	}
@@ -98,6 +100,36 @@ func runPrepare(e env, args []string) int {
 		return finish(e, f.json, doc, nil, all)
 	}
 	return f.write(e, jobs, all)
+}
+
+// places refuses flags and order files whose papers would go nowhere, or over
+// each other: with several orders each gets a folder of its own name.
+func (f *paperFlags) places() refusal.List {
+	var out refusal.List
+	fault := func(field, got, message, remedy string) {
+		out = append(out, refusal.Reason{Code: refusal.FlagConflict, Severity: refusal.Refuse, Field: field, Got: got, Want: "a place for each set of papers", Message: message, Remedy: remedy})
+	}
+	if f.set.Changed("out") && strings.TrimSpace(f.out) == "" {
+		fault("--out", f.out, "--out names no folder", "name one, or leave --out out for the current folder")
+	}
+	if f.used < 0 {
+		fault("--labels-used", strconv.Itoa(f.used), "--labels-used counts labels that are gone: it cannot be below nothing", "write 0 or more")
+	}
+	if len(f.orders) < 2 {
+		return out
+	}
+	seen := map[string]string{}
+	for _, path := range f.orders {
+		name := nameOf(path)
+		if other, twice := seen[strings.ToLower(name)]; twice {
+			fault("ORDER", path, fmt.Sprintf("%s and %s would be written into one folder, %q", other, path, name), "rename one of them, or prepare them one by one into different folders")
+		}
+		seen[strings.ToLower(name)] = path
+		if strings.Trim(name, ".") == "" {
+			fault("ORDER", path, fmt.Sprintf("%s gives no name for its folder", path), "rename it, or prepare it by itself")
+		}
+	}
+	return out
 }
 
 // numbers reads --leave-out 3,7.
@@ -141,12 +173,21 @@ func (f *paperFlags) when(now func() time.Time) func(order.Session) (time.Time, 
 				return t, refusal.List{{Code: refusal.TimeMalformed, Severity: refusal.Refuse, Field: "--at", Got: f.at, Want: `a time such as "2026-12-01 07:30"`, Rule: "R18",
 					Message: fmt.Sprintf("%q is not a date and time", f.at), Remedy: `write --at "2026-12-01 07:30"; it is read in the order's zone`}}
 			}
+			if t.Format("2006-01-02 15:04") != f.at || sameWall(t, t.Add(time.Hour)) || sameWall(t, t.Add(-time.Hour)) {
+				return t, refusal.List{{Code: refusal.TimeMalformed, Severity: refusal.Refuse, Field: "--at", Got: f.at, Want: "a time that the clock shows once", Rule: "R18",
+					Message: fmt.Sprintf("the clocks change: %s is shown twice or not at all in this zone", f.at), Remedy: `write the order's zone as an offset, such as zone = "+01:00"`}}
+			}
 			return t, nil
 		case now != nil:
 			return now().In(zone).Truncate(time.Minute), nil
 		}
 		return s.Prepared.Value, nil
 	}
+}
+
+// sameWall reports that a clock on the wall shows the same at both times.
+func sameWall(a, b time.Time) bool {
+	return a.Format("2006-01-02 15:04") == b.Format("2006-01-02 15:04")
 }
 
 // write places everything in memory, then writes it, then tells the user.
@@ -163,7 +204,7 @@ func (f *paperFlags) write(e env, jobs []*job, all refusal.List) int {
 		files = append(files, made...)
 	}
 	if !all.Refused() {
-		all = append(all, writeAll(files)...)
+		all = append(all, writeAll(files, f.orders)...)
 	}
 	if all.Refused() {
 		return finish(e, f.json, doc, nil, all)
@@ -183,15 +224,21 @@ func (f *paperFlags) write(e env, jobs []*job, all refusal.List) int {
 	return exitMade
 }
 
-// tellJSON prints the plan documents themselves: one, or several in a row.
+// tellJSON prints the plan document itself, or a list of them when several
+// orders were prepared.
 func (f *paperFlags) tellJSON(e env, jobs []*job, files []file) int {
+	var docs [][]byte
 	for _, x := range files {
-		if filepath.Base(x.path) != planName {
-			continue
+		if filepath.Base(x.path) == planName {
+			docs = append(docs, bytes.TrimRight(x.data, "\n"))
 		}
-		if _, err := e.stdout.Write(x.data); err != nil {
-			return outputFault(e, err)
-		}
+	}
+	out := bytes.Join(docs, []byte(",\n"))
+	if len(jobs) > 1 {
+		out = append(append([]byte("[\n"), out...), "\n]"...)
+	}
+	if _, err := e.stdout.Write(append(out, '\n')); err != nil {
+		return outputFault(e, err)
 	}
 	return exitMade
 }

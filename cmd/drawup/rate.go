@@ -191,11 +191,11 @@ func workRate(r *request, s rateSum, doc *rateDocument) {
 	doc.Lost = &quantityJSON{exactText(set.LostPercent), signed(r.style, set.LostPercent) + " %", "%"}
 	doc.Working = rateWorking(r, s, doc)
 	lossCaution(r, set)
-	if r.given("dose") {
-		ladder(r, s, doc)
-	}
 	weight, surface := quickScalar(r)
-	r.checkLimits(dilution.Quick{Infusion: true, Concentration: s.conc, Rate: set.Dose, Weight: weight, Surface: surface})
+	limits := r.checkLimits(dilution.Quick{Infusion: true, Concentration: s.conc, Rate: set.Dose, Weight: weight, Surface: surface})
+	if r.given("dose") && !r.refused() {
+		ladder(r, s, doc, limits.Top)
+	}
 }
 
 // rateFault is a fault of setting the pump in words.
@@ -226,8 +226,11 @@ func lossCaution(r *request, set pump.Setting) {
 }
 
 // ladder fills the steps from half to double the dose rate.
-func ladder(r *request, s rateSum, doc *rateDocument) {
+func ladder(r *request, s rateSum, doc *rateDocument, top quantity.DoseRate) {
 	from, to := s.dose.Scaled(big.NewRat(1, 2)), s.dose.Scaled(big.NewRat(2, 1))
+	if above(to, top) {
+		to = top
+	}
 	rungs, err := pump.Ladder(from, to, wantedRungs, s.per, s.conc, s.step)
 	if err != nil {
 		r.caution(refusal.Reason{
@@ -237,11 +240,24 @@ func ladder(r *request, s rateSum, doc *rateDocument) {
 		return
 	}
 	for _, x := range rungs {
+		if above(x.Delivered, top) {
+			continue
+		}
 		doc.Ladder = append(doc.Ladder, rungJSON{
 			DoseRate: doseRateJSON(r.style, x.Dose), FlowRate: flowRateJSON(r.style, x.Exact),
 			PumpRate: flowRateJSON(r.style, x.Rate), Delivered: doseRateJSON(r.style, x.Delivered),
 		})
 	}
+}
+
+// above reports that d passes the highest dose rate stored, where one is known
+// and counted the same way.
+func above(d, top quantity.DoseRate) bool {
+	if !top.Given() {
+		return false
+	}
+	n, err := d.Cmp(top)
+	return err == nil && n > 0
 }
 
 // noLimits says that a quick sum without a drug looks at no limit (rule R10).

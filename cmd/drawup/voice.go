@@ -4,6 +4,8 @@ import (
 	"fmt"
 	"io"
 	"strings"
+	"unicode"
+	"unicode/utf8"
 
 	"drawup/dilution/refusal"
 )
@@ -85,7 +87,7 @@ func details(w io.Writer, r refusal.Reason) {
 // a terminal.
 func oneLine(s string) string {
 	return strings.Map(func(r rune) rune {
-		if r < 0x20 || (r >= 0x7f && r < 0xa0) {
+		if r < 0x20 || (r >= 0x7f && r < 0xa0) || unicode.Is(unicode.Cf, r) || r == utf8.RuneError {
 			return ' '
 		}
 		return r

@@ -19,6 +19,7 @@ func choiceEntries() []Entry {
 		warns(NegligibleDisplacement, Choices, "R7", "The volume that a powder takes up counts as nothing, as its source says."),
 		stops(IndicationUnclear, Choices, "R10", "The dose is right for one purpose and wrong for another, and the order names none."),
 		stops(AgeOutside, Choices, "R10", "The formulary has no dose for a patient of that age."),
+		warns(WeightFromFormulary, Choices, "R3", "A dose per kg names no weight, and the formulary goes by another than the actual one."),
 		warns(WeightBasisUnlike, Choices, "R3", "The order goes by another weight than the formulary does."),
 		warns(Unverified, Choices, "R13", "A figure was used that nobody has verified."),
 		warns(AssayAssumed, Choices, "R9", "No assay limits are on record, so a wide pharmacopoeia range is assumed."),

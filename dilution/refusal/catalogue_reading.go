@@ -42,13 +42,14 @@ func fileEntries() []Entry {
 		stops(ValueUnknown, Files, "", "A value is not one of those that the key may have."),
 		stops(TimeMalformed, Files, "R18", "A date, a time or a time zone cannot be read, or does not exist in that zone."),
 		stops(NothingToMake, Files, "", "The order has no syringe, or all of them are left out."),
+		stops(SyringesMany, Files, "", "The order has more syringes than the serial numbers have room for."),
 	}
 }
 
 func patientEntries() []Entry {
 	return []Entry{
 		stops(WeightMissing, Patients, "R3", "A dose goes by weight and the patient has none."),
-		stops(WeightImplausible, Patients, "R3", "A body weight is one that no patient has."),
+		either(WeightImplausible, Patients, "R3", "A body weight is one that no patient has, or few children of that age."),
 		stops(SurfaceMissing, Patients, "R3", "A dose goes by body surface area and none is given."),
 		stops(HeightMissing, Patients, "R3", "A weight or surface has to be worked out and the height is not given."),
 		stops(HeightImplausible, Patients, "R3", "A height is one that no patient has."),

@@ -33,6 +33,7 @@ const (
 	TimeMalformed    Code = "time-malformed"
 	OutputUnwritable Code = "output-unwritable"
 	NothingToMake    Code = "nothing-to-make"
+	SyringesMany     Code = "too-many-syringes"
 	SyringeNumber    Code = "syringe-number-unknown"
 )
 
@@ -78,6 +79,7 @@ const (
 	RateAboveHard          Code = "dose-rate-above-hard-limit"
 	RateAboveSoft          Code = "dose-rate-above-soft-limit"
 	RateAboveUsual         Code = "dose-rate-above-usual"
+	WeightFromFormulary    Code = "weight-kind-from-formulary"
 	WeightBasisUnlike      Code = "weight-kind-unlike-formulary"
 	RateBelowHard          Code = "dose-rate-below-hard-limit"
 	RateBelowSoft          Code = "dose-rate-below-usual"
