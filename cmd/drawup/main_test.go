@@ -27,7 +27,7 @@ func TestMain(m *testing.M) {
 func TestScripts(t *testing.T) {
 	testscript.Run(t, testscript.Params{
 		Dir: "../../testdata/script", RequireExplicitExec: true, RequireUniqueNames: true,
-		Cmds: map[string]func(*testscript.TestScript, bool, []string){"exec-code": execCode},
+		Cmds: map[string]func(*testscript.TestScript, bool, []string){"exec-code": execCode, "serials": serials},
 	})
 }
 
@@ -48,6 +48,24 @@ func execCode(ts *testscript.TestScript, neg bool, args []string) {
 	}
 	if got != want {
 		ts.Fatalf("got exit %d, want %d: %s", got, want, ts.ReadFile("stderr"))
+	}
+}
+
+// serials is "serials a.json b.json": both hold one syringe with one serial.
+func serials(ts *testscript.TestScript, neg bool, args []string) {
+	if neg || len(args) != 2 {
+		ts.Fatalf("usage: serials a.json b.json")
+	}
+	var found [2]string
+	for i, name := range args {
+		_, rest, ok := strings.Cut(ts.ReadFile(name), `"serial": "`)
+		if !ok {
+			ts.Fatalf("%s holds no serial", name)
+		}
+		found[i], _, _ = strings.Cut(rest, `"`)
+	}
+	if found[0] != found[1] || found[0] == "" {
+		ts.Fatalf("got serials %q and %q, want one", found[0], found[1])
 	}
 }
 
