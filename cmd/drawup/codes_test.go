@@ -99,6 +99,7 @@ func examples() map[refusal.Code]func(*testing.T) string {
 		refusal.FileEmpty:        preparing(" \n", "order.toml"),
 		refusal.FileNotText:      preparing("place = \"\xff\"\n", "order.toml"),
 		refusal.FileTooLarge:     preparing(strings.Repeat("# a long comment\n", 1<<16), "order.toml"),
+		refusal.SyringesMany:     preparing(soundOrder+strings.Repeat("\n[[patient.syringe]]\ndrug = \"suxamethonium\"\ndose = \"1 mg/kg\"\n", 999), "order.toml"),
 		refusal.FlagMissing:      told("rate", "--dose", "1 mg/h"),
 		refusal.FlagUnknown:      told("rate", "--nonsense", "x"),
 		refusal.FlagConflict:     told("rate", "--dose", "1 mg/h", "--rate", "1 mL/h", "--mix", "4 mg in 50 mL"),

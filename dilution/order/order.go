@@ -45,8 +45,8 @@ type Session struct {
 // A Site is the house's settings. What is not given has the caller's default.
 type Site struct {
 	Style         Field[quantity.Style]
-	BolusUseBy    Field[time.Duration]
-	InfusionUseBy Field[time.Duration]
+	BolusUseBy    Field[time.Duration]    // from 1 min to 30 days, our own bound
+	InfusionUseBy Field[time.Duration]    // as BolusUseBy
 	Smallest      Field[quantity.Volume]  // smallest volume that may be measured (R8)
 	Tolerance     Field[quantity.Percent] // how far a graduation may move a volume (R8)
 	PumpStep      Field[quantity.FlowRate]

@@ -1,6 +1,7 @@
 package order
 
 import (
+	"errors"
 	"math/big"
 	"strings"
 	"testing"
@@ -254,12 +255,17 @@ func TestNets(t *testing.T) {
 		{`weight="400 kg"`, ""}, {`weight="400.1 kg"`, refusal.WeightImplausible},
 		{`height="25 cm"`, ""}, {`height="24.9 cm"`, refusal.HeightImplausible},
 		{`height="2.5 m"`, ""}, {`height="2.51 m"`, refusal.HeightImplausible},
-		{"age=\"6 years\"\nweight=\"75 kg\"", ""}, {"age=\"6 years\"\nweight=\"75.1 kg\"", refusal.BodyValuesStrange},
-		{"age=\"1 month\"\nweight=\"1.5 kg\"", ""}, {"age=\"1 month\"\nweight=\"1.49 kg\"", refusal.BodyValuesStrange},
+		{"age=\"6 years\"\nweight=\"50 kg\"", ""}, {"age=\"6 years\"\nweight=\"75.1 kg\"", refusal.BodyValuesStrange},
+		{"age=\"1 month\"\nweight=\"2.25 kg\"", ""}, {"age=\"1 month\"\nweight=\"1.49 kg\"", refusal.BodyValuesStrange},
 		{"age=\"3 weeks\"\nweight=\"0.6 kg\"", ""},
 		{"age=\"13 years\"\nweight=\"25 kg\"", ""}, {"age=\"13 years\"\nweight=\"24.9 kg\"", refusal.BodyValuesStrange},
 		{"age=\"44 years\"\nweight=\"350 kg\"", ""}, {"age=\"44 years\"\nweight=\"350.1 kg\"", refusal.BodyValuesStrange},
 		{"age=\"44 years\"\nweight=\"40 kg\"\nheight=\"200 cm\"", ""}, {"age=\"44 years\"\nweight=\"39.9 kg\"\nheight=\"200 cm\"", refusal.BodyValuesStrange},
+		{"age=\"3 years\"\nweight=\"41 kg\"\nheight=\"97 cm\"", refusal.BodyValuesStrange},
+		{"age=\"6 years\"\nweight=\"35 kg\"\nheight=\"100 cm\"", ""}, {"age=\"6 years\"\nweight=\"35.1 kg\"\nheight=\"100 cm\"", refusal.BodyValuesStrange},
+		{"age=\"6 years\"\nweight=\"20.25 kg\"\nheight=\"150 cm\"", ""}, {"age=\"6 years\"\nweight=\"20.24 kg\"\nheight=\"150 cm\"", refusal.BodyValuesStrange},
+		{"age=\"12 years\"\nweight=\"35.1 kg\"\nheight=\"100 cm\"", refusal.BodyValuesStrange}, {"age=\"13 years\"\nweight=\"35.1 kg\"\nheight=\"100 cm\"", ""},
+		{"age=\"3 weeks\"\nweight=\"0.6 kg\"\nheight=\"30 cm\"", ""}, {"age=\"3 weeks\"\nweight=\"3.5 kg\"\nheight=\"31 cm\"", refusal.BodyValuesStrange},
 		{"weight=\"90 kg\"\nheight=\"100 cm\"", ""}, {"weight=\"90.1 kg\"\nheight=\"100 cm\"", refusal.BodyValuesStrange},
 	} {
 		text := strings.Replace("[session]\nplace='x'\ndate='2026-07-01'\nprepared='07:30'\npreparer='y'\n[[patient]]\nid='A'\nBODY\n[[patient.syringe]]\ndrug='ondansetron'\ndose='4 mg'\n", "BODY", c.body, 1)
@@ -271,6 +277,85 @@ func TestNets(t *testing.T) {
 		if got != c.want || len(list) > 1 {
 			t.Errorf("%q: got %v, want %q", c.body, list, c.want)
 		}
+	}
+}
+
+// A child's weight outside half to twice the weight by age of Advanced
+// Paediatric Life Support, 2011, gets one caution that concerns the whole order,
+// and the order can be made: at 3 years 14 kg, so 7 to 28 kg; at 1 month 4.5 kg,
+// so 2.25 to 9 kg; at 12 years 43 kg, so 21.5 to 86 kg. 14 kg are 30.86 lb, by
+// 0.45359237 kg to the pound. The net is our own.
+func TestFarFromMiddle(t *testing.T) {
+	for _, c := range []struct {
+		body string
+		want bool
+	}{
+		{"age=\"3 years\"\nweight=\"14 kg\"", false}, {"age=\"3 years\"\nweight=\"14 kg\"\nheight=\"97 cm\"", false},
+		{"age=\"3 years\"\nweight=\"30.8 kg\"", true}, {"age=\"3 years\"\nweight=\"30.8 kg\"\nheight=\"97 cm\"", true},
+		{"age=\"3 years\"\nweight=\"41 kg\"", true}, {"age=\"3 years\"\nweight=\"42 kg\"", true},
+		{"age=\"3 years\"\nweight=\"28 kg\"", false}, {"age=\"3 years\"\nweight=\"28.1 kg\"", true},
+		{"age=\"3 years\"\nweight=\"7 kg\"", false}, {"age=\"3 years\"\nweight=\"6.9 kg\"", true},
+		{"age=\"1 month\"\nweight=\"2.25 kg\"", false}, {"age=\"1 month\"\nweight=\"2.24 kg\"", true},
+		{"age=\"3 weeks\"\nweight=\"0.6 kg\"", false}, {"age=\"3 weeks\"\nweight=\"9 kg\"", false}, {"age=\"3 weeks\"\nweight=\"9.1 kg\"", true},
+		{"age=\"12 years\"\nweight=\"86.1 kg\"", true}, {"age=\"13 years\"\nweight=\"86.1 kg\"", false}, {"weight=\"30.8 kg\"", false},
+	} {
+		o, list := Read("x", []byte("[session]\nplace='x'\ndate='2026-07-01'\nprepared='07:30'\npreparer='y'\n[[patient]]\nid='A'\n"+c.body+"\n[[patient.syringe]]\ndrug='ondansetron'\ndose='4 mg'\n"))
+		if list.Refused() || len(o.Syringes) != 1 || !o.Patients[0].Weight.Value.Given() {
+			t.Errorf("%q: got %v, want an order that can be made", c.body, list)
+		}
+		if got := len(list) == 1 && list[0].Code == refusal.WeightImplausible && list[0].Severity == refusal.Caution; got != c.want || len(list) > 1 {
+			t.Errorf("%q: got %v, want a caution %v", c.body, list, c.want)
+		}
+		for _, r := range list {
+			checkReason(t, r)
+			if line := 9; r.Pos.Line != line {
+				t.Errorf("%q: got line %d, want that of the weight, %d", c.body, r.Pos.Line, line)
+			}
+		}
+	}
+}
+
+// Spans of the site: from 1 min to 30 days, a bound of our own.
+func TestSpans(t *testing.T) {
+	for text, want := range map[string]time.Duration{
+		"1 min": time.Minute, "90 minutes": 90 * time.Minute, "4h": 4 * time.Hour, "720 h": 720 * time.Hour, "30 days": 720 * time.Hour, "43200 min": 720 * time.Hour,
+	} {
+		if got, err := parseSpan(text); err != nil || got != want {
+			t.Errorf("%q: got %v, %v; want %v", text, got, err, want)
+		}
+	}
+	for _, text := range []string{"0 min", "0 h", "31 days", "721 h", "43201 min", "9999 days", "99999999999999999999 h", "1.5 h", "h", "4", "4 weeks", "-4 h", "04 h"} {
+		got, err := parseSpan(text)
+		var fault *timeError
+		if got != 0 || !errors.As(err, &fault) || fault.want == "" || fault.why == "" {
+			t.Errorf("%q: got %v, %v; want a refusal that says why", text, got, err)
+		}
+	}
+}
+
+// 999 syringes can be told apart by three digits, the next one is refused where
+// it stands, whether it is a syringe or an infusion.
+func TestTooManySyringes(t *testing.T) {
+	const head = "[session]\nplace='x'\ndate='2026-07-01'\nprepared='07:30'\npreparer='y'\n[[patient]]\nid='A'\n"
+	const one = "[[patient.syringe]]\ndrug='ondansetron'\ndose='4 mg'\n"
+	const pump = "[[patient.infusion]]\ndrug='labetalol'\nmix='50 mg in 50 mL'\nstart='1 mg/min'\n"
+	if o := mustRead(t, head+strings.Repeat(one, 500)+"[[patient]]\nid='B'\n"+strings.Repeat(one, 499)); len(o.Syringes) != 999 {
+		t.Errorf("got %d syringes, want 999", len(o.Syringes))
+	}
+	for _, c := range []struct {
+		text string
+		line int
+	}{
+		{head + strings.Repeat(one, 1000), 7 + 3*999 + 1},
+		{head + strings.Repeat(one, 998) + pump + pump, 7 + 3*998 + 4 + 1},
+		{head + strings.Repeat(one, 999) + "[[patient]]\nid='B'\n" + pump + one, 7 + 3*999 + 2 + 4 + 1},
+	} {
+		o, list := Read("x", []byte(c.text))
+		if len(list) != 1 || list[0].Code != refusal.SyringesMany || list[0].Pos.Line != c.line || len(o.Syringes) != 0 {
+			t.Errorf("got %v and %d syringes, want too-many-syringes on line %d", list, len(o.Syringes), c.line)
+			continue
+		}
+		checkReason(t, list[0])
 	}
 }
 

@@ -1,6 +1,7 @@
 package order
 
 import (
+	"fmt"
 	"time"
 
 	"drawup/dilution/quantity"
@@ -10,10 +11,12 @@ import (
 
 // Read reads data, the text of the order file called name, and gives every
 // reason to refuse it at once, in the order of the file: what [tomlfile.Decode]
-// refuses, then key-missing, keys-contradict, key-repeated, nothing-to-make,
+// refuses, then too-many-syringes (alone with the faults of session and site;
+// no patient is read), key-missing, keys-contradict, key-repeated, nothing-to-make,
 // value-unknown, time-malformed, the faults of a quantity's text
 // ([quantity.Fault]), units-against-mass, weight-missing, height-missing,
 // sex-missing, weight-implausible, height-implausible, body-values-do-not-fit.
+// The one caution is weight-implausible, of a child's weight that few have.
 //
 // A reason that concerns one syringe carries its number. When nothing refuses,
 // every given field of the order has a value.
@@ -30,10 +33,12 @@ func Read(name string, data []byte) (Order, refusal.List) {
 	}
 	r.session(file.Session)
 	r.site(file.Site)
-	for i, p := range file.Patients {
-		r.patient(i, p)
+	if !r.many(file.Patients) {
+		for i, p := range file.Patients {
+			r.patient(i, p)
+		}
+		r.something()
 	}
-	r.something()
 	r.attribute(len(list))
 	r.list.Sort()
 	return r.order, r.list
@@ -56,9 +61,20 @@ func at(base []any, more ...any) []any {
 	return append(append(make([]any, 0, len(base)+len(more)), base...), more...)
 }
 
-// refuse adds a reason at path. field is the key in the user's words.
+// refuse adds a refusal at path. Its field, if none is given, is the key in the
+// user's words.
 func (r *reader) refuse(path []any, reason refusal.Reason) {
 	reason.Severity = refusal.Refuse
+	r.add(path, reason)
+}
+
+// caution adds a caution at path, as refuse does.
+func (r *reader) caution(path []any, reason refusal.Reason) {
+	reason.Severity = refusal.Caution
+	r.add(path, reason)
+}
+
+func (r *reader) add(path []any, reason refusal.Reason) {
 	reason.Syringe = r.number
 	reason.Pos = r.places.Of(path...)
 	if reason.Field == "" {
@@ -105,6 +121,33 @@ func read[T any](r *reader, text string, parse func(string) (T, error), path []a
 	}
 	f.Value = value
 	return f
+}
+
+// mostSyringes of one order: its serial numbers have three digits for them.
+const mostSyringes = 999
+
+// many refuses an order with more syringes than can be told apart, at the first
+// one too many in the order of making.
+func (r *reader) many(patients []patientRecord) bool {
+	var at []any
+	count := 0
+	for i, p := range patients {
+		for _, list := range []struct {
+			key string
+			n   int
+		}{{"syringe", len(p.Syringes)}, {"infusion", len(p.Infusions)}} {
+			if count <= mostSyringes && count+list.n > mostSyringes {
+				at = []any{"patient", i, list.key, mostSyringes - count}
+			}
+			count += list.n
+		}
+	}
+	if count <= mostSyringes {
+		return false
+	}
+	r.refuse(at, refusal.Reason{Code: refusal.SyringesMany, Got: fmt.Sprintf("%d syringes", count), Want: fmt.Sprintf("at most %d syringes and infusions", mostSyringes),
+		Message: fmt.Sprintf("the order has %d syringes, and the serial numbers of one order have three digits for them", count), Remedy: "cut the order into several files"})
+	return true
 }
 
 // something refuses an order that asks for nothing.

@@ -16,7 +16,11 @@ const (
 	wantDate  = `a date as year-month-day such as "2026-12-01"`
 	wantClock = `a time of day on the 24-hour clock such as "07:30"`
 	wantZone  = `a zone such as "Europe/Berlin", "UTC" or "+01:00"`
-	wantSpan  = `a span of time such as "4 h" or "30 min"`
+	wantSpan  = `a span from 1 min to 30 days such as "4 h" or "30 min"`
+
+	// longestSpan bounds the use-by times of the site. The bound is our own, wide
+	// and against slips of the pen; no source gives one.
+	longestSpan = 30 * 24 * time.Hour
 )
 
 // session reads when, where and by whom.
@@ -146,7 +150,8 @@ func parseZone(s string) (*time.Location, error) {
 	return zone, nil
 }
 
-// parseSpan reads "4 h", "30 min", "1 day": whole numbers up to 9999.
+// parseSpan reads "4 h", "30 min", "1 day": whole numbers, from 1 min to
+// longestSpan.
 func parseSpan(s string) (time.Duration, error) {
 	fault := func(why, likely string) (time.Duration, error) {
 		return 0, &timeError{got: s, want: wantSpan, why: why, likely: likely}
@@ -160,25 +165,35 @@ func parseSpan(s string) (time.Duration, error) {
 	if strings.HasPrefix(unit, ",") {
 		return 0, &quantity.SyntaxError{Got: s, Want: wantSpan, Why: "a comma can mean a decimal or a thousand", Code: quantity.CommaNumber}
 	}
-	if number == "" || len(number) > 4 || number[0] == '0' {
-		return fault("it does not begin with a whole number from 1 to 9999", "")
+	if number == "" || number[0] == '0' {
+		return fault("it does not begin with a whole number from 1", "")
 	}
-	n, err := strconv.Atoi(number)
-	if err != nil {
-		return fault("the number cannot be read", "")
-	}
-	switch unit {
-	case "min", "minute", "minutes":
-		return time.Duration(n) * time.Minute, nil
-	case "h", "hr", "hour", "hours":
-		return time.Duration(n) * time.Hour, nil
-	case "d", "day", "days":
-		return time.Duration(n) * 24 * time.Hour, nil
-	}
-	if strings.HasPrefix(unit, ".") {
+	one, ok := spanUnit(unit)
+	if !ok && strings.HasPrefix(unit, ".") {
 		return fault("the number is not whole: use the smaller unit", "")
 	}
-	return fault("the unit is not one of min, h, day", "")
+	if !ok {
+		return fault("the unit is not one of min, h, day", "")
+	}
+	// A number that no int holds is too long as well.
+	n, err := strconv.Atoi(number)
+	if err != nil || n > int(longestSpan/one) {
+		return fault("it is longer than 30 days, a wide bound of our own against slips of the pen", "")
+	}
+	return time.Duration(n) * one, nil
+}
+
+// spanUnit is one of the unit that a span of time may have.
+func spanUnit(word string) (time.Duration, bool) {
+	switch word {
+	case "min", "minute", "minutes":
+		return time.Minute, true
+	case "h", "hr", "hour", "hours":
+		return time.Hour, true
+	case "d", "day", "days":
+		return 24 * time.Hour, true
+	}
+	return 0, false
 }
 
 // parseExpiry reads the day or the month that a pack states. The presentation
