@@ -15,8 +15,8 @@ import (
 // Decode reads data, the text of the file called name, into the struct that
 // into points to. Keys that the struct does not have are refused, so are keys
 // that stand twice, values of the wrong type and lines that are not TOML:
-// file-syntax, key-unknown, key-repeated, value-wrong-type, and those of
-// [ReadFile] for the text itself. Each reason carries line and column. A line or
+// file-syntax, key-unknown, key-repeated, value-wrong-type, time-malformed for a
+// bare date or time that does not exist, and those of [ReadFile] for the text itself. Each reason carries line and column. A line or
 // key with a fault is set aside and the rest is decoded, so that one run names
 // every fault.
 //
@@ -178,7 +178,7 @@ func (s *survey) decode(into any, known []string) refusal.List {
 		case errors.As(err, &wrong):
 			e, ok := s.expressionAt(s.lines.offset(wrong.Position()))
 			if ok && !e.header {
-				list = append(list, s.wrongType(e, wrong))
+				list = append(list, s.wrongValue(e, wrong))
 				s.blank(e.from, e.to)
 				continue
 			}
@@ -204,6 +204,38 @@ func (s *survey) expressionAt(offset int) (expression, bool) {
 		}
 	}
 	return found, ok
+}
+
+// wrongValue explains a value that cannot be taken. The decoder names the target
+// of a value of the wrong type; of a bare date or time that is none it only says
+// that it does not read.
+func (s *survey) wrongValue(e expression, err *toml.DecodeError) refusal.Reason {
+	if !bareMoment(e.value) || strings.Contains(err.Error(), " into ") {
+		return s.wrongType(e, err)
+	}
+	got := shortened(e.raw)
+	if got == "" {
+		got = "a bare date or time"
+	}
+	r := refusal.Reason{
+		Code: refusal.TimeMalformed, Severity: refusal.Refuse, Field: e.key, Rule: "R18", Pos: s.lines.at(s.lines.offset(err.Position())),
+		Got: got, Want: "a day of the calendar such as 2026-12-01, or a time of day such as 07:30:00",
+		Message: fmt.Sprintf("the value of %q is a date or time that does not exist", e.short),
+		Remedy:  "write a date that exists, as year-month-day, or a time that exists",
+	}
+	if e.value == unstable.LocalDate {
+		r.Want, r.Remedy = "a day of the calendar such as 2026-12-01", "write a date that exists, as year-month-day"
+		r.Message = fmt.Sprintf("the value of %q is a date that does not exist", e.short)
+	}
+	return r
+}
+
+func bareMoment(k unstable.Kind) bool {
+	switch k {
+	case unstable.LocalDate, unstable.LocalTime, unstable.LocalDateTime, unstable.DateTime:
+		return true
+	}
+	return false
 }
 
 func (s *survey) wrongType(e expression, err *toml.DecodeError) refusal.Reason {
@@ -248,6 +280,9 @@ func (s *survey) lineText(line int) []byte {
 }
 
 func kindInWords(k unstable.Kind) string {
+	if bareMoment(k) {
+		return "a bare date or time"
+	}
 	switch k {
 	case unstable.String:
 		return "a text"
@@ -255,8 +290,6 @@ func kindInWords(k unstable.Kind) string {
 		return "true or false"
 	case unstable.Integer, unstable.Float:
 		return "a bare number"
-	case unstable.LocalDate, unstable.LocalTime, unstable.LocalDateTime, unstable.DateTime:
-		return "a bare date or time"
 	case unstable.Array:
 		return "a list"
 	case unstable.InlineTable:

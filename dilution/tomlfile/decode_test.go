@@ -155,8 +155,10 @@ func TestDecodeFaults(t *testing.T) {
 		"text open to the end":   {"[session]\nplace = \"\"\"x\n\n", []string{"3 file-syntax"}, false},
 		"nothing to blame":       {"x = [\n\n", []string{"2 file-syntax"}, false},
 		"control character":      {"[session]\nplace = \"a\x00b\"\n", []string{"2 file-syntax"}, true},
-		"letter case":            {"[session]\nPlace = 'x'\n[[Patient]]\nid = 'A'\nID = 'B'\n", []string{"2 key-unknown", "3 key-unknown", "5 key-repeated", "5 key-unknown"}, true},
-		"a line of words":        {"hello there\n", []string{"1 file-syntax"}, false},
+		"dates that are none": {"[session]\ndate = 2027-02-29\n[sources.a]\ndate = 25:00:00\n[sources.b]\ndate = 2027-02-30T10:00:00Z\nplace = 2027-02-31\n[sources.c]\ndate = 2028-02-29\nplace = 2028-02-29\n",
+			[]string{"2 time-malformed", "4 time-malformed", "6 time-malformed", "7 time-malformed", "10 value-wrong-type"}, true},
+		"letter case":     {"[session]\nPlace = 'x'\n[[Patient]]\nid = 'A'\nID = 'B'\n", []string{"2 key-unknown", "3 key-unknown", "5 key-repeated", "5 key-unknown"}, true},
+		"a line of words": {"hello there\n", []string{"1 file-syntax"}, false},
 	} {
 		t.Run(name, func(t *testing.T) {
 			var d document
@@ -193,6 +195,22 @@ func TestRemedies(t *testing.T) {
 		_, list := Decode("f", []byte(text), &d, known()...)
 		if len(list) != 1 || list[0].Remedy != want {
 			t.Errorf("%q: got %+v, want the remedy %q", text, list, want)
+		}
+	}
+}
+
+// A date that the calendar does not have (2027 is no leap year) is called so.
+func TestDateThatDoesNotExist(t *testing.T) {
+	for text, want := range map[string]string{
+		"date = 2027-02-29":           `the value of "date" is a date that does not exist`,
+		"date = 2027-04-31":           `the value of "date" is a date that does not exist`,
+		"date = 07:61:00":             `the value of "date" is a date or time that does not exist`,
+		"date = 2027-02-29T07:30:00Z": `the value of "date" is a date or time that does not exist`,
+	} {
+		var d document
+		_, list := Decode("f", []byte("[session]\n"+text+"\n"), &d, known()...)
+		if len(list) != 1 || list[0].Message != want || list[0].Code != refusal.TimeMalformed || !strings.Contains(list[0].Remedy, "exists") || list[0].Pos.Line != 2 {
+			t.Errorf("%q: got %+v, want %s", text, list, want)
 		}
 	}
 }

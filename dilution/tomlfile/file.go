@@ -56,6 +56,10 @@ func checkText(name string, data []byte) ([]byte, refusal.List) {
 		return nil, one(name, refusal.FileEmpty, fmt.Sprintf("the file %q is empty", name),
 			"nothing", "a text file", "check that the file was saved")
 	}
+	if isUTF16(text) {
+		return nil, one(name, refusal.FileNotText, fmt.Sprintf("the file %q is text in UTF-16, not in UTF-8", name),
+			"UTF-16", "UTF-8", "save the file as plain text with the encoding UTF-8")
+	}
 	if at := notUTF8(text); at >= 0 {
 		list := one(name, refusal.FileNotText, fmt.Sprintf("the file %q is not plain text in UTF-8", name),
 			fmt.Sprintf("byte 0x%02X", text[at]), "UTF-8", "save the file as plain text with the encoding UTF-8")
@@ -63,6 +67,24 @@ func checkText(name string, data []byte) ([]byte, refusal.List) {
 		return nil, list
 	}
 	return text, nil
+}
+
+// isUTF16 recognises the two-byte encoding that some editors write, by its byte
+// order mark or, without one, by the empty half of its letters: most letters of
+// an order are plain ones, so that most bytes on one side are zero and few on
+// the other. TOML itself has no zero byte.
+func isUTF16(text []byte) bool {
+	if bytes.HasPrefix(text, []byte{0xFF, 0xFE}) || bytes.HasPrefix(text, []byte{0xFE, 0xFF}) {
+		return !bytes.HasPrefix(text, []byte{0xFF, 0xFE, 0, 0}) // that is a four-byte encoding
+	}
+	var zeros [2]int
+	for i, b := range text {
+		if b == 0 {
+			zeros[i%2]++
+		}
+	}
+	most, least, half := max(zeros[0], zeros[1]), min(zeros[0], zeros[1]), len(text)/2
+	return half > 0 && 2*most >= half && 10*least <= half && most > 1
 }
 
 // notUTF8 is the place of the first byte that is not UTF-8, or -1.

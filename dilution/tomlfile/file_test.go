@@ -2,10 +2,12 @@ package tomlfile
 
 import (
 	"bytes"
+	"encoding/binary"
 	"os"
 	"path/filepath"
 	"strings"
 	"testing"
+	"unicode/utf16"
 
 	"drawup/dilution/refusal"
 )
@@ -58,6 +60,42 @@ func TestReadFile(t *testing.T) {
 	data, list := ReadFile(write("marked.toml", []byte("\xef\xbb\xbfa = 1\n")))
 	if len(list) > 0 || string(data) != "a = 1\n" {
 		t.Errorf("got %q and %v, want the text without the byte order mark", data, list)
+	}
+}
+
+// Text in UTF-16, either byte order, with a mark or without (RFC 2781, part 3
+// and 4.3), is called by its name; other bytes that are not text are not. The
+// encoder is that of the standard library.
+func TestUTF16IsNamed(t *testing.T) {
+	encode := func(order binary.AppendByteOrder, s string) []byte {
+		var out []byte
+		for _, u := range utf16.Encode([]rune(s)) {
+			out = order.AppendUint16(out, u)
+		}
+		return out
+	}
+	text := "[session]\nplace = \"Br\u00fccke 2, \u65b0\U0001f489\"\ndate = \"2026-12-01\"\n"
+	for name, c := range map[string]struct {
+		data []byte
+		want bool
+	}{
+		"little end first":           {encode(binary.LittleEndian, text), true},
+		"big end first":              {encode(binary.BigEndian, text), true},
+		"little end first, marked":   {encode(binary.LittleEndian, "\ufeff"+text), true},
+		"big end first, marked":      {encode(binary.BigEndian, "\ufeff"+text), true},
+		"cut in the middle":          {encode(binary.LittleEndian, text)[1:], true},
+		"one line":                   {encode(binary.LittleEndian, "a = 1"), true},
+		"four bytes, marked":         {append([]byte{0xFF, 0xFE, 0, 0}, "a\x00\x00\x00"...), false},
+		"latin 1":                    {[]byte("place = \"Br\xfccke\"\n"), false},
+		"zeros in a text of 8 bits":  {[]byte("place = \"a\x00b\x00c\"\n"), false},
+		"a text of 8 bits":           {[]byte(text), false},
+		"one letter and a zero byte": {[]byte("a\x00"), false},
+	} {
+		_, list := checkText("f", c.data)
+		named := len(list) == 1 && list[0].Code == refusal.FileNotText && list[0].Got == "UTF-16" && strings.Contains(list[0].Message, "UTF-16")
+		if named != c.want {
+			t.Errorf("%s: got %v, want UTF-16 named %v", name, list, c.want)
+		}
 	}
 }
 
