@@ -128,7 +128,11 @@ func (s scribe) readBoxes() []Box {
 	if s.p.Mixture.Method != dilution.Neat {
 		out = append(out, Box{Label: "diluent"}, Box{Label: "diluent volume", Unit: "mL"})
 	}
-	return append(out, Box{Label: "final volume on the scale", Unit: "mL"})
+	final := "final volume on the scale"
+	if s.bag() {
+		final = "final volume in the bag"
+	}
+	return append(out, Box{Label: final, Unit: "mL"})
 }
 
 // workBoxes are what the second person works out.
