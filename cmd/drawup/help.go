@@ -106,6 +106,20 @@ const helpLabel = `drawup label: one label, at the moment its syringe is filled
   --json                             print the plan of this syringe
 `
 
+const helpFormulary = `drawup formulary: list the drugs that are stored, show one with every source
+  drawup formulary list --class NMB
+  drawup formulary show noradrenaline
+
+  drawup formulary list [flags]     one line a drug
+  drawup formulary show DRUG        all that is stored of one drug, by any of its names
+
+  --class            NMB             list one label class only
+  --json                             the answer as a JSON document
+
+The first line says whether anybody approved the data for use here. What stands
+in double quotes is written the same way in an order.
+`
+
 func runHelp(e env, args []string) int {
 	r := request{name: "help"}
 	for _, a := range args {
@@ -196,6 +210,8 @@ func helpText(name string) (string, bool) {
 		return helpPrepare, true
 	case "label":
 		return helpLabel, true
+	case "formulary":
+		return helpFormulary, true
 	}
 	flags, example, ok := flagsOf(name)
 	if !ok {
