@@ -98,13 +98,11 @@ func (r *reader) farFromMiddle(path []any, p Patient) {
 	if ok {
 		return
 	}
-	whose := "a patient without an id"
-	if p.ID.Given() {
-		whose = fmt.Sprintf("patient %q", p.ID.Value)
-	}
+	// The message is printed. It names no patient: an id such as "B7" is a figure
+	// on paper that no sum confirms.
 	r.caution(at(path, "weight"), refusal.Reason{
 		Code: refusal.WeightImplausible, Got: p.Weight.Text + " at " + p.Age.Text, Source: apls, Want: want,
-		Message: fmt.Sprintf("a weight of %s is far from the middle of the age %s, of %s; doses by weight may go wrong by as much", p.Weight.Text, p.Age.Text, whose),
+		Message: fmt.Sprintf("a weight of %s is far from the middle for an age of %s; doses by weight may go wrong by as much", p.Weight.Text, p.Age.Text),
 		Remedy:  "check that it is in kg and not in pounds, that its digits are in order, and the age",
 	})
 }
