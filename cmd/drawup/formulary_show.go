@@ -130,7 +130,7 @@ func (p proof) presentation(x shownPresentation) {
 	if x.Added != nil {
 		p.item("to be mixed", "add "+x.Added.Printed+" of "+strings.Join(quoted(x.AddFluids), " or "))
 		if x.Displacement == nil {
-			p.item("displacement", "not known: part of a container is refused")
+			p.item("displacement", "not stored: no concentration can be worked, so every use is refused")
 		}
 	}
 	p.figure("displacement", x.Displacement)
@@ -196,7 +196,7 @@ func (p proof) bounds(list []shownBounds) {
 // never be given that way has said so already.
 func (p proof) rules(kind string, list []shownRule, never bool) {
 	if len(list) == 0 && !never {
-		p.head("%s: no limits are stored, so every %s is refused", kind, kind)
+		p.head("%s: no limits are stored", kind)
 	}
 	for _, r := range list {
 		p.rule(kind, r)

@@ -191,7 +191,10 @@ func (p *heldPage) held(name, text, at string) {
 	case "age_from", "age_to":
 		want = []string{map[string]string{"age_from": "from ", "age_to": "under "}[name] + text}
 	case "line":
-		want = []string{"line " + text, text + " line"}
+		want = []string{text + " line"}
+		if strings.Contains(at, "standard") {
+			want = []string{"line " + text}
+		}
 	}
 	for _, w := range want {
 		if strings.Contains(p.text, oneLineOf(w)) {
