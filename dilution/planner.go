@@ -45,6 +45,7 @@ func NewList(o order.Order, f *formulary.Formulary, at time.Time, leaveOut map[i
 	for _, sy := range o.Syringes {
 		unread := broken[sy.Number] || unreadable(o.Patients[sy.Patient])
 		p, reasons := newPlan(s, f, o, sy, at, unread)
+		p.Cautions = append(ofPatient(faults, o.Patients[sy.Patient]), p.Cautions...)
 		if unread && !leaveOut[sy.Number] {
 			all = append(all, reasons.Refusals()...)
 			continue
@@ -274,4 +275,16 @@ func joinOr(list []string) string {
 		s = s[:len(s)-len(" and "+last)] + " or " + last
 	}
 	return s
+}
+
+// ofPatient is the cautions of the reading that stand on a value of this
+// patient, to be printed with each of the patient's syringes.
+func ofPatient(faults refusal.List, p order.Patient) refusal.List {
+	var out refusal.List
+	for _, r := range faults.Cautions().Of(0) {
+		if p.Weight.Given() && r.Pos == p.Weight.Pos {
+			out = append(out, r)
+		}
+	}
+	return out
 }

@@ -270,13 +270,14 @@ func Moment(s quantity.Style, t time.Time) string {
 // Span is a number of minutes in hours and minutes: "9 h 25 min", "45 min".
 func Span(minutes int64) string {
 	h, m := minutes/60, minutes%60
+	hours := quantity.UK().Number(new(big.Rat).SetInt64(h)) + " h" // groups from 1,000 on
 	switch {
 	case h == 0:
 		return fmt.Sprintf("%d min", m)
 	case m == 0:
-		return fmt.Sprintf("%d h", h)
+		return hours
 	}
-	return fmt.Sprintf("%d h %d min", h, m)
+	return fmt.Sprintf("%s %d min", hours, m)
 }
 
 // Capital is a drug's name as labels print it: lower case with an initial

@@ -136,6 +136,9 @@ func (c *check) honoured(name, text string) *objection {
 	case UseBy, EmptyAt:
 		return sameMoment(c.asked[name][0], text)
 	}
+	if key, _ := splitRow(name); key == Said+".*.text" || key == Bound+".*.text" {
+		return nil // asGiven compares these letter for letter
+	}
 	r, err := c.parse(text)
 	if err != nil {
 		return c.sameText(name, text)
