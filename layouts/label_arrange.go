@@ -206,7 +206,8 @@ func (a *arrangement) upper(l labels.Label, c *content, strips int) bool {
 		return false
 	}
 	if d.class.Line {
-		a.line = d.line(a.name.bottom + lineAir)
+		// Level with the end of the stripes, so that none shows below it.
+		a.line = d.line(max(a.name.bottom+lineAir, d.legEnd-d.lineHeight()))
 	}
 	return true
 }
