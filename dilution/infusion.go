@@ -153,6 +153,10 @@ func (w *work) setPump(part *InfusionPart) bool {
 		}
 		return w.fault(err, "start", w.o.Start.Pos)
 	}
+	if pump.Beyond(start.Rate) {
+		return w.refuse(refusal.Reason{Code: refusal.RateAbovePump, Field: "start", Got: s.FlowRate(start.Rate), Want: "a rate that a pump can be set to", Rule: "R8", Pos: w.o.Start.Pos, Source: "common practice, no source",
+			Message: fmt.Sprintf("the start dose needs %s, more than pumps in common use can be set to", s.FlowRate(start.Rate)), Remedy: "check dose, unit and mixture; a stronger mixture runs slower"})
+	}
 	part.Start = start
 	if !w.startWithin(part) {
 		return false

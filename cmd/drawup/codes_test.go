@@ -105,6 +105,7 @@ func examples() map[refusal.Code]func(*testing.T) string {
 		refusal.FlagConflict:     told("rate", "--dose", "1 mg/h", "--rate", "1 mL/h", "--mix", "4 mg in 50 mL"),
 		refusal.QuickCheck:       told("dose", "--dose", "4 mg", "--concentration", "2 mg/mL", "--drug", "ondansetron", "--age", "40 years"),
 		refusal.SurfaceMissing:   told("rate", "--dose", "1 mg/m2/h", "--mix", "4 mg in 50 mL"),
+		refusal.RateAbovePump:    told("rate", "--dose", "100 mg/min", "--mix", "100 mg in 100 mL"),
 		refusal.StockUnknown:     preparing(soundOrder, "order.toml", "--stock", "papyrus"),
 		refusal.SyringeNumber:    preparing(soundOrder, "order.toml", "--leave-out", "9"),
 		refusal.SyringesLeftOut:  preparing(two, "order.toml", "--leave-out", "2"),

@@ -107,6 +107,7 @@ const (
 	ContainersMany        Code = "many-containers"
 	BagFillUnknown        Code = "bag-fill-unknown"
 	RateBelowPump         Code = "rate-below-pump-step"
+	RateAbovePump         Code = "rate-above-pump"
 	RateRounding          Code = "rate-rounding-large"
 	RunsPastUseBy         Code = "runs-past-use-by"
 	RateSlow              Code = "rate-slow-start"
