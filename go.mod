@@ -1,15 +1,19 @@
 module drawup
 
-go 1.26.8
+go 1.26.0
 
 require (
 	github.com/boombuler/barcode v1.1.0
 	github.com/go-pdf/fpdf v0.9.0
+	github.com/pelletier/go-toml/v2 v2.4.3
+	github.com/spf13/pflag v1.1.0
+)
+
+// Tests only: a build downloads none of these.
+require (
 	github.com/klippa-app/go-pdfium v1.21.4
 	github.com/makiuchi-d/gozxing v0.1.1
-	github.com/pelletier/go-toml/v2 v2.4.3
 	github.com/rogpeppe/go-internal v1.16.0
-	github.com/spf13/pflag v1.1.0
 	github.com/tetratelabs/wazero v1.12.0
 	pgregory.net/rapid v1.3.0
 )
