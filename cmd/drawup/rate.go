@@ -186,9 +186,8 @@ func workRate(r *request, s rateSum, doc *rateDocument) {
 		return
 	}
 	if pump.Beyond(set.Rate) {
-		r.add(refusal.Reason{Code: refusal.RateAbovePump, Field: "pump rate", Got: r.style.FlowRate(set.Rate), Want: "a rate that a pump can be set to", Rule: "R8", Source: "common practice, no source",
+		r.caution(refusal.Reason{Code: refusal.RateAbovePump, Field: "pump rate", Got: r.style.FlowRate(set.Rate), Want: "a rate that a pump can be set to", Rule: "R8", Source: "common practice, no source",
 			Message: "the dose rate needs " + r.style.FlowRate(set.Rate) + ", more than pumps in common use can be set to", Remedy: "check dose, unit and mixture; a stronger mixture runs slower"})
-		return
 	}
 	doc.DoseRate, doc.FlowRate = doseRateJSON(r.style, set.Dose), flowRateJSON(r.style, set.Exact)
 	doc.PumpRate, doc.Delivered = flowRateJSON(r.style, set.Rate), doseRateJSON(r.style, set.Delivered)

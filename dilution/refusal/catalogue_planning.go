@@ -59,7 +59,7 @@ func measuringEntries() []Entry {
 		warns(ContainersMany, Measuring, "R8", "More than ten ampoules have to be opened for one syringe."),
 		warns(BagFillUnknown, Measuring, "R9", "A bag holds more than its nominal volume, by an unknown amount."),
 		stops(RateBelowPump, Measuring, "R8", "A dose rate needs less than half of the pump's smallest step."),
-		stops(RateAbovePump, Measuring, "R8", "A dose rate needs more than pumps in common use can be set to."),
+		either(RateAbovePump, Measuring, "R8", "A dose rate needs more than pumps in common use can be set to: refused in an order, told with a quick sum."),
 		warns(RateRounding, Measuring, "R2", "Rounding to the pump's step changes the dose by more than the site's tolerance."),
 		warns(RateSlow, Measuring, "R8", "Below 1 mL/h a pump may take many minutes to begin delivering."),
 		stops(ExpiredPresentation, Times, "R18", "The ampoule or vial is past its expiry date."),
