@@ -65,7 +65,10 @@ func (w *work) useBy() bool {
 		}
 		known = true
 		if s.Minutes < best.Minutes {
-			best = UseBy{Minutes: s.Minutes, Won: "stability, " + s.Diluent + ", at room temperature", Source: s.Source.Title}
+			best = UseBy{
+				Minutes: s.Minutes, Won: "stability, " + s.Diluent + ", at room temperature",
+				Source: s.Source.Title,
+			}
 		}
 	}
 	best.Stability = known
@@ -82,8 +85,13 @@ func (w *work) useBy() bool {
 func (w *work) expiry(best UseBy) bool {
 	end := w.o.Expiry.Value
 	if !end.After(w.plan.Prepared) {
-		return w.refuse(refusal.Reason{Code: refusal.ExpiredPresentation, Field: "expiry", Got: w.o.Expiry.Text, Want: "a date after " + w.plan.Prepared.Format("2006-01-02"), Rule: "R18", Pos: w.o.Expiry.Pos,
-			Message: "the container is past its expiry date", Remedy: "discard it and take another"})
+		return w.refuse(refusal.Reason{
+			Code: refusal.ExpiredPresentation, Field: "expiry",
+			Got: w.o.Expiry.Text, Want: "a date after " + w.plan.Prepared.Format("2006-01-02"),
+			Rule: "R18", Pos: w.o.Expiry.Pos,
+			Message: "the container is past its expiry date",
+			Remedy:  "discard it and take another",
+		})
 	}
 	if left := int64(end.Sub(w.plan.Prepared) / time.Minute); left < best.Minutes {
 		best = UseBy{At: end, Minutes: left, Won: "expiry of the container", Source: "the order"}
@@ -98,8 +106,13 @@ func (w *work) lasts() bool {
 	if part == nil || part.Minutes <= w.plan.UseBy.Minutes {
 		return true
 	}
-	return w.caution(refusal.Reason{Code: refusal.RunsPastUseBy, Rule: "R18", Field: "start", Got: fmt.Sprintf("%d h", part.Minutes/60), Want: fmt.Sprintf("%d h", w.plan.UseBy.Minutes/60), Pos: w.o.Start.Pos,
-		Message: "at the start rate the syringe would still be running after its use-by time", Remedy: "change it at the use-by time, empty or not"})
+	return w.caution(refusal.Reason{
+		Code: refusal.RunsPastUseBy, Rule: "R18",
+		Field: "start", Got: fmt.Sprintf("%d h", part.Minutes/60),
+		Want: fmt.Sprintf("%d h", w.plan.UseBy.Minutes/60), Pos: w.o.Start.Pos,
+		Message: "at the start rate the syringe would still be running after its use-by time",
+		Remedy:  "change it at the use-by time, empty or not",
+	})
 }
 
 func (w *work) stabilityFits(diluent string) bool {

@@ -11,21 +11,39 @@ import (
 func (w *work) findDrug() bool {
 	d, near, ok := w.f.Find(w.o.Drug.Value)
 	if !ok {
-		remedy := "add it to the formulary (whoever keeps it does that), or check the spelling; drawup formulary list shows what there is"
+		remedy := "add it to the formulary (whoever keeps it does that), or check the spelling; " +
+			"drawup formulary list shows what there is"
 		if len(near) > 0 {
 			remedy = "was " + joinOr(near) + " meant?"
 		}
-		return w.refuse(refusal.Reason{Code: refusal.DrugUnknown, Field: "drug", Got: w.o.Drug.Text, Want: "a drug of the formulary", Rule: "R10", Pos: w.o.Drug.Pos,
-			Message: fmt.Sprintf("%q is not in the formulary", w.o.Drug.Value), Remedy: remedy})
+		return w.refuse(refusal.Reason{
+			Code: refusal.DrugUnknown, Field: "drug",
+			Got: w.o.Drug.Text, Want: "a drug of the formulary",
+			Rule: "R10", Pos: w.o.Drug.Pos,
+			Message: fmt.Sprintf("%q is not in the formulary", w.o.Drug.Value),
+			Remedy:  remedy,
+		})
 	}
 	w.plan.Drug = d
 	if w.o.Infusion && d.NeverAsInfusion != nil {
-		return w.refuse(refusal.Reason{Code: refusal.NeverAsInfusion, Field: "infusion", Got: d.Name, Want: "a single dose", Rule: "R11", Source: d.NeverAsInfusion.Source.Title, Pos: w.o.Drug.Pos,
-			Message: fmt.Sprintf("%s must never be given as an infusion: %s", d.Name, d.NeverAsInfusion.Text), Remedy: "choose another drug for maintenance; no setting passes this limit"})
+		return w.refuse(refusal.Reason{
+			Code: refusal.NeverAsInfusion, Field: "infusion",
+			Got: d.Name, Want: "a single dose",
+			Rule: "R11", Source: d.NeverAsInfusion.Source.Title,
+			Pos:     w.o.Drug.Pos,
+			Message: fmt.Sprintf("%s must never be given as an infusion: %s", d.Name, d.NeverAsInfusion.Text),
+			Remedy:  "choose another drug for maintenance; no setting passes this limit",
+		})
 	}
 	if !w.o.Infusion && d.NeverAsBolus != nil {
-		return w.refuse(refusal.Reason{Code: refusal.NeverAsBolus, Field: "syringe", Got: d.Name, Want: "an infusion", Rule: "R11", Source: d.NeverAsBolus.Source.Title, Pos: w.o.Drug.Pos,
-			Message: fmt.Sprintf("%s must never be given as a bolus: %s", d.Name, d.NeverAsBolus.Text), Remedy: "order it as an infusion; no setting passes this limit"})
+		return w.refuse(refusal.Reason{
+			Code: refusal.NeverAsBolus, Field: "syringe",
+			Got: d.Name, Want: "an infusion",
+			Rule: "R11", Source: d.NeverAsBolus.Source.Title,
+			Pos:     w.o.Drug.Pos,
+			Message: fmt.Sprintf("%s must never be given as a bolus: %s", d.Name, d.NeverAsBolus.Text),
+			Remedy:  "order it as an infusion; no setting passes this limit",
+		})
 	}
 	return true
 }
@@ -37,12 +55,23 @@ func (w *work) choosePresentation() bool {
 	if w.o.Presentation.Given() {
 		p, ok := d.Presentation(w.o.Presentation.Value)
 		if !ok {
-			return w.refuse(refusal.Reason{Code: refusal.PresentationUnknown, Field: "presentation", Got: w.o.Presentation.Text, Want: joinOr(ids(d.Presentations)), Rule: "R10", Pos: w.o.Presentation.Pos,
-				Message: fmt.Sprintf("the formulary lists no %q for %s", w.o.Presentation.Value, d.Name), Remedy: "use one of: " + joinOr(ids(d.Presentations))})
+			return w.refuse(refusal.Reason{
+				Code: refusal.PresentationUnknown, Field: "presentation",
+				Got: w.o.Presentation.Text, Want: joinOr(ids(d.Presentations)),
+				Rule: "R10", Pos: w.o.Presentation.Pos,
+				Message: fmt.Sprintf("the formulary lists no %q for %s", w.o.Presentation.Value, d.Name),
+				Remedy:  "use one of: " + joinOr(ids(d.Presentations)),
+			})
 		}
 		if !p.For(w.use()) {
-			return w.refuse(refusal.Reason{Code: refusal.PresentationNotPump, Field: "presentation", Got: p.ID, Want: "a presentation for " + w.use(), Rule: "R10", Source: p.Source.Title, Pos: w.o.Presentation.Pos,
-				Message: fmt.Sprintf("%s of %s is not listed for use as %s", p.ID, d.Name, w.use()), Remedy: "use one of: " + joinOr(ids(w.usable()))})
+			return w.refuse(refusal.Reason{
+				Code: refusal.PresentationNotPump, Field: "presentation",
+				Got: p.ID, Want: "a presentation for " + w.use(),
+				Rule: "R10", Source: p.Source.Title,
+				Pos:     w.o.Presentation.Pos,
+				Message: fmt.Sprintf("%s of %s is not listed for use as %s", p.ID, d.Name, w.use()),
+				Remedy:  "use one of: " + joinOr(ids(w.usable())),
+			})
 		}
 		w.plan.Presentation = p
 		return w.powderKnown()
@@ -50,14 +79,27 @@ func (w *work) choosePresentation() bool {
 	fits := w.usable()
 	switch len(fits) {
 	case 0:
-		return w.refuse(refusal.Reason{Code: refusal.FormularyBlank, Field: "presentation", Want: "a presentation for " + w.use(), Rule: "R10", Pos: w.o.Drug.Pos,
-			Message: fmt.Sprintf("the formulary lists no presentation of %s for use as %s", d.Name, w.use()), Remedy: "add one with its source to the formulary (whoever keeps it does that)"})
+		return w.refuse(refusal.Reason{
+			Code: refusal.FormularyBlank, Field: "presentation",
+			Want: "a presentation for " + w.use(), Rule: "R10",
+			Pos:     w.o.Drug.Pos,
+			Message: fmt.Sprintf("the formulary lists no presentation of %s for use as %s", d.Name, w.use()),
+			Remedy:  "add one with its source to the formulary (whoever keeps it does that)",
+		})
 	case 1:
 		w.plan.Presentation = fits[0]
 		return w.powderKnown()
 	}
-	return w.refuse(refusal.Reason{Code: refusal.PresentationUnclear, Field: "presentation", Want: joinOr(ids(fits)), Rule: "R10", Pos: w.o.Pos,
-		Message: fmt.Sprintf("%s comes in more than one presentation and the order does not say which is on the bench", d.Name), Remedy: "write presentation = one of: " + joinOr(ids(fits))})
+	return w.refuse(refusal.Reason{
+		Code: refusal.PresentationUnclear, Field: "presentation",
+		Want: joinOr(ids(fits)), Rule: "R10",
+		Pos: w.o.Pos,
+		Message: fmt.Sprintf(
+			"%s comes in more than one presentation and the order does not say which is on the bench",
+			d.Name,
+		),
+		Remedy: "write presentation = one of: " + joinOr(ids(fits)),
+	})
 }
 
 func (w *work) usable() []formulary.Presentation {
@@ -83,12 +125,24 @@ func (w *work) powderKnown() bool {
 	p := w.plan.Presentation
 	if p.Volume.Given() {
 		if p.Negligible {
-			w.caution(refusal.Reason{Code: refusal.NegligibleDisplacement, Field: "displacement", Rule: "R7", Source: p.Displacement.Source.Title,
-				Message: "the volume of the powder itself is taken as nothing, as its source does"})
+			w.caution(refusal.Reason{
+				Code: refusal.NegligibleDisplacement, Field: "displacement",
+				Rule: "R7", Source: p.Displacement.Source.Title,
+				Message: "the volume of the powder itself is taken as nothing, as its source does",
+			})
 		}
 		return true
 	}
-	return w.refuse(refusal.Reason{Code: refusal.DisplacementBlank, Field: "displacement", Want: "a displacement volume, or a source that calls it negligible", Rule: "R7", Pos: w.o.Drug.Pos,
-		Message: fmt.Sprintf("the formulary does not say how much volume the powder of %s takes, so no concentration can be worked out", p.ID),
-		Remedy:  "add the displacement of the product in your hand, with its source, to the formulary (whoever keeps it does that)"})
+	return w.refuse(refusal.Reason{
+		Code: refusal.DisplacementBlank, Field: "displacement",
+		Want: "a displacement volume, or a source that calls it negligible", Rule: "R7",
+		Pos: w.o.Drug.Pos,
+		Message: fmt.Sprintf(
+			"the formulary does not say how much volume the powder of %s takes, "+
+				"so no concentration can be worked out",
+			p.ID,
+		),
+		Remedy: "add the displacement of the product in your hand, with its source, to the formulary " +
+			"(whoever keeps it does that)",
+	})
 }

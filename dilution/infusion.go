@@ -97,7 +97,12 @@ func (w *work) judgeRange(row formulary.Rule[quantity.DoseRate]) (verdict, error
 }
 
 // judgeRate holds one dose rate against one row, as absolute rates.
-func (w *work) judgeRate(row formulary.Rule[quantity.DoseRate], rate quantity.DoseRate, field string, pos refusal.Pos) (verdict, error) {
+func (w *work) judgeRate(
+	row formulary.Rule[quantity.DoseRate],
+	rate quantity.DoseRate,
+	field string,
+	pos refusal.Pos,
+) (verdict, error) {
 	s, err := w.rateScale(row, rate, field, pos)
 	if err != nil {
 		return verdict{}, err
@@ -106,7 +111,12 @@ func (w *work) judgeRate(row formulary.Rule[quantity.DoseRate], rate quantity.Do
 }
 
 // rateScale is one row with the rate held against it, as absolute rates.
-func (w *work) rateScale(row formulary.Rule[quantity.DoseRate], rate quantity.DoseRate, field string, pos refusal.Pos) (scale, error) {
+func (w *work) rateScale(
+	row formulary.Rule[quantity.DoseRate],
+	rate quantity.DoseRate,
+	field string,
+	pos refusal.Pos,
+) (scale, error) {
 	by := row.By
 	if w.o.RateBy.Given() {
 		by = w.o.RateBy.Value
@@ -115,9 +125,15 @@ func (w *work) rateScale(row formulary.Rule[quantity.DoseRate], rate quantity.Do
 	if err != nil {
 		return scale{}, err
 	}
-	s := scale{what: "dose rate", field: field, value: value, text: w.plan.Style.DoseRate(rate), codes: rateCodes, pos: pos,
-		acceptedBy: w.o.AcceptedBy.Value, acceptedReason: w.o.AcceptedReason.Value}
-	err = fillScale(&s, row, w.plan.Style.DoseRate, func(x quantity.DoseRate) (*big.Rat, error) { return w.absoluteRate(x, row.By) })
+	s := scale{
+		what: "dose rate", field: field,
+		value: value, text: w.plan.Style.DoseRate(rate),
+		codes: rateCodes, pos: pos,
+		acceptedBy: w.o.AcceptedBy.Value, acceptedReason: w.o.AcceptedReason.Value,
+	}
+	err = fillScale(&s, row, w.plan.Style.DoseRate, func(x quantity.DoseRate) (*big.Rat, error) {
+		return w.absoluteRate(x, row.By)
+	})
 	return s, err
 }
 
@@ -148,14 +164,27 @@ func (w *work) setPump(part *InfusionPart) bool {
 	start, err := pump.Set(w.o.Start.Value, part.per(), c, part.Step)
 	if err != nil {
 		if exact, e := pump.Flow(w.o.Start.Value, part.per(), c); e == nil {
-			return w.refuse(refusal.Reason{Code: refusal.RateBelowPump, Field: "start", Got: s.FlowRate(exact), Want: "at least half of the pump's step, " + s.FlowRate(part.Step), Rule: "R8", Pos: w.o.Start.Pos,
-				Message: fmt.Sprintf("the start dose needs %s, less than the pump can be set to", s.FlowRate(exact)), Remedy: "use a weaker mixture"})
+			return w.refuse(refusal.Reason{
+				Code: refusal.RateBelowPump, Field: "start",
+				Got: s.FlowRate(exact), Want: "at least half of the pump's step, " + s.FlowRate(part.Step),
+				Rule: "R8", Pos: w.o.Start.Pos,
+				Message: fmt.Sprintf("the start dose needs %s, less than the pump can be set to",
+					s.FlowRate(exact)),
+				Remedy: "use a weaker mixture",
+			})
 		}
 		return w.fault(err, "start", w.o.Start.Pos)
 	}
 	if pump.Beyond(start.Rate) {
-		return w.refuse(refusal.Reason{Code: refusal.RateAbovePump, Field: "start", Got: s.FlowRate(start.Rate), Want: "a rate that a pump can be set to", Rule: "R8", Pos: w.o.Start.Pos, Source: "common practice, no source",
-			Message: fmt.Sprintf("the start dose needs %s, more than pumps in common use can be set to", s.FlowRate(start.Rate)), Remedy: "check dose, unit and mixture; a stronger mixture runs slower"})
+		return w.refuse(refusal.Reason{
+			Code: refusal.RateAbovePump, Field: "start",
+			Got: s.FlowRate(start.Rate), Want: "a rate that a pump can be set to",
+			Rule: "R8", Pos: w.o.Start.Pos,
+			Source: "common practice, no source",
+			Message: fmt.Sprintf("the start dose needs %s, more than pumps in common use can be set to",
+				s.FlowRate(start.Rate)),
+			Remedy: "check dose, unit and mixture; a stronger mixture runs slower",
+		})
 	}
 	part.Start = start
 	if !w.startWithin(part) {
@@ -163,12 +192,24 @@ func (w *work) setPump(part *InfusionPart) bool {
 	}
 	start = part.Start
 	if new(big.Rat).Abs(start.LostPercent).Cmp(w.site.tolerance.Rat()) > 0 {
-		w.caution(refusal.Reason{Code: refusal.RateRounding, Field: "start", Got: s.FlowRate(start.Exact), Want: s.FlowRate(start.Rate), Rule: "R2", Pos: w.o.Start.Pos,
-			Message: fmt.Sprintf("rounding to the pump's step changes the start dose by %s; it gives %s", percentOf(s, start.LostPercent), s.DoseRate(start.Delivered)), Remedy: "a weaker mixture rounds less"})
+		w.caution(refusal.Reason{
+			Code: refusal.RateRounding, Field: "start",
+			Got: s.FlowRate(start.Exact), Want: s.FlowRate(start.Rate),
+			Rule: "R2", Pos: w.o.Start.Pos,
+			Message: fmt.Sprintf("rounding to the pump's step changes the start dose by %s; it gives %s",
+				percentOf(s, start.LostPercent), s.DoseRate(start.Delivered)),
+			Remedy: "a weaker mixture rounds less",
+		})
 	}
 	if start.Rate.Rat().Cmp(one()) < 0 {
-		w.caution(refusal.Reason{Code: refusal.RateSlow, Field: "start", Got: s.FlowRate(start.Rate), Want: "1 mL/h or more", Rule: "R8", Pos: w.o.Start.Pos, Source: "Neff et al., Paediatr Anaesth 2001;11:561-565",
-			Message: "below 1 mL/h a syringe pump may take many minutes to begin delivering", Remedy: "purge the line on the pump before connecting, or use a weaker mixture"})
+		w.caution(refusal.Reason{
+			Code: refusal.RateSlow, Field: "start",
+			Got: s.FlowRate(start.Rate), Want: "1 mL/h or more",
+			Rule: "R8", Pos: w.o.Start.Pos,
+			Source:  "Neff et al., Paediatr Anaesth 2001;11:561-565",
+			Message: "below 1 mL/h a syringe pump may take many minutes to begin delivering",
+			Remedy:  "purge the line on the pump before connecting, or use a weaker mixture",
+		})
 	}
 	return true
 }
@@ -190,8 +231,13 @@ func (w *work) startWithin(part *InfusionPart) bool {
 		return w.fault(err, "start", w.o.Start.Pos)
 	}
 	if part.Start.Rate.Rat().Sign() <= 0 {
-		return w.refuse(refusal.Reason{Code: refusal.RateBelowPump, Field: "start", Got: w.plan.Style.FlowRate(part.Start.Exact), Want: "at least the pump's step", Rule: "R8", Pos: w.o.Start.Pos,
-			Message: "below the limit there is no rate that the pump can be set to", Remedy: "use a weaker mixture"})
+		return w.refuse(refusal.Reason{
+			Code: refusal.RateBelowPump, Field: "start",
+			Got: w.plan.Style.FlowRate(part.Start.Exact), Want: "at least the pump's step",
+			Rule: "R8", Pos: w.o.Start.Pos,
+			Message: "below the limit there is no rate that the pump can be set to",
+			Remedy:  "use a weaker mixture",
+		})
 	}
 	return true
 }
@@ -224,7 +270,8 @@ func (w *work) rangeEnds(part *InfusionPart) (low, high quantity.DoseRate) {
 	start, row := w.o.Start.Value, part.Rule
 	low, high = start.Scaled(big.NewRat(1, 2)), start.Scaled(big.NewRat(2, 1))
 	alike := func(f formulary.Figure[quantity.DoseRate]) bool {
-		return f.Given() && f.Value.Basis() == start.Basis() && f.Value.Unit().String() == start.Unit().String() && f.Value.Period() == start.Period()
+		return f.Given() && f.Value.Basis() == start.Basis() &&
+			f.Value.Unit().String() == start.Unit().String() && f.Value.Period() == start.Period()
 	}
 	if alike(row.UsualLow) && alike(row.UsualHigh) {
 		low, high = row.UsualLow.Value, row.UsualHigh.Value

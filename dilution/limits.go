@@ -22,8 +22,14 @@ func (w *work) checkConcentration() bool {
 		if central {
 			remedy = "if it goes into a central line, write line = \"central\"; otherwise " + remedy
 		}
-		return w.refuse(refusal.Reason{Code: refusal.FormularyBlank, Field: "concentration bounds", Got: line + " line", Want: "bounds for " + w.use(), Rule: "R10", Pos: w.o.Pos,
-			Message: fmt.Sprintf("the formulary has no concentration bounds of %s for %s into a %s line", w.plan.Drug.Name, w.use(), line), Remedy: remedy})
+		return w.refuse(refusal.Reason{
+			Code: refusal.FormularyBlank, Field: "concentration bounds",
+			Got: line + " line", Want: "bounds for " + w.use(),
+			Rule: "R10", Pos: w.o.Pos,
+			Message: fmt.Sprintf("the formulary has no concentration bounds of %s for %s into a %s line",
+				w.plan.Drug.Name, w.use(), line),
+			Remedy: remedy,
+		})
 	}
 	ok := true
 	for _, b := range rows {
@@ -58,18 +64,38 @@ func (w *work) boundsFor(line string) (rows []formulary.Bounds, central bool) {
 func (w *work) within(b formulary.Bounds) bool {
 	c, s := w.plan.Mixture.Concentration, w.plan.Style
 	if !b.Low.Given() || !b.High.Given() {
-		return w.refuse(refusal.Reason{Code: refusal.FormularyBlank, Field: "concentration bounds", Want: "a lowest and a highest concentration", Rule: "R12", Pos: w.o.Pos,
-			Message: fmt.Sprintf("the formulary lacks one end of the concentration bounds of %s for %s", w.plan.Drug.Name, b.Use), Remedy: "add it with its source to the formulary (whoever keeps it does that)"})
+		return w.refuse(refusal.Reason{
+			Code: refusal.FormularyBlank, Field: "concentration bounds",
+			Want: "a lowest and a highest concentration", Rule: "R12",
+			Pos: w.o.Pos,
+			Message: fmt.Sprintf("the formulary lacks one end of the concentration bounds of %s for %s",
+				w.plan.Drug.Name, b.Use),
+			Remedy: "add it with its source to the formulary (whoever keeps it does that)",
+		})
 	}
 	if n, err := c.Cmp(b.High.Value); err != nil {
 		return w.fault(err, "concentration", w.o.Pos)
 	} else if n > 0 {
-		return w.refuse(refusal.Reason{Code: refusal.ConcentrationTooHigh, Field: "concentration", Got: s.Concentration(c), Want: "at most " + s.Concentration(b.High.Value), Rule: "R10", Source: b.High.Source.Title, Pos: w.o.Pos,
-			Message: fmt.Sprintf("%s is stronger than %s may be for %s, %s line", s.Concentration(c), w.plan.Drug.Name, b.Use, b.Line), Remedy: "order a larger volume or a smaller amount"})
+		return w.refuse(refusal.Reason{
+			Code: refusal.ConcentrationTooHigh, Field: "concentration",
+			Got: s.Concentration(c), Want: "at most " + s.Concentration(b.High.Value),
+			Rule: "R10", Source: b.High.Source.Title,
+			Pos: w.o.Pos,
+			Message: fmt.Sprintf("%s is stronger than %s may be for %s, %s line",
+				s.Concentration(c), w.plan.Drug.Name, b.Use, b.Line),
+			Remedy: "order a larger volume or a smaller amount",
+		})
 	}
 	if n, _ := c.Cmp(b.Low.Value); n < 0 {
-		return w.refuse(refusal.Reason{Code: refusal.ConcentrationTooLow, Field: "concentration", Got: s.Concentration(c), Want: "at least " + s.Concentration(b.Low.Value), Rule: "R12", Source: b.Low.Source.Title, Pos: w.o.Pos,
-			Message: fmt.Sprintf("%s is weaker than %s may be for %s, %s line", s.Concentration(c), w.plan.Drug.Name, b.Use, b.Line), Remedy: "order a smaller volume or a larger amount"})
+		return w.refuse(refusal.Reason{
+			Code: refusal.ConcentrationTooLow, Field: "concentration",
+			Got: s.Concentration(c), Want: "at least " + s.Concentration(b.Low.Value),
+			Rule: "R12", Source: b.Low.Source.Title,
+			Pos: w.o.Pos,
+			Message: fmt.Sprintf("%s is weaker than %s may be for %s, %s line",
+				s.Concentration(c), w.plan.Drug.Name, b.Use, b.Line),
+			Remedy: "order a smaller volume or a larger amount",
+		})
 	}
 	return true
 }
@@ -96,8 +122,14 @@ type codes struct {
 	aboveHard, aboveSoft, aboveUsual, belowHard, belowUsual refusal.Code
 }
 
-var doseCodes = codes{refusal.DoseAboveHard, refusal.DoseAboveSoft, refusal.DoseAboveUsual, refusal.DoseBelowHard, refusal.DoseBelowSoft}
-var rateCodes = codes{refusal.RateAboveHard, refusal.RateAboveSoft, refusal.RateAboveUsual, refusal.RateBelowHard, refusal.RateBelowSoft}
+var doseCodes = codes{
+	refusal.DoseAboveHard, refusal.DoseAboveSoft, refusal.DoseAboveUsual,
+	refusal.DoseBelowHard, refusal.DoseBelowSoft,
+}
+var rateCodes = codes{
+	refusal.RateAboveHard, refusal.RateAboveSoft, refusal.RateAboveUsual,
+	refusal.RateBelowHard, refusal.RateBelowSoft,
+}
 
 // A bound is one figure of a row as a bare number in a common unit, so that
 // doses and dose rates share one set of checks.
@@ -170,7 +202,8 @@ func (s scale) judge() verdict {
 	case s.hardLow.given && s.value.Cmp(s.hardLow.value) < 0:
 		v.say(3, s.reason(s.slipUnder(s.codes.belowHard), s.hardLow, "less than the lowest that may be given"))
 	case s.usualLow.given && times(s.value, 10).Cmp(s.usualLow.value) <= 0:
-		v.say(3, s.reason(s.slipUnder(refusal.SlipTen), s.usualLow, "a tenth of the usual lowest or less; is a decimal point or a unit wrong?"))
+		v.say(3, s.reason(s.slipUnder(refusal.SlipTen), s.usualLow,
+			"a tenth of the usual lowest or less; is a decimal point or a unit wrong?"))
 	case s.softHigh.given && s.value.Cmp(s.softHigh.value) > 0:
 		s.soft(&v)
 	case s.usualHigh.given && s.value.Cmp(s.usualHigh.value) > 0:
@@ -179,7 +212,8 @@ func (s scale) judge() verdict {
 		v.say(1, s.reason(s.codes.belowUsual, s.usualLow, "less than usual"))
 	}
 	if !s.usualLow.given && !s.hardLow.given && v.rank < 3 {
-		r := s.reason(refusal.FormularyBlank, bound{}, "checked upwards only: the formulary stores no lower figure, so a slip downwards would not be caught")
+		r := s.reason(refusal.FormularyBlank, bound{},
+			"checked upwards only: the formulary stores no lower figure, so a slip downwards would not be caught")
 		v.say(1, r)
 	}
 	return v
@@ -188,7 +222,8 @@ func (s scale) judge() verdict {
 // soft lets a value pass a soft limit only with a name and a reason (R11).
 func (s scale) soft(v *verdict) {
 	if s.acceptedBy != "" && s.acceptedReason != "" {
-		r := s.reason(s.codes.aboveSoft, s.softHigh, fmt.Sprintf("above the soft limit; accepted by %s: %s", s.acceptedBy, s.acceptedReason))
+		r := s.reason(s.codes.aboveSoft, s.softHigh,
+			fmt.Sprintf("above the soft limit; accepted by %s: %s", s.acceptedBy, s.acceptedReason))
 		v.say(1, r)
 		return
 	}
@@ -210,15 +245,19 @@ const (
 func (s scale) tooMuch() refusal.Reason {
 	switch {
 	case s.wouldFit(1000) && s.beyond(farThousand):
-		return s.reason(refusal.SlipThousand, s.top(), "far above the stored range, and a thousandth of it would fit; is milligram written for microgram?")
+		return s.reason(refusal.SlipThousand, s.top(),
+			"far above the stored range, and a thousandth of it would fit; is milligram written for microgram?")
 	case s.wouldFit(10) && s.beyond(farTen):
-		return s.reason(refusal.SlipTen, s.top(), "far above the stored range, and a tenth of it would fit; is a decimal point wrong?")
+		return s.reason(refusal.SlipTen, s.top(),
+			"far above the stored range, and a tenth of it would fit; is a decimal point wrong?")
 	}
 	r := s.reason(s.codes.aboveHard, s.top(), "more than the highest that the formulary allows")
 	if !s.hardHigh.given {
 		r.Code, r.Rule = refusal.FormularyBlank, "R10"
-		r.Message = fmt.Sprintf("%s %s is above the highest figure stored (%s), and no hard limit is stored for %s", s.what, s.text, s.top().text, s.row)
-		r.Remedy = "stay within the stored range, or add a hard limit with its source to the formulary (whoever keeps it does that)"
+		r.Message = fmt.Sprintf("%s %s is above the highest figure stored (%s), and no hard limit is stored for %s",
+			s.what, s.text, s.top().text, s.row)
+		r.Remedy = "stay within the stored range, or add a hard limit with its source to the formulary " +
+			"(whoever keeps it does that)"
 	}
 	return r
 }
@@ -249,8 +288,14 @@ func (s scale) slipUnder(other refusal.Code) refusal.Code {
 func times(r *big.Rat, n int64) *big.Rat { return new(big.Rat).Mul(r, big.NewRat(n, 1)) }
 
 func (s scale) reason(code refusal.Code, b bound, words string) refusal.Reason {
-	r := refusal.Reason{Code: code, Field: s.field, Got: s.text, Want: b.text, Rule: "R10", Source: b.source, Pos: s.pos,
-		Message: fmt.Sprintf("%s %s is %s (%s)", s.what, s.text, words, s.row), Remedy: "check the " + s.what + ", its unit and the weight"}
+	r := refusal.Reason{
+		Code: code, Field: s.field,
+		Got: s.text, Want: b.text,
+		Rule: "R10", Source: b.source,
+		Pos:     s.pos,
+		Message: fmt.Sprintf("%s %s is %s (%s)", s.what, s.text, words, s.row),
+		Remedy:  "check the " + s.what + ", its unit and the weight",
+	}
 	if code == s.codes.aboveHard || code == s.codes.belowHard {
 		r.Rule = "R11"
 	}
@@ -281,7 +326,13 @@ func fillScale[T any](s *scale, r formulary.Rule[T], print func(T) string, numbe
 	for _, x := range []struct {
 		to   *bound
 		from formulary.Figure[T]
-	}{{&s.hardLow, r.HardLow}, {&s.usualLow, r.UsualLow}, {&s.usualHigh, r.UsualHigh}, {&s.softHigh, r.SoftHigh}, {&s.hardHigh, r.HardHigh}} {
+	}{
+		{&s.hardLow, r.HardLow},
+		{&s.usualLow, r.UsualLow},
+		{&s.usualHigh, r.UsualHigh},
+		{&s.softHigh, r.SoftHigh},
+		{&s.hardHigh, r.HardHigh},
+	} {
 		b, err := boundOf(x.from, print, number)
 		if err != nil {
 			return err

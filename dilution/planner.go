@@ -29,7 +29,13 @@ type work struct {
 
 // NewList plans every syringe of o that is not left out. It returns all
 // reasons; when any of them refuses, nothing of the list is to be made.
-func NewList(o order.Order, f *formulary.Formulary, at time.Time, leaveOut map[int]bool, faults refusal.List) (List, refusal.List) {
+func NewList(
+	o order.Order,
+	f *formulary.Formulary,
+	at time.Time,
+	leaveOut map[int]bool,
+	faults refusal.List,
+) (List, refusal.List) {
 	list := List{Order: o, Formulary: f, At: at}
 	var all refusal.List
 	for _, r := range faults {
@@ -39,7 +45,13 @@ func NewList(o order.Order, f *formulary.Formulary, at time.Time, leaveOut map[i
 	}
 	s, err := siteOf(o)
 	if err != nil {
-		return list, append(all, refusal.Reason{Code: refusal.ValueUnknown, Severity: refusal.Refuse, Field: "site", Rule: "R8", Pos: o.Site.Tolerance.Pos, Message: err.Error(), Remedy: "mend the [site] table of the order"})
+		return list, append(all, refusal.Reason{
+			Code: refusal.ValueUnknown, Severity: refusal.Refuse,
+			Field: "site", Rule: "R8",
+			Pos:     o.Site.Tolerance.Pos,
+			Message: err.Error(),
+			Remedy:  "mend the [site] table of the order",
+		})
 	}
 	broken := brokenSyringes(faults)
 	for _, sy := range o.Syringes {
@@ -51,7 +63,8 @@ func NewList(o order.Order, f *formulary.Formulary, at time.Time, leaveOut map[i
 			continue
 		}
 		if leaveOut[sy.Number] {
-			list.LeftOut = append(list.LeftOut, LeftOut{sy.Number, sy.Drug.Value, append(faults.Of(sy.Number), reasons.Refusals()...)})
+			list.LeftOut = append(list.LeftOut,
+				LeftOut{sy.Number, sy.Drug.Value, append(faults.Of(sy.Number), reasons.Refusals()...)})
 			continue
 		}
 		all = append(all, reasons...)
@@ -60,8 +73,12 @@ func NewList(o order.Order, f *formulary.Formulary, at time.Time, leaveOut map[i
 	list.Cautions = shared(list.Plans)
 	all = append(all, list.Cautions...)
 	if len(list.Plans) == 0 && !all.Refused() {
-		all = append(all, refusal.Reason{Code: refusal.NothingToMake, Severity: refusal.Refuse, Message: "every syringe of the order is left out",
-			Want: "at least one syringe", Remedy: "leave fewer out"})
+		all = append(all, refusal.Reason{
+			Code: refusal.NothingToMake, Severity: refusal.Refuse,
+			Want:    "at least one syringe",
+			Message: "every syringe of the order is left out",
+			Remedy:  "leave fewer out",
+		})
 	}
 	return list, all
 }
@@ -107,12 +124,23 @@ func shared(plans []Plan) refusal.List {
 	}
 	var out refusal.List
 	if len(assay) > 0 {
-		out = append(out, refusal.Reason{Code: refusal.AssayAssumed, Severity: refusal.Caution, Rule: "R9", Field: "assay", Got: "none stored", Want: assumedAssay,
-			Message: "no assay limits are stored for the containers of " + syringes(assay, len(plans)) + "; plus or minus " + assumedAssay + " is assumed for the interval"})
+		out = append(out, refusal.Reason{
+			Code: refusal.AssayAssumed, Severity: refusal.Caution,
+			Rule: "R9", Field: "assay",
+			Got: "none stored", Want: assumedAssay,
+			Message: "no assay limits are stored for the containers of " + syringes(assay, len(plans)) +
+				"; plus or minus " + assumedAssay + " is assumed for the interval",
+		})
 	}
 	if len(useBy) > 0 {
-		out = append(out, refusal.Reason{Code: refusal.UseByUnknown, Severity: refusal.Caution, Rule: "R18", Field: "stability", Got: "none stored", Want: "a stability at room temperature",
-			Message: "no stability at room temperature is stored for " + syringes(useBy, len(plans)) + "; the use-by time follows site policy alone", Remedy: "check the pack and local policy"})
+		out = append(out, refusal.Reason{
+			Code: refusal.UseByUnknown, Severity: refusal.Caution,
+			Rule: "R18", Field: "stability",
+			Got: "none stored", Want: "a stability at room temperature",
+			Message: "no stability at room temperature is stored for " + syringes(useBy, len(plans)) +
+				"; the use-by time follows site policy alone",
+			Remedy: "check the pack and local policy",
+		})
 	}
 	return out
 }
@@ -139,7 +167,14 @@ func unreadable(p order.Patient) bool {
 // newPlan works one syringe. A syringe whose order could not be read whole is
 // not worked, but its drug and presentation are looked up, so that these faults
 // show at once too.
-func newPlan(s site, f *formulary.Formulary, o order.Order, sy order.Syringe, at time.Time, broken bool) (Plan, refusal.List) {
+func newPlan(
+	s site,
+	f *formulary.Formulary,
+	o order.Order,
+	sy order.Syringe,
+	at time.Time,
+	broken bool,
+) (Plan, refusal.List) {
 	w := &work{site: s, f: f, o: sy, patient: o.Patients[sy.Patient]}
 	w.plan = Plan{Number: sy.Number, Order: sy, Patient: w.patient, Style: s.style, Prepared: at, Route: "IV"}
 	if sy.Route.Given() {
@@ -151,9 +186,15 @@ func newPlan(s site, f *formulary.Formulary, o order.Order, sy order.Syringe, at
 		}
 		return w.plan, w.reasons
 	}
-	w.size = body.Size{Sex: w.patient.Sex.Value, Age: w.patient.Age.Value, Height: w.patient.Height.Value, Weight: w.patient.Weight.Value}
+	w.size = body.Size{
+		Sex: w.patient.Sex.Value, Age: w.patient.Age.Value,
+		Height: w.patient.Height.Value, Weight: w.patient.Weight.Value,
+	}
 	w.plan.Size = w.size
-	for _, step := range []func() bool{w.findDrug, w.choosePresentation, w.mix, w.checkConcentration, w.dose, w.infusion, w.certainty, w.useBy, w.lasts, w.balance} {
+	for _, step := range []func() bool{
+		w.findDrug, w.choosePresentation, w.mix, w.checkConcentration, w.dose,
+		w.infusion, w.certainty, w.useBy, w.lasts, w.balance,
+	} {
 		if !step() {
 			break
 		}
@@ -191,18 +232,35 @@ func (w *work) fault(err error, field string, pos refusal.Pos) bool {
 	code, rule := refusal.NumberMalformed, "R1"
 	switch e := err.(type) {
 	case *quantity.KindError:
-		return w.refuse(refusal.Reason{Code: refusal.AmountKindDiffer, Field: field, Got: e.Got.String(), Want: e.Want.String(), Rule: "R4", Pos: pos,
-			Message: fmt.Sprintf("%s is counted by %v here, but %s is counted by %v; the two never convert", field, e.Got, w.plan.Drug.Name, e.Want),
-			Remedy:  "order it in the unit that stands on the ampoule"})
+		return w.refuse(refusal.Reason{
+			Code: refusal.AmountKindDiffer, Field: field,
+			Got: e.Got.String(), Want: e.Want.String(),
+			Rule: "R4", Pos: pos,
+			Message: fmt.Sprintf("%s is counted by %v here, but %s is counted by %v; the two never convert",
+				field, e.Got, w.plan.Drug.Name, e.Want),
+			Remedy: "order it in the unit that stands on the ampoule",
+		})
 	case *quantity.SyntaxError:
 		code = refusal.Code(e.Code)
 	case *quantity.NotGivenError:
 		code = refusal.QuantityMissing
 	case *pump.BelowStep:
-		return w.refuse(refusal.Reason{Code: refusal.RateBelowPump, Field: field, Got: w.plan.Style.FlowRate(e.Exact), Want: "at least half of the pump's step, " + w.plan.Style.FlowRate(e.Step), Rule: "R8", Pos: pos,
-			Message: fmt.Sprintf("the lowest dose of the range needs %s, less than the pump can be set to", w.plan.Style.FlowRate(e.Exact)), Remedy: "use a weaker mixture, or a higher lower end of the range"})
+		return w.refuse(refusal.Reason{
+			Code: refusal.RateBelowPump, Field: field,
+			Got:  w.plan.Style.FlowRate(e.Exact),
+			Want: "at least half of the pump's step, " + w.plan.Style.FlowRate(e.Step),
+			Rule: "R8", Pos: pos,
+			Message: fmt.Sprintf("the lowest dose of the range needs %s, less than the pump can be set to",
+				w.plan.Style.FlowRate(e.Exact)),
+			Remedy: "use a weaker mixture, or a higher lower end of the range",
+		})
 	}
-	return w.refuse(refusal.Reason{Code: code, Field: field, Rule: rule, Pos: pos, Message: err.Error(), Remedy: "check the order"})
+	return w.refuse(refusal.Reason{
+		Code: code, Field: field,
+		Rule: rule, Pos: pos,
+		Message: err.Error(),
+		Remedy:  "check the order",
+	})
 }
 
 // balance is the run-time check of rule R6: taken = in the syringe + left.
@@ -211,8 +269,11 @@ func (w *work) balance() bool {
 	taken := w.plan.Presentation.Amount.Times(m.Containers)
 	sum, err := m.Amount.Plus(m.LeftAmount)
 	if err != nil || !sum.Equal(taken) {
-		return w.refuse(refusal.Reason{Code: refusal.RoutesDisagree, Rule: "R6", Message: "the amounts taken, drawn and left over do not balance: a fault of this program, not of yours",
-			Remedy: "do not use this result; report it"})
+		return w.refuse(refusal.Reason{
+			Code: refusal.RoutesDisagree, Rule: "R6",
+			Message: "the amounts taken, drawn and left over do not balance: a fault of this program, not of yours",
+			Remedy:  "do not use this result; report it",
+		})
 	}
 	return true
 }
@@ -228,12 +289,18 @@ func (w *work) unverified() {
 	p := w.plan
 	note("contents of the container", p.Presentation.Unverified)
 	if p.Dose != nil {
-		for _, f := range []formulary.Figure[quantity.Dose]{p.Dose.Rule.HardLow, p.Dose.Rule.UsualLow, p.Dose.Rule.UsualHigh, p.Dose.Rule.SoftHigh, p.Dose.Rule.HardHigh} {
+		for _, f := range []formulary.Figure[quantity.Dose]{
+			p.Dose.Rule.HardLow, p.Dose.Rule.UsualLow, p.Dose.Rule.UsualHigh,
+			p.Dose.Rule.SoftHigh, p.Dose.Rule.HardHigh,
+		} {
 			note("dose "+p.Style.Dose(f.Value), f.Unverified)
 		}
 	}
 	if p.Infusion != nil {
-		for _, f := range []formulary.Figure[quantity.DoseRate]{p.Infusion.Rule.HardLow, p.Infusion.Rule.UsualLow, p.Infusion.Rule.UsualHigh, p.Infusion.Rule.SoftHigh, p.Infusion.Rule.HardHigh} {
+		for _, f := range []formulary.Figure[quantity.DoseRate]{
+			p.Infusion.Rule.HardLow, p.Infusion.Rule.UsualLow, p.Infusion.Rule.UsualHigh,
+			p.Infusion.Rule.SoftHigh, p.Infusion.Rule.HardHigh,
+		} {
 			note("dose rate "+p.Style.DoseRate(f.Value), f.Unverified)
 		}
 	}
@@ -242,8 +309,12 @@ func (w *work) unverified() {
 		note("concentration "+p.Style.Concentration(b.High.Value), b.High.Unverified && b.Use == w.use())
 	}
 	if len(list) > 0 {
-		w.caution(refusal.Reason{Code: refusal.Unverified, Rule: "R13", Field: "formulary", Got: joinAnd(list),
-			Message: "nobody has verified these figures: " + joinAnd(list), Remedy: "check them against the pack and local policy"})
+		w.caution(refusal.Reason{
+			Code: refusal.Unverified, Rule: "R13",
+			Field: "formulary", Got: joinAnd(list),
+			Message: "nobody has verified these figures: " + joinAnd(list),
+			Remedy:  "check them against the pack and local policy",
+		})
 	}
 }
 

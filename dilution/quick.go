@@ -88,8 +88,8 @@ func topOf(row formulary.Rule[quantity.DoseRate]) quantity.DoseRate {
 // order is q in the words of an order.
 func (q Quick) order() order.Syringe {
 	return order.Syringe{
-		Infusion: q.Infusion,
-		Drug:     order.Field[string]{Value: q.Drug, Text: q.Drug}, Line: order.Field[string]{Value: q.Line, Text: q.Line},
+		Infusion: q.Infusion, Drug: order.Field[string]{Value: q.Drug, Text: q.Drug},
+		Line:       order.Field[string]{Value: q.Line, Text: q.Line},
 		Indication: order.Field[string]{Value: q.Indication, Text: q.Indication},
 		Dose:       order.Field[quantity.Dose]{Value: q.Dose, Text: q.Style.Dose(q.Dose)},
 		Start:      order.Field[quantity.DoseRate]{Value: q.Rate, Text: q.Style.DoseRate(q.Rate)},

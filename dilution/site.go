@@ -34,7 +34,8 @@ const (
 	defaultStep      = "0.1 mL/h"
 	defaultBolus     = 4 * 60
 	defaultInfusion  = 24 * 60
-	defaultSource    = "default of this tool, unverified: 4 h for immediate use after USP <797> (2023), 24 h for infusions; set the site's own"
+	defaultSource    = "default of this tool, unverified: 4 h for immediate use after USP <797> (2023), " +
+		"24 h for infusions; set the site's own"
 )
 
 // widestTolerance is the most that a site may let a graduation move a volume,
@@ -67,7 +68,8 @@ func siteOf(o order.Order) (site, error) {
 		s.tolerance = in.Tolerance.Value
 	}
 	if s.tolerance.Rat().Cmp(big.NewRat(widestTolerance, 1)) > 0 {
-		return s, fmt.Errorf("got a tolerance of %s, want at most %d %%: a graduation that far off measures nothing", s.tolerance.Written(), widestTolerance)
+		return s, fmt.Errorf("got a tolerance of %s, want at most %d %%: a graduation that far off measures nothing",
+			s.tolerance.Written(), widestTolerance)
 	}
 	if in.PumpStep.Value.Given() {
 		s.step = in.PumpStep.Value
