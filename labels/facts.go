@@ -129,7 +129,11 @@ func (w Facts) patient(p dilution.Plan) {
 	for _, k := range []struct {
 		kind       body.Kind
 		name, full string
-	}{{body.Ideal, recheck.WeightIdeal, recheck.IdealFull}, {body.Adjusted, recheck.WeightAdjusted, recheck.AdjustedFull}, {body.Lean, recheck.WeightLean, recheck.LeanFull}} {
+	}{
+		{body.Ideal, recheck.WeightIdeal, recheck.IdealFull},
+		{body.Adjusted, recheck.WeightAdjusted, recheck.AdjustedFull},
+		{body.Lean, recheck.WeightLean, recheck.LeanFull},
+	} {
 		if !used[k.kind] && !(k.kind == body.Ideal && used[body.Adjusted]) {
 			continue
 		}
@@ -229,7 +233,11 @@ func (w *Facts) infusion(p dilution.Plan) {
 	for _, x := range []struct {
 		set        pump.Setting
 		dose, rate string
-	}{{part.Low, recheck.LowDose, recheck.LowRate}, {part.High, recheck.HighDose, recheck.HighRate}, {part.Limit, recheck.LimitDose, recheck.LimitRate}} {
+	}{
+		{part.Low, recheck.LowDose, recheck.LowRate},
+		{part.High, recheck.HighDose, recheck.HighRate},
+		{part.Limit, recheck.LimitDose, recheck.LimitRate},
+	} {
 		w.put(x.dose, s.DoseRate(x.set.Dose))
 		w.put(x.rate, s.FlowRate(x.set.Rate))
 	}

@@ -120,8 +120,8 @@ func marks(p dilution.Plan) []string {
 // what was typed, the formulary's own text, and the figures of all papers.
 func Stated(p dilution.Plan, figures []recheck.Figure) recheck.Stated {
 	return recheck.Stated{
-		Syringe: fmt.Sprintf("syringe %d, %s", p.Number, p.Drug.Name), Drug: p.Drug.Name, Presentation: p.Presentation.ID,
-		Record: p.Drug.Raw, Asked: asked(p), Figures: figures,
+		Syringe: fmt.Sprintf("syringe %d, %s", p.Number, p.Drug.Name), Drug: p.Drug.Name,
+		Presentation: p.Presentation.ID, Record: p.Drug.Raw, Asked: asked(p), Figures: figures,
 	}
 }
 
@@ -147,7 +147,9 @@ func asked(p dilution.Plan) []recheck.Figure {
 	add(recheck.UseHours, Span(p.UseBy.Minutes))
 	add(recheck.Prepared, p.Prepared.Format("2006-01-02 15:04"))
 	add(recheck.PreparedOffset, p.Prepared.Format("-07:00"))
-	for _, text := range []string{o.AcceptedBy.Text, o.AcceptedReason.Text, o.Batch.Text, o.Expiry.Text, o.Indication.Text} {
+	for _, text := range []string{
+		o.AcceptedBy.Text, o.AcceptedReason.Text, o.Batch.Text, o.Expiry.Text, o.Indication.Text,
+	} {
 		add(recheck.Typed, text)
 	}
 	if p.Mixture.AssayAssumed {
@@ -171,7 +173,8 @@ func askedBarrels(p dilution.Plan, add func(name, text string)) {
 		if p.Dose.Down {
 			add(recheck.DoseRounding, "down")
 		}
-		add(recheck.DoseWeightBy, weightWord(p.Dose.Weight.Given(), p.Dose.Surface.Given(), p.Order.DoseBy, p.Dose.Rule.By))
+		add(recheck.DoseWeightBy,
+			weightWord(p.Dose.Weight.Given(), p.Dose.Surface.Given(), p.Order.DoseBy, p.Dose.Rule.By))
 	}
 }
 

@@ -12,19 +12,28 @@ import (
 )
 
 // classes are the label classes of label-rules.md 1.3.
-var classes = []string{"IND", "BZD", "BZD-A", "NMB", "SUX", "NMB-R", "OPI", "OPI-A", "VAS", "ADR", "HYP", "LA", "ACH", "AEM", "HEP", "PRO", "OTH"}
+var classes = []string{
+	"IND", "BZD", "BZD-A", "NMB", "SUX", "NMB-R", "OPI", "OPI-A", "VAS", "ADR", "HYP", "LA", "ACH", "AEM",
+	"HEP", "PRO", "OTH",
+}
 
 // flags are the marks a drug may carry.
-var flags = []string{"high alert", "controlled", "protect from light", "filter needle", "in-line filter", "large vein", "central line preferred",
-	"paralysing", "emulsion", "no preservative for neuraxial", "vesicant", "separate line", "shake or invert", "keep refrigerated"}
+var flags = []string{
+	"high alert", "controlled", "protect from light", "filter needle", "in-line filter", "large vein",
+	"central line preferred", "paralysing", "emulsion", "no preservative for neuraxial", "vesicant",
+	"separate line", "shake or invert", "keep refrigerated",
+}
 
 // atcPattern is the shape of an ATC code of the fifth level.
 var atcPattern = regexp.MustCompile(`^[A-Z]\d{2}[A-Z]{2}\d{2}$`)
 
 // drug reads the i-th drug of the file.
 func (r *reader) drug(rec drugRecord, i int) Drug {
-	d := Drug{Name: rec.Name, names: rec.Names, Also: rec.Also, ATC: rec.ATC, Class: rec.Class, CountedAs: rec.CountedAs, ShowAs: rec.ShowAs, Flags: rec.Flags,
-		Origin: r.text.Name, Raw: r.text.Data, Pos: r.places.Of("drug", i)}
+	d := Drug{
+		Name: rec.Name, names: rec.Names, Also: rec.Also, ATC: rec.ATC, Class: rec.Class,
+		CountedAs: rec.CountedAs, ShowAs: rec.ShowAs, Flags: rec.Flags, Origin: r.text.Name, Raw: r.text.Data,
+		Pos: r.places.Of("drug", i),
+	}
 	r.identity(&d, rec, i)
 	for j := range rec.Cautions {
 		d.Cautions = append(d.Cautions, *r.note(&rec.Cautions[j], "drug", i, "caution", j))
@@ -57,13 +66,16 @@ func (r *reader) drug(rec drugRecord, i int) Drug {
 // identity checks the name, code, class, counting and flags of a drug.
 func (r *reader) identity(d *Drug, rec drugRecord, i int) {
 	if d.Name == "" || d.Name != strings.ToLower(d.Name) {
-		r.fault(refusal.KeyMissing, d.Name, "the INN in lower case", "the drug has no name in lower case", "drug", i, "name")
+		r.fault(refusal.KeyMissing, d.Name, "the INN in lower case", "the drug has no name in lower case",
+			"drug", i, "name")
 	}
 	if !atcPattern.MatchString(d.ATC) {
-		r.fault(refusal.ValueUnknown, d.ATC, "a code such as N01AX07", "the ATC code has not the shape of one", "drug", i, "atc")
+		r.fault(refusal.ValueUnknown, d.ATC, "a code such as N01AX07", "the ATC code has not the shape of one",
+			"drug", i, "atc")
 	}
 	if !contains(classes, d.Class) {
-		r.fault(refusal.ValueUnknown, d.Class, strings.Join(classes, ", "), "the label class is not known", "drug", i, "class")
+		r.fault(refusal.ValueUnknown, d.Class, strings.Join(classes, ", "), "the label class is not known",
+			"drug", i, "class")
 	}
 	for j, f := range d.Flags {
 		if !contains(flags, f) {
@@ -78,7 +90,8 @@ func (r *reader) identity(d *Drug, rec drugRecord, i int) {
 	case "substance":
 		d.Kind = quantity.BySubstance
 	default:
-		r.fault(refusal.ValueUnknown, rec.Counted, "mass, units or substance", "the file does not say how the drug is counted", "drug", i, "counted")
+		r.fault(refusal.ValueUnknown, rec.Counted, "mass, units or substance",
+			"the file does not say how the drug is counted", "drug", i, "counted")
 	}
 }
 
@@ -119,19 +132,26 @@ func parseMinutes(s string) (int64, error) {
 	number, unit, _ := strings.Cut(strings.TrimSpace(s), " ")
 	factor := map[string]int64{"min": 1, "h": 60, "hour": 60, "hours": 60, "day": 1440, "days": 1440}[unit]
 	var n int64
-	if _, err := fmt.Sscanf(number, "%d", &n); err != nil || factor == 0 || n <= 0 || n > int64(100*365*24*time.Hour/time.Minute) {
+	most := int64(100 * 365 * 24 * time.Hour / time.Minute)
+	if _, err := fmt.Sscanf(number, "%d", &n); err != nil || factor == 0 || n <= 0 || n > most {
 		return 0, fmt.Errorf("got %q, want a time such as \"24 h\"", s)
 	}
 	return n * factor, nil
 }
 
 func (r *reader) presentation(rec presentationRecord, kind quantity.Kind, path ...any) Presentation {
-	p := Presentation{ID: rec.ID, Container: rec.Container, Form: rec.Form, AddFluids: rec.AddFluids, SecondName: rec.SecondName, Uses: rec.Uses, Neat: rec.Neat,
-		Source: r.source(rec.Source, path...), Pos: r.places.Of(path...)}
+	p := Presentation{
+		ID: rec.ID, Container: rec.Container, Form: rec.Form, AddFluids: rec.AddFluids,
+		SecondName: rec.SecondName, Uses: rec.Uses, Neat: rec.Neat, Source: r.source(rec.Source, path...),
+		Pos: r.places.Of(path...),
+	}
 	p.Unverified = rec.Unverified || p.Source.Grade == "C"
 	at := func(key string) []any { return append(append([]any{}, path...), key) }
-	if rec.ID == "" || !contains([]string{"ampoule", "vial", "syringe"}, rec.Container) || !contains([]string{"solution", "emulsion", "powder"}, rec.Form) {
-		r.fault(refusal.ValueUnknown, rec.ID+", "+rec.Container+", "+rec.Form, "an id, a container (ampoule, vial, syringe) and a form (solution, emulsion, powder)", "the presentation is not described", at("id")...)
+	if rec.ID == "" || !contains([]string{"ampoule", "vial", "syringe"}, rec.Container) ||
+		!contains([]string{"solution", "emulsion", "powder"}, rec.Form) {
+		r.fault(refusal.ValueUnknown, rec.ID+", "+rec.Container+", "+rec.Form,
+			"an id, a container (ampoule, vial, syringe) and a form (solution, emulsion, powder)",
+			"the presentation is not described", at("id")...)
 	}
 	a, err := quantity.ParseAmount(rec.Amount)
 	if err == nil && a.Kind() != kind {
@@ -183,7 +203,9 @@ func (r *reader) contents(p *Presentation, rec presentationRecord, at func(strin
 	}
 	if rec.Displacement.Value == "negligible" {
 		s := r.source(rec.Displacement.Source, at("displacement")...)
-		p.Displacement = Figure[quantity.Volume]{Text: "negligible", Source: s, Unverified: rec.Displacement.Unverified || s.Grade == "C"}
+		p.Displacement = Figure[quantity.Volume]{
+			Text: "negligible", Source: s, Unverified: rec.Displacement.Unverified || s.Grade == "C",
+		}
 		p.Negligible, p.Volume = true, added
 		return
 	}
@@ -197,10 +219,14 @@ func (r *reader) diluents(list []diluentRecord, path []any) []Diluent {
 	var out []Diluent
 	for j, d := range list {
 		if d.Name == "" {
-			r.fault(refusal.KeyMissing, "", "the name of a fluid", "a diluent has no name", append(append([]any{}, path...), j)...)
+			r.fault(refusal.KeyMissing, "", "the name of a fluid", "a diluent has no name",
+				append(append([]any{}, path...), j)...)
 		}
 		s := r.source(d.Source, append(append([]any{}, path...), j)...)
-		out = append(out, Diluent{Name: d.Name, Reason: d.Reason, Source: s, Unverified: d.Unverified || s.Grade == "C"})
+		out = append(out, Diluent{
+			Name: d.Name, Reason: d.Reason,
+			Source: s, Unverified: d.Unverified || s.Grade == "C",
+		})
 	}
 	return out
 }
@@ -211,11 +237,13 @@ func (r *reader) bounds(rec concentrationRecord, path ...any) Bounds {
 		Low:  figure(r, rec.Low, quantity.ParseConcentration, at("low")...),
 		High: figure(r, rec.High, quantity.ParseConcentration, at("high")...)}
 	if !contains([]string{"bolus", "infusion"}, b.Use) || !contains([]string{"any", "peripheral", "central"}, b.Line) {
-		r.fault(refusal.ValueUnknown, b.Use+", "+b.Line, "use bolus or infusion; line any, peripheral or central", "the row does not say what it is for", path...)
+		r.fault(refusal.ValueUnknown, b.Use+", "+b.Line, "use bolus or infusion; line any, peripheral or central",
+			"the row does not say what it is for", path...)
 	}
 	if b.Low.Given() && b.High.Given() {
 		if n, err := b.Low.Value.Cmp(b.High.Value); err != nil || n > 0 {
-			r.fault(refusal.KeyConflict, b.Low.Text+" to "+b.High.Text, "low not above high, counted the same way", "the bounds are out of order", path...)
+			r.fault(refusal.KeyConflict, b.Low.Text+" to "+b.High.Text, "low not above high, counted the same way",
+				"the bounds are out of order", path...)
 		}
 	}
 	return b
@@ -227,16 +255,23 @@ func (r *reader) standard(rec standardRecord, path ...any) Standard {
 		r.badText(rec.Mix, err, append(append([]any{}, path...), "mix")...)
 	}
 	s := r.source(rec.Source, path...)
-	return Standard{ID: rec.ID, Amount: a, Volume: v, Diluent: rec.Diluent, Line: rec.Line, Jurisdiction: rec.Jurisdiction, Source: s, Unverified: rec.Unverified || s.Grade == "C"}
+	return Standard{
+		ID: rec.ID, Amount: a, Volume: v, Diluent: rec.Diluent, Line: rec.Line,
+		Jurisdiction: rec.Jurisdiction, Source: s, Unverified: rec.Unverified || s.Grade == "C",
+	}
 }
 
 func (r *reader) stability(rec stabilityRecord, path ...any) Stability {
 	m, err := parseMinutes(rec.Hours)
 	if err != nil {
-		r.fault(refusal.TimeMalformed, rec.Hours, `a time such as "24 h"`, err.Error(), append(append([]any{}, path...), "hours")...)
+		r.fault(refusal.TimeMalformed, rec.Hours, `a time such as "24 h"`, err.Error(),
+			append(append([]any{}, path...), "hours")...)
 	}
 	s := r.source(rec.Source, path...)
-	return Stability{Diluent: rec.Diluent, Storage: rec.Storage, Minutes: m, Text: rec.Hours, Source: s, Unverified: rec.Unverified || s.Grade == "C"}
+	return Stability{
+		Diluent: rec.Diluent, Storage: rec.Storage, Minutes: m, Text: rec.Hours, Source: s,
+		Unverified: rec.Unverified || s.Grade == "C",
+	}
 }
 
 // ageText reads an age bound; blank is no bound.

@@ -81,8 +81,14 @@ func repeatedNames(f *Formulary) refusal.List {
 	for _, d := range f.drugs {
 		for _, n := range append([]string{d.Name}, d.Also...) {
 			if other, ok := seen[n]; ok {
-				out = append(out, refusal.Reason{Code: refusal.KeyRepeated, Severity: refusal.Refuse, Field: "drug.name", Got: n, Rule: "R10", Pos: d.Pos,
-					Message: fmt.Sprintf("the name %q finds both %s and %s", n, other, d.Name), Want: "one drug for each name", Remedy: "take the name out of one of them"})
+				out = append(out, refusal.Reason{
+					Code: refusal.KeyRepeated, Severity: refusal.Refuse,
+					Field: "drug.name", Got: n,
+					Rule: "R10", Pos: d.Pos,
+					Want:    "one drug for each name",
+					Message: fmt.Sprintf("the name %q finds both %s and %s", n, other, d.Name),
+					Remedy:  "take the name out of one of them",
+				})
 			}
 			seen[n] = d.Name
 		}
@@ -104,8 +110,14 @@ func (r *reader) fault(code refusal.Code, got, want, message string, path ...any
 	if r.places != nil {
 		pos = r.places.Of(path...)
 	}
-	r.faults = append(r.faults, refusal.Reason{Code: code, Severity: refusal.Refuse, Field: fmt.Sprint(path[len(path)-1]), Got: got, Want: want,
-		Message: message, Rule: "R10", Remedy: "mend the formulary file", Pos: pos})
+	r.faults = append(r.faults, refusal.Reason{
+		Code: code, Severity: refusal.Refuse,
+		Field: fmt.Sprint(path[len(path)-1]), Got: got,
+		Want: want, Rule: "R10",
+		Pos:     pos,
+		Message: message,
+		Remedy:  "mend the formulary file",
+	})
 }
 
 func (r *reader) file(f *Formulary) {
@@ -120,7 +132,8 @@ func (r *reader) file(f *Formulary) {
 		f.Name, f.Version = rec.Name, rec.Version
 	}
 	if rec.Name == "" || rec.Name != f.Name || rec.Version != f.Version {
-		r.fault(refusal.KeyConflict, rec.Name+" "+rec.Version, f.Name+" "+f.Version, "the files of one formulary must carry one name and one version", "name")
+		r.fault(refusal.KeyConflict, rec.Name+" "+rec.Version, f.Name+" "+f.Version,
+			"the files of one formulary must carry one name and one version", "name")
 	}
 	r.readSources(rec.Sources)
 	for i, d := range rec.Drugs {
@@ -133,7 +146,8 @@ func (r *reader) readSources(list map[string]sourceRecord) {
 	r.sources = map[string]Source{}
 	for key, s := range list {
 		if s.Title == "" || !contains([]string{"A", "B", "C", "P"}, s.Grade) {
-			r.fault(refusal.KeyMissing, s.Grade, "a title and a grade A, B, C or P", "the source "+key+" is not spelled out", "sources", key)
+			r.fault(refusal.KeyMissing, s.Grade, "a title and a grade A, B, C or P",
+				"the source "+key+" is not spelled out", "sources", key)
 		}
 		r.sources[key] = Source{Key: key, Title: s.Title, Grade: s.Grade}
 	}
@@ -148,7 +162,8 @@ func (r *reader) unusedSources() {
 	}
 	sort.Strings(keys)
 	for _, key := range keys {
-		r.fault(refusal.ValueUnknown, key, "a source that a figure uses", "no figure uses the source "+key, "sources", key)
+		r.fault(refusal.ValueUnknown, key, "a source that a figure uses", "no figure uses the source "+key,
+			"sources", key)
 	}
 }
 
@@ -157,7 +172,8 @@ func (r *reader) unusedSources() {
 func (r *reader) source(key string, path ...any) Source {
 	s, ok := r.sources[key]
 	if !ok {
-		r.fault(refusal.ValueUnknown, key, "a key of [sources] in this file", "a figure has no source that is listed (rule R13)", path...)
+		r.fault(refusal.ValueUnknown, key, "a key of [sources] in this file",
+			"a figure has no source that is listed (rule R13)", path...)
 		return Source{Key: key}
 	}
 	r.used[key] = true
@@ -186,7 +202,10 @@ func figure[T any](r *reader, rec *figureRecord, parse func(string) (T, error), 
 		r.badText(rec.Value, err, path...)
 	}
 	s := r.source(rec.Source, path...)
-	return Figure[T]{Value: v, Text: rec.Value, Source: s, Unverified: rec.Unverified || s.Grade == "C", Pos: r.places.Of(path...)}
+	return Figure[T]{
+		Value: v, Text: rec.Value, Source: s, Unverified: rec.Unverified || s.Grade == "C",
+		Pos: r.places.Of(path...),
+	}
 }
 
 // badText records an error of a quantity with the code that fits it.

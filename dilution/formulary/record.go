@@ -14,7 +14,9 @@ type fileRecord struct {
 // sourceRecord is one entry of the list of sources.
 type sourceRecord struct {
 	Title string `toml:"title"` // spelled out, with year where seen; no brand, no company
-	Grade string `toml:"grade"` // A label, guideline, standard, paper; B handbook, hospital guide; C weak; P common practice, no source
+	// A label, guideline, standard, paper; B handbook, hospital guide; C weak; P
+	// common practice, no source.
+	Grade string `toml:"grade"`
 }
 
 // figureRecord is one figure with where it comes from.

@@ -39,7 +39,8 @@ func (r *reader) rateRule(rec infusionRecord, path ...any) Rule[quantity.DoseRat
 func (r *reader) scalar(by, source string, path []any) (body.Kind, Source) {
 	kind, ok := body.KindNamed(by)
 	if !ok {
-		r.fault(refusal.ValueUnknown, by, "actual, ideal, adjusted, lean, surface or none", "the row does not say which weight it goes by", path...)
+		r.fault(refusal.ValueUnknown, by, "actual, ideal, adjusted, lean, surface or none",
+			"the row does not say which weight it goes by", path...)
 	}
 	if source == "" {
 		return kind, Source{}
@@ -57,7 +58,9 @@ func inOrder[T any](r *reader, rule Rule[T], cmp func(T, T) (int, error), path [
 		}
 		if last.Given() {
 			if n, err := cmp(last.Value, f.Value); err != nil || n > 0 {
-				r.fault(refusal.KeyConflict, last.Text+" before "+f.Text, "limits that rise from hard low to hard high, in one unit family", "the limits of the row are out of order", path...)
+				r.fault(refusal.KeyConflict, last.Text+" before "+f.Text,
+					"limits that rise from hard low to hard high, in one unit family",
+					"the limits of the row are out of order", path...)
 			}
 		}
 		last = f
