@@ -37,7 +37,13 @@ type job struct {
 
 // newJob reads and plans the order in file. at, when given, overrides the time
 // prepared; the list of reasons holds everything that is wrong.
-func newJob(file string, f *formulary.Formulary, at func(order.Session) (time.Time, refusal.List), leaveOut map[int]bool, tell progress) (*job, refusal.List) {
+func newJob(
+	file string,
+	f *formulary.Formulary,
+	at func(order.Session) (time.Time, refusal.List),
+	leaveOut map[int]bool,
+	tell progress,
+) (*job, refusal.List) {
 	data, faults := readFile(file)
 	if faults.Refused() {
 		return nil, faults
@@ -67,8 +73,12 @@ func leftOut(l dilution.List) refusal.List {
 	for _, x := range l.LeftOut {
 		words = append(words, fmt.Sprintf("%d (%s)", x.Number, x.Drug))
 	}
-	return refusal.List{{Code: refusal.SyringesLeftOut, Severity: refusal.Caution, Field: "--leave-out", Got: strings.Join(words, ", "),
-		Message: "left out on request: syringe " + strings.Join(words, ", "), Remedy: "make these another way, or mend the order"}}
+	return refusal.List{{
+		Code: refusal.SyringesLeftOut, Severity: refusal.Caution,
+		Field: "--leave-out", Got: strings.Join(words, ", "),
+		Message: "left out on request: syringe " + strings.Join(words, ", "),
+		Remedy:  "make these another way, or mend the order",
+	}}
 }
 
 // unknownNumbers refuses numbers to leave out that no syringe has.
@@ -76,8 +86,13 @@ func unknownNumbers(o order.Order, leaveOut map[int]bool) refusal.List {
 	var out refusal.List
 	for n := range leaveOut {
 		if n < 1 || n > len(o.Syringes) {
-			out = append(out, refusal.Reason{Code: refusal.SyringeNumber, Severity: refusal.Refuse, Field: "--leave-out", Got: fmt.Sprint(n),
-				Want: fmt.Sprintf("a number from 1 to %d", len(o.Syringes)), Message: fmt.Sprintf("the order has no syringe %d", n), Remedy: "check the number in the table or the refusal"})
+			out = append(out, refusal.Reason{
+				Code: refusal.SyringeNumber, Severity: refusal.Refuse,
+				Field: "--leave-out", Got: fmt.Sprint(n),
+				Want:    fmt.Sprintf("a number from 1 to %d", len(o.Syringes)),
+				Message: fmt.Sprintf("the order has no syringe %d", n),
+				Remedy:  "check the number in the table or the refusal",
+			})
 		}
 	}
 	return out
@@ -90,12 +105,15 @@ func makingOf(o order.Order, f *formulary.Formulary, at time.Time, data []byte) 
 	fmt.Fprintf(sum, "%s\n%s\n%d\n", f.Digest, at.Format(time.RFC3339), len(data))
 	sum.Write(data)
 	digest := sum.Sum(nil)
-	order := sha256.Sum256(append([]byte(f.Digest+"\n"), data...)) // without the time: a label printed at its moment keeps its serial
+	// Without the time: a label printed at its moment keeps its serial.
+	order := sha256.Sum256(append([]byte(f.Digest+"\n"), data...))
 	style := styleOf(o)
 	return labels.Making{
 		Place: o.Session.Place.Value, Preparer: o.Session.Preparer.Value, Made: labels.Moment(style, at),
 		Formulary: f.Name + " " + f.Version, FormularyDigest: f.Digest[:12], State: f.State(),
-		Digest: hex.EncodeToString(digest)[:8], Serial: fmt.Sprintf("%05d", binary.BigEndian.Uint32(order[:])%100000), Invented: o.Session.Invented,
+		Digest:   hex.EncodeToString(digest)[:8],
+		Serial:   fmt.Sprintf("%05d", binary.BigEndian.Uint32(order[:])%100000),
+		Invented: o.Session.Invented,
 	}
 }
 
@@ -163,8 +181,12 @@ func (j *job) allSheets() []sheets.Sheet {
 
 // ourFault is a fault of the program, not of the order: exit code 3.
 func ourFault(syringe int, err error) refusal.Reason {
-	return refusal.Reason{Code: refusal.RoutesDisagree, Severity: refusal.Refuse, Syringe: syringe, Rule: "R17", Message: "the two routes disagree: " + err.Error(),
-		Remedy: "do not use any figure of this order; report the order and this message"}
+	return refusal.Reason{
+		Code: refusal.RoutesDisagree, Severity: refusal.Refuse,
+		Syringe: syringe, Rule: "R17",
+		Message: "the two routes disagree: " + err.Error(),
+		Remedy:  "do not use any figure of this order; report the order and this message",
+	}
 }
 
 // name is the order's file name without its folder and ending.

@@ -19,12 +19,20 @@ func runLabel(e env, args []string) int {
 	}
 	doc := &planDocument{Syringes: []syringeJSON{}}
 	if len(f.orders) != 1 && !faults.Refused() {
-		faults = append(faults, refusal.Reason{Code: refusal.FlagMissing, Severity: refusal.Refuse, Field: "ORDER", Want: "one order file",
-			Message: fmt.Sprintf("got %d order files, want one", len(f.orders)), Remedy: "drawup label ORDER --syringe 3 --out label.pdf"})
+		faults = append(faults, refusal.Reason{
+			Code: refusal.FlagMissing, Severity: refusal.Refuse,
+			Field: "ORDER", Want: "one order file",
+			Message: fmt.Sprintf("got %d order files, want one", len(f.orders)),
+			Remedy:  "drawup label ORDER --syringe 3 --out label.pdf",
+		})
 	}
 	if f.syringe < 1 && !faults.Refused() {
-		faults = append(faults, refusal.Reason{Code: refusal.FlagMissing, Severity: refusal.Refuse, Field: "--syringe", Want: "the number of one syringe",
-			Message: "--syringe does not say which label to print", Remedy: "add --syringe and its number from the table of drawup prepare"})
+		faults = append(faults, refusal.Reason{
+			Code: refusal.FlagMissing, Severity: refusal.Refuse,
+			Field: "--syringe", Want: "the number of one syringe",
+			Message: "--syringe does not say which label to print",
+			Remedy:  "add --syringe and its number from the table of drawup prepare",
+		})
 	}
 	if faults.Refused() {
 		return finish(e, f.json, doc, nil, faults)
@@ -48,8 +56,13 @@ func newOneJob(f *paperFlags, form *formulary.Formulary, e env) (*job, refusal.L
 		return nil, faults
 	}
 	if f.syringe > len(probe.Syringes) {
-		return nil, refusal.List{{Code: refusal.SyringeNumber, Severity: refusal.Refuse, Field: "--syringe", Got: fmt.Sprint(f.syringe),
-			Want: fmt.Sprintf("a number from 1 to %d", len(probe.Syringes)), Message: fmt.Sprintf("the order has no syringe %d", f.syringe), Remedy: "take the number from the table of drawup prepare"}}
+		return nil, refusal.List{{
+			Code: refusal.SyringeNumber, Severity: refusal.Refuse,
+			Field: "--syringe", Got: fmt.Sprint(f.syringe),
+			Want:    fmt.Sprintf("a number from 1 to %d", len(probe.Syringes)),
+			Message: fmt.Sprintf("the order has no syringe %d", f.syringe),
+			Remedy:  "take the number from the table of drawup prepare",
+		}}
 	}
 	others := map[int]bool{}
 	for _, s := range probe.Syringes {

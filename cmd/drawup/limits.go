@@ -31,7 +31,9 @@ func (r *request) checkLimits(q dilution.Quick) dilution.QuickLimits {
 		r.noLimits()
 		return limits
 	}
-	q.Drug, q.Indication, q.Route, q.Line, q.Diluent, q.Style = r.texts["drug"].text, r.texts["indication"].text, r.texts["route"].text, r.texts["line"].text, r.texts["fluid"].text, r.style
+	q.Drug, q.Indication = r.texts["drug"].text, r.texts["indication"].text
+	q.Route, q.Line = r.texts["route"].text, r.texts["line"].text
+	q.Diluent, q.Style = r.texts["fluid"].text, r.style
 	q.Age = read(r, "age", body.ParseAge)
 	r.oneOf("line", "peripheral", "central")
 	if !r.readUse(&q) || r.refused() {
@@ -61,8 +63,12 @@ func (r *request) readUse(q *dilution.Quick) bool {
 	}
 	infusion := r.texts["use"].text == "infusion"
 	if (q.Dose.Given() && infusion) || (q.Rate.Given() && !infusion) {
-		r.add(refusal.Reason{Code: refusal.FlagConflict, Field: "--use", Got: r.texts["use"].text, Want: "the use that the command is for",
-			Message: "--use contradicts the command: a dose is a bolus, a dose rate an infusion", Remedy: "leave --use out"})
+		r.add(refusal.Reason{
+			Code: refusal.FlagConflict, Field: "--use",
+			Got: r.texts["use"].text, Want: "the use that the command is for",
+			Message: "--use contradicts the command: a dose is a bolus, a dose rate an infusion",
+			Remedy:  "leave --use out",
+		})
 		return false
 	}
 	q.Infusion = infusion
@@ -79,8 +85,13 @@ func (r *request) oneOf(name string, words ...string) bool {
 			return true
 		}
 	}
-	r.add(refusal.Reason{Code: refusal.ValueUnknown, Field: "--" + name, Got: r.texts[name].text, Want: words[0] + " or " + words[1], Rule: "R10",
-		Message: "--" + name + ": got " + r.texts[name].text + ", want " + words[0] + " or " + words[1], Remedy: "write one of the two"})
+	r.add(refusal.Reason{
+		Code: refusal.ValueUnknown, Field: "--" + name,
+		Got: r.texts[name].text, Want: words[0] + " or " + words[1],
+		Rule:    "R10",
+		Message: "--" + name + ": got " + r.texts[name].text + ", want " + words[0] + " or " + words[1],
+		Remedy:  "write one of the two",
+	})
 	return false
 }
 
@@ -93,7 +104,12 @@ func (r *request) limitsNote(q dilution.Quick, f *formulary.Formulary, limits di
 	if !q.Dose.Given() && !q.Rate.Given() {
 		words += "; its concentration was checked, no dose"
 	}
-	r.caution(refusal.Reason{Code: refusal.QuickCheck, Field: "--drug", Got: q.Drug, Rule: "R13", Message: words, Remedy: "an order file checks presentation, diluent, weight and stability as well"})
+	r.caution(refusal.Reason{
+		Code: refusal.QuickCheck, Field: "--drug",
+		Got: q.Drug, Rule: "R13",
+		Message: words,
+		Remedy:  "an order file checks presentation, diluent, weight and stability as well",
+	})
 }
 
 // quickScalar is the weight and the surface that were typed.

@@ -23,7 +23,10 @@ type file struct {
 // pdfOf turns pages into the bytes of a PDF.
 func pdfOf(pages []ink.Page, title string, j *job) ([]byte, refusal.List) {
 	var b bytes.Buffer
-	err := pdf.Write(&b, pdf.Document{Pages: pages, Title: title, Subject: j.making.State, Creator: "drawup", Language: "en-GB", Made: j.list.At})
+	err := pdf.Write(&b, pdf.Document{
+		Pages: pages, Title: title, Subject: j.making.State,
+		Creator: "drawup", Language: "en-GB", Made: j.list.At,
+	})
 	if err == nil {
 		return b.Bytes(), nil
 	}
@@ -35,8 +38,12 @@ func pdfOf(pages []ink.Page, title string, j *job) ([]byte, refusal.List) {
 	if off := (*pdf.OffPage)(nil); asError(err, &off) {
 		code, remedy = refusal.TextTooLong, "shorten the long texts of the order, such as the place or the preparer"
 	}
-	return nil, refusal.List{{Code: code, Severity: refusal.Refuse, Field: title, Rule: "R15", Message: "the page cannot be drawn: " + err.Error(),
-		Remedy: remedy}}
+	return nil, refusal.List{{
+		Code: code, Severity: refusal.Refuse,
+		Field: title, Rule: "R15",
+		Message: "the page cannot be drawn: " + err.Error(),
+		Remedy:  remedy,
+	}}
 }
 
 // writeAll writes every file or none: each goes to a temporary name beside its
@@ -180,15 +187,23 @@ func folders(files []file) []string {
 }
 
 func unwritable(path string, err error) refusal.List {
-	return refusal.List{{Code: refusal.OutputUnwritable, Severity: refusal.Refuse, Field: "--out", Got: path, Want: "a folder with room that can be written",
-		Message: fmt.Sprintf("%s cannot be written: %v; nothing was made", path, err), Remedy: "check the folder, its rights and the free space"}}
+	return refusal.List{{
+		Code: refusal.OutputUnwritable, Severity: refusal.Refuse,
+		Field: "--out", Got: path,
+		Want:    "a folder with room that can be written",
+		Message: fmt.Sprintf("%s cannot be written: %v; nothing was made", path, err),
+		Remedy:  "check the folder, its rights and the free space",
+	}}
 }
 
 // incomplete says that the set at a place is mixed: some files are new, others
 // are not. It can come only from the file system between two renames.
 func incomplete(path string, err error) refusal.List {
 	l := unwritable(path, err)
-	l[0].Message = fmt.Sprintf("%s cannot be put in its place: %v; the set there is not complete and must not be used", path, err)
+	l[0].Message = fmt.Sprintf(
+		"%s cannot be put in its place: %v; the set there is not complete and must not be used",
+		path, err,
+	)
 	return l
 }
 

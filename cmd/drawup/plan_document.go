@@ -128,8 +128,12 @@ type useByPlan struct {
 // planOf is the document of a job; the caller adds the cautions.
 func planOf(j *job) *planDocument {
 	m := j.making
-	doc := &planDocument{Order: filepath.Base(j.file), Place: m.Place, Prepared: j.list.At.Format(time.RFC3339), Preparer: m.Preparer, Invented: m.Invented,
-		Formulary: &formularyJSON{m.Formulary, j.list.Formulary.Digest, m.State}, Digest: m.Digest, Syringes: []syringeJSON{}}
+	doc := &planDocument{
+		Order: filepath.Base(j.file), Place: m.Place, Prepared: j.list.At.Format(time.RFC3339),
+		Preparer: m.Preparer, Invented: m.Invented,
+		Formulary: &formularyJSON{m.Formulary, j.list.Formulary.Digest, m.State},
+		Digest:    m.Digest, Syringes: []syringeJSON{},
+	}
 	for i, p := range j.list.Plans {
 		doc.Syringes = append(doc.Syringes, syringePlan(p, m.SerialOf(p.Number), j.labels[i].Code.Text))
 	}
@@ -141,14 +145,20 @@ func planOf(j *job) *planDocument {
 
 func syringePlan(p dilution.Plan, serial, code string) syringeJSON {
 	s, m := p.Style, p.Mixture
-	out := syringeJSON{Number: p.Number, Patient: p.Patient.ID.Value, Drug: p.Drug.LabelName(s), ATC: p.Drug.ATC, Class: p.Drug.Class,
-		Presentation: p.Presentation.ID, Route: p.Route, Method: m.Method.String(), Diluent: m.Diluent, MixedWith: m.AddFluid, Containers: m.Containers,
-		Strength: concentrationJSON(s, m.Strength), DrugVolume: volumeJSON(s, m.DrugVolume), FinalVolume: volumeJSON(s, m.FinalVolume),
-		Amount: amountJSON(s, m.Amount), Concentration: concentrationJSON(s, m.Concentration),
-		Interval:   intervalPlan{percentJSON(s, m.Interval), concentrationJSON(s, m.Low), concentrationJSON(s, m.High)},
+	out := syringeJSON{
+		Number: p.Number, Patient: p.Patient.ID.Value, Drug: p.Drug.LabelName(s), ATC: p.Drug.ATC,
+		Class: p.Drug.Class, Presentation: p.Presentation.ID, Route: p.Route, Method: m.Method.String(),
+		Diluent: m.Diluent, MixedWith: m.AddFluid, Containers: m.Containers,
+		Strength: concentrationJSON(s, m.Strength), DrugVolume: volumeJSON(s, m.DrugVolume),
+		FinalVolume: volumeJSON(s, m.FinalVolume), Amount: amountJSON(s, m.Amount),
+		Concentration: concentrationJSON(s, m.Concentration),
+		Interval: intervalPlan{
+			percentJSON(s, m.Interval), concentrationJSON(s, m.Low), concentrationJSON(s, m.High),
+		},
 		LeftVolume: volumeJSON(s, m.LeftVolume), LeftAmount: amountJSON(s, m.LeftAmount),
 		UseBy:  useByPlan{p.UseBy.At.Format(time.RFC3339), p.UseBy.Minutes, p.UseBy.Won, p.UseBy.Source},
-		Serial: serial, Code: code, Cautions: reasonsJSON(p.Cautions)}
+		Serial: serial, Code: code, Cautions: reasonsJSON(p.Cautions),
+	}
 	if m.DiluentVolume.Given() {
 		out.DiluentVolume = volumeJSON(s, m.DiluentVolume)
 	}
@@ -156,7 +166,9 @@ func syringePlan(p dilution.Plan, serial, code string) syringeJSON {
 		out.Substance = amountJSON(s, m.Substance)
 	}
 	if m.SecondAmount.Given() {
-		out.Second = &secondJSON{p.Presentation.SecondName, amountJSON(s, m.SecondAmount), concentrationJSON(s, m.SecondConc)}
+		out.Second = &secondJSON{
+			p.Presentation.SecondName, amountJSON(s, m.SecondAmount), concentrationJSON(s, m.SecondConc),
+		}
 	}
 	if p.Dose != nil {
 		out.Dose = doseOf(s, *p.Dose)
@@ -168,8 +180,11 @@ func syringePlan(p dilution.Plan, serial, code string) syringeJSON {
 }
 
 func doseOf(s quantity.Style, d dilution.DosePart) *dosePlan {
-	return &dosePlan{Ordered: doseJSON(s, d.Ordered), WeightBy: d.By.String(), Weight: scalarJSON(s, d.Weight, d.Surface), Amount: amountJSON(s, d.Amount),
-		Volume: volumeJSON(s, d.Volume), Delivered: amountJSON(s, d.Delivered), CheckedBy: rowText(d.Rule.For, d.Rule.Ages())}
+	return &dosePlan{
+		Ordered: doseJSON(s, d.Ordered), WeightBy: d.By.String(), Weight: scalarJSON(s, d.Weight, d.Surface),
+		Amount: amountJSON(s, d.Amount), Volume: volumeJSON(s, d.Volume),
+		Delivered: amountJSON(s, d.Delivered), CheckedBy: rowText(d.Rule.For, d.Rule.Ages()),
+	}
 }
 
 func rowText(purpose, ages string) string {
@@ -195,9 +210,12 @@ func scalarJSON(s quantity.Style, w quantity.BodyWeight, a quantity.BodySurfaceA
 
 func infusionOf(s quantity.Style, p dilution.Plan) *infusionPlan {
 	part := p.Infusion
-	out := &infusionPlan{Standard: p.Standard, WeightBy: part.By.String(), Weight: scalarJSON(s, part.Weight, part.Surface), Step: flowRateJSON(s, part.Step),
-		Start: settingOf(s, part.Start), Low: settingOf(s, part.Low), High: settingOf(s, part.High), RunMinutes: part.Minutes,
-		CheckedBy: rowText(part.Rule.For, part.Rule.Ages())}
+	out := &infusionPlan{
+		Standard: p.Standard, WeightBy: part.By.String(), Weight: scalarJSON(s, part.Weight, part.Surface),
+		Step: flowRateJSON(s, part.Step), Start: settingOf(s, part.Start), Low: settingOf(s, part.Low),
+		High: settingOf(s, part.High), RunMinutes: part.Minutes,
+		CheckedBy: rowText(part.Rule.For, part.Rule.Ages()),
+	}
 	if part.Limit.Dose.Given() {
 		limit := settingOf(s, part.Limit)
 		out.Limit = &limit
@@ -212,5 +230,8 @@ func infusionOf(s quantity.Style, p dilution.Plan) *infusionPlan {
 }
 
 func settingOf(s quantity.Style, x pump.Setting) settingJSON {
-	return settingJSON{doseRateJSON(s, x.Dose), flowRateJSON(s, x.Exact), flowRateJSON(s, x.Rate), doseRateJSON(s, x.Delivered)}
+	return settingJSON{
+		doseRateJSON(s, x.Dose), flowRateJSON(s, x.Exact),
+		flowRateJSON(s, x.Rate), doseRateJSON(s, x.Delivered),
+	}
 }

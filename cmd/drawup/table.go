@@ -58,7 +58,10 @@ func cellsOf(p dilution.Plan, f labels.Facts) []string {
 		last = "dose " + f.Text(recheck.DoseVolume)
 	}
 	holds := f.Text(recheck.AmountInSyringe) + ", " + f.Text(recheck.Concentration)
-	return []string{fmt.Sprint(p.Number), p.Patient.ID.Value, p.Drug.LabelName(p.Style), f.Text(recheck.DrugVolume), to, holds, last}
+	return []string{
+		fmt.Sprint(p.Number), p.Patient.ID.Value, p.Drug.LabelName(p.Style),
+		f.Text(recheck.DrugVolume), to, holds, last,
+	}
 }
 
 // row writes the cells in their columns. A text wider than its column, or a
