@@ -74,7 +74,7 @@ func (w *work) choosePresentation() bool {
 			})
 		}
 		w.plan.Presentation = p
-		return w.powderKnown()
+		return w.forThisAge() && w.powderKnown()
 	}
 	fits := w.usable()
 	switch len(fits) {
@@ -88,7 +88,7 @@ func (w *work) choosePresentation() bool {
 		})
 	case 1:
 		w.plan.Presentation = fits[0]
-		return w.powderKnown()
+		return w.forThisAge() && w.powderKnown()
 	}
 	return w.refuse(refusal.Reason{
 		Code: refusal.PresentationUnclear, Field: "presentation",
@@ -118,6 +118,22 @@ func ids(list []formulary.Presentation) []string {
 		out = append(out, fmt.Sprintf("%q", p.ID))
 	}
 	return out
+}
+
+// forThisAge refuses a presentation that its source keeps from younger patients
+// (R10). Without an age on the order nothing is compared.
+func (w *work) forThisAge() bool {
+	p := w.plan.Presentation
+	if !w.size.Age.Less(p.AgeFrom) {
+		return true
+	}
+	return w.refuse(refusal.Reason{
+		Code: refusal.AgeOutside, Field: "presentation",
+		Got: w.size.Age.String(), Want: "from " + p.AgeFrom.String(),
+		Rule: "R10", Source: p.Source.Title, Pos: w.o.Drug.Pos,
+		Message: fmt.Sprintf("%s of %s is for patients from %s", p.ID, w.plan.Drug.Name, p.AgeFrom),
+		Remedy:  "take a presentation for this age",
+	})
 }
 
 // powderKnown refuses a powder whose volume after mixing is unknown (R7).

@@ -106,6 +106,7 @@ type shownPresentation struct {
 	SecondName    string        `json:"second_name,omitempty"`
 	SecondAmount  *quantityJSON `json:"second_amount,omitempty"`
 	Assay         *shownFigure  `json:"assay,omitempty"`
+	AgeFrom       string        `json:"age_from,omitempty"`
 	Uses          []string      `json:"uses"`
 	Neat          bool          `json:"neat"`
 	Diluents      []shownText   `json:"diluents"`
@@ -217,6 +218,9 @@ func presentationOf(s quantity.Style, p formulary.Presentation) shownPresentatio
 		shownSource: sourceOf(p.Source, p.Unverified)}
 	if p.Volume.Given() {
 		out.Volume, out.Concentration = volumeJSON(s, p.Volume), strengthOf(s, p.Amount, p.Volume)
+	}
+	if p.AgeFrom.Given() {
+		out.AgeFrom = p.AgeFrom.String()
 	}
 	if p.Added.Given() {
 		out.Added = volumeJSON(s, p.Added)

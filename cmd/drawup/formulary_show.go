@@ -135,7 +135,11 @@ func (p proof) presentation(x shownPresentation) {
 	}
 	p.figure("displacement", x.Displacement)
 	p.figure("assay, up to ±", x.Assay)
-	p.item("for", strings.Join(x.Uses, ", "))
+	use := strings.Join(x.Uses, ", ")
+	if x.AgeFrom != "" {
+		use += ", from " + x.AgeFrom
+	}
+	p.item("for", use)
 	neat := "no, has to be diluted"
 	if x.Neat {
 		neat = "yes, may be given as it is"

@@ -167,6 +167,7 @@ func (r *reader) presentation(rec presentationRecord, kind quantity.Kind, path .
 			r.badText(rec.SecondAmount, err, at("second_amount")...)
 		}
 	}
+	p.AgeFrom = r.age(rec.AgeFrom, at("age_from")...)
 	p.Assay = figure(r, rec.Assay, quantity.ParsePercent, at("assay")...)
 	for _, u := range rec.Uses {
 		if u != "bolus" && u != "infusion" {

@@ -96,6 +96,7 @@ type Presentation struct {
 	Assay        Figure[quantity.Percent]
 	Source       Source
 	Unverified   bool
+	AgeFrom      body.Age // not for younger patients; not given: no bound
 	Uses         []string // bolus, infusion
 	Neat         bool
 	Diluents     []Diluent

@@ -78,6 +78,7 @@ type presentationRecord struct {
 	Displacement *figureRecord   `toml:"displacement"`  // "0.2 mL", or "negligible"
 	SecondName   string          `toml:"second_name"`   // a second drug in the same container
 	SecondAmount string          `toml:"second_amount"` // per container
+	AgeFrom      string          `toml:"age_from"`      // not for younger patients; blank: no bound
 	Uses         []string        `toml:"uses"`          // bolus, infusion
 	Neat         bool            `toml:"neat"`          // may be given as supplied (a powder: as mixed)
 	Diluents     []diluentRecord `toml:"diluent"`
