@@ -191,6 +191,16 @@ func (w *work) setPump(part *InfusionPart) bool {
 		return false
 	}
 	start = part.Start
+	if start.LostPercent.Cmp(new(big.Rat).Mul(w.site.tolerance.Rat(), big.NewRat(2, 1))) > 0 {
+		return w.refuse(refusal.Reason{
+			Code: refusal.RateRounding, Field: "start",
+			Got: s.FlowRate(start.Exact), Want: "within " + s.Percent(w.site.tolerance) + " of a pump step, twice at most",
+			Rule: "R2", Pos: w.o.Start.Pos,
+			Message: fmt.Sprintf("the pump's nearest rate, %s, is %s more than the start dose asks for",
+				s.FlowRate(start.Rate), percentOf(s, start.LostPercent)),
+			Remedy: "use a weaker mixture, or a pump with a finer step",
+		})
+	}
 	if new(big.Rat).Abs(start.LostPercent).Cmp(w.site.tolerance.Rat()) > 0 {
 		w.caution(refusal.Reason{
 			Code: refusal.RateRounding, Field: "start",
@@ -261,7 +271,23 @@ func (w *work) setRange(part *InfusionPart) bool {
 	if part.Ladder, err = pump.Ladder(low, high, rungs, part.per(), c, part.Step); err != nil {
 		return w.fault(err, "ladder", w.o.Start.Pos)
 	}
+	part.Ladder = inside(part.Ladder, part)
 	return true
+}
+
+// inside leaves out the rungs whose rounded rate passes an end of the range or
+// the hard limit.
+func inside(ladder []pump.Setting, part *InfusionPart) []pump.Setting {
+	var out []pump.Setting
+	for _, rung := range ladder {
+		low := rung.Rate.Cmp(part.Low.Rate) < 0
+		high := rung.Rate.Cmp(part.High.Rate) > 0
+		limit := part.Limit.Rate.Given() && rung.Rate.Cmp(part.Limit.Rate) > 0
+		if !low && !high && !limit {
+			out = append(out, rung)
+		}
+	}
+	return out
 }
 
 // rangeEnds are the ordered range, or the usual range of the row where it is

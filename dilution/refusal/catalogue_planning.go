@@ -60,7 +60,7 @@ func measuringEntries() []Entry {
 		warns(BagFillUnknown, Measuring, "R9", "A bag holds more than its nominal volume, by an unknown amount."),
 		stops(RateBelowPump, Measuring, "R8", "A dose rate needs less than half of the pump's smallest step."),
 		either(RateAbovePump, Measuring, "R8", "A dose rate needs more than pumps in common use can be set to: refused in an order, told with a quick sum."),
-		warns(RateRounding, Measuring, "R2", "Rounding to the pump's step changes the dose by more than the site's tolerance."),
+		either(RateRounding, Measuring, "R2", "Rounding to the pump's step changes the dose beyond tolerance; refused when it adds more than twice that."),
 		warns(RateSlow, Measuring, "R8", "Below 1 mL/h a pump may take many minutes to begin delivering."),
 		stops(ExpiredPresentation, Times, "R18", "The ampoule or vial is past its expiry date."),
 		warns(UseByUnknown, Times, "R18", "No stability is on record, so site policy alone sets the use-by time."),
