@@ -122,6 +122,9 @@ func (w *work) settleFinal(t target) bool {
 	switch m.Method {
 	case Neat:
 		m.FinalVolume = m.DrugVolume
+		if t.volume.Given() && t.volume.Cmp(m.DrugVolume) != 0 {
+			return w.neatOffGraduation(t)
+		}
 	case MakeUpTo:
 		m.FinalVolume = t.volume
 	case AddTo:
@@ -141,6 +144,19 @@ func (w *work) settleFinal(t target) bool {
 			Message: "a bag holds more than its nominal volume; the interval covers the drug and the syringe only"})
 	}
 	return w.holdingBarrel(t)
+}
+
+// neatOffGraduation refuses an undiluted volume that was ordered as such and
+// that no graduation shows.
+func (w *work) neatOffGraduation(t target) bool {
+	s, m := w.plan.Style, w.plan.Mixture
+	return w.refuse(refusal.Reason{
+		Code: refusal.VolumeOffGraduation, Field: t.field,
+		Got: s.Volume(t.volume), Want: "a volume that a graduation shows",
+		Rule: "R8", Pos: t.pos,
+		Message: fmt.Sprintf("no graduation shows %s of the undiluted drug", s.Volume(t.volume)),
+		Remedy:  "order " + s.Volume(m.DrugVolume) + ", or another syringe size",
+	})
 }
 
 // results works amount, concentration, left-over, and the drug's companions.
