@@ -73,11 +73,25 @@ func (w *work) useBy() bool {
 	}
 	best.Stability = known
 	best.At = w.plan.Prepared.Add(time.Duration(best.Minutes) * time.Minute)
+	best = shownOnce(best)
 	if !w.o.Expiry.Given() {
 		w.plan.UseBy = best
 		return true
 	}
 	return w.expiry(best)
+}
+
+// shownOnce moves a use-by time that the clock shows twice, when the clocks go
+// back, to the last minute before: a label cannot say which of the two is meant.
+func shownOnce(u UseBy) UseBy {
+	const wall = "2006-01-02 15:04"
+	twice := func(t time.Time) bool {
+		return t.Format(wall) == t.Add(time.Hour).Format(wall) || t.Format(wall) == t.Add(-time.Hour).Format(wall)
+	}
+	for n := 0; n < 121 && u.Minutes > 1 && twice(u.At); n++ {
+		u.At, u.Minutes = u.At.Add(-time.Minute), u.Minutes-1
+	}
+	return u
 }
 
 // expiry lets the container's own expiry date win when it is earlier. A date

@@ -3,6 +3,7 @@ package labels
 import (
 	"fmt"
 	"strings"
+	"time"
 
 	"drawup/dilution"
 	"drawup/dilution/body"
@@ -224,19 +225,24 @@ func askedRates(p dilution.Plan, add func(name, text string)) {
 	}
 	add(recheck.RateWeightBy, weightWord(part.Weight.Given(), part.Surface.Given(), p.Order.RateBy, part.Rule.By))
 	for i, rung := range part.Ladder {
-		add(recheck.Row(recheck.Ladder, i+1, "dose"), p.Style.DoseRate(rung.Dose))
+		add(recheck.Row(recheck.Ladder, i+1, "dose"), ungrouped(p.Style.DoseRate(rung.Dose)))
 	}
+	empty := p.Prepared.Add(time.Duration(part.Minutes) * time.Minute)
+	add(recheck.EmptyOffset, empty.Format("-07:00"))
 	add(recheck.RateStep, p.Style.FlowRate(part.Step))
 	add(recheck.LowDose, part.Low.Dose.Written())
 	add(recheck.HighDose, part.High.Dose.Written())
 	add(recheck.LimitDose, part.Limit.Dose.Written())
 	if part.Low.Dose.Written() == "" {
-		add(recheck.LowDose, p.Style.DoseRate(part.Low.Dose))
+		add(recheck.LowDose, ungrouped(p.Style.DoseRate(part.Low.Dose)))
 	}
 	if part.High.Dose.Written() == "" {
-		add(recheck.HighDose, p.Style.DoseRate(part.High.Dose))
+		add(recheck.HighDose, ungrouped(p.Style.DoseRate(part.High.Dose)))
 	}
 }
+
+// ungrouped is a printed figure as it would be typed: without separators.
+func ungrouped(s string) string { return strings.NewReplacer(",", "", "\u00a0", "").Replace(s) }
 
 // typedDose is the text of a dose without the word for the weight.
 func typedDose(s string) string {

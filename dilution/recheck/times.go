@@ -251,6 +251,11 @@ func emptyAt(c *check, _ int, text string) *objection {
 	offset := EmptyOffset
 	if !c.has(EmptyOffset) {
 		offset = PreparedOffset
+		if c.was(EmptyOffset) { // the clocks change before it is empty
+			c.texts[EmptyOffset] = c.asked[EmptyOffset][0]
+			defer delete(c.texts, EmptyOffset)
+			offset = EmptyOffset
+		}
 	}
 	return c.spans(Prepared, PreparedOffset, EmptyAt, offset, minutes)
 }
