@@ -88,7 +88,7 @@ func siteOf(o order.Order) (site, error) {
 			}
 			b, ok := syringe.Find(f.Value)
 			if !ok {
-				return s, fmt.Errorf("got a barrel of %q, want a size whose graduation is on record", f.Text)
+				return s, fmt.Errorf("got a barrel of %q, want one of %s, whose graduations are on record", f.Text, knownSizes(s.style))
 			}
 			s.barrels = append(s.barrels, b)
 		}
@@ -97,4 +97,13 @@ func siteOf(o order.Order) (site, error) {
 		}
 	}
 	return s, nil
+}
+
+// knownSizes lists the barrels whose graduations are on record.
+func knownSizes(style quantity.Style) string {
+	var out []string
+	for _, b := range syringe.Known() {
+		out = append(out, style.Volume(b.Nominal()))
+	}
+	return joinOr(out)
 }
