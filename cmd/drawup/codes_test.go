@@ -162,7 +162,7 @@ func unproven(t *testing.T) string {
 	if reasons.Refused() {
 		t.Fatal(reasons)
 	}
-	l, err := labels.FromPlan(list.Plans[0], labels.FactsOf(list.Plans[0]), makingOf(o, f, o.Session.Prepared.Value, []byte(soundOrder)))
+	l, err := labels.FromPlan(list.Plans[0], labels.FactsOf(list.Plans[0]), makingOf(o, f, o.Session.Prepared.Value, []byte(soundOrder), nil))
 	if err != nil {
 		t.Fatal(err)
 	}

@@ -59,7 +59,7 @@ func newJob(
 		reasons.Sort()
 		return j, reasons
 	}
-	j.making = makingOf(o, f, when, data)
+	j.making = makingOf(o, f, when, data, leaveOut)
 	reasons = append(reasons, leftOut(list)...)
 	return j, append(reasons, j.word()...)
 }
@@ -100,10 +100,17 @@ func unknownNumbers(o order.Order, leaveOut map[int]bool) refusal.List {
 
 // makingOf is what all papers of the run share. The digest binds the order's
 // bytes, the formulary and the time (rule R19).
-func makingOf(o order.Order, f *formulary.Formulary, at time.Time, data []byte) labels.Making {
+func makingOf(
+	o order.Order, f *formulary.Formulary, at time.Time, data []byte, leaveOut map[int]bool,
+) labels.Making {
 	sum := sha256.New()
 	fmt.Fprintf(sum, "%s\n%s\n%d\n", f.Digest, at.Format(time.RFC3339), len(data))
 	sum.Write(data)
+	for n := range o.Syringes {
+		if leaveOut[n+1] {
+			fmt.Fprintf(sum, "\nwithout %d", n+1)
+		}
+	}
 	digest := sum.Sum(nil)
 	// Without the time: a label printed at its moment keeps its serial.
 	order := sha256.Sum256(append([]byte(f.Digest+"\n"), data...))

@@ -85,6 +85,7 @@ func (f *paperFlags) writeLabel(e env, j *job, all refusal.List) int {
 	case stock == "":
 		stock = "roll-40x15"
 	}
+	j.list.LeftOut = nil
 	pages, reasons := placeLabels(j, []labels.Label{l}, stock, 0, f.mono)
 	all = append(all, reasons...)
 	if f.out == "" {

@@ -315,12 +315,29 @@ func (j *job) foot() []string {
 	m := j.making
 	foot := []string{
 		"made " + m.Made + " by " + m.Preparer + ", " + m.Place,
-		m.Formulary + ", " + m.State + ", digest " + m.Digest,
+		m.Formulary + ", " + m.State + ", digest " + m.Digest + j.withoutWords(),
 	}
 	if m.Invented {
 		foot = append(foot, "invented demonstration")
 	}
 	return foot
+}
+
+// withoutWords says on a sheet of labels which syringes have none there. The
+// margin is narrow: of many only the number is told, the draw-up sheet has all.
+func (j *job) withoutWords() string {
+	left := j.list.LeftOut
+	switch n := len(left); {
+	case n == 0:
+		return ""
+	case n > 6:
+		return fmt.Sprintf("; %d syringes left out", n)
+	}
+	var numbers []string
+	for _, l := range left {
+		numbers = append(numbers, strconv.Itoa(l.Number))
+	}
+	return "; left out: syringe " + strings.Join(numbers, ", ")
 }
 
 // cautions are those of this order among all.

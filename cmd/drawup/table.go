@@ -101,7 +101,11 @@ func tellCautions(w io.Writer, l refusal.List) {
 		return
 	}
 	fmt.Fprintln(w)
-	fmt.Fprintf(w, "%d cautions stand on the draw-up sheet; of these, before you start:\n", len(l))
+	count := "1 caution stands"
+	if len(l) > 1 {
+		count = fmt.Sprintf("%d cautions stand", len(l))
+	}
+	fmt.Fprintf(w, "%s on the draw-up sheet; of these, before you start:\n", count)
 	for _, r := range l {
 		if r.Syringe == 0 || r.Code == refusal.LabelMoved {
 			for _, line := range wrap(string(r.Code)+": "+r.Message, widest-2) {
