@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"math/big"
 
+	"drawup/dilution/body"
 	"drawup/dilution/formulary"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
@@ -206,6 +207,11 @@ func (w *work) judgeDose(row formulary.Rule[quantity.Dose]) (*DosePart, verdict,
 	})
 	if err != nil {
 		return nil, verdict{}, err
+	}
+	if d.Weight.Given() && d.By != row.By && row.By != body.None && row.By != 0 {
+		// 0.6 mg/kg can be more than 0.6 mg/kg: say of which weight.
+		s.text += " of " + scalarWord(d.By)
+		s.row += ", by " + scalarWord(row.By)
 	}
 	v := s.judge()
 	w.totalMax(row, d, &v)
