@@ -17,67 +17,14 @@ import (
 	"drawup/layouts/pdf/readback"
 )
 
-// bagOrder is invented: a drug added to a full bag, one whose volume is
-// withdrawn first, doses by body surface, a long name with a full ladder and
-// as many cautions as a card may meet.
-const bagOrder = `
-[session]
-place = "Harbour Theatre 2 (invented)"
-date = 2026-12-01
-prepared = "07:30"
-zone = "+00:00"
-preparer = "A. Sample"
-invented = true
-[site]
-bolus_use_by = "12 h"
-infusion_use_by = "24 h"
+// The shipped orders: the demonstration list, and one with the methods that it
+// lacks.
+func demoOrder(t *testing.T) string { return shipped(t, "harbour-morning.toml") }
+func bagOrder(t *testing.T) string  { return shipped(t, "harbour-bags.toml") }
 
-[[patient]]
-id = "HM-01"
-sex = "female"
-age = "38 years"
-height = "168 cm"
-weight = "70 kg"
-weighed = "floor scale"
-  [[patient.syringe]]
-  drug = "propofol"
-  presentation = "ampoule 200 mg in 20 mL"
-  dose = "55 mg/m2 surface"
-  [[patient.infusion]]
-  drug = "noradrenaline"
-  presentation = "ampoule 4 mg in 4 mL"
-  mix = "8 mg in 100 mL"
-  method = "add to"
-  diluent = "glucose 5 %"
-  line = "central"
-  start = "0.05 microgram/kg/min"
-  from = "0.02 microgram/kg/min"
-  to = "0.3 microgram/kg/min"
-  [[patient.infusion]]
-  drug = "oxytocin"
-  presentation = "ampoule 5 units in 1 mL"
-  mix = "5 units in 500 mL"
-  method = "withdraw, then add"
-  start = "2 milliunits/min"
-  [[patient.infusion]]
-  drug = "remifentanil"
-  presentation = "vial 2 mg"
-  mix = "2 mg in 40 mL"
-  diluent = "sodium chloride 0.9 %"
-  start = "4 microgram/m2/min surface"
-  [[patient.infusion]]
-  drug = "glyceryl trinitrate"
-  presentation = "vial 50 mg in 50 mL"
-  mix = "50 mg in 50 mL"
-  start = "10 microgram/min"
-  from = "10 microgram/min"
-  to = "140 microgram/min"
-`
-
-// demoOrder is the demonstration list.
-func demoOrder(t *testing.T) string {
+func shipped(t *testing.T, name string) string {
 	t.Helper()
-	data, err := os.ReadFile("../testdata/orders/harbour-morning.toml")
+	data, err := os.ReadFile("../testdata/orders/" + name)
 	if err != nil {
 		t.Fatal(err)
 	}
@@ -88,7 +35,7 @@ func demoOrder(t *testing.T) string {
 // the number, the range, the signatures and the change-over block on it.
 func TestEveryCardIsOnePage(t *testing.T) {
 	longest := 0
-	for name, text := range map[string]string{"demonstration": demoOrder(t), "bags": bagOrder, "three": sheetOrder} {
+	for name, text := range map[string]string{"demonstration": demoOrder(t), "bags": bagOrder(t), "three": sheetOrder} {
 		r := runOf(t, text)
 		pages, data := r.placed(t, "pump cards")
 		cards := r.papers["pump cards"]
@@ -146,7 +93,7 @@ func warnings(n int) []sheets.Caution {
 
 // R15: what does not fit on the one page of a card is refused, not cut.
 func TestCardThatDoesNotFitIsRefused(t *testing.T) {
-	r := runOf(t, bagOrder)
+	r := runOf(t, bagOrder(t))
 	card := cardWith(t, r, sheets.Cautions{List: warnings(20)})
 	pages, refused := layouts.Sheets([]sheets.Sheet{card}, r.passed)
 	if !slices.Contains(refused.Codes(), refusal.TextTooLong) || len(pages) > 0 {
@@ -162,7 +109,7 @@ func TestCardThatDoesNotFitIsRefused(t *testing.T) {
 // Cautions for which a card has no room are left to the draw-up sheet, the
 // last ones first, and the card says so.
 func TestCautionsBeyondTheCardAreNamed(t *testing.T) {
-	r := runOf(t, bagOrder)
+	r := runOf(t, bagOrder(t))
 	const rest = "More of these stand elsewhere."
 	for _, n := range []int{1, 20} {
 		card := cardWith(t, r, sheets.Cautions{List: warnings(n), Rest: rest})

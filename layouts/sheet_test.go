@@ -144,7 +144,7 @@ func spaced(s string) string {
 // independent renderer reads it. Figures of the chart and of the foot apart,
 // nothing may be left out.
 func TestSheetsReadBack(t *testing.T) {
-	for _, text := range []string{sheetOrder, bagOrder} {
+	for _, text := range []string{sheetOrder, bagOrder(t)} {
 		readBack(t, runOf(t, text))
 	}
 }
@@ -229,7 +229,7 @@ func TestEveryPageHasItsFoot(t *testing.T) {
 // Nothing stands over anything else: the boxes of two texts never meet, as the
 // renderer measures them, and every text keeps clear of the edge.
 func TestTextsDoNotMeet(t *testing.T) {
-	for _, text := range []string{sheetOrder, bagOrder} {
+	for _, text := range []string{sheetOrder, bagOrder(t)} {
 		doNotMeet(t, runOf(t, text))
 	}
 }

@@ -1,6 +1,7 @@
 package sheets_test
 
 import (
+	"os"
 	"regexp"
 	"slices"
 	"strconv"
@@ -15,71 +16,15 @@ import (
 	"drawup/labels/sheets"
 )
 
-// others is an invented order with the methods that demo lacks: a drug added
-// to a full bag, one whose volume is withdrawn first, doses per m² of body
-// surface, a rate that a pump starts slowly, a lean weight above the plateau.
-const others = `
-[session]
-place = "Harbour Theatre 2 (invented)"
-date = 2026-12-01
-prepared = "07:30"
-zone = "+00:00"
-preparer = "A. Sample"
-invented = true
-[site]
-bolus_use_by = "12 h"
-infusion_use_by = "24 h"
-
-[[patient]]
-id = "HM-01"
-sex = "female"
-age = "38 years"
-height = "168 cm"
-weight = "70 kg"
-weighed = "floor scale"
-  [[patient.syringe]]
-  drug = "propofol"
-  presentation = "ampoule 200 mg in 20 mL"
-  dose = "55 mg/m2 surface"
-  [[patient.infusion]]
-  drug = "noradrenaline"
-  presentation = "ampoule 4 mg in 4 mL"
-  mix = "8 mg in 100 mL"
-  method = "add to"
-  diluent = "glucose 5 %"
-  line = "central"
-  start = "0.05 microgram/kg/min"
-  from = "0.02 microgram/kg/min"
-  to = "0.3 microgram/kg/min"
-  [[patient.infusion]]
-  drug = "oxytocin"
-  presentation = "ampoule 5 units in 1 mL"
-  mix = "5 units in 500 mL"
-  method = "withdraw, then add"
-  start = "2 milliunits/min"
-  [[patient.infusion]]
-  drug = "remifentanil"
-  presentation = "vial 2 mg"
-  mix = "2 mg in 40 mL"
-  diluent = "sodium chloride 0.9 %"
-  start = "4 microgram/m2/min surface"
-  [[patient.infusion]]
-  drug = "glyceryl trinitrate"
-  presentation = "vial 50 mg in 50 mL"
-  mix = "50 mg in 50 mL"
-  start = "10 microgram/min"
-
-[[patient]]
-id = "HM-02"
-sex = "female"
-age = "44 years"
-height = "178 cm"
-weight = "190 kg"
-  [[patient.syringe]]
-  drug = "propofol"
-  presentation = "ampoule 200 mg in 20 mL"
-  dose = "2 mg/kg lean"
-`
+// others is the order with the methods that demo lacks.
+func others(t *testing.T) string {
+	t.Helper()
+	data, err := os.ReadFile("../../testdata/orders/harbour-bags.toml")
+	if err != nil {
+		t.Fatal(err)
+	}
+	return string(data)
+}
 
 // aside are digits that are no figure: numbers of syringes, of sources and of
 // what the pump asks for.
@@ -163,7 +108,7 @@ func TestEveryDigitIsAFigure(t *testing.T) {
 	for _, c := range []struct {
 		text    string
 		without int
-	}{{demo, leftOut}, {demo, 0}, {others, 0}} {
+	}{{demo, leftOut}, {demo, 0}, {others(t), 0}} {
 		r := papers(t, c.text, c.without)
 		for _, s := range r.all() {
 			words := known(r, strings.Contains(s.Title, "the second person"))
@@ -176,7 +121,7 @@ func TestEveryDigitIsAFigure(t *testing.T) {
 
 // The test above must be able to fail.
 func TestBareFiguresAreSeen(t *testing.T) {
-	words := known(papers(t, others, 0), false)
+	words := known(papers(t, others(t), 0), false)
 	for text, want := range map[string]bool{"12 mL": true, "is about 43.75 kg": true, "4 of 5 mL": true, "syringe 4 holds 5 mL": true, "syringes 1, 3 to 5 and 8": false,
 		"source 12, unverified": false, "3  weight": false, "floor scale": false, "weight 70 kg": true, "patient HM-01": false, "71 kg": true, "lean weight (Janmahasatian 2005)": false} {
 		s := sheets.Sheet{Parts: []sheets.Part{{Syringe: 1, Blocks: []sheets.Block{sheets.Words{Line: labels.Words(text)}}}}}
@@ -213,7 +158,7 @@ func TestSentencesHaveOneName(t *testing.T) {
 // The methods of rule R5 and doses by body surface pass the second route on
 // all papers.
 func TestOtherMethodsPassTheSecondRoute(t *testing.T) {
-	r := papers(t, others, 0)
+	r := papers(t, others(t), 0)
 	for _, p := range r.list.Plans {
 		figures := r.figures(p.Number)
 		if _, err := recheck.Check(labels.Stated(p, figures)); err != nil {
@@ -227,7 +172,7 @@ func TestOtherMethodsPassTheSecondRoute(t *testing.T) {
 // 1987: the root of 168 x 70 / 3600 is 1.807, so 55 mg/m² are 99.55 mg by
 // 1.81 m².
 func TestOtherMethodsOnPaper(t *testing.T) {
-	r := papers(t, others, 0)
+	r := papers(t, others(t), 0)
 	text := strings.Join(r.drawUp[0].Text(), "\n")
 	inOrder(t, text, "Fetch", "bag of 100 mL glucose 5 %", "bag of 500 mL sodium chloride 0.9 %",
 		"Noradrenaline", "Take a bag of 100 mL of glucose 5 %.", "Draw up 8 mL from 2 ampoules", "Add it to the full bag; the bag then holds 108 mL.", "Mix: turn the bag",
@@ -253,7 +198,7 @@ func TestOtherMethodsOnPaper(t *testing.T) {
 
 // What the second person must not see is not seen for these methods either.
 func TestOtherBlindPagesHoldNoAnswer(t *testing.T) {
-	r := papers(t, others, 0)
+	r := papers(t, others(t), 0)
 	for i, p := range r.list.Plans {
 		for _, leak := range leaks(r.check[2*i], p) {
 			t.Errorf("syringe %d, page for the second person: got %s, want only what was typed", p.Number, leak)

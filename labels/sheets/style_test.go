@@ -47,7 +47,7 @@ const little = session + `
 // Rule R9: the interval comes from the assay and the readings. Whichever is
 // largest, the assay is printed, so that the interval can be worked again.
 func TestAssayAlwaysStandsBesideTheInterval(t *testing.T) {
-	for _, text := range []string{little, demo, others} {
+	for _, text := range []string{little, demo, others(t)} {
 		r := papers(t, text, 0)
 		for i, p := range r.list.Plans {
 			working := strings.Join(r.check[2*i+1].Text(), "\n")
@@ -94,7 +94,7 @@ func unexcused(r run, p dilution.Plan, word string) []string {
 // name of a container, a note) keeps the formulary's words; nothing else does.
 func TestStyleUSNeverSpellsMicrogram(t *testing.T) {
 	mcg, bounds := 0, 0
-	for _, text := range []string{demo, others} {
+	for _, text := range []string{demo, others(t)} {
 		text = strings.Replace(strings.ReplaceAll(text, " microgram/", " mcg/"), "[site]\n", "[site]\nstyle = \"us\"\n", 1)
 		r := papers(t, strings.ReplaceAll(text, "10 microgram/min", "10 mcg/min"), 0)
 		for _, p := range r.list.Plans {
@@ -160,7 +160,7 @@ func TestLimitsAreGrouped(t *testing.T) {
 // syringe with what becomes of it (rule R5), before the concentration.
 func TestHeadSaysWhatToDraw(t *testing.T) {
 	heads := map[string]sheets.Name{}
-	for _, text := range []string{demo, others} {
+	for _, text := range []string{demo, others(t)} {
 		for _, part := range papers(t, text, leftOut).drawUp[0].Parts {
 			for _, b := range part.Blocks {
 				if name, ok := b.(sheets.Name); ok {
@@ -188,7 +188,7 @@ func TestHeadSaysWhatToDraw(t *testing.T) {
 
 // A paper of a bag is headed so.
 func TestPapersOfABagSayBag(t *testing.T) {
-	r := papers(t, others, 0)
+	r := papers(t, others(t), 0)
 	want := map[int]string{1: "syringe 1", 2: "bag 2", 3: "bag 3", 4: "syringe 4", 5: "syringe 5", 6: "syringe 6"}
 	for _, s := range slices.Concat(r.pump, r.check) {
 		if strings.HasPrefix(s.Note, "open only") {
