@@ -124,7 +124,7 @@ func (w *work) lasts() bool {
 		Code: refusal.RunsPastUseBy, Rule: "R18",
 		Field: "start", Got: fmt.Sprintf("%d h", part.Minutes/60),
 		Want: fmt.Sprintf("%d h", w.plan.UseBy.Minutes/60), Pos: w.o.Start.Pos,
-		Message: "at the start rate the syringe would still be running after its use-by time",
+		Message: "at the start rate it would still be running after its use-by time",
 		Remedy:  "change it at the use-by time, empty or not",
 	})
 }

@@ -142,7 +142,7 @@ func TestTrueSentencesPass(t *testing.T) {
 		"Not for the \"frail\": one dose lasts 17 to 35 h – see G5.",
 		"Filter of 5 micrometres \\ none",
 		"First line, 13 days, second line.",
-		"at the start rate the syringe would still be running after its use-by time",
+		"at the start rate it would still be running after its use-by time",
 		"the volume of the powder itself is taken as nothing, as its source does",
 		"below 1 mL/h a syringe pump may take many minutes to begin delivering",
 		"below 1 mL/h a syringe pump may take many minutes to begin delivering; 0.3 mL/h is the pump's step",

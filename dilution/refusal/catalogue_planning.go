@@ -64,7 +64,7 @@ func measuringEntries() []Entry {
 		warns(RateSlow, Measuring, "R8", "Below 1 mL/h a pump may take many minutes to begin delivering."),
 		stops(ExpiredPresentation, Times, "R18", "The ampoule or vial is past its expiry date."),
 		warns(UseByUnknown, Times, "R18", "No stability is on record, so site policy alone sets the use-by time."),
-		warns(RunsPastUseBy, Times, "R18", "At the start rate the syringe would still run after its use-by time."),
+		warns(RunsPastUseBy, Times, "R18", "At the start rate a syringe or bag would still run after its use-by time."),
 	}
 }
 
