@@ -66,7 +66,7 @@ func FuzzCheck(f *testing.F) {
 // and nothing at all confirms a sentence exactly when it holds no figure.
 func FuzzSentence(f *testing.F) {
 	for _, s := range []string{"0.3 mL is under a fifth of the 2 mL barrel", "9 h 48 min", "6 to 8 h", "0.1–0.2 mg/kg", "01 Dec 2026 07:30",
-		"2026-12-01", "a4-65, ISO 7886-1", "1,000\u00a0mL", "½ 00.3 mg", "3. mL", "10.0 mg", "0.3 mg/kg lean"} {
+		"2026-12-01", "a4-65, ISO 7886-1", "1,000\u00a0mL", "½ 00.3 mg", "3. mL", "10.0 mg", "0.3 mg/kg lean", "0\f%", "0 %\v"} {
 		f.Add(s)
 	}
 	none := func(reading) bool { return false }

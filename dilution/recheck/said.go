@@ -38,7 +38,7 @@ func (k *known) learn(text string) {
 	}
 	if v, _, err := readTyped(text); err == nil {
 		k.quantities = append(k.quantities, v)
-		if fields := strings.Fields(text); len(fields) == 2 {
+		if fields := strings.Split(fold(text), " "); len(fields) == 2 { // parted as tokens are
 			k.words[fields[0]] = true
 			return
 		}

@@ -47,10 +47,10 @@ type piece struct {
 	closed bool
 }
 
-// fold makes every run of blanks one space.
+// fold makes every run of blanks one space; those that group a number stay.
 func fold(text string) string {
 	return strings.Join(strings.FieldsFunc(unbroken(text), func(r rune) bool {
-		return r == ' ' || r == '\t' || r == '\n' || r == '\r'
+		return unicode.IsSpace(r) && r != '\u202f' && r != '\u00a0'
 	}), " ")
 }
 
