@@ -23,7 +23,7 @@ type slab struct {
 func (b slab) at(x, y ink.Micrometre) []ink.Mark {
 	out := make([]ink.Mark, len(b.marks))
 	for i, m := range b.marks {
-		out[i] = shifted(m, x, y)
+		out[i] = moved(m, x, y)
 	}
 	return out
 }

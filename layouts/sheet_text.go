@@ -144,29 +144,3 @@ func startsUnit(w string) bool {
 	}
 	return false
 }
-
-// shifted is a mark moved over the page.
-func shifted(m ink.Mark, dx, dy ink.Micrometre) ink.Mark {
-	switch m := m.(type) {
-	case ink.Text:
-		m.X, m.Y = m.X+dx, m.Y+dy
-		return m
-	case ink.Rect:
-		m.X, m.Y = m.X+dx, m.Y+dy
-		return m
-	case ink.Line:
-		m.X1, m.Y1, m.X2, m.Y2 = m.X1+dx, m.Y1+dy, m.X2+dx, m.Y2+dy
-		return m
-	case ink.Polygon:
-		points := make([]ink.Point, len(m.Points))
-		for i, p := range m.Points {
-			points[i] = ink.Point{X: p.X + dx, Y: p.Y + dy}
-		}
-		m.Points = points
-		return m
-	case ink.Symbol:
-		m.X, m.Y = m.X+dx, m.Y+dy
-		return m
-	}
-	return m
-}
