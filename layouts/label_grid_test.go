@@ -176,7 +176,7 @@ func TestArrangedOnceOrAnew(t *testing.T) {
 				other.Code.Text = strings.Replace(l.Code.Text, l.Serial.Text, other.Serial.Text, 1)
 				change(&other)
 				both := placed(t, []labels.Label{l, other}, s, layouts.Options{})
-				alone := placed(t, []labels.Label{other}, s, layouts.Options{Skip: 1})
+				alone := placed(t, []labels.Label{other}, s, layouts.Options{Used: 1})
 				got, want := both[len(both)-1].Marks, alone[len(alone)-1].Marks
 				if len(got) < len(want) {
 					t.Fatalf("%s %s: got %d marks, want %d or more", name, l.Name, len(got), len(want))

@@ -36,7 +36,7 @@ func look(t testing.TB, list []labels.Label, s layouts.Stock, opt layouts.Option
 	img, runs := file.Render(1, dpi), file.Text(1)
 	var out []seen
 	for i, l := range list {
-		p := s.Place(i + opt.Skip)
+		p := s.Place(i + opt.Used)
 		out = append(out, seen{l, img, dpi, p.X + s.Inset, p.Y + s.Inset, s.LabelW - 2*s.Inset, s.LabelH - 2*s.Inset, runs})
 	}
 	return out

@@ -11,7 +11,7 @@ const PartSize = 2000
 // Labels by itself and written to a file of its own: pages are numbered anew
 // in each. A run ends with a full page where most allows it, so that no sheet
 // is left half empty; used is the number of labels already used on the first
-// sheet of the first part, Options.Skip there and 0 in the others. The runs
+// sheet of the first part, Options.Used there and 0 in the others. The runs
 // share the memory of list. A most under 1 counts as PartSize.
 func Parts(list []labels.Label, s Stock, used, most int) [][]labels.Label {
 	if most < 1 {

@@ -15,9 +15,9 @@ type Proof interface{ Covers([]recheck.Figure) bool }
 
 // Options of a sheet of labels.
 type Options struct {
-	// Skip is the number of labels already used on the first sheet, along the
+	// Used is the number of labels already used on the first sheet, along the
 	// rows; it has no meaning on a roll.
-	Skip int
+	Used int
 	// Mono leaves the class colours out. Stripes, bar and line stay, in black,
 	// and the class word is printed in any case.
 	Mono bool
@@ -38,10 +38,10 @@ const Paper = "label"
 // the list is Refused.
 func Labels[P Proof](list []labels.Label, s Stock, passed []P, opt Options) ([]ink.Page, refusal.List) {
 	var refused refusal.List
-	if opt.Skip < 0 || opt.Skip >= s.PerPage() && !s.Roll() {
+	if opt.Used < 0 || opt.Used >= s.PerPage() && !s.Roll() {
 		refused = append(refused, refusal.Reason{Code: refusal.ValueUnknown, Severity: refusal.Refuse,
 			Message: "More labels are said to be used than the sheet has.", Field: "skip",
-			Got: fmt.Sprint(opt.Skip), Want: fmt.Sprintf("0 to %d on stock %s", s.PerPage()-1, s.Name)})
+			Got: fmt.Sprint(opt.Used), Want: fmt.Sprintf("0 to %d on stock %s", s.PerPage()-1, s.Name)})
 	}
 	whole := !refused.Refused()
 	p := newPlacer(s, opt, len(list))
@@ -84,7 +84,7 @@ type placer struct {
 func newPlacer(s Stock, opt Options, count int) *placer {
 	p := &placer{stock: s, opt: opt, arranger: newArranger(s, opt.Mono)}
 	if !s.Roll() {
-		p.at = opt.Skip
+		p.at = opt.Used
 	}
 	per := s.PerPage()
 	p.total = (p.at + count + per - 1) / per

@@ -22,7 +22,7 @@ func TestPlaces(t *testing.T) {
 		list[i] = samples()[0]
 		list[i].Serial.Text = fmt.Sprintf("%08d", i)
 	}
-	pages := placed(t, list, s, layouts.Options{Skip: 7, Foot: []string{"Made by A. Example."}})
+	pages := placed(t, list, s, layouts.Options{Used: 7, Foot: []string{"Made by A. Example."}})
 	if len(pages) != 2 {
 		t.Fatalf("got %d pages for 77 places, want 2", len(pages))
 	}
@@ -67,7 +67,7 @@ func TestPages(t *testing.T) {
 	if got := len(placed(t, list, stock(t, "a4-24"), layouts.Options{})); got != 2 {
 		t.Errorf("got %d sheets for 24 labels, want 2", got)
 	}
-	if got := len(placed(t, list, stock(t, "roll-70x37"), layouts.Options{Skip: 5})); got != 24 {
+	if got := len(placed(t, list, stock(t, "roll-70x37"), layouts.Options{Used: 5})); got != 24 {
 		t.Errorf("got %d pages, want 24", got)
 	}
 	if got := len(placed(t, nil, stock(t, "a4-65"), layouts.Options{})); got != 0 {
@@ -186,7 +186,7 @@ func TestOtherRefusals(t *testing.T) {
 		t.Errorf("got %+v", got)
 	}
 	for skip, ok := range map[int]bool{-1: false, 0: true, 64: true, 65: false} {
-		_, refused := layouts.Labels(samples()[:1], stock(t, "a4-65"), []allPassed{{}}, layouts.Options{Skip: skip})
+		_, refused := layouts.Labels(samples()[:1], stock(t, "a4-65"), []allPassed{{}}, layouts.Options{Used: skip})
 		if refused.Refused() == ok {
 			t.Errorf("%d labels used: got %v", skip, refused)
 		}

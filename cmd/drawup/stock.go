@@ -155,7 +155,7 @@ func placeLabels(j *job, list []labels.Label, name string, used int, mono bool) 
 	for i, l := range list {
 		passed[i] = j.passed[l.Number]
 	}
-	return layouts.Labels(list, s, passed, layouts.Options{Skip: used, Mono: mono, Foot: j.foot()})
+	return layouts.Labels(list, s, passed, layouts.Options{Used: used, Mono: mono, Foot: j.foot()})
 }
 
 func stockNames() string {
