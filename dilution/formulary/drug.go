@@ -24,6 +24,9 @@ var flags = []string{
 	"separate line", "shake or invert", "keep refrigerated",
 }
 
+// containers are what a presentation may come in.
+var containers = []string{"ampoule", "vial", "syringe", "bag", "bottle"}
+
 // atcPattern is the shape of an ATC code of the fifth level.
 var atcPattern = regexp.MustCompile(`^[A-Z]\d{2}[A-Z]{2}\d{2}$`)
 
@@ -147,10 +150,10 @@ func (r *reader) presentation(rec presentationRecord, kind quantity.Kind, path .
 	}
 	p.Unverified = rec.Unverified || p.Source.Grade == "C"
 	at := func(key string) []any { return append(append([]any{}, path...), key) }
-	if rec.ID == "" || !contains([]string{"ampoule", "vial", "syringe"}, rec.Container) ||
+	if rec.ID == "" || !contains(containers, rec.Container) ||
 		!contains([]string{"solution", "emulsion", "powder"}, rec.Form) {
 		r.fault(refusal.ValueUnknown, rec.ID+", "+rec.Container+", "+rec.Form,
-			"an id, a container (ampoule, vial, syringe) and a form (solution, emulsion, powder)",
+			"an id, a container (ampoule, vial, syringe, bag, bottle) and a form (solution, emulsion, powder)",
 			"the presentation is not described", at("id")...)
 	}
 	a, err := quantity.ParseAmount(rec.Amount)
