@@ -3,6 +3,8 @@ package dilution_test
 import (
 	"fmt"
 	"math/big"
+	"os"
+	"path/filepath"
 	"slices"
 	"strings"
 	"testing"
@@ -182,11 +184,11 @@ func TestSlipsOnEveryStoredRange(t *testing.T) {
 	if len(rows) < 80 {
 		t.Fatalf("got %d rows, want the whole starter formulary", len(rows))
 	}
-	tried := 0
+	tried, never := 0, unmakeable(t)
 	for _, r := range rows {
 		patient := fitting(t, r)[0]
 		table, ways := r.ways(t)
-		_, mute := unmakeable()[r.String()]
+		_, mute := never[r.String()]
 		for _, figure := range r.slips(t) {
 			reached := false
 			for _, way := range ways {
@@ -240,17 +242,17 @@ func unmixed(codes []refusal.Code) bool {
 // why not.
 func TestUsualFiguresPass(t *testing.T) {
 	f := starter(t)
-	used := map[string]bool{}
+	used, never, small := map[string]bool{}, unmakeable(t), tooSmallToRead(t)
 	for _, r := range rowsOf(f) {
 		for _, figure := range []string{r.usualLow, r.usualHigh} {
 			if figure == "" {
 				continue
 			}
 			name := r.String()
-			why, excused := unmakeable()[name]
+			why, excused := never[name]
 			if !excused {
 				name += ": " + figure
-				why, excused = tooSmallToRead()[name]
+				why, excused = small[name]
 			}
 			used[name] = used[name] || excused
 			switch made, codes := r.made(t, f, figure); {
@@ -261,7 +263,7 @@ func TestUsualFiguresPass(t *testing.T) {
 			}
 		}
 	}
-	for _, list := range []map[string]string{unmakeable(), tooSmallToRead()} {
+	for _, list := range []map[string]string{never, small} {
 		for name := range list {
 			if !used[name] {
 				t.Errorf("the test excuses %q, which is no row", name)
@@ -293,22 +295,36 @@ func (r row) made(t *testing.T, f *formulary.Formulary, figure string) (bool, []
 
 // unmakeable are the rows that no container of the starter formulary can
 // serve, and why.
-func unmakeable() map[string]string {
-	return map[string]string{
-		"cefazolin, bolus, prophylaxis before surgery, slow injection, IV": "no displacement of the powder is stored",
-		"flumazenil, infusion, reversal in intensive care, IV":             "no concentration bounds for infusion are stored",
-	}
-}
+func unmakeable(t *testing.T) map[string]string { return excused(t, "unmakeable") }
 
 // tooSmallToRead are usual figures that no single dilution to an end of the
 // bounds lets a graduation show.
-func tooSmallToRead() map[string]string {
-	return map[string]string{
-		"adrenaline, bolus, push dose, IV: 5 microgram":        "0.5 mL of 10 micrograms/mL lies between the 0.2 mL marks of a 10 mL barrel",
-		"remifentanil, bolus, induction, IV: 0.5 microgram/kg": "about 1.1 mL of 20 micrograms/mL, between the same marks",
-		"remifentanil, bolus, induction, IV: 1 microgram/kg":   "it is the limit: the mark above passes it, the one below is too far off",
-		"suxamethonium, bolus, intubation, IM: 4 mg/kg":        "it is the limit: the mark above passes it, the one below is too far off, and heavier patients meet the absolute maximum",
+func tooSmallToRead(t *testing.T) map[string]string { return excused(t, "too small") }
+
+// excused is what the tables of testdata/formulary/excused say of one kind.
+func excused(t *testing.T, kind string) map[string]string {
+	t.Helper()
+	files, err := filepath.Glob("../testdata/formulary/excused/*.tsv")
+	if err != nil || len(files) == 0 {
+		t.Fatalf("no table of excuses: %v", err)
 	}
+	out := map[string]string{}
+	for _, name := range files {
+		data, err := os.ReadFile(name)
+		if err != nil {
+			t.Fatal(err)
+		}
+		for line := range strings.Lines(string(data)) {
+			cells := strings.Split(strings.TrimRight(line, "\n"), "\t")
+			if len(cells) != 3 {
+				t.Fatalf("%s: got %q, want kind, row and why", name, line)
+			}
+			if cells[0] == kind {
+				out[cells[1]] = cells[2]
+			}
+		}
+	}
+	return out
 }
 
 // A row without a lower figure cannot catch a slip downwards; every plan by it
