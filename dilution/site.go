@@ -20,6 +20,8 @@ type site struct {
 	barrels   []syringe.Barrel
 	bolus     useByPolicy
 	infusion  useByPolicy
+
+	jurisdiction string // whose standard preparations are used; "" for any
 }
 
 type useByPolicy struct {
@@ -74,6 +76,7 @@ func siteOf(o order.Order) (site, error) {
 	if in.PumpStep.Value.Given() {
 		s.step = in.PumpStep.Value
 	}
+	s.jurisdiction = in.Jurisdiction.Value
 	if in.BolusUseBy.Value > 0 {
 		s.bolus = useByPolicy{int64(in.BolusUseBy.Value / time.Minute), "site policy in the order file"}
 	}

@@ -198,6 +198,9 @@ func (r Rule[T]) Ages() string {
 	if r.AgeTo.Given() {
 		parts = append(parts, "under "+r.AgeTo.String())
 	}
+	if r.Frail {
+		parts = append(parts, "the frail")
+	}
 	return strings.Join(parts, ", ")
 }
 

@@ -95,6 +95,14 @@ const (
 	ExpiredPresentation    Code = "presentation-expired"
 	UseByUnknown           Code = "use-by-unknown"
 	NegligibleDisplacement Code = "displacement-negligible"
+	PreservedNeuraxial     Code = "preserved-near-nerves"
+	DoseAboveFirst         Code = "dose-above-first-maximum"
+	DoseAboveDay           Code = "dose-above-day-maximum"
+	AmountAboveCourse      Code = "amount-above-course-maximum"
+	RunsTooLong            Code = "runs-longer-than-allowed"
+	FrailBlank             Code = "no-figures-for-the-frail"
+	StandardElsewhere      Code = "standard-of-another-jurisdiction"
+	LocalSum               Code = "local-anaesthetic-sum"
 )
 
 // Faults of measuring.
