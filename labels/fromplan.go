@@ -80,7 +80,8 @@ func FromPlan(p dilution.Plan, w Facts, m Making) (Label, error) {
 }
 
 func (l *Label) names(p dilution.Plan, w Facts) {
-	name := p.Drug.LabelName(p.Style)
+	name := p.Name
+	l.Other = p.Other
 	if second := p.Presentation.SecondName; second != "" {
 		name, _, _ = strings.Cut(name, " with ")
 		l.Second, l.SecondConcentration = Capital(second), w.Cell(recheck.SecondConcentrated)
