@@ -41,6 +41,10 @@ func fileEntries() []Entry {
 		stops(ValueWrongType, Files, "", "A value is a number, date or table where a text is needed, or the other way round."),
 		stops(ValueUnknown, Files, "", "A value is not one of those that the key may have."),
 		stops(TimeMalformed, Files, "R18", "A date, a time or a time zone cannot be read, or does not exist in that zone."),
+		stops(LimitLoosened, Files, "R13", "A site's file lets through what the formulary under it does not, and gives no reason."),
+		stops(ApprovedOnce, Files, "R13", "One person has signed an approval twice."),
+		stops(ApprovedOther, Files, "R13", "The approval is for another formulary, or for another text of it."),
+		stops(ApprovalPast, Files, "R13", "The approval is past its day of review, or begins later."),
 		stops(NothingToMake, Files, "", "The order has no syringe, or all of them are left out."),
 		stops(SyringesMany, Files, "", "The order has more syringes than the serial numbers have room for."),
 	}
