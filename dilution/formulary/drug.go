@@ -27,6 +27,9 @@ var flags = []string{
 // containers are what a presentation may come in.
 var containers = []string{"ampoule", "vial", "syringe", "bag", "bottle"}
 
+// Flags lists the marks that a drug may carry.
+func Flags() []string { return append([]string{}, flags...) }
+
 // exclusions are the kinds of reason why a diluent must not be used.
 var exclusions = []string{
 	"precipitation", "degradation", "emulsion cracking", "adsorption", "haemolysis", "not listed",
