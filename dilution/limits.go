@@ -35,15 +35,20 @@ func (w *work) checkConcentration() bool {
 	for _, b := range rows {
 		ok = w.within(b) && ok
 	}
-	return ok
+	return w.diluentStrength() && ok
 }
 
-// boundsFor is the rows for this use and line. A row for the very line goes
-// before a row for any line.
+// boundsFor is the rows for this use, route and line. A row that names the
+// route goes before a row that names none, a row for the very line before one
+// for any line.
 func (w *work) boundsFor(line string) (rows []formulary.Bounds, central bool) {
 	var any []formulary.Bounds
+	named := false
 	for _, b := range w.plan.Drug.Bounds {
-		if b.Use != w.use() {
+		named = named || b.Use == w.use() && routeListed(b.Routes, w.plan.Route)
+	}
+	for _, b := range w.plan.Drug.Bounds {
+		if b.Use != w.use() || named != routeListed(b.Routes, w.plan.Route) || !named && len(b.Routes) > 0 {
 			continue
 		}
 		switch b.Line {
