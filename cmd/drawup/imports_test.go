@@ -24,6 +24,7 @@ func mayImport() map[string][]string {
 		"cmd/drawup":                {"*"},
 		"dilution":                  plan,
 		"dilution/body":             {"dilution/quantity"},
+		"dilution/certainty":        {"dilution/quantity", "dilution/syringe"},
 		"dilution/formulary":        {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
 		"dilution/formulary/verify": {"dilution/formulary", "dilution/quantity", "dilution/refusal", "dilution/salts"},
 		"dilution/order":            {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
