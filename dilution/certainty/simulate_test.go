@@ -73,7 +73,7 @@ func simulatedPreparations(t *testing.T) []simulated {
 	five, ten, none := Around(per(t, "5")), Around(per(t, "10")), Around(zeroPercent())
 	g := func(volume, nominal string) gauge { return gaugeOf(in(t, volume, nominal)) }
 	one, full, least := g("1", "2"), g("10", "10"), g("0.1", "1")
-	nine, fifty, four, low, badly := g("9", "10"), g("50", "50"), g("4", "5"), g("5", "50"), g("3", "50")
+	nine, fifty, four, low, badly, bottom := g("9", "10"), g("50", "50"), g("4", "5"), g("5", "50"), g("3", "50"), g("1", "50")
 	made := func(final, drawn gauge) Step { return MakeUpTo(final.Measured, drawn.Measured) }
 	return []simulated{
 		{"neat", Preparation{Assay: ten}, func(b bench) float64 { return b.between(0.9, 1.1) }},
@@ -96,6 +96,10 @@ func simulatedPreparations(t *testing.T) []simulated {
 			}},
 		{"two steps, both of the least", Preparation{Assay: none, Steps: []Step{made(full, least), made(fifty, least)}},
 			func(b bench) float64 { return b.read(least) / b.read(full) * b.read(least) / b.read(fifty) }},
+		{"three steps, all drawn low in a large syringe", Preparation{Assay: none, Steps: []Step{made(fifty, bottom), made(fifty, bottom), made(fifty, bottom)}},
+			func(b bench) float64 {
+				return b.read(bottom) / b.read(fifty) * b.read(bottom) / b.read(fifty) * b.read(bottom) / b.read(fifty)
+			}},
 		{"three fills of their own", Preparation{Assay: none, Steps: []Step{MakeUpTo(fifty.Measured, full.Measured, full.Measured, one.Measured)}},
 			func(b bench) float64 { return (b.read(full) + b.read(full) + b.read(one)) / b.read(fifty) }},
 	}
