@@ -35,6 +35,7 @@ func mayImport() map[string][]string {
 		"dilution/salts":            {"dilution/quantity"},
 		"dilution/syringe":          {"dilution/quantity"},
 		"dilution/tomlfile":         {"dilution/refusal"},
+		"dilution/twostep":          {"dilution/quantity", "dilution/syringe"},
 		"fonts":                     {},
 		"labels":                    said, // no page, no font, no PDF
 		"labels/gs1":                {},
