@@ -134,42 +134,53 @@ func drawWanted(t *rapid.T) Wanted {
 // target, but the same by every figure of the order; and so the rivals that are
 // the narrowest and the most thrifty.
 func TestNeverWorse(t *testing.T) {
-	rapid.Check(t, func(t *rapid.T) {
-		w := drawWanted(t)
-		want, found := exhaustive(w, byRule, byInterval, byWaste)
-		f, err := Find(w)
-		var none *NoneError
-		var unreadable *UnreadableError
-		switch {
-		case !found && (errors.As(err, &none) || errors.As(err, &unreadable)) || belowSmallest(err) && w.Volume.Cmp(w.Smallest) < 0:
-			return
-		case err != nil || !found:
-			t.Fatalf("got %v, exhaustive search found %v", err, found)
+	rapid.Check(t, func(t *rapid.T) { hold(t, drawWanted(t)) })
+}
+
+// TestLeastTaken is a case that chance rarely hits: the least volume that can be
+// taken is already too much, and the narrowest is reached by drawing more still.
+func TestLeastTaken(t *testing.T) {
+	w := wanted(t, "10 mg/mL", "0.22 mg/mL", "10")
+	w.Barrels, w.Smallest, w.Tolerance = []syringe.Barrel{barrelOf(t, "20", "1"), barrelOf(t, "1", "0.5")}, mL(t, "0.5"), per(t, "20")
+	hold(t, w)
+}
+
+// hold holds one search to an exhaustive one.
+func hold(t failing, w Wanted) {
+	t.Helper()
+	want, found := exhaustive(w, byRule, byInterval, byWaste)
+	f, err := Find(w)
+	var none *NoneError
+	var unreadable *UnreadableError
+	switch {
+	case !found && (errors.As(err, &none) || errors.As(err, &unreadable)) || belowSmallest(err) && w.Volume.Cmp(w.Smallest) < 0:
+		return
+	case err != nil || !found:
+		t.Fatalf("got %v, exhaustive search found %v", err, found)
+	}
+	got := judged(f.Plan)
+	if !got.same(want[0]) {
+		t.Fatalf("got %s, exhaustive search %s", got, want[0])
+	}
+	narrowest, thrifty := got, got // where no rival is
+	for _, r := range f.Rivals {
+		j := judged(r.Plan)
+		if !got.before(j, byRule) || r.Lost == 0 {
+			t.Fatalf("rival %s is no worse than %s, or lost by nothing", j, got)
 		}
-		got := judged(f.Plan)
-		if !got.same(want[0]) {
-			t.Fatalf("got %s, exhaustive search %s", got, want[0])
+		if off := new(big.Rat).Abs(r.Error.Rat()); off.Cmp(w.Tolerance.Rat()) > 0 {
+			t.Fatalf("rival is %s off", off)
 		}
-		narrowest, thrifty := got, got // where no rival is
-		for _, r := range f.Rivals {
-			j := judged(r.Plan)
-			if !got.before(j, byRule) || r.Lost == 0 {
-				t.Fatalf("rival %s is no worse than %s, or lost by nothing", j, got)
-			}
-			if off := new(big.Rat).Abs(r.Error.Rat()); off.Cmp(w.Tolerance.Rat()) > 0 {
-				t.Fatalf("rival is %s off", off)
-			}
-			if r.Narrowest {
-				narrowest = j
-			}
-			if r.LeastWaste {
-				thrifty = j
-			}
+		if r.Narrowest {
+			narrowest = j
 		}
-		if !narrowest.same(want[1]) || !thrifty.same(want[2]) {
-			t.Fatalf("narrowest %s, least waste %s, exhaustive search %s and %s", narrowest, thrifty, want[1], want[2])
+		if r.LeastWaste {
+			thrifty = j
 		}
-	})
+	}
+	if !narrowest.same(want[1]) || !thrifty.same(want[2]) {
+		t.Fatalf("narrowest %s, least waste %s, exhaustive search %s and %s", narrowest, thrifty, want[1], want[2])
+	}
 }
 
 func belowSmallest(err error) bool {

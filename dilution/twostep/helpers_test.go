@@ -9,6 +9,7 @@ import (
 type failing interface {
 	Helper()
 	Fatal(args ...any)
+	Fatalf(format string, args ...any)
 }
 
 func mL(t failing, s string) quantity.Volume {

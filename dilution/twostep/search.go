@@ -83,8 +83,8 @@ func (s *search) makeUpTo(made *volume) bool {
 		if !s.take(drawn, made, at, top, w) {
 			return false
 		}
-		if at < 0 && drawn.n*s.volumes[0].n > w.most {
-			break // and more drawn is farther off still
+		if drawn.n*s.volumes[0].n > w.most {
+			break // the least that can be taken is too much, and more so with more drawn
 		}
 	}
 	return true
