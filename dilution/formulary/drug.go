@@ -27,6 +27,9 @@ var flags = []string{
 // containers are what a presentation may come in.
 var containers = []string{"ampoule", "vial", "syringe", "bag", "bottle"}
 
+// Flags lists the marks that a drug may carry.
+func Flags() []string { return append([]string{}, flags...) }
+
 // exclusions are the kinds of reason why a diluent must not be used.
 var exclusions = []string{
 	"precipitation", "degradation", "emulsion cracking", "adsorption", "haemolysis", "not listed",
@@ -291,7 +294,7 @@ func (r *reader) standard(rec standardRecord, path ...any) Standard {
 	}
 	s := r.source(rec.Source, path...)
 	return Standard{
-		ID: rec.ID, Amount: a, Volume: v, Diluent: rec.Diluent, Line: rec.Line, Patients: rec.Patients,
+		ID: rec.ID, Mix: rec.Mix, Amount: a, Volume: v, Diluent: rec.Diluent, Line: rec.Line, Patients: rec.Patients,
 		Jurisdiction: rec.Jurisdiction, Source: s, Unverified: rec.Unverified || s.Grade == "C",
 		Pos: r.places.Of(path...),
 	}
