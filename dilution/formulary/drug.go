@@ -237,6 +237,7 @@ func (r *reader) contents(p *Presentation, rec presentationRecord, at func(strin
 		s := r.source(rec.Displacement.Source, at("displacement")...)
 		p.Displacement = Figure[quantity.Volume]{
 			Text: "negligible", Source: s, Unverified: rec.Displacement.Unverified || s.Grade == "C",
+			Jurisdiction: s.Jurisdiction, Pos: r.places.Of(at("displacement")...),
 		}
 		p.Negligible, p.Volume = true, added
 		return
