@@ -24,7 +24,7 @@ type row struct {
 	fits               func(body.Age) bool
 	hardLow, usualLow  string
 	usualHigh, highest string
-	total              bool
+	total, frail       bool
 }
 
 func (r row) String() string {
@@ -41,7 +41,7 @@ func (r row) lowest() string {
 
 func rowOf[T any](d formulary.Drug, use string, x formulary.Rule[T]) row {
 	r := row{drug: d, use: use, purpose: x.For, routes: x.Routes, fits: x.Fits, hardLow: x.HardLow.Text,
-		usualLow: x.UsualLow.Text, usualHigh: x.UsualHigh.Text, total: x.TotalMax.Given()}
+		usualLow: x.UsualLow.Text, usualHigh: x.UsualHigh.Text, total: x.TotalMax.Given(), frail: x.Frail}
 	for _, f := range []formulary.Figure[T]{x.UsualHigh, x.SoftHigh, x.HardHigh} {
 		if f.Given() {
 			r.highest = f.Text
@@ -93,7 +93,8 @@ func fitting(t *testing.T, r row) []string {
 			t.Fatal(err)
 		}
 		if r.fits(age) {
-			out = append(out, "\n[[patient]]\n"+lines(key("id", "A"), key("sex", "female"), key("age", p.age), key("height", p.height), key("weight", p.weight)))
+			frail := fmt.Sprintf("frail = %v\n", r.frail)
+			out = append(out, "\n[[patient]]\n"+frail+lines(key("id", "A"), key("sex", "female"), key("age", p.age), key("height", p.height), key("weight", p.weight)))
 		}
 	}
 	if len(out) == 0 {
@@ -111,7 +112,7 @@ func (r row) ways(t *testing.T) (table string, ways []string) {
 	for _, p := range r.drug.Presentations {
 		strength, _ := p.Amount.In(p.Volume)
 		alike := fmt.Sprint(uk().Concentration(strength), p.Neat, p.Powder(), len(p.Diluents), p.Uses)
-		if !p.For(r.use) || p.Volume.Given() && seen[alike] {
+		if !p.For(r.use) || !r.byRoute(p) || p.Volume.Given() && seen[alike] {
 			continue
 		}
 		seen[alike] = true
@@ -129,6 +130,12 @@ func (r row) ways(t *testing.T) (table string, ways []string) {
 		return "infusion", ways
 	}
 	return "syringe", ways
+}
+
+// byRoute reports whether the presentation may be given by the row's first
+// route, which is the one that the orders name.
+func (r row) byRoute(p formulary.Presentation) bool {
+	return len(p.Routes) == 0 || slices.Contains(p.Routes, r.routes[0])
 }
 
 func (r row) diluted(t *testing.T, head string, p formulary.Presentation, b formulary.Bounds) []string {
