@@ -287,7 +287,7 @@ func TestFormularyList(t *testing.T) {
 	}
 	list, _ := asked(t, exitMade, "list")
 	for _, d := range doc.Drugs {
-		if d.ClassWord == "" || strings.Count(list, "\n"+d.Name+" ") != 1 {
+		if d.ClassWord == "" || strings.Count(list, "\n"+d.Name+"  ") != 1 {
 			t.Errorf("%s: got class word %q and not one line", d.Name, d.ClassWord)
 		}
 		for _, f := range d.Flags {
