@@ -234,11 +234,13 @@ func TestTenTimesTheUsual(t *testing.T) {
 	}
 }
 
-// unmixed reports that the mixture itself was refused, so that the dose was
-// never reached: that way of asking says nothing of the limits.
+// unmixed reports that the mixture itself was refused, or the presentation for a
+// patient of this age, so that the dose was never reached: that way of asking says
+// nothing of the limits.
 func unmixed(codes []refusal.Code) bool {
 	for _, c := range []refusal.Code{refusal.DisplacementBlank, refusal.MustBeDiluted, refusal.DiluentMissing, refusal.DiluentNotListed,
-		refusal.ConcentrationTooHigh, refusal.ConcentrationTooLow, refusal.VolumeOffGraduation, refusal.VolumeBelowMeasurable} {
+		refusal.ConcentrationTooHigh, refusal.ConcentrationTooLow, refusal.VolumeOffGraduation, refusal.VolumeBelowMeasurable,
+		refusal.AgeOutside} {
 		if slices.Contains(codes, c) {
 			return true
 		}
