@@ -31,7 +31,7 @@ func others(t *testing.T) string {
 var aside = regexp.MustCompile(`[sS]yringes? [0-9]+((, | and | to )[0-9]+)*|source [0-9]+|^[1-5]  `)
 
 // titles are those of the sources in a file of the formulary.
-var titles = regexp.MustCompile(`(?m)^(?:[\w-]+ = \{ )?title = "(.*?)"`)
+var titles = regexp.MustCompile(`(?m)^title = "(.*)"$`)
 
 // known are the words with digits that a sheet may repeat as they stand: who
 // the patient is and how the weight was found, titles of sources, names of
