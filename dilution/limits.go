@@ -196,7 +196,7 @@ func passed(ceilings []bound, wanted, given *big.Rat) *bound {
 
 // bottom is the lowest figure that the row stores.
 func (s scale) bottom() bound {
-	for _, b := range []bound{s.hardLow, s.usualLow, s.usualHigh} {
+	for _, b := range []bound{s.hardLow, s.usualLow, s.usualHigh, s.softHigh, s.hardHigh} {
 		if b.given {
 			return b
 		}

@@ -240,7 +240,7 @@ func TestTenTimesTheUsual(t *testing.T) {
 func unmixed(codes []refusal.Code) bool {
 	for _, c := range []refusal.Code{refusal.DisplacementBlank, refusal.MustBeDiluted, refusal.DiluentMissing, refusal.DiluentNotListed,
 		refusal.ConcentrationTooHigh, refusal.ConcentrationTooLow, refusal.VolumeOffGraduation, refusal.VolumeBelowMeasurable,
-		refusal.AgeOutside} {
+		refusal.AgeOutside, refusal.RouteNotListed} { // the presentation's own age and routes
 		if slices.Contains(codes, c) {
 			return true
 		}
