@@ -12,7 +12,8 @@ import (
 
 // localSums adds up the local anaesthetics of each patient. Each syringe is
 // its amount over its drug's maximum for this patient; together they must not
-// pass one (rule R11). A syringe with an ordered dose counts with that dose,
+// pass one (rule R11). An infusion counts against the maximum of a day, and
+// where none is stored it is left out and a caution says so. A syringe with an ordered dose counts with that dose,
 // any other with all it holds.
 func localSums(works []*work) refusal.List {
 	var out refusal.List
@@ -39,8 +40,8 @@ func localSum(works []*work) refusal.List {
 	var parts []string
 	for _, w := range works {
 		share, words, reason := w.localShare()
-		if reason != nil && len(works) == 1 {
-			return nil // said by localKnown
+		if reason != nil && (len(works) == 1 || w.o.Infusion) {
+			continue // said by localKnown
 		}
 		if reason != nil {
 			return refusal.List{*reason}
@@ -82,7 +83,7 @@ func (w *work) localShare() (*big.Rat, string, *refusal.Reason) {
 	if w.plan.Dose != nil {
 		given = w.plan.Dose.Amount
 	}
-	most, err := w.localMost()
+	most, err := w.localMost(w.o.Infusion)
 	if err != nil {
 		return nil, "", w.localUnknown(err.Error())
 	}
@@ -96,8 +97,9 @@ func (w *work) localShare() (*big.Rat, string, *refusal.Reason) {
 	return share, fmt.Sprintf("%s of %s, at most %s", s.Amount(given), w.plan.Drug.Name, s.Amount(most)), nil
 }
 
-// localMost is the lowest maximum that fits the patient, as an amount.
-func (w *work) localMost() (quantity.Amount, error) {
+// localMost is the lowest maximum that fits the patient, as an amount: of one
+// time, or for an infusion, which runs for hours, of a day.
+func (w *work) localMost(day bool) (quantity.Amount, error) {
 	var most quantity.Amount
 	take := func(a quantity.Amount) error {
 		if !most.Given() {
@@ -112,6 +114,18 @@ func (w *work) localMost() (quantity.Amount, error) {
 	}
 	for _, m := range w.plan.Drug.LocalMaxima {
 		if !m.Fits(w.size.Age) {
+			continue
+		}
+		if day {
+			if m.DayMax.Given() {
+				a, err := w.amountOf(m.DayMax.Value, m.By)
+				if err != nil {
+					return most, err
+				}
+				if err := take(a); err != nil {
+					return most, err
+				}
+			}
 			continue
 		}
 		if m.PerKg.Given() {
@@ -154,6 +168,7 @@ func localSources(works []*work) string {
 			if m.Fits(w.size.Age) {
 				add(m.PerKg.Source, m.PerKg.Unverified, m.PerKg.Given())
 				add(m.Total.Source, m.Total.Unverified, m.Total.Given())
+				add(m.DayMax.Source, m.DayMax.Unverified, m.DayMax.Given() && w.o.Infusion)
 			}
 		}
 	}
