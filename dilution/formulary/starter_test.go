@@ -292,8 +292,8 @@ func TestEveryFigureHasASource(t *testing.T) {
 	}
 }
 
-// Rows of one drug, purpose, route and counting do not overlap in age: an
-// overlap would let the milder of two rows win.
+// Rows of one drug, purpose, route and counting do not overlap in age, those for
+// the frail apart: an overlap would let the milder of two rows win.
 func TestAgeBandsDoNotOverlap(t *testing.T) {
 	for _, d := range starter(t).Drugs() {
 		for i, a := range d.Doses {
@@ -318,6 +318,9 @@ func share(a, b []string) bool {
 }
 
 func overlap[T any](a, b formulary.Rule[T]) bool {
+	if a.Frail != b.Frail {
+		return false // the row for the frail goes before the other
+	}
 	begins := !b.AgeTo.Given() || !a.AgeFrom.Given() || a.AgeFrom.Less(b.AgeTo)
 	ends := !a.AgeTo.Given() || !b.AgeFrom.Given() || b.AgeFrom.Less(a.AgeTo)
 	return begins && ends
