@@ -53,6 +53,9 @@ func NewList(
 			Remedy:  "mend the [site] table of the order",
 		})
 	}
+	tall, missing := tallManOf(f, o.Site.TallMan)
+	s.tallMan = tall
+	all = append(all, missing...)
 	broken := brokenSyringes(faults)
 	var made []*work
 	for _, sy := range o.Syringes {
@@ -196,7 +199,7 @@ func newPlan(
 	}
 	w.plan.Size = w.size
 	for _, step := range []func() bool{
-		w.findDrug, w.choosePresentation, w.mix, w.checkConcentration, w.dose,
+		w.findDrug, w.nameIt, w.choosePresentation, w.mix, w.checkConcentration, w.dose,
 		w.infusion, w.holdsTooMuch, w.localKnown, w.certainty, w.useBy, w.lasts, w.balance,
 	} {
 		if !step() {

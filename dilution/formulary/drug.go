@@ -291,7 +291,7 @@ func (r *reader) standard(rec standardRecord, path ...any) Standard {
 	}
 	s := r.source(rec.Source, path...)
 	return Standard{
-		ID: rec.ID, Amount: a, Volume: v, Diluent: rec.Diluent, Line: rec.Line, Patients: rec.Patients,
+		ID: rec.ID, Mix: rec.Mix, Amount: a, Volume: v, Diluent: rec.Diluent, Line: rec.Line, Patients: rec.Patients,
 		Jurisdiction: rec.Jurisdiction, Source: s, Unverified: rec.Unverified || s.Grade == "C",
 		Pos: r.places.Of(path...),
 	}

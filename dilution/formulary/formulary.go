@@ -207,6 +207,7 @@ func (r Rule[T]) Ages() string {
 // A Standard is a concentration that a list or a site has settled.
 type Standard struct {
 	ID           string
+	Mix          string // as written
 	Amount       quantity.Amount
 	Volume       quantity.Volume
 	Diluent      string // "" when neat
@@ -240,11 +241,11 @@ type Formulary struct {
 	Mixes   []Mix
 	Never   []NeverMix
 	TallMan []TallMan
-	drugs   []Drug
-}
 
-// State is the approval line that every sheet carries.
-func (f *Formulary) State() string { return "starter formulary, not approved for use here" }
+	drugs    []Drug
+	approval *Approval // nil when nobody approved it
+	lapsed   string    // why an approval that was given does not hold
+}
 
 // Drugs is all drugs in order of name.
 func (f *Formulary) Drugs() []Drug { return f.drugs }

@@ -135,7 +135,10 @@ func (r *reader) file(f *Formulary) {
 		return
 	}
 	if f.Name == "" {
-		f.Name, f.Version = rec.Name, rec.Version
+		f.Name, f.Version, f.Base = rec.Name, rec.Version, rec.Base
+	}
+	if rec.Base != f.Base {
+		r.fault(refusal.KeyConflict, rec.Base, f.Base, "the files of one formulary must build on the same base", "base")
 	}
 	if rec.Name == "" || rec.Name != f.Name || rec.Version != f.Version {
 		r.fault(refusal.KeyConflict, rec.Name+" "+rec.Version, f.Name+" "+f.Version,
