@@ -132,8 +132,8 @@ func (w *work) holdsMoreThanOneDose(row formulary.Rule[quantity.Dose]) {
 		Code: refusal.AmountAboveCourse, Field: "amount",
 		Got: s.Amount(held), Want: "at most " + s.Amount(f.Value),
 		Rule: "R11", Source: sourceWords(f.Source, f.Unverified), Pos: w.o.Pos,
-		Message: fmt.Sprintf("the syringe holds %s, more than the absolute maximum of one dose, %s", s.Amount(held), s.Amount(f.Value)),
-		Remedy:  "never give the syringe whole, or make less",
+		Message: fmt.Sprintf("the syringe holds %s, more than the absolute maximum, %s", s.Amount(held), s.Amount(f.Value)),
+		Remedy:  "never give the whole syringe, or make less",
 	})
 }
 

@@ -29,7 +29,7 @@ func asked(t *testing.T, want int, args ...string) (string, string) {
 // A starterFile is one file of the starter formulary, read by a general TOML
 // reader and nothing of ours.
 type starterFile struct {
-	Sources map[string]struct{ Title, Grade string }
+	Sources map[string]struct{ Title, Grade, Jurisdiction string }
 	Drugs   []map[string]any `toml:"drug"`
 }
 
@@ -104,7 +104,7 @@ func (p *heldPage) sourceText(key string) string {
 	if !ok {
 		p.t.Errorf("%s: the file has no source %q", p.drug, key)
 	}
-	return oneLineOf(fmt.Sprintf("source [%s]: %s", s.Grade, s.Title))
+	return oneLineOf(fmt.Sprintf("source [%s]: %s", strings.TrimSpace(s.Grade+" "+s.Jurisdiction), s.Title))
 }
 
 // hold walks a table of the file.
@@ -141,6 +141,16 @@ func (p *heldPage) marked(name string, on bool, at string) {
 		want = "neat yes, "
 	case name == "neat":
 		want = "neat no, "
+	case name == "multi_dose" && on:
+		want = "multi-dose yes"
+	case name == "frail" && on:
+		want = "the frail"
+	case name == "with_adrenaline" && on:
+		want = "maximum, with adrenaline"
+	case name == "with_adrenaline":
+		want = "maximum, without adrenaline"
+	case name == "multi_dose" || name == "frail":
+		return
 	case name == "show_as" && on:
 		want = "and labels say so"
 	case name == "show_as" || name == "unverified": // sourced looks for the latter
@@ -184,8 +194,12 @@ func (p *heldPage) held(name, text, at string) {
 		want = []string{fmt.Sprintf("%q", text)}
 	case "by":
 		want = []string{"goes by " + byWords(text)}
-	case "jurisdiction":
-		want = []string{"settled for " + text}
+	case "jurisdiction": // of a standard preparation, with or without whom it is for
+		want = []string{"settled for " + text, "settled for adults, " + text, "settled for children, " + text, "settled for newborns, " + text}
+	case "patients":
+		want = []string{"settled for " + text + ", "}
+	case "why":
+		want = []string{"(" + text + ")"}
 	case "atc":
 		want = []string{"ATC code " + text}
 	case "age_from", "age_to":
@@ -235,7 +249,15 @@ func (p *heldPage) sourced(table map[string]any, key, where string) {
 // printed as a high one would be worse than none.
 func nameOnPage(where string) string {
 	key := where[strings.LastIndex(where, ".")+1:]
-	return map[string]string{"hard_low": "hard, at least ", "usual_low": "usual, from ", "usual_high": "usual, to ", "soft_high": "soft, at most ",
+	for tail, name := range map[string]string{"diluent.low": "only from ", "diluent.high": "only up to ", "stability.low": "shown from ",
+		"stability.high": "shown up to ", "local_maximum.per_kg": "by weight ", "local_maximum.total": "in all "} {
+		if strings.HasSuffix(where, tail) {
+			return name
+		}
+	}
+	return map[string]string{"first_max": "first dose ", "repeat_max": "repeat ", "repeat_after": "repeat after ", "day_max": "in a day ",
+		"course_max": "in a course ", "longest": "runs at most ", "overfill": "overfill ", "preserved": "preserved ", "not_for_pump": "not for a pump ",
+		"hard_low": "hard, at least ", "usual_low": "usual, from ", "usual_high": "usual, to ", "soft_high": "soft, at most ",
 		"hard_high": "hard, at most ", "total_max": "in all, at most ", "low": "at least ", "high": "at most ", "assay": "assay, up to ± ",
 		"displacement": "displacement ", "substance": "substance ", "diluent": "diluent ",
 		"never_as_bolus": "never as bolus ", "never_as_infusion": "never as infusion "}[key]
@@ -287,7 +309,8 @@ func TestFormularyList(t *testing.T) {
 	}
 	list, _ := asked(t, exitMade, "list")
 	for _, d := range doc.Drugs {
-		if d.ClassWord == "" || strings.Count(list, "\n"+d.Name+" ") != 1 {
+		// Two blanks end the column: one name may begin another, "dexamethasone phosphate".
+		if d.ClassWord == "" || strings.Count(list, "\n"+d.Name+"  ") != 1 {
 			t.Errorf("%s: got class word %q and not one line", d.Name, d.ClassWord)
 		}
 		for _, f := range d.Flags {

@@ -48,7 +48,7 @@ func commands() []command {
 		{"dose", "one dose to a volume", runDose},
 		{"body", "ideal, adjusted and lean weight; surface area", runBody},
 		{"convert", "units, mmol, per cent, salt and base", runConvert},
-		{"formulary", "list the drugs that are stored, show one with every source", runFormulary},
+		{"formulary", "the stored drugs: list, show, verify, compare, print, approve", runFormulary},
 		{"help", "this list, one command, or one topic", runHelp},
 	}
 }

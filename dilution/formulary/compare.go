@@ -54,7 +54,7 @@ func Compare(older, newer *Formulary) []Change {
 			out = append(out, Change{Drug: d.Name, Name: "the drug", New: "filed", Verb: "added", Entry: Entry{Pos: d.Pos}})
 		}
 	}
-	out = append(out, compareEntries("", older.pairEntries(), newer.pairEntries())...)
+	out = append(out, compareEntries("", older.PairEntries(), newer.PairEntries())...)
 	sort.SliceStable(out, func(i, j int) bool {
 		if out[i].Loosened != out[j].Loosened {
 			return out[i].Loosened

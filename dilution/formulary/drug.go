@@ -27,6 +27,9 @@ var flags = []string{
 // containers are what a presentation may come in.
 var containers = []string{"ampoule", "vial", "syringe", "bag", "bottle"}
 
+// Flags lists the marks that a drug may carry.
+func Flags() []string { return append([]string{}, flags...) }
+
 // exclusions are the kinds of reason why a diluent must not be used.
 var exclusions = []string{
 	"precipitation", "degradation", "emulsion cracking", "adsorption", "haemolysis", "not listed",
@@ -234,6 +237,7 @@ func (r *reader) contents(p *Presentation, rec presentationRecord, at func(strin
 		s := r.source(rec.Displacement.Source, at("displacement")...)
 		p.Displacement = Figure[quantity.Volume]{
 			Text: "negligible", Source: s, Unverified: rec.Displacement.Unverified || s.Grade == "C",
+			Jurisdiction: s.Jurisdiction, Pos: r.places.Of(at("displacement")...),
 		}
 		p.Negligible, p.Volume = true, added
 		return

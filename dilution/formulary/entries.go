@@ -51,7 +51,7 @@ func add[T any](e *entries, name string, f Figure[T], looser direction) {
 
 func (e *entries) note(name string, n *Note, looser direction) {
 	if n != nil {
-		e.add(Entry{Name: name, Text: n.Text, Source: n.Source, Unverified: n.Unverified, looser: looser})
+		e.add(Entry{Name: name, Text: n.Text, Source: n.Source, Unverified: n.Unverified, Pos: n.Pos, looser: looser})
 	}
 }
 
@@ -215,8 +215,8 @@ func (e *entries) localMaximum(m LocalMaximum) {
 	add(e, name+": in a day", m.DayMax, upwards)
 }
 
-// pairEntries is what the formulary says of two drugs at once.
-func (f *Formulary) pairEntries() []Entry {
+// PairEntries is what the formulary says of two drugs at once.
+func (f *Formulary) PairEntries() []Entry {
 	e := &entries{}
 	for _, m := range f.Mixes {
 		name := fmt.Sprintf("%s with %s in one syringe, %s, %s", m.Drugs[0], m.Drugs[1], m.Use, strings.Join(m.Routes, " "))

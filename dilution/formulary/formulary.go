@@ -44,6 +44,7 @@ type Note struct {
 	Text       string
 	Source     Source
 	Unverified bool
+	Pos        refusal.Pos
 }
 
 // A Drug is one substance, in one salt where the salt matters.
@@ -244,7 +245,8 @@ type Formulary struct {
 
 	drugs    []Drug
 	approval *Approval // nil when nobody approved it
-	lapsed   string    // why an approval that was given does not hold
+	basePos  refusal.Pos
+	lapsed   string // why an approval that was given does not hold
 }
 
 // Drugs is all drugs in order of name.

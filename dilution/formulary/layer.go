@@ -5,6 +5,7 @@ import (
 	"encoding/hex"
 	"fmt"
 	"sort"
+	"strings"
 
 	"drawup/dilution/refusal"
 )
@@ -29,7 +30,7 @@ func Layer(base *Formulary, texts ...Text) (*Formulary, refusal.List) {
 	if site.Base != base.Name && site.Base != base.Name+" "+base.Version {
 		return site, append(faults, refusal.Reason{
 			Code: refusal.ValueUnknown, Severity: refusal.Refuse, Field: "base", Got: site.Base,
-			Want: base.Name + " " + base.Version, Rule: "R13", Pos: refusal.Pos{File: tomls[0].Name},
+			Want: base.Name + " " + base.Version, Rule: "R13", Pos: site.basePos,
 			Message: fmt.Sprintf("the file builds on %q, and the formulary here is %q", site.Base, base.Name+" "+base.Version),
 			Remedy:  "name the formulary that it was written against, and read what changed since: drawup formulary compare",
 		})
@@ -110,9 +111,11 @@ func unexplained(base, newer *Formulary) refusal.List {
 	return out
 }
 
+// explains reports that a taken_away record names the limit, or the whole row or
+// presentation that it belongs to.
 func (d Drug) explains(limit string) bool {
 	for _, t := range d.TakenAway {
-		if t.Limit == limit {
+		if t.Limit == limit || strings.HasPrefix(limit, t.Limit+": ") {
 			return true
 		}
 	}

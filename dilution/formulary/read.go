@@ -136,6 +136,7 @@ func (r *reader) file(f *Formulary) {
 	}
 	if f.Name == "" {
 		f.Name, f.Version, f.Base = rec.Name, rec.Version, rec.Base
+		f.basePos = places.Of("base")
 	}
 	if rec.Base != f.Base {
 		r.fault(refusal.KeyConflict, rec.Base, f.Base, "the files of one formulary must build on the same base", "base")
@@ -205,7 +206,7 @@ func (r *reader) note(t *textRecord, path ...any) *Note {
 		r.fault(refusal.KeyMissing, "", "a sentence", "the text is empty", path...)
 	}
 	s := r.source(t.Source, path...)
-	return &Note{Text: t.Text, Source: s, Unverified: t.Unverified || s.Grade == "C"}
+	return &Note{Text: t.Text, Source: s, Unverified: t.Unverified || s.Grade == "C", Pos: r.places.Of(path...)}
 }
 
 // figure reads one figure with parse; a nil record is a figure not given.

@@ -81,7 +81,7 @@ func (l *sourceList) part(syringe int) Part {
 	const group = 12 // sources that stand beside each other, half of them on each side
 	blocks := []Block{heading("Sources")}
 	if len(l.records) > 0 {
-		blocks = append(blocks, Words{Line: labels.Words("Records of "+strings.Join(l.records, "; ")+"."), Small: true})
+		blocks = append(blocks, Words{Line: labels.Words("Records of " + strings.Join(l.records, "; ") + "."), Small: true})
 	}
 	for from := 0; from < len(l.list); from += group {
 		to := min(from+group, len(l.list))

@@ -227,7 +227,8 @@ func (c *check) rates() {
 	}
 }
 
-// flows wants a dose rate to run between 0.02 and 2000 mL/h.
+// flows wants a dose rate to run between 0.05 and 2500 mL/h: the fastest that is
+// published is the doubled lipid rescue of 30 mL/kg/h, 2100 mL/h at 70 kg.
 func (c *check) flows(x scaled, purpose string) {
 	for _, b := range c.drug.Bounds {
 		if b.Use != "infusion" || !b.Low.Given() || !b.High.Given() {
@@ -235,8 +236,8 @@ func (c *check) flows(x scaled, purpose string) {
 		}
 		slow := new(big.Rat).Quo(x.value, b.Low.Value.Rat())
 		fast := new(big.Rat).Quo(x.value, b.High.Value.Rat())
-		if slow.Cmp(big.NewRat(1, 20)) < 0 || fast.Cmp(big.NewRat(1500, 1)) > 0 {
-			c.find(refusal.Implausible, x.pos, "rate", x.f, "a flow from 0.05 to 1500 mL/h for 70 kg",
+		if slow.Cmp(big.NewRat(1, 20)) < 0 || fast.Cmp(big.NewRat(2500, 1)) > 0 {
+			c.find(refusal.Implausible, x.pos, "rate", x.f, "a flow from 0.05 to 2500 mL/h for 70 kg",
 				"the dose rate of %s for %s and the concentrations for infusion do not fit; is a unit wrong?", x.f, purpose)
 			return
 		}
