@@ -209,6 +209,15 @@ func (p proof) fluid(name string, f shownFluid) {
 	p.figure("  only up to", f.High)
 }
 
+// weight writes which weight a row goes by, and where that is said.
+func (p proof) weight(by string, source *shownSource) {
+	if source != nil {
+		p.sourced("goes by", byWords(by), *source)
+	} else {
+		p.item("goes by", byWords(by))
+	}
+}
+
 func (p proof) local(list []shownLocal) {
 	for _, m := range list {
 		with := "without adrenaline"
@@ -221,7 +230,7 @@ func (p proof) local(list []shownLocal) {
 			ages = "every age"
 		}
 		p.item("ages", ages)
-		p.item("goes by", byWords(m.By))
+		p.weight(m.By, m.BySource)
 		p.figure("by weight", m.PerKg)
 		p.figure("in all", m.Total)
 		p.figure("in a day", m.DayMax)
@@ -270,12 +279,7 @@ func (p proof) rule(kind string, r shownRule) {
 		ages = "every age"
 	}
 	p.item("ages", ages)
-	by := byWords(r.By)
-	if r.BySource != nil {
-		p.sourced("goes by", by, *r.BySource)
-	} else {
-		p.item("goes by", by)
-	}
+	p.weight(r.By, r.BySource)
 	p.figure("hard, at least", r.HardLow)
 	p.figure("usual, from", r.UsualLow)
 	p.figure("usual, to", r.UsualHigh)

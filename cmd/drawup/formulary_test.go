@@ -284,14 +284,16 @@ func TestFormularyDocument(t *testing.T) {
 			t.Errorf("%s is no list: %v", key, doc.Drug[key])
 		}
 	}
-	// Noradrenaline 4, 8 and 16 mg in 50 mL are 80, 160 and 320 micrograms/mL
-	// (Intensive Care Society and Faculty of Intensive Care Medicine, 2016).
+	// Noradrenaline 4, 8 and 16 mg in 50 mL, and 8, 16 and 32 mg in 100 mL, are 80, 160
+	// and 320 micrograms/mL (Intensive Care Society and Faculty of Intensive Care
+	// Medicine, 2016).
 	var got []string
 	for _, s := range doc.Drug["standards"].([]any) {
 		c := s.(map[string]any)["concentration"].(map[string]any)
 		got = append(got, fmt.Sprint(c["exact"], " ", c["unit"]))
 	}
-	if want := []string{"80 microgram/mL", "160 microgram/mL", "320 microgram/mL"}; !slices.Equal(got, want) {
+	three := []string{"80 microgram/mL", "160 microgram/mL", "320 microgram/mL"}
+	if want := slices.Concat(three, three); !slices.Equal(got, want) {
 		t.Errorf("got %q, want %q", got, want)
 	}
 }

@@ -25,7 +25,7 @@ func mayImport() map[string][]string {
 		"dilution":                  plan,
 		"dilution/body":             {"dilution/quantity"},
 		"dilution/formulary":        {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
-		"dilution/formulary/verify": {"dilution/formulary", "dilution/quantity", "dilution/refusal", "dilution/salts"},
+		"dilution/formulary/verify": {"dilution/body", "dilution/formulary", "dilution/quantity", "dilution/refusal", "dilution/salts"},
 		"dilution/order":            {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
 		"dilution/pump":             {"dilution/quantity"},
 		"dilution/quantity":         {},

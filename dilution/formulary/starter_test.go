@@ -282,14 +282,14 @@ func TestAgeBandsDoNotOverlap(t *testing.T) {
 	for _, d := range starter(t).Drugs() {
 		for i, a := range d.Doses {
 			for _, b := range d.Doses[:i] {
-				if a.For == b.For && share(a.Routes, b.Routes) && overlap(a, b) && a.UsualHigh.Value.Basis() == b.UsualHigh.Value.Basis() {
+				if a.For == b.For && a.Frail == b.Frail && share(a.Routes, b.Routes) && overlap(a, b) && a.UsualHigh.Value.Basis() == b.UsualHigh.Value.Basis() {
 					t.Errorf("%s, %s: the rows for %q and %q overlap", d.Name, a.For, a.Ages(), b.Ages())
 				}
 			}
 		}
 		for i, a := range d.Rates {
 			for _, b := range d.Rates[:i] {
-				if a.For == b.For && share(a.Routes, b.Routes) && overlap(a, b) && a.UsualHigh.Value.Basis() == b.UsualHigh.Value.Basis() {
+				if a.For == b.For && a.Frail == b.Frail && share(a.Routes, b.Routes) && overlap(a, b) && a.UsualHigh.Value.Basis() == b.UsualHigh.Value.Basis() {
 					t.Errorf("%s, %s: the rows for %q and %q overlap", d.Name, a.For, a.Ages(), b.Ages())
 				}
 			}
@@ -302,9 +302,6 @@ func share(a, b []string) bool {
 }
 
 func overlap[T any](a, b formulary.Rule[T]) bool {
-	if a.Frail != b.Frail {
-		return false // the row for the frail goes before the other
-	}
 	begins := !b.AgeTo.Given() || !a.AgeFrom.Given() || a.AgeFrom.Less(b.AgeTo)
 	ends := !a.AgeTo.Given() || !b.AgeFrom.Given() || b.AgeFrom.Less(a.AgeTo)
 	return begins && ends
