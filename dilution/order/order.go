@@ -51,6 +51,18 @@ type Site struct {
 	Tolerance     Field[quantity.Percent] // how far a graduation may move a volume (R8)
 	PumpStep      Field[quantity.FlowRate]
 	Barrels       []Field[quantity.Volume] // syringe sizes in stock
+	Products      []Product                // preparations with a GTIN of the site's own
+}
+
+// A Product is a preparation to which the site has given a trade item number
+// (GTIN) out of its own GS1 company prefix: one drug at one concentration in one
+// volume.
+type Product struct {
+	Number        Field[string] // 14 digits, the last of which checks the others
+	Drug          Field[string]
+	Concentration Field[quantity.Concentration]
+	Volume        Field[quantity.Volume]
+	Pos           refusal.Pos
 }
 
 // A Patient is whom the syringes are for.

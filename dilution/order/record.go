@@ -27,6 +27,15 @@ type siteRecord struct {
 	Tolerance     string   `toml:"tolerance"`
 	PumpStep      string   `toml:"pump_step"`
 	Barrels       []string `toml:"barrels"`
+
+	Products []productRecord `toml:"gtin"`
+}
+
+type productRecord struct {
+	Number        string `toml:"number"`
+	Drug          string `toml:"drug"`
+	Concentration string `toml:"concentration"`
+	Volume        string `toml:"volume"`
 }
 
 type patientRecord struct {
@@ -79,13 +88,14 @@ type infusionRecord struct {
 // knownKeys lists every key of the records with its table; a test holds the
 // two together.
 func knownKeys() []string {
-	keys := []string{"session", "site", "patient", "patient.syringe", "patient.infusion"}
+	keys := []string{"session", "site", "site.gtin", "patient", "patient.syringe", "patient.infusion"}
 	for _, t := range []struct {
 		table string
 		names []string
 	}{
 		{"session", []string{"place", "date", "prepared", "zone", "preparer", "invented"}},
 		{"site", []string{"style", "bolus_use_by", "infusion_use_by", "smallest_volume", "tolerance", "pump_step", "barrels"}},
+		{"site.gtin", []string{"number", "drug", "concentration", "volume"}},
 		{"patient", []string{"id", "name", "sex", "age", "height", "weight", "weighed", "estimated"}},
 		{"patient.syringe", append(commonKeys(), "dose", "amount", "concentration", "volume")},
 		{"patient.infusion", append(commonKeys(), "standard", "mix", "method", "line", "start", "from", "to")},

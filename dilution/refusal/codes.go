@@ -35,6 +35,7 @@ const (
 	NothingToMake    Code = "nothing-to-make"
 	SyringesMany     Code = "too-many-syringes"
 	SyringeNumber    Code = "syringe-number-unknown"
+	ProductNumber    Code = "product-number-wrong"
 )
 
 // Faults of a patient.
