@@ -16,6 +16,7 @@ const (
 	Moment                     // a day or time that does not exist
 	Pairing                    // an identifier without one that it needs, or beside one that it excludes
 	Repeated                   // an identifier twice
+	Content                    // a company's own value of another form than its reader expects
 )
 
 // A Fault is one thing that is wrong with a code.
