@@ -17,6 +17,7 @@ const (
 	Pairing                    // an identifier without one that it needs, or beside one that it excludes
 	Repeated                   // an identifier twice
 	Content                    // a company's own value of another form than its reader expects
+	Lost                       // a value with the next identifier in it: a separator went missing on the way
 )
 
 // A Fault is one thing that is wrong with a code.
