@@ -147,11 +147,19 @@ func (c choice) costsNothing(other choice) bool {
 	return c.small >= other.small && c.large >= other.large && c.way.pitch >= other.way.pitch
 }
 
+// moduleLow is the least side of a module: 0.255 mm, the least of GS1 DataMatrix
+// on healthcare items [unverified: the table was not seen].
+const moduleLow = 255
+
 // form arranges the label with one form of the code, in the best size of module
 // with which it fits and is good.
 func (f *fitting) form(symbols []symbol, i int, good func(arrangement) bool) (arrangement, bool) {
 	for _, dots := range f.stock.Dots {
-		if a, ok := f.with(codeSize{i, symbols[i].side, f.stock.module(dots), i == len(symbols)-1}); ok && good(a) {
+		module := f.stock.module(dots)
+		if dots < 2 || module < moduleLow {
+			continue // no scanner could be relied on
+		}
+		if a, ok := f.with(codeSize{i, symbols[i].side, module, i == len(symbols)-1}); ok && good(a) {
 			return a, true
 		}
 	}

@@ -6,6 +6,7 @@ import (
 	"strings"
 	"testing"
 
+	"drawup/dilution/refusal"
 	"drawup/labels"
 	"drawup/layouts"
 	"drawup/layouts/ink"
@@ -185,6 +186,23 @@ func nameSize(pages []ink.Page, l labels.Label) ink.Micrometre {
 		}
 	}
 	return 0
+}
+
+// A stock whose modules would be under 0.255 mm, or under two dots, gets no code
+// that nobody can read: its labels are refused.
+func TestModuleTooSmall(t *testing.T) {
+	s := stock(t, "roll-70x37")
+	for _, c := range []struct {
+		dpi  int
+		dots []int
+	}{{203, []int{1, 2}}, {300, []int{3, 2}}, {72, []int{1}}} {
+		s.DPI, s.Dots = c.dpi, c.dots
+		if got := refusedWith(t, samples()[0], s); got.Code != refusal.LabelTooSmall || !strings.Contains(got.Message, "barcode") {
+			t.Errorf("%d dots per inch, modules of %v: got %v", c.dpi, c.dots, got)
+		}
+	}
+	s.DPI, s.Dots = 203, []int{3}
+	placed(t, samples()[:1], s, layouts.Options{})
 }
 
 // A code that breaks the GS1 rules is refused, not drawn, in whichever form.
