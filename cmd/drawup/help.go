@@ -110,6 +110,24 @@ const helpLabel = `drawup label: one label, at the moment its syringe is filled
   --json                             print the plan of this syringe
 `
 
+const helpRead = `drawup read: what a scanned label or pack says, in words
+  drawup read "]d291N01AX07<GS>92261201193000001003<GS>932mg/mL" --at "2026-12-01 12:00"
+  drawup read "(01)09521234000006(17)271231(10)A-1(21)7"
+
+  drawup read [TEXT] [flags]        without TEXT one line from standard input: start it, then scan
+
+  --at               "2026-12-01 12:00"
+                                     the time to hold the use-by against; now if left out
+  --order            day.toml        an order with the site's own GTINs, to name what they stand for
+  --style            uk              house style of numbers and units: uk, us, si
+  --json                             the answer as a JSON document
+
+A separator may be the sign GS (29) or stand as <GS> {GS} [GS] <FNC1> {FNC1}
+[FNC1] ^]. A symbology identifier such as ]d2 in front, and identifiers in
+parentheses, are read. Times are those of the clock where the label was made. If
+a scanner sends no separators, set it to send GS; nothing is guessed.
+`
+
 const helpFormulary = `drawup formulary: what is stored of each drug, checked, compared, printed, approved
   drawup formulary list --class NMB
   drawup formulary show noradrenaline
@@ -236,6 +254,8 @@ func helpText(name string) (string, bool) {
 		return helpLabel, true
 	case "formulary":
 		return helpFormulary, true
+	case "read":
+		return helpRead, true
 	}
 	flags, example, ok := flagsOf(name)
 	if !ok {

@@ -37,6 +37,7 @@ func mayImport() map[string][]string {
 		"fonts":                     {},
 		"labels":                    said, // no page, no font, no PDF
 		"labels/gs1":                {},
+		"labels/gs1/generate":       {}, // run by go generate
 		"labels/sheets":             append([]string{"labels"}, said...),
 		"layouts":                   {"labels", "labels/gs1", "labels/sheets", "layouts/ink", "fonts", "dilution/refusal", "dilution/recheck"},
 		"layouts/ink":               {},

@@ -43,6 +43,7 @@ func commands() []command {
 	return []command{
 		{"prepare", "plan an order: sheets, labels, pump cards, check sheets, plan.json", runPrepare},
 		{"label", "one label, at the moment its syringe is filled", runLabel},
+		{"read", "what a scanned label or pack says, in words", runRead},
 		{"mix", "one dilution: what to draw, what to add, how strong it is", runMix},
 		{"rate", "dose rate to pump rate and back, with a ladder", runRate},
 		{"dose", "one dose to a volume", runDose},
