@@ -23,15 +23,16 @@ func mayImport() map[string][]string {
 	return map[string][]string{
 		"cmd/drawup":           {"*"},
 		"dilution":             plan,
-		"dilution/body":        {"dilution/quantity"},
+		"dilution/body":        {"dilution/quantity", "dilution/roots"},
 		"dilution/formulary":   {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
 		"dilution/order":       {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
 		"dilution/pump":        {"dilution/quantity"},
 		"dilution/quantity":    {},
 		"dilution/recheck":     {}, // the second route shares nothing
 		"dilution/refusal":     {},
+		"dilution/roots":       {},
 		"dilution/salts":       {"dilution/quantity"},
-		"dilution/syringe":     {"dilution/quantity"},
+		"dilution/syringe":     {"dilution/quantity", "dilution/roots"},
 		"dilution/tomlfile":    {"dilution/refusal"},
 		"fonts":                {},
 		"labels":               said, // no page, no font, no PDF
