@@ -36,6 +36,8 @@ func limitEntries() []Entry {
 		warns(DoseBelowSoft, Limits, "R10", "The dose is below what is usual."),
 		stops(DoseBelowHard, Limits, "R11", "The dose is below the lowest that may be given."),
 		stops(DoseAboveTotal, Limits, "R11", "The dose is above the absolute maximum, whatever the weight."),
+		stops(LocalMaxima, Limits, "R11", "Local anaesthetics together take more than the whole of their maxima."),
+		warns(OneWeightOnly, Limits, "R10", "A syringe was mixed for one body weight and fits no other patient."),
 		stops(RateAboveHard, Limits, "R11", "The dose rate is above the highest that is stored."),
 		warns(RateAboveSoft, Limits, "R11", "The dose rate is above the soft limit, and a named person has signed for it."),
 		warns(RateAboveUsual, Limits, "R10", "The dose rate is above what is usual."),

@@ -1,0 +1,297 @@
+package dilution_test
+
+import (
+	"math/big"
+	"strings"
+	"testing"
+
+	"drawup/dilution"
+	"drawup/dilution/body"
+	"drawup/dilution/formulary"
+	"drawup/dilution/quantity"
+	"drawup/dilution/refusal"
+)
+
+// inventedStock is a formulary that nobody has: a drug in five presentations, so
+// that each rule of a mixture can be broken alone.
+const inventedStock = `name = "invented"
+version = "1"
+[sources.X]
+title = "invented for a test"
+grade = "A"
+[[drug]]
+name = "sleepwell"
+atc = "N01AX99"
+class = "IND"
+counted = "mass"
+  [[drug.presentation]]
+  id = "ampoule 50 mg in 5 mL"
+  container = "ampoule"
+  form = "solution"
+  amount = "50 mg"
+  volume = "5 mL"
+  source = "X"
+  uses = ["bolus", "infusion"]
+  neat = false
+  age_from = "3 years"
+  diluent = [{ name = "glucose 5 %", source = "X" }, { name = "water for injections", source = "X" }]
+  forbidden_diluent = [{ name = "sodium chloride 0.9 %", reason = "it precipitates", source = "X" }]
+  [[drug.presentation]]
+  id = "ampoule 20 mg in 10 mL"
+  container = "ampoule"
+  form = "solution"
+  amount = "20 mg"
+  volume = "10 mL"
+  source = "X"
+  unverified = true
+  uses = ["bolus", "infusion"]
+  neat = true
+  diluent = [{ name = "sodium chloride 0.9 %", source = "X" }]
+  [[drug.presentation]]
+  id = "vial 100 mg"
+  container = "vial"
+  form = "powder"
+  amount = "100 mg"
+  source = "X"
+  uses = ["bolus"]
+  neat = true
+  add = "9.8 mL"
+  add_fluids = ["water for injections"]
+  displacement = { value = "0.2 mL", source = "X" }
+  diluent = [{ name = "glucose 5 %", source = "X" }]
+  [[drug.presentation]]
+  id = "vial 250 mg"
+  container = "vial"
+  form = "powder"
+  amount = "250 mg"
+  source = "X"
+  uses = ["bolus"]
+  neat = true
+  add = "10 mL"
+  add_fluids = ["water for injections"]
+  [[drug.concentration]]
+  use = "bolus"
+  line = "any"
+  low = { value = "1 mg/mL", source = "X" }
+  high = { value = "10 mg/mL", source = "X" }
+  [[drug.concentration]]
+  use = "infusion"
+  line = "central"
+  low = { value = "1 mg/mL", source = "X" }
+  high = { value = "5 mg/mL", source = "X" }
+  [[drug.dose]]
+  for = "induction"
+  routes = ["IV"]
+  by = "none"
+  usual_low = { value = "10 mg", source = "X" }
+  usual_high = { value = "20 mg", source = "X" }
+  [[drug.infusion]]
+  for = "sedation"
+  routes = ["IV"]
+  by = "none"
+  usual_low = { value = "3 mg/h", source = "X" }
+  usual_high = { value = "5 mg/h", source = "X" }
+[[drug]]
+name = "numb"
+atc = "N01BB99"
+class = "LA"
+counted = "mass"
+  [[drug.presentation]]
+  id = "ampoule 100 mg in 10 mL"
+  container = "ampoule"
+  form = "solution"
+  amount = "100 mg"
+  volume = "10 mL"
+  source = "X"
+  uses = ["bolus"]
+  neat = true
+  [[drug.dose]]
+  for = "local anaesthesia"
+  routes = ["infiltration", "nerve block"]
+  age_from = "18 years"
+  by = "lean"
+  by_source = "X"
+  usual_high = { value = "3 mg/kg", source = "X" }
+  hard_high = { value = "4 mg/kg", source = "X" }
+  total_max = { value = "200 mg", source = "X" }
+  [[drug.dose]]
+  for = "field block"
+  routes = ["infiltration"]
+  age_from = "18 years"
+  by = "lean"
+  by_source = "X"
+  usual_high = { value = "2 mg/kg", source = "X" }
+`
+
+func invented(t *testing.T) *formulary.Formulary {
+	t.Helper()
+	f, faults := formulary.Read(formulary.Text{Name: "invented.toml", Data: []byte(inventedStock)})
+	if faults.Refused() {
+		t.Fatal(faults)
+	}
+	return f
+}
+
+func must[T any](t *testing.T, parse func(string) (T, error), s string) T {
+	t.Helper()
+	var none T
+	if s == "" {
+		return none
+	}
+	v, err := parse(s)
+	if err != nil {
+		t.Fatal(err)
+	}
+	return v
+}
+
+// TestQuickMix breaks one rule at a time. What is refused is what an order of the
+// same mixture is refused for: design rules R7, R10, R12.
+func TestQuickMix(t *testing.T) {
+	f := invented(t)
+	for _, c := range []struct {
+		name            string
+		infusion        bool
+		stock, strength string
+		method          dilution.Method
+		powder, drug    string
+		final, conc     string
+		fluid, age      string
+		line, route     string
+		want            string // codes of refusals, blank for none
+	}{
+		{name: "as listed", strength: "10 mg/mL", method: dilution.MakeUpTo, drug: "1 mL", final: "5 mL", conc: "2 mg/mL", fluid: "glucose 5 %"},
+		{name: "the only fluid need not be named", strength: "2 mg/mL", method: dilution.MakeUpTo, drug: "5 mL", final: "10 mL", conc: "1 mg/mL"},
+		{name: "no fluid of two", stock: "ampoule 50 mg in 5 mL", strength: "10 mg/mL", method: dilution.MakeUpTo, drug: "1 mL", final: "5 mL", conc: "2 mg/mL", want: "diluent-missing"},
+		{name: "a forbidden fluid", stock: "ampoule 50 mg in 5 mL", method: dilution.MakeUpTo, drug: "1 mL", final: "5 mL", conc: "2 mg/mL", fluid: "sodium chloride 0.9 %", want: "diluent-forbidden"},
+		{name: "a fluid not listed", strength: "2 mg/mL", method: dilution.MakeUpTo, drug: "5 mL", final: "10 mL", conc: "1 mg/mL", fluid: "glucose 5 %", want: "diluent-not-listed"},
+		{name: "a strength that nobody has", strength: "3 mg/mL", method: dilution.MakeUpTo, drug: "1 mL", final: "3 mL", conc: "1 mg/mL", fluid: "glucose 5 %", want: "presentation-unknown"},
+		{name: "a presentation that nobody has", stock: "ampoule 1 g", method: dilution.MakeUpTo, final: "3 mL", conc: "1 mg/mL", want: "presentation-unknown"},
+		{name: "no presentation at all", method: dilution.MakeUpTo, final: "3 mL", conc: "1 mg/mL", want: "presentation-unclear"},
+		{name: "strength against presentation", stock: "ampoule 50 mg in 5 mL", strength: "2 mg/mL", method: dilution.MakeUpTo, drug: "1 mL", final: "2 mL", conc: "1 mg/mL", fluid: "glucose 5 %", want: "amounts-contradict"},
+		{name: "two of one strength that differ", strength: "10 mg/mL", method: dilution.MakeUpTo, drug: "1 mL", final: "5 mL", conc: "2 mg/mL", fluid: "water for injections", want: "presentation-unclear"},
+		{name: "neat", strength: "2 mg/mL", method: dilution.Neat, drug: "5 mL", final: "5 mL", conc: "2 mg/mL"},
+		{name: "never neat", stock: "ampoule 50 mg in 5 mL", method: dilution.Neat, drug: "1 mL", final: "1 mL", conc: "10 mg/mL", want: "must-be-diluted"},
+		{name: "too strong", infusion: true, line: "central", stock: "ampoule 50 mg in 5 mL", method: dilution.MakeUpTo, drug: "45 mL", final: "50 mL", conc: "9 mg/mL", fluid: "glucose 5 %", want: "concentration-above-limit"},
+		{name: "too weak", strength: "2 mg/mL", method: dilution.MakeUpTo, drug: "1 mL", final: "50 mL", conc: "0.04 mg/mL", want: "concentration-below-limit"},
+		{name: "no bounds for the line", infusion: true, strength: "2 mg/mL", method: dilution.MakeUpTo, drug: "25 mL", final: "50 mL", conc: "1 mg/mL", want: "formulary-blank"},
+		{name: "too young", stock: "ampoule 50 mg in 5 mL", age: "2 years", method: dilution.MakeUpTo, drug: "1 mL", final: "5 mL", conc: "2 mg/mL", fluid: "glucose 5 %", want: "age-outside-range"},
+		{name: "a route not listed", strength: "2 mg/mL", method: dilution.Neat, drug: "5 mL", final: "5 mL", conc: "2 mg/mL", route: "epidural", want: "route-not-listed"},
+		{name: "powder as stored", powder: "100 mg", method: dilution.Neat, final: "10 mL", conc: "10 mg/mL", fluid: "water for injections"},
+		{name: "two vials of it", powder: "200 mg", method: dilution.Neat, final: "20 mL", conc: "10 mg/mL"},
+		{name: "powder in another volume", powder: "100 mg", method: dilution.Neat, final: "20 mL", conc: "5 mg/mL", want: "formulary-blank"},
+		{name: "powder in another fluid", powder: "100 mg", method: dilution.Neat, final: "10 mL", conc: "10 mg/mL", fluid: "glucose 5 %", want: "diluent-not-listed"},
+		{name: "powder of unknown displacement", powder: "250 mg", method: dilution.Neat, final: "25 mL", conc: "10 mg/mL", want: "displacement-blank"},
+		{name: "powder that nobody has", powder: "70 mg", method: dilution.Neat, final: "7 mL", conc: "10 mg/mL", want: "presentation-unknown"},
+		{name: "powder against a presentation", stock: "ampoule 20 mg in 10 mL", powder: "100 mg", method: dilution.Neat, final: "10 mL", conc: "10 mg/mL", want: "amounts-contradict"},
+	} {
+		t.Run(c.name, func(t *testing.T) {
+			q := dilution.Quick{
+				Drug: "sleepwell", Infusion: c.infusion, Line: c.line, Route: c.route, Diluent: c.fluid, Style: quantity.UK(),
+				Age: must(t, body.ParseAge, c.age), Strength: must(t, quantity.ParseConcentration, c.strength),
+				Concentration: must(t, quantity.ParseConcentration, c.conc),
+				Mix: &dilution.QuickMix{
+					Presentation: c.stock, Method: c.method, Powder: must(t, quantity.ParseAmount, c.powder),
+					Drug: must(t, quantity.ParseVolume, c.drug), Final: must(t, quantity.ParseVolume, c.final),
+				},
+			}
+			list, limits := q.Check(f)
+			var got []string
+			for _, code := range list.Refusals().Codes() {
+				got = append(got, string(code))
+			}
+			if strings.Join(got, " ") != c.want {
+				t.Errorf("got %v, want %q\n%v", got, c.want, list)
+			}
+			if c.want == "" && limits.Presentation.ID == "" {
+				t.Error("the presentation is not told")
+			}
+		})
+	}
+}
+
+// TestQuickMixTells holds what comes along: the presentation, its containers,
+// the fluid, and figures that nobody has verified (rule R13).
+func TestQuickMixTells(t *testing.T) {
+	q := dilution.Quick{
+		Drug: "sleepwell", Style: quantity.UK(), Strength: must(t, quantity.ParseConcentration, "2 mg/mL"),
+		Concentration: must(t, quantity.ParseConcentration, "1 mg/mL"),
+		Mix: &dilution.QuickMix{Method: dilution.MakeUpTo, Drug: quantity.Millilitres(big.NewRat(101, 1)),
+			Final: quantity.Millilitres(big.NewRat(202, 1))},
+	}
+	list, limits := q.Check(invented(t))
+	if limits.Presentation.ID != "ampoule 20 mg in 10 mL" || limits.Containers != 11 || limits.Diluent != "sodium chloride 0.9 %" {
+		t.Errorf("got %q, %d, %q", limits.Presentation.ID, limits.Containers, limits.Diluent)
+	}
+	said := map[refusal.Code]bool{}
+	for _, r := range list.Cautions() {
+		said[r.Code] = true
+	}
+	for _, code := range []refusal.Code{refusal.ContainersMany, refusal.Unverified, refusal.LimitsNotChecked} {
+		if !said[code] {
+			t.Errorf("no caution %s in %v", code, list)
+		}
+	}
+	assay, assumed, err := dilution.AssayOf(limits.Presentation)
+	if err != nil || !assumed || assay.Exact() != "10" {
+		t.Errorf("assay: got %s, %v, %v", assay.Exact(), assumed, err)
+	}
+	if p, list := q.Stock(invented(t)); !list.Refused() {
+		t.Errorf("got %q of three presentations, want it asked which", p.ID)
+	}
+}
+
+// TestLocalSums adds shares of maxima up; the maxima are invented, 4 mg/kg and
+// 200 mg, in a field block 2 mg/kg; the sums are by hand.
+func TestLocalSums(t *testing.T) {
+	given := func(drug, strength, volume, perKg, inAll string) dilution.LocalGiven {
+		return dilution.LocalGiven{
+			Drug: drug, Concentration: must(t, quantity.ParseConcentration, strength), Volume: must(t, quantity.ParseVolume, volume),
+			MostPerKg: must(t, quantity.ParseDose, perKg), MostInAll: must(t, quantity.ParseAmount, inAll),
+		}
+	}
+	for _, c := range []struct {
+		name, weight, age, route string
+		given                    []dilution.LocalGiven
+		total                    string // exact, blank for refused
+		left                     string // volume of the first that would still fit
+		want                     string
+	}{
+		// A135 (worked formula of maximum recommended doses): 7 mg/kg x 60 kg of 1 % are 42 mL.
+		{"typed alone", "60 kg", "", "", []dilution.LocalGiven{given("other with adrenaline", "1 %", "", "7 mg/kg", "")}, "0", "42", ""},
+		{"stored", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "8 mL", "", "")}, "1/2", "8", ""},
+		{"absolute maximum", "100 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "5 mL", "", "")}, "1/4", "15", ""},
+		{"the strictest row", "40 kg", "30 years", "infiltration", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "", "")}, "1/2", "4", ""},
+		{"two drugs", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "", ""), given("other", "0.25 %", "8 mL", "2 mg/kg", "")}, "1/2", "8", ""},
+		{"just one", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "8 mL", "", ""), given("numb", "2 %", "4 mL", "", "")}, "1", "0", ""},
+		{"together too much", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "9 mL", "", ""), given("other", "0.25 %", "16 mL", "2 mg/kg", "")}, "17/16", "", "local-maxima-passed-together"},
+		{"a lower one typed", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "", "80 mg")}, "1/2", "4", ""},
+		{"a higher one typed", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "5 mg/kg", "")}, "", "", "dose-above-hard-limit"},
+		{"unknown drug", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("other", "1 %", "4 mL", "", "")}, "", "", "drug-unknown"},
+		{"no local anaesthetic", "40 kg", "30 years", "IV", []dilution.LocalGiven{given("sleepwell", "1 %", "4 mL", "", "")}, "", "", "value-unknown"},
+		{"no route", "40 kg", "30 years", "", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "", "")}, "", "", "route-not-listed"},
+		{"no weight", "", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "", "")}, "", "", "weight-missing"},
+		{"no age", "40 kg", "", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "", "")}, "", "", "age-missing"},
+		{"a child", "20 kg", "8 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "", "")}, "", "", "age-outside-range"},
+		{"units", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 unit/mL", "4 mL", "", "")}, "", "", "units-against-mass"},
+	} {
+		t.Run(c.name, func(t *testing.T) {
+			sum := dilution.LocalSum{Given: c.given, Weight: must(t, quantity.ParseBodyWeight, c.weight), Age: must(t, body.ParseAge, c.age),
+				Route: c.route, Style: quantity.UK()}
+			shares, total, list := sum.Work(invented(t))
+			var got []string
+			for _, code := range list.Refusals().Codes() {
+				got = append(got, string(code))
+			}
+			if strings.Join(got, " ") != c.want {
+				t.Fatalf("got %v, want %q\n%v", got, c.want, list)
+			}
+			if c.total != "" && total.RatString() != c.total {
+				t.Errorf("got %s of the maximum, want %s", total.RatString(), c.total)
+			}
+			if c.left != "" && shares[0].LeftVolume.Exact() != c.left {
+				t.Errorf("got room for %s mL, want %s", shares[0].LeftVolume.Exact(), c.left)
+			}
+		})
+	}
+}
