@@ -22,19 +22,24 @@ const (
 
 // readWeight is --weight, refused when no patient weighs so much or so little.
 func readWeight(r *request) quantity.BodyWeight {
-	w := read(r, "weight", quantity.ParseBodyWeight)
+	return readWeightFlag(r, "weight")
+}
+
+// readWeightFlag is the body weight of a flag.
+func readWeightFlag(r *request, name string) quantity.BodyWeight {
+	w := read(r, name, quantity.ParseAnyBodyWeight)
 	if !w.Given() {
 		return w
 	}
 	if x := w.Rat(); x.Cmp(big.NewRat(lightest, 10)) < 0 || x.Cmp(big.NewRat(heaviest, 1)) > 0 {
-		r.strange("weight", refusal.WeightImplausible, "0.3 to 400 kg", "is not the weight of a patient")
+		r.strange(name, refusal.WeightImplausible, "0.3 to 400 kg", "is not the weight of a patient")
 	}
 	return w
 }
 
 // readHeight is --height, refused when no patient is so tall or so short.
 func readHeight(r *request) quantity.Length {
-	h := read(r, "height", quantity.ParseLength)
+	h := read(r, "height", quantity.ParseAnyLength)
 	if !h.Given() {
 		return h
 	}

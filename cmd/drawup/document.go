@@ -128,6 +128,14 @@ func surfaceJSON(s quantity.Style, a quantity.BodySurfaceArea) *quantityJSON {
 	return &quantityJSON{a.Exact(), s.Surface(a), "m2"}
 }
 
+func lengthJSON(s quantity.Style, l quantity.Length) *quantityJSON {
+	return &quantityJSON{l.Exact(), s.Length(l), "cm"}
+}
+
+func durationJSON(s quantity.Style, d quantity.Duration) *quantityJSON {
+	return &quantityJSON{d.Exact(), s.Duration(d), "min"}
+}
+
 func percentJSON(s quantity.Style, p quantity.Percent) *quantityJSON {
 	return &quantityJSON{p.Exact(), s.Percent(p), "%"}
 }

@@ -4,7 +4,6 @@ import (
 	"drawup/dilution"
 	"drawup/dilution/body"
 	"drawup/dilution/formulary"
-	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
 )
 
@@ -110,17 +109,4 @@ func (r *request) limitsNote(q dilution.Quick, f *formulary.Formulary, limits di
 		Message: words,
 		Remedy:  "an order file checks presentation, diluent, weight and stability as well",
 	})
-}
-
-// quickScalar is the weight and the surface that were typed.
-func quickScalar(r *request) (quantity.BodyWeight, quantity.BodySurfaceArea) {
-	var w quantity.BodyWeight
-	var s quantity.BodySurfaceArea
-	if r.given("weight") {
-		w = read(r, "weight", quantity.ParseBodyWeight)
-	}
-	if r.given("surface") {
-		s = read(r, "surface", quantity.ParseSurface)
-	}
-	return w, s
 }

@@ -2,12 +2,11 @@ package body
 
 import "drawup/dilution/quantity"
 
-// The ideal weight of children is clinPK's; the equation's first author was not
-// seen.
-const (
-	childIdeal       = "ideal weight of a child (1.65 height² / 1000, from 60 inches on by the inch)"
-	childIdealSource = "clinPK 0.14.0, R package, 2024, for 1 to 17 years"
-)
+const childIdeal = "ideal weight of a child (1.65 height² / 1000, from 60 inches on by the inch)"
+
+// ChildIdealSource is where the ideal weight of children comes from; the
+// equation's first author was not seen.
+const ChildIdealSource = "clinPK 0.14.0, R package, 2024, for 1 to 17 years"
 
 // ChildIdeal is the ideal weight of a child from 1 to 17 years, exact, H in cm:
 // under 60 inches (152.4 cm) 1.65 H²/1000 kg; from there on 39 kg for boys, 42.2
@@ -20,7 +19,7 @@ func (s Size) ChildIdeal() (quantity.BodyWeight, error) {
 	}
 	if y := s.Age.Years(); y < 1 || y >= adultYears {
 		return quantity.BodyWeight{}, &OutsideEquation{Equation: childIdeal,
-			Reason: "age " + s.Age.String() + ", but the equation is for 1 to 17 years", Source: childIdealSource}
+			Reason: "age " + s.Age.String() + ", but the equation is for 1 to 17 years", Source: ChildIdealSource}
 	}
 	h := s.Height.Rat()
 	over := sub(quo(h, rat(254, 100)), rat(60, 1))

@@ -68,10 +68,10 @@ func (r AgeRule) published() published {
 		}}
 	case APLSOld:
 		return published{"APLS before 2011", luscombeSource + ", which held this older rule against them",
-			"it read a mean 18.8 % too low there", []band{years(1, 10, 2, 8, "2 x (years + 4)")}}
+			"it read a mean 18.8 % too low in 17,244 children of a UK city", []band{years(1, 10, 2, 8, "2 x (years + 4)")}}
 	case LuscombeOwens:
 		return published{"Luscombe-Owens 2007", luscombeSource,
-			"it read a mean 2.5 % too low there; in South African children the older rule was nearer (BMC Emerg Med 2012;12:9)",
+			"it read a mean 2.5 % too low in the children it was made from; in South African children the older rule was nearer (BMC Emerg Med 2012;12:9)",
 			[]band{years(1, 10, 3, 7, "3 x years + 7")}}
 	case Erker:
 		return published{name: "Erker 2014", source: erkerSource}
