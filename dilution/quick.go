@@ -34,12 +34,15 @@ type Quick struct {
 
 // QuickLimits is what the row of limits says that a quick sum was held against.
 type QuickLimits struct {
-	By           body.Kind              // the weight that an order would go by; None or 0 for none
-	Top          quantity.DoseRate      // the highest dose rate stored, if one was checked
-	Drug         formulary.Drug         // the drug's record
-	Presentation formulary.Presentation // a mixture: what it is drawn from
-	Containers   int                    // a mixture: how many of them are opened; 0 for a powder
-	Diluent      string                 // a mixture: the diluent as listed, "" for none
+	By   body.Kind         // the weight that an order would go by; None or 0 for none
+	Top  quantity.DoseRate // the highest dose rate stored, if one was checked
+	Drug formulary.Drug    // the drug's record
+	// Of a mixture: the presentations that it may be drawn from, which all allow
+	// it alike; how many containers are opened where there is only one, 0 for a
+	// powder; the diluent as listed, "" for none.
+	Presentations []formulary.Presentation
+	Containers    int
+	Diluent       string
 }
 
 // Check holds q against f. It returns every refusal and caution; an empty list
@@ -55,9 +58,8 @@ func (q Quick) Check(f *formulary.Formulary) (refusal.List, QuickLimits) {
 	case len(w.usable()) == 0:
 		w.choosePresentation() // says that none is listed for this use
 	case q.Mix != nil:
-		w.mixed()
-		limits.Presentation, limits.Containers = w.plan.Presentation, w.plan.Mixture.Containers
-		limits.Diluent = w.plan.Mixture.Diluent
+		limits.Presentations = w.mixed()
+		limits.Containers, limits.Diluent = w.plan.Mixture.Containers, w.plan.Mixture.Diluent
 	case q.Diluent != "":
 		w.quickDiluent(q.Diluent)
 	}

@@ -31,11 +31,12 @@ func (q Quick) Stock(f *formulary.Formulary) (formulary.Presentation, refusal.Li
 	return w.plan.Presentation, w.told()
 }
 
-// mixed holds a mixture against its presentation.
-func (w *work) mixed() bool {
+// mixed holds a mixture against its presentation; or against each that has the
+// strength, which must all allow it alike. It returns those that do.
+func (w *work) mixed() []formulary.Presentation {
 	fits, ok := w.quickStock()
 	if !ok {
-		return false
+		return nil
 	}
 	var passed, stopped []*work
 	for _, p := range fits {
@@ -49,17 +50,21 @@ func (w *work) mixed() bool {
 	switch {
 	case len(passed) == 0:
 		w.reasons = append(w.reasons, stopped[0].reasons...)
-		return false
+		return nil
 	case len(stopped) > 0 || unlikeFluids(passed):
-		return w.refuse(refusal.Reason{
+		w.refuse(refusal.Reason{
 			Code: refusal.PresentationUnclear, Field: "presentation", Want: joinOr(ids(fits)), Rule: "R10",
 			Message: "more than one presentation of " + w.plan.Drug.Name + " fits, and they differ in what they may be mixed with",
 			Remedy:  "write presentation = one of: " + joinOr(ids(fits)),
 		})
+		return nil
 	}
 	w.plan.Presentation, w.plan.Mixture = passed[0].plan.Presentation, passed[0].plan.Mixture
 	w.reasons = append(w.reasons, passed[0].reasons...)
-	return w.opened() && w.routeOfMix()
+	if !w.routeOfMix() || len(fits) == 1 && !w.opened() {
+		return nil
+	}
+	return fits
 }
 
 // trial is w with one presentation, its own reasons and nothing else changed.
@@ -215,7 +220,7 @@ func (w *work) opened() bool {
 // and a drug without rows for this use cannot be ordered either.
 func (w *work) routeOfMix() bool {
 	if !w.o.Infusion {
-		return w.noDose()
+		return w.routeOfDoses()
 	}
 	var routes []string
 	for _, r := range w.plan.Drug.Rates {
@@ -238,4 +243,19 @@ func AssayOf(p formulary.Presentation) (quantity.Percent, bool, error) {
 	}
 	a, err := quantity.ParsePercent(assumedAssay)
 	return a, true, err
+}
+
+// WidestAssay is the widest of the presentations' assay limits, and whether it is
+// assumed. Nothing is given for no presentation.
+func WidestAssay(list []formulary.Presentation) (widest quantity.Percent, assumed bool, err error) {
+	for _, p := range list {
+		a, blank, err := AssayOf(p)
+		if err != nil {
+			return widest, assumed, err
+		}
+		if !widest.Given() || a.Rat().Cmp(widest.Rat()) > 0 {
+			widest, assumed = a, blank
+		}
+	}
+	return widest, assumed, nil
 }

@@ -203,7 +203,7 @@ func TestQuickMix(t *testing.T) {
 			if strings.Join(got, " ") != c.want {
 				t.Errorf("got %v, want %q\n%v", got, c.want, list)
 			}
-			if c.want == "" && limits.Presentation.ID == "" {
+			if c.want == "" && len(limits.Presentations) == 0 {
 				t.Error("the presentation is not told")
 			}
 		})
@@ -220,19 +220,19 @@ func TestQuickMixTells(t *testing.T) {
 			Final: quantity.Millilitres(big.NewRat(202, 1))},
 	}
 	list, limits := q.Check(invented(t))
-	if limits.Presentation.ID != "ampoule 20 mg in 10 mL" || limits.Containers != 11 || limits.Diluent != "sodium chloride 0.9 %" {
-		t.Errorf("got %q, %d, %q", limits.Presentation.ID, limits.Containers, limits.Diluent)
+	if len(limits.Presentations) != 1 || limits.Presentations[0].ID != "ampoule 20 mg in 10 mL" || limits.Containers != 11 || limits.Diluent != "sodium chloride 0.9 %" {
+		t.Errorf("got %v, %d, %q", limits.Presentations, limits.Containers, limits.Diluent)
 	}
 	said := map[refusal.Code]bool{}
 	for _, r := range list.Cautions() {
 		said[r.Code] = true
 	}
-	for _, code := range []refusal.Code{refusal.ContainersMany, refusal.Unverified, refusal.LimitsNotChecked} {
+	for _, code := range []refusal.Code{refusal.ContainersMany, refusal.Unverified} {
 		if !said[code] {
 			t.Errorf("no caution %s in %v", code, list)
 		}
 	}
-	assay, assumed, err := dilution.AssayOf(limits.Presentation)
+	assay, assumed, err := dilution.WidestAssay(limits.Presentations)
 	if err != nil || !assumed || assay.Exact() != "10" {
 		t.Errorf("assay: got %s, %v, %v", assay.Exact(), assumed, err)
 	}

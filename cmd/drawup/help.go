@@ -190,6 +190,10 @@ func flagsOf(name string) ([]flagSpec, string, bool) {
 		return rateFlags(), `drawup rate --dose "0.1 microgram/kg/min" --weight "70 kg" --mix "4 mg in 50 mL"`, true
 	case "dose":
 		return doseFlags(), `drawup dose --dose "0.3 mg/kg" --weight "72 kg" --concentration "10 mg/mL"`, true
+	case "total":
+		return totalFlags(), `drawup total --rate "0.375 microgram/kg/min" --time "24 h" --load "0.05 mg/kg"`, true
+	case "flow":
+		return flowFlags(), `drawup flow --volume "1000 mL" --time "8 h" --set "20 drops/mL"`, true
 	case "body":
 		return bodyFlags(), `drawup body --weight "72 kg" --height "178 cm" --sex male --age "54 years"`, true
 	case "convert":

@@ -46,6 +46,8 @@ func commands() []command {
 		{"mix", "one dilution: what to draw, what to add, how strong it is", runMix},
 		{"rate", "dose rate to pump rate and back, with a ladder", runRate},
 		{"dose", "one dose to a volume", runDose},
+		{"total", "a dose rate over a time, with a first dose: how much in all", runTotal},
+		{"flow", "volume, time, flow rate: two give the third; drops a minute", runFlow},
 		{"body", "ideal, adjusted and lean weight; surface area", runBody},
 		{"convert", "units, mmol, per cent, salt and base", runConvert},
 		{"formulary", "list the drugs that are stored, show one with every source", runFormulary},

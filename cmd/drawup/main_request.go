@@ -148,7 +148,10 @@ func (r *request) caution(x refusal.Reason) {
 func (r *request) refused() bool { return r.faults.Refused() }
 
 // given reports whether the flag was typed.
-func (r *request) given(name string) bool { return r.texts[name].given }
+func (r *request) given(name string) bool {
+	t, ok := r.texts[name]
+	return ok && t.given
+}
 
 // count is how many of the flags were typed.
 func (r *request) count(names ...string) int {
