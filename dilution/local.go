@@ -3,6 +3,7 @@ package dilution
 import (
 	"fmt"
 	"math/big"
+	"strings"
 
 	"drawup/dilution/body"
 	"drawup/dilution/formulary"
@@ -124,7 +125,7 @@ func (w *work) localMost(g LocalGiven, s *LocalShare) bool {
 	if !ok {
 		return false
 	}
-	if _, _, known := w.f.Find(g.Drug); typed && !known {
+	if typed && w.nobodysRecord(g.Drug) {
 		return w.caution(refusal.Reason{
 			Code: refusal.LimitsNotChecked, Field: g.Drug, Rule: "R10", Got: g.Drug, Want: "a drug of the formulary",
 			Message: fmt.Sprintf("%q is not in the formulary: its maximum, %s, is the one that was typed", g.Drug, s.Words),
@@ -149,6 +150,24 @@ func (w *work) localMost(g LocalGiven, s *LocalShare) bool {
 		return true
 	}
 	return w.lowerMost(own, s)
+}
+
+// nobodysRecord reports a local anaesthetic that the formulary has under no name,
+// so that the user's own maximum is all there is. A misspelt name and a name with
+// a word added are none: they would pass by the stored maximum (rule R11). Only
+// "with adrenaline" makes another drug of it.
+func (w *work) nobodysRecord(name string) bool {
+	_, near, known := w.f.Find(name)
+	if known || len(near) > 0 {
+		return false
+	}
+	for _, d := range w.f.Drugs() {
+		rest, ok := strings.CutPrefix(strings.ToLower(name), d.Name+" ")
+		if ok && rest != "with adrenaline" && rest != "with epinephrine" {
+			return false
+		}
+	}
+	return true
 }
 
 // localClass is the label class of local anaesthetics.

@@ -194,6 +194,10 @@ func flagsOf(name string) ([]flagSpec, string, bool) {
 		return totalFlags(), `drawup total --rate "0.375 microgram/kg/min" --time "24 h" --load "0.05 mg/kg"`, true
 	case "flow":
 		return flowFlags(), `drawup flow --volume "1000 mL" --time "8 h" --set "20 drops/mL"`, true
+	case "local":
+		return localFlags(), `drawup local --weight "60 kg" --give "lidocaine with adrenaline 1 %, 10 mL, at most 7 mg/kg"`, true
+	case "accuracy":
+		return accuracyFlags(), `drawup accuracy --barrel "10 mL" --reading "4 mL"`, true
 	case "body":
 		return bodyFlags(), `drawup body --weight "72 kg" --height "178 cm" --sex male --age "54 years"`, true
 	case "convert":

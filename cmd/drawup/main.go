@@ -48,6 +48,8 @@ func commands() []command {
 		{"dose", "one dose to a volume", runDose},
 		{"total", "a dose rate over a time, with a first dose: how much in all", runTotal},
 		{"flow", "volume, time, flow rate: two give the third; drops a minute", runFlow},
+		{"local", "local anaesthetics together against their maxima", runLocal},
+		{"accuracy", "how far off a reading, a chain of steps or a fill may be", runAccuracy},
 		{"body", "ideal, adjusted and lean weight; surface area", runBody},
 		{"convert", "units, mmol, per cent, salt and base", runConvert},
 		{"formulary", "list the drugs that are stored, show one with every source", runFormulary},

@@ -34,10 +34,12 @@ type request struct {
 }
 
 // An onceText is a flag's text that may be given once only: the last of two
-// doses must not win silently.
+// doses must not win silently. Where many are asked for, all holds each.
 type onceText struct {
 	text  string
 	given bool
+	many  bool
+	all   []string
 }
 
 func (t *onceText) String() string { return t.text }
@@ -47,13 +49,13 @@ func (t *onceText) Type() string { return "text" }
 
 // Set is called by pflag for each time the flag is typed.
 func (t *onceText) Set(s string) error {
-	if t.given {
+	if t.given && !t.many {
 		return errGivenTwice
 	}
 	if strings.HasPrefix(s, "--") { // the next flag stands where the value should
 		return errNoValue
 	}
-	t.text, t.given = s, true
+	t.text, t.given, t.all = s, true, append(t.all, s)
 	return nil
 }
 
@@ -70,6 +72,9 @@ func newRequest(name string, specs []flagSpec, args []string) *request {
 	r.flags.Usage = func() {}
 	for _, s := range specs {
 		r.addFlag(s.name, s.use)
+	}
+	if give, ok := r.texts["give"]; ok { // one for each drug and site
+		give.many = true
 	}
 	r.addFlag("style", "uk, us or si")
 	r.flags.BoolVar(&r.json, "json", false, "")
@@ -249,9 +254,15 @@ func read[T any](r *request, name string, parse func(string) (T, error)) T {
 	if !t.given {
 		return none
 	}
-	v, err := parse(t.text)
+	return readText(r, "--"+name, t.text, parse)
+}
+
+// readText is the value of a text, or the zero value and a fault.
+func readText[T any](r *request, field, text string, parse func(string) (T, error)) T {
+	v, err := parse(text)
 	if err != nil {
-		r.add(faultOf("--"+name, err))
+		r.add(faultOf(field, err))
+		var none T
 		return none
 	}
 	return v
