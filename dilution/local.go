@@ -126,6 +126,7 @@ func (w *work) localMost(g LocalGiven, s *LocalShare) bool {
 		return false
 	}
 	if typed && w.nobodysRecord(g.Drug) {
+		w.plan.Drug.Name = g.Drug
 		return w.caution(refusal.Reason{
 			Code: refusal.LimitsNotChecked, Field: g.Drug, Rule: "R10", Got: g.Drug, Want: "a drug of the formulary",
 			Message: fmt.Sprintf("%q is not in the formulary: its maximum, %s, is the one that was typed", g.Drug, s.Words),

@@ -85,6 +85,15 @@ func (d *accuracyDocument) barrel(r *request) {
 		})
 		return
 	}
+	moved, _, err := v.ToStep(b.Step(), quantity.HalfUp)
+	if err != nil || moved.IsZero() {
+		r.add(refusal.Reason{
+			Code: refusal.VolumeOffGraduation, Field: "--reading", Rule: "R8", Got: r.style.Volume(v), Want: "at least " + r.style.Volume(b.Step()),
+			Message: fmt.Sprintf("%s is less than half of the first line of a %s syringe, %s", r.style.Volume(v), r.style.Volume(nominal), r.style.Volume(b.Step())),
+			Remedy:  "ask for a smaller syringe or a larger volume",
+		})
+		return
+	}
 	t := b.Tolerance(v)
 	if !t.Given() {
 		r.add(refusal.Reason{
@@ -98,7 +107,7 @@ func (d *accuracyDocument) barrel(r *request) {
 	share := new(big.Rat).Quo(t.Rat(), v.Rat())
 	d.Relative = percentJSON(r.style, quantity.PerCent(share.Mul(share, big.NewRat(100, 1))))
 	d.Working = append(d.Working, "after "+syringe.ToleranceSource)
-	if moved, _, err := v.ToStep(b.Step(), quantity.HalfUp); err == nil && moved.Cmp(v) != 0 {
+	if moved.Cmp(v) != 0 {
 		r.caution(refusal.Reason{
 			Code: refusal.VolumeOffGraduation, Field: "--reading", Rule: "R2", Source: b.Source(), Got: r.style.Volume(v),
 			Want:    "a multiple of " + r.style.Volume(b.Step()),
@@ -171,7 +180,10 @@ func readWidth(text string, of quantity.Volume) (syringe.Width, error) {
 		return w, nil
 	}
 	var err error
-	w.Percent, err = quantity.ParsePercent(text)
+	if w.Percent, err = quantity.ParsePercent(text); err == nil && w.Percent.Rat().Cmp(big.NewRat(100, 1)) > 0 {
+		err = refusal.Reason{Code: refusal.ValueUnknown, Severity: refusal.Refuse, Field: "--parts", Got: text, Want: "at most 100 %", Source: netSource,
+			Message: "--parts: " + text + " either way is wider than the value itself", Remedy: "check the figure"}
+	}
 	return w, err
 }
 

@@ -17,6 +17,7 @@ const (
 	heaviest   = 400 // kg
 	shortest   = 25  // cm
 	tallest    = 250 // cm
+	thinnest   = 5   // kg/m², a child born early included
 	widestBody = 90  // kg/m²
 )
 
@@ -60,12 +61,12 @@ func (r *request) strange(name string, code refusal.Code, want, words string) {
 // checkIndex refuses a weight and a height that cannot belong together.
 func checkIndex(r *request, s body.Size) {
 	bmi, err := s.BMI()
-	if err != nil || bmi.Cmp(big.NewRat(widestBody, 1)) <= 0 {
+	if err != nil || bmi.Cmp(big.NewRat(thinnest, 1)) >= 0 && bmi.Cmp(big.NewRat(widestBody, 1)) <= 0 {
 		return
 	}
 	r.add(refusal.Reason{
 		Code: refusal.BodyValuesStrange, Field: "--weight, --height", Source: netSource,
-		Got: "a body mass index of " + r.style.Number(bmi), Want: "at most 90",
+		Got: "a body mass index of " + r.style.Number(bmi), Want: "5 to 90",
 		Message: fmt.Sprintf("a weight of %s and a height of %s do not fit each other", r.texts["weight"].text, r.texts["height"].text),
 		Remedy:  "check both figures and their units, and that they are not swapped",
 	})

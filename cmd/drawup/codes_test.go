@@ -117,9 +117,9 @@ func examples() map[refusal.Code]func(*testing.T) string {
 		refusal.LabelMoved:       preparing(strings.Replace(soundOrder, "suxamethonium\"\ndose = \"1 mg/kg", "neostigmine with glycopyrronium\"\ndose = \"2.5 mg", 1), "order.toml", "--stock", "roll-40x15"),
 		refusal.LocalMaxima: told("local", "--weight", "60 kg", "--give", "lidocaine with adrenaline 1 %, 30 mL, at most 7 mg/kg",
 			"--give", "lidocaine with adrenaline 2 %, 10 mL, at most 7 mg/kg"),
-		refusal.OneWeightOnly:    told("mix", "--each", "1 microgram/kg/min", "--weight", "6 kg", "--rule", "three"),
-		refusal.RoutesDisagree:   unproven,
-		refusal.RateBelowHard:    belowHardLimit,
+		refusal.OneWeightOnly:  told("mix", "--each", "1 microgram/kg/min", "--weight", "6 kg", "--rule", "three"),
+		refusal.RoutesDisagree: unproven,
+		refusal.RateBelowHard:  belowHardLimit,
 	}
 }
 

@@ -106,8 +106,10 @@ func readFlow(r *request) flowSum {
 	return s
 }
 
-// No giving set makes fewer or more drops of one mL: our own wide net.
+// Our own wide nets: no giving set makes fewer or more drops of one mL, and no
+// line carries more than a litre a minute.
 const (
+	fastest     = 60000 // mL/h
 	fewestDrops = 5
 	mostDrops   = 100
 )
@@ -213,6 +215,13 @@ func (s *flowSum) fill(r *request, d *flowDocument, how func(string, ...any)) er
 	}
 	if set.Rat().Sign() > 0 {
 		d.PumpRate, d.Lost = flowRateJSON(r.style, set), &quantityJSON{exactText(lost), signed(r.style, lost) + " %", "%"}
+	}
+	if s.rate.Rat().Cmp(big.NewRat(fastest, 1)) > 0 {
+		r.add(refusal.Reason{
+			Code: refusal.RateAbovePump, Field: "flow rate", Rule: "R8", Got: r.style.FlowRate(s.rate), Want: "at most 60,000 mL/h", Source: netSource,
+			Message: r.style.FlowRate(s.rate) + " is more than any line carries", Remedy: "check volume, time and units",
+		})
+		return nil
 	}
 	if pump.Beyond(s.rate) {
 		r.caution(refusal.Reason{Code: refusal.RateAbovePump, Field: "flow rate", Got: r.style.FlowRate(s.rate), Want: "a rate that a pump can be set to", Rule: "R8", Source: "common practice, no source",

@@ -63,16 +63,16 @@ func (r AgeRule) published() published {
 	case APLS2011:
 		return published{"APLS 2011", aplsSource, "it jumps from 18 kg at 5 years to 25 kg at 6 years", []band{
 			// 12 months are 1 year here: both equations give 10 kg.
-			{"1 to 12 months", 1, 11, true, rat(1, 2), rat(4, 1), "0.5 x months + 4"},
-			years(1, 5, 2, 8, "2 x years + 8"), years(6, 12, 3, 7, "3 x years + 7"),
+			{"1 to 12 months", 1, 11, true, rat(1, 2), rat(4, 1), "0.5 x completed months + 4"},
+			years(1, 5, 2, 8, "2 x completed years + 8"), years(6, 12, 3, 7, "3 x completed years + 7"),
 		}}
 	case APLSOld:
 		return published{"APLS before 2011", luscombeSource + ", which held this older rule against them",
-			"it read a mean 18.8 % too low in 17,244 children of a UK city", []band{years(1, 10, 2, 8, "2 x (years + 4)")}}
+			"it read a mean 18.8 % too low in 17,244 children of a UK city", []band{years(1, 10, 2, 8, "2 x (completed years + 4)")}}
 	case LuscombeOwens:
 		return published{"Luscombe-Owens 2007", luscombeSource,
 			"it read a mean 2.5 % too low in the children it was made from; in South African children the older rule was nearer (BMC Emerg Med 2012;12:9)",
-			[]band{years(1, 10, 3, 7, "3 x years + 7")}}
+			[]band{years(1, 10, 3, 7, "3 x completed years + 7")}}
 	case Erker:
 		return published{name: "Erker 2014", source: erkerSource}
 	}

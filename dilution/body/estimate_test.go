@@ -27,21 +27,21 @@ func TestAgeRules(t *testing.T) {
 		age, kg  string // "" for refused
 		equation string
 	}{
-		{APLS2011, "1 year", "10", "2 x years + 8"}, // A140
-		{APLS2011, "6 years", "25", "3 x years + 7"},
-		{APLS2011, "1 month", "4.5", "0.5 x months + 4"},
-		{APLS2011, "11 months", "9.5", "0.5 x months + 4"},
-		{APLS2011, "12 months", "10", "2 x years + 8"},
-		{APLS2011, "23 months", "10", "2 x years + 8"},
-		{APLS2011, "5 years", "18", "2 x years + 8"},
-		{APLS2011, "71 months", "18", "2 x years + 8"},
-		{APLS2011, "12 years", "43", "3 x years + 7"},
+		{APLS2011, "1 year", "10", "2 x completed years + 8"}, // A140
+		{APLS2011, "6 years", "25", "3 x completed years + 7"},
+		{APLS2011, "1 month", "4.5", "0.5 x completed months + 4"},
+		{APLS2011, "11 months", "9.5", "0.5 x completed months + 4"},
+		{APLS2011, "12 months", "10", "2 x completed years + 8"},
+		{APLS2011, "23 months", "10", "2 x completed years + 8"},
+		{APLS2011, "5 years", "18", "2 x completed years + 8"},
+		{APLS2011, "71 months", "18", "2 x completed years + 8"},
+		{APLS2011, "12 years", "43", "3 x completed years + 7"},
 		{APLS2011, "13 years", "", ""}, {APLS2011, "0 days", "", ""}, {APLS2011, "30 days", "", ""},
-		{APLS2011, "31 days", "4.5", "0.5 x months + 4"},
-		{APLS2011, "8 weeks", "4.5", "0.5 x months + 4"}, // 56 days: one completed month
-		{APLSOld, "1 year", "10", "2 x (years + 4)"}, {APLSOld, "10 years", "28", "2 x (years + 4)"},
+		{APLS2011, "31 days", "4.5", "0.5 x completed months + 4"},
+		{APLS2011, "8 weeks", "4.5", "0.5 x completed months + 4"}, // 56 days: one completed month
+		{APLSOld, "1 year", "10", "2 x (completed years + 4)"}, {APLSOld, "10 years", "28", "2 x (completed years + 4)"},
 		{APLSOld, "11 years", "", ""}, {APLSOld, "11 months", "", ""},
-		{LuscombeOwens, "1 year", "10", "3 x years + 7"}, {LuscombeOwens, "10 years", "37", "3 x years + 7"},
+		{LuscombeOwens, "1 year", "10", "3 x completed years + 7"}, {LuscombeOwens, "10 years", "37", "3 x completed years + 7"},
 		{LuscombeOwens, "11 years", "", ""}, {LuscombeOwens, "54 years", "", ""},
 		{Erker, "5 years", "", ""}, {0, "5 years", "", ""},
 	} {
