@@ -148,18 +148,49 @@ func must[T any](t *testing.T, parse func(string) (T, error), s string) T {
 // TestQuickMix breaks one rule at a time. What is refused is what an order of the
 // same mixture is refused for: design rules R7, R10, R12.
 func TestQuickMix(t *testing.T) {
-	f := invented(t)
-	for _, c := range []struct {
-		name            string
-		infusion        bool
-		stock, strength string
-		method          dilution.Method
-		powder, drug    string
-		final, conc     string
-		fluid, age      string
-		line, route     string
-		want            string // codes of refusals, blank for none
-	}{
+	for _, c := range mixCases() {
+		t.Run(c.name, func(t *testing.T) { c.check(t, invented(t)) })
+	}
+}
+
+// A mixCase is one mixture of the invented drug, and the codes that refuse it.
+type mixCase struct {
+	name            string
+	infusion        bool
+	stock, strength string
+	method          dilution.Method
+	powder, drug    string
+	final, conc     string
+	fluid, age      string
+	line, route     string
+	want            string // codes of refusals, blank for none
+}
+
+func (c mixCase) check(t *testing.T, f *formulary.Formulary) {
+	q := dilution.Quick{
+		Drug: "sleepwell", Infusion: c.infusion, Line: c.line, Route: c.route, Diluent: c.fluid, Style: quantity.UK(),
+		Age: must(t, body.ParseAge, c.age), Strength: must(t, quantity.ParseConcentration, c.strength),
+		Concentration: must(t, quantity.ParseConcentration, c.conc),
+		Mix: &dilution.QuickMix{
+			Presentation: c.stock, Method: c.method, Powder: must(t, quantity.ParseAmount, c.powder),
+			Drug: must(t, quantity.ParseVolume, c.drug), Final: must(t, quantity.ParseVolume, c.final),
+		},
+	}
+	list, limits := q.Check(f)
+	var got []string
+	for _, code := range list.Refusals().Codes() {
+		got = append(got, string(code))
+	}
+	if strings.Join(got, " ") != c.want {
+		t.Errorf("got %v, want %q\n%v", got, c.want, list)
+	}
+	if c.want == "" && len(limits.Presentations) == 0 {
+		t.Error("the presentation is not told")
+	}
+}
+
+func mixCases() []mixCase {
+	return []mixCase{
 		{name: "as listed", strength: "10 mg/mL", method: dilution.MakeUpTo, drug: "1 mL", final: "5 mL", conc: "2 mg/mL", fluid: "glucose 5 %"},
 		{name: "the only fluid need not be named", strength: "2 mg/mL", method: dilution.MakeUpTo, drug: "5 mL", final: "10 mL", conc: "1 mg/mL"},
 		{name: "no fluid of two", stock: "ampoule 50 mg in 5 mL", strength: "10 mg/mL", method: dilution.MakeUpTo, drug: "1 mL", final: "5 mL", conc: "2 mg/mL", want: "diluent-missing"},
@@ -184,29 +215,6 @@ func TestQuickMix(t *testing.T) {
 		{name: "powder of unknown displacement", powder: "250 mg", method: dilution.Neat, final: "25 mL", conc: "10 mg/mL", want: "displacement-blank"},
 		{name: "powder that nobody has", powder: "70 mg", method: dilution.Neat, final: "7 mL", conc: "10 mg/mL", want: "presentation-unknown"},
 		{name: "powder against a presentation", stock: "ampoule 20 mg in 10 mL", powder: "100 mg", method: dilution.Neat, final: "10 mL", conc: "10 mg/mL", want: "amounts-contradict"},
-	} {
-		t.Run(c.name, func(t *testing.T) {
-			q := dilution.Quick{
-				Drug: "sleepwell", Infusion: c.infusion, Line: c.line, Route: c.route, Diluent: c.fluid, Style: quantity.UK(),
-				Age: must(t, body.ParseAge, c.age), Strength: must(t, quantity.ParseConcentration, c.strength),
-				Concentration: must(t, quantity.ParseConcentration, c.conc),
-				Mix: &dilution.QuickMix{
-					Presentation: c.stock, Method: c.method, Powder: must(t, quantity.ParseAmount, c.powder),
-					Drug: must(t, quantity.ParseVolume, c.drug), Final: must(t, quantity.ParseVolume, c.final),
-				},
-			}
-			list, limits := q.Check(f)
-			var got []string
-			for _, code := range list.Refusals().Codes() {
-				got = append(got, string(code))
-			}
-			if strings.Join(got, " ") != c.want {
-				t.Errorf("got %v, want %q\n%v", got, c.want, list)
-			}
-			if c.want == "" && len(limits.Presentations) == 0 {
-				t.Error("the presentation is not told")
-			}
-		})
 	}
 }
 

@@ -17,7 +17,7 @@ func bodyFlags() []flagSpec {
 		{"weight", "72 kg", `actual body weight; "165 pounds" or "11 stone 4 pounds" is read too`},
 		{"height", "178 cm", `height; "5 feet 7 inches" is read too`},
 		{"sex", "female", "female or male, as the equations ask; without it only BMI and surface are worked"},
-		{"age", "54 years", "age; from 1 to 17 years the ideal weight is a child's, and no other weight is worked"},
+		{"age", "54 years", "age; from 1 to 17 years the ideal weight is a child's and no other weight is worked"},
 		{"ideal", "60 kg", "an ideal weight worked elsewhere, with --weight alone: the adjusted weight"},
 		{"estimate", "APLS 2011", "with --age alone: guess a child's weight by this published rule; all lists the rules"},
 	}

@@ -15,7 +15,7 @@ import (
 
 func localFlags() []flagSpec {
 	return []flagSpec{
-		{"give", "lidocaine 1 %, 10 mL", `a local anaesthetic and its volume; again for each drug and site. "…, at most 7 mg/kg" sets its maximum, without a volume only the most is worked`},
+		{"give", "lidocaine 1 %, 10 mL", `a local anaesthetic and its volume, again for each drug and site; ", at most 7 mg/kg" behind it sets its maximum`},
 		{"weight", "72 kg", "body weight, where a maximum is per kg"},
 		{"age", "54 years", "the patient's age, where maxima depend on it"},
 		{"route", "nerve block", "where it goes, as the formulary names it; for the stored maxima"},

@@ -50,7 +50,7 @@ func commands() []command {
 		{"flow", "volume, time, flow rate: two give the third; drops a minute", runFlow},
 		{"local", "local anaesthetics together against their maxima", runLocal},
 		{"accuracy", "how far off a reading, a chain of steps or a fill may be", runAccuracy},
-		{"body", "ideal, adjusted and lean weight; surface area", runBody},
+		{"body", "ideal, adjusted and lean weight; surface area; a child's weight by age", runBody},
 		{"convert", "units, mmol, per cent, salt and base", runConvert},
 		{"formulary", "list the drugs that are stored, show one with every source", runFormulary},
 		{"help", "this list, one command, or one topic", runHelp},
