@@ -5,6 +5,7 @@ import (
 	"math/big"
 	"time"
 
+	"drawup/dilution/formulary"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
 	"drawup/dilution/syringe"
@@ -55,7 +56,7 @@ func (w *work) useBy() bool {
 	best := UseBy{Minutes: policy.minutes, Won: "site policy", Source: policy.source}
 	known := false
 	for _, s := range w.plan.Drug.Stability {
-		if s.Storage != "room" || !w.stabilityFits(s.Diluent) {
+		if s.Storage != "room" || !w.stabilityFits(s) {
 			continue
 		}
 		known = true
@@ -124,8 +125,20 @@ func (w *work) lasts() bool {
 	})
 }
 
-func (w *work) stabilityFits(diluent string) bool {
-	return diluent == "any" || diluent == w.fluid()
+// stabilityFits reports whether a row is for this fluid, this container and
+// this concentration. A row that was shown for other concentrations only says
+// nothing of this one.
+func (w *work) stabilityFits(s formulary.Stability) bool {
+	m := w.plan.Mixture
+	if s.Diluent != "any" && s.Diluent != w.fluid() {
+		return false
+	}
+	if s.Container != "" && (s.Container == "bag") != m.InBag {
+		return false
+	}
+	low, lowErr := m.Concentration.Cmp(s.Low.Value)
+	high, highErr := m.Concentration.Cmp(s.High.Value)
+	return !(s.Low.Given() && (lowErr != nil || low < 0) || s.High.Given() && (highErr != nil || high > 0))
 }
 
 // fluid is what the stability rows call this preparation.

@@ -74,7 +74,7 @@ func (w *work) choosePresentation() bool {
 			})
 		}
 		w.plan.Presentation = p
-		return w.forThisAge() && w.powderKnown()
+		return w.permitted()
 	}
 	fits := w.usable()
 	switch len(fits) {
@@ -88,7 +88,7 @@ func (w *work) choosePresentation() bool {
 		})
 	case 1:
 		w.plan.Presentation = fits[0]
-		return w.forThisAge() && w.powderKnown()
+		return w.permitted()
 	}
 	return w.refuse(refusal.Reason{
 		Code: refusal.PresentationUnclear, Field: "presentation",
@@ -102,12 +102,23 @@ func (w *work) choosePresentation() bool {
 	})
 }
 
+// usable are the presentations that may be used this way. One that may not go
+// into a pump, or not by this route, still counts when there is no other, so
+// that the refusal can say why.
 func (w *work) usable() []formulary.Presentation {
-	var out []formulary.Presentation
+	var listed, out []formulary.Presentation
 	for _, p := range w.plan.Drug.Presentations {
-		if p.For(w.use()) {
+		if !p.For(w.use()) {
+			continue
+		}
+		listed = append(listed, p)
+		pump := w.o.Infusion && p.NotForPump != nil
+		if !pump && w.routeFits(p) && !(neuraxial(w.plan.Route) && p.Preserved != nil) {
 			out = append(out, p)
 		}
+	}
+	if len(out) == 0 {
+		return listed
 	}
 	return out
 }
@@ -140,6 +151,14 @@ func (w *work) forThisAge() bool {
 func (w *work) powderKnown() bool {
 	p := w.plan.Presentation
 	if p.Volume.Given() {
+		if p.Powder() && len(p.AddFluids) == 0 {
+			return w.refuse(refusal.Reason{
+				Code: refusal.FormularyBlank, Field: "add_fluids",
+				Want: "a fluid to mix the powder with", Rule: "R10", Source: p.Source.Title, Pos: w.o.Drug.Pos,
+				Message: fmt.Sprintf("the formulary does not say what the powder of %s is mixed with", p.ID),
+				Remedy:  "add the fluid with its source to the formulary (whoever keeps it does that)",
+			})
+		}
 		if p.Negligible {
 			w.caution(refusal.Reason{
 				Code: refusal.NegligibleDisplacement, Field: "displacement",

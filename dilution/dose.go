@@ -220,6 +220,9 @@ func (w *work) judgeDose(row formulary.Rule[quantity.Dose]) (*DosePart, verdict,
 	}
 	v := s.judge()
 	w.totalMax(row, d, &v)
+	if err := w.courseMaxima(row, d, &v); err != nil {
+		return nil, verdict{}, err
+	}
 	d.ceilings = s.ceilings()
 	if f := row.TotalMax; f.Given() {
 		d.ceilings = append(d.ceilings, bound{

@@ -12,10 +12,7 @@ import (
 // checkConcentration holds the syringe against the bounds of its use (R12:
 // both ends count).
 func (w *work) checkConcentration() bool {
-	line := "peripheral"
-	if w.o.Line.Given() {
-		line = w.o.Line.Value
-	}
+	line := w.line()
 	rows, central := w.boundsFor(line)
 	if len(rows) == 0 {
 		remedy := "add bounds with their source to the formulary (whoever keeps it does that)"
@@ -35,15 +32,29 @@ func (w *work) checkConcentration() bool {
 	for _, b := range rows {
 		ok = w.within(b) && ok
 	}
-	return ok
+	return w.diluentStrength() && ok
 }
 
-// boundsFor is the rows for this use and line. A row for the very line goes
-// before a row for any line.
+// line is the line that the syringe goes into, peripheral unless the order says
+// otherwise.
+func (w *work) line() string {
+	if w.o.Line.Given() {
+		return w.o.Line.Value
+	}
+	return "peripheral"
+}
+
+// boundsFor is the rows for this use, route and line. A row that names the
+// route goes before a row that names none, a row for the very line before one
+// for any line.
 func (w *work) boundsFor(line string) (rows []formulary.Bounds, central bool) {
 	var any []formulary.Bounds
+	named := false
 	for _, b := range w.plan.Drug.Bounds {
-		if b.Use != w.use() {
+		named = named || b.Use == w.use() && routeListed(b.Routes, w.plan.Route)
+	}
+	for _, b := range w.plan.Drug.Bounds {
+		if b.Use != w.use() || named != routeListed(b.Routes, w.plan.Route) || !named && len(b.Routes) > 0 {
 			continue
 		}
 		switch b.Line {
@@ -185,7 +196,7 @@ func passed(ceilings []bound, wanted, given *big.Rat) *bound {
 
 // bottom is the lowest figure that the row stores.
 func (s scale) bottom() bound {
-	for _, b := range []bound{s.hardLow, s.usualLow, s.usualHigh} {
+	for _, b := range []bound{s.hardLow, s.usualLow, s.usualHigh, s.softHigh, s.hardHigh} {
 		if b.given {
 			return b
 		}

@@ -3,6 +3,7 @@ package dilution
 import (
 	"fmt"
 	"math/big"
+	"slices"
 	"strings"
 
 	"drawup/dilution/body"
@@ -19,7 +20,7 @@ import (
 
 // A LocalGiven is one local anaesthetic that is given, or is to be given.
 type LocalGiven struct {
-	Drug          string
+	Drug          string // "lidocaine", "lidocaine with adrenaline"
 	Concentration quantity.Concentration
 	Volume        quantity.Volume // not given: only the most is asked for
 	MostPerKg     quantity.Dose   // a maximum that the user names; not given: the formulary's
@@ -31,7 +32,6 @@ type LocalSum struct {
 	Given  []LocalGiven
 	Weight quantity.BodyWeight
 	Age    body.Age
-	Route  string // where it goes: "infiltration", "nerve block"
 	Style  quantity.Style
 }
 
@@ -80,7 +80,7 @@ func (l LocalSum) Work(f *formulary.Formulary) ([]LocalShare, *big.Rat, refusal.
 func (l LocalSum) passed(total *big.Rat) refusal.Reason {
 	per := l.Style.Percent(quantity.PerCent(new(big.Rat).Mul(total, big.NewRat(100, 1))))
 	return refusal.Reason{
-		Code: refusal.LocalMaxima, Severity: refusal.Refuse, Field: "local anaesthetics",
+		Code: refusal.LocalSum, Severity: refusal.Refuse, Field: "local anaesthetics",
 		Got: per, Want: "at most 100 %", Rule: "R11", Source: "common practice, no source; toxicity adds up: US prescribing information, bupivacaine",
 		Message: "together they are " + per + " of the maximum: each takes its share of its own, and the shares add up",
 		Remedy:  "give less, or weaker; no setting passes this limit",
@@ -91,7 +91,7 @@ func (l LocalSum) passed(total *big.Rat) refusal.Reason {
 func (l LocalSum) share(g LocalGiven, f *formulary.Formulary) (LocalShare, refusal.List) {
 	s := LocalShare{Drug: g.Drug, Amount: quantity.AmountOf(new(big.Rat), g.Concentration.Unit())}
 	w := l.work(g, f)
-	if !w.localMost(g, &s) {
+	if !w.mostOf(g, &s) {
 		return s, w.told()
 	}
 	var err error
@@ -112,26 +112,33 @@ func (l LocalSum) share(g LocalGiven, f *formulary.Formulary) (LocalShare, refus
 
 // work is the sum of one drug as work on a syringe.
 func (l LocalSum) work(g LocalGiven, f *formulary.Formulary) *work {
-	fixed := Quick{Drug: g.Drug, Weight: l.Weight, Age: l.Age, Route: l.Route, Style: l.Style}
+	name, _ := plainName(g.Drug)
+	fixed := Quick{Drug: name, Weight: l.Weight, Age: l.Age, Style: l.Style}
 	w := &work{f: f, fixed: &fixed, size: body.Size{Age: l.Age, Weight: l.Weight}}
-	w.o = order.Syringe{Drug: order.Field[string]{Value: g.Drug, Text: g.Drug}}
-	w.plan = Plan{Order: w.o, Size: w.size, Style: l.Style, Route: l.Route}
+	w.o = order.Syringe{Drug: order.Field[string]{Value: name, Text: name}}
+	w.plan = Plan{Order: w.o, Size: w.size, Style: l.Style}
 	return w
 }
 
-// localMost settles the maximum: the user's, the formulary's, or the lower one.
-func (w *work) localMost(g LocalGiven, s *LocalShare) bool {
+// plainName is the name of the drug alone, and whether it comes with adrenaline.
+func plainName(name string) (string, bool) {
+	for _, with := range []string{" with adrenaline", " with epinephrine"} {
+		if plain, ok := strings.CutSuffix(strings.TrimSpace(name), with); ok {
+			return strings.TrimSpace(plain), true
+		}
+	}
+	return strings.TrimSpace(name), false
+}
+
+// mostOf settles the maximum: the user's, the formulary's, or the lower one.
+func (w *work) mostOf(g LocalGiven, s *LocalShare) bool {
 	typed, ok := w.typedMost(g, s)
 	if !ok {
 		return false
 	}
-	if typed && w.nobodysRecord(g.Drug) {
+	if typed && w.nobodysRecord(w.o.Drug.Value) {
 		w.plan.Drug.Name = g.Drug
-		return w.caution(refusal.Reason{
-			Code: refusal.LimitsNotChecked, Field: g.Drug, Rule: "R10", Got: g.Drug, Want: "a drug of the formulary",
-			Message: fmt.Sprintf("%q is not in the formulary: its maximum, %s, is the one that was typed", g.Drug, s.Words),
-			Remedy:  "compare it with the pack in the hand and local policy",
-		})
+		return w.onlyTyped(g, s)
 	}
 	if !w.findDrug() {
 		return false
@@ -143,32 +150,38 @@ func (w *work) localMost(g LocalGiven, s *LocalShare) bool {
 			Remedy:  "use drawup dose for other drugs",
 		})
 	}
+	_, adrenaline := plainName(g.Drug)
+	kept := func(m formulary.LocalMaximum) bool { return m.WithAdrenaline == adrenaline }
+	if typed && !slices.ContainsFunc(w.plan.Drug.LocalMaxima, kept) {
+		return w.onlyTyped(g, s)
+	}
 	own := *s
-	if !w.storedMost(s) {
+	if !w.storedMost(g.Drug, kept, s) {
 		return false
 	}
-	if !typed {
-		return true
-	}
-	return w.lowerMost(own, s)
+	return !typed || w.lowerMost(own, s)
+}
+
+// onlyTyped cautions that nothing but the user's own maximum is known.
+func (w *work) onlyTyped(g LocalGiven, s *LocalShare) bool {
+	return w.caution(refusal.Reason{
+		Code: refusal.LimitsNotChecked, Field: g.Drug, Rule: "R10", Got: g.Drug, Want: "a maximum in the formulary",
+		Message: fmt.Sprintf("the formulary stores no maximum of %s: the one that was typed, %s, is all there is", g.Drug, s.Words),
+		Remedy:  "compare it with the pack in the hand and local policy",
+	})
 }
 
 // nobodysRecord reports a local anaesthetic that the formulary has under no name,
 // so that the user's own maximum is all there is. A misspelt name and a name with
-// a word added are none: they would pass by the stored maximum (rule R11). Only
-// "with adrenaline" makes another drug of it.
+// a word added are none: they would pass by the stored maximum (rule R11).
 func (w *work) nobodysRecord(name string) bool {
 	_, near, known := w.f.Find(name)
 	if known || len(near) > 0 {
 		return false
 	}
-	for _, d := range w.f.Drugs() {
-		rest, ok := strings.CutPrefix(strings.ToLower(name), d.Name+" ")
-		if ok && rest != "with adrenaline" && rest != "with epinephrine" {
-			return false
-		}
-	}
-	return true
+	return !slices.ContainsFunc(w.f.Drugs(), func(d formulary.Drug) bool {
+		return strings.HasPrefix(strings.ToLower(name), d.Name+" ")
+	})
 }
 
 // localClass is the label class of local anaesthetics.
@@ -194,11 +207,8 @@ func (w *work) lowerMost(own LocalShare, s *LocalShare) bool {
 // typedMost is the user's own maximum for this patient, if there is one.
 func (w *work) typedMost(g LocalGiven, s *LocalShare) (typed, ok bool) {
 	if g.MostPerKg.Given() {
-		weight, surface, err := w.localScalar(g.MostPerKg, body.Actual)
-		if err == nil {
-			s.Most, err = absolute(g.MostPerKg, weight, surface)
-		}
-		if err != nil {
+		var err error
+		if s.Most, err = w.amountOf(g.MostPerKg, body.Actual); err != nil {
 			return true, w.sizeFault(err, g.Drug, refusal.Pos{})
 		}
 		s.Words = w.plan.Style.Dose(g.MostPerKg)
@@ -210,68 +220,36 @@ func (w *work) typedMost(g LocalGiven, s *LocalShare) (typed, ok bool) {
 	return s.Typed, true
 }
 
-func (w *work) localScalar(d quantity.Dose, by body.Kind) (quantity.BodyWeight, quantity.BodySurfaceArea, error) {
-	weight, surface, _, err := w.scalar(d.Basis(), by)
-	return weight, surface, err
-}
-
-// storedMost is the lowest maximum of the rows that fit route and age: the
-// highest dose of each, or its absolute maximum where that is less.
-func (w *work) storedMost(s *LocalShare) bool {
-	if w.plan.Route == "" {
-		var routes []string
-		for _, r := range w.plan.Drug.Doses {
-			routes = append(routes, r.Routes...)
+// storedMost is the formulary's maximum for this patient, of the rows that are
+// kept; what is missing for it is refused.
+func (w *work) storedMost(name string, kept func(formulary.LocalMaximum) bool, s *LocalShare) bool {
+	var bands []string
+	fits := false
+	for _, m := range w.plan.Drug.LocalMaxima {
+		if kept(m) {
+			fits = fits || m.Fits(w.size.Age)
+			bands = append(bands, formulary.Rule[quantity.Dose]{AgeFrom: m.AgeFrom, AgeTo: m.AgeTo}.Ages())
 		}
+	}
+	switch {
+	case len(bands) == 0:
 		return w.refuse(refusal.Reason{
-			Code: refusal.RouteNotListed, Field: "route", Want: joinOr(unique(routes)), Rule: "R10",
-			Message: "the maximum of " + w.plan.Drug.Name + " depends on where it is given, and no route is named",
-			Remedy:  "write route = one of: " + joinOr(unique(routes)),
+			Code: refusal.FormularyBlank, Field: "maximum", Want: "a maximum of " + name, Rule: "R10",
+			Message: "the formulary stores no maximum of " + name,
+			Remedy:  "add it with its source to the formulary (whoever keeps it does that)",
 		})
+	case !fits && !w.size.Age.Given():
+		return w.refuse(w.ageMissing("maximum"))
+	case !fits:
+		return w.refuse(w.ageOutside("maximum", bands))
 	}
-	rows, ok := fittingRows(w, w.plan.Drug.Doses, "dose")
-	if !ok {
-		return false
+	m, err := w.localMaximum(false, kept)
+	if err != nil {
+		return w.sizeFault(err, "maximum", refusal.Pos{})
 	}
-	s.Most = quantity.Amount{}
-	for _, row := range rows {
-		if err := w.lowestMost(row, s); err != nil {
-			return w.sizeFault(err, "dose", refusal.Pos{})
-		}
+	if !m.amount.Given() {
+		return w.refuse(*w.localUnknown("the formulary stores no maximum for this patient"))
 	}
+	s.Most, s.Words, s.Source, s.By = m.amount, m.words, m.source, m.by
 	return true
-}
-
-// lowestMost keeps the maximum of a row in s if it is the lowest so far.
-func (w *work) lowestMost(row formulary.Rule[quantity.Dose], s *LocalShare) error {
-	take := func(a quantity.Amount, words, source string) error {
-		if s.Most.Given() {
-			if n, err := a.Cmp(s.Most); err != nil || n >= 0 {
-				return err
-			}
-		}
-		s.Most, s.Words, s.Source, s.By = a, words, source, row.By
-		return nil
-	}
-	for _, f := range []formulary.Figure[quantity.Dose]{row.HardHigh, row.SoftHigh, row.UsualHigh} {
-		if !f.Given() {
-			continue
-		}
-		weight, surface, err := w.localScalar(f.Value, row.By)
-		if err != nil {
-			return err
-		}
-		a, err := absolute(f.Value, weight, surface)
-		if err == nil {
-			err = take(a, w.plan.Style.Dose(f.Value), sourceWords(f.Source, f.Unverified))
-		}
-		if err != nil {
-			return err
-		}
-		break
-	}
-	if f := row.TotalMax; f.Given() {
-		return take(f.Value, w.plan.Style.Amount(f.Value), sourceWords(f.Source, f.Unverified))
-	}
-	return nil
 }

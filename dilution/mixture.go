@@ -50,6 +50,9 @@ func (w *work) target() (target, bool) {
 				Remedy: standardRemedy(w.plan.Drug),
 			})
 		}
+		if !w.standardHere(s) {
+			return target{}, false
+		}
 		w.plan.Standard = s.ID
 		return target{s.Amount, s.Volume, "standard", o.Standard.Pos}, true
 	case o.Infusion:

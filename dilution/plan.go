@@ -127,6 +127,8 @@ type Plan struct {
 	Size         body.Size
 	Style        quantity.Style
 	Drug         formulary.Drug
+	Name         string // of the drug, as the papers print it
+	Other        string // its name elsewhere, where the site prints both
 	Presentation formulary.Presentation
 	Route        string
 	Mixture      Mixture

@@ -53,10 +53,15 @@ func NewList(
 			Remedy:  "mend the [site] table of the order",
 		})
 	}
+	tall, missing := tallManOf(f, o.Site.TallMan)
+	s.tallMan = tall
+	all = append(all, missing...)
 	broken := brokenSyringes(faults)
+	var made []*work
 	for _, sy := range o.Syringes {
 		unread := broken[sy.Number] || unreadable(o.Patients[sy.Patient])
-		p, reasons := newPlan(s, f, o, sy, at, unread)
+		w := newPlan(s, f, o, sy, at, unread)
+		p, reasons := w.plan, w.reasons
 		p.Cautions = append(ofPatient(faults, o.Patients[sy.Patient]), p.Cautions...)
 		if unread && !leaveOut[sy.Number] {
 			all = append(all, reasons.Refusals()...)
@@ -69,7 +74,9 @@ func NewList(
 		}
 		all = append(all, reasons...)
 		list.Plans = append(list.Plans, p)
+		made = append(made, w)
 	}
+	all = append(all, localSums(made)...)
 	list.Cautions = shared(list.Plans)
 	all = append(all, list.Cautions...)
 	if len(list.Plans) == 0 && !all.Refused() {
@@ -174,7 +181,7 @@ func newPlan(
 	sy order.Syringe,
 	at time.Time,
 	broken bool,
-) (Plan, refusal.List) {
+) *work {
 	w := &work{site: s, f: f, o: sy, patient: o.Patients[sy.Patient]}
 	w.plan = Plan{Number: sy.Number, Order: sy, Patient: w.patient, Style: s.style, Prepared: at, Route: "IV"}
 	if sy.Route.Given() {
@@ -184,7 +191,7 @@ func newPlan(
 		if sy.Drug.Given() && w.findDrug() {
 			w.choosePresentation()
 		}
-		return w.plan, w.reasons
+		return w
 	}
 	w.size = body.Size{
 		Sex: w.patient.Sex.Value, Age: w.patient.Age.Value,
@@ -192,8 +199,8 @@ func newPlan(
 	}
 	w.plan.Size = w.size
 	for _, step := range []func() bool{
-		w.findDrug, w.choosePresentation, w.mix, w.checkConcentration, w.dose,
-		w.infusion, w.certainty, w.useBy, w.lasts, w.balance,
+		w.findDrug, w.nameIt, w.choosePresentation, w.mix, w.checkConcentration, w.dose,
+		w.infusion, w.holdsTooMuch, w.localKnown, w.certainty, w.useBy, w.lasts, w.balance,
 	} {
 		if !step() {
 			break
@@ -201,7 +208,7 @@ func newPlan(
 	}
 	w.unverified()
 	w.plan.Cautions = w.reasons.Cautions()
-	return w.plan, w.reasons
+	return w
 }
 
 // refuse adds a refusal and returns false, for "return w.refuse(…)".
@@ -304,9 +311,10 @@ func (w *work) unverified() {
 			note("dose rate "+p.Style.DoseRate(f.Value), f.Unverified)
 		}
 	}
-	for _, b := range p.Drug.Bounds {
-		note("concentration "+p.Style.Concentration(b.Low.Value), b.Low.Unverified && b.Use == w.use())
-		note("concentration "+p.Style.Concentration(b.High.Value), b.High.Unverified && b.Use == w.use())
+	bounds, _ := w.boundsFor(w.line())
+	for _, b := range bounds {
+		note("concentration "+p.Style.Concentration(b.Low.Value), b.Low.Unverified)
+		note("concentration "+p.Style.Concentration(b.High.Value), b.High.Unverified)
 	}
 	if len(list) > 0 {
 		w.caution(refusal.Reason{

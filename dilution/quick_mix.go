@@ -90,9 +90,11 @@ func (w *work) quickStock() ([]formulary.Presentation, bool) {
 	q := w.fixed
 	named := q.Mix.Presentation != ""
 	if named || !q.Strength.Given() && !q.Mix.Powder.Given() {
+		n := len(w.reasons)
 		if !w.choosePresentation() {
 			return nil, false
 		}
+		w.reasons = w.reasons[:n] // its cautions come again when it is held against the mixture
 		return []formulary.Presentation{w.plan.Presentation}, w.strengthAgrees()
 	}
 	var fits []formulary.Presentation
@@ -154,7 +156,7 @@ func (w *work) strengthAgrees() bool {
 // asStored holds the mixture against one presentation: age, powder, diluent,
 // neat.
 func (w *work) asStored() bool {
-	if !w.forThisAge() || !w.powderKnown() {
+	if !w.permitted() {
 		return false
 	}
 	if w.fixed.Mix.Powder.Given() {

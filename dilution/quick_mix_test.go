@@ -105,22 +105,33 @@ counted = "mass"
   source = "X"
   uses = ["bolus"]
   neat = true
-  [[drug.dose]]
-  for = "local anaesthesia"
-  routes = ["infiltration", "nerve block"]
+  [[drug.local_maximum]]
+  with_adrenaline = false
   age_from = "18 years"
   by = "lean"
   by_source = "X"
-  usual_high = { value = "3 mg/kg", source = "X" }
-  hard_high = { value = "4 mg/kg", source = "X" }
-  total_max = { value = "200 mg", source = "X" }
-  [[drug.dose]]
-  for = "field block"
-  routes = ["infiltration"]
+  per_kg = { value = "4 mg/kg", source = "X" }
+  total = { value = "200 mg", source = "X" }
+  [[drug.local_maximum]]
+  with_adrenaline = true
   age_from = "18 years"
   by = "lean"
   by_source = "X"
-  usual_high = { value = "2 mg/kg", source = "X" }
+  per_kg = { value = "7 mg/kg", source = "X" }
+[[drug]]
+name = "oldnumb"
+atc = "N01BB98"
+class = "LA"
+counted = "mass"
+  [[drug.presentation]]
+  id = "ampoule 100 mg in 10 mL"
+  container = "ampoule"
+  form = "solution"
+  amount = "100 mg"
+  volume = "10 mL"
+  source = "X"
+  uses = ["bolus"]
+  neat = true
 `
 
 func invented(t *testing.T) *formulary.Formulary {
@@ -250,59 +261,70 @@ func TestQuickMixTells(t *testing.T) {
 }
 
 // TestLocalSums adds shares of maxima up; the maxima are invented, 4 mg/kg and
-// 200 mg, in a field block 2 mg/kg; the sums are by hand.
+// 200 mg plain, 7 mg/kg with adrenaline; the sums are by hand.
 func TestLocalSums(t *testing.T) {
-	given := func(drug, strength, volume, perKg, inAll string) dilution.LocalGiven {
-		return dilution.LocalGiven{
-			Drug: drug, Concentration: must(t, quantity.ParseConcentration, strength), Volume: must(t, quantity.ParseVolume, volume),
-			MostPerKg: must(t, quantity.ParseDose, perKg), MostInAll: must(t, quantity.ParseAmount, inAll),
-		}
+	for _, c := range localCases() {
+		t.Run(c.name, func(t *testing.T) { c.check(t, invented(t)) })
 	}
-	for _, c := range []struct {
-		name, weight, age, route string
-		given                    []dilution.LocalGiven
-		total                    string // exact, blank for refused
-		left                     string // volume of the first that would still fit
-		want                     string
-	}{
+}
+
+// A localCase is what one patient is given: a drug, strength, volume, and the
+// user's own maxima, per kg and in all, each.
+type localCase struct {
+	name, weight, age string
+	given             [][5]string
+	total             string // of the maximum, exact; blank for refused
+	left              string // volume of the first that would still fit
+	want              string // codes of refusals
+}
+
+func localCases() []localCase {
+	numb := func(volume, perKg, inAll string) [5]string { return [5]string{"numb", "1 %", volume, perKg, inAll} }
+	return []localCase{
 		// A135 (worked formula of maximum recommended doses): 7 mg/kg x 60 kg of 1 % are 42 mL.
-		{"typed alone", "60 kg", "", "", []dilution.LocalGiven{given("other with adrenaline", "1 %", "", "7 mg/kg", "")}, "0", "42", ""},
-		{"stored", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "8 mL", "", "")}, "1/2", "8", ""},
-		{"absolute maximum", "100 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "5 mL", "", "")}, "1/4", "15", ""},
-		{"the strictest row", "40 kg", "30 years", "infiltration", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "", "")}, "1/2", "4", ""},
-		{"two drugs", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "", ""), given("other", "0.25 %", "8 mL", "2 mg/kg", "")}, "1/2", "8", ""},
-		{"just one", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "8 mL", "", ""), given("numb", "2 %", "4 mL", "", "")}, "1", "0", ""},
-		{"together too much", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "9 mL", "", ""), given("other", "0.25 %", "16 mL", "2 mg/kg", "")}, "17/16", "", "local-maxima-passed-together"},
-		{"a lower one typed", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "", "80 mg")}, "1/2", "4", ""},
-		{"a higher one typed", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "5 mg/kg", "")}, "", "", "dose-above-hard-limit"},
-		{"misspelt", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("nunb", "1 %", "4 mL", "9 mg/kg", "")}, "", "", "drug-unknown"},
-		{"a word added", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb plain", "1 %", "4 mL", "9 mg/kg", "")}, "", "", "drug-unknown"},
-		{"with adrenaline", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb with adrenaline", "1 %", "4 mL", "5 mg/kg", "")}, "1/5", "16", ""},
-		{"unknown drug", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("other", "1 %", "4 mL", "", "")}, "", "", "drug-unknown"},
-		{"no local anaesthetic", "40 kg", "30 years", "IV", []dilution.LocalGiven{given("sleepwell", "1 %", "4 mL", "", "")}, "", "", "value-unknown"},
-		{"no route", "40 kg", "30 years", "", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "", "")}, "", "", "route-not-listed"},
-		{"no weight", "", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "", "")}, "", "", "weight-missing"},
-		{"no age", "40 kg", "", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "", "")}, "", "", "age-missing"},
-		{"a child", "20 kg", "8 years", "nerve block", []dilution.LocalGiven{given("numb", "1 %", "4 mL", "", "")}, "", "", "age-outside-range"},
-		{"units", "40 kg", "30 years", "nerve block", []dilution.LocalGiven{given("numb", "1 unit/mL", "4 mL", "", "")}, "", "", "units-against-mass"},
-	} {
-		t.Run(c.name, func(t *testing.T) {
-			sum := dilution.LocalSum{Given: c.given, Weight: must(t, quantity.ParseBodyWeight, c.weight), Age: must(t, body.ParseAge, c.age),
-				Route: c.route, Style: quantity.UK()}
-			shares, total, list := sum.Work(invented(t))
-			var got []string
-			for _, code := range list.Refusals().Codes() {
-				got = append(got, string(code))
-			}
-			if strings.Join(got, " ") != c.want {
-				t.Fatalf("got %v, want %q\n%v", got, c.want, list)
-			}
-			if c.total != "" && total.RatString() != c.total {
-				t.Errorf("got %s of the maximum, want %s", total.RatString(), c.total)
-			}
-			if c.left != "" && shares[0].LeftVolume.Exact() != c.left {
-				t.Errorf("got room for %s mL, want %s", shares[0].LeftVolume.Exact(), c.left)
-			}
+		{"typed alone", "60 kg", "", [][5]string{{"other with adrenaline", "1 %", "", "7 mg/kg", ""}}, "0", "42", ""},
+		{"stored, with adrenaline", "60 kg", "30 years", [][5]string{{"numb with adrenaline", "1 %", "", "", ""}}, "0", "42", ""},
+		{"stored", "40 kg", "30 years", [][5]string{numb("8 mL", "", "")}, "1/2", "8", ""},
+		{"absolute maximum", "100 kg", "30 years", [][5]string{numb("5 mL", "", "")}, "1/4", "15", ""},
+		{"two drugs", "40 kg", "30 years", [][5]string{numb("4 mL", "", ""), {"other", "0.25 %", "8 mL", "2 mg/kg", ""}}, "1/2", "8", ""},
+		{"just one", "40 kg", "30 years", [][5]string{numb("8 mL", "", ""), {"numb", "2 %", "4 mL", "", ""}}, "1", "0", ""},
+		{"together too much", "40 kg", "30 years", [][5]string{numb("9 mL", "", ""), {"other", "0.25 %", "16 mL", "2 mg/kg", ""}}, "17/16", "", "local-anaesthetic-sum"},
+		{"a lower one typed", "40 kg", "30 years", [][5]string{numb("4 mL", "", "80 mg")}, "1/2", "4", ""},
+		{"a higher one typed", "40 kg", "30 years", [][5]string{numb("4 mL", "5 mg/kg", "")}, "", "", "dose-above-hard-limit"},
+		{"a higher one typed, with adrenaline", "40 kg", "30 years", [][5]string{{"numb with epinephrine", "1 %", "4 mL", "8 mg/kg", ""}}, "", "", "dose-above-hard-limit"},
+		{"a drug without maxima", "40 kg", "30 years", [][5]string{{"oldnumb", "1 %", "4 mL", "", ""}}, "", "", "formulary-blank"},
+		{"a drug without maxima, typed", "40 kg", "30 years", [][5]string{{"oldnumb", "1 %", "4 mL", "2 mg/kg", ""}}, "1/2", "4", ""},
+		{"unknown drug", "40 kg", "30 years", [][5]string{{"other", "1 %", "4 mL", "", ""}}, "", "", "drug-unknown"},
+		{"misspelt", "40 kg", "30 years", [][5]string{{"nunb", "1 %", "4 mL", "9 mg/kg", ""}}, "", "", "drug-unknown"},
+		{"a word added", "40 kg", "30 years", [][5]string{{"numb plain", "1 %", "4 mL", "9 mg/kg", ""}}, "", "", "drug-unknown"},
+		{"no local anaesthetic", "40 kg", "30 years", [][5]string{{"sleepwell", "1 %", "4 mL", "", ""}}, "", "", "value-unknown"},
+		{"no weight", "", "30 years", [][5]string{numb("4 mL", "", "")}, "", "", "weight-missing"},
+		{"no age", "40 kg", "", [][5]string{numb("4 mL", "", "")}, "", "", "age-missing"},
+		{"a child", "20 kg", "8 years", [][5]string{numb("4 mL", "", "")}, "", "", "age-outside-range"},
+		{"units", "40 kg", "30 years", [][5]string{{"numb", "1 unit/mL", "4 mL", "", ""}}, "", "", "units-against-mass"},
+	}
+}
+
+func (c localCase) check(t *testing.T, f *formulary.Formulary) {
+	sum := dilution.LocalSum{Weight: must(t, quantity.ParseBodyWeight, c.weight), Age: must(t, body.ParseAge, c.age), Style: quantity.UK()}
+	for _, g := range c.given {
+		sum.Given = append(sum.Given, dilution.LocalGiven{
+			Drug: g[0], Concentration: must(t, quantity.ParseConcentration, g[1]), Volume: must(t, quantity.ParseVolume, g[2]),
+			MostPerKg: must(t, quantity.ParseDose, g[3]), MostInAll: must(t, quantity.ParseAmount, g[4]),
 		})
+	}
+	shares, total, list := sum.Work(f)
+	var got []string
+	for _, code := range list.Refusals().Codes() {
+		got = append(got, string(code))
+	}
+	if strings.Join(got, " ") != c.want {
+		t.Fatalf("got %v, want %q\n%v", got, c.want, list)
+	}
+	if c.total != "" && total.RatString() != c.total {
+		t.Errorf("got %s of the maximum, want %s", total.RatString(), c.total)
+	}
+	if c.left != "" && shares[0].LeftVolume.Exact() != c.left {
+		t.Errorf("got room for %s mL, want %s", shares[0].LeftVolume.Exact(), c.left)
 	}
 }

@@ -34,7 +34,7 @@ func TestQuickMixAsStrictAsAnOrder(t *testing.T) {
 	for _, d := range f.Drugs() {
 		for _, p := range d.Presentations {
 			for _, fluid := range fluidsFor(p) {
-				for _, times := range []*big.Rat{big.NewRat(1, 1), big.NewRat(2, 1), big.NewRat(10, 1), big.NewRat(50, 1)} {
+				for _, times := range []*big.Rat{big.NewRat(1, 1), big.NewRat(2, 1), big.NewRat(20, 1)} {
 					for _, infusion := range []bool{false, true} {
 						tried++
 						if bothWays(t, f, trialOf(d, p, infusion), fluid, times) {

@@ -10,6 +10,7 @@ import (
 	"testing"
 
 	"drawup/dilution"
+	"drawup/dilution/formulary"
 	"drawup/dilution/order"
 	"drawup/dilution/refusal"
 )
@@ -64,13 +65,32 @@ func refusedTexts(t *testing.T) map[string]string {
 	return out
 }
 
+// formularyFor is the invented formulary beside the file, of the same name and
+// the ending "formulary", or the starter.
+func formularyFor(t *testing.T, name string, starter *formulary.Formulary) *formulary.Formulary {
+	t.Helper()
+	file := filepath.Join(refusedFolder, strings.TrimSuffix(name, ".toml")+".formulary")
+	data, err := os.ReadFile(file)
+	if os.IsNotExist(err) {
+		return starter
+	}
+	if err != nil {
+		t.Fatal(err)
+	}
+	f, faults := formulary.Read(formulary.Text{Name: file, Data: data})
+	if faults.Refused() {
+		t.Fatal(faults)
+	}
+	return f
+}
+
 // Every refusal is expected on its line, and every expected one comes. The
 // expected codes stand in the files, written by hand.
 func TestRefusedPlans(t *testing.T) {
 	f := starter(t)
 	for name, text := range refusedTexts(t) {
 		t.Run(name, func(t *testing.T) {
-			_, list := plan(t, f, text)
+			_, list := plan(t, formularyFor(t, name, f), text)
 			want, noted := marks(text, "want"), marks(text, "caution")
 			if len(want)+len(noted) == 0 {
 				t.Error("the file expects nothing")

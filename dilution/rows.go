@@ -2,6 +2,7 @@ package dilution
 
 import (
 	"fmt"
+	"slices"
 
 	"drawup/dilution/formulary"
 	"drawup/dilution/quantity"
@@ -104,6 +105,9 @@ func fittingRows[T any](w *work, rules []formulary.Rule[T], field string) ([]for
 			continue
 		}
 		bands = append(bands, r.Ages())
+		if r.Frail && !w.patient.Frail {
+			continue
+		}
 		if r.Fits(w.size.Age) {
 			rows = append(rows, r)
 		} else if !w.size.Age.Given() {
@@ -112,7 +116,7 @@ func fittingRows[T any](w *work, rules []formulary.Rule[T], field string) ([]for
 	}
 	switch {
 	case len(rows) > 0:
-		return rows, true
+		return frailFirst(w, rows), true
 	case !routeOK:
 		return nil, w.routeUnlisted(routes)
 	case len(bands) == 0:
@@ -121,6 +125,33 @@ func fittingRows[T any](w *work, rules []formulary.Rule[T], field string) ([]for
 		return nil, w.refuse(w.ageMissing(field))
 	}
 	return nil, w.refuse(w.ageOutside(field, bands))
+}
+
+// frailFirst keeps, for a frail patient, of each indication the rows for the
+// frail where there are any. Where there are none it says so.
+func frailFirst[T any](w *work, rows []formulary.Rule[T]) []formulary.Rule[T] {
+	if !w.patient.Frail {
+		return rows
+	}
+	special := map[string]bool{}
+	for _, r := range rows {
+		special[r.For] = special[r.For] || r.Frail
+	}
+	var out []formulary.Rule[T]
+	for _, r := range rows {
+		if r.Frail == special[r.For] {
+			out = append(out, r)
+		}
+	}
+	if len(special) > 0 && !slices.ContainsFunc(out, func(r formulary.Rule[T]) bool { return r.Frail }) {
+		w.caution(refusal.Reason{
+			Code: refusal.FrailBlank, Field: "patient.frail", Rule: "R10", Pos: w.patient.Pos,
+			Got: "frail", Want: "figures for the frail",
+			Message: fmt.Sprintf("the patient is frail, and the formulary has no figures of %s for the frail", w.plan.Drug.Name),
+			Remedy:  "the figures are those for others: decide with whoever prescribes",
+		})
+	}
+	return out
 }
 
 // noLimits says that the formulary stores no limits for this use (R10).

@@ -5,6 +5,7 @@ import (
 	"math/big"
 	"time"
 
+	"drawup/dilution/formulary"
 	"drawup/dilution/order"
 	"drawup/dilution/quantity"
 	"drawup/dilution/syringe"
@@ -20,6 +21,10 @@ type site struct {
 	barrels   []syringe.Barrel
 	bolus     useByPolicy
 	infusion  useByPolicy
+
+	jurisdiction string            // whose standard preparations are used; "" for any
+	tallMan      formulary.TallMan // the zero list has no names
+	dualNames    bool
 }
 
 type useByPolicy struct {
@@ -74,6 +79,8 @@ func siteOf(o order.Order) (site, error) {
 	if in.PumpStep.Value.Given() {
 		s.step = in.PumpStep.Value
 	}
+	s.dualNames = in.DualNames
+	s.jurisdiction = in.Jurisdiction.Value
 	if in.BolusUseBy.Value > 0 {
 		s.bolus = useByPolicy{int64(in.BolusUseBy.Value / time.Minute), "site policy in the order file"}
 	}

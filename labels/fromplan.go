@@ -22,6 +22,7 @@ type Making struct {
 	Formulary       string // name and version
 	FormularyDigest string // first twelve digits
 	State           string // approval line
+	Approved        bool   // two people have signed for the formulary
 	Digest          string // short digest, hexadecimal
 	Serial          string // first five digits of every serial number
 	Invented        bool
@@ -59,7 +60,7 @@ func FromPlan(p dilution.Plan, w Facts, m Making) (Label, error) {
 		UseBy:    Line{{Text: "use by "}, w.Cell(recheck.UseBy)},
 		Prepared: Line{{Text: "made "}, w.Cell(recheck.Prepared), {Text: " " + m.Preparer}},
 		Serial:   Cell{Text: serial, Figure: recheck.Serial}, Code: Cell{Text: code, Figure: recheck.Code},
-		Digest: m.Digest, Marks: marks(p)}
+		Digest: m.Digest, Marks: marks(p, m)}
 	l.names(p, w)
 	if w.Has(recheck.SubstanceAmount) {
 		l.Substance = Line{w.Cell(recheck.SubstanceAmount), {Text: " in "}, w.Cell(recheck.FinalVolume)}
@@ -80,7 +81,8 @@ func FromPlan(p dilution.Plan, w Facts, m Making) (Label, error) {
 }
 
 func (l *Label) names(p dilution.Plan, w Facts) {
-	name := p.Drug.LabelName(p.Style)
+	name := p.Name
+	l.Other = p.Other
 	if second := p.Presentation.SecondName; second != "" {
 		name, _, _ = strings.Cut(name, " with ")
 		l.Second, l.SecondConcentration = Capital(second), w.Cell(recheck.SecondConcentrated)
@@ -107,8 +109,11 @@ func (l *Label) infusion(p dilution.Plan) {
 	}
 }
 
-func marks(p dilution.Plan) []string {
-	out := []string{MarkStarter}
+func marks(p dilution.Plan, m Making) []string {
+	var out []string
+	if !m.Approved {
+		out = append(out, MarkStarter)
+	}
 	for _, r := range p.Cautions {
 		if r.Code == refusal.Unverified {
 			return append(out, MarkUnverified)

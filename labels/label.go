@@ -57,6 +57,7 @@ type Label struct {
 	Class  Class
 
 	Name                string // as printed: "Etomidate", or a mixed-case form as it stands, "ePHEDrine"
+	Other               string // the drug's name elsewhere, printed small and in brackets; optional
 	Second              string // second drug of a mixture, printed below after "with"
 	As                  string // what the amount refers to, "base"; printed after the concentration
 	Concentration       Cell   // "2 mg/mL"
@@ -81,10 +82,18 @@ type Label struct {
 	Digest string   // of order, formulary and time; printed after "ref" when not empty
 }
 
+// Bracketed is the drug's other name as it is printed, "" when there is none.
+func (l Label) Bracketed() string {
+	if l.Other == "" {
+		return ""
+	}
+	return "(" + l.Other + ")"
+}
+
 // lines lists all lines and cells in reading order.
 func (l Label) lines() []Line {
 	lines := []Line{
-		Words(l.Name), Words(l.Second), {l.Concentration}, Words(l.As), {l.SecondConcentration},
+		Words(l.Name), Words(l.Bracketed()), Words(l.Second), {l.Concentration}, Words(l.As), {l.SecondConcentration},
 		l.Amount, l.Substance, l.Dose, l.Diluent, Words(l.Route), Words(l.Patient), l.UseBy, l.Prepared,
 	}
 	for _, m := range l.Marks {
@@ -95,7 +104,7 @@ func (l Label) lines() []Line {
 
 // Each calls see with every text of the label, the barcode's included.
 func (l Label) Each(see func(text string)) {
-	for _, text := range []string{l.Name, l.Second, l.Concentration.Text, l.As, l.SecondConcentration.Text, l.Route, l.Patient, l.Class.Word, l.Serial.Text, l.Digest, l.Code.Text} {
+	for _, text := range []string{l.Name, l.Bracketed(), l.Second, l.Concentration.Text, l.As, l.SecondConcentration.Text, l.Route, l.Patient, l.Class.Word, l.Serial.Text, l.Digest, l.Code.Text} {
 		see(text)
 	}
 	for _, line := range []Line{l.Amount, l.Substance, l.Dose, l.Diluent, l.UseBy, l.Prepared} {

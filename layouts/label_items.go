@@ -112,7 +112,7 @@ const (
 func contentOf(l labels.Label, where place) content {
 	c := content{word: strong(l.Class.Word), serial: plain(labels.Line{l.Serial}), stated: statedOf(l)}
 	c.serial.serial = true
-	for _, line := range []labels.Line{l.Amount, l.Substance} {
+	for _, line := range []labels.Line{labels.Words(l.Bracketed()), l.Amount, l.Substance} {
 		it := plain(line)
 		it.beside = true
 		c.rows = append(c.rows, it)

@@ -190,7 +190,7 @@ func appendKey(key []byte, l labels.Label, modules int) []byte {
 		}
 		key = append(key, 2)
 	}
-	for _, text := range []string{l.Class.Code, l.Class.Word, l.Name, l.Second, l.As, l.Concentration.Text, l.SecondConcentration.Text, l.Route, l.Patient, l.Digest} {
+	for _, text := range []string{l.Class.Code, l.Class.Word, l.Name, l.Other, l.Second, l.As, l.Concentration.Text, l.SecondConcentration.Text, l.Route, l.Patient, l.Digest} {
 		word(text)
 	}
 	for _, row := range []labels.Line{l.Amount, l.Substance, l.UseBy, l.Prepared, l.Dose, l.Diluent} {

@@ -213,8 +213,12 @@ func newFooting(s setter, foot sheets.Foot) footing {
 		hand hand
 		text string
 	}
+	made := fmt.Sprintf("Made %s by %s%s. Digest %s.", foot.Made, foot.Preparer, place, foot.Digest)
+	if foot.Preparer == "" { // a formulary is printed, not made
+		made = fmt.Sprintf("Printed %s%s. Digest %s.", foot.Made, place, foot.Digest)
+	}
 	rows := []row{
-		{h, fmt.Sprintf("Made %s by %s%s. Digest %s.", foot.Made, foot.Preparer, place, foot.Digest)},
+		{h, made},
 		{h, fmt.Sprintf("Formulary: %s, digest %s. State: %s.", foot.Formulary, foot.FormularyDigest, foot.State)},
 	}
 	if foot.LeftOut != "" {

@@ -23,7 +23,7 @@ func demoJob(t testing.TB) *job {
 		t.Fatal(err)
 	}
 	flags, _ := readPaperFlags("prepare", nil)
-	j, reasons := newJob(demo, f, flags.when(nil), nil, silent)
+	j, reasons := newJob(demo, library{form: f}, flags.when(nil), nil, silent)
 	if reasons.Refused() {
 		t.Fatalf("the demonstration list is refused:\n%v", reasons.Refusals())
 	}

@@ -64,7 +64,7 @@ func BenchmarkPrepareDemo(b *testing.B) {
 	b.ReportAllocs()
 	size := 0
 	for b.Loop() {
-		j, reasons := newJob(demo, f, flags.when(nil), nil, silent)
+		j, reasons := newJob(demo, library{form: f}, flags.when(nil), nil, silent)
 		if reasons.Refused() {
 			b.Fatal(reasons)
 		}

@@ -2,6 +2,7 @@ package main
 
 import (
 	"bytes"
+	"fmt"
 	"os"
 	"path/filepath"
 	"regexp"
@@ -115,11 +116,32 @@ func examples() map[refusal.Code]func(*testing.T) string {
 		refusal.TextTooLong:      preparing(strings.Replace(soundOrder, "theatre 2", strings.Repeat("overlong", 40), 1), "order.toml"),
 		refusal.LabelTooSmall:    preparing(infusion, "order.toml", "--infusion-stock", "roll-40x15"),
 		refusal.LabelMoved:       preparing(strings.Replace(soundOrder, "suxamethonium\"\ndose = \"1 mg/kg", "neostigmine with glycopyrronium\"\ndose = \"2.5 mg", 1), "order.toml", "--stock", "roll-40x15"),
-		refusal.LocalMaxima: told("local", "--weight", "60 kg", "--give", "lidocaine with adrenaline 1 %, 30 mL, at most 7 mg/kg",
-			"--give", "lidocaine with adrenaline 2 %, 10 mL, at most 7 mg/kg"),
-		refusal.OneWeightOnly:  told("mix", "--each", "1 microgram/kg/min", "--weight", "6 kg", "--rule", "three"),
-		refusal.RoutesDisagree: unproven,
-		refusal.RateBelowHard:  belowHardLimit,
+		refusal.OneWeightOnly:    told("mix", "--each", "1 microgram/kg/min", "--weight", "6 kg", "--rule", "three"),
+		refusal.ApprovedOther:    approved("base 9", "2026-12-01"),
+		refusal.ApprovalPast:     approved("", "2019-12-01"),
+		refusal.RoutesDisagree:   unproven,
+		refusal.RateBelowHard:    belowHardLimit,
+	}
+}
+
+// approved prepares an order with an approval of the starter: for another
+// version where one is named, with a day of review.
+func approved(version, review string) func(*testing.T) string {
+	return func(t *testing.T) string {
+		f, err := formulary.Default()
+		if err != nil {
+			t.Fatal(err)
+		}
+		if version == "" {
+			version = f.Version
+		}
+		text := fmt.Sprintf("formulary = %q\nversion = %q\ndigest = %q\ndate = \"2018-12-01\"\nreview = %q\n", f.Name, version, f.Digest, review) +
+			"[[signer]]\nname = \"A. Example\"\nrole = \"pharmacist\"\n[[signer]]\nname = \"B. Example\"\nrole = \"anaesthetist\"\n"
+		path := filepath.Join(t.TempDir(), "approval.toml")
+		if err := os.WriteFile(path, []byte(text), 0o600); err != nil {
+			t.Fatal(err)
+		}
+		return preparing(soundOrder, "order.toml", "--approval", path)(t)
 	}
 }
 

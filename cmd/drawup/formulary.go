@@ -3,9 +3,7 @@ package main
 import (
 	"fmt"
 	"io"
-	"slices"
 	"strings"
-	"unicode/utf8"
 
 	"github.com/spf13/pflag"
 
@@ -17,11 +15,18 @@ import (
 
 // A formularyRequest is what was typed after drawup formulary.
 type formularyRequest struct {
-	verb       string   // list or show
-	words      []string // of the drug's name
-	class      onceText
-	json, help bool
-	faults     refusal.List
+	verb         string
+	words        []string // after the verb
+	class        onceText
+	flag         onceText
+	jurisdiction onceText
+	out          onceText
+	at           onceText
+	review       onceText
+	signers      []string
+	own          formularyFlags
+	json, help   bool
+	faults       refusal.List
 }
 
 func (r *formularyRequest) add(x refusal.Reason) {
@@ -29,97 +34,156 @@ func (r *formularyRequest) add(x refusal.Reason) {
 	r.faults = append(r.faults, x)
 }
 
-func readFormularyRequest(args []string) *formularyRequest {
+// A formularyVerb is one row of the table: drawup formulary NAME.
+type formularyVerb struct {
+	name  string
+	wants string // what stands after it, for messages
+	takes []string
+	least int // words after it
+	most  int
+	run   func(e env, r *formularyRequest) int
+}
+
+// formularyVerbs is the table, in the order in which messages list it.
+func formularyVerbs() []formularyVerb {
+	return []formularyVerb{
+		{"list", "nothing", []string{"class", "flag", "jurisdiction", "formulary", "approval", "at"}, 0, 0, runFormularyList},
+		{"show", "the name of a drug", []string{"formulary", "approval", "at"}, 1, 12, runFormularyShow},
+		{"verify", "a formulary file, or nothing for the starter", nil, 0, 40, runFormularyVerify},
+		{"compare", "two formularies, the older first", nil, 2, 2, runFormularyCompare},
+		{"print", "nothing", []string{"formulary", "approval", "at", "out"}, 0, 0, runFormularyPrint},
+		{"standards", "nothing", []string{"formulary", "out"}, 0, 0, runFormularyStandards},
+		{"approval", "nothing", []string{"formulary", "at", "review", "signed", "out"}, 0, 0, runFormularyApproval},
+		{"schema", "nothing", nil, 0, 0, runFormularySchema},
+	}
+}
+
+func verbNames() []string {
+	var out []string
+	for _, v := range formularyVerbs() {
+		out = append(out, v.name)
+	}
+	return out
+}
+
+func readFormularyRequest(args []string) (*formularyRequest, formularyVerb) {
 	r := &formularyRequest{}
 	set := pflag.NewFlagSet("formulary", pflag.ContinueOnError)
 	set.SetOutput(io.Discard)
 	set.Usage = func() {}
 	set.Var(&r.class, "class", "label class")
+	set.Var(&r.flag, "flag", "mark of a drug")
+	set.Var(&r.jurisdiction, "jurisdiction", "where a source holds")
+	set.Var(&r.out, "out", "file to write")
+	set.Var(&r.at, "at", "day")
+	set.Var(&r.review, "review", "last day of the approval")
+	set.StringArrayVar(&r.signers, "signed", nil, "name and role")
+	set.StringSliceVar(&r.own.files, "formulary", nil, "")
+	set.StringVar(&r.own.approval, "approval", "", "")
 	set.BoolVar(&r.json, "json", false, "")
 	set.BoolVarP(&r.help, "help", "h", false, "")
 	if err := set.Parse(args); err != nil {
 		r.json = r.json || wantsJSON(args)
-		r.faults = refusal.List{flagFault(err, []string{"class", "json", "help"})}
-		return r
+		var names []string
+		set.VisitAll(func(x *pflag.Flag) { names = append(names, x.Name) })
+		r.faults = refusal.List{flagFault(err, names)}
+		return r, formularyVerb{}
 	}
 	if words := set.Args(); len(words) > 0 {
 		r.verb, r.words = words[0], words[1:]
 	}
-	r.check()
-	return r
+	return r, r.check(set)
 }
 
-// check refuses what list or show cannot take.
-func (r *formularyRequest) check() {
-	switch r.verb {
-	case "list":
-		if len(r.words) > 0 {
-			name := strings.Join(r.words, " ")
-			r.add(refusal.Reason{Code: refusal.FlagUnknown, Field: "argument", Got: name, Want: "nothing after list",
-				Message: fmt.Sprintf("got %q after list, want nothing", name), Remedy: "to see one drug type drawup formulary show " + name})
-		}
-		r.checkClass()
-	case "show":
-		if len(r.words) == 0 {
-			r.add(refusal.Reason{Code: refusal.FlagMissing, Field: "DRUG", Want: "the name of a drug", Message: "no drug is named",
-				Remedy: "name one, as in drawup formulary show noradrenaline; drawup formulary list shows what there is"})
-		}
-		if r.class.given {
-			r.add(refusal.Reason{Code: refusal.FlagConflict, Field: "--class", Got: r.class.text, Want: "no class", Message: "--class has no part in showing one drug",
-				Remedy: "leave --class out, or type drawup formulary list"})
-		}
-	case "":
-		r.add(refusal.Reason{Code: refusal.FlagMissing, Field: "command", Want: "list or show", Message: "got nothing after formulary, want list or show",
+// check finds the verb and refuses what it cannot take.
+func (r *formularyRequest) check(set *pflag.FlagSet) formularyVerb {
+	if r.help {
+		return formularyVerb{}
+	}
+	want := strings.Join(verbNames(), ", ")
+	if r.verb == "" {
+		r.add(refusal.Reason{Code: refusal.FlagMissing, Field: "command", Want: "one of " + want, Message: "got nothing after formulary, want one of " + want,
 			Remedy: "type drawup formulary list"})
-	default:
-		r.add(refusal.Reason{Code: refusal.FlagUnknown, Field: "command", Got: r.verb, Want: "list or show", Message: fmt.Sprintf("got %q after formulary, want list or show", r.verb),
-			Remedy: nearestOr(r.verb, []string{"list", "show"}, "", "type drawup formulary list, or drawup formulary show with the name of a drug")})
+		return formularyVerb{}
 	}
+	for _, v := range formularyVerbs() {
+		if v.name == r.verb {
+			r.fits(v, set)
+			return v
+		}
+	}
+	r.add(refusal.Reason{Code: refusal.FlagUnknown, Field: "command", Got: r.verb, Want: "one of " + want, Message: fmt.Sprintf("got %q after formulary, want one of %s", r.verb, want),
+		Remedy: nearestOr(r.verb, verbNames(), "", "type drawup help formulary")})
+	return formularyVerb{}
 }
 
-// checkClass wants a class that labels have, so that a slip does not look like
-// a class without drugs.
-func (r *formularyRequest) checkClass() {
-	if !r.class.given {
-		return
+// fits holds words and flags against what the verb takes.
+func (r *formularyRequest) fits(v formularyVerb, set *pflag.FlagSet) {
+	words := strings.Join(r.words, " ")
+	switch {
+	case len(r.words) < v.least:
+		r.add(refusal.Reason{Code: refusal.FlagMissing, Field: "argument", Got: words, Want: v.wants,
+			Message: fmt.Sprintf("%s wants %s", v.name, v.wants), Remedy: "type drawup help formulary for an example"})
+	case len(r.words) > v.most:
+		r.add(refusal.Reason{Code: refusal.FlagUnknown, Field: "argument", Got: words, Want: v.wants + " after " + v.name,
+			Message: fmt.Sprintf("got %q after %s, want %s", words, v.name, v.wants), Remedy: "to see one drug type drawup formulary show " + words})
 	}
-	r.class.text = strings.ToUpper(strings.TrimSpace(r.class.text))
-	if _, ok := labels.ClassOf(r.class.text); ok {
-		return
-	}
-	var codes []string
-	for _, c := range labels.Classes() {
-		codes = append(codes, c.Code)
-	}
-	r.add(refusal.Reason{Code: refusal.ValueUnknown, Field: "--class", Got: r.class.text, Want: "one of " + strings.Join(codes, ", "),
-		Message: fmt.Sprintf("--class: got %q, want the code of a label class", r.class.text), Remedy: "the classes are " + strings.Join(codes, ", ")})
+	set.Visit(func(f *pflag.Flag) {
+		if f.Name == "json" || f.Name == "help" {
+			return
+		}
+		for _, t := range v.takes {
+			if t == f.Name {
+				return
+			}
+		}
+		r.add(refusal.Reason{Code: refusal.FlagConflict, Field: "--" + f.Name, Got: f.Value.String(), Want: "no --" + f.Name,
+			Message: fmt.Sprintf("--%s has no part in formulary %s", f.Name, v.name), Remedy: "leave it out, or type drawup help formulary"})
+	})
 }
 
-// runFormulary shows what the formulary holds. It changes nothing.
+// runFormulary shows, checks, compares or prints what the formulary holds.
 func runFormulary(e env, args []string) int {
-	r := readFormularyRequest(args)
+	r, v := readFormularyRequest(args)
 	if r.help {
 		return showHelp(e, "formulary")
 	}
-	if r.faults.Refused() {
+	if r.faults.Refused() || v.run == nil {
 		return finish(e, r.json, &bareDocument{}, nil, r.faults)
 	}
-	f, err := formulary.Default()
-	if err != nil {
-		return finish(e, r.json, &bareDocument{}, nil, refusal.List{ourFault(0, err)})
+	return v.run(e, r)
+}
+
+// open is the formulary that the flags name, as it stands at the time of the
+// work.
+func (r *formularyRequest) open(e env) (*formulary.Formulary, refusal.List) {
+	lib, faults := libraryOf(r.own)
+	if faults.Refused() {
+		return nil, faults
 	}
-	if r.verb == "list" {
-		doc := &drugsDocument{Formulary: headOf(f), Drugs: listDrugs(f, r.class.text)}
-		return finish(e, r.json, doc, func(w io.Writer) { tellDrugs(w, doc) }, nil)
+	at, late := r.day(e)
+	if late.Refused() {
+		return nil, append(faults, late...)
 	}
-	doc := &drugDocument{Formulary: headOf(f)}
+	f, lapsed := lib.at(at)
+	return f, append(faults, lapsed...)
+}
+
+func runFormularyShow(e env, r *formularyRequest) int {
+	f, faults := r.open(e)
+	doc := &drugDocument{}
+	if faults.Refused() {
+		return finish(e, r.json, doc, nil, faults)
+	}
+	doc.Formulary = headOf(f)
 	name := strings.Join(r.words, " ")
 	d, near, ok := f.Find(name)
 	if !ok {
 		return finish(e, r.json, doc, nil, refusal.List{unknownDrug(name, near)})
 	}
 	doc.Drug = drugOf(quantity.UK(), d)
-	return finish(e, r.json, doc, func(w io.Writer) { showDrug(w, doc.Formulary, doc.Drug) }, nil)
+	doc.Pairs = pairsOf(f, d.Name)
+	return finish(e, r.json, doc, func(w io.Writer) { showDrug(w, doc) }, nil)
 }
 
 func unknownDrug(name string, near []string) refusal.Reason {
@@ -131,120 +195,20 @@ func unknownDrug(name string, near []string) refusal.Reason {
 		Message: fmt.Sprintf("%q is not in the formulary", name), Remedy: remedy}
 }
 
-// listDrugs is the drugs of one class, or all, in order of name.
-func listDrugs(f *formulary.Formulary, class string) []listedDrug {
-	out := []listedDrug{}
-	for _, d := range f.Drugs() {
-		if class == "" || d.Class == class {
-			out = append(out, listedOf(d))
-		}
+// checkClass wants a class that labels have, so that a slip does not look like
+// a class without drugs.
+func (r *formularyRequest) checkClass() refusal.List {
+	if !r.class.given {
+		return nil
 	}
-	return out
-}
-
-// Widths of the columns of the list, with two blanks between them. With the
-// longest row of marks they stay within widest; a test measures it.
-const (
-	nameColumn  = 31
-	alsoColumn  = 18
-	classColumn = 31
-)
-
-// tellDrugs writes one line a drug. Nothing is cut: other names that find no
-// room are counted, and formulary show has them all.
-func tellDrugs(w io.Writer, doc *drugsDocument) {
-	firstLine(w, doc.Formulary)
-	fmt.Fprintln(w)
-	if len(doc.Drugs) == 0 {
-		fmt.Fprintln(w, "no drug of this class")
-		return
+	r.class.text = strings.ToUpper(strings.TrimSpace(r.class.text))
+	if _, ok := labels.ClassOf(r.class.text); ok {
+		return nil
 	}
-	cells := func(name, also, class, flags string) {
-		line := pad(name, nameColumn+2) + pad(also, alsoColumn+2) + pad(class, classColumn+2) + flags
-		fmt.Fprintln(w, strings.TrimRight(line, " "))
+	var codes []string
+	for _, c := range labels.Classes() {
+		codes = append(codes, c.Code)
 	}
-	cells("drug", "other names", "class", "flags")
-	used := map[string]bool{}
-	for _, d := range doc.Drugs {
-		var marks []string
-		for _, f := range d.Flags {
-			used[f] = true
-			marks = append(marks, markOf(f))
-		}
-		cells(d.Name, shortNames(d.Also, alsoColumn), d.Class+" "+d.ClassWord, strings.Join(marks, " "))
-	}
-	tellMarks(w, used)
-	fmt.Fprintln(w, "\nType drawup formulary show DRUG for all that is stored of one drug, with its sources.")
-}
-
-// tellMarks spells out the marks that were used, three in a line.
-func tellMarks(w io.Writer, used map[string]bool) {
-	var flags []string
-	for f := range used {
-		flags = append(flags, f)
-	}
-	slices.SortFunc(flags, func(a, b string) int { return strings.Compare(markOf(a), markOf(b)) })
-	if len(flags) > 0 {
-		fmt.Fprintln(w)
-	}
-	for three := range slices.Chunk(flags, 3) {
-		line := ""
-		for _, f := range three {
-			line += pad(markOf(f)+" "+f, 34)
-		}
-		fmt.Fprintln(w, strings.TrimRight(line, " "))
-	}
-}
-
-// shortNames is as many names as find room in width, and how many more.
-func shortNames(names []string, width int) string {
-	for n := len(names); n > 0; n-- {
-		s := strings.Join(names[:n], ", ")
-		if n < len(names) {
-			s += fmt.Sprintf(" +%d", len(names)-n)
-		}
-		if utf8.RuneCountInString(s) <= width {
-			return s
-		}
-	}
-	if len(names) == 0 {
-		return ""
-	}
-	return fmt.Sprintf("(%d)", len(names))
-}
-
-// markOf is the two letters that stand for a flag in the list; a flag without a
-// mark is written out.
-func markOf(flag string) string {
-	switch flag {
-	case "high alert":
-		return "HA"
-	case "controlled":
-		return "CD"
-	case "protect from light":
-		return "PL"
-	case "filter needle":
-		return "FN"
-	case "in-line filter":
-		return "IF"
-	case "large vein":
-		return "LV"
-	case "central line preferred":
-		return "CL"
-	case "paralysing":
-		return "PA"
-	case "emulsion":
-		return "EM"
-	case "no preservative for neuraxial":
-		return "NP"
-	case "vesicant":
-		return "VE"
-	case "separate line":
-		return "SL"
-	case "shake or invert":
-		return "SH"
-	case "keep refrigerated":
-		return "KR"
-	}
-	return flag
+	return refusal.List{{Code: refusal.ValueUnknown, Severity: refusal.Refuse, Field: "--class", Got: r.class.text, Want: "one of " + strings.Join(codes, ", "),
+		Message: fmt.Sprintf("--class: got %q, want the code of a label class", r.class.text), Remedy: "the classes are " + strings.Join(codes, ", ")}}
 }

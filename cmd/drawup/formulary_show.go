@@ -42,7 +42,13 @@ func (p proof) sourced(name, value string, s shownSource) {
 	p.item(name, value)
 	source := "source: " + s.Source
 	if s.Grade != "" {
-		source = "source [" + s.Grade + "]: " + s.Source
+		source = "source [" + strings.TrimSuffix(s.Grade+" "+s.Jurisdiction, " ") + "]: " + s.Source
+	}
+	if s.VerifiedBy != "" {
+		source += "; verified by " + s.VerifiedBy
+	}
+	if s.Reason != "" {
+		source += "; loosened because: " + s.Reason
 	}
 	for i, l := range wrap(source, widest-nameWidth-4) {
 		if i > 0 {
@@ -71,8 +77,9 @@ func firstLine(w io.Writer, h *formularyHead) {
 }
 
 // showDrug writes all of d.
-func showDrug(w io.Writer, h *formularyHead, d *shownDrug) {
-	firstLine(w, h)
+func showDrug(w io.Writer, doc *drugDocument) {
+	d := doc.Drug
+	firstLine(w, doc.Formulary)
 	p := proof{w}
 	p.head("%q", d.Name)
 	p.names(d)
@@ -90,6 +97,8 @@ func showDrug(w io.Writer, h *formularyHead, d *shownDrug) {
 	p.bounds(d.Concentrations)
 	p.rules("dose", d.Doses, d.NeverAsBolus != nil)
 	p.rules("infusion", d.Infusions, d.NeverAsInfusion != nil)
+	p.local(d.LocalMaxima)
+	p.pairs(doc.Pairs)
 	p.standards(d.Standards)
 	p.stability(d.Stability)
 	p.foot()
@@ -113,15 +122,18 @@ func (p proof) names(d *shownDrug) {
 	}
 	p.item("counted", counted)
 	if d.Salt != nil {
+		p.item("formula, salt", d.Salt.Formula)
 		p.sourced("salt", fmt.Sprintf("%s of %s for each 1 mg as counted", d.Salt.PerMg.Printed, d.Salt.Name), d.Salt.shownSource)
 	}
+	p.item("formula", d.Formula)
 	p.figure("substance", d.Substance)
+	p.item("substitutes", strings.Join(d.Substitutes, ", "))
 	flags := strings.Join(d.Flags, ", ")
 	if flags == "" {
 		flags = "none"
 	}
 	p.item("flags", flags)
-	p.item("in the data", fmt.Sprintf("%s, line %d", d.File, d.Line))
+	p.item("in the data", fmt.Sprintf("%s: %s, line %d", d.From, d.File, d.Line))
 }
 
 func (p proof) presentation(x shownPresentation) {
@@ -140,6 +152,13 @@ func (p proof) presentation(x shownPresentation) {
 		use += ", from " + x.AgeFrom
 	}
 	p.item("for", use)
+	p.item("bound to routes", strings.Join(x.Routes, ", "))
+	if x.MultiDose {
+		p.item("multi-dose", "yes")
+	}
+	p.note("preserved", x.Preserved)
+	p.note("not for a pump", x.NotForPump)
+	p.figure("overfill", x.Overfill)
 	neat := "no, has to be diluted"
 	if x.Neat {
 		neat = "yes, may be given as it is"
@@ -177,12 +196,56 @@ func contentsOf(x shownPresentation) string {
 	return s
 }
 
-func (p proof) fluid(name string, f shownText) {
+func (p proof) fluid(name string, f shownFluid) {
 	value := fmt.Sprintf("%q", f.Text)
+	if f.Why != "" {
+		value += " (" + f.Why + ")"
+	}
 	if f.Reason != "" {
 		value += ": " + f.Reason
 	}
 	p.sourced(name, value, f.shownSource)
+	p.figure("  only from", f.Low)
+	p.figure("  only up to", f.High)
+}
+
+// weight writes which weight a row goes by, and where that is said.
+func (p proof) weight(by string, source *shownSource) {
+	if source != nil {
+		p.sourced("goes by", byWords(by), *source)
+	} else {
+		p.item("goes by", byWords(by))
+	}
+}
+
+func (p proof) local(list []shownLocal) {
+	for _, m := range list {
+		with := "without adrenaline"
+		if m.WithAdrenaline {
+			with = "with adrenaline"
+		}
+		p.head("local anaesthetic maximum, %s", with)
+		ages := m.Ages
+		if ages == "" {
+			ages = "every age"
+		}
+		p.item("ages", ages)
+		p.weight(m.By, m.BySource)
+		p.figure("by weight", m.PerKg)
+		p.figure("in all", m.Total)
+		p.figure("in a day", m.DayMax)
+	}
+}
+
+// pairs writes what may share a syringe with the drug, and what never may.
+func (p proof) pairs(list []shownText) {
+	if len(list) == 0 {
+		return
+	}
+	p.head("in one syringe with another drug (all others are refused)")
+	for _, x := range list {
+		p.sourced(x.Reason, x.Text, x.shownSource)
+	}
 }
 
 func (p proof) bounds(list []shownBounds) {
@@ -190,7 +253,7 @@ func (p proof) bounds(list []shownBounds) {
 		p.head("concentration: none is stored")
 	}
 	for _, b := range list {
-		p.head("concentration, %s, %s line", b.Use, b.Line)
+		p.head("concentration, %s, %s line%s", b.Use, b.Line, tailed(", ", strings.Join(b.Routes, ", ")))
 		p.figure("at least", b.Low)
 		p.figure("at most", b.High)
 	}
@@ -216,18 +279,19 @@ func (p proof) rule(kind string, r shownRule) {
 		ages = "every age"
 	}
 	p.item("ages", ages)
-	by := byWords(r.By)
-	if r.BySource != nil {
-		p.sourced("goes by", by, *r.BySource)
-	} else {
-		p.item("goes by", by)
-	}
+	p.weight(r.By, r.BySource)
 	p.figure("hard, at least", r.HardLow)
 	p.figure("usual, from", r.UsualLow)
 	p.figure("usual, to", r.UsualHigh)
 	p.figure("soft, at most", r.SoftHigh)
 	p.figure("hard, at most", r.HardHigh)
 	p.figure("in all, at most", r.TotalMax)
+	p.figure("first dose", r.FirstMax)
+	p.figure("repeat", r.RepeatMax)
+	p.figure("repeat after", r.RepeatAfter)
+	p.figure("in a day", r.DayMax)
+	p.figure("in a course", r.CourseMax)
+	p.figure("runs at most", r.Longest)
 }
 
 func byWords(by string) string {
@@ -256,7 +320,7 @@ func (p proof) standards(list []shownStandard) {
 		}
 		p.item("diluent", diluent)
 		p.item("line", s.Line)
-		p.item("settled for", s.Jurisdiction)
+		p.item("settled for", strings.TrimPrefix(s.Patients+", "+s.SettledFor, ", "))
 	}
 }
 
@@ -267,7 +331,9 @@ func (p proof) stability(list []shownStability) {
 	}
 	p.head("stability")
 	for _, s := range list {
-		p.sourced(s.Time, s.Diluent+", "+s.Storage, s.shownSource)
+		p.sourced(s.Time, s.Diluent+", "+s.Storage+tailed(", in a ", s.Container), s.shownSource)
+		p.figure("  shown from", s.Low)
+		p.figure("  shown up to", s.High)
 	}
 }
 

@@ -29,7 +29,7 @@ func asked(t *testing.T, want int, args ...string) (string, string) {
 // A starterFile is one file of the starter formulary, read by a general TOML
 // reader and nothing of ours.
 type starterFile struct {
-	Sources map[string]struct{ Title, Grade string }
+	Sources map[string]struct{ Title, Grade, Jurisdiction string }
 	Drugs   []map[string]any `toml:"drug"`
 }
 
@@ -104,7 +104,7 @@ func (p *heldPage) sourceText(key string) string {
 	if !ok {
 		p.t.Errorf("%s: the file has no source %q", p.drug, key)
 	}
-	return oneLineOf(fmt.Sprintf("source [%s]: %s", s.Grade, s.Title))
+	return oneLineOf(fmt.Sprintf("source [%s]: %s", strings.TrimSpace(s.Grade+" "+s.Jurisdiction), s.Title))
 }
 
 // hold walks a table of the file.
@@ -141,6 +141,16 @@ func (p *heldPage) marked(name string, on bool, at string) {
 		want = "neat yes, "
 	case name == "neat":
 		want = "neat no, "
+	case name == "multi_dose" && on:
+		want = "multi-dose yes"
+	case name == "frail" && on:
+		want = "the frail"
+	case name == "with_adrenaline" && on:
+		want = "maximum, with adrenaline"
+	case name == "with_adrenaline":
+		want = "maximum, without adrenaline"
+	case name == "multi_dose" || name == "frail":
+		return
 	case name == "show_as" && on:
 		want = "and labels say so"
 	case name == "show_as" || name == "unverified": // sourced looks for the latter
@@ -184,8 +194,12 @@ func (p *heldPage) held(name, text, at string) {
 		want = []string{fmt.Sprintf("%q", text)}
 	case "by":
 		want = []string{"goes by " + byWords(text)}
-	case "jurisdiction":
-		want = []string{"settled for " + text}
+	case "jurisdiction": // of a standard preparation, with or without whom it is for
+		want = []string{"settled for " + text, "settled for adults, " + text, "settled for children, " + text, "settled for newborns, " + text}
+	case "patients":
+		want = []string{"settled for " + text + ", "}
+	case "why":
+		want = []string{"(" + text + ")"}
 	case "atc":
 		want = []string{"ATC code " + text}
 	case "age_from", "age_to":
@@ -235,7 +249,15 @@ func (p *heldPage) sourced(table map[string]any, key, where string) {
 // printed as a high one would be worse than none.
 func nameOnPage(where string) string {
 	key := where[strings.LastIndex(where, ".")+1:]
-	return map[string]string{"hard_low": "hard, at least ", "usual_low": "usual, from ", "usual_high": "usual, to ", "soft_high": "soft, at most ",
+	for tail, name := range map[string]string{"diluent.low": "only from ", "diluent.high": "only up to ", "stability.low": "shown from ",
+		"stability.high": "shown up to ", "local_maximum.per_kg": "by weight ", "local_maximum.total": "in all "} {
+		if strings.HasSuffix(where, tail) {
+			return name
+		}
+	}
+	return map[string]string{"first_max": "first dose ", "repeat_max": "repeat ", "repeat_after": "repeat after ", "day_max": "in a day ",
+		"course_max": "in a course ", "longest": "runs at most ", "overfill": "overfill ", "preserved": "preserved ", "not_for_pump": "not for a pump ",
+		"hard_low": "hard, at least ", "usual_low": "usual, from ", "usual_high": "usual, to ", "soft_high": "soft, at most ",
 		"hard_high": "hard, at most ", "total_max": "in all, at most ", "low": "at least ", "high": "at most ", "assay": "assay, up to ± ",
 		"displacement": "displacement ", "substance": "substance ", "diluent": "diluent ",
 		"never_as_bolus": "never as bolus ", "never_as_infusion": "never as infusion "}[key]
@@ -262,20 +284,22 @@ func TestFormularyDocument(t *testing.T) {
 			t.Errorf("%s is no list: %v", key, doc.Drug[key])
 		}
 	}
-	// Noradrenaline 4, 8 and 16 mg in 50 mL are 80, 160 and 320 micrograms/mL
-	// (Intensive Care Society and Faculty of Intensive Care Medicine, 2016).
+	// Noradrenaline 4, 8 and 16 mg in 50 mL, and 8, 16 and 32 mg in 100 mL, are 80, 160
+	// and 320 micrograms/mL (Intensive Care Society and Faculty of Intensive Care
+	// Medicine, 2016).
 	var got []string
 	for _, s := range doc.Drug["standards"].([]any) {
 		c := s.(map[string]any)["concentration"].(map[string]any)
 		got = append(got, fmt.Sprint(c["exact"], " ", c["unit"]))
 	}
-	if want := []string{"80 microgram/mL", "160 microgram/mL", "320 microgram/mL"}; !slices.Equal(got, want) {
+	three := []string{"80 microgram/mL", "160 microgram/mL", "320 microgram/mL"}
+	if want := slices.Concat(three, three); !slices.Equal(got, want) {
 		t.Errorf("got %q, want %q", got, want)
 	}
 }
 
-// The list is in order of name, one line a drug, and no line is too wide; a
-// class without drugs is an empty list.
+// The list is in order of name, one line a drug, and no line is too wide; where
+// no drug passes the filters it is an empty list.
 func TestFormularyList(t *testing.T) {
 	text, _ := asked(t, exitMade, "list", "--json")
 	var doc struct{ Drugs []listedDrug }
@@ -287,7 +311,8 @@ func TestFormularyList(t *testing.T) {
 	}
 	list, _ := asked(t, exitMade, "list")
 	for _, d := range doc.Drugs {
-		if d.ClassWord == "" || strings.Count(list, "\n"+d.Name+" ") != 1 {
+		// Two blanks end the column: one name may begin another, "dexamethasone phosphate".
+		if d.ClassWord == "" || strings.Count(list, "\n"+d.Name+"  ") != 1 {
 			t.Errorf("%s: got class word %q and not one line", d.Name, d.ClassWord)
 		}
 		for _, f := range d.Flags {
@@ -301,7 +326,7 @@ func TestFormularyList(t *testing.T) {
 			t.Errorf("got a line of %d characters: %s", n, l)
 		}
 	}
-	if none, _ := asked(t, exitMade, "list", "--class", "pro", "--json"); !strings.Contains(none, `"drugs": []`) {
+	if none, _ := asked(t, exitMade, "list", "--class", "pro", "--flag", "HA", "--json"); !strings.Contains(none, `"drugs": []`) {
 		t.Errorf("got %s", none)
 	}
 }

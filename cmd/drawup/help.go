@@ -93,6 +93,8 @@ const helpPrepare = `drawup prepare: plan an order: sheets, labels, pump cards, 
   --infusion-stock   a4-24           stock for infusion labels
   --labels-used      5               labels already taken from the first sheet
   --mono                             for a printer without colours
+  --formulary        my-site.toml    the site's own formulary files, over the starter
+  --approval         approval.toml   who signed for it
   --json                             print plan.json in place of the table
 
 Everything is worked and placed before anything is written: a refusal leaves no
@@ -111,21 +113,43 @@ const helpLabel = `drawup label: one label, at the moment its syringe is filled
                                      time the syringe was filled; now if left out
   --stock            roll-40x15      stock; the roll that fits if left out
   --mono                             for a printer without colours
+  --formulary        my-site.toml    the site's own formulary files, over the starter
+  --approval         approval.toml   who signed for it
   --json                             print the plan of this syringe
 `
 
-const helpFormulary = `drawup formulary: list the drugs that are stored, show one with every source
+const helpFormulary = `drawup formulary: what is stored of each drug, checked, compared, printed, approved
   drawup formulary list --class NMB
   drawup formulary show noradrenaline
+  drawup formulary verify my-site.toml
+  drawup formulary compare starter my-site.toml
 
-  drawup formulary list [flags]     one line a drug
-  drawup formulary show DRUG        all that is stored of one drug, by any of its names
+  list                               one line a drug
+     --class         NMB             of one label class only
+     --flag          "high alert"    with this mark only
+     --jurisdiction  UK              with a source or a standard of this jurisdiction
+  show DRUG                          all that is stored of one drug, by any of its names
+  verify [FILE...]                   hold a formulary against itself: every finding with
+                                     file, line and column; the starter without a file
+  compare OLDER NEWER                what changed, what was loosened first; a file, a folder
+                                     of files, or the word starter
+  print                              a PDF to check and to sign
+  standards                          the standard preparations as a table (CSV)
+  approval                           the file that says who signed, for this digest
+     --signed        "A. Example, pharmacist"   twice: two people
+     --review        2027-12-01      the last day on which it holds
+  schema                             every key that a formulary file may have
 
-  --class            NMB             list one label class only
+  --formulary        my-site.toml    the site's own files over the starter, and tables
+                                     (.csv) of standard preparations; may be typed again
+  --approval         approval.toml   who signed for it
+  --at               2026-12-01      the day, in place of today
+  --out              FILE            where print, standards and approval write
   --json                             the answer as a JSON document
 
 The first line says whether anybody approved the data for use here. What stands
-in double quotes is written the same way in an order.
+in double quotes is written the same way in an order. A site's file that loosens
+a limit of the starter needs a reason beside the figure, or it is refused.
 `
 
 func runHelp(e env, args []string) int {
@@ -203,7 +227,7 @@ func flagsOf(name string) ([]flagSpec, string, bool) {
 	case "flow":
 		return flowFlags(), `drawup flow --volume "1000 mL" --time "8 h" --set "20 drops/mL"`, true
 	case "local":
-		return localFlags(), `drawup local --weight "60 kg" --give "lidocaine with adrenaline 1 %, 10 mL, at most 7 mg/kg"`, true
+		return localFlags(), `drawup local --weight "70 kg" --age "40 years" --give "lidocaine 1 %, 5 mL" --give "bupivacaine 0.25 %, 20 mL"`, true
 	case "accuracy":
 		return accuracyFlags(), `drawup accuracy --barrel "10 mL" --reading "4 mL"`, true
 	case "body":

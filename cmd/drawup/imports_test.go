@@ -21,27 +21,28 @@ func mayImport() map[string][]string {
 		"dilution/refusal", "dilution/syringe"}
 	said := append([]string{"dilution", "dilution/recheck", "labels/gs1"}, plan...)
 	return map[string][]string{
-		"cmd/drawup":           {"*"},
-		"dilution":             plan,
-		"dilution/body":        {"dilution/quantity", "dilution/roots"},
-		"dilution/formulary":   {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
-		"dilution/order":       {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
-		"dilution/pump":        {"dilution/quantity"},
-		"dilution/quantity":    {},
-		"dilution/recheck":     {}, // the second route shares nothing
-		"dilution/refusal":     {},
-		"dilution/roots":       {},
-		"dilution/salts":       {"dilution/quantity"},
-		"dilution/syringe":     {"dilution/quantity", "dilution/roots"},
-		"dilution/tomlfile":    {"dilution/refusal"},
-		"fonts":                {},
-		"labels":               said, // no page, no font, no PDF
-		"labels/gs1":           {},
-		"labels/sheets":        append([]string{"labels"}, said...),
-		"layouts":              {"labels", "labels/gs1", "labels/sheets", "layouts/ink", "fonts", "dilution/refusal", "dilution/recheck"},
-		"layouts/ink":          {},
-		"layouts/pdf":          {"layouts/ink", "fonts"},
-		"layouts/pdf/readback": {"layouts/ink"}, // from tests only
+		"cmd/drawup":                {"*"},
+		"dilution":                  plan,
+		"dilution/body":             {"dilution/quantity", "dilution/roots"},
+		"dilution/formulary":        {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
+		"dilution/formulary/verify": {"dilution/body", "dilution/formulary", "dilution/quantity", "dilution/refusal", "dilution/salts"},
+		"dilution/order":            {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
+		"dilution/pump":             {"dilution/quantity"},
+		"dilution/quantity":         {},
+		"dilution/recheck":          {}, // the second route shares nothing
+		"dilution/refusal":          {},
+		"dilution/roots":            {},
+		"dilution/salts":            {"dilution/quantity"},
+		"dilution/syringe":          {"dilution/quantity", "dilution/roots"},
+		"dilution/tomlfile":         {"dilution/refusal"},
+		"fonts":                     {},
+		"labels":                    said, // no page, no font, no PDF
+		"labels/gs1":                {},
+		"labels/sheets":             append([]string{"labels"}, said...),
+		"layouts":                   {"labels", "labels/gs1", "labels/sheets", "layouts/ink", "fonts", "dilution/refusal", "dilution/recheck"},
+		"layouts/ink":               {},
+		"layouts/pdf":               {"layouts/ink", "fonts"},
+		"layouts/pdf/readback":      {"layouts/ink"}, // from tests only
 	}
 }
 

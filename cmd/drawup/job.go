@@ -39,7 +39,7 @@ type job struct {
 // prepared; the list of reasons holds everything that is wrong.
 func newJob(
 	file string,
-	f *formulary.Formulary,
+	lib library,
 	at func(order.Session) (time.Time, refusal.List),
 	leaveOut map[int]bool,
 	tell progress,
@@ -51,6 +51,8 @@ func newJob(
 	o, faults := order.Read(file, data)
 	when, late := at(o.Session)
 	faults = append(faults, late...)
+	f, lapsed := lib.at(when)
+	faults = append(faults, lapsed...)
 	faults = append(faults, unknownNumbers(o, leaveOut)...)
 	j := &job{file: file, order: o, tell: tell}
 	list, reasons := dilution.NewList(o, f, when, leaveOut, faults)
@@ -117,7 +119,7 @@ func makingOf(
 	style := styleOf(o)
 	return labels.Making{
 		Place: o.Session.Place.Value, Preparer: o.Session.Preparer.Value, Made: labels.Moment(style, at),
-		Formulary: f.Name + " " + f.Version, FormularyDigest: f.Digest[:12], State: f.State(),
+		Formulary: f.Name + " " + f.Version, FormularyDigest: f.Digest[:12], State: f.State(), Approved: f.Approved(),
 		Digest:   hex.EncodeToString(digest)[:8],
 		Serial:   fmt.Sprintf("%05d", binary.BigEndian.Uint32(order[:])%100000),
 		Invented: o.Session.Invented,

@@ -4,7 +4,6 @@ import (
 	"fmt"
 	"io"
 
-	"drawup/dilution/formulary"
 	"drawup/dilution/order"
 	"drawup/dilution/refusal"
 	"drawup/labels"
@@ -37,11 +36,11 @@ func runLabel(e env, args []string) int {
 	if faults.Refused() {
 		return finish(e, f.json, doc, nil, faults)
 	}
-	form, err := formulary.Default()
-	if err != nil {
-		return finish(e, f.json, doc, nil, refusal.List{ourFault(0, err)})
+	lib, faults := libraryOf(f.formulary)
+	if faults.Refused() {
+		return finish(e, f.json, doc, nil, faults)
 	}
-	j, all := newOneJob(f, form, e)
+	j, all := newOneJob(f, lib, e)
 	if all.Refused() {
 		return finish(e, f.json, doc, nil, all)
 	}
@@ -50,7 +49,7 @@ func runLabel(e env, args []string) int {
 
 // newOneJob plans the one syringe and leaves all others alone: their faults do
 // not stop its label.
-func newOneJob(f *paperFlags, form *formulary.Formulary, e env) (*job, refusal.List) {
+func newOneJob(f *paperFlags, lib library, e env) (*job, refusal.List) {
 	probe, faults := readOrder(f.orders[0])
 	if faults.Refused() && len(probe.Syringes) == 0 {
 		return nil, faults
@@ -70,7 +69,7 @@ func newOneJob(f *paperFlags, form *formulary.Formulary, e env) (*job, refusal.L
 			others[s.Number] = true
 		}
 	}
-	return newJob(f.orders[0], form, f.when(e.now), others, silent)
+	return newJob(f.orders[0], lib, f.when(e.now), others, silent)
 }
 
 // writeLabel places the one label and writes it.

@@ -18,7 +18,6 @@ func localFlags() []flagSpec {
 		{"give", "lidocaine 1 %, 10 mL", `a local anaesthetic and its volume, again for each drug and site; ", at most 7 mg/kg" behind it sets its maximum`},
 		{"weight", "72 kg", "body weight, where a maximum is per kg"},
 		{"age", "54 years", "the patient's age, where maxima depend on it"},
-		{"route", "nerve block", "where it goes, as the formulary names it; for the stored maxima"},
 	}
 }
 
@@ -49,7 +48,7 @@ func runLocal(e env, args []string) int {
 	}
 	doc := &localDocument{}
 	r.need("give", "there is nothing to add up")
-	sum := dilution.LocalSum{Weight: readWeight(r), Age: read(r, "age", body.ParseAge), Route: r.texts["route"].text, Style: r.style}
+	sum := dilution.LocalSum{Weight: readWeight(r), Age: read(r, "age", body.ParseAge), Style: r.style}
 	for _, text := range r.texts["give"].all {
 		sum.Given = append(sum.Given, readGiven(r, text))
 	}

@@ -52,7 +52,7 @@ func commands() []command {
 		{"accuracy", "how far off a reading, a chain of steps or a fill may be", runAccuracy},
 		{"body", "ideal, adjusted and lean weight; surface area; a child's weight by age", runBody},
 		{"convert", "units, mmol, per cent, salt and base", runConvert},
-		{"formulary", "list the drugs that are stored, show one with every source", runFormulary},
+		{"formulary", "the stored drugs: list, show, verify, compare, print, approve", runFormulary},
 		{"help", "this list, one command, or one topic", runHelp},
 	}
 }

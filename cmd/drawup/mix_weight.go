@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"io"
 	"math/big"
+	"strings"
 
 	"drawup/dilution"
 	"drawup/dilution/pump"
@@ -22,7 +23,24 @@ type standardJSON struct {
 	ID            string        `json:"id"`
 	Concentration *quantityJSON `json:"concentration"`
 	FlowRate      *quantityJSON `json:"flow_rate"` // that gives each with it
+	Patients      string        `json:"patients"`  // whom its list is for, "" when it does not say
+	Line          string        `json:"line"`
+	Jurisdiction  string        `json:"jurisdiction"`
 	Source        string        `json:"source"`
+}
+
+// whose is whom and what the standard is for, in words.
+func (s *standardJSON) whose() string {
+	var out []string
+	for _, x := range []string{s.Patients, s.Jurisdiction} {
+		if x != "" {
+			out = append(out, x)
+		}
+	}
+	if s.Line != "any" && s.Line != "" {
+		out = append(out, s.Line+" line")
+	}
+	return strings.Join(out, ", ")
 }
 
 // readFinal is --final, or the volume of the rule that is named.
@@ -110,8 +128,15 @@ func (m mixture) beside(r *request, d *mixDocument, limits dilution.QuickLimits)
 		r.add(faultOf("--each", err))
 		return ""
 	}
-	d.Nearest = &standardJSON{s.ID, concentrationJSON(r.style, c), flowRateJSON(r.style, flow), s.Source.Title}
-	return fmt.Sprintf("the nearest standard preparation, %s (%s), gives the same at %s", s.ID, shown(d.Nearest.Concentration), shown(d.Nearest.FlowRate))
+	source := s.Source.Title
+	if s.Unverified {
+		source += " (unverified)"
+	}
+	d.Nearest = &standardJSON{
+		s.ID, concentrationJSON(r.style, c), flowRateJSON(r.style, flow), s.Patients, s.Line, s.Jurisdiction, source,
+	}
+	return fmt.Sprintf("the nearest standard preparation, %s (%s; %s), gives the same at %s",
+		s.ID, shown(d.Nearest.Concentration), d.Nearest.whose(), shown(d.Nearest.FlowRate))
 }
 
 // tell writes what each 1 mL/h gives, and the standard beside it.
@@ -121,6 +146,7 @@ func (x *weightMadeJSON) tell(w io.Writer) {
 	}
 	line(w, "each 1 mL/h gives", shown(x.Each))
 	if x.Nearest != nil {
-		line(w, "nearest standard", fmt.Sprintf("%s, %s; the same dose at %s", x.Nearest.ID, shown(x.Nearest.Concentration), shown(x.Nearest.FlowRate)))
+		line(w, "nearest standard", fmt.Sprintf("%s, %s; the same dose at %s (%s)", x.Nearest.ID, shown(x.Nearest.Concentration),
+			shown(x.Nearest.FlowRate), x.Nearest.whose()))
 	}
 }

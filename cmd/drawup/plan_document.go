@@ -146,7 +146,7 @@ func planOf(j *job) *planDocument {
 func syringePlan(p dilution.Plan, serial, code string) syringeJSON {
 	s, m := p.Style, p.Mixture
 	out := syringeJSON{
-		Number: p.Number, Patient: p.Patient.ID.Value, Drug: p.Drug.LabelName(s), ATC: p.Drug.ATC,
+		Number: p.Number, Patient: p.Patient.ID.Value, Drug: p.Name, ATC: p.Drug.ATC,
 		Class: p.Drug.Class, Presentation: p.Presentation.ID, Route: p.Route, Method: m.Method.String(),
 		Diluent: m.Diluent, MixedWith: m.AddFluid, Containers: m.Containers,
 		Strength: concentrationJSON(s, m.Strength), DrugVolume: volumeJSON(s, m.DrugVolume),

@@ -12,7 +12,6 @@ import (
 
 	"github.com/spf13/pflag"
 
-	"drawup/dilution/formulary"
 	"drawup/dilution/order"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
@@ -32,6 +31,7 @@ type paperFlags struct {
 	json, help    bool
 	leaveOut      []string
 	syringe       int
+	formulary     formularyFlags
 	orders        []string
 }
 
@@ -45,6 +45,8 @@ func readPaperFlags(name string, args []string) (*paperFlags, refusal.List) {
 	f.set.Usage = func() {}
 	f.set.StringVar(&f.at, "at", "", "time prepared")
 	f.set.StringVar(&f.stock, "stock", "", "stock of blank labels")
+	f.set.StringSliceVar(&f.formulary.files, "formulary", nil, "the site's own formulary files")
+	f.set.StringVar(&f.formulary.approval, "approval", "", "who signed for the formulary")
 	f.set.BoolVar(&f.mono, "mono", false, "black and white printer")
 	f.set.BoolVar(&f.json, "json", false, "")
 	f.set.BoolVarP(&f.help, "help", "h", false, "")
@@ -97,11 +99,11 @@ func runPrepare(e env, args []string) int {
 	if faults.Refused() {
 		return finish(e, f.json, doc, nil, faults)
 	}
-	form, err := formulary.Default()
-	if err != nil {
-		return finish(e, f.json, doc, nil, refusal.List{ourFault(0, err)})
+	lib, faults := libraryOf(f.formulary)
+	if faults.Refused() {
+		return finish(e, f.json, doc, nil, faults)
 	}
-	jobs, all := f.work(form, leaveOut, progressOn(e))
+	jobs, all := f.work(lib, leaveOut, progressOn(e))
 	if all.Refused() {
 		return finish(e, f.json, doc, nil, all)
 	}
@@ -167,11 +169,11 @@ func (f *paperFlags) numbers() (map[int]bool, refusal.List) {
 }
 
 // work plans every order; all reasons of all orders come back.
-func (f *paperFlags) work(form *formulary.Formulary, leaveOut map[int]bool, tell progress) ([]*job, refusal.List) {
+func (f *paperFlags) work(lib library, leaveOut map[int]bool, tell progress) ([]*job, refusal.List) {
 	var jobs []*job
 	var all refusal.List
 	for _, path := range f.orders {
-		j, reasons := newJob(path, form, f.when(nil), leaveOut, tell)
+		j, reasons := newJob(path, lib, f.when(nil), leaveOut, tell)
 		all = append(all, reasons...)
 		jobs = append(jobs, j)
 	}

@@ -59,7 +59,7 @@ func cellsOf(p dilution.Plan, f labels.Facts) []string {
 	}
 	holds := f.Text(recheck.AmountInSyringe) + ", " + f.Text(recheck.Concentration)
 	return []string{
-		fmt.Sprint(p.Number), p.Patient.ID.Value, p.Drug.LabelName(p.Style),
+		fmt.Sprint(p.Number), p.Patient.ID.Value, p.Name,
 		f.Text(recheck.DrugVolume), to, holds, last,
 	}
 }

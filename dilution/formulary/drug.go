@@ -27,6 +27,14 @@ var flags = []string{
 // containers are what a presentation may come in.
 var containers = []string{"ampoule", "vial", "syringe", "bag", "bottle"}
 
+// Flags lists the marks that a drug may carry.
+func Flags() []string { return append([]string{}, flags...) }
+
+// exclusions are the kinds of reason why a diluent must not be used.
+var exclusions = []string{
+	"precipitation", "degradation", "emulsion cracking", "adsorption", "haemolysis", "not listed",
+}
+
 // atcPattern is the shape of an ATC code of the fifth level.
 var atcPattern = regexp.MustCompile(`^[A-Z]\d{2}[A-Z]{2}\d{2}$`)
 
@@ -35,6 +43,7 @@ func (r *reader) drug(rec drugRecord, i int) Drug {
 	d := Drug{
 		Name: rec.Name, names: rec.Names, Also: rec.Also, ATC: rec.ATC, Class: rec.Class,
 		CountedAs: rec.CountedAs, ShowAs: rec.ShowAs, Flags: rec.Flags, Origin: r.text.Name, Raw: r.text.Data,
+		Formula: rec.Formula, Substitutes: rec.Substitutes, IonsPerFormula: max(1, rec.IonsPerFormula),
 		Pos: r.places.Of("drug", i),
 	}
 	r.identity(&d, rec, i)
@@ -56,6 +65,12 @@ func (r *reader) drug(rec drugRecord, i int) Drug {
 	}
 	for j, row := range rec.Infusions {
 		d.Rates = append(d.Rates, r.rateRule(row, "drug", i, "infusion", j))
+	}
+	for j, row := range rec.LocalMaxima {
+		d.LocalMaxima = append(d.LocalMaxima, r.localMaximum(row, d.Kind, "drug", i, "local_maximum", j))
+	}
+	for j, t := range rec.TakenAway {
+		d.TakenAway = append(d.TakenAway, r.takenAway(t, "drug", i, "taken_away", j))
 	}
 	for j, s := range rec.Standards {
 		d.Standards = append(d.Standards, r.standard(s, "drug", i, "standard", j))
@@ -114,7 +129,10 @@ func (r *reader) salt(rec *saltRecord, path ...any) *Salt {
 		r.fault(refusal.KeyMissing, "", "the name of the salt", "the salt has no name", path...)
 	}
 	s := r.source(rec.Source, path...)
-	return &Salt{Name: rec.Name, PerMg: a, Source: s, Unverified: rec.Unverified || s.Grade == "C"}
+	return &Salt{
+		Name: rec.Name, PerMg: a, Formula: rec.Formula, Holds: max(1, rec.Holds),
+		Source: s, Unverified: rec.Unverified || s.Grade == "C", Pos: r.places.Of(path...),
+	}
 }
 
 // parseFactor reads "4 mmol/g".
@@ -142,11 +160,18 @@ func parseMinutes(s string) (int64, error) {
 	return n * factor, nil
 }
 
+// parseSpan reads a time as a duration.
+func parseSpan(s string) (time.Duration, error) {
+	m, err := parseMinutes(s)
+	return time.Duration(m) * time.Minute, err
+}
+
 func (r *reader) presentation(rec presentationRecord, kind quantity.Kind, path ...any) Presentation {
 	p := Presentation{
 		ID: rec.ID, Container: rec.Container, Form: rec.Form, AddFluids: rec.AddFluids,
-		SecondName: rec.SecondName, Uses: rec.Uses, Neat: rec.Neat, Source: r.source(rec.Source, path...),
-		Pos: r.places.Of(path...),
+		SecondName: rec.SecondName, Uses: rec.Uses, Routes: rec.Routes, Neat: rec.Neat, MultiDose: rec.MultiDose,
+		Source: r.source(rec.Source, path...),
+		Pos:    r.places.Of(path...),
 	}
 	p.Unverified = rec.Unverified || p.Source.Grade == "C"
 	at := func(key string) []any { return append(append([]any{}, path...), key) }
@@ -177,6 +202,9 @@ func (r *reader) presentation(rec presentationRecord, kind quantity.Kind, path .
 			r.fault(refusal.ValueUnknown, u, "bolus or infusion", "the use is not known", at("uses")...)
 		}
 	}
+	p.Preserved = r.note(rec.Preserved, at("preserved")...)
+	p.NotForPump = r.note(rec.NotForPump, at("not_for_pump")...)
+	p.Overfill = figure(r, rec.Overfill, quantity.ParseVolume, at("overfill")...)
 	p.Diluents = r.diluents(rec.Diluents, at("diluent"))
 	p.Forbidden = r.diluents(rec.Forbidden, at("forbidden_diluent"))
 	for j := range rec.Notes {
@@ -209,6 +237,7 @@ func (r *reader) contents(p *Presentation, rec presentationRecord, at func(strin
 		s := r.source(rec.Displacement.Source, at("displacement")...)
 		p.Displacement = Figure[quantity.Volume]{
 			Text: "negligible", Source: s, Unverified: rec.Displacement.Unverified || s.Grade == "C",
+			Jurisdiction: s.Jurisdiction, Pos: r.places.Of(at("displacement")...),
 		}
 		p.Negligible, p.Volume = true, added
 		return
@@ -222,14 +251,20 @@ func (r *reader) contents(p *Presentation, rec presentationRecord, at func(strin
 func (r *reader) diluents(list []diluentRecord, path []any) []Diluent {
 	var out []Diluent
 	for j, d := range list {
+		at := func(keys ...any) []any { return append(append(append([]any{}, path...), j), keys...) }
 		if d.Name == "" {
-			r.fault(refusal.KeyMissing, "", "the name of a fluid", "a diluent has no name",
-				append(append([]any{}, path...), j)...)
+			r.fault(refusal.KeyMissing, "", "the name of a fluid", "a diluent has no name", at()...)
 		}
-		s := r.source(d.Source, append(append([]any{}, path...), j)...)
+		if d.Why != "" && !contains(exclusions, d.Why) {
+			r.fault(refusal.ValueUnknown, d.Why, strings.Join(exclusions, ", "),
+				"the kind of exclusion is not known", at("why")...)
+		}
+		s := r.source(d.Source, at()...)
 		out = append(out, Diluent{
-			Name: d.Name, Reason: d.Reason,
-			Source: s, Unverified: d.Unverified || s.Grade == "C",
+			Name: d.Name, Why: d.Why, Reason: d.Reason,
+			Low:    figure(r, d.Low, quantity.ParseConcentration, at("low")...),
+			High:   figure(r, d.High, quantity.ParseConcentration, at("high")...),
+			Source: s, Unverified: d.Unverified || s.Grade == "C", Pos: r.places.Of(at()...),
 		})
 	}
 	return out
@@ -237,7 +272,7 @@ func (r *reader) diluents(list []diluentRecord, path []any) []Diluent {
 
 func (r *reader) bounds(rec concentrationRecord, path ...any) Bounds {
 	at := func(key string) []any { return append(append([]any{}, path...), key) }
-	b := Bounds{Use: rec.Use, Line: rec.Line,
+	b := Bounds{Use: rec.Use, Line: rec.Line, Routes: rec.Routes, Pos: r.places.Of(path...),
 		Low:  figure(r, rec.Low, quantity.ParseConcentration, at("low")...),
 		High: figure(r, rec.High, quantity.ParseConcentration, at("high")...)}
 	if !contains([]string{"bolus", "infusion"}, b.Use) || !contains([]string{"any", "peripheral", "central"}, b.Line) {
@@ -260,8 +295,9 @@ func (r *reader) standard(rec standardRecord, path ...any) Standard {
 	}
 	s := r.source(rec.Source, path...)
 	return Standard{
-		ID: rec.ID, Amount: a, Volume: v, Diluent: rec.Diluent, Line: rec.Line,
+		ID: rec.ID, Mix: rec.Mix, Amount: a, Volume: v, Diluent: rec.Diluent, Line: rec.Line, Patients: rec.Patients,
 		Jurisdiction: rec.Jurisdiction, Source: s, Unverified: rec.Unverified || s.Grade == "C",
+		Pos: r.places.Of(path...),
 	}
 }
 
@@ -273,8 +309,11 @@ func (r *reader) stability(rec stabilityRecord, path ...any) Stability {
 	}
 	s := r.source(rec.Source, path...)
 	return Stability{
-		Diluent: rec.Diluent, Storage: rec.Storage, Minutes: m, Text: rec.Hours, Source: s,
-		Unverified: rec.Unverified || s.Grade == "C",
+		Diluent: rec.Diluent, Storage: rec.Storage, Container: rec.Container,
+		Low:     figure(r, rec.Low, quantity.ParseConcentration, append(append([]any{}, path...), "low")...),
+		High:    figure(r, rec.High, quantity.ParseConcentration, append(append([]any{}, path...), "high")...),
+		Minutes: m, Text: rec.Hours, Source: s,
+		Unverified: rec.Unverified || s.Grade == "C", Pos: r.places.Of(path...),
 	}
 }
 

@@ -9,6 +9,7 @@ package formulary
 import (
 	"sort"
 	"strings"
+	"time"
 
 	"drawup/dilution/body"
 	"drawup/dilution/quantity"
@@ -17,18 +18,22 @@ import (
 
 // A Source is where a figure comes from.
 type Source struct {
-	Key   string // as in the file
-	Title string // spelled out
-	Grade string // A, B, C, or P for common practice without a source
+	Key          string // as in the file
+	Title        string // spelled out
+	Grade        string // A, B, C, or P for common practice without a source
+	Jurisdiction string // "UK", "US" …, "international"; "" when the file does not say
 }
 
 // A Figure is one figure with its source and place. Text is as written.
 type Figure[T any] struct {
-	Value      T
-	Text       string
-	Source     Source
-	Unverified bool
-	Pos        refusal.Pos
+	Value        T
+	Text         string
+	Source       Source
+	Jurisdiction string // of the figure, else of its source
+	Unverified   bool
+	VerifiedBy   string // who held it against the source, and when; "" in the starter
+	Reason       string // in a site's file: why it is looser than the base
+	Pos          refusal.Pos
 }
 
 // Given reports whether the file has the figure at all.
@@ -39,6 +44,7 @@ type Note struct {
 	Text       string
 	Source     Source
 	Unverified bool
+	Pos        refusal.Pos
 }
 
 // A Drug is one substance, in one salt where the salt matters.
@@ -55,15 +61,21 @@ type Drug struct {
 	Cautions        []Note
 	NeverAsInfusion *Note
 	NeverAsBolus    *Note
+	Formula         string   // chemical, of what is counted; "" when not stored
+	Substitutes     []string // names of drugs that a refusal may point to
 	Substance       Figure[Factor]
+	IonsPerFormula  int64 // of the ion that Substance counts; 1 unless the file says more
 	Salt            *Salt
 	Presentations   []Presentation
 	Bounds          []Bounds
 	Doses           []Rule[quantity.Dose]
 	Rates           []Rule[quantity.DoseRate]
+	LocalMaxima     []LocalMaximum
 	Standards       []Standard
 	Stability       []Stability
+	TakenAway       []TakenAway
 	Origin          string // name of the file that holds it
+	From            string // name and version of the formulary that holds it
 	Raw             []byte // that file, for the second route
 	Pos             refusal.Pos
 }
@@ -76,14 +88,17 @@ type Factor struct{ PerGram quantity.Amount }
 type Salt struct {
 	Name       string
 	PerMg      quantity.Amount
+	Formula    string // chemical, its parts parted by points
+	Holds      int64  // molecules of what is counted in one formula
 	Source     Source
 	Unverified bool
+	Pos        refusal.Pos
 }
 
 // A Presentation is an ampoule, vial or syringe as supplied.
 type Presentation struct {
 	ID           string
-	Container    string // ampoule, vial, syringe
+	Container    string // ampoule, vial, syringe, bag, bottle
 	Form         string // solution, emulsion, powder
 	Amount       quantity.Amount
 	Volume       quantity.Volume // of a powder: volume after mixing, not given when unknown
@@ -98,7 +113,12 @@ type Presentation struct {
 	Unverified   bool
 	AgeFrom      body.Age // not for younger patients; not given: no bound
 	Uses         []string // bolus, infusion
+	Routes       []string // that it is bound to; none: as the rows of limits say
 	Neat         bool
+	MultiDose    bool
+	Preserved    *Note // never epidural or intrathecal
+	NotForPump   *Note
+	Overfill     Figure[quantity.Volume] // a note, never counted
 	Diluents     []Diluent
 	Forbidden    []Diluent
 	Notes        []Note
@@ -114,17 +134,22 @@ func (p Presentation) For(use string) bool { return contains(p.Uses, use) }
 // A Diluent is a fluid that may, or may not, be used with a presentation.
 type Diluent struct {
 	Name       string
-	Reason     string
+	Why        string // kind of the exclusion: precipitation, degradation …
+	Reason     string // the exclusion in a sentence
+	Low, High  Figure[quantity.Concentration]
 	Source     Source
 	Unverified bool
+	Pos        refusal.Pos
 }
 
 // Bounds are the concentrations that a syringe may hold.
 type Bounds struct {
-	Use  string // bolus, infusion
-	Line string // any, peripheral, central
-	Low  Figure[quantity.Concentration]
-	High Figure[quantity.Concentration]
+	Use    string   // bolus, infusion
+	Line   string   // any, peripheral, central
+	Routes []string // none: every route that no other row of this use names
+	Low    Figure[quantity.Concentration]
+	High   Figure[quantity.Concentration]
+	Pos    refusal.Pos
 }
 
 // A Rule is one row of dose limits, for boluses in doses, for infusions in
@@ -134,6 +159,7 @@ type Rule[T any] struct {
 	Routes    []string
 	AgeFrom   body.Age // not given: from birth
 	AgeTo     body.Age // not included; not given: no end
+	Frail     bool     // for the frail alone
 	By        body.Kind
 	BySource  Source
 	HardLow   Figure[T]
@@ -141,8 +167,15 @@ type Rule[T any] struct {
 	UsualHigh Figure[T]
 	SoftHigh  Figure[T]
 	HardHigh  Figure[T]
-	TotalMax  Figure[quantity.Amount] // boluses only
-	Pos       refusal.Pos
+	TotalMax  Figure[quantity.Amount] // boluses only: in one dose
+	FirstMax  Figure[T]               // boluses only: the first dose
+	RepeatMax Figure[T]               // boluses only: each later one
+
+	RepeatAfter Figure[time.Duration] // boluses only
+	DayMax      Figure[quantity.Dose] // all doses in 24 hours
+	CourseMax   Figure[quantity.Dose] // all doses together
+	Longest     Figure[time.Duration] // infusions only
+	Pos         refusal.Pos
 }
 
 // Fits reports whether the rule covers a patient of this age. A rule without
@@ -166,29 +199,38 @@ func (r Rule[T]) Ages() string {
 	if r.AgeTo.Given() {
 		parts = append(parts, "under "+r.AgeTo.String())
 	}
+	if r.Frail {
+		parts = append(parts, "the frail")
+	}
 	return strings.Join(parts, ", ")
 }
 
 // A Standard is a concentration that a list or a site has settled.
 type Standard struct {
 	ID           string
+	Mix          string // as written
 	Amount       quantity.Amount
 	Volume       quantity.Volume
 	Diluent      string // "" when neat
 	Line         string
+	Patients     string // adults, children, newborns; "" when the list does not say
 	Jurisdiction string
 	Source       Source
 	Unverified   bool
+	Pos          refusal.Pos
 }
 
 // A Stability is how long a preparation may be kept.
 type Stability struct {
 	Diluent    string // a diluent, "neat" or "any"
 	Storage    string // room, refrigerator
+	Container  string // syringe, bag, glass; "": any
+	Low, High  Figure[quantity.Concentration]
 	Minutes    int64
 	Text       string
 	Source     Source
 	Unverified bool
+	Pos        refusal.Pos
 }
 
 // A Formulary is a set of drugs with a name, a version and a digest.
@@ -196,11 +238,16 @@ type Formulary struct {
 	Name    string
 	Version string
 	Digest  string // SHA-256 of all files, hexadecimal
-	drugs   []Drug
-}
+	Base    string // name and version of the formulary that this one builds on; "" for none
+	Mixes   []Mix
+	Never   []NeverMix
+	TallMan []TallMan
 
-// State is the approval line that every sheet carries.
-func (f *Formulary) State() string { return "starter formulary, not approved for use here" }
+	drugs    []Drug
+	approval *Approval // nil when nobody approved it
+	basePos  refusal.Pos
+	lapsed   string // why an approval that was given does not hold
+}
 
 // Drugs is all drugs in order of name.
 func (f *Formulary) Drugs() []Drug { return f.drugs }
@@ -313,4 +360,15 @@ func contains(list []string, s string) bool {
 		}
 	}
 	return false
+}
+
+// allNames is every name that finds the drug, each once.
+func (d Drug) allNames() []string {
+	out := append([]string{d.Name}, d.Also...)
+	for _, style := range []string{"uk", "us", "si"} {
+		if n := d.names[style]; n != "" && !contains(out, n) {
+			out = append(out, n)
+		}
+	}
+	return out
 }

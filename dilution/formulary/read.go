@@ -1,12 +1,14 @@
 package formulary
 
 import (
+	"cmp"
 	"crypto/sha256"
 	"embed"
 	"encoding/hex"
 	"errors"
 	"fmt"
 	"io/fs"
+	"regexp"
 	"sort"
 
 	"drawup/dilution/quantity"
@@ -71,6 +73,7 @@ func Read(texts ...Text) (*Formulary, refusal.List) {
 	f.Digest = hex.EncodeToString(sum.Sum(nil))
 	sort.SliceStable(f.drugs, func(i, j int) bool { return f.drugs[i].Name < f.drugs[j].Name })
 	all = append(all, repeatedNames(f)...)
+	all = append(all, pairFaults(f)...)
 	return f, all
 }
 
@@ -79,7 +82,7 @@ func repeatedNames(f *Formulary) refusal.List {
 	var out refusal.List
 	seen := map[string]string{}
 	for _, d := range f.drugs {
-		for _, n := range append([]string{d.Name}, d.Also...) {
+		for _, n := range d.allNames() {
 			if other, ok := seen[n]; ok {
 				out = append(out, refusal.Reason{
 					Code: refusal.KeyRepeated, Severity: refusal.Refuse,
@@ -95,6 +98,9 @@ func repeatedNames(f *Formulary) refusal.List {
 	}
 	return out
 }
+
+// jurisdictionPattern is the shape of a jurisdiction.
+var jurisdictionPattern = regexp.MustCompile(`^([A-Z]{2}|international)$`)
 
 // reader turns one file into drugs and keeps the faults it meets.
 type reader struct {
@@ -129,7 +135,11 @@ func (r *reader) file(f *Formulary) {
 		return
 	}
 	if f.Name == "" {
-		f.Name, f.Version = rec.Name, rec.Version
+		f.Name, f.Version, f.Base = rec.Name, rec.Version, rec.Base
+		f.basePos = places.Of("base")
+	}
+	if rec.Base != f.Base {
+		r.fault(refusal.KeyConflict, rec.Base, f.Base, "the files of one formulary must build on the same base", "base")
 	}
 	if rec.Name == "" || rec.Name != f.Name || rec.Version != f.Version {
 		r.fault(refusal.KeyConflict, rec.Name+" "+rec.Version, f.Name+" "+f.Version,
@@ -137,8 +147,11 @@ func (r *reader) file(f *Formulary) {
 	}
 	r.readSources(rec.Sources)
 	for i, d := range rec.Drugs {
-		f.drugs = append(f.drugs, r.drug(d, i))
+		one := r.drug(d, i)
+		one.From = rec.Name + " " + rec.Version
+		f.drugs = append(f.drugs, one)
 	}
+	r.readPairs(f, rec)
 	r.unusedSources()
 }
 
@@ -149,7 +162,11 @@ func (r *reader) readSources(list map[string]sourceRecord) {
 			r.fault(refusal.KeyMissing, s.Grade, "a title and a grade A, B, C or P",
 				"the source "+key+" is not spelled out", "sources", key)
 		}
-		r.sources[key] = Source{Key: key, Title: s.Title, Grade: s.Grade}
+		if s.Jurisdiction != "" && !jurisdictionPattern.MatchString(s.Jurisdiction) {
+			r.fault(refusal.ValueUnknown, s.Jurisdiction, `two capital letters such as "UK", or "international"`,
+				"the jurisdiction of the source "+key+" is not one", "sources", key)
+		}
+		r.sources[key] = Source{Key: key, Title: s.Title, Grade: s.Grade, Jurisdiction: s.Jurisdiction}
 	}
 }
 
@@ -189,7 +206,7 @@ func (r *reader) note(t *textRecord, path ...any) *Note {
 		r.fault(refusal.KeyMissing, "", "a sentence", "the text is empty", path...)
 	}
 	s := r.source(t.Source, path...)
-	return &Note{Text: t.Text, Source: s, Unverified: t.Unverified || s.Grade == "C"}
+	return &Note{Text: t.Text, Source: s, Unverified: t.Unverified || s.Grade == "C", Pos: r.places.Of(path...)}
 }
 
 // figure reads one figure with parse; a nil record is a figure not given.
@@ -202,9 +219,14 @@ func figure[T any](r *reader, rec *figureRecord, parse func(string) (T, error), 
 		r.badText(rec.Value, err, path...)
 	}
 	s := r.source(rec.Source, path...)
+	if rec.Unverified && rec.VerifiedBy != "" {
+		r.fault(refusal.KeyConflict, "unverified, and verified by "+rec.VerifiedBy, "one of the two",
+			"the figure is said to be verified and not to be", path...)
+	}
 	return Figure[T]{
-		Value: v, Text: rec.Value, Source: s, Unverified: rec.Unverified || s.Grade == "C",
-		Pos: r.places.Of(path...),
+		Value: v, Text: rec.Value, Source: s, Jurisdiction: cmp.Or(rec.Jurisdiction, s.Jurisdiction),
+		Unverified: rec.VerifiedBy == "" && (rec.Unverified || s.Grade == "C"), VerifiedBy: rec.VerifiedBy,
+		Reason: rec.Reason, Pos: r.places.Of(path...),
 	}
 }
 

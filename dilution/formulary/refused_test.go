@@ -16,8 +16,43 @@ import (
 // Every fault of a formulary is told at once, each on its line. The expected
 // codes stand in the files, written by hand.
 func TestRefusedFormularies(t *testing.T) {
-	files, err := filepath.Glob("../../testdata/refused/formulary/*.toml")
-	if err != nil || len(files) < 3 {
+	refusedFiles(t, "formulary", func(x formulary.Text) refusal.List {
+		_, list := formulary.Read(x)
+		return list
+	})
+}
+
+// A site's file that loosens the starter in silence, and one that builds on
+// another formulary. A file that drops a record loosens many entries on one
+// line; each line and code counts once.
+func TestRefusedSites(t *testing.T) {
+	refusedFiles(t, "site", func(x formulary.Text) refusal.List {
+		_, list := formulary.Layer(starter(t), x)
+		seen := map[string]bool{}
+		return slices.DeleteFunc(list, func(r refusal.Reason) bool {
+			key := fmt.Sprint(r.Pos.Line, r.Code)
+			if seen[key] {
+				return true
+			}
+			seen[key] = true
+			return false
+		})
+	})
+}
+
+func TestRefusedApprovals(t *testing.T) {
+	refusedFiles(t, "approval", func(x formulary.Text) refusal.List {
+		_, list := formulary.ReadApproval(x)
+		return list
+	})
+}
+
+// refusedFiles reads every file of a folder and holds the reasons against the
+// codes at the ends of its lines.
+func refusedFiles(t *testing.T, folder string, read func(formulary.Text) refusal.List) {
+	t.Helper()
+	files, err := filepath.Glob("../../testdata/refused/" + folder + "/*.toml")
+	if err != nil || len(files) < 2 {
 		t.Fatalf("got %d files (%v)", len(files), err)
 	}
 	for _, file := range files {
@@ -26,7 +61,7 @@ func TestRefusedFormularies(t *testing.T) {
 			if err != nil {
 				t.Fatal(err)
 			}
-			_, list := formulary.Read(formulary.Text{Name: file, Data: data})
+			list := read(formulary.Text{Name: file, Data: data})
 			var got, want []string
 			for _, r := range list {
 				got = append(got, fmt.Sprintf("%d: %s", r.Pos.Line, r.Code))

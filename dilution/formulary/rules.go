@@ -15,7 +15,14 @@ func (r *reader) doseRule(rec doseRecord, path ...any) Rule[quantity.Dose] {
 		UsualHigh: figure(r, rec.UsualHigh, quantity.ParseDose, at("usual_high")...),
 		SoftHigh:  figure(r, rec.SoftHigh, quantity.ParseDose, at("soft_high")...),
 		HardHigh:  figure(r, rec.HardHigh, quantity.ParseDose, at("hard_high")...),
-		TotalMax:  figure(r, rec.TotalMax, quantity.ParseAmount, at("total_max")...)}
+		TotalMax:  figure(r, rec.TotalMax, quantity.ParseAmount, at("total_max")...),
+		FirstMax:  figure(r, rec.FirstMax, quantity.ParseDose, at("first_max")...),
+		RepeatMax: figure(r, rec.RepeatMax, quantity.ParseDose, at("repeat_max")...),
+		DayMax:    figure(r, rec.DayMax, quantity.ParseDose, at("day_max")...),
+		CourseMax: figure(r, rec.CourseMax, quantity.ParseDose, at("course_max")...),
+
+		RepeatAfter: figure(r, rec.RepeatAfter, parseSpan, at("repeat_after")...),
+		Frail:       rec.Frail}
 	rule.By, rule.BySource = r.scalar(rec.By, rec.BySource, at("by"))
 	inOrder(r, rule, quantity.Dose.Cmp, path)
 	return rule
@@ -29,7 +36,10 @@ func (r *reader) rateRule(rec infusionRecord, path ...any) Rule[quantity.DoseRat
 		UsualLow:  figure(r, rec.UsualLow, quantity.ParseDoseRate, at("usual_low")...),
 		UsualHigh: figure(r, rec.UsualHigh, quantity.ParseDoseRate, at("usual_high")...),
 		SoftHigh:  figure(r, rec.SoftHigh, quantity.ParseDoseRate, at("soft_high")...),
-		HardHigh:  figure(r, rec.HardHigh, quantity.ParseDoseRate, at("hard_high")...)}
+		HardHigh:  figure(r, rec.HardHigh, quantity.ParseDoseRate, at("hard_high")...),
+		CourseMax: figure(r, rec.CourseMax, quantity.ParseDose, at("course_max")...),
+		Longest:   figure(r, rec.Longest, parseSpan, at("longest")...),
+		Frail:     rec.Frail}
 	rule.By, rule.BySource = r.scalar(rec.By, rec.BySource, at("by"))
 	inOrder(r, rule, quantity.DoseRate.Cmp, path)
 	return rule

@@ -51,6 +51,9 @@ type Site struct {
 	Tolerance     Field[quantity.Percent] // how far a graduation may move a volume (R8)
 	PumpStep      Field[quantity.FlowRate]
 	Barrels       []Field[quantity.Volume] // syringe sizes in stock
+	Jurisdiction  Field[string]            // whose standard preparations are used; any when not given
+	TallMan       Field[string]            // whose tall-man list names are printed by; none when not given
+	DualNames     bool                     // the other name follows in brackets
 }
 
 // A Patient is whom the syringes are for.
@@ -62,6 +65,7 @@ type Patient struct {
 	Weight    Field[quantity.BodyWeight]
 	Weighed   Field[string] // when or how, in the user's words
 	Estimated bool          // the weight is an estimate
+	Frail     bool          // rows of limits for the frail go before the others
 	Pos       refusal.Pos
 }
 

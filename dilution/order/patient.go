@@ -20,6 +20,7 @@ func (r *reader) patient(i int, p patientRecord) {
 		Weight:    read(r, p.Weight, quantity.ParseBodyWeight, at(path, "weight")),
 		Weighed:   r.text(r.loose(p.Weighed, at(path, "weighed")), at(path, "weighed")),
 		Estimated: p.Estimated,
+		Frail:     p.Frail,
 		Pos:       r.places.Of(path...),
 	}
 	r.required(out.ID.Given(), path, "id", fmt.Sprintf("patient %d of the order", i+1), `id = "A"`)

@@ -215,6 +215,10 @@ func (r *reader) site(s siteRecord) {
 		Tolerance:     read(r, s.Tolerance, quantity.ParsePercent, at(p, "tolerance")),
 		PumpStep:      read(r, s.PumpStep, quantity.ParseFlowRate, at(p, "pump_step")),
 	}
+	site := &r.order.Site
+	site.Jurisdiction = r.text(s.Jurisdiction, at(p, "jurisdiction"))
+	site.TallMan = r.text(s.TallMan, at(p, "tall_man"))
+	site.DualNames = s.DualNames
 	for i, text := range s.Barrels {
 		r.order.Site.Barrels = append(r.order.Site.Barrels, read(r, text, quantity.ParseVolume, at(p, "barrels", i)))
 	}

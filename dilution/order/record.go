@@ -27,6 +27,9 @@ type siteRecord struct {
 	Tolerance     string   `toml:"tolerance"`
 	PumpStep      string   `toml:"pump_step"`
 	Barrels       []string `toml:"barrels"`
+	Jurisdiction  string   `toml:"jurisdiction"`
+	TallMan       string   `toml:"tall_man"`
+	DualNames     bool     `toml:"dual_names"`
 }
 
 type patientRecord struct {
@@ -38,6 +41,7 @@ type patientRecord struct {
 	Weight    string           `toml:"weight"`
 	Weighed   any              `toml:"weighed"`
 	Estimated bool             `toml:"estimated"`
+	Frail     bool             `toml:"frail"`
 	Syringes  []syringeRecord  `toml:"syringe"`
 	Infusions []infusionRecord `toml:"infusion"`
 }
@@ -85,8 +89,8 @@ func knownKeys() []string {
 		names []string
 	}{
 		{"session", []string{"place", "date", "prepared", "zone", "preparer", "invented"}},
-		{"site", []string{"style", "bolus_use_by", "infusion_use_by", "smallest_volume", "tolerance", "pump_step", "barrels"}},
-		{"patient", []string{"id", "name", "sex", "age", "height", "weight", "weighed", "estimated"}},
+		{"site", []string{"style", "bolus_use_by", "infusion_use_by", "smallest_volume", "tolerance", "pump_step", "barrels", "jurisdiction", "tall_man", "dual_names"}},
+		{"patient", []string{"id", "name", "sex", "age", "height", "weight", "weighed", "estimated", "frail"}},
 		{"patient.syringe", append(commonKeys(), "dose", "amount", "concentration", "volume")},
 		{"patient.infusion", append(commonKeys(), "standard", "mix", "method", "line", "start", "from", "to")},
 	} {

@@ -10,10 +10,10 @@ import (
 	"drawup/dilution/quantity"
 )
 
-// weights are the IUPAC abridged standard atomic weights of 2021 (Prohaska et
+// given are the IUPAC abridged standard atomic weights of 2021 (Prohaska et
 // al., Pure Appl Chem 2022), in units of 0.00001, as the calculation reference
 // lists them in a4.
-func weights() map[string]int64 {
+func given() map[string]int64 {
 	return map[string]int64{"H": 100800, "C": 1201100, "N": 1400700, "O": 1599900, "Na": 2298977, "Mg": 2430500,
 		"P": 3097376, "S": 3206000, "Cl": 3545000, "K": 3909830, "Ca": 4007800}
 }
@@ -39,7 +39,7 @@ func sum(t *testing.T, formula string) int64 {
 			t.Fatalf("formula %q: got part %q, want atoms", formula, p)
 		}
 		for _, a := range atom.FindAllStringSubmatch(m[2], -1) {
-			w, ok := weights()[a[1]]
+			w, ok := given()[a[1]]
 			if !ok {
 				t.Fatalf("formula %q: no weight for %s", formula, a[1])
 			}
@@ -47,6 +47,28 @@ func sum(t *testing.T, formula string) int64 {
 		}
 	}
 	return total
+}
+
+// Molar masses of formulas, to the last digit: IUPAC weights added by hand
+// (calcium gluconate: 40.078 + 2 × 195.147 + 18.015).
+func TestMolarMass(t *testing.T) {
+	for formula, want := range map[string]string{"H2O": "18.015", "NaCl": "58.43977", "MgSO4.7H2O": "246.466", "KCl": "74.5483",
+		"CaCl2.2H2O": "147.008", "Ca(C6H11O7)2.H2O": "448.387", "NaHCO3": "84.00577"} {
+		got, err := MolarMass(formula)
+		if err != nil {
+			t.Errorf("%s: %v", formula, err)
+			continue
+		}
+		w, _ := new(big.Rat).SetString(want)
+		if got.Cmp(w) != 0 {
+			t.Errorf("%s: got %s, want %s", formula, got.FloatString(5), want)
+		}
+	}
+	for _, bad := range []string{"", "X2", "H2O)", "(H2O", "h2o", "NaCl.", "Ca((((H))))", "2"} {
+		if m, err := MolarMass(bad); err == nil {
+			t.Errorf("%q: got %s, want an error", bad, m.FloatString(5))
+		}
+	}
 }
 
 func TestMolarMassesAreSumsOfAtomicWeights(t *testing.T) {

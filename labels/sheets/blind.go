@@ -96,7 +96,11 @@ func (s scribe) body() []Pair {
 	}
 	add("name", p.Name.Text)
 	add("sex", p.Sex.Text)
-	add("age", p.Age.Text)
+	age := p.Age.Text
+	if p.Frail {
+		age = strings.TrimPrefix(age+", frail", ", ")
+	}
+	add("age", age)
 	add("height", p.Height.Text)
 	weight := p.Weight.Text
 	if weight != "" && p.Estimated {

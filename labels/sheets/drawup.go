@@ -25,6 +25,7 @@ func DrawUp(list dilution.List, facts []labels.Facts, m labels.Making) []Sheet {
 	sheet := Sheet{Paper: PaperDrawUp, Size: A4, Title: "Draw-up sheet", Bookmark: "Draw-up sheet", Foot: footOf(m)}
 	sheet.Parts = append(sheet.Parts, before(list, all), fetchPart(all), barrelsPart(all))
 	for _, s := range all {
+		sources.record(s, list.Formulary)
 		sheet.Parts = append(sheet.Parts, s.drawUpPart(list, &sources))
 	}
 	sheet.Parts = append(sheet.Parts, wastePart(all), leftOutPart(list))

@@ -15,6 +15,7 @@ import (
 func (s scribe) openParts(list dilution.List) []Part {
 	n := s.p.Number
 	var sources sourceList
+	sources.record(s, list.Formulary)
 	limits := s.limits(&sources)
 	parts := []Part{
 		{n, []Block{s.name(s.say(s.concentration()), labels.Words(s.patient()), false), s.compare(), Words{Line: s.agreement(), Small: true}}},

@@ -56,7 +56,12 @@ func (s scribe) say(pattern string) labels.Line {
 }
 
 // drug is the name as it stands in running text, in the house style.
-func (s scribe) drug() string { return s.p.Drug.LabelName(s.p.Style) }
+func (s scribe) drug() string {
+	if s.p.Other != "" {
+		return s.p.Name + " (" + s.p.Other + ")"
+	}
+	return s.p.Name
+}
 
 // bag reports whether the mixture is made in a bag, not in a syringe.
 func (s scribe) bag() bool { return s.p.Mixture.InBag }

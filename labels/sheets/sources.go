@@ -2,6 +2,7 @@ package sheets
 
 import (
 	"fmt"
+	"strings"
 
 	"drawup/dilution/formulary"
 	"drawup/labels"
@@ -10,8 +11,9 @@ import (
 // A sourceList numbers the sources that a sheet names, so that a sentence
 // carries a number and the end of the sheet spells it out.
 type sourceList struct {
-	seen map[string]int
-	list []formulary.Source
+	seen    map[string]int
+	list    []formulary.Source
+	records []string // drugs whose record is the site's own, and drugs whose is not
 }
 
 // mark is what stands behind a sentence: "source 3", "source 3, unverified".
@@ -33,6 +35,21 @@ func (l *sourceList) mark(s formulary.Source, unverified bool) string {
 		text += ", unverified"
 	}
 	return text
+}
+
+// record notes where the record of the drug comes from, in a list that was
+// planned from a site's own formulary.
+func (l *sourceList) record(s scribe, f *formulary.Formulary) {
+	if f == nil || f.Base == "" {
+		return
+	}
+	text := s.drug() + ": " + s.p.Drug.From
+	for _, have := range l.records {
+		if have == text {
+			return
+		}
+	}
+	l.records = append(l.records, text)
 }
 
 // short are the formulary's words on this very container, and those on what
@@ -58,11 +75,14 @@ func (l *sourceList) cautions(s scribe, notes []formulary.Note) []Caution {
 
 // part is the list of sources at the end of a sheet.
 func (l *sourceList) part(syringe int) Part {
-	if len(l.list) == 0 {
+	if len(l.list)+len(l.records) == 0 {
 		return Part{}
 	}
 	const group = 12 // sources that stand beside each other, half of them on each side
 	blocks := []Block{heading("Sources")}
+	if len(l.records) > 0 {
+		blocks = append(blocks, Words{Line: labels.Words("Records of " + strings.Join(l.records, "; ") + "."), Small: true})
+	}
 	for from := 0; from < len(l.list); from += group {
 		to := min(from+group, len(l.list))
 		half := from + (to-from+1)/2
