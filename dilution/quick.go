@@ -30,6 +30,7 @@ type Quick struct {
 	Rate          quantity.DoseRate
 	Style         quantity.Style
 	Mix           *QuickMix // how it is mixed; nil for a dose or a dose rate
+	Run           *QuickRun // a dose rate: how long it runs; nil when that is open
 }
 
 // QuickLimits is what the row of limits says that a quick sum was held against.
@@ -77,6 +78,9 @@ func (q Quick) Check(f *formulary.Formulary) (refusal.List, QuickLimits) {
 			if row, ok := w.pickRate(rows); ok {
 				w.plan.Infusion = &InfusionPart{Rule: row}
 				limits.By, limits.Top = row.By, topOf(row)
+				if q.Run != nil {
+					w.run(row, q.Rate, *q.Run)
+				}
 			}
 		}
 	}

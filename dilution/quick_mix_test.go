@@ -85,12 +85,15 @@ counted = "mass"
   by = "none"
   usual_low = { value = "10 mg", source = "X" }
   usual_high = { value = "20 mg", source = "X" }
+  day_max = { value = "90 mg", source = "X" }
   [[drug.infusion]]
   for = "sedation"
   routes = ["IV"]
   by = "none"
   usual_low = { value = "3 mg/h", source = "X" }
   usual_high = { value = "5 mg/h", source = "X" }
+  course_max = { value = "100 mg", source = "X" }
+  longest = { value = "30 h", source = "X" }
 [[drug]]
 name = "numb"
 atc = "N01BB99"

@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"io"
 
+	"drawup/dilution"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
 )
@@ -15,7 +16,7 @@ func totalFlags() []flagSpec {
 		{"load", "0.05 mg/kg", "a dose given first, counted in with it"},
 		{"mix", "4 mg in 50 mL", "amount in FINAL volume, for the volume that is used up"},
 		{"concentration", "80 microgram/mL", "concentration, in place of --mix"},
-	}, patientFlags()...)
+	}, append(patientFlags(), limitFlags()...)...)
 }
 
 // A totalDocument is the answer of drawup total. Infused and total are counted
@@ -55,7 +56,7 @@ func runTotal(e env, args []string) int {
 			r.add(sumFault("total", err))
 		}
 	}
-	r.noLimits()
+	s.limits(r)
 	if r.refused() {
 		doc = &totalDocument{}
 	}
@@ -93,6 +94,28 @@ func readTotal(r *request) totalSum {
 	}
 	s.who = readPatient(r, basis)
 	return s
+}
+
+// limits holds rate, first dose, total and time against the formulary.
+func (s totalSum) limits(r *request) {
+	if r.refused() {
+		return
+	}
+	q := dilution.Quick{
+		Infusion: true, Concentration: s.conc, Rate: s.rate, Weight: s.who.weight, Surface: s.who.surface,
+		Run: &dilution.QuickRun{Time: s.time, First: s.load},
+	}
+	r.checkLimits(q)
+	if !r.given("drug") || !s.load.Given() || r.refused() {
+		return
+	}
+	q.Infusion, q.Rate, q.Run, q.Concentration, q.Dose = false, quantity.DoseRate{}, nil, quantity.Concentration{}, s.load
+	q, f, ok := r.quick(q)
+	if !ok {
+		return
+	}
+	reasons, _ := q.Check(f) // the note on what was checked stands already
+	r.faults = append(r.faults, inFlags(reasons)...)
 }
 
 func (s totalSum) work(r *request, d *totalDocument) error {
