@@ -55,12 +55,21 @@ func (r *request) quick(q dilution.Quick) (dilution.Quick, *formulary.Formulary,
 	if !r.readUse(&q) || r.refused() {
 		return q, nil, false
 	}
-	f, err := formulary.Default()
-	if err != nil {
-		r.add(ourFault(0, err))
-		return q, nil, false
+	f, ok := r.formulary()
+	return q, f, ok
+}
+
+// formulary is the starter, read once for each request.
+func (r *request) formulary() (*formulary.Formulary, bool) {
+	if r.stored == nil {
+		f, err := formulary.Default()
+		if err != nil {
+			r.add(ourFault(0, err))
+			return nil, false
+		}
+		r.stored = f
 	}
-	return q, f, true
+	return r.stored, true
 }
 
 // inFlags words reasons that speak of an order file for a command line.

@@ -111,9 +111,8 @@ func readMost(r *request, g *dilution.LocalGiven, field, text string) {
 }
 
 func (d *localDocument) work(r *request, sum dilution.LocalSum) {
-	f, err := formulary.Default()
-	if err != nil {
-		r.add(ourFault(0, err))
+	f, ok := r.formulary()
+	if !ok {
 		return
 	}
 	shares, total, reasons := sum.Work(f)

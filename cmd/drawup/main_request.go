@@ -8,6 +8,7 @@ import (
 
 	"github.com/spf13/pflag"
 
+	"drawup/dilution/formulary"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
 )
@@ -31,6 +32,7 @@ type request struct {
 	broken bool // the flags could not be read to the end
 	style  quantity.Style
 	faults refusal.List
+	stored *formulary.Formulary // once a sum has asked for it
 }
 
 // An onceText is a flag's text that may be given once only: the last of two
