@@ -23,7 +23,7 @@ func mayImport() map[string][]string {
 	return map[string][]string{
 		"cmd/drawup":                {"*"},
 		"dilution":                  plan,
-		"dilution/body":             {"dilution/quantity"},
+		"dilution/body":             {"dilution/quantity", "dilution/roots"},
 		"dilution/formulary":        {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
 		"dilution/formulary/verify": {"dilution/body", "dilution/formulary", "dilution/quantity", "dilution/refusal", "dilution/salts"},
 		"dilution/order":            {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
@@ -31,8 +31,9 @@ func mayImport() map[string][]string {
 		"dilution/quantity":         {},
 		"dilution/recheck":          {}, // the second route shares nothing
 		"dilution/refusal":          {},
+		"dilution/roots":            {},
 		"dilution/salts":            {"dilution/quantity"},
-		"dilution/syringe":          {"dilution/quantity"},
+		"dilution/syringe":          {"dilution/quantity", "dilution/roots"},
 		"dilution/tomlfile":         {"dilution/refusal"},
 		"fonts":                     {},
 		"labels":                    said, // no page, no font, no PDF

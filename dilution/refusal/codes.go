@@ -88,6 +88,7 @@ const (
 	DoseBelowSoft          Code = "dose-below-usual"
 	DoseBelowHard          Code = "dose-below-hard-limit"
 	DoseAboveTotal         Code = "dose-above-absolute-maximum"
+	OneWeightOnly          Code = "mixture-for-one-weight"
 	RateAboveHard          Code = "dose-rate-above-hard-limit"
 	RateAboveSoft          Code = "dose-rate-above-soft-limit"
 	RateAboveUsual         Code = "dose-rate-above-usual"
