@@ -59,10 +59,30 @@ func TestPrintedIsTodays(t *testing.T) {
 		if err != nil {
 			t.Fatal(err)
 		}
-		if r := of(t, p); r.Printed.Rat().Cmp(want.Rat()) != 0 {
+		r := of(t, p)
+		if r.Printed.Rat().Cmp(want.Rat()) != 0 {
 			t.Fatalf("got %s %%, paper prints %s %%", r.Printed.Exact(), want.Exact())
 		}
+		combined(t, r, parts)
 	})
+}
+
+// combined holds U to the quick sums' own rule, which rounds its root half up at
+// 40 digits: never below it, and less than two units of the tenth decimal above.
+func combined(t *rapid.T, r Result, parts []quantity.Percent) {
+	var widths []syringe.Width
+	for _, p := range parts {
+		widths = append(widths, syringe.Width{Percent: p, Shape: syringe.Rectangular})
+	}
+	u, err := syringe.Combine(widths...)
+	if err != nil {
+		t.Fatal(err)
+	}
+	above := new(big.Rat).Sub(r.Expanded.Rat(), u.Expanded.Rat())
+	hair := new(big.Rat).SetFrac64(1, 1_000_000_000_000_000) // half up may stand that far above the root itself
+	if above.Cmp(new(big.Rat).Neg(hair)) < 0 || above.Cmp(big.NewRat(2, 10_000_000_000)) >= 0 {
+		t.Fatalf("got U %s %%, the quick sums %s %%", r.Expanded.Exact(), u.Expanded.Exact())
+	}
 }
 
 // TestPrintedElsewhere holds what the package comment says of the other kinds:

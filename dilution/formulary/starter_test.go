@@ -276,20 +276,20 @@ func TestEveryFigureHasASource(t *testing.T) {
 	}
 }
 
-// Rows of one drug, purpose, route and counting do not overlap in age: an
-// overlap would let the milder of two rows win.
+// Rows of one drug, purpose, route and counting do not overlap in age, those for
+// the frail apart: an overlap would let the milder of two rows win.
 func TestAgeBandsDoNotOverlap(t *testing.T) {
 	for _, d := range starter(t).Drugs() {
 		for i, a := range d.Doses {
 			for _, b := range d.Doses[:i] {
-				if a.For == b.For && share(a.Routes, b.Routes) && overlap(a, b) && a.UsualHigh.Value.Basis() == b.UsualHigh.Value.Basis() {
+				if a.For == b.For && a.Frail == b.Frail && share(a.Routes, b.Routes) && overlap(a, b) && a.UsualHigh.Value.Basis() == b.UsualHigh.Value.Basis() {
 					t.Errorf("%s, %s: the rows for %q and %q overlap", d.Name, a.For, a.Ages(), b.Ages())
 				}
 			}
 		}
 		for i, a := range d.Rates {
 			for _, b := range d.Rates[:i] {
-				if a.For == b.For && share(a.Routes, b.Routes) && overlap(a, b) && a.UsualHigh.Value.Basis() == b.UsualHigh.Value.Basis() {
+				if a.For == b.For && a.Frail == b.Frail && share(a.Routes, b.Routes) && overlap(a, b) && a.UsualHigh.Value.Basis() == b.UsualHigh.Value.Basis() {
 					t.Errorf("%s, %s: the rows for %q and %q overlap", d.Name, a.For, a.Ages(), b.Ages())
 				}
 			}
