@@ -127,6 +127,7 @@ const helpRead = `drawup read: what a scanned label or pack says, in words
   --at               "2026-12-01 12:00"
                                      the time to hold the use-by against; now if left out
   --order            day.toml        an order with the site's own GTINs, to name what they stand for
+  --formulary        my-site.toml    the site's own formulary file, over the starter
   --style            uk              house style of numbers and units: uk, us, si
   --json                             the answer as a JSON document
 
@@ -147,6 +148,10 @@ const helpFormulary = `drawup formulary: what is stored of each drug, checked, c
      --flag          "high alert"    with this mark only
      --jurisdiction  UK              with a source or a standard of this jurisdiction
   show DRUG                          all that is stored of one drug, by any of its names
+  pair DRUG with DRUG                whether two drugs may share a syringe, and within which
+                                     limits; refused unless the formulary allows the pair
+     --use           infusion        bolus unless given
+     --route         epidural        IV unless given
   verify [FILE...]                   hold a formulary against itself: every finding with
                                      file, line and column; the starter without a file
   compare OLDER NEWER                what changed, what was loosened first; a file, a folder

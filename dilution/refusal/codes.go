@@ -108,6 +108,8 @@ const (
 	ExpiredPresentation    Code = "presentation-expired"
 	UseByUnknown           Code = "use-by-unknown"
 	NegligibleDisplacement Code = "displacement-negligible"
+	PairNever              Code = "pair-never-in-one-syringe"
+	PairNotListed          Code = "pair-not-listed"
 	PreservedNeuraxial     Code = "preserved-near-nerves"
 	DoseAboveFirst         Code = "dose-above-first-maximum"
 	DoseAboveDay           Code = "dose-above-day-maximum"
