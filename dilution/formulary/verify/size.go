@@ -90,15 +90,16 @@ func (c *check) strengths() {
 }
 
 // bounds holds concentrations against the strengths that the drug comes in:
-// nothing can be stronger than the strongest container, and nobody dilutes
-// a thousandfold in one step. Between the ends lies a factor of 200 at most.
+// nothing can be stronger than the strongest container, but for 1 % where a third
+// (400 mg in 3 mL) is rounded outwards, and nobody dilutes a thousandfold in one
+// step. Between the ends lies a factor of 200 at most.
 func (c *check) bounds() {
 	for _, b := range c.drug.Bounds {
 		strongest := c.strongest(b.Use)
 		if strongest == nil {
 			continue
 		}
-		if b.High.Given() && b.High.Value.Rat().Cmp(strongest) > 0 {
+		if b.High.Given() && b.High.Value.Rat().Cmp(new(big.Rat).Mul(strongest, big.NewRat(101, 100))) > 0 {
 			c.find(refusal.Implausible, b.High.Pos, "high", b.High.Text, "at most the strongest presentation for "+b.Use,
 				"the highest concentration for %s, %s, is stronger than any container", b.Use, b.High.Text)
 		}
