@@ -206,6 +206,33 @@ func stated(t *testing.T, r []string, p formulary.Presentation) bool {
 	return true
 }
 
+// A pair stands once, whichever drug leads, and is allowed or forbidden, not both:
+// of two sources for one pair the second would never be read.
+func TestPairsStandOnce(t *testing.T) {
+	f := starter(t)
+	seen := map[[2]string]string{}
+	sorted := func(d [2]string) [2]string {
+		if d[0] > d[1] {
+			return [2]string{d[1], d[0]}
+		}
+		return d
+	}
+	for _, n := range f.Never {
+		if other, ok := seen[sorted(n.Drugs)]; ok {
+			t.Errorf("%v: forbidden in %s and in %s", n.Drugs, other, n.Pos.File)
+		}
+		seen[sorted(n.Drugs)] = n.Pos.File
+	}
+	for _, m := range f.Mixes {
+		if other, ok := seen[sorted(m.Drugs)]; ok {
+			t.Errorf("%v: allowed in %s and forbidden in %s", m.Drugs, m.Pos.File, other)
+		}
+	}
+	if len(seen) < 140 {
+		t.Errorf("got %d forbidden pairs", len(seen))
+	}
+}
+
 // A standard preparation lies inside the bounds of infusions into its line,
 // and some presentation can make it.
 func TestStandardsInsideBounds(t *testing.T) {
