@@ -88,6 +88,7 @@ func fitting(t *testing.T, r row) []string {
 		{"40 years", "168 cm", "70 kg"}, {"70 years", "168 cm", "70 kg"}, {"41 years", "150 cm", "37 kg"},
 		{"4 years", "102 cm", "16 kg"}, {"7 years", "122 cm", "23 kg"}, {"14 years", "160 cm", "50 kg"},
 		{"2 years", "86 cm", "12 kg"}, {"6 months", "66 cm", "7.5 kg"}, {"20 days", "52 cm", "3.6 kg"},
+		{"5 days", "50 cm", "3.2 kg"},
 	} {
 		age, err := body.ParseAge(p.age)
 		if err != nil {
@@ -152,7 +153,9 @@ func (r row) diluted(t *testing.T, head string, p formulary.Presentation, b form
 	for i, c := range []string{b.Low.Text, b.High.Text} {
 		for _, d := range diluents {
 			if r.use == "bolus" {
-				out = append(out, head+d+lines(key("concentration", c), key("volume", []string{"10 mL", "20 mL"}[i])))
+				for _, v := range [][]string{{"10 mL"}, {"20 mL", "50 mL"}}[i] {
+					out = append(out, head+d+lines(key("concentration", c), key("volume", v)))
+				}
 				continue
 			}
 			amount := strings.TrimSuffix(times(t, c, big.NewRat(50, 1)), "/mL")
@@ -234,9 +237,10 @@ func TestTenTimesTheUsual(t *testing.T) {
 	}
 }
 
-// unmixed reports that the mixture itself was refused, or the presentation for a
-// patient of this age, so that the dose was never reached: that way of asking says
-// nothing of the limits.
+// unmixed reports that the presentation or the mixture itself was refused, so
+// that the dose was never reached: that way of asking says nothing of the limits.
+// The patient fits the row's ages and the route is the row's, so those two refusals
+// are of the presentation.
 func unmixed(codes []refusal.Code) bool {
 	for _, c := range []refusal.Code{refusal.DisplacementBlank, refusal.MustBeDiluted, refusal.DiluentMissing, refusal.DiluentNotListed,
 		refusal.ConcentrationTooHigh, refusal.ConcentrationTooLow, refusal.VolumeOffGraduation, refusal.VolumeBelowMeasurable,

@@ -192,6 +192,9 @@ func (p *heldPage) held(name, text, at string) {
 		want = append(want, quantity.UK().Volume(v))
 	case "id", "for":
 		want = []string{fmt.Sprintf("%q", text)}
+		if strings.Contains(at, "concentration") {
+			want = []string{", for " + text}
+		}
 	case "by":
 		want = []string{"goes by " + byWords(text)}
 	case "jurisdiction": // of a standard preparation, with or without whom it is for
@@ -298,8 +301,8 @@ func TestFormularyDocument(t *testing.T) {
 	}
 }
 
-// The list is in order of name, one line a drug, and no line is too wide; a
-// class without drugs is an empty list.
+// The list is in order of name, one line a drug, and no line is too wide; where
+// no drug passes the filters it is an empty list.
 func TestFormularyList(t *testing.T) {
 	text, _ := asked(t, exitMade, "list", "--json")
 	var doc struct{ Drugs []listedDrug }
@@ -326,7 +329,7 @@ func TestFormularyList(t *testing.T) {
 			t.Errorf("got a line of %d characters: %s", n, l)
 		}
 	}
-	if none, _ := asked(t, exitMade, "list", "--class", "pro", "--json"); !strings.Contains(none, `"drugs": []`) {
+	if none, _ := asked(t, exitMade, "list", "--class", "pro", "--flag", "HA", "--json"); !strings.Contains(none, `"drugs": []`) {
 		t.Errorf("got %s", none)
 	}
 }

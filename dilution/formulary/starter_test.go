@@ -201,8 +201,8 @@ func TestEveryFigureHasASource(t *testing.T) {
 	}
 }
 
-// Rows of one drug, purpose, route and counting do not overlap in age: an
-// overlap would let the milder of two rows win.
+// Rows of one drug, purpose, route and counting do not overlap in age, those for
+// the frail apart: an overlap would let the milder of two rows win.
 func TestAgeBandsDoNotOverlap(t *testing.T) {
 	for _, d := range starter(t).Drugs() {
 		for i, a := range d.Doses {

@@ -67,7 +67,12 @@ func bestCount(x exact, k Kind) Unit {
 	case ByActivity:
 		return Units()
 	case BySubstance:
-		return largest(x, Millimole(), Micromole())
+		// Electrolytes are prescribed in mmol: 400 micromol/mL beside mmol/h would
+		// invite a thousandfold slip. Below a hundredth the noughts would.
+		if x.mul(whole(100)).cmp(Millimole().scale) >= 0 {
+			return Millimole()
+		}
+		return Micromole()
 	}
 	return Unit{}
 }

@@ -78,6 +78,8 @@ func codedUnit(word string) (unit, bool) {
 		return unit{inActivity, 1_000}, true
 	case "mmol":
 		return unit{inSubstance, 1_000_000}, true
+	case "umol":
+		return unit{inSubstance, 1_000}, true
 	}
 	return unit{}, false
 }
