@@ -28,17 +28,6 @@ func (t *Tables) readLimit(cells []string) error {
 	return nil
 }
 
-// Drugs are the names that the tables of second sources hold.
-func (t *Tables) Drugs() []string {
-	var out []string
-	for key := range t.limits {
-		name, _, _ := strings.Cut(key, "|")
-		out = append(out, name)
-	}
-	slices.Sort(out)
-	return slices.Compact(out)
-}
-
 // kinds are those of the tables of second sources.
 var kinds = []string{"concentration low", "concentration high", "rate low", "rate high", "dose low", "dose high", "total max"}
 

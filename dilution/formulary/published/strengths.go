@@ -57,7 +57,8 @@ func holds(p formulary.Presentation, powder bool, amount figure, volume string) 
 	return have.value.Cmp(amount.value) == 0 && (volume == "" || v.Cmp(rat(volume)) == 0)
 }
 
-// unseen finds containers that no document of the tables states.
+// unseen finds containers that no document of the tables states. They may be
+// shipped because people have them in the hand, but marked unverified.
 func (t *Tables) unseen(d formulary.Drug) []Finding {
 	var out []Finding
 	for _, p := range d.Presentations {
@@ -66,6 +67,9 @@ func (t *Tables) unseen(d formulary.Drug) []Finding {
 		})
 		if !stated {
 			out = append(out, Finding{"unseen", d.Name + ", " + p.ID, "no document of the table of strengths states it"})
+		}
+		if !stated && !p.Unverified {
+			out = append(out, Finding{"unmarked", d.Name + ", " + p.ID, "no document states it, and it is not marked unverified"})
 		}
 	}
 	return out

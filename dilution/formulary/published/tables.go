@@ -80,6 +80,30 @@ func (t *Tables) folder(root, name string, read func([]string) error) error {
 // Rows is how many rows a folder holds.
 func (t *Tables) Rows(folder string) int { return t.count[folder] }
 
+// Unfiled is every drug of the tables that the formulary does not file under the
+// tables' name and nothing excuses.
+func (t *Tables) Unfiled(f *formulary.Formulary) []Finding {
+	var names []string
+	for key := range t.limits {
+		name, _, _ := strings.Cut(key, "|")
+		names = append(names, name)
+	}
+	for name := range t.rows {
+		names = append(names, name)
+	}
+	for _, s := range t.strengths {
+		names = append(names, s.drug)
+	}
+	slices.Sort(names)
+	var out []Finding
+	for _, name := range slices.Compact(names) {
+		if d, _, ok := f.Find(name); !ok || d.Name != name {
+			out = append(out, Finding{"not shipped", name, "a drug of the tables is not filed"})
+		}
+	}
+	return t.unexcused(out)
+}
+
 // excused are the kinds that belong to these checks; others belong to others.
 var excused = []string{"unseen", "not shipped", "looser", "far", "longer"}
 
@@ -95,8 +119,13 @@ func (t *Tables) readExcuse(cells []string) error {
 
 // Check is every disagreement about one drug that nothing excuses.
 func (t *Tables) Check(d formulary.Drug) []Finding {
+	return t.unexcused(slices.Concat(t.unseen(d), t.far(d), t.missing(d), t.bounds(d), t.rates(d), t.times(d)))
+}
+
+func (t *Tables) unexcused(found []Finding) []Finding {
+	slices.SortFunc(found, func(a, b Finding) int { return strings.Compare(a.String(), b.String()) })
 	var out []Finding
-	for _, f := range slices.Concat(t.unseen(d), t.far(d), t.missing(d), t.bounds(d), t.rates(d), t.times(d)) {
+	for _, f := range found {
 		key := f.Kind + "\t" + f.Name
 		if t.excuses[key] == "" {
 			out = append(out, f)
@@ -106,7 +135,7 @@ func (t *Tables) Check(d formulary.Drug) []Finding {
 	return out
 }
 
-// Unused are excuses that nothing asked for in any Check so far.
+// Unused are excuses that nothing has asked for so far.
 func (t *Tables) Unused() []string {
 	var out []string
 	for key := range t.excuses {
