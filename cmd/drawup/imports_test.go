@@ -50,7 +50,9 @@ func mayImport() map[string][]string {
 const module = "drawup"
 
 // onlyFromTests lists packages that no shipped code may import.
-func onlyFromTests() []string { return []string{"layouts/pdf/readback", "dilution/formulary/published"} }
+func onlyFromTests() []string {
+	return []string{"layouts/pdf/readback", "dilution/formulary/published"}
+}
 
 // goFiles lists the Go files of the module by package folder.
 func goFiles(t *testing.T, tests bool) map[string][]string {
