@@ -9,80 +9,107 @@ import (
 	"drawup/dilution/formulary"
 )
 
-// A limit is one row of the tables of second sources.
-type limit struct {
-	figure figure
-	source string
-}
+// kinds are those of the tables of second sources.
+var kinds = []string{"concentration low", "concentration high", "rate low", "rate high", "dose low", "dose high", "total max"}
 
+// readLimit reads one row of the tables of second sources.
 func (t *Tables) readLimit(cells []string) error {
-	if len(cells) != 4 || cells[3] == "" {
-		return fmt.Errorf("got %d cells, want 4, the last with a source", len(cells))
+	if len(cells) != 4 || cells[3] == "" || !slices.Contains(kinds, cells[1]) {
+		return fmt.Errorf("got %q, want a drug, one of %s, a figure and its source", cells, strings.Join(kinds, ", "))
 	}
 	f, err := parse(cells[2])
 	if err != nil {
 		return err
 	}
-	key := cells[0] + "|" + cells[1]
-	t.limits[key] = append(t.limits[key], limit{f, cells[3]})
+	t.limits[cells[0]] = append(t.limits[cells[0]], limit{familyOf(cells[1]), f})
 	return nil
 }
 
-// kinds are those of the tables of second sources.
-var kinds = []string{"concentration low", "concentration high", "rate low", "rate high", "dose low", "dose high", "total max"}
+// A limit is one figure of a second source, with its family.
+type limit struct {
+	family string
+	figure figure
+}
 
-// far wants a shipped figure of each kind near to a published one: less than ten
-// times looser, and not a hundred times more cautious. A decimal point or a unit
+// far wants every shipped figure near to a published one of its family, doses,
+// dose rates or concentrations: less than tenfold apart. A decimal point or a unit
 // that slipped in either copy would part them.
 func (t *Tables) far(d formulary.Drug) []Finding {
-	shipped := map[string][]figure{}
-	for _, e := range d.Entries() {
-		kind := kindOf(e)
-		if f, err := parse(e.Text); err == nil && kind != "" {
-			shipped[kind] = append(shipped[kind], f)
-		}
-	}
+	families := map[string][]figure{}
 	var out []Finding
-	for _, kind := range kinds {
-		list := t.limits[d.Name+"|"+kind]
-		if len(list) == 0 || len(shipped[kind]) == 0 {
+	for _, e := range d.Entries() {
+		family := familyOf(kindOf(e))
+		f, err := parse(e.Text)
+		if err != nil || family == "" {
 			continue
 		}
-		if !slices.ContainsFunc(shipped[kind], func(f figure) bool {
-			return slices.ContainsFunc(list, func(l limit) bool { return l.near(f, strings.HasSuffix(kind, "low")) })
-		}) {
-			out = append(out, Finding{"far", d.Name + ", " + kind, texts(shipped[kind]) + " is shipped, " + published(list) + " is published"})
+		if _, ok := families[family]; !ok {
+			families[family] = t.family(d.Name, family)
+		}
+		near, comparable := false, false
+		for _, p := range families[family] {
+			if ratio, ok := f.over(p); ok {
+				comparable = true
+				near = near || ratio.Cmp(big.NewRat(10, 1)) < 0 && ratio.Cmp(big.NewRat(1, 10)) > 0
+			}
+		}
+		if comparable && !near {
+			out = append(out, Finding{"far", d.Name + ", " + e.Name + ", " + f.text, "published are " + texts(families[family])})
 		}
 	}
 	return out
 }
 
-// near reports that a shipped figure is less than ten times looser than the
-// published one, and not a hundred times more cautious. Of two lower ends the
-// higher is the cautious one.
-func (l limit) near(f figure, lower bool) bool {
-	ratio, ok := f.over(l.figure)
-	if !ok {
-		return false
+// familyOf is the family of a kind, "" for none.
+func familyOf(kind string) string {
+	family, _, _ := strings.Cut(kind, " ")
+	if family == "total" {
+		return "dose"
 	}
-	if lower {
-		ratio.Inv(ratio)
+	return family
+}
+
+// family is every published figure of a drug's family: those of second sources,
+// the rows of the second transcription, and strengths, which are concentrations.
+func (t *Tables) family(drug, family string) []figure {
+	var out []figure
+	for _, l := range t.limits[drug] {
+		if l.family == family {
+			out = append(out, l.figure)
+		}
 	}
-	return ratio.Cmp(big.NewRat(10, 1)) < 0 && ratio.Cmp(big.NewRat(1, 100)) > 0
+	for _, r := range t.rows[drug] {
+		list := []figure{r.low, r.high}
+		if family == "rate" {
+			list = []figure{r.usualLow, r.usualHigh, r.hard}
+		}
+		for _, f := range list {
+			if f.given() && family != "dose" {
+				out = append(out, f)
+			}
+		}
+	}
+	for _, x := range t.doses[drug] {
+		for _, f := range []figure{x.low, x.high, x.most} {
+			if f.given() && family == "dose" {
+				out = append(out, f)
+			}
+		}
+	}
+	for _, s := range t.strengths {
+		if family == "concentration" && s.drug == drug && !s.powder {
+			out = append(out, figure{s.amount.text + "/mL", s.amount.value, s.amount.kind, "mL"})
+		}
+	}
+	return out
 }
 
 func texts(list []figure) string {
 	var out []string
 	for _, f := range list {
-		out = append(out, f.text)
-	}
-	return strings.Join(out, ", ")
-}
-
-func published(list []limit) string {
-	var out []string
-	for _, l := range list {
-		out = append(out, l.figure.text+" ("+l.source+")")
+		if !slices.Contains(out, f.text) {
+			out = append(out, f.text)
+		}
 	}
 	return strings.Join(out, ", ")
 }
@@ -92,7 +119,8 @@ func published(list []limit) string {
 func kindOf(e formulary.Entry) string {
 	group, item, _ := cutLast(e.Name)
 	end := map[string]string{"lowest": "low", "highest": "high", "hard minimum": "low", "usual lowest": "low",
-		"usual highest": "high", "soft maximum": "high", "hard maximum": "high"}[item]
+		"usual highest": "high", "soft maximum": "high", "hard maximum": "high",
+		"highest first dose": "high", "highest repeat": "high"}[item]
 	switch {
 	case strings.HasPrefix(group, "local anaesthetic maximum"):
 		return "total max"

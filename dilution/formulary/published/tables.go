@@ -26,8 +26,9 @@ func (f Finding) String() string { return f.Kind + ": " + f.Name + ": " + f.Text
 // Tables are the published figures and the excuses.
 type Tables struct {
 	strengths []strength
-	limits    map[string][]limit // by drug and what
+	limits    map[string][]limit // by drug
 	rows      map[string][]row   // by drug
+	doses     map[string][]dose  // by drug
 	excuses   map[string]string  // kind and name → why
 	used      map[string]bool
 	count     map[string]int // rows read, by folder
@@ -35,13 +36,13 @@ type Tables struct {
 
 // Load reads the tables below folder, testdata/formulary.
 func Load(folder string) (*Tables, error) {
-	t := &Tables{limits: map[string][]limit{}, rows: map[string][]row{}, excuses: map[string]string{},
+	t := &Tables{limits: map[string][]limit{}, rows: map[string][]row{}, doses: map[string][]dose{}, excuses: map[string]string{},
 		used: map[string]bool{}, count: map[string]int{}}
 	for _, part := range []struct {
 		name string
 		read func([]string) error
 	}{
-		{"strengths", t.readStrength}, {"limits", t.readLimit}, {"published", t.readRow}, {"excused", t.readExcuse},
+		{"strengths", t.readStrength}, {"limits", t.readLimit}, {"published", t.readRow}, {"doses", t.readDose}, {"excused", t.readExcuse},
 	} {
 		if err := t.folder(folder, part.name, part.read); err != nil {
 			return nil, err
@@ -84,11 +85,13 @@ func (t *Tables) Rows(folder string) int { return t.count[folder] }
 // tables' name and nothing excuses.
 func (t *Tables) Unfiled(f *formulary.Formulary) []Finding {
 	var names []string
-	for key := range t.limits {
-		name, _, _ := strings.Cut(key, "|")
+	for name := range t.limits {
 		names = append(names, name)
 	}
 	for name := range t.rows {
+		names = append(names, name)
+	}
+	for name := range t.doses {
 		names = append(names, name)
 	}
 	for _, s := range t.strengths {
@@ -119,7 +122,7 @@ func (t *Tables) readExcuse(cells []string) error {
 
 // Check is every disagreement about one drug that nothing excuses.
 func (t *Tables) Check(d formulary.Drug) []Finding {
-	return t.unexcused(slices.Concat(t.unseen(d), t.far(d), t.missing(d), t.bounds(d), t.rates(d), t.times(d)))
+	return t.unexcused(slices.Concat(t.unseen(d), t.far(d), t.missing(d), t.bounds(d), t.rates(d), t.highest(d), t.times(d)))
 }
 
 func (t *Tables) unexcused(found []Finding) []Finding {
