@@ -3,6 +3,7 @@ package formulary
 import (
 	"fmt"
 	"regexp"
+	"strconv"
 	"strings"
 	"time"
 
@@ -148,14 +149,15 @@ func parseFactor(s string) (Factor, error) {
 	return Factor{PerGram: a}, err
 }
 
-// parseMinutes reads "24 h", "30 min" or "7 days" as whole minutes.
+// parseMinutes reads "24 h", "30 min" or "7 days" as whole minutes. The number
+// is whole: half an hour is 30 min.
 func parseMinutes(s string) (int64, error) {
 	number, unit, _ := strings.Cut(strings.TrimSpace(s), " ")
 	factor := map[string]int64{"min": 1, "h": 60, "hour": 60, "hours": 60, "day": 1440, "days": 1440}[unit]
-	var n int64
 	most := int64(100 * 365 * 24 * time.Hour / time.Minute)
-	if _, err := fmt.Sscanf(number, "%d", &n); err != nil || factor == 0 || n <= 0 || n > most {
-		return 0, fmt.Errorf("got %q, want a time such as \"24 h\"", s)
+	n, err := strconv.ParseInt(number, 10, 64)
+	if err != nil || number[0] == '+' || factor == 0 || n <= 0 || n > most {
+		return 0, fmt.Errorf("got %q, want a time in whole numbers such as \"24 h\" or \"30 min\"", s)
 	}
 	return n * factor, nil
 }

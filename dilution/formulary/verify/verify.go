@@ -20,8 +20,8 @@ func Check(f *formulary.Formulary) refusal.List {
 	for _, d := range f.Drugs() {
 		c := &check{drug: d}
 		for _, step := range []func(){
-			c.jurisdictions, c.names, c.contents, c.powders, c.factors, c.strengths, c.bounds,
-			c.doses, c.rates, c.overlaps, c.maxima, c.standards, c.stability,
+			c.jurisdictions, c.names, c.contents, c.powders, c.assays, c.factors, c.strengths, c.bounds, c.mixtures,
+			c.doses, c.rates, c.overlaps, c.maxima, c.courses, c.standards, c.stability, c.times,
 		} {
 			step()
 		}
