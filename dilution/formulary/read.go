@@ -46,7 +46,14 @@ func DefaultTexts() ([]Text, error) {
 
 // Default is the embedded starter formulary. It is checked by the tests, row
 // by row, so a refusal here is a fault of ours.
-func Default() (*Formulary, error) {
+//
+// It is read once: the value never changes, and reading it takes longer than
+// most of what is asked of it.
+func Default() (*Formulary, error) { return starterOnce() }
+
+var starterOnce = sync.OnceValues(readStarter)
+
+func readStarter() (*Formulary, error) {
 	texts, err := DefaultTexts()
 	if err != nil {
 		return nil, err

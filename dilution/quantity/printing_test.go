@@ -169,6 +169,19 @@ func TestInCode(t *testing.T) {
 	}
 }
 
+// Amounts in the code are the printed ones: unit words of ASCII letters, no
+// blank, no group sign.
+func TestAmountInCode(t *testing.T) {
+	for in, want := range map[string]string{"5 g": "5g", "1000 mg": "1g", "20 mg": "20mg", "0.05 mg": "50ug", "0.0005 mg": "500ng", "5000 units": "5000unit", "8 mmol": "8mmol", "0.5 mmol": "0.5mmol", "1234.5 mg": "1.23g"} {
+		if a, err := ParseAmount(in); err != nil || a.InCode() != want {
+			t.Errorf("%s: got %q, %v, want %q", in, a.InCode(), err, want)
+		}
+	}
+	if got := (Amount{}).InCode(); got != "" {
+		t.Errorf("nothing: got %q", got)
+	}
+}
+
 // TestStyles: names, and the zero style that prints nothing.
 func TestStyles(t *testing.T) {
 	for _, s := range styles() {
