@@ -2,7 +2,9 @@ package formulary
 
 import (
 	"fmt"
+	"maps"
 	"regexp"
+	"slices"
 	"strconv"
 	"strings"
 	"time"
@@ -87,6 +89,14 @@ func (r *reader) identity(d *Drug, rec drugRecord, i int) {
 	if d.Name == "" || d.Name != strings.ToLower(d.Name) {
 		r.fault(refusal.KeyMissing, d.Name, "the INN in lower case", "the drug has no name in lower case",
 			"drug", i, "name")
+	}
+	for _, style := range slices.Sorted(maps.Keys(rec.Names)) {
+		n := rec.Names[style]
+		if _, ok := quantity.StyleNamed(style); !ok {
+			r.fault(refusal.ValueUnknown, style, "uk, us or si", "the house style of the name is not known", "drug", i, "names", style)
+		} else if n == "" || n == strings.ToUpper(n) {
+			r.fault(refusal.ValueUnknown, n, "a name that is not all capitals", "the name on paper is blank or all capitals", "drug", i, "names", style)
+		}
 	}
 	if !atcPattern.MatchString(d.ATC) {
 		r.fault(refusal.ValueUnknown, d.ATC, "a code such as N01AX07", "the ATC code has not the shape of one",
@@ -192,7 +202,11 @@ func (r *reader) presentation(rec presentationRecord, kind quantity.Kind, path .
 	}
 	p.Amount = a
 	r.contents(&p, rec, at)
-	if rec.SecondName != "" {
+	if (rec.SecondName == "") != (rec.SecondAmount == "") {
+		r.fault(refusal.KeyMissing, rec.SecondName+" "+rec.SecondAmount, "second_name and second_amount, or neither",
+			"the second drug of the container is half described", path...)
+	}
+	if rec.SecondName != "" && rec.SecondAmount != "" {
 		if p.SecondAmount, err = quantity.ParseAmount(rec.SecondAmount); err != nil {
 			r.badText(rec.SecondAmount, err, at("second_amount")...)
 		}
@@ -222,6 +236,10 @@ func (r *reader) contents(p *Presentation, rec presentationRecord, at func(strin
 		v, err := quantity.ParseVolume(rec.Volume)
 		if err != nil {
 			r.badText(rec.Volume, err, at("volume")...)
+		}
+		if rec.Add != "" || rec.Displacement != nil || len(rec.AddFluids) > 0 {
+			r.fault(refusal.KeyConflict, rec.Form, "a powder, or none of add, add_fluids and displacement",
+				"what is no powder is not mixed", at("form")...)
 		}
 		p.Volume = v
 		return
@@ -294,6 +312,7 @@ func (r *reader) bounds(rec concentrationRecord, path ...any) Bounds {
 		r.fault(refusal.ValueUnknown, b.Use+", "+b.Line, "use bolus or infusion; line any, peripheral or central",
 			"the row does not say what it is for", path...)
 	}
+	r.ageOrder(b.AgeFrom, b.AgeTo, path)
 	if b.Low.Given() && b.High.Given() {
 		if n, err := b.Low.Value.Cmp(b.High.Value); err != nil || n > 0 {
 			r.fault(refusal.KeyConflict, b.Low.Text+" to "+b.High.Text, "low not above high, counted the same way",
