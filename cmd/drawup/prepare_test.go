@@ -319,3 +319,19 @@ func abs(x ink.Micrometre) ink.Micrometre {
 	}
 	return x
 }
+
+// Rule N26 on a terminal: no line ends between a number and its unit, or inside
+// a number that a blank groups.
+func TestTerminalLinesKeepNumberAndUnit(t *testing.T) {
+	for width := 12; width < 60; width++ {
+		lines := wrap("of 10\u00a0000 units in 250 mL over 24 h, at 5 mL/h the syringe  is empty", width)
+		for i, line := range lines {
+			if last := line[len(line)-1]; i < len(lines)-1 && last >= '0' && last <= '9' {
+				t.Errorf("width %d: got a line that ends in a number: %q", width, line)
+			}
+		}
+		if got := strings.Join(lines, " "); got != "of 10\u00a0000 units in 250 mL over 24 h, at 5 mL/h the syringe is empty" {
+			t.Errorf("width %d: got %q", width, got)
+		}
+	}
+}

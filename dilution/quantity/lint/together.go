@@ -10,7 +10,7 @@ func Glue(text string) string {
 	for i, w := range words {
 		switch {
 		case i == 0:
-		case endsInDigit(words[i-1]) && startsUnit(w):
+		case Tied(words[i-1], w):
 			b.WriteString("\u00a0")
 		default:
 			b.WriteString(" ")
@@ -20,8 +20,10 @@ func Glue(text string) string {
 	return b.String()
 }
 
-func endsInDigit(w string) bool {
-	return w != "" && w[len(w)-1] >= '0' && w[len(w)-1] <= '9'
+// Tied reports that a word that follows another is the unit of its number.
+func Tied(before, word string) bool {
+	n := len(before)
+	return n > 0 && before[n-1] >= '0' && before[n-1] <= '9' && startsUnit(word)
 }
 
 // startsUnit reports a word that is a unit or begins with one: "mg/mL,".
