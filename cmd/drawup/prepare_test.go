@@ -243,10 +243,10 @@ func TestLabelsDecode(t *testing.T) {
 }
 
 // readSymbol reads one barcode out of a picture of the page. A scanner sees many
-// pictures of a label; the reader here gets up to three, cut closer or wider.
+// pictures of a label; the reader here gets up to five, cut closer or wider.
 func readSymbol(img *image.RGBA, s ink.Symbol, dpi int) (text string, err error) {
 	side := ink.Micrometre(len(s.Rows)) * s.Module
-	for _, quiet := range []ink.Micrometre{2 * s.Module, s.Module, 3 * s.Module} {
+	for _, quiet := range []ink.Micrometre{2 * s.Module, s.Module, 3 * s.Module, 3 * s.Module / 2, 5 * s.Module / 2} {
 		text, err = readback.DecodeDataMatrix(readback.Crop(img, s.X-quiet, s.Y-quiet, side+2*quiet, side+2*quiet, dpi))
 		if err == nil {
 			return text, nil
