@@ -5,6 +5,7 @@ import (
 	"math/big"
 	"strings"
 
+	"drawup/dilution/body"
 	"drawup/dilution/formulary"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
@@ -100,45 +101,52 @@ func (w *work) localShare() (*big.Rat, string, *refusal.Reason) {
 // localMost is the lowest maximum that fits the patient, as an amount: of one
 // time, or for an infusion, which runs for hours, of a day.
 func (w *work) localMost(day bool) (quantity.Amount, error) {
-	var most quantity.Amount
-	take := func(a quantity.Amount) error {
-		if !most.Given() {
-			most = a
+	m, err := w.localMaximum(day, func(formulary.LocalMaximum) bool { return true })
+	return m.amount, err
+}
+
+// A localFigure is a maximum for one patient, and the figure behind it.
+type localFigure struct {
+	amount        quantity.Amount
+	words, source string
+	by            body.Kind // the weight that the figure goes by
+}
+
+// localMaximum is the lowest maximum of the rows that fit the patient and are
+// kept: of one time, or of a day. It is not given where none is stored.
+func (w *work) localMaximum(day bool, kept func(formulary.LocalMaximum) bool) (localFigure, error) {
+	var most localFigure
+	take := func(x localFigure) error {
+		if !most.amount.Given() {
+			most = x
 			return nil
 		}
-		n, err := a.Cmp(most)
+		n, err := x.amount.Cmp(most.amount)
 		if err == nil && n < 0 {
-			most = a
+			most = x
 		}
 		return err
 	}
+	s := w.plan.Style
 	for _, m := range w.plan.Drug.LocalMaxima {
-		if !m.Fits(w.size.Age) {
+		if !m.Fits(w.size.Age) || !kept(m) {
 			continue
 		}
+		f := m.PerKg
 		if day {
-			if m.DayMax.Given() {
-				a, err := w.amountOf(m.DayMax.Value, m.By)
-				if err != nil {
-					return most, err
-				}
-				if err := take(a); err != nil {
-					return most, err
-				}
-			}
-			continue
+			f = m.DayMax
 		}
-		if m.PerKg.Given() {
-			a, err := w.amountOf(m.PerKg.Value, m.By)
+		if f.Given() {
+			a, err := w.amountOf(f.Value, m.By)
+			if err == nil {
+				err = take(localFigure{a, s.Dose(f.Value), sourceWords(f.Source, f.Unverified), m.By})
+			}
 			if err != nil {
 				return most, err
 			}
-			if err := take(a); err != nil {
-				return most, err
-			}
 		}
-		if m.Total.Given() {
-			if err := take(m.Total.Value); err != nil {
+		if f := m.Total; f.Given() && !day {
+			if err := take(localFigure{f.Value, s.Amount(f.Value), sourceWords(f.Source, f.Unverified), m.By}); err != nil {
 				return most, err
 			}
 		}

@@ -147,6 +147,7 @@ type shownBounds struct {
 	Use    string       `json:"use"`
 	Line   string       `json:"line"`
 	Routes []string     `json:"routes,omitempty"`
+	Whom   string       `json:"for,omitempty"` // indication and ages
 	Low    *shownFigure `json:"low,omitempty"`
 	High   *shownFigure `json:"high,omitempty"`
 }
@@ -252,7 +253,7 @@ func drugOf(s quantity.Style, d formulary.Drug) *shownDrug {
 	dose := func(x quantity.Dose) *quantityJSON { return doseJSON(s, x) }
 	strength := func(c quantity.Concentration) *quantityJSON { return concentrationJSON(s, c) }
 	for _, b := range d.Bounds {
-		out.Concentrations = append(out.Concentrations, shownBounds{b.Use, b.Line, b.Routes, shownOf(b.Low, strength), shownOf(b.High, strength)})
+		out.Concentrations = append(out.Concentrations, shownBounds{b.Use, b.Line, b.Routes, b.Whom(), shownOf(b.Low, strength), shownOf(b.High, strength)})
 	}
 	for _, m := range d.LocalMaxima {
 		out.LocalMaxima = append(out.LocalMaxima, shownLocal{m.WithAdrenaline, formulary.Rule[quantity.Dose]{AgeFrom: m.AgeFrom, AgeTo: m.AgeTo}.Ages(), m.By.String(),

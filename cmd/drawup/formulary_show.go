@@ -141,7 +141,10 @@ func (p proof) presentation(x shownPresentation) {
 	p.sourced("contents", contentsOf(x), x.shownSource)
 	if x.Added != nil {
 		p.item("to be mixed", "add "+x.Added.Printed+" of "+strings.Join(quoted(x.AddFluids), " or "))
-		if x.Displacement == nil {
+		switch {
+		case x.Displacement == nil && x.Volume != nil:
+			p.item("obtained", x.Volume.Printed+" when mixed, as the label says")
+		case x.Displacement == nil:
 			p.item("displacement", "not stored: no concentration can be worked, so every use is refused")
 		}
 	}
@@ -253,7 +256,7 @@ func (p proof) bounds(list []shownBounds) {
 		p.head("concentration: none is stored")
 	}
 	for _, b := range list {
-		p.head("concentration, %s, %s line%s", b.Use, b.Line, tailed(", ", strings.Join(b.Routes, ", ")))
+		p.head("concentration, %s, %s line%s", b.Use, b.Line, tailed(", ", strings.Join(b.Routes, ", "))+tailed(", for ", b.Whom))
 		p.figure("at least", b.Low)
 		p.figure("at most", b.High)
 	}

@@ -192,6 +192,9 @@ func (p *heldPage) held(name, text, at string) {
 		want = append(want, quantity.UK().Volume(v))
 	case "id", "for":
 		want = []string{fmt.Sprintf("%q", text)}
+		if strings.Contains(at, "concentration") {
+			want = []string{", for " + text}
+		}
 	case "by":
 		want = []string{"goes by " + byWords(text)}
 	case "jurisdiction": // of a standard preparation, with or without whom it is for

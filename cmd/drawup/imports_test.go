@@ -23,7 +23,7 @@ func mayImport() map[string][]string {
 	return map[string][]string{
 		"cmd/drawup":                {"*"},
 		"dilution":                  plan,
-		"dilution/body":             {"dilution/quantity"},
+		"dilution/body":             {"dilution/quantity", "dilution/roots"},
 		"dilution/formulary":        {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
 		"dilution/formulary/verify": {"dilution/body", "dilution/formulary", "dilution/quantity", "dilution/quantity/lint", "dilution/refusal", "dilution/salts"},
 		"dilution/order":            {"dilution/quantity", "dilution/quantity/lint", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
@@ -32,12 +32,14 @@ func mayImport() map[string][]string {
 		"dilution/quantity/lint":    {}, // judges the printer, so shares nothing with it
 		"dilution/recheck":          {}, // the second route shares nothing
 		"dilution/refusal":          {},
+		"dilution/roots":            {},
 		"dilution/salts":            {"dilution/quantity"},
-		"dilution/syringe":          {"dilution/quantity"},
+		"dilution/syringe":          {"dilution/quantity", "dilution/roots"},
 		"dilution/tomlfile":         {"dilution/refusal"},
 		"fonts":                     {},
 		"labels":                    said, // no page, no font, no PDF
 		"labels/gs1":                {},
+		"labels/gs1/generate":       {}, // run by go generate
 		"labels/sheets":             append([]string{"labels"}, said...),
 		"layouts":                   {"labels", "labels/gs1", "labels/sheets", "layouts/ink", "fonts", "dilution/refusal", "dilution/recheck"},
 		"layouts/ink":               {},

@@ -8,6 +8,7 @@ import (
 	"drawup/dilution"
 	"drawup/dilution/pump"
 	"drawup/dilution/quantity"
+	"drawup/labels"
 )
 
 // A planDocument is plan.json: one order, worked. It is stable: keys are added,
@@ -65,7 +66,8 @@ type syringeJSON struct {
 	Infusion      *infusionPlan `json:"infusion,omitempty"`
 	UseBy         useByPlan     `json:"use_by"`
 	Serial        string        `json:"serial"`
-	Code          string        `json:"code"`
+	Code          string        `json:"code"`  // the shortest form of the barcode
+	Codes         []string      `json:"codes"` // all forms, the fullest first; the label has one of them
 	Cautions      []reasonJSON  `json:"cautions"`
 }
 
@@ -135,7 +137,7 @@ func planOf(j *job) *planDocument {
 		Digest:    m.Digest, Syringes: []syringeJSON{},
 	}
 	for i, p := range j.list.Plans {
-		doc.Syringes = append(doc.Syringes, syringePlan(p, m.SerialOf(p.Number), j.labels[i].Code.Text))
+		doc.Syringes = append(doc.Syringes, syringePlan(p, m.SerialOf(p.Number), j.labels[i].Codes))
 	}
 	for _, l := range j.list.LeftOut {
 		doc.LeftOut = append(doc.LeftOut, leftOutJSON{l.Number, l.Drug, reasonsJSON(l.Reasons)})
@@ -143,7 +145,7 @@ func planOf(j *job) *planDocument {
 	return doc
 }
 
-func syringePlan(p dilution.Plan, serial, code string) syringeJSON {
+func syringePlan(p dilution.Plan, serial string, codes []labels.Cell) syringeJSON {
 	s, m := p.Style, p.Mixture
 	out := syringeJSON{
 		Number: p.Number, Patient: p.Patient.ID.Value, Drug: p.Name, ATC: p.Drug.ATC,
@@ -157,7 +159,10 @@ func syringePlan(p dilution.Plan, serial, code string) syringeJSON {
 		},
 		LeftVolume: volumeJSON(s, m.LeftVolume), LeftAmount: amountJSON(s, m.LeftAmount),
 		UseBy:  useByPlan{p.UseBy.At.Format(time.RFC3339), p.UseBy.Minutes, p.UseBy.Won, p.UseBy.Source},
-		Serial: serial, Code: code, Cautions: reasonsJSON(p.Cautions),
+		Serial: serial, Cautions: reasonsJSON(p.Cautions),
+	}
+	for _, code := range codes {
+		out.Codes, out.Code = append(out.Codes, code.Text), code.Text
 	}
 	if m.DiluentVolume.Given() {
 		out.DiluentVolume = volumeJSON(s, m.DiluentVolume)

@@ -39,6 +39,7 @@ func limitEntries() []Entry {
 		warns(DoseBelowSoft, Limits, "R10", "The dose is below what is usual."),
 		stops(DoseBelowHard, Limits, "R11", "The dose is below the lowest that may be given."),
 		stops(DoseAboveTotal, Limits, "R11", "The dose is above the absolute maximum, whatever the weight."),
+		warns(OneWeightOnly, Limits, "R10", "A syringe was mixed for one body weight and fits no other patient."),
 		either(DoseAboveFirst, Limits, "R10", "The dose is above the highest first dose, or above the highest repeat too."),
 		stops(DoseAboveDay, Limits, "R11", "One dose is more than all doses of a day, or of a course, may come to."),
 		warns(AmountAboveCourse, Limits, "R10", "The syringe holds more than all doses of a day, or of a course, may come to."),
