@@ -50,6 +50,7 @@ const (
 // A Rule is one rule of numbers, units and names.
 type Rule struct {
 	Code     string // "N01"
+	Fault    string // what is wrong, without a digit: "no blank between number and unit"
 	Says     string // what to write
 	Source   string // spelled out
 	Severity Severity

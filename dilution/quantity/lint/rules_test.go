@@ -63,7 +63,7 @@ func TestExamples(t *testing.T) {
 func TestAllRulesAreThere(t *testing.T) {
 	seen := map[string]bool{}
 	for _, r := range lint.Rules() {
-		if seen[r.Code] || r.Says == "" || r.Source == "" || r.Severity == 0 || r.Scope == 0 {
+		if seen[r.Code] || r.Says == "" || r.Fault == "" || strings.ContainsAny(r.Fault, "0123456789") || r.Source == "" || r.Severity == 0 || r.Scope == 0 {
 			t.Errorf("%s: twice, or something is missing: %+v", r.Code, r)
 		}
 		seen[r.Code] = true

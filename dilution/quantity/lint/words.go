@@ -9,15 +9,18 @@ import (
 // wordRules are about names, words and dates.
 func wordRules() []Rule {
 	return []Rule{
-		{Code: "N04", Says: "a blank between a drug's name and its number",
+		{Code: "N04", Fault: "no blank between name and number",
+			Says:   "a blank between a drug's name and its number",
 			Source: errorProne, Severity: Stop, Scope: EveryText,
 			Wrong: []string{"lidocaine20 mg/mL", "propofol10 mg"}, Right: []string{"lidocaine 20 mg/mL", "HM-01", "B12 1 mg"},
 			find: each(`\b(([A-Za-z]{4,})(\d[\d.,]*))`+gap+doseUnit+`\b`, func(_ House, g []string) string { return g[2] + " " + g[3] })},
-		{Code: "N12", Says: "drugs and salts by their full names, no letters for them",
+		{Code: "N12", Fault: "letters for the name of a drug",
+			Says:   "drugs and salts by their full names, no letters for them",
 			Source: doNotUse + "; " + newZealand, Severity: Stop, Scope: EveryText,
 			Wrong: []string{"KCl 20 mmol", "EPI 1 mg", "SUX given", "MS 10 mg", "GTN patch"}, Right: []string{"potassium chloride", "EPINEPHrine", "Ms Example"},
 			find: each(`\b(EPI|NOREPI|NEO|SUX|ROC|VEC|VASO|KCl|KCL|MgSO4|MSO4|MS|NTG|GTN|SNP|TXA|PHE|NaHCO3|CaCl2?)\b`, inFull)},
-		{Code: "N14", Says: "words for @ & + < >",
+		{Code: "N14", Fault: "a sign that stands for a word",
+			Says:   "words for @ & + < >",
 			Source: doNotUse + ", further items; list of error-prone abbreviations of 2004", Severity: Warn, Scope: EveryText,
 			Wrong: []string{"A + B", "< 10 mg", "fentanyl & midazolam", "> 5 mL", "give @ 10:00"}, Right: []string{"A and B", "less than 10", "+01:00", "Na+"},
 			find: all(
@@ -26,7 +29,8 @@ func wordRules() []Rule {
 				each(`\w (\+) \w`, func(House, []string) string { return "and" }),
 				each(`([<>])\s*\d`, nil),
 				each(`([<>]) \d`, func(_ House, g []string) string { return map[string]string{"<": "less than", ">": "more than"}[g[1]] }))},
-		{Code: "N25", Says: "a date that has one reading, 01 Dec 2026 or 2026-12-01, on the 24-hour clock; use-by with its time",
+		{Code: "N25", Fault: "a date or time that has two readings, or a use-by without its time",
+			Says:   "a date that has one reading, 01 Dec 2026 or 2026-12-01, on the 24-hour clock; use-by with its time",
 			Source: ourOwn + "; expiry dates after US Pharmacopeia since 2023", Severity: Stop, Scope: EveryText,
 			Wrong: []string{"03/04/25", "3.4.2025", "1-12-2026", "01 Dec 26", "7:30 pm", "7 a.m.", "use by 01 Dec 2026"},
 			Right: []string{"2025-04-03 14:30", "01 Dec 2026 19:30", "use by 01 Dec 2026 19:30", "5.4.2 and 5.4.3"},
