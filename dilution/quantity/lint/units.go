@@ -10,7 +10,7 @@ func unitRules() []Rule {
 			Source: errorProne + "; " + brochure, Severity: Stop, Scope: EveryText,
 			Wrong: []string{"10mg", "100units", "2.5mL", "5micrograms"}, Right: []string{"10 mg", "100 units", "N05CM18", "m2"},
 			find: each(`\b((\d[\d.,]*)(mg|g|kg|mcg|ng|micrograms?|nanograms?|mL|ml|L|units?|milliunits?|mmol|micromol|mEq))\b`,
-				func(_ House, g []string) string { return g[2] + " " + g[3] })},
+				parted)},
 		{Code: "N05", Fault: "a letter for units",
 			Says:   "units in full, for international units too; no U, u, IU: read as 0, 4 or IV",
 			Source: errorProne + "; " + doNotUse + "; " + bnf, Severity: Stop, Scope: EveryText,
@@ -76,6 +76,15 @@ func unitRules() []Rule {
 			Says:   "number and unit in digits and letters of one size",
 			Source: ourOwn, Severity: Warn, Scope: OnPaper, Held: "a figure is one piece of text in one size: layouts, TestFiguresHaveOneSize"},
 	}
+}
+
+// parted is a number without zeros too many, a blank, and its unit.
+func parted(_ House, g []string) string {
+	n := g[2]
+	if strings.Contains(n, ".") {
+		n = trimmed(n)
+	}
+	return n + " " + g[3]
 }
 
 // second is the second group of a match.
