@@ -72,18 +72,19 @@ func numberRules() []Rule {
 		{Code: "N21", Fault: "a Roman numeral, a fraction or a power of ten",
 			Says:   "plain Arabic digits: no Roman numerals, no fractions, no powers of ten",
 			Source: errorProne, Severity: Stop, Scope: EveryText,
-			Wrong: []string{"V mg", "1/2 mL", "\u00bd mL", "1e-05 g", "4.5E+03 units"}, Right: []string{"5 mg", "0.5 mL", "IV 5 mg", "5 mL/h"},
+			Wrong: []string{"V mg", "1/2 mL", "\u00bd mL", "1e-05 g", "4.5E+03 units", "1e3 units"}, Right: []string{"5 mg", "0.5 mL", "IV 5 mg", "5 mL/h", "ref 3e607088"},
 			find: all(
 				each(`(?:^|[\s(])([IVX]+)`+blank+doseUnit+`\b`, roman),
 				each(`\b(\d+/\d+)`+gap+doseUnit+`\b`, halves),
 				each(`([\x{00BC}-\x{00BE}\x{2150}-\x{215E}])`, nil),
-				each(`\b(\d+(?:\.\d+)?[eE][+-]?\d+)\b`, nil))},
+				each(`\b(\d+(?:\.\d+)?[eE][+-]\d+|\d+\.\d+[eE]\d+)\b`, nil),
+				each(`\b(\d+[eE]\d+)`+gap+doseUnit+`\b`, nil))},
 		{Code: "N28", Fault: "more digits than a figure can mean",
 			Says:   "a number that was rounded has three digits, one that is exact four at most; more stand where the working is shown",
 			Source: ourOwn, Severity: Warn, Scope: EveryText,
 			Wrong: []string{"4.999999 mg/mL", "0.30000000000000004 mg"}, Right: []string{"5 mg/mL", "99.55 mg", "0.0405 mg", "1,234.5 mL", "62.3456 kg"},
-			find: eachIf(`(?:^|[^\d.,])(\d[\d,]*\.\d{3,})`+gap+`((?:`+doseUnit+`|%))`, func(g []string) bool {
-				return g[2] != "kg" && len(strings.TrimLeft(digits(g[1]), "0")) > 4
+			find: eachIf(`(?:^|[^\d.,])(\d[\d,]*\.\d{3,})`+gap+`((?:`+doseUnit+`|%)(?:/mol)?)`, func(g []string) bool {
+				return g[2] != "kg" && g[2] != "g/mol" && len(strings.TrimLeft(digits(g[1]), "0")) > 4
 			}, nil)},
 	}
 }

@@ -13,7 +13,7 @@ func strengthRules() []Rule {
 		{Code: "N08", Fault: "a ratio for the strength of one drug",
 			Says:   "no ratio strength for one drug: mg/mL or micrograms/mL",
 			Source: errorProne + "; " + usp7 + "; " + reportedFDA, Severity: Stop, Scope: EveryText,
-			Wrong: []string{"adrenaline 1:1000", "adrenaline 1 in 10,000", "1 : 200 000", "1:10000"}, Right: []string{"1 in 5 mL", "1:1", "lidocaine with adrenaline 5 micrograms/mL (1 in 200,000)"},
+			Wrong: []string{"adrenaline 1:1000", "adrenaline 1 in 10,000", "1 : 200 000", "1:10000"}, Right: []string{"1 in 5 mL", "1:1", "ISO 7886-1:1993", "lidocaine with adrenaline 5 micrograms/mL (1 in 200,000)"},
 			find: ratios(false)},
 		{Code: "N08b", Fault: "a ratio without micrograms/mL before it",
 			Says:   "a local anaesthetic with adrenaline may keep the ratio, in brackets behind micrograms/mL",
@@ -24,7 +24,7 @@ func strengthRules() []Rule {
 			Says:   "per cent never alone: mg/mL first, per cent in brackets at most; the name of a diluent keeps its own",
 			Source: ourOwn + "; ASTM D4774 shows both", Severity: Stop, Scope: EveryText,
 			Wrong: []string{"lidocaine 2 %", "0.5%", "bupivacaine 0.5 % heavy", "sodium bicarbonate 8.4 %"},
-			Right: []string{"lidocaine 20 mg/mL (2 %)", "in glucose 5 %", "sodium chloride 0.9 %", "plus or minus 10 %", "1.12 % more", "within 5 % of it"},
+			Right: []string{"lidocaine 20 mg/mL (2 %)", "in glucose 5 %", "sodium chloride 0.9 %", "plus or minus 10 %", "5.3 mL/h, +0.952 %", "0 %", "1.12 % more", "within 5 % of it"},
 			find:  percents},
 		{Code: "N19", Fault: "an amount in a volume without the concentration for each mL",
 			Says:   "the concentration for each mL comes first; amount in volume second",
@@ -68,7 +68,7 @@ func ratios(mixture bool) func(House, string) []match {
 		local := strings.Contains(low, "caine") && (strings.Contains(low, "adrenaline") || strings.Contains(low, "epinephrine"))
 		var out []match
 		for _, at := range ratio.FindAllStringSubmatchIndex(text, -1) {
-			if counted.MatchString(text[at[1]:]) || local != mixture || local && behind.MatchString(text[:at[0]]) {
+			if counted.MatchString(text[at[1]:]) || local != mixture || at[0] > 0 && text[at[0]-1] == '-' || local && behind.MatchString(text[:at[0]]) {
 				continue
 			}
 			out = append(out, match{from: at[0], to: at[1], fix: perMl(h, strings.TrimLeft(text[at[0]+1:at[1]], " :in"))})
@@ -121,6 +121,9 @@ func percents(_ House, text string) []match {
 		start := at[0]
 		for start > 0 && strings.ContainsRune("0123456789.,", rune(text[start-1])) {
 			start--
+		}
+		if text[start] == '0' && !strings.ContainsAny(text[start:at[1]], "123456789") || start > 0 && strings.ContainsRune("+-", rune(text[start-1])) {
+			continue // nothing, or a change
 		}
 		if notStrength.MatchString(text[:start]) || partOf.MatchString(text[at[1]:]) {
 			continue
@@ -185,7 +188,7 @@ func baseOrSalt(_ House, drug string, lines []string) []match {
 // asMillimoles finds a mass of an electrolyte on a label without mmol.
 func asMillimoles(_ House, drug string, lines []string) []match {
 	text := strings.Join(lines, "\n")
-	if !electrolyte.MatchString(drug) || strings.Contains(text, "mmol") {
+	if !electrolyte.MatchString(drug) || strings.Contains(text, "mol") {
 		return nil
 	}
 	return first(aMass, text)

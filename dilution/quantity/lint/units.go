@@ -46,7 +46,7 @@ func unitRules() []Rule {
 			Source: errorProne, Severity: Stop, Scope: EveryText,
 			Wrong: []string{"10 mg. in", "10 mg.", "5 mL. then"}, Right: []string{"10 mg in", "Draw up 5 mL. Then mix.", "Make it up to 50 mL."},
 			find: all(
-				each(`\d`+gap+`((`+doseUnit+`)\.)\s+[a-z(]`, second),
+				each(`\d`+gap+`((`+doseUnit+`)\.)\s+[a-z]`, second),
 				eachIf(`^(?:.*\d`+gap+`)?((`+doseUnit+`)\.)\s*$`, func(g []string) bool { return len(strings.Fields(g[0])) < 4 }, second))},
 		{Code: "N11", Fault: "an s on a symbol, or hr for h",
 			Says:   "no s on a symbol, hour as h: mg, mL, g, kg, h",

@@ -17,8 +17,8 @@ func wordRules() []Rule {
 		{Code: "N12", Fault: "letters for the name of a drug",
 			Says:   "drugs and salts by their full names, no letters for them",
 			Source: doNotUse + "; " + newZealand, Severity: Stop, Scope: EveryText,
-			Wrong: []string{"KCl 20 mmol", "EPI 1 mg", "SUX given", "MS 10 mg", "GTN patch"}, Right: []string{"potassium chloride", "EPINEPHrine", "Ms Example"},
-			find: each(`\b(EPI|NOREPI|NEO|SUX|ROC|VEC|VASO|KCl|KCL|MgSO4|MSO4|MS|NTG|GTN|SNP|TXA|PHE|NaHCO3|CaCl2?)\b`, inFull)},
+			Wrong: []string{"KCl 20 mmol", "EPI 1 mg", "SUX given", "MS 10 mg", "GTN patch"}, Right: []string{"potassium chloride", "EPINEPHrine", "Ms Example", "calcium chloride dihydrate CaCl2.2H2O: 147.01 g/mol"},
+			find: shortNames},
 		{Code: "N14", Fault: "a sign that stands for a word",
 			Says:   "words for @ & + < >",
 			Source: doNotUse + ", further items; list of error-prone abbreviations of 2004", Severity: Warn, Scope: EveryText,
@@ -42,6 +42,23 @@ func wordRules() []Rule {
 				each(`\b(\d{1,2}(?:[:.]\d{2})?\s?(?:[ap]m\b|[AP]M\b|[ap]\.m\.))`, clock),
 				each(`(?i)\b(use[ -]by (?:\d{2} [A-Z][a-z]{2} \d{4}|\d{4}-\d{2}-\d{2}))(?:$|[^\d ]| [^\d])`, nil))},
 	}
+}
+
+var shortName = regexp.MustCompile(`\b(EPI|NOREPI|NEO|SUX|ROC|VEC|VASO|KCl|KCL|MgSO4|MSO4|MS|NTG|GTN|SNP|TXA|PHE|NaHCO3|CaCl2?)\b`)
+
+// shortNames finds letters that stand for a drug; a chemical formula beside the
+// name in full explains itself.
+func shortNames(h House, text string) []match {
+	var out []match
+	for _, at := range shortName.FindAllStringIndex(text, -1) {
+		fix := inFull(h, []string{"", text[at[0]:at[1]]})
+		hydrate := strings.HasPrefix(text[at[1]:], ".") && len(text) > at[1]+1 && text[at[1]+1] >= '0' && text[at[1]+1] <= '9'
+		if hydrate || fix != "" && strings.Contains(text[:at[0]], fix) {
+			continue
+		}
+		out = append(out, match{from: at[0], to: at[1], fix: fix})
+	}
+	return out
 }
 
 // inFull is what the letters stand for, where they stand for one thing. MS is
