@@ -21,7 +21,7 @@ func Check(f *formulary.Formulary) refusal.List {
 		c := &check{drug: d}
 		for _, step := range []func(){
 			c.jurisdictions, c.names, c.contents, c.powders, c.factors, c.strengths, c.bounds,
-			c.doses, c.rates, c.overlaps, c.maxima, c.standards, c.stability,
+			c.doses, c.rates, c.overlaps, c.maxima, c.standards, c.stability, c.wording,
 		} {
 			step()
 		}
