@@ -47,13 +47,17 @@ func mayImport() map[string][]string {
 		"layouts/ink":               {},
 		"layouts/pdf":               {"layouts/ink", "fonts"},
 		"layouts/pdf/readback":      {"layouts/ink"}, // from tests only
+
+		"dilution/formulary/published": {"dilution/formulary"}, // from tests only
 	}
 }
 
 const module = "drawup"
 
 // onlyFromTests lists packages that no shipped code may import.
-func onlyFromTests() []string { return []string{"layouts/pdf/readback"} }
+func onlyFromTests() []string {
+	return []string{"layouts/pdf/readback", "dilution/formulary/published"}
+}
 
 // goFiles lists the Go files of the module by package folder.
 func goFiles(t *testing.T, tests bool) map[string][]string {
