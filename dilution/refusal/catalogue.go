@@ -43,7 +43,7 @@ func All() []Entry {
 	var all []Entry
 	for _, part := range [][]Entry{
 		quantityEntries(), requestEntries(), fileEntries(), patientEntries(),
-		choiceEntries(), limitEntries(), measuringEntries(), paperEntries(),
+		choiceEntries(), limitEntries(), measuringEntries(), shelfEntries(), paperEntries(),
 	} {
 		all = append(all, part...)
 	}
