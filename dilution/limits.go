@@ -12,10 +12,7 @@ import (
 // checkConcentration holds the syringe against the bounds of its use (R12:
 // both ends count).
 func (w *work) checkConcentration() bool {
-	line := "peripheral"
-	if w.o.Line.Given() {
-		line = w.o.Line.Value
-	}
+	line := w.line()
 	rows, central := w.boundsFor(line)
 	if len(rows) == 0 {
 		remedy := "add bounds with their source to the formulary (whoever keeps it does that)"
@@ -36,6 +33,14 @@ func (w *work) checkConcentration() bool {
 		ok = w.within(b) && ok
 	}
 	return w.diluentStrength() && ok
+}
+
+// line is the ordered line, a peripheral one when the order is silent.
+func (w *work) line() string {
+	if w.o.Line.Given() {
+		return w.o.Line.Value
+	}
+	return "peripheral"
 }
 
 // boundsFor is the rows for this use, route and line. A row that names the
