@@ -87,6 +87,9 @@ func (w *work) oneWeight(part *InfusionPart) {
 		return
 	}
 	part.Each = w.o.Each.Value
+	if a, err := WeightMade(part.Each, part.Weight, w.o.Volume.Value); err == nil {
+		part.RuleAmount = a
+	}
 	s := w.plan.Style
 	near := "the formulary lists no standard preparation to use in its place"
 	if st, _, ok := NearestStandard(w.plan.Drug, w.plan.Mixture.Concentration, w.line()); ok {

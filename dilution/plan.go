@@ -129,8 +129,15 @@ type InfusionPart struct {
 	Priming, DeadSpace quantity.Volume // not given: nothing is counted off
 	// Each is the dose rate that 1 mL/h gives, for a mixture made for one weight.
 	Each quantity.DoseRate
-	Rule formulary.Rule[quantity.DoseRate]
+	// RuleAmount is what the rule of such a mixture comes to, before the drug is
+	// moved to a graduation.
+	RuleAmount quantity.Amount
+	Rule       formulary.Rule[quantity.DoseRate]
 }
+
+// CountsOff reports whether part of the syringe never reaches the patient: it
+// fills the line, or stays behind.
+func (p InfusionPart) CountsOff() bool { return p.Priming.Given() || p.DeadSpace.Given() }
 
 // A UseBy is until when a syringe may be used, and why.
 type UseBy struct {
@@ -150,23 +157,27 @@ type Plan struct {
 	Order  order.Syringe // as typed
 	// Settled is the order with what the planner chose filled in: a concentration
 	// and a volume, a standard preparation. It is Order where nothing was open.
-	Settled      order.Syringe
-	Choices      []Choice
-	Patient      order.Patient
-	Size         body.Size
-	Style        quantity.Style
-	Drug         formulary.Drug
-	Name         string // of the drug, as the papers print it
-	Other        string // its name elsewhere, where the site prints both
-	Presentation formulary.Presentation
-	Route        string
-	Mixture      Mixture
-	Dose         *DosePart     // nil when no dose was ordered
-	Infusion     *InfusionPart // nil for a bolus syringe
-	Prepared     time.Time
-	UseBy        UseBy
-	Standard     string // the standard preparation's id, if it is one
-	Cautions     refusal.List
+	Settled   order.Syringe
+	Choices   []Choice
+	FromShelf bool // planned from a shelf
+	// NeedleDeadSpace is the shelf's figure for the needle that draws; not given
+	// without one.
+	NeedleDeadSpace quantity.Volume
+	Patient         order.Patient
+	Size            body.Size
+	Style           quantity.Style
+	Drug            formulary.Drug
+	Name            string // of the drug, as the papers print it
+	Other           string // its name elsewhere, where the site prints both
+	Presentation    formulary.Presentation
+	Route           string
+	Mixture         Mixture
+	Dose            *DosePart     // nil when no dose was ordered
+	Infusion        *InfusionPart // nil for a bolus syringe
+	Prepared        time.Time
+	UseBy           UseBy
+	Standard        string // the standard preparation's id, if it is one
+	Cautions        refusal.List
 }
 
 // A List is all syringes of an order that are made, in making order.

@@ -143,6 +143,9 @@ func newPlan(
 		Height: w.patient.Height.Value, Weight: w.patient.Weight.Value,
 	}
 	w.plan.Size = w.size
+	if s.stock != nil {
+		w.plan.FromShelf, w.plan.NeedleDeadSpace = true, s.stock.needle
+	}
 	if w.findDrug() && w.nameIt() {
 		w.make()
 	}
