@@ -99,11 +99,14 @@ func (w *work) noPumpTakes(nominal quantity.Volume, field string, pos refusal.Po
 	if len(takes) > 0 {
 		want = joinOr(unique(takes))
 	}
+	message := fmt.Sprintf("no pump on the shelf takes a %s syringe", s.Volume(nominal))
+	if !w.o.Size.Given() && w.plan.Mixture.FinalVolume.Given() {
+		message = fmt.Sprintf("no syringe that a pump on the shelf takes holds %s", s.Volume(w.plan.Mixture.FinalVolume))
+	}
 	return refusal.Reason{
 		Code: refusal.SyringeNotForPump, Field: field, Got: s.Volume(nominal), Want: want, Rule: "R8", Pos: pos,
-		Message: fmt.Sprintf("no pump on the shelf takes a %s syringe, and no syringe that one takes holds %s",
-			s.Volume(nominal), s.Volume(w.plan.Mixture.FinalVolume)),
-		Remedy: "order less, or another size; or put on the shelf's list what the pump takes",
+		Message: message,
+		Remedy:  "order less, or another size; or put on the shelf's list what the pump takes",
 	}
 }
 

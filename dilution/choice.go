@@ -3,6 +3,7 @@ package dilution
 import (
 	"fmt"
 	"math/big"
+	"slices"
 	"strings"
 
 	"drawup/dilution/refusal"
@@ -23,16 +24,16 @@ type Weighed struct {
 	Code        refusal.Code
 }
 
-// choose writes down what was settled for the syringe, best being the way that is
-// taken and all every way that was weighed, the taken one first.
-func (w *work) choose(best *work, all []trial) {
+// choose writes down what was settled for the syringe; all is every way that was
+// weighed, the taken one first.
+func (w *work) choose(all []trial) {
 	w.plan.Choices = []Choice{w.presentationChoice(all), w.containerChoice()}
 	add := func(c Choice) {
 		if c.What != "" {
 			w.plan.Choices = append(w.plan.Choices, c)
 		}
 	}
-	add(w.mixtureChoice())
+	add(w.mixtureChoice(all))
 	add(w.measuringChoice())
 	add(w.givingChoice())
 	add(w.diluentChoice())
@@ -43,7 +44,7 @@ func (w *work) choose(best *work, all []trial) {
 // presentationChoice is which presentation is opened, and against which others.
 func (w *work) presentationChoice(all []trial) Choice {
 	c := Choice{What: "presentation", Took: packNames(w.plan.Mixture.Packs)}
-	others := all[1:]
+	others := unlike(all, func(a, b way) bool { return a.place != b.place || a.variant == b.variant })
 	switch {
 	case w.plan.Order.Presentation.Given():
 		c.Why = "it is the one that is ordered"
@@ -53,19 +54,37 @@ func (w *work) presentationChoice(all []trial) Choice {
 		c.Why = "it is the only strength on the shelf that is listed for use as " + w.use()
 	default:
 		c.Why = "nothing else on the shelf can be made into what is ordered"
-	}
-	for _, t := range others {
-		if t.points != nil && !t.work.stopped {
-			c.Why = bestBy(all[0].points, t.points)
-			break
-		}
-	}
-	if w.site.explain {
 		for _, t := range others {
-			c.Against = append(c.Against, against(all[0], t))
+			if t.points != nil && !t.work.stopped {
+				c.Why = bestBy(all[0].points, t.points)
+				break
+			}
 		}
 	}
+	c.Against = w.against(all[0], others, func(t trial) string { return t.name })
 	return c
+}
+
+// unlike is every way but the taken one for which pick holds beside it.
+func unlike(all []trial, pick func(taken, other way) bool) []trial {
+	var out []trial
+	for _, t := range all[1:] {
+		if pick(all[0].way, t.way) {
+			out = append(out, t)
+		}
+	}
+	return out
+}
+
+// against is why ways lost; nothing unless it is asked for.
+func (w *work) against(best trial, others []trial, name func(trial) string) []Weighed {
+	var out []Weighed
+	for _, t := range others {
+		if w.site.explain {
+			out = append(out, whyLost(best, t, name(t)))
+		}
+	}
+	return out
 }
 
 // bestBy says in what the best goes before the next best.
@@ -74,12 +93,12 @@ func bestBy(best, next []point) string {
 	if i < 0 {
 		return "it comes first on the shelf; nothing else tells it from the next"
 	}
-	return fmt.Sprintf("%s; the next best %s", best[i].text, next[i].text)
+	return fmt.Sprintf("%s; the next best: %s", best[i].text, next[i].text)
 }
 
-// against says why a way lost.
-func against(best, t trial) Weighed {
-	out := Weighed{Option: t.name}
+// whyLost says why a way lost.
+func whyLost(best, t trial, name string) Weighed {
+	out := Weighed{Option: name}
 	if refused := t.work.reasons.Refusals(); len(refused) > 0 {
 		out.Why, out.Code = "refused: "+refused[0].Message, refused[0].Code
 		return out
@@ -144,14 +163,20 @@ func (w *work) oneSizeAlone() []Weighed {
 
 // mixtureChoice is a concentration, a volume or a standard preparation that the
 // order left open.
-func (w *work) mixtureChoice() Choice {
+func (w *work) mixtureChoice(all []trial) Choice {
 	o, m, s := w.plan.Order, w.plan.Mixture, w.plan.Style
+	others := w.against(all[0], unlike(all, func(a, b way) bool { return a.place == b.place && a.variant != b.variant }), func(t trial) string {
+		if t.variant == "" {
+			return "undiluted"
+		}
+		return t.variant
+	})
 	switch {
 	case o.Dilute.Value && w.o.Concentration.Given():
-		return Choice{What: "concentration", Took: s.Concentration(m.Concentration) + ", made up to " + s.Volume(m.FinalVolume),
+		return Choice{What: "concentration", Against: others, Took: s.Concentration(m.Concentration) + ", made up to " + s.Volume(m.FinalVolume),
 			Why: "the neat dose cannot be measured; of the dilutions that the formulary allows it has the smallest total error"}
 	case o.Infusion && !o.Standard.Given() && w.o.Standard.Given():
-		return Choice{What: "standard preparation", Took: w.o.Standard.Value,
+		return Choice{What: "standard preparation", Against: others, Took: w.o.Standard.Value,
 			Why: "of those for this line that last the hours it holds least drug"}
 	case o.Infusion && !o.Volume.Given() && w.o.Volume.Given() && o.Hours.Given():
 		return Choice{What: "final volume", Took: s.Volume(m.FinalVolume), Why: "the next line that lasts the hours at the start rate, with what fills the line and stays behind"}
@@ -187,6 +212,8 @@ func (w *work) whyNotMeasure(best, look syringe.Look) string {
 	switch {
 	case !look.Holds:
 		return "too small"
+	case look.Line.IsZero():
+		return "no line near it"
 	case look.UnderFifth && !best.UnderFifth:
 		return s.Volume(look.Line) + " is under a fifth of it"
 	case look.Moved.Cmp(best.Moved) > 0:
@@ -205,7 +232,11 @@ func (w *work) otherBarrels(taken syringe.Barrel, why func(syringe.Barrel) strin
 		if sameBarrel(b, taken) {
 			continue
 		}
-		out = append(out, Weighed{Option: s.Volume(b.Nominal()) + " in steps of " + s.Volume(b.Step()), Why: why(b)})
+		name := s.Volume(b.Nominal())
+		if slices.ContainsFunc(w.site.barrels, func(x syringe.Barrel) bool { return x.Nominal().Cmp(b.Nominal()) == 0 && !sameBarrel(x, b) }) {
+			name += " in steps of " + s.Volume(b.Step())
+		}
+		out = append(out, Weighed{Option: name, Why: why(b)})
 	}
 	return out
 }

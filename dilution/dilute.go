@@ -104,7 +104,8 @@ func (w *work) dilution(y way, b syringe.Barrel, drawn syringe.Reading) (dilutio
 	o.Dilute = order.Field[bool]{}
 	x := dilutionWay{way{o: o, sizes: y.sizes, allowed: y.allowed, place: y.place}}
 	s := w.plan.Style
-	x.name = fmt.Sprintf("%s, %s made up to %s", joinAnd(ids(y.sizes)), s.Volume(drawn.Volume), s.Volume(b.Nominal()))
+	x.variant = fmt.Sprintf("%s made up to %s", s.Volume(drawn.Volume), s.Volume(b.Nominal()))
+	x.name = joinAnd(ids(y.sizes)) + ", " + x.variant
 	x.points = w.dilutionPoints(y, b, drawn, look, moved)
 	return x, true
 }

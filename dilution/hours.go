@@ -101,7 +101,7 @@ func (w *work) longEnough(part *InfusionPart) bool {
 		left, err := m.FinalVolume.Minus(lost)
 		if err != nil || left.IsZero() {
 			return w.refuse(refusal.Reason{
-				Code: refusal.ContradictoryAmounts, Field: "priming", Got: s.Volume(lost), Want: "less than " + s.Volume(m.FinalVolume), Rule: "R8", Pos: w.o.Pos,
+				Code: refusal.ContradictoryAmounts, Field: "priming", Got: s.Volume(lost), Want: "less than " + s.Volume(m.FinalVolume), Rule: "R8", Pos: w.lostPos(),
 				Message: fmt.Sprintf("what fills the line and stays behind, %s, is all that the syringe holds, %s", s.Volume(lost), s.Volume(m.FinalVolume)),
 				Remedy:  "check priming and dead_space and their units",
 			})
@@ -123,6 +123,14 @@ func (w *work) longEnough(part *InfusionPart) bool {
 			s.FlowRate(part.Start.Rate), hours(part.Usable), words(w.o.Hours.Value)),
 		Remedy: "order fewer hours, or a stronger mixture; or leave the mixture out, so that a standard preparation that lasts is chosen",
 	})
+}
+
+// lostPos is where the order says what never reaches the patient.
+func (w *work) lostPos() refusal.Pos {
+	if w.o.Priming.Given() {
+		return w.o.Priming.Pos
+	}
+	return w.o.DeadSpace.Pos
 }
 
 // hoursCut says that adding lines to the syringe was given up.

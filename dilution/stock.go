@@ -31,7 +31,7 @@ type stock struct {
 // An item is one presentation on the shelf; left is how many are there still.
 type item struct {
 	drug         string
-	presentation formulary.Presentation
+	presentation *formulary.Presentation // the formulary's own, never changed
 	left         int
 }
 
@@ -117,11 +117,13 @@ func (r *stocking) item(x order.Stocked) *item {
 		}
 		r.drugs[x.Drug.Value] = d
 	}
-	p, ok := d.Presentation(x.Presentation.Value)
-	if !ok {
+	id := strings.TrimSpace(x.Presentation.Value)
+	i := slices.IndexFunc(d.Presentations, func(p formulary.Presentation) bool { return strings.EqualFold(p.ID, id) })
+	if i < 0 {
 		r.refuse(r.notOfDrug(d, x))
 		return nil
 	}
+	p := &d.Presentations[i]
 	if key := d.Name + "\n" + p.ID; !r.seen[key] {
 		r.seen[key] = true
 		return &item{d.Name, p, counted(x.Count)}

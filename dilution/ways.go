@@ -21,6 +21,7 @@ type way struct {
 	allowed bool    // held against its record already
 	points  []point // what speaks for it before it is worked, best first
 	place   int     // on the shelf
+	variant string  // what is filled in that the order leaves open, "" for nothing
 	name    string  // what it is called beside the others
 }
 
@@ -44,7 +45,7 @@ func (w *work) make() bool {
 			neat := all
 			best, all = w.weigh(more)
 			if best != nil {
-				all = append(neat, all...)
+				all = append(all, neat...)
 			}
 		}
 	}
@@ -54,7 +55,7 @@ func (w *work) make() bool {
 	}
 	w.adopt(best)
 	w.diluted()
-	w.choose(best, all)
+	w.choose(all)
 	return true
 }
 
@@ -79,7 +80,7 @@ func (w *work) ways() ([]way, bool) {
 			if o.name != "" {
 				name += ", " + o.name
 			}
-			out = append(out, way{o: o.o, sizes: g, allowed: allowed, points: o.points, place: i, name: name})
+			out = append(out, way{o: o.o, sizes: g, allowed: allowed, points: o.points, place: i, variant: o.name, name: name})
 		}
 	}
 	return w.bounded(out), true
@@ -138,11 +139,11 @@ func (w *work) groups() (list [][]formulary.Presentation, allowed, ok bool) {
 		if !slices.ContainsFunc(usable, func(p formulary.Presentation) bool { return p.ID == it.presentation.ID }) {
 			continue
 		}
-		key := likeness(it.presentation)
+		key := likeness(*it.presentation)
 		if _, seen := byKey[key]; !seen {
 			keys = append(keys, key)
 		}
-		byKey[key] = append(byKey[key], it.presentation)
+		byKey[key] = append(byKey[key], *it.presentation)
 	}
 	for _, k := range keys {
 		list = append(list, byKey[k])

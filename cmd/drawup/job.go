@@ -25,6 +25,7 @@ type job struct {
 	file   string // as typed
 	tell   progress
 	order  order.Order
+	shelf  *order.Shelf // nil without one
 	list   dilution.List
 	facts  []labels.Facts
 	labels []labels.Label
@@ -55,12 +56,16 @@ func newJob(
 	faults = append(faults, lapsed...)
 	faults = append(faults, unknownNumbers(o, leaveOut)...)
 	j := &job{file: file, order: o, tell: tell}
-	list, reasons := dilution.NewList(o, f, when, leaveOut, faults)
+	list, reasons := lib.bench.NewList(o, f, when, leaveOut, faults)
 	j.list = list
 	if reasons.Refused() {
 		reasons.Sort()
 		return j, reasons
 	}
+	if len(lib.shelf) > 0 { // another shelf is another plan (rule R19)
+		data = append(append([]byte{}, data...), lib.shelf...)
+	}
+	j.shelf = lib.bench.Shelf
 	j.making = makingOf(o, f, when, data, leaveOut)
 	reasons = append(reasons, leftOut(list)...)
 	return j, append(reasons, j.word()...)

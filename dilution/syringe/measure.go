@@ -102,6 +102,9 @@ func Measure(v quantity.Volume, stock []Barrel, smallest quantity.Volume, within
 		if !largest.Given() || b.nominal.Cmp(largest) > 0 {
 			largest = b.nominal
 		}
+		if best.unbeaten(b) {
+			continue
+		}
 		if look := b.Look(v); look.Holds && (!best.Holds || look.Before(best)) {
 			best = look
 		}
@@ -134,6 +137,12 @@ func (b Barrel) Look(v quantity.Volume) Look {
 	moved := new(big.Rat).Sub(line.Rat(), v.Rat())
 	return Look{Barrel: b, Holds: true, Line: line, Moved: moved.Abs(moved),
 		UnderFifth: line.Cmp(share(b.nominal.Rat(), 1, 5)) < 0}
+}
+
+// unbeaten reports that b, whatever it shows, cannot go before x: x has a line at
+// the volume, which fills a fifth of it, and is smaller or finer.
+func (x Look) unbeaten(b Barrel) bool {
+	return x.Holds && !x.UnderFifth && x.Moved.Sign() == 0 && x.Barrel.Before(b)
 }
 
 // Before reports whether x shows the volume better than y, by the rule of

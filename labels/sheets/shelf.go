@@ -130,7 +130,8 @@ func (s scribe) oneWeight() labels.Line {
 	if part == nil || !part.Each.Given() {
 		return nil
 	}
-	return joined(s.said(s.p.Order.Mixture.Text), s.say(" for {rate.weight} and no other weight: each mL/h gives "), s.said(s.p.Settled.Each.Text))
+	// One sentence with its words: bare, the figure would pass for one of the record.
+	return joined(s.said(s.p.Order.Mixture.Text), s.say(" for {rate.weight} and no other weight: "), s.said("each mL/h gives "+s.p.Settled.Each.Text))
 }
 
 // diluentFrom is the containers of diluent on the shelf: ", from ampoules of 10
