@@ -36,15 +36,18 @@ func (w *work) instead(made bool) bool {
 // replaceable reports the codes for which another preparation may be the answer.
 func replaceable(c refusal.Code) bool {
 	switch c {
-	case refusal.NotStocked, refusal.StockShort, refusal.NoneStockedFits, refusal.HoursNotReached, refusal.SyringeNotForPump:
+	case refusal.NotStocked, refusal.StockShort, refusal.NoneStockedFits, refusal.HoursNotReached, refusal.SyringeNotForPump,
+		refusal.SyringeUnknown, refusal.DiluentNotStocked:
 		return true
 	}
 	return measuring(c)
 }
 
-// alternative is the best other way: the same order from another presentation;
-// the dose diluted; the same concentration in a volume that a syringe holds and
-// shows. The first kind that can be made is taken.
+// alternative is the best other way: the same order in another size of syringe,
+// or with another listed diluent that is there; from another presentation; the
+// dose diluted; the same concentration in a volume that a syringe holds and
+// shows; a standard preparation that lasts; fewer doses. The first kind that can
+// be made is taken.
 func (w *work) alternative() *work {
 	fresh := *w
 	fresh.o, fresh.reasons, fresh.noted, fresh.sizes, fresh.holder = w.plan.Order, nil, nil, nil, syringe.Barrel{}
@@ -53,7 +56,7 @@ func (w *work) alternative() *work {
 		return nil
 	}
 	others := fresh.others()
-	for _, ways := range [][]way{others, fresh.diluting(others), fresh.resized(), fresh.lasting(others)} {
+	for _, ways := range [][]way{fresh.unsized(), fresh.refluid(), others, fresh.diluting(others), fresh.resized(), fresh.lasting(others), fresh.fewer()} {
 		ways = ways[:min(len(ways), mostWays)]
 		if len(ways) == 0 {
 			continue
@@ -63,6 +66,58 @@ func (w *work) alternative() *work {
 		}
 	}
 	return nil
+}
+
+// itself is the ordered presentation, or the one that was tried, if the shelf has
+// any of it.
+func (w *work) itself() []formulary.Presentation {
+	if p := w.plan.Presentation; p.ID != "" && p.Volume.Given() && w.left(p) != 0 {
+		return []formulary.Presentation{p}
+	}
+	return nil
+}
+
+// unsized is the order without its size of syringe, where it has one.
+func (w *work) unsized() []way {
+	own := w.itself()
+	if !w.o.Size.Given() || own == nil {
+		return nil
+	}
+	o := w.o
+	o.Size = order.Field[quantity.Volume]{}
+	return []way{{o: o, sizes: own}}
+}
+
+// refluid is the order with each other listed diluent that is on the shelf.
+func (w *work) refluid() []way {
+	own, s := w.itself(), w.site.stock
+	if s == nil || own == nil || !w.o.Diluent.Given() {
+		return nil
+	}
+	var out []way
+	for i, d := range own[0].Diluents {
+		if !strings.EqualFold(d.Name, w.o.Diluent.Value) && s.holds(d.Name) {
+			o := w.o
+			o.Diluent = order.Field[string]{Value: d.Name, Text: d.Name, Pos: w.o.Diluent.Pos}
+			out = append(out, way{o: o, sizes: own, place: i})
+		}
+	}
+	return out
+}
+
+// fewer is the order with fewer doses, the most first.
+func (w *work) fewer() []way {
+	own := w.itself()
+	if own == nil || w.o.Doses.Value < 2 {
+		return nil
+	}
+	var out []way
+	for n := w.o.Doses.Value - 1; n > 0; n-- {
+		o := w.o
+		o.Doses = order.Field[int]{Value: n, Text: fmt.Sprint(n), Pos: w.o.Doses.Pos}
+		out = append(out, way{o: o, sizes: own, points: []point{{big.NewRat(int64(-n), 1), ""}}})
+	}
+	return out
 }
 
 // others are the presentations that have not been tried: of the shelf, else of
@@ -95,14 +150,32 @@ func (w *work) diluting(others []way) []way {
 	o := w.o
 	o.Amount, o.Concentration, o.Volume = order.Field[quantity.Amount]{}, order.Field[quantity.Concentration]{}, order.Field[quantity.Volume]{}
 	var from []way
-	if p := w.plan.Presentation; p.ID != "" && w.left(p) != 0 {
-		from = append(from, way{o: o, sizes: []formulary.Presentation{p}})
+	if own := w.itself(); own != nil {
+		from = append(from, way{sizes: own})
 	}
 	for _, y := range others {
-		y.o, y.place = o, y.place+1
+		y.place++
 		from = append(from, y)
 	}
+	for i := range from {
+		from[i].o = w.withFluid(o, from[i].sizes[0])
+	}
 	return w.dilutions(from)
+}
+
+// withFluid fills in a diluent that the order does not name: the first listed that
+// is there. It is only offered, never taken.
+func (w *work) withFluid(o order.Syringe, p formulary.Presentation) order.Syringe {
+	if o.Diluent.Given() {
+		return o
+	}
+	for _, d := range p.Diluents {
+		if s := w.site.stock; s == nil || len(s.fluids) == 0 || s.holds(d.Name) {
+			o.Diluent = order.Field[string]{Value: d.Name, Text: d.Name, Pos: o.Pos}
+			return o
+		}
+	}
+	return o
 }
 
 // resized are the ordered concentration in the volumes that the syringes show:
@@ -205,8 +278,8 @@ func (w *work) lasting(others []way) []way {
 		return nil
 	}
 	var from []way
-	if p := w.plan.Presentation; p.ID != "" && w.left(p) != 0 {
-		from = append(from, way{sizes: []formulary.Presentation{p}})
+	if own := w.itself(); own != nil {
+		from = append(from, way{sizes: own})
 	}
 	var out []way
 	for _, x := range variants {
@@ -262,8 +335,21 @@ func (w *work) toWrite(t *work) []refusal.Line {
 			out = append(out, refusal.Line{Key: key, Value: is})
 		}
 	}
-	if !strings.EqualFold(strings.TrimSpace(old.Presentation.Value), t.plan.Presentation.ID) && (w.site.stock == nil || old.Presentation.Given()) {
+	same := strings.EqualFold(strings.TrimSpace(old.Presentation.Value), t.plan.Presentation.ID)
+	if !old.Presentation.Given() {
+		same = w.site.stock != nil || t.plan.Presentation.ID == w.plan.Presentation.ID
+	}
+	if !same {
 		out = append(out, refusal.Line{Key: "presentation", Value: t.plan.Presentation.ID})
+	}
+	if old.Size.Given() && !now.Size.Given() {
+		out = append(out, refusal.Line{Key: "size", Value: t.plan.Mixture.FinalBarrel.Nominal().Exact() + " mL"})
+	}
+	if old.Doses.Value != now.Doses.Value {
+		return append(out, refusal.Line{Key: "doses", Value: now.Doses.Text})
+	}
+	if t.plan.Mixture.Diluent != "" {
+		add("diluent", old.Diluent.Text, now.Diluent.Text)
 	}
 	add("standard", old.Standard.Text, now.Standard.Text)
 	add("mix", old.MixAmount.Text, now.MixAmount.Text)
