@@ -44,7 +44,7 @@ func (w *work) choose(all []trial) {
 // presentationChoice is which presentation is opened, and against which others.
 func (w *work) presentationChoice(all []trial) Choice {
 	c := Choice{What: "presentation", Took: packNames(w.plan.Mixture.Packs)}
-	others := unlike(all, func(a, b way) bool { return a.place != b.place || a.variant == b.variant })
+	others := unlike(all, func(a, b *way) bool { return a.place != b.place || a.variant == b.variant })
 	switch {
 	case w.plan.Order.Presentation.Given():
 		c.Why = "it is the one that is ordered"
@@ -66,7 +66,7 @@ func (w *work) presentationChoice(all []trial) Choice {
 }
 
 // unlike is every way but the taken one for which pick holds beside it.
-func unlike(all []trial, pick func(taken, other way) bool) []trial {
+func unlike(all []trial, pick func(taken, other *way) bool) []trial {
 	var out []trial
 	for _, t := range all[1:] {
 		if pick(all[0].way, t.way) {
@@ -93,7 +93,7 @@ func bestBy(best, next []point) string {
 	if i < 0 {
 		return "it comes first on the shelf; nothing else tells it from the next"
 	}
-	return fmt.Sprintf("%s; the next best: %s", best[i].text, next[i].text)
+	return fmt.Sprintf("%s; the next best: %s", best[i].text(), next[i].text())
 }
 
 // whyLost says why a way lost.
@@ -108,7 +108,7 @@ func whyLost(best, t trial, name string) Weighed {
 		out.Why = "it comes later on the shelf"
 		return out
 	}
-	out.Why = fmt.Sprintf("%s, against %s", t.points[i].text, best.points[i].text)
+	out.Why = fmt.Sprintf("%s, against %s", t.points[i].text(), best.points[i].text())
 	return out
 }
 
@@ -165,7 +165,7 @@ func (w *work) oneSizeAlone() []Weighed {
 // order left open.
 func (w *work) mixtureChoice(all []trial) Choice {
 	o, m, s := w.plan.Order, w.plan.Mixture, w.plan.Style
-	others := w.against(all[0], unlike(all, func(a, b way) bool { return a.place == b.place && a.variant != b.variant }), func(t trial) string {
+	others := w.against(all[0], unlike(all, func(a, b *way) bool { return a.place == b.place && a.variant != b.variant }), func(t trial) string {
 		if t.variant == "" {
 			return "undiluted"
 		}

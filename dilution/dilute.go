@@ -28,12 +28,13 @@ func (w *work) dilutions(neat []way) []way {
 	var all []dilutionWay
 	for _, y := range neat {
 		t := w.try(y, 0) // fills in the strength
+		drawn := t.drawnVolumes(y.sizes[0])
 		for _, b := range w.site.barrels {
 			if w.o.Size.Given() && b.Nominal().Cmp(w.o.Size.Value) != 0 {
 				continue
 			}
-			for _, drawn := range t.drawnVolumes(y.sizes[0], b.Nominal()) {
-				if x, ok := t.dilution(y, b, drawn); ok {
+			for _, r := range drawn {
+				if x, ok := t.dilution(y, b, r); ok {
 					all = append(all, x)
 				}
 			}
@@ -53,9 +54,9 @@ func (w *work) dilutions(neat []way) []way {
 // A dilutionWay is a way with the reading of the dose.
 type dilutionWay struct{ way }
 
-// drawnVolumes are the volumes to draw from a presentation into a syringe of this
-// capacity, each of which stands on a line.
-func (w *work) drawnVolumes(p formulary.Presentation, most quantity.Volume) []syringe.Reading {
+// drawnVolumes are the volumes to draw from a presentation, each of which stands
+// on a line.
+func (w *work) drawnVolumes(p formulary.Presentation) []syringe.Reading {
 	volumes := []quantity.Volume{p.Volume}
 	for _, n := range drawnRound() {
 		if v := quantity.Millilitres(big.NewRat(n, 100)); v.Cmp(p.Volume) != 0 {
@@ -64,7 +65,7 @@ func (w *work) drawnVolumes(p formulary.Presentation, most quantity.Volume) []sy
 	}
 	var out []syringe.Reading
 	for _, v := range volumes {
-		if !v.Given() || v.Cmp(most) >= 0 {
+		if !v.Given() {
 			continue
 		}
 		r, err := syringe.Measure(v, w.site.barrels, w.site.smallest, w.site.tolerance)
@@ -79,7 +80,7 @@ func (w *work) drawnVolumes(p formulary.Presentation, most quantity.Volume) []sy
 // the dose cannot be read then, or the formulary does not allow it.
 func (w *work) dilution(y way, b syringe.Barrel, drawn syringe.Reading) (dilutionWay, bool) {
 	a, err := drawn.Volume.Holds(w.plan.Mixture.Strength)
-	if err != nil {
+	if err != nil || drawn.Volume.Cmp(b.Nominal()) >= 0 {
 		return dilutionWay{}, false
 	}
 	c, err := a.In(b.Nominal())
@@ -128,11 +129,12 @@ func (w *work) dilutionPoints(y way, b syringe.Barrel, drawn syringe.Reading, lo
 		left.Add(left, held.Rat())
 	}
 	left.Sub(left, w.plan.Dose.Amount.Rat())
+	kind := w.plan.Drug.Kind
 	return []point{
-		{new(big.Rat).SetInt(whole), fmt.Sprintf("a total error of at most %d %%", whole)},
-		{big.NewRat(int64(n), 1), counting(n, "container")},
-		{left, s.Amount(quantity.AmountOf(left, baseUnit(w.plan.Drug.Kind))) + " discarded"},
-		{b.Nominal().Rat(), s.Volume(b.Nominal()) + " in all"},
+		{new(big.Rat).SetInt(whole), func() string { return fmt.Sprintf("a total error of at most %d %%", whole) }},
+		{big.NewRat(int64(n), 1), func() string { return counting(n, "container") }},
+		{left, func() string { return s.Amount(quantity.AmountOf(left, baseUnit(kind))) + " discarded" }},
+		{b.Nominal().Rat(), func() string { return s.Volume(b.Nominal()) + " in all" }},
 	}
 }
 

@@ -153,7 +153,8 @@ func (w *work) standards() ([]variant, bool) {
 		}
 		o := w.o
 		o.Standard = order.Field[string]{Value: st.ID, Text: st.ID, Pos: w.o.Hours.Pos}
-		out = append(out, variant{o, "standard " + st.ID, []point{{st.Amount.Rat(), w.plan.Style.Amount(st.Amount) + " in it"}}})
+		holds := func() string { return w.plan.Style.Amount(st.Amount) + " in it" }
+		out = append(out, variant{o, "standard " + st.ID, []point{{st.Amount.Rat(), holds}}})
 	}
 	if len(out) > 0 {
 		return out, true

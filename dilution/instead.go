@@ -115,7 +115,7 @@ func (w *work) fewer() []way {
 	for n := w.o.Doses.Value - 1; n > 0; n-- {
 		o := w.o
 		o.Doses = order.Field[int]{Value: n, Text: fmt.Sprint(n), Pos: w.o.Doses.Pos}
-		out = append(out, way{o: o, sizes: own, points: []point{{big.NewRat(int64(-n), 1), ""}}})
+		out = append(out, way{o: o, sizes: own, points: []point{{big.NewRat(int64(-n), 1), nil}}})
 	}
 	return out
 }
@@ -208,7 +208,7 @@ func (w *work) resized() []way {
 		o, ok := w.ofVolume(c, to, mixed)
 		far := new(big.Rat).Sub(to.Rat(), v.Rat())
 		if ok {
-			out = append(out, way{o: o, sizes: []formulary.Presentation{p}, points: []point{{far.Abs(far), ""}}})
+			out = append(out, way{o: o, sizes: []formulary.Presentation{p}, points: []point{{far.Abs(far), nil}}})
 		}
 	}
 	return out
@@ -299,7 +299,7 @@ func (w *work) insteadOf(t *work) *refusal.Instead {
 		DrugVolume: volumeFigure(s, m.DrugVolume), FinalVolume: volumeFigure(s, m.FinalVolume), DiluentVolume: volumeFigure(s, m.DiluentVolume),
 		MeasuringSyringe: volumeFigure(s, m.DrugReading.Barrel.Nominal()), GivingSyringe: volumeFigure(s, m.FinalBarrel.Nominal()),
 		Amount: amountFigure(s, m.Amount), Concentration: concentrationFigure(s, m.Concentration),
-		Write: w.toWrite(t),
+		Write: w.toWrite(t), TakeOut: w.toTakeOut(t),
 	}
 	if d := p.Dose; d != nil {
 		in.DoseVolume, in.DoseDelivered = volumeFigure(s, d.Volume), amountFigure(s, d.Delivered)
@@ -362,6 +362,29 @@ func (w *work) toWrite(t *work) []refusal.Line {
 	return out
 }
 
+// toTakeOut is the keys that the alternative no longer has.
+func (w *work) toTakeOut(t *work) []string {
+	old, now := w.plan.Order, t.o
+	var out []string
+	for _, k := range []struct {
+		key     string
+		was, is bool
+	}{
+		{"mix", old.MixAmount.Given(), now.MixAmount.Given()},
+		{"standard", old.Standard.Given(), now.Standard.Given()},
+		{"mixture", old.Mixture.Given(), now.Mixture.Given()},
+		{"one_ml_per_hour", old.Each.Given(), now.Mixture.Given()},
+		{"amount", old.Amount.Given(), now.Amount.Given()},
+		{"concentration", old.Concentration.Given(), now.Concentration.Given()},
+		{"volume", old.Volume.Given(), now.Volume.Given()},
+	} {
+		if k.was && !k.is {
+			out = append(out, k.key)
+		}
+	}
+	return out
+}
+
 // insteadWords is an alternative in a sentence: what to draw with what, what it
 // then is, and what to write.
 func insteadWords(t *work, in *refusal.Instead) string {
@@ -386,6 +409,9 @@ func insteadWords(t *work, in *refusal.Instead) string {
 	}
 	if in.PumpRate.Given() {
 		fmt.Fprintf(&b, "; the pump starts at %s", in.PumpRate.Printed)
+	}
+	if len(in.TakeOut) > 0 {
+		fmt.Fprintf(&b, "; take %s out", joinAnd(in.TakeOut))
 	}
 	for i, l := range in.Write {
 		if i == 0 {

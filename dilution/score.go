@@ -5,10 +5,11 @@ import (
 	"math/big"
 )
 
-// A point is one thing by which ways are compared, the less the better.
+// A point is one thing by which ways are compared, the less the better. Its text,
+// "2 containers", is written only where somebody wants to know.
 type point struct {
 	value *big.Rat
-	text  string // "2 containers"
+	text  func() string
 }
 
 // comparePoints puts the better list first; a way without points, which cannot be
@@ -52,12 +53,12 @@ func firstUnlike(a, b []point) int {
 func (w *work) score(place int) []point {
 	m, s := w.plan.Mixture, w.plan.Style
 	r := m.DrugReading
-	off, measured := int64(0), s.Volume(m.DrugVolume)+" on a line"
+	off, measured := int64(0), func() string { return s.Volume(m.DrugVolume) + " on a line" }
 	if r.MovedPercent.Sign() != 0 {
-		off, measured = off+1, s.Volume(m.DrugWanted)+" between lines"
+		off, measured = off+1, func() string { return s.Volume(m.DrugWanted) + " between lines" }
 	}
 	if r.UnderFifth {
-		off, measured = off+1, s.Volume(m.DrugVolume)+" under a fifth of its barrel"
+		off, measured = off+1, func() string { return s.Volume(m.DrugVolume) + " under a fifth of its barrel" }
 	}
 	acts, done := int64(0), "drawn as it is"
 	if m.Method != Neat {
@@ -66,14 +67,14 @@ func (w *work) score(place int) []point {
 	if w.plan.Presentation.Powder() {
 		acts, done = acts+1, "mixed from powder"
 	}
-	whole := func(n int64, text string) point { return point{big.NewRat(n, 1), text} }
+	whole := func(n int64, text func() string) point { return point{big.NewRat(n, 1), text} }
 	return []point{
 		whole(off, measured),
-		whole(int64(m.Containers), counting(m.Containers, "container")),
-		{m.LeftAmount.Rat(), s.Amount(m.LeftAmount) + " left over"},
-		whole(int64(len(m.Packs)), counting(len(m.Packs), "size")+" of container"),
-		whole(acts, done),
-		whole(int64(place), fmt.Sprintf("place %d on the shelf", place+1)),
+		whole(int64(m.Containers), func() string { return counting(m.Containers, "container") }),
+		{m.LeftAmount.Rat(), func() string { return s.Amount(m.LeftAmount) + " left over" }},
+		whole(int64(len(m.Packs)), func() string { return counting(len(m.Packs), "size") + " of container" }),
+		whole(acts, func() string { return done }),
+		whole(int64(place), func() string { return fmt.Sprintf("place %d on the shelf", place+1) }),
 	}
 }
 

@@ -28,7 +28,7 @@ func inventedFormulary(b testing.TB, drugs, strengths int, volumes ...int) *form
 		}
 		t.WriteString("[[drug.concentration]]\nuse = \"bolus\"\nline = \"any\"\nlow = { value = \"0.001 mg/mL\", source = \"X\" }\n" +
 			"high = { value = \"1000 mg/mL\", source = \"X\" }\n[[drug.dose]]\nfor = \"sleep\"\nroutes = [\"IV\"]\nby = \"actual\"\nby_source = \"X\"\n" +
-			"usual_low = { value = \"0.01 mg/kg\", source = \"X\" }\nusual_high = { value = \"5 mg/kg\", source = \"X\" }\n")
+			"usual_low = { value = \"0.0001 mg/kg\", source = \"X\" }\nusual_high = { value = \"5 mg/kg\", source = \"X\" }\n")
 	}
 	f, faults := formulary.Read(formulary.Text{Name: "invented.toml", Data: []byte(t.String())})
 	if faults.Refused() {
@@ -105,4 +105,9 @@ func BenchmarkFifteenFromShelf(b *testing.B) {
 		text += fmt.Sprintf("[[patient.syringe]]\ndrug = \"drug a%c\"\ndose = \"0.%d mg/kg\"\n", 'a'+i, i%5+1)
 	}
 	benchShelf(b, inventedFormulary(b, 20, 5, 2, 5), text, false)
+}
+
+// One amount, neat, from a shelf of two strengths: the plainest plan.
+func BenchmarkPlainFromShelf(b *testing.B) {
+	benchShelf(b, inventedFormulary(b, 1, 2, 2, 5), "[[patient.syringe]]\ndrug = \"drug aa\"\namount = \"8 mg\"\n", false)
 }

@@ -32,6 +32,7 @@ type stock struct {
 type item struct {
 	drug         string
 	presentation *formulary.Presentation // the formulary's own, never changed
+	likeness     string                  // the same for what may be opened together
 	left         int
 }
 
@@ -126,7 +127,7 @@ func (r *stocking) item(x order.Stocked) *item {
 	p := &d.Presentations[i]
 	if key := d.Name + "\n" + p.ID; !r.seen[key] {
 		r.seen[key] = true
-		return &item{d.Name, p, counted(x.Count)}
+		return &item{d.Name, p, likeness(*p), counted(x.Count)}
 	}
 	r.refuse(refusal.Reason{
 		Code: refusal.KeyRepeated, Field: "stock.presentation", Got: x.Presentation.Text, Want: "each ampoule or vial once", Pos: x.Presentation.Pos,

@@ -139,7 +139,7 @@ func (w *work) groups() (list [][]formulary.Presentation, allowed, ok bool) {
 		if !slices.ContainsFunc(usable, func(p formulary.Presentation) bool { return p.ID == it.presentation.ID }) {
 			continue
 		}
-		key := likeness(*it.presentation)
+		key := it.likeness
 		if _, seen := byKey[key]; !seen {
 			keys = append(keys, key)
 		}
@@ -269,7 +269,7 @@ func (w *work) finish(y way, t *work) *work {
 
 // A trial is a way with what became of it.
 type trial struct {
-	way
+	*way
 	work   *work
 	points []point // all that counts, best first; nil where it cannot be mixed
 }
@@ -279,7 +279,7 @@ type trial struct {
 func (w *work) weigh(ways []way) (*work, []trial) {
 	all := make([]trial, len(ways))
 	for i, y := range ways {
-		all[i] = trial{way: y, work: w.try(y, 0)}
+		all[i] = trial{way: &ways[i], work: w.try(y, 0)}
 		if !all[i].work.stopped {
 			all[i].points = append(append([]point{}, y.points...), all[i].work.score(y.place)...)
 		}
@@ -289,7 +289,7 @@ func (w *work) weigh(ways []way) (*work, []trial) {
 		if t.work.stopped {
 			continue
 		}
-		all[i].work = w.finish(t.way, t.work)
+		all[i].work = w.finish(*t.way, t.work)
 		if !all[i].work.stopped {
 			return all[i].work, append([]trial{all[i]}, slices.Delete(slices.Clone(all), i, i+1)...)
 		}

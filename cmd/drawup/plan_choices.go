@@ -101,6 +101,7 @@ func lastsOf(s quantity.Style, part dilution.InfusionPart) lastsJSON {
 type insteadJSON struct {
 	Says             string        `json:"says"`
 	Write            []lineJSON    `json:"write"`
+	TakeOut          []string      `json:"take_out"`
 	Presentation     string        `json:"presentation"`
 	Containers       int           `json:"containers"`
 	Method           string        `json:"method"`
@@ -128,12 +129,13 @@ func insteadOf(in *refusal.Instead) *insteadJSON {
 		return nil
 	}
 	out := &insteadJSON{
-		Says: in.Says, Write: []lineJSON{}, Presentation: in.Presentation, Containers: in.Containers, Method: in.Method, Diluent: in.Diluent,
+		Says: in.Says, Write: []lineJSON{}, TakeOut: []string{}, Presentation: in.Presentation, Containers: in.Containers, Method: in.Method, Diluent: in.Diluent,
 		DrugVolume: figureJSON(in.DrugVolume), MeasuringSyringe: figureJSON(in.MeasuringSyringe), DiluentVolume: figureJSON(in.DiluentVolume),
 		FinalVolume: figureJSON(in.FinalVolume), GivingSyringe: figureJSON(in.GivingSyringe), Amount: figureJSON(in.Amount),
 		Concentration: figureJSON(in.Concentration), DoseVolume: figureJSON(in.DoseVolume), DoseDelivered: figureJSON(in.DoseDelivered),
 		PumpRate: figureJSON(in.PumpRate),
 	}
+	out.TakeOut = append(out.TakeOut, in.TakeOut...)
 	for _, l := range in.Write {
 		out.Write = append(out.Write, lineJSON{l.Key, l.Value})
 	}

@@ -4,8 +4,9 @@ package refusal
 // refused, worked in full: it has passed every rule that the order was held
 // against. Figures are as paper would print them.
 type Instead struct {
-	Says         string // the whole of it in words
-	Write        []Line // what the order has to say for it
+	Says         string   // the whole of it in words
+	Write        []Line   // what the order has to say for it
+	TakeOut      []string // keys that the order then no longer has
 	Presentation string
 	Containers   int
 	Method       string
