@@ -3,6 +3,7 @@ package dilution_test
 import (
 	"fmt"
 	"math/big"
+	"slices"
 	"strings"
 	"testing"
 
@@ -16,7 +17,8 @@ import (
 // randomSyringe is one syringe or infusion of an order, within or without the
 // limits.
 func randomSyringe(t *rapid.T, f *formulary.Formulary) string {
-	d := rapid.SampledFrom(f.Drugs()).Draw(t, "drug")
+	packed := slices.DeleteFunc(slices.Clone(f.Drugs()), func(d formulary.Drug) bool { return len(d.Presentations) == 0 })
+	d := rapid.SampledFrom(packed).Draw(t, "drug")
 	p := rapid.SampledFrom(d.Presentations).Draw(t, "presentation")
 	unit := p.Amount.Unit().String()
 	amount := fmt.Sprintf("%s %s", decimal(t, "amount"), unit)

@@ -20,13 +20,9 @@ const assumedAssay = "10 %"
 // certainty states the interval in which the true concentration lies (R9).
 func (w *work) certainty() bool {
 	m := &w.plan.Mixture
-	m.Assay = w.plan.Presentation.Assay.Value
-	if !w.plan.Presentation.Assay.Given() {
-		a, err := quantity.ParsePercent(assumedAssay)
-		if err != nil {
-			return w.fault(err, "assay", w.o.Pos)
-		}
-		m.Assay, m.AssayAssumed = a, true
+	var err error
+	if m.Assay, m.AssayAssumed, err = AssayOf(w.plan.Presentation); err != nil {
+		return w.fault(err, "assay", w.o.Pos)
 	}
 	parts := []quantity.Percent{m.Assay}
 	if m.Method != Neat {
@@ -35,7 +31,6 @@ func (w *work) certainty() bool {
 			parts = append(parts, relative(m.FinalBarrel, m.FinalVolume))
 		}
 	}
-	var err error
 	if m.Interval, err = syringe.Interval(parts...); err != nil {
 		return w.fault(err, "interval", w.o.Pos)
 	}

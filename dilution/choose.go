@@ -151,6 +151,14 @@ func (w *work) forThisAge() bool {
 func (w *work) powderKnown() bool {
 	p := w.plan.Presentation
 	if p.Volume.Given() {
+		if p.Powder() && len(p.AddFluids) == 0 {
+			return w.refuse(refusal.Reason{
+				Code: refusal.FormularyBlank, Field: "add_fluids",
+				Want: "a fluid to mix the powder with", Rule: "R10", Source: p.Source.Title, Pos: w.o.Drug.Pos,
+				Message: fmt.Sprintf("the formulary does not say what the powder of %s is mixed with", p.ID),
+				Remedy:  "add the fluid with its source to the formulary (whoever keeps it does that)",
+			})
+		}
 		if p.Negligible {
 			w.caution(refusal.Reason{
 				Code: refusal.NegligibleDisplacement, Field: "displacement",

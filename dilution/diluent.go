@@ -55,17 +55,15 @@ func (w *work) diluentName() (string, bool) {
 	}
 	switch len(p.Diluents) {
 	case 0:
-		if !p.Neat || len(p.Forbidden) == 0 {
-			return "", w.refuse(refusal.Reason{
-				Code: refusal.FormularyBlank, Field: "diluent",
-				Want: "a listed diluent", Rule: "R10",
-				Source: p.Source.Title, Pos: w.o.Pos,
-				Message: fmt.Sprintf("the formulary lists no diluent for %s of %s: it may be used undiluted only",
-					p.ID, w.plan.Drug.Name),
-				Remedy: "order it undiluted, or add a diluent with its source to the formulary " +
-					"(whoever keeps it does that)",
-			})
-		}
+		return "", w.refuse(refusal.Reason{
+			Code: refusal.FormularyBlank, Field: "diluent",
+			Want: "a listed diluent", Rule: "R10",
+			Source: p.Source.Title, Pos: w.o.Pos,
+			Message: fmt.Sprintf("the formulary lists no diluent for %s of %s: it may be used undiluted only",
+				p.ID, w.plan.Drug.Name),
+			Remedy: "order it undiluted, or add a diluent with its source to the formulary " +
+				"(whoever keeps it does that)",
+		})
 	case 1:
 		return p.Diluents[0].Name, true
 	}

@@ -138,6 +138,19 @@ func (w *work) dilutionPoints(y way, b syringe.Barrel, drawn syringe.Reading, lo
 	}
 }
 
+// baseUnit is the unit in which a kind is counted inside.
+func baseUnit(k quantity.Kind) quantity.Unit {
+	switch k {
+	case quantity.ByMass:
+		return quantity.Milligram()
+	case quantity.ByActivity:
+		return quantity.Units()
+	case quantity.BySubstance:
+		return quantity.Millimole()
+	}
+	return quantity.Unit{}
+}
+
 // shownExactly reports that four digits hold the concentration, so that label
 // and order say exactly what is in the syringe.
 func shownExactly(c quantity.Concentration) bool {

@@ -118,14 +118,19 @@ func (w *work) doseReadable(exact quantity.Volume, d *DosePart) bool {
 	return true
 }
 
-// noDose checks the route alone and says that no dose was checked.
-func (w *work) noDose() bool {
+// routeOfDoses holds the route against the rows of single doses.
+func (w *work) routeOfDoses() bool {
 	var routes []string
 	for _, r := range w.plan.Drug.Doses {
 		routes = append(routes, r.Routes...)
 	}
-	if !routeListed(routes, w.plan.Route) {
-		return w.routeUnlisted(routes)
+	return routeListed(routes, w.plan.Route) || w.routeUnlisted(routes)
+}
+
+// noDose checks the route alone and says that no dose was checked.
+func (w *work) noDose() bool {
+	if !w.routeOfDoses() {
+		return false
 	}
 	return w.caution(refusal.Reason{
 		Code: refusal.LimitsNotChecked, Rule: "R10",

@@ -35,7 +35,8 @@ func (w *work) checkConcentration() bool {
 	return w.diluentStrength() && ok
 }
 
-// line is the ordered line, a peripheral one when the order is silent.
+// line is the line that the syringe goes into, peripheral unless the order says
+// otherwise.
 func (w *work) line() string {
 	if w.o.Line.Given() {
 		return w.o.Line.Value
@@ -43,30 +44,34 @@ func (w *work) line() string {
 	return "peripheral"
 }
 
-// boundsFor is the rows for this use, route and line. A row that names the
-// route goes before a row that names none, a row for the very line before one
-// for any line.
+// boundsFor is the rows for this use, line, route, indication and age. Of those
+// that fit, the ones that name most of route, indication and age hold; among
+// them a row for the very line goes before one for any line.
 func (w *work) boundsFor(line string) (rows []formulary.Bounds, central bool) {
-	var any []formulary.Bounds
-	named := false
+	var fitting []formulary.Bounds
+	most := 0
 	for _, b := range w.plan.Drug.Bounds {
-		named = named || b.Use == w.use() && routeListed(b.Routes, w.plan.Route)
-	}
-	for _, b := range w.plan.Drug.Bounds {
-		if b.Use != w.use() || named != routeListed(b.Routes, w.plan.Route) || !named && len(b.Routes) > 0 {
+		if b.Use != w.use() || !b.Fits(w.plan.Route, w.o.Indication.Value, w.size.Age) {
 			continue
 		}
-		switch b.Line {
-		case line:
+		central = central || b.Line == "central"
+		if b.Line != line && b.Line != "any" {
+			continue
+		}
+		if n := b.Special(); n > most {
+			fitting, most = nil, n
+		} else if n < most {
+			continue
+		}
+		fitting = append(fitting, b)
+	}
+	for _, b := range fitting {
+		if b.Line == line {
 			rows = append(rows, b)
-		case "any":
-			any = append(any, b)
-		case "central":
-			central = true
 		}
 	}
 	if len(rows) == 0 {
-		rows = any
+		rows = fitting
 	}
 	return rows, central
 }
@@ -195,7 +200,7 @@ func passed(ceilings []bound, wanted, given *big.Rat) *bound {
 
 // bottom is the lowest figure that the row stores.
 func (s scale) bottom() bound {
-	for _, b := range []bound{s.hardLow, s.usualLow, s.usualHigh} {
+	for _, b := range []bound{s.hardLow, s.usualLow, s.usualHigh, s.softHigh, s.hardHigh} {
 		if b.given {
 			return b
 		}

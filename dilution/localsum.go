@@ -5,6 +5,7 @@ import (
 	"math/big"
 	"strings"
 
+	"drawup/dilution/body"
 	"drawup/dilution/formulary"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
@@ -12,7 +13,8 @@ import (
 
 // localSums adds up the local anaesthetics of each patient. Each syringe is
 // its amount over its drug's maximum for this patient; together they must not
-// pass one (rule R11). A syringe with an ordered dose counts with that dose,
+// pass one (rule R11). An infusion counts against the maximum of a day, and
+// where none is stored it is left out and a caution says so. A syringe with an ordered dose counts with that dose,
 // any other with all it holds.
 func localSums(works []*work) refusal.List {
 	var out refusal.List
@@ -39,8 +41,8 @@ func localSum(works []*work) refusal.List {
 	var parts []string
 	for _, w := range works {
 		share, words, reason := w.localShare()
-		if reason != nil && len(works) == 1 {
-			return nil // said by localKnown
+		if reason != nil && (len(works) == 1 || w.o.Infusion) {
+			continue // said by localKnown
 		}
 		if reason != nil {
 			return refusal.List{*reason}
@@ -82,7 +84,7 @@ func (w *work) localShare() (*big.Rat, string, *refusal.Reason) {
 	if w.plan.Dose != nil {
 		given = w.plan.Dose.Amount
 	}
-	most, err := w.localMost()
+	most, err := w.localMost(w.o.Infusion)
 	if err != nil {
 		return nil, "", w.localUnknown(err.Error())
 	}
@@ -96,35 +98,55 @@ func (w *work) localShare() (*big.Rat, string, *refusal.Reason) {
 	return share, fmt.Sprintf("%s of %s, at most %s", s.Amount(given), w.plan.Drug.Name, s.Amount(most)), nil
 }
 
-// localMost is the lowest maximum that fits the patient, as an amount.
-func (w *work) localMost() (quantity.Amount, error) {
-	var most quantity.Amount
-	take := func(a quantity.Amount) error {
-		if !most.Given() {
-			most = a
+// localMost is the lowest maximum that fits the patient, as an amount: of one
+// time, or for an infusion, which runs for hours, of a day.
+func (w *work) localMost(day bool) (quantity.Amount, error) {
+	m, err := w.localMaximum(day, func(formulary.LocalMaximum) bool { return true })
+	return m.amount, err
+}
+
+// A localFigure is a maximum for one patient, and the figure behind it.
+type localFigure struct {
+	amount        quantity.Amount
+	words, source string
+	by            body.Kind // the weight that the figure goes by
+}
+
+// localMaximum is the lowest maximum of the rows that fit the patient and are
+// kept: of one time, or of a day. It is not given where none is stored.
+func (w *work) localMaximum(day bool, kept func(formulary.LocalMaximum) bool) (localFigure, error) {
+	var most localFigure
+	take := func(x localFigure) error {
+		if !most.amount.Given() {
+			most = x
 			return nil
 		}
-		n, err := a.Cmp(most)
+		n, err := x.amount.Cmp(most.amount)
 		if err == nil && n < 0 {
-			most = a
+			most = x
 		}
 		return err
 	}
+	s := w.plan.Style
 	for _, m := range w.plan.Drug.LocalMaxima {
-		if !m.Fits(w.size.Age) {
+		if !m.Fits(w.size.Age) || !kept(m) {
 			continue
 		}
-		if m.PerKg.Given() {
-			a, err := w.amountOf(m.PerKg.Value, m.By)
+		f := m.PerKg
+		if day {
+			f = m.DayMax
+		}
+		if f.Given() {
+			a, err := w.amountOf(f.Value, m.By)
+			if err == nil {
+				err = take(localFigure{a, s.Dose(f.Value), sourceWords(f.Source, f.Unverified), m.By})
+			}
 			if err != nil {
 				return most, err
 			}
-			if err := take(a); err != nil {
-				return most, err
-			}
 		}
-		if m.Total.Given() {
-			if err := take(m.Total.Value); err != nil {
+		if f := m.Total; f.Given() && !day {
+			if err := take(localFigure{f.Value, s.Amount(f.Value), sourceWords(f.Source, f.Unverified), m.By}); err != nil {
 				return most, err
 			}
 		}
@@ -154,6 +176,7 @@ func localSources(works []*work) string {
 			if m.Fits(w.size.Age) {
 				add(m.PerKg.Source, m.PerKg.Unverified, m.PerKg.Given())
 				add(m.Total.Source, m.Total.Unverified, m.Total.Given())
+				add(m.DayMax.Source, m.DayMax.Unverified, m.DayMax.Given() && w.o.Infusion)
 			}
 		}
 	}

@@ -26,16 +26,26 @@ func (w *work) draw(t target) bool {
 	if !ok {
 		return false
 	}
-	if m.Containers = n; n > 10 {
-		w.caution(refusal.Reason{
-			Code: refusal.ContainersMany, Field: t.field,
-			Got: fmt.Sprint(n), Want: "10 or fewer",
-			Rule: "R8", Pos: t.pos,
-			Message: fmt.Sprintf("%d containers have to be opened for one syringe; is a unit wrong?", n),
-			Remedy:  "check the amount, or use a larger presentation",
-		})
+	m.Containers = n
+	if n > mostContainers {
+		w.caution(w.manyContainers(n, t.field, t.pos))
 	}
 	return true
+}
+
+// mostContainers is how many containers one syringe may take without a caution:
+// our own choice.
+const mostContainers = 10
+
+// manyContainers says that more have to be opened.
+func (w *work) manyContainers(n int, field string, pos refusal.Pos) refusal.Reason {
+	return refusal.Reason{
+		Code: refusal.ContainersMany, Field: field,
+		Got: fmt.Sprint(n), Want: "10 or fewer",
+		Rule: "R8", Pos: pos,
+		Message: fmt.Sprintf("%d containers have to be opened for one syringe; is a unit wrong?", n),
+		Remedy:  "check the amount, or use a larger presentation",
+	}
 }
 
 // measure finds the barrel for v and turns its errors into reasons (R8).

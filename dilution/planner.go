@@ -284,9 +284,10 @@ func (w *work) unverified() {
 			note("dose rate "+p.Style.DoseRate(f.Value), f.Unverified)
 		}
 	}
-	for _, b := range p.Drug.Bounds {
-		note("concentration "+p.Style.Concentration(b.Low.Value), b.Low.Unverified && b.Use == w.use())
-		note("concentration "+p.Style.Concentration(b.High.Value), b.High.Unverified && b.Use == w.use())
+	bounds, _ := w.boundsFor(w.line())
+	for _, b := range bounds {
+		note("concentration "+p.Style.Concentration(b.Low.Value), b.Low.Unverified)
+		note("concentration "+p.Style.Concentration(b.High.Value), b.High.Unverified)
 	}
 	if len(list) > 0 {
 		w.caution(refusal.Reason{

@@ -80,7 +80,7 @@ func TestMagnesiumInMillimoles(t *testing.T) {
 	want(t, "drug volume", uk().Volume(p.Mixture.DrugVolume), "8 mL")
 	want(t, "concentration", uk().Concentration(p.Mixture.Concentration), "200 mg/mL")
 	// 0.8 mmol/mL in 20 %: UK SmPC of the 20 % injection.
-	want(t, "substance per mL", uk().Concentration(p.Mixture.SubstanceConc), "800 micromol/mL")
+	want(t, "substance per mL", uk().Concentration(p.Mixture.SubstanceConc), "0.8 mmol/mL")
 	want(t, "left over", uk().Amount(p.Mixture.LeftAmount), "1 g")
 }
 

@@ -2,6 +2,7 @@ package dilution_test
 
 import (
 	"fmt"
+	"maps"
 	"math/big"
 	"os"
 	"path/filepath"
@@ -19,12 +20,12 @@ import (
 type row struct {
 	drug               formulary.Drug
 	use                string // bolus, infusion
-	purpose            string
+	purpose, ages      string
 	routes             []string
 	fits               func(body.Age) bool
 	hardLow, usualLow  string
 	usualHigh, highest string
-	total              bool
+	total, frail       bool
 }
 
 func (r row) String() string {
@@ -40,8 +41,8 @@ func (r row) lowest() string {
 }
 
 func rowOf[T any](d formulary.Drug, use string, x formulary.Rule[T]) row {
-	r := row{drug: d, use: use, purpose: x.For, routes: x.Routes, fits: x.Fits, hardLow: x.HardLow.Text,
-		usualLow: x.UsualLow.Text, usualHigh: x.UsualHigh.Text, total: x.TotalMax.Given()}
+	r := row{drug: d, use: use, purpose: x.For, ages: x.Ages(), routes: x.Routes, fits: x.Fits, hardLow: x.HardLow.Text,
+		usualLow: x.UsualLow.Text, usualHigh: x.UsualHigh.Text, total: x.TotalMax.Given(), frail: x.Frail}
 	for _, f := range []formulary.Figure[T]{x.UsualHigh, x.SoftHigh, x.HardHigh} {
 		if f.Given() {
 			r.highest = f.Text
@@ -87,13 +88,15 @@ func fitting(t *testing.T, r row) []string {
 		{"40 years", "168 cm", "70 kg"}, {"70 years", "168 cm", "70 kg"}, {"41 years", "150 cm", "37 kg"},
 		{"4 years", "102 cm", "16 kg"}, {"7 years", "122 cm", "23 kg"}, {"14 years", "160 cm", "50 kg"},
 		{"2 years", "86 cm", "12 kg"}, {"6 months", "66 cm", "7.5 kg"}, {"20 days", "52 cm", "3.6 kg"},
+		{"5 days", "50 cm", "3.2 kg"},
 	} {
 		age, err := body.ParseAge(p.age)
 		if err != nil {
 			t.Fatal(err)
 		}
 		if r.fits(age) {
-			out = append(out, "\n[[patient]]\n"+lines(key("id", "A"), key("sex", "female"), key("age", p.age), key("height", p.height), key("weight", p.weight)))
+			frail := fmt.Sprintf("frail = %v\n", r.frail)
+			out = append(out, "\n[[patient]]\n"+frail+lines(key("id", "A"), key("sex", "female"), key("age", p.age), key("height", p.height), key("weight", p.weight)))
 		}
 	}
 	if len(out) == 0 {
@@ -111,7 +114,7 @@ func (r row) ways(t *testing.T) (table string, ways []string) {
 	for _, p := range r.drug.Presentations {
 		strength, _ := p.Amount.In(p.Volume)
 		alike := fmt.Sprint(uk().Concentration(strength), p.Neat, p.Powder(), len(p.Diluents), p.Uses)
-		if !p.For(r.use) || p.Volume.Given() && seen[alike] {
+		if !p.For(r.use) || !r.byRoute(p) || p.Volume.Given() && seen[alike] {
 			continue
 		}
 		seen[alike] = true
@@ -131,6 +134,12 @@ func (r row) ways(t *testing.T) (table string, ways []string) {
 	return "syringe", ways
 }
 
+// byRoute reports whether the presentation may be given by the row's first
+// route, which is the one that the orders name.
+func (r row) byRoute(p formulary.Presentation) bool {
+	return len(p.Routes) == 0 || slices.Contains(p.Routes, r.routes[0])
+}
+
 func (r row) diluted(t *testing.T, head string, p formulary.Presentation, b formulary.Bounds) []string {
 	t.Helper()
 	line, diluents := b.Line, []string{""}
@@ -144,7 +153,9 @@ func (r row) diluted(t *testing.T, head string, p formulary.Presentation, b form
 	for i, c := range []string{b.Low.Text, b.High.Text} {
 		for _, d := range diluents {
 			if r.use == "bolus" {
-				out = append(out, head+d+lines(key("concentration", c), key("volume", []string{"10 mL", "20 mL"}[i])))
+				for _, v := range [][]string{{"10 mL"}, {"20 mL", "50 mL"}}[i] {
+					out = append(out, head+d+lines(key("concentration", c), key("volume", v)))
+				}
 				continue
 			}
 			amount := strings.TrimSuffix(times(t, c, big.NewRat(50, 1)), "/mL")
@@ -226,13 +237,14 @@ func TestTenTimesTheUsual(t *testing.T) {
 	}
 }
 
-// unmixed reports that the mixture itself was refused, or the presentation for a
-// patient of this age, so that the dose was never reached: that way of asking says
-// nothing of the limits.
+// unmixed reports that the presentation or the mixture itself was refused, so
+// that the dose was never reached: that way of asking says nothing of the limits.
+// The patient fits the row's ages and the route is the row's, so those two refusals
+// are of the presentation.
 func unmixed(codes []refusal.Code) bool {
 	for _, c := range []refusal.Code{refusal.DisplacementBlank, refusal.MustBeDiluted, refusal.DiluentMissing, refusal.DiluentNotListed,
 		refusal.ConcentrationTooHigh, refusal.ConcentrationTooLow, refusal.VolumeOffGraduation, refusal.VolumeBelowMeasurable,
-		refusal.AgeOutside} {
+		refusal.AgeOutside, refusal.RouteNotListed} { // the presentation's own age and routes
 		if slices.Contains(codes, c) {
 			return true
 		}
@@ -244,7 +256,7 @@ func unmixed(codes []refusal.Code) bool {
 // why not.
 func TestUsualFiguresPass(t *testing.T) {
 	f := starter(t)
-	used, never, small := map[string]bool{}, unmakeable(t), tooSmallToRead(t)
+	used, never, small := map[string]bool{}, unmakeable(t), offTheScale(t)
 	for _, r := range rowsOf(f) {
 		for _, figure := range []string{r.usualLow, r.usualHigh} {
 			if figure == "" {
@@ -252,9 +264,12 @@ func TestUsualFiguresPass(t *testing.T) {
 			}
 			name := r.String()
 			why, excused := never[name]
-			if !excused {
-				name += ": " + figure
-				why, excused = small[name]
+			// A figure of one age band alone is excused with the band in its name.
+			for _, part := range []string{name, name + ", " + r.ages} {
+				if !excused {
+					name = part + ": " + figure
+					why, excused = small[name]
+				}
 			}
 			used[name] = used[name] || excused
 			switch made, codes := r.made(t, f, figure); {
@@ -299,9 +314,13 @@ func (r row) made(t *testing.T, f *formulary.Formulary, figure string) (bool, []
 // serve, and why.
 func unmakeable(t *testing.T) map[string]string { return excused(t, "unmakeable") }
 
-// tooSmallToRead are usual figures that no single dilution to an end of the
-// bounds lets a graduation show.
-func tooSmallToRead(t *testing.T) map[string]string { return excused(t, "too small") }
+// offTheScale are usual figures that no single dilution to an end of the
+// bounds lets a graduation show, or that no syringe holds.
+func offTheScale(t *testing.T) map[string]string {
+	out := excused(t, "too small")
+	maps.Copy(out, excused(t, "too large"))
+	return out
+}
 
 // excused is what the tables of testdata/formulary/excused say of one kind.
 func excused(t *testing.T, kind string) map[string]string {

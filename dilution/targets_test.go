@@ -1,13 +1,10 @@
 package dilution_test
 
 import (
-	"errors"
-	"math/big"
 	"slices"
 	"strings"
 	"testing"
 
-	"drawup/dilution"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
 )
@@ -97,39 +94,6 @@ func TestDeadSpaceOfTheShelf(t *testing.T) {
 	p = made(t, text, "infusion", strings.Replace(body, key("hours", "6 h"), key("volume", "20 mL"), 1))
 	if p.Infusion.CountsOff() {
 		t.Errorf("got %s mL counted off, want nothing where nobody asks", p.Infusion.DeadSpace.Exact())
-	}
-}
-
-// The rule of six is 6 mg for each kg in 100 mL, and 1 mL/h then gives 1
-// microgram/kg/min (ISMP Medication Safety Alert 2005;10(4)); the rule of three is
-// 3 mg for each kg in 50 mL; 90 mg in 50 mL at 6 kg give 5 microgram/kg/min with
-// each mL/h (nurses' forum, the rule of three, 2006).
-func TestWeightMade(t *testing.T) {
-	for _, c := range []struct{ each, weight, volume, want string }{
-		{"1 microgram/kg/min", "10 kg", "100 mL", "60"}, {"0.1 microgram/kg/min", "10 kg", "100 mL", "6"},
-		{"10 microgram/kg/min", "10 kg", "100 mL", "600"}, {"1 microgram/kg/min", "10 kg", "50 mL", "30"},
-		{"5 microgram/kg/min", "6 kg", "50 mL", "90"}, {"0.1 microgram/kg/min", "6 kg", "50 mL", "1.8"},
-	} {
-		each, err1 := quantity.ParseDoseRate(c.each)
-		w, err2 := quantity.ParseBodyWeight(c.weight)
-		v, err3 := quantity.ParseVolume(c.volume)
-		if err := errors.Join(err1, err2, err3); err != nil {
-			t.Fatal(err)
-		}
-		got, err := dilution.WeightMade(each, w, v)
-		if err != nil || got.Exact(quantity.Milligram()) != c.want {
-			t.Errorf("%s, %s, %s: got %s mg, %v, want %s", c.each, c.weight, c.volume, got.Exact(quantity.Milligram()), err, c.want)
-		}
-	}
-	var basis *quantity.BasisError
-	absolute, _ := quantity.ParseDoseRate("1 mg/h")
-	if _, err := dilution.WeightMade(absolute, quantity.Kilograms(big.NewRat(6, 1)), quantity.Millilitres(big.NewRat(50, 1))); !errors.As(err, &basis) {
-		t.Errorf("an absolute rate: got %v", err)
-	}
-	var missing *quantity.NotGivenError
-	each, _ := quantity.ParseDoseRate("1 microgram/kg/min")
-	if _, err := dilution.WeightMade(each, quantity.Kilograms(big.NewRat(6, 1)), quantity.Volume{}); !errors.As(err, &missing) {
-		t.Errorf("no volume: got %v", err)
 	}
 }
 

@@ -8,34 +8,30 @@ import (
 )
 
 // WeightMade is the amount of drug for a syringe of final volume v that fits one
-// body weight: each 1 mL/h of it gives the dose rate each. In 100 mL and for 1
-// microgram/kg/min that is the "rule of six", 6 mg for each kg; in 50 mL the
-// "rule of three". Errors: *quantity.BasisError unless each is per kg;
-// *quantity.NotGivenError.
-func WeightMade(each quantity.DoseRate, weight quantity.BodyWeight, v quantity.Volume) (quantity.Amount, error) {
-	hourly, err := each.For(weight)
+// body weight: each 1 mL/h of it gives the dose rate each. With micrograms per kg
+// and minute that is dose x kg x 60 x mL micrograms; in 100 mL the "rule of six"
+// (6 mg for each kg), in 50 mL the "rule of three" (3 mg for each kg), where 1
+// mL/h gives 1 microgram/kg/min. It is for reading and making old orders: the
+// mixture fits no other patient. Errors: *quantity.BasisError unless each is per
+// kg; *quantity.NotGivenError; those of [quantity.Amount.In].
+func WeightMade(each quantity.DoseRate, w quantity.BodyWeight, v quantity.Volume) (quantity.Amount, error) {
+	rate, err := each.For(w)
 	if err != nil {
 		return quantity.Amount{}, err
 	}
-	if !v.Given() {
-		return quantity.Amount{}, &quantity.NotGivenError{What: "final volume"}
+	hour, err := rate.During(quantity.Minutes(big.NewRat(60, 1)))
+	if err != nil {
+		return quantity.Amount{}, err
 	}
-	// Rat counts base units an hour; 1 mL/h gives that much with each mL.
-	base := baseUnit(each.Kind())
-	return quantity.AmountOf(new(big.Rat).Mul(hourly.Rat(), v.Rat()), base), nil
-}
-
-// baseUnit is the unit in which a kind is counted inside.
-func baseUnit(k quantity.Kind) quantity.Unit {
-	switch k {
-	case quantity.ByMass:
-		return quantity.Milligram()
-	case quantity.ByActivity:
-		return quantity.Units()
-	case quantity.BySubstance:
-		return quantity.Millimole()
+	inOne, err := hour.Amount()
+	if err != nil {
+		return quantity.Amount{}, err
 	}
-	return quantity.Unit{}
+	c, err := inOne.In(quantity.Millilitres(big.NewRat(1, 1)))
+	if err != nil {
+		return quantity.Amount{}, err
+	}
+	return v.Holds(c)
 }
 
 // NearestStandard is the standard preparation of d whose concentration is

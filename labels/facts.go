@@ -69,11 +69,12 @@ func (w Facts) container(p dilution.Plan) {
 	w.put(recheck.Strength, s.Concentration(p.Mixture.Strength))
 	if pr.Powder() {
 		w.put(recheck.PowderAdded, s.Volume(pr.Added))
-		displaced := "0 mL"
-		if !pr.Negligible {
-			displaced = s.Volume(pr.Displacement.Value)
+		switch {
+		case pr.Negligible:
+			w.put(recheck.PowderDisplaced, "0 mL")
+		case !pr.Obtained:
+			w.put(recheck.PowderDisplaced, s.Volume(pr.Displacement.Value))
 		}
-		w.put(recheck.PowderDisplaced, displaced)
 	}
 	w.put(recheck.ATC, p.Drug.ATC)
 	w.packs(p)

@@ -11,7 +11,6 @@ import (
 	"drawup/dilution/quantity"
 	"drawup/dilution/recheck"
 	"drawup/dilution/refusal"
-	"drawup/labels/gs1"
 )
 
 // A Making is what all papers of one run share: who made them, from which
@@ -27,23 +26,12 @@ type Making struct {
 	Digest          string // short digest, hexadecimal
 	Serial          string // first five digits of every serial number
 	Invented        bool
+	Products        []Product // preparations with a GTIN of the site's own
 }
 
 // SerialOf is the eight-digit serial of syringe n: five digits of the run, then
 // the number.
 func (m Making) SerialOf(n int) string { return fmt.Sprintf("%s%03d", m.Serial, n) }
-
-// CodeOf is the barcode's content in human-readable form: drug by ATC code,
-// use-by and serial, concentration, in the company-internal identifiers 91 to
-// 93, which may stand alone.
-func CodeOf(p dilution.Plan, serial string) (string, error) {
-	_, hri, err := gs1.Encode([]gs1.Element{
-		{AI: "91", Value: p.Drug.ATC},
-		{AI: "92", Value: p.UseBy.At.Format("0601021504") + serial},
-		{AI: "93", Value: p.Mixture.Concentration.InCode()},
-	})
-	return hri, err
-}
 
 // FromPlan is the label of one planned syringe.
 func FromPlan(p dilution.Plan, w Facts, m Making) (Label, error) {
@@ -52,7 +40,7 @@ func FromPlan(p dilution.Plan, w Facts, m Making) (Label, error) {
 		return Label{}, fmt.Errorf("got label class %q, want one of Table 1", p.Drug.Class)
 	}
 	serial := m.SerialOf(p.Number)
-	code, err := CodeOf(p, serial)
+	codes, err := codesOf(p, m)
 	if err != nil {
 		return Label{}, err
 	}
@@ -60,7 +48,7 @@ func FromPlan(p dilution.Plan, w Facts, m Making) (Label, error) {
 		Amount:   Line{w.Cell(recheck.AmountInSyringe), {Text: " in "}, w.Cell(recheck.FinalVolume)},
 		UseBy:    Line{{Text: "use by "}, w.Cell(recheck.UseBy)},
 		Prepared: Line{{Text: "made "}, w.Cell(recheck.Prepared), {Text: " " + m.Preparer}},
-		Serial:   Cell{Text: serial, Figure: recheck.Serial}, Code: Cell{Text: code, Figure: recheck.Code},
+		Serial:   Cell{Text: serial, Figure: recheck.Serial}, Codes: codes,
 		Digest: m.Digest, Marks: marks(p, m)}
 	l.names(p, w)
 	if w.Has(recheck.SubstanceAmount) {

@@ -72,7 +72,7 @@ type Label struct {
 	Route   string // printed when not empty, "infiltration only"
 	Patient string // optional, "HM-01"; printed after the word patient
 	Serial  Cell   // eight digits
-	Code    Cell   // what the barcode holds, in human-readable form; empty for a label without
+	Codes   []Cell // what the barcode may hold, in human-readable form, the fullest first; empty for a label without
 
 	Infusion  bool // adds the pump rate, left to be written
 	Diluent   Line // "diluent glucose 5 %"
@@ -99,13 +99,23 @@ func (l Label) lines() []Line {
 	for _, m := range l.Marks {
 		lines = append(lines, Words(m))
 	}
-	return append(lines, Words(l.Class.Word), Line{l.Serial}, Words(l.Digest), Line{l.Code})
+	lines = append(lines, Words(l.Class.Word), Line{l.Serial})
+	if l.Digest != "" {
+		lines = append(lines, Line{{Text: l.Digest, Figure: recheck.Ref}})
+	}
+	for _, code := range l.Codes {
+		lines = append(lines, Line{code})
+	}
+	return lines
 }
 
-// Each calls see with every text of the label, the barcode's included.
+// Each calls see with every text of the label, the barcode's forms included.
 func (l Label) Each(see func(text string)) {
-	for _, text := range []string{l.Name, l.Bracketed(), l.Second, l.Concentration.Text, l.As, l.SecondConcentration.Text, l.Route, l.Patient, l.Class.Word, l.Serial.Text, l.Digest, l.Code.Text} {
+	for _, text := range []string{l.Name, l.Bracketed(), l.Second, l.Concentration.Text, l.As, l.SecondConcentration.Text, l.Route, l.Patient, l.Class.Word, l.Serial.Text, l.Digest} {
 		see(text)
+	}
+	for _, code := range l.Codes {
+		see(code.Text)
 	}
 	for _, line := range []Line{l.Amount, l.Substance, l.Dose, l.Diluent, l.UseBy, l.Prepared} {
 		for _, c := range line {
@@ -132,7 +142,8 @@ func (l Label) Figures(paper string) []recheck.Figure {
 }
 
 // Text is every line of the label in reading order, empty ones left out. The
-// last is what the barcode says.
+// last are what the barcode may say, the fullest form first; paper holds one of
+// them.
 func (l Label) Text() []string {
 	var out []string
 	for _, line := range l.lines() {

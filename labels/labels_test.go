@@ -134,23 +134,25 @@ func example() labels.Label {
 		Concentration: labels.Cell{Text: "50 micrograms/mL", Figure: recheck.Concentration},
 		Amount:        labels.Line{{Text: "500 micrograms", Figure: recheck.AmountInSyringe}, {Text: " in "}, {Text: "10 mL", Figure: recheck.FinalVolume}},
 		UseBy:         labels.Line{{Text: "use by "}, {Text: "01 Dec 2026 19:30", Figure: recheck.UseBy}},
-		Code:          labels.Cell{Text: "(91)N01AH01", Figure: recheck.Code},
+		Codes:         []labels.Cell{{Text: "(91)N01AH01(94)1mg", Figure: "code.1.text"}, {Text: "(91)N01AH01", Figure: "code.2.text"}},
 		Marks:         []string{labels.MarkStarter},
 	}
 }
 
 func TestFiguresAndText(t *testing.T) {
 	l := example()
+	l.Digest = "70836235"
 	want := []recheck.Figure{
 		{Paper: "label", Name: "concentration", Text: "50 micrograms/mL"}, {Paper: "label", Name: "amount", Text: "500 micrograms"},
 		{Paper: "label", Name: "final.volume", Text: "10 mL"}, {Paper: "label", Name: "use.by", Text: "01 Dec 2026 19:30"},
-		{Paper: "label", Name: "code", Text: "(91)N01AH01"},
+		{Paper: "label", Name: "ref", Text: "70836235"},
+		{Paper: "label", Name: "code.1.text", Text: "(91)N01AH01(94)1mg"}, {Paper: "label", Name: "code.2.text", Text: "(91)N01AH01"},
 	}
 	got := l.Figures("label")
 	if fmt.Sprint(got) != fmt.Sprint(want) {
 		t.Errorf("got %v, want %v", got, want)
 	}
-	text := "Fentanyl|50 micrograms/mL|500 micrograms in 10 mL|use by 01 Dec 2026 19:30|unapproved data|OPIOID|(91)N01AH01"
+	text := "Fentanyl|50 micrograms/mL|500 micrograms in 10 mL|use by 01 Dec 2026 19:30|unapproved data|OPIOID|70836235|(91)N01AH01(94)1mg|(91)N01AH01"
 	if got := strings.Join(l.Text(), "|"); got != text {
 		t.Errorf("got %q, want %q", got, text)
 	}

@@ -40,10 +40,10 @@ func (a arrangement) draw() drawing {
 	}
 	a.row(to, a.foot, ink.Black)
 	a.fromRight(to, a.right, a.size, a.gap, ink.Black)
-	if len(a.modules) > 0 {
+	if a.side > 0 {
 		to.add(d.symbol.filled(ink.White))
 		to.symbol = len(to.marks)
-		to.add(ink.Symbol{X: d.symbol.x + a.module, Y: d.symbol.y + a.module, Module: a.module, Rows: a.modules, Colour: ink.Black})
+		to.add(ink.Symbol{X: d.symbol.x + a.module, Y: d.symbol.y + a.module, Module: a.module, Colour: ink.Black}) // its rows differ from label to label
 	}
 	return *to
 }

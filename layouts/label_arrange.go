@@ -8,7 +8,7 @@ import (
 // An arrangement is a label with everything in its place.
 type arrangement struct {
 	design  design
-	modules []string // rows of the barcode, none without
+	side    int // of the barcode in modules, 0 without
 	module  ink.Micrometre
 	name    named
 	line    box // reversal line, empty without
@@ -28,14 +28,15 @@ type arrangement struct {
 // texts are as wide is arranged without a search.
 type choice struct {
 	tier   int
+	form   int // of the code
 	module ink.Micrometre
 	small  ink.Micrometre
 	way    way
 	large  ink.Micrometre
 }
 
-// A tier is a way to fill a label; the next is tried only when none of the
-// barcode modules makes this one fit.
+// A tier is a way to fill a label; the next is tried only when no form of the
+// code in no size of module makes this one fit.
 type tier struct {
 	where  place
 	strips int            // rows of small type along the top edge
@@ -90,46 +91,114 @@ func ways(capital ink.Micrometre, tight bool) []way {
 	return []way{{apart, 150}, {grouped, 150}, {apart, 129}, {grouped, 129}, {dense, 150}, {dense, 129}}
 }
 
-// arrange finds the first tier with which the label fits its panel, each with
-// the best size of barcode module first. When none fits it says what did not.
-func arrange(l labels.Label, panel box, s Stock, mono bool, modules []string) (arrangement, string) {
-	why := "its barcode"
-	var c content
-	var where place
+// arrange finds the first tier with which the label fits its panel, and in it the
+// fullest form of the code. When none fits it says what did not.
+func arrange(l labels.Label, panel box, s Stock, mono bool, symbols []symbol) (arrangement, string) {
+	f := fitting{label: l, panel: panel, stock: s, mono: mono, why: "its barcode"}
 	for i, t := range tiers(l.Class) {
-		if t.where != where {
-			c, where = contentOf(l, t.where), t.where
+		if i == 0 || t.where != f.where {
+			f.content, f.where = contentOf(l, t.where), t.where
 		}
-		for _, module := range moduleSizes(s, modules) {
-			symbol, ok := symbolBox(panel, s, module, len(modules))
-			if !ok {
-				continue
-			}
-			a := arrangement{design: newDesign(panel, s, l.Class, mono, symbol), modules: modules, module: module}
-			now := c
-			if !a.upper(l, &now, t.strips) {
-				why = "the drug name in capitals of 2.5 mm"
-				continue
-			}
-			if a.lower(l, now, t) {
-				a.chosen.tier, a.chosen.module = i, module
-				return a, ""
-			}
-			why = "its lines in the smallest type allowed"
+		f.tier, f.number = t, i
+		if a, ok := f.fullest(symbols); ok {
+			return a, ""
 		}
 	}
-	return arrangement{}, why
+	return arrangement{}, f.why
+}
+
+// A fitting is the search for an arrangement in one tier after the other.
+type fitting struct {
+	label   labels.Label
+	panel   box
+	stock   Stock
+	mono    bool
+	content content
+	where   place
+	tier    tier
+	number  int
+	why     string // what did not fit
+}
+
+// fullest takes the shortest form of the code as the measure: on a low label a
+// fuller one is taken only where it makes no type smaller and sets no rows
+// closer; on a label with room for larger type, wherever it fits.
+func (f *fitting) fullest(symbols []symbol) (arrangement, bool) {
+	if len(symbols) == 0 {
+		return f.with(codeSize{})
+	}
+	last := len(symbols) - 1
+	anything := func(arrangement) bool { return true }
+	least, ok := f.form(symbols, last, anything)
+	good := func(a arrangement) bool {
+		return f.panel.h >= tallLabel || !ok || a.chosen.costsNothing(least.chosen)
+	}
+	for i := range last {
+		if a, fits := f.form(symbols, i, good); fits {
+			return a, true
+		}
+	}
+	return least, ok
+}
+
+// costsNothing says whether the type of one choice is as large and as far apart
+// as that of another.
+func (c choice) costsNothing(other choice) bool {
+	return c.small >= other.small && c.large >= other.large && c.way.pitch >= other.way.pitch
+}
+
+// moduleLow is the least side of a module: 0.255 mm, the least of GS1 DataMatrix
+// on healthcare items [unverified: the table was not seen].
+const moduleLow = 255
+
+// form arranges the label with one form of the code, in the best size of module
+// with which it fits and is good.
+func (f *fitting) form(symbols []symbol, i int, good func(arrangement) bool) (arrangement, bool) {
+	for _, dots := range f.stock.Dots {
+		module := f.stock.module(dots)
+		if dots < 2 || module < moduleLow {
+			continue // no scanner could be relied on
+		}
+		if a, ok := f.with(codeSize{i, symbols[i].side, module, i == len(symbols)-1}); ok && good(a) {
+			return a, true
+		}
+	}
+	return arrangement{}, false
+}
+
+// with arranges the label with a code of one size.
+func (f *fitting) with(code codeSize) (arrangement, bool) {
+	symbol, ok := symbolBox(f.panel, f.stock, code)
+	if !ok {
+		return arrangement{}, false
+	}
+	a := arrangement{design: newDesign(f.panel, f.stock, f.label.Class, f.mono, symbol), side: code.side, module: code.module}
+	now := f.content
+	if !a.upper(f.label, &now, f.tier.strips) {
+		f.why = "the drug name in capitals of 2.5 mm"
+		return arrangement{}, false
+	}
+	if !a.lower(f.label, now, f.tier) {
+		f.why = "its lines in the smallest type allowed"
+		return arrangement{}, false
+	}
+	a.chosen.tier, a.chosen.form, a.chosen.module = f.number, code.form, code.module
+	return a, true
 }
 
 // repeat arranges a label by a choice that was made for another with texts of
 // the same widths.
-func repeat(l labels.Label, panel box, s Stock, mono bool, modules []string, made choice) (arrangement, bool) {
+func repeat(l labels.Label, panel box, s Stock, mono bool, symbols []symbol, made choice) (arrangement, bool) {
 	t := tiers(l.Class)[made.tier]
-	symbol, ok := symbolBox(panel, s, made.module, len(modules))
+	code := codeSize{}
+	if len(symbols) > 0 {
+		code = codeSize{made.form, symbols[made.form].side, made.module, made.form == len(symbols)-1}
+	}
+	symbol, ok := symbolBox(panel, s, code)
 	if !ok {
 		return arrangement{}, false
 	}
-	a := arrangement{design: newDesign(panel, s, l.Class, mono, symbol), modules: modules, module: made.module}
+	a := arrangement{design: newDesign(panel, s, l.Class, mono, symbol), side: code.side, module: made.module}
 	c := contentOf(l, t.where)
 	if !a.upper(l, &c, t.strips) {
 		return arrangement{}, false
@@ -137,35 +206,36 @@ func repeat(l labels.Label, panel box, s Stock, mono bool, modules []string, mad
 	b := a.block(made.small, t)
 	b.pitch = made.small * made.way.pitch / 100
 	a.size, a.capital, a.gap = b.size, made.small, b.gap
+	a.chosen = made
 	return a, a.place(l, c, b, made.way.how, made.large)
 }
 
-// moduleSizes are the sizes of module to try, the best first.
-func moduleSizes(s Stock, modules []string) []ink.Micrometre {
-	if len(modules) == 0 {
-		return []ink.Micrometre{0}
-	}
-	var out []ink.Micrometre
-	for _, dots := range s.Dots {
-		out = append(out, s.module(dots))
-	}
-	return out
+// A codeSize is one form of the code with modules of one size.
+type codeSize struct {
+	form, side int
+	module     ink.Micrometre
+	last       bool // there is no shorter form
 }
 
 // symbolBox is the white panel of the barcode, quiet zone of one module
-// included, in the lower right. On a roll it stays clear of the cut edge. It
-// may rise at most 1.5 mm above the middle of the label.
-func symbolBox(panel box, s Stock, module ink.Micrometre, count int) (box, bool) {
-	if count == 0 {
+// included, in the lower right. On a roll it stays clear of the cut edge. The
+// shortest form may rise at most 1.5 mm above the middle of the label; a fuller
+// one stays below it, so that it never costs the name any of its size.
+func symbolBox(panel box, s Stock, code codeSize) (box, bool) {
+	if code.side == 0 {
 		return box{}, true
+	}
+	rise := ink.Micrometre(0)
+	if code.last {
+		rise = 1500
 	}
 	off := ink.Micrometre(0)
 	if s.Inset == 0 {
 		off = 300
 	}
-	side := ink.Micrometre(count+2) * module
+	side := ink.Micrometre(code.side+2) * code.module
 	b := box{panel.right() - side - off, panel.bottom() - side - off, side, side}
-	return b, b.y >= panel.y+panel.h/2-1500 && b.x > panel.x+panel.w/2
+	return b, b.y >= panel.y+panel.h/2-rise && b.x > panel.x+panel.w/2
 }
 
 // Baseline of the first row of small type below the top edge, from there to

@@ -25,10 +25,20 @@ func batch(n int) []labels.Label {
 	for i := range list {
 		l := samples()[0]
 		l.Number, l.Serial.Text = i+1, fmt.Sprintf("%08d", i+1)
-		l.Code.Text = "(91)N01AX07(92)2612011930" + l.Serial.Text + "(93)2mg/mL"
+		l.Codes = numbered(l)
 		list[i] = l
 	}
 	return list
+}
+
+// numbered is the codes of a sample with the label's own serial.
+func numbered(l labels.Label) []labels.Cell {
+	var out []labels.Cell
+	for _, code := range l.Codes {
+		code.Text = strings.Replace(code.Text, "00001003", l.Serial.Text, 1)
+		out = append(out, code)
+	}
+	return out
 }
 
 // mixed is n labels of all classes of which no two have the same words: their
@@ -43,7 +53,7 @@ func mixed(n int) []labels.Label {
 		l.Amount[0].Text = fmt.Sprintf("%d mg", i+1)
 		l.Prepared = append(labels.Line{}, l.Prepared...)
 		l.Prepared[1].Text = fmt.Sprintf("%02d Dec 2026 07:%02d", 1+i%28, i/28%60)
-		l.Code.Text = l.Code.Text[:len("(91)N01AX07(92)2612011930")] + l.Serial.Text + l.Code.Text[len("(91)N01AX07(92)261201193000001003"):]
+		l.Codes = numbered(l)
 		list[i] = l
 	}
 	return list
@@ -128,7 +138,7 @@ func plain(tb testing.TB, list []labels.Label) int {
 			lib.SetFont(string(face), "", size)
 			lib.Text(x+1, y+6+1.9*float64(row), text)
 		}
-		plainCode(tb, lib, l.Code.Text, x+27, y+10)
+		plainCode(tb, lib, l.Codes[0].Text, x+27, y+10)
 		lib.Rect(x, y, 36.1, 19.2, "D")
 	}
 	var out bytes.Buffer
@@ -152,12 +162,12 @@ func plainCode(tb testing.TB, lib *fpdf.Fpdf, hri string, x, y float64) {
 		tb.Fatal(err)
 	}
 	lib.SetFillColor(255, 255, 255)
-	lib.Rect(x, y, 9.1, 9.1, "F")
+	lib.Rect(x, y, 8.3, 8.3, "F")
 	lib.SetFillColor(0, 0, 0)
 	for j := range code.Bounds().Dy() {
 		for i := range code.Bounds().Dx() {
 			if r, _, _, _ := code.At(i, j).RGBA(); r == 0 {
-				lib.Rect(x+0.381*float64(i+1), y+0.381*float64(j+1), 0.381, 0.381, "F")
+				lib.Rect(x+0.296*float64(i+1), y+0.296*float64(j+1), 0.296, 0.296, "F")
 			}
 		}
 	}

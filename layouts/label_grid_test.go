@@ -173,7 +173,7 @@ func TestArrangedOnceOrAnew(t *testing.T) {
 			} {
 				other := l
 				other.Serial.Text = "00002718"
-				other.Code.Text = strings.Replace(l.Code.Text, l.Serial.Text, other.Serial.Text, 1)
+				other.Codes = numbered(other)
 				change(&other)
 				both := placed(t, []labels.Label{l, other}, s, layouts.Options{})
 				alone := placed(t, []labels.Label{other}, s, layouts.Options{Used: 1})

@@ -2,6 +2,7 @@ package layouts_test
 
 import (
 	"bytes"
+	"strings"
 	"testing"
 	"time"
 
@@ -23,6 +24,8 @@ func (allPassed) Covers([]recheck.Figure) bool { return true }
 // fixtures; amounts, times and people are made up.
 func sample(class, name, concentration, amount, atc, coded string) labels.Label {
 	c, _ := labels.ClassOf(class)
+	short := "(91)" + atc + "(92)261201193000001003(93)" + coded
+	held := strings.NewReplacer(" micrograms", "ug", " mcg", "ug", " units", "unit", ",", "", " ", "").Replace(amount)
 	return labels.Label{
 		Number: 1, Class: c, Name: name,
 		Concentration: labels.Cell{Text: concentration, Figure: recheck.Concentration},
@@ -30,7 +33,7 @@ func sample(class, name, concentration, amount, atc, coded string) labels.Label 
 		UseBy:         labels.Line{{Text: "use by "}, {Text: "01 Dec 2026 19:30", Figure: recheck.UseBy}},
 		Prepared:      labels.Line{{Text: "made "}, {Text: "01 Dec 2026 07:30", Figure: recheck.Prepared}, {Text: " A. Example"}},
 		Serial:        labels.Cell{Text: "00001003", Figure: recheck.Serial},
-		Code:          labels.Cell{Text: "(91)" + atc + "(92)261201193000001003(93)" + coded, Figure: recheck.Code},
+		Codes:         []labels.Cell{{Text: short + "(94)" + held + "(95)7a83c0d1", Figure: "code.1.text"}, {Text: short, Figure: "code.2.text"}},
 	}
 }
 

@@ -13,6 +13,7 @@ import (
 // but for serial number and barcode.
 type pattern struct {
 	drawing
+	form   int             // of the code
 	before string          // stands before the serial number
 	why    *refusal.Reason // why it cannot be printed, or not whole
 }
@@ -60,23 +61,24 @@ func (s *arranger) set(l labels.Label) (pattern, []string, *refusal.Reason) {
 			Message: fmt.Sprintf("The label of %s has letters that cannot be printed: %q.", l.Name, string(missing)), Field: "label",
 			Got: fmt.Sprintf("%q", string(missing)), Want: "letters of the embedded faces", Remedy: "spell it in other letters"}
 	}
-	var modules []string
-	if l.Code.Text != "" {
-		var err error
-		if modules, err = dataMatrix(l.Code.Text); err != nil {
-			return pattern{}, nil, &refusal.Reason{Code: refusal.TextTooLong, Severity: refusal.Refuse, Syringe: l.Number,
-				Message: "The barcode of " + l.Name + " cannot be made: " + err.Error() + ".", Field: "barcode",
-				Got: l.Code.Text, Want: "a code after the GS1 rules"}
-		}
+	symbols, err := symbolsOf(l)
+	if err != nil {
+		return pattern{}, nil, noCode(l, err)
 	}
-	s.key = appendKey(s.key[:0], l, len(modules))
+	s.key = appendKey(s.key[:0], l, symbols)
 	p, ok := s.known[string(s.key)]
 	if !ok {
-		p = s.arrange(l, modules)
+		p = s.arrange(l, symbols)
 		if len(s.known) >= keptPatterns {
 			s.known = map[string]pattern{}
 		}
 		s.known[string(s.key)] = p
+	}
+	var modules []string
+	if len(symbols) > 0 && (p.why == nil || p.why.Severity != refusal.Refuse) {
+		if modules, err = symbols[p.form].rows(); err != nil {
+			return pattern{}, nil, noCode(l, err)
+		}
 	}
 	if p.why == nil {
 		return p, modules, nil
@@ -84,6 +86,17 @@ func (s *arranger) set(l labels.Label) (pattern, []string, *refusal.Reason) {
 	why := *p.why
 	why.Syringe = l.Number
 	return p, modules, &why
+}
+
+// noCode is the refusal of a code that breaks the GS1 rules.
+func noCode(l labels.Label, err error) *refusal.Reason {
+	var forms []string
+	for _, code := range l.Codes {
+		forms = append(forms, code.Text)
+	}
+	return &refusal.Reason{Code: refusal.TextTooLong, Severity: refusal.Refuse, Syringe: l.Number,
+		Message: "The barcode of " + l.Name + " cannot be made: " + err.Error() + ".", Field: "barcode",
+		Got: strings.Join(forms, ", "), Want: "a code after the GS1 rules"}
 }
 
 // missing is every rune of the label that a face it may be set in cannot show.
@@ -106,15 +119,15 @@ func (s *arranger) missing(l labels.Label) []rune {
 // digits of the small type differ from a label seen before, all widths and
 // places where a line may be broken are the same, and so is what the search
 // would choose.
-func (s *arranger) arrange(l labels.Label, modules []string) pattern {
+func (s *arranger) arrange(l labels.Label, symbols []symbol) pattern {
 	panel := s.stock.panel(ink.Point{})
 	digits := alikeKey(s.key, l)
 	if made, ok := s.made[digits]; ok {
-		if a, ok := repeat(l, panel, s.stock, s.mono, modules, made); ok {
+		if a, ok := repeat(l, panel, s.stock, s.mono, symbols, made); ok {
 			return patternOf(a, l)
 		}
 	}
-	a, why := arrange(l, panel, s.stock, s.mono, modules)
+	a, why := arrange(l, panel, s.stock, s.mono, symbols)
 	if why == "" {
 		if len(s.made) >= keptPatterns {
 			s.made = map[string]choice{}
@@ -125,7 +138,7 @@ func (s *arranger) arrange(l labels.Label, modules []string) pattern {
 	if !l.Infusion && len(l.Dose) > 0 {
 		short := l
 		short.Dose = nil
-		if a, still := arrange(short, panel, s.stock, s.mono, modules); still == "" {
+		if a, still := arrange(short, panel, s.stock, s.mono, symbols); still == "" {
 			p := patternOf(a, l)
 			p.why = &refusal.Reason{Code: refusal.TextTooLong, Severity: refusal.Caution,
 				Message: fmt.Sprintf("The label of %s has no room for the dose; the draw-up sheet has it.", l.Name), Field: "stock",
@@ -136,7 +149,7 @@ func (s *arranger) arrange(l labels.Label, modules []string) pattern {
 	return pattern{why: &refusal.Reason{Code: refusal.LabelTooSmall, Severity: refusal.Refuse,
 		Message: fmt.Sprintf("The label of %s does not fit stock %s: no room for %s.", l.Name, s.stock.Name, why),
 		Field:   "stock", Got: s.stock.Name, Want: "a stock that holds every line of the label", Rule: "R15",
-		Source: "ISO 26825:2020, 5.4.2 and 5.4.3 for the name", Remedy: s.larger(l, modules)}}
+		Source: "ISO 26825:2020, 5.4.2 and 5.4.3 for the name", Remedy: s.larger(l, symbols)}}
 }
 
 // alikeKey is a key with all digits alike but those of names and
@@ -155,7 +168,7 @@ func alikeKey(key []byte, l labels.Label) string {
 }
 
 func patternOf(a arrangement, l labels.Label) pattern {
-	p := pattern{drawing: a.draw()}
+	p := pattern{drawing: a.draw(), form: a.chosen.form}
 	if p.serial >= 0 {
 		if text, ok := p.marks[p.serial].(ink.Text); ok {
 			p.before = strings.TrimSuffix(text.String, l.Serial.Text)
@@ -165,12 +178,12 @@ func patternOf(a arrangement, l labels.Label) pattern {
 }
 
 // larger names the next larger stock that holds the label.
-func (s *arranger) larger(l labels.Label, modules []string) string {
+func (s *arranger) larger(l labels.Label, symbols []symbol) string {
 	for _, larger := range Stocks() {
 		if larger.LabelW*larger.LabelH <= s.stock.LabelW*s.stock.LabelH {
 			continue
 		}
-		if _, why := arrange(l, larger.panel(ink.Point{}), larger, s.mono, modules); why == "" {
+		if _, why := arrange(l, larger.panel(ink.Point{}), larger, s.mono, symbols); why == "" {
 			return "use stock " + larger.Name
 		}
 	}
@@ -178,8 +191,8 @@ func (s *arranger) larger(l labels.Label, modules []string) string {
 }
 
 // appendKey writes all that decides how a label is arranged: every word of it,
-// the serial number but for its digits, and of the barcode its size.
-func appendKey(key []byte, l labels.Label, modules int) []byte {
+// the serial number but for its digits, and of the barcode's forms their sizes.
+func appendKey(key []byte, l labels.Label, symbols []symbol) []byte {
 	word := func(text string) { key = append(append(key, text...), 0) }
 	line := func(line labels.Line) {
 		for _, c := range line {
@@ -199,7 +212,11 @@ func appendKey(key []byte, l labels.Label, modules int) []byte {
 	for _, mark := range l.Marks {
 		word(mark)
 	}
-	key = append(key, 2, byte(modules), byte(modules>>8))
+	key = append(key, 2)
+	for _, symbol := range symbols {
+		key = append(key, byte(symbol.side))
+	}
+	key = append(key, 2)
 	c := l.Class
 	key = append(key, c.Fill.R, c.Fill.G, c.Fill.B, c.LetterOnBar.R, c.LetterOnBar.G, c.LetterOnBar.B)
 	for _, flag := range [...]bool{l.Infusion, l.CheckedBy, c.Stripes, c.Bar, c.Line} {

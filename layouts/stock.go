@@ -50,7 +50,7 @@ func Stocks() []Stock {
 			Note: "labels 21.2 mm wide; ISO 26825:2020, 5.3 asks for 10 to 15 mm"},
 		{Name: "a4-24", PageW: ink.MM(210), PageH: ink.MM(297), Columns: 3, Rows: 8,
 			Left: 0, Top: 500, PitchX: 70000, PitchY: 37000, LabelW: 70000, LabelH: 37000,
-			Inset: 4200, DPI: 600, Dots: []int{9}, NoMargin: true,
+			Inset: 4200, DPI: 600, Dots: []int{9, 8}, NoMargin: true,
 			Note: "larger than ISO 26825:2020, 5.3 gives for syringes"},
 		{Name: "roll-70x37", PageW: ink.MM(70), PageH: ink.MM(37), Columns: 1, Rows: 1,
 			LabelW: ink.MM(70), LabelH: ink.MM(37), DPI: 300, Dots: []int{4},

@@ -73,6 +73,8 @@ const (
 	shapeWeight
 	shapeHeight
 	shapeSurface
+	shapeDuration
+	shapeFlowPerKilogram
 )
 
 func (s shape) String() string {
@@ -95,6 +97,10 @@ func (s shape) String() string {
 		return "a height"
 	case shapeSurface:
 		return "a surface area"
+	case shapeDuration:
+		return "a time"
+	case shapeFlowPerKilogram:
+		return "a flow rate per kg"
 	case shapeNone:
 		return "nothing"
 	}
@@ -136,37 +142,20 @@ func readAny(text string) (reading, bool) {
 }
 
 func readBody(text string) (reading, bool) {
-	if w, err := quantity.ParseBodyWeight(text); err == nil {
+	if w, err := quantity.ParseAnyBodyWeight(text); err == nil {
 		return reading{shape: shapeWeight, value: w.Rat(), unit: "kg"}, true
 	}
-	if l, err := quantity.ParseLength(text); err == nil {
+	if l, err := quantity.ParseAnyLength(text); err == nil {
 		return reading{shape: shapeHeight, value: l.Rat()}, true
 	}
 	if a, err := quantity.ParseSurface(text); err == nil {
 		return reading{shape: shapeSurface, value: a.Rat(), unit: "m2"}, true
 	}
-	return otherBody(text)
-}
-
-// otherBody reads the weights and heights that other papers use. The pound is
-// 0.45359237 kg and the inch 2.54 cm, both by definition.
-func otherBody(text string) (reading, bool) {
-	number, unit, _ := strings.Cut(strings.TrimSpace(text), " ")
-	n, err := quantity.ParseBodyWeight(number + " kg")
-	if err != nil {
-		return reading{}, false
+	if d, err := quantity.ParseDuration(text); err == nil {
+		return reading{shape: shapeDuration, value: d.Rat()}, true
 	}
-	pound := big.NewRat(45359237, 100000000)
-	weight := func(f *big.Rat) (reading, bool) {
-		return reading{shape: shapeWeight, value: f.Mul(f, n.Rat()), unit: "kg"}, true
-	}
-	switch strings.TrimSpace(unit) {
-	case "lb", "lbs", "pound", "pounds":
-		return weight(pound)
-	case "st", "stone", "stones":
-		return weight(pound.Mul(pound, big.NewRat(14, 1)))
-	case "in", "inch", "inches":
-		return reading{shape: shapeHeight, value: new(big.Rat).Mul(n.Rat(), big.NewRat(254, 100))}, true
+	if f, err := quantity.ParseFlowPerKilogram(text); err == nil {
+		return reading{shape: shapeFlowPerKilogram, value: f.Rat()}, true
 	}
 	return reading{}, false
 }
@@ -194,8 +183,8 @@ func (c *conversion) work() {
 	if c.r.given("of") && !c.findSalt(c.doc.Of) {
 		return
 	}
-	if charge, perVolume, ok := milliequivalents(from); ok {
-		c.fromCharge(charge, perVolume, one, to)
+	if charge, ok := milliequivalents(from); ok {
+		c.fromCharge(charge, one, toForm, to)
 		return
 	}
 	got, ok := readAny(from)
@@ -220,9 +209,18 @@ func (c *conversion) target(to string) bool {
 			"ask for mmol; mEq is mmol times the charge of the ion")
 	case strings.HasPrefix(to, "1:") || strings.HasPrefix(to, "1 in"):
 		c.refuse(refusal.RatioStrength, "--to", to, "mg/mL", "a ratio strength is read, never written", "ask for mg/mL or microgram/mL")
-	case to == "in" || to == "lb" || to == "st":
+	case readOnly(to):
 		c.refuse(refusal.UnitWrongKind, "--to", to, "kg or cm", "this unit is read, never written", "ask for kg or cm")
 	default:
+		return true
+	}
+	return false
+}
+
+// readOnly reports a unit of weight or height that is read and never written.
+func readOnly(unit string) bool {
+	switch unit {
+	case "lb", "lbs", "pound", "pounds", "st", "stone", "stones", "in", "inch", "inches", "ft", "foot", "feet":
 		return true
 	}
 	return false
@@ -251,11 +249,15 @@ func (c *conversion) unread(from string, want shape) {
 	case shapeFlow:
 		_, err = quantity.ParseFlowRate(from)
 	case shapeWeight:
-		_, err = quantity.ParseBodyWeight(from)
+		_, err = quantity.ParseAnyBodyWeight(from)
 	case shapeHeight:
-		_, err = quantity.ParseLength(from)
+		_, err = quantity.ParseAnyLength(from)
 	case shapeSurface:
 		_, err = quantity.ParseSurface(from)
+	case shapeDuration:
+		_, err = quantity.ParseDuration(from)
+	case shapeFlowPerKilogram:
+		_, err = quantity.ParseFlowPerKilogram(from)
 	case shapeAmount, shapeNone:
 		_, err = quantity.ParseAmount(from)
 	}
@@ -265,12 +267,17 @@ func (c *conversion) unread(from string, want shape) {
 	c.r.add(faultOf("--from", err))
 }
 
-// form cuts the word "base" or "salt" from the end of a quantity.
+// form cuts the word "base" or "salt" from the end of a quantity. Some labels
+// count the anhydrous salt or the cation instead of a base.
 func form(text string) (rest, word string) {
 	t := strings.TrimSpace(text)
-	for _, w := range []string{"base", "salt"} {
-		if s, ok := strings.CutSuffix(t, " "+w); ok {
+	for _, w := range []string{"base", "anhydrous", "cation", "salt"} {
+		s, ok := strings.CutSuffix(t, " "+w)
+		switch {
+		case ok && w == "salt":
 			return strings.TrimSpace(s), w
+		case ok:
+			return strings.TrimSpace(s), "base"
 		}
 	}
 	return t, ""
@@ -340,7 +347,7 @@ func (c *conversion) printed(x *big.Rat, one reading, to, unit string) string {
 		if d, err := quantity.ParseDoseRate("1 " + to); err == nil {
 			return s.DoseRate(d.Scaled(x))
 		}
-	case shapeNone, shapeVolume, shapeFlow, shapeWeight, shapeHeight, shapeSurface:
+	case shapeNone, shapeVolume, shapeFlow, shapeWeight, shapeHeight, shapeSurface, shapeDuration, shapeFlowPerKilogram:
 	}
 	return s.Number(x) + " " + unit
 }

@@ -3,7 +3,6 @@ package main
 import (
 	"errors"
 	"fmt"
-	"math/big"
 	"strings"
 
 	"drawup/dilution/quantity"
@@ -63,7 +62,9 @@ func (c *conversion) throughSalt(got, one reading, fromForm, toForm, to string) 
 // joinable refuses what no factor joins: units of activity, and anything whose
 // salt is not named.
 func (c *conversion) joinable(got, one reading) bool {
-	if got.shape != shapeAmount && got.shape != shapeConcentration {
+	switch got.shape {
+	case shapeAmount, shapeConcentration, shapeDose, shapeDoseRate:
+	default:
 		c.r.add(faultOf("--from", &quantity.KindError{Got: got.kind, Want: one.kind}))
 		return false
 	}
@@ -127,31 +128,27 @@ func (c *conversion) saltFault(err error) {
 	c.r.add(faultOf("--from", err))
 }
 
-// milliequivalents reads "8 mEq", "1.97 mEq/mL" and "40 mEq/L"; per mL for the
-// last two.
-func milliequivalents(text string) (x *big.Rat, perVolume, ok bool) {
-	number, unit, _ := strings.Cut(strings.TrimSpace(text), " ")
-	scale := big.NewRat(1, 1)
-	switch strings.TrimSpace(unit) {
-	case "mEq":
-	case "mEq/mL", "mEq/ml":
-		perVolume = true
-	case "mEq/L", "mEq/l":
-		perVolume = true
-		scale = big.NewRat(1, 1000)
-	default:
-		return nil, false, false
+// milliequivalents reads "8 mEq", "1.97 mEq/mL", "1 mEq/kg", "10 mEq/h": as the
+// same in mmol, for the charge to be counted out.
+func milliequivalents(text string) (reading, bool) {
+	asMoles := strings.Replace(text, "mEq", "mmol", 1)
+	if asMoles == text {
+		return reading{}, false
 	}
-	n, err := quantity.ParseAmount(number + " mmol")
-	if err != nil {
-		return nil, false, false
-	}
-	return scale.Mul(scale, n.Rat()), perVolume, true
+	got, ok := readAny(asMoles)
+	return got, ok && got.kind == quantity.BySubstance
 }
 
-func (c *conversion) fromCharge(charge *big.Rat, perVolume bool, one reading, to string) {
-	if perVolume != (one.shape == shapeConcentration) || (one.shape != shapeAmount && one.shape != shapeConcentration) {
-		c.refuse(refusal.UnitWrongKind, "--to", to, "mmol, mg, mmol/mL or mg/mL", "milliequivalents become mmol or mg, and only per volume on both sides or on neither", "check both units")
+// fromCharge turns milliequivalents into the unit of one, by the charge of the
+// named salt or ion.
+func (c *conversion) fromCharge(charge, one reading, toForm, to string) {
+	if charge.shape != one.shape {
+		c.refuse(refusal.UnitWrongKind, "--to", to, "mmol, mg, mmol/mL or mg/mL",
+			"milliequivalents become mmol or mg, counted per the same on both sides", "check both units")
+		return
+	}
+	if charge.basis != one.basis {
+		c.r.add(faultOf("--to", &quantity.BasisError{Got: one.basis, Want: charge.basis}))
 		return
 	}
 	if !c.ok {
@@ -159,9 +156,11 @@ func (c *conversion) fromCharge(charge *big.Rat, perVolume bool, one reading, to
 			`add --of "potassium chloride"`)
 		return
 	}
-	a, err := c.salt.OfCharge(charge)
+	a, err := c.salt.OfCharge(charge.value)
 	if err == nil && one.kind != quantity.BySubstance {
-		a, err = c.salt.Mass(a)
+		if a, err = c.salt.Mass(a); err == nil {
+			a, err = c.fromSaltMass(a, one.kind, toForm)
+		}
 	}
 	if err == nil && a.Kind() != one.kind {
 		err = &quantity.KindError{Got: a.Kind(), Want: one.kind}
@@ -170,7 +169,7 @@ func (c *conversion) fromCharge(charge *big.Rat, perVolume bool, one reading, to
 		c.saltFault(err)
 		return
 	}
-	c.sayHow(false)
+	c.sayHow(toForm == "base")
 	c.answer(a.Rat(), one, to)
 }
 

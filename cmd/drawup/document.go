@@ -129,6 +129,27 @@ func surfaceJSON(s quantity.Style, a quantity.BodySurfaceArea) *quantityJSON {
 	return &quantityJSON{a.Exact(), s.Surface(a), "m2"}
 }
 
+func lengthJSON(s quantity.Style, l quantity.Length) *quantityJSON {
+	return &quantityJSON{l.Exact(), s.Length(l), "cm"}
+}
+
+func durationJSON(s quantity.Style, d quantity.Duration) *quantityJSON {
+	return &quantityJSON{d.Exact(), s.Duration(d), "min"}
+}
+
+// shownSpan is d as a line of working shows it: "about" says that printing cut
+// it down to whole minutes, or under an hour to whole seconds.
+func shownSpan(s quantity.Style, d quantity.Duration) string {
+	x := d.Rat()
+	if x.Cmp(big.NewRat(60, 1)) < 0 {
+		x.Mul(x, big.NewRat(60, 1))
+	}
+	if x.IsInt() {
+		return s.Duration(d)
+	}
+	return "about " + s.Duration(d)
+}
+
 func percentJSON(s quantity.Style, p quantity.Percent) *quantityJSON {
 	return &quantityJSON{p.Exact(), s.Percent(p), "%"}
 }

@@ -6,7 +6,6 @@ import (
 
 	"drawup/dilution"
 	"drawup/dilution/quantity"
-	"drawup/dilution/refusal"
 )
 
 func doseFlags() []flagSpec {
@@ -23,6 +22,7 @@ type doseDocument struct {
 	Concentration *quantityJSON `json:"concentration,omitempty"`
 	Reading       *readingJSON  `json:"reading,omitempty"`
 	Working       []string      `json:"working,omitempty"`
+	patientJSON
 	findings
 }
 
@@ -35,11 +35,12 @@ func runDose(e env, args []string) int {
 	r.need("dose", "there is no sum without it")
 	dose := read(r, "dose", quantity.ParseDose)
 	conc := readConcentration(r)
+	var who patient
 	if dose.Given() {
-		readPer(r, dose.Basis())
+		who = readPatient(r, dose.Basis())
 	}
 	if !r.refused() {
-		workDose(r, dose, conc, doc)
+		workDose(r, dose, conc, who, doc)
 	}
 	if r.refused() {
 		doc = &doseDocument{}
@@ -47,8 +48,8 @@ func runDose(e env, args []string) int {
 	return r.finish(e, doc, func(w io.Writer) { tellDose(w, doc) })
 }
 
-func workDose(r *request, dose quantity.Dose, c quantity.Concentration, doc *doseDocument) {
-	amount, who, err := doseAmount(r, dose)
+func workDose(r *request, dose quantity.Dose, c quantity.Concentration, who patient, doc *doseDocument) {
+	amount, err := who.amount(dose)
 	if err != nil {
 		r.add(faultOf("--dose", err))
 		return
@@ -59,33 +60,15 @@ func workDose(r *request, dose quantity.Dose, c quantity.Concentration, doc *dos
 		return
 	}
 	doc.Amount, doc.Volume, doc.Concentration = amountJSON(r.style, amount), volumeJSON(r.style, volume), concentrationJSON(r.style, c)
-	if who != "" {
-		doc.Working = append(doc.Working, fmt.Sprintf("%s x %s = %s", r.style.Dose(dose), who, shown(doc.Amount)))
+	if by := who.scalar(r.style, dose.Basis()); by != "" {
+		doc.Working = append(doc.Working, fmt.Sprintf("%s x %s = %s", r.style.Dose(dose), by, shown(doc.Amount)))
 	}
 	doc.Working = append(doc.Working, fmt.Sprintf("%s / %s = %s", shown(doc.Amount), shown(doc.Concentration), shown(doc.Volume)))
-	if got, ok := r.measure("volume", volume); ok {
+	doc.patientJSON = who.echo(r.style)
+	r.checkLimits(dilution.Quick{Concentration: c, Dose: dose, Weight: who.weight, Surface: who.surface})
+	if got, ok := r.measure("volume", volume, r.given("drug") && !r.refused()); ok {
 		doc.Reading = readingOf(r.style, got)
 	}
-	weight, surface := quickScalar(r)
-	r.checkLimits(dilution.Quick{Concentration: c, Dose: dose, Weight: weight, Surface: surface})
-}
-
-// doseAmount is the absolute dose and the words for what it was multiplied by.
-func doseAmount(r *request, dose quantity.Dose) (quantity.Amount, string, error) {
-	switch dose.Basis() {
-	case quantity.PerKilogram:
-		w := read(r, "weight", quantity.ParseBodyWeight)
-		a, err := dose.For(w)
-		return a, "body weight " + r.style.BodyWeight(w), err
-	case quantity.PerSquareMetre:
-		s := read(r, "surface", quantity.ParseSurface)
-		a, err := dose.On(s)
-		return a, "surface area " + r.style.Surface(s), err
-	case quantity.Absolute:
-		a, err := dose.Amount()
-		return a, "", err
-	}
-	return quantity.Amount{}, "", refusal.Reason{Code: refusal.QuantityMissing, Message: "the dose has no basis"}
 }
 
 func tellDose(w io.Writer, d *doseDocument) {
@@ -96,6 +79,7 @@ func tellDose(w io.Writer, d *doseDocument) {
 	}
 	line(w, "amount", shown(d.Amount))
 	line(w, "concentration", shown(d.Concentration))
+	d.patientJSON.tell(w)
 	if d.Reading != nil {
 		line(w, "measured", d.Reading.words())
 	}

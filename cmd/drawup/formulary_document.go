@@ -147,6 +147,7 @@ type shownBounds struct {
 	Use    string       `json:"use"`
 	Line   string       `json:"line"`
 	Routes []string     `json:"routes,omitempty"`
+	Whom   string       `json:"for,omitempty"` // indication and ages
 	Low    *shownFigure `json:"low,omitempty"`
 	High   *shownFigure `json:"high,omitempty"`
 }
@@ -156,6 +157,7 @@ type shownLocal struct {
 	WithAdrenaline bool         `json:"with_adrenaline"`
 	Ages           string       `json:"ages"`
 	By             string       `json:"by"`
+	BySource       *shownSource `json:"by_source,omitempty"`
 	PerKg          *shownFigure `json:"per_kg,omitempty"`
 	Total          *shownFigure `json:"total,omitempty"`
 	DayMax         *shownFigure `json:"day_max,omitempty"`
@@ -251,11 +253,11 @@ func drugOf(s quantity.Style, d formulary.Drug) *shownDrug {
 	dose := func(x quantity.Dose) *quantityJSON { return doseJSON(s, x) }
 	strength := func(c quantity.Concentration) *quantityJSON { return concentrationJSON(s, c) }
 	for _, b := range d.Bounds {
-		out.Concentrations = append(out.Concentrations, shownBounds{b.Use, b.Line, b.Routes, shownOf(b.Low, strength), shownOf(b.High, strength)})
+		out.Concentrations = append(out.Concentrations, shownBounds{b.Use, b.Line, b.Routes, b.Whom(), shownOf(b.Low, strength), shownOf(b.High, strength)})
 	}
 	for _, m := range d.LocalMaxima {
 		out.LocalMaxima = append(out.LocalMaxima, shownLocal{m.WithAdrenaline, formulary.Rule[quantity.Dose]{AgeFrom: m.AgeFrom, AgeTo: m.AgeTo}.Ages(), m.By.String(),
-			shownOf(m.PerKg, dose), shownOf(m.Total, func(a quantity.Amount) *quantityJSON { return amountJSON(s, a) }), shownOf(m.DayMax, dose)})
+			weightSource(m.By, m.BySource), shownOf(m.PerKg, dose), shownOf(m.Total, func(a quantity.Amount) *quantityJSON { return amountJSON(s, a) }), shownOf(m.DayMax, dose)})
 	}
 	for _, x := range d.Standards {
 		out.Standards = append(out.Standards, shownStandard{x.ID, amountJSON(s, x.Amount), volumeJSON(s, x.Volume), strengthOf(s, x.Amount, x.Volume),
@@ -292,6 +294,13 @@ func presentationOf(s quantity.Style, p formulary.Presentation) shownPresentatio
 	return out
 }
 
+// noQuantity is for figures that are no quantity of the quick sums: times.
+func noQuantity(time.Duration) *quantityJSON { return nil }
+
+func concentrationIn(s quantity.Style) func(quantity.Concentration) *quantityJSON {
+	return func(c quantity.Concentration) *quantityJSON { return concentrationJSON(s, c) }
+}
+
 func ifGiven(given bool, q *quantityJSON) *quantityJSON {
 	if given {
 		return q
@@ -322,7 +331,6 @@ func shownOf[T any](f formulary.Figure[T], value func(T) *quantityJSON) *shownFi
 func rulesOf[T any](list []formulary.Rule[T], s quantity.Style, value func(T) *quantityJSON) []shownRule {
 	out := []shownRule{}
 	dose := func(x quantity.Dose) *quantityJSON { return doseJSON(s, x) }
-	noQuantity := func(time.Duration) *quantityJSON { return nil }
 	for _, r := range list {
 		row := shownRule{For: r.For, Routes: whole(r.Routes), Ages: r.Ages(), By: r.By.String(),
 			HardLow: shownOf(r.HardLow, value), UsualLow: shownOf(r.UsualLow, value), UsualHigh: shownOf(r.UsualHigh, value),
@@ -334,15 +342,23 @@ func rulesOf[T any](list []formulary.Rule[T], s quantity.Style, value func(T) *q
 			DayMax:      shownOf(r.DayMax, dose),
 			CourseMax:   shownOf(r.CourseMax, dose),
 			Longest:     shownOf(r.Longest, noQuantity)}
-		if r.By != body.None && r.BySource.Key == "" {
-			row.BySource = &shownSource{Source: "no source given", Unverified: true}
-		} else if r.BySource.Key != "" {
-			source := sourceOf(r.BySource, false)
-			row.BySource = &source
-		}
+		row.BySource = weightSource(r.By, r.BySource)
 		out = append(out, row)
 	}
 	return out
+}
+
+// weightSource is where it says which weight a row goes by; nil for a row that
+// goes by none and names no source.
+func weightSource(by body.Kind, s formulary.Source) *shownSource {
+	switch {
+	case s.Key != "":
+		source := sourceOf(s, false)
+		return &source
+	case by != body.None:
+		return &shownSource{Source: "no source given", Unverified: true}
+	}
+	return nil
 }
 
 func noteOf(n *formulary.Note) *shownText {

@@ -141,7 +141,10 @@ func (p proof) presentation(x shownPresentation) {
 	p.sourced("contents", contentsOf(x), x.shownSource)
 	if x.Added != nil {
 		p.item("to be mixed", "add "+x.Added.Printed+" of "+strings.Join(quoted(x.AddFluids), " or "))
-		if x.Displacement == nil {
+		switch {
+		case x.Displacement == nil && x.Volume != nil:
+			p.item("obtained", x.Volume.Printed+" when mixed, as the label says")
+		case x.Displacement == nil:
 			p.item("displacement", "not stored: no concentration can be worked, so every use is refused")
 		}
 	}
@@ -209,6 +212,15 @@ func (p proof) fluid(name string, f shownFluid) {
 	p.figure("  only up to", f.High)
 }
 
+// weight writes which weight a row goes by, and where that is said.
+func (p proof) weight(by string, source *shownSource) {
+	if source != nil {
+		p.sourced("goes by", byWords(by), *source)
+	} else {
+		p.item("goes by", byWords(by))
+	}
+}
+
 func (p proof) local(list []shownLocal) {
 	for _, m := range list {
 		with := "without adrenaline"
@@ -221,7 +233,7 @@ func (p proof) local(list []shownLocal) {
 			ages = "every age"
 		}
 		p.item("ages", ages)
-		p.item("goes by", byWords(m.By))
+		p.weight(m.By, m.BySource)
 		p.figure("by weight", m.PerKg)
 		p.figure("in all", m.Total)
 		p.figure("in a day", m.DayMax)
@@ -244,7 +256,7 @@ func (p proof) bounds(list []shownBounds) {
 		p.head("concentration: none is stored")
 	}
 	for _, b := range list {
-		p.head("concentration, %s, %s line%s", b.Use, b.Line, tailed(", ", strings.Join(b.Routes, ", ")))
+		p.head("concentration, %s, %s line%s", b.Use, b.Line, tailed(", ", strings.Join(b.Routes, ", "))+tailed(", for ", b.Whom))
 		p.figure("at least", b.Low)
 		p.figure("at most", b.High)
 	}
@@ -270,12 +282,7 @@ func (p proof) rule(kind string, r shownRule) {
 		ages = "every age"
 	}
 	p.item("ages", ages)
-	by := byWords(r.By)
-	if r.BySource != nil {
-		p.sourced("goes by", by, *r.BySource)
-	} else {
-		p.item("goes by", by)
-	}
+	p.weight(r.By, r.BySource)
 	p.figure("hard, at least", r.HardLow)
 	p.figure("usual, from", r.UsualLow)
 	p.figure("usual, to", r.UsualHigh)

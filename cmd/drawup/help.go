@@ -27,8 +27,13 @@ const helpQuantities = `Quantities are typed as people write them, in quotes: a 
   concentration  2 mg/mL   200 mg/5 mL   4 mg in 50 mL   0.5 %   1:1000
   dose           2 mg   0.3 mg/kg   75 mg/m2
   dose rate      5 mg/h   0.1 microgram/kg/min   2 units/day
-  flow rate      5.3 mL/h   0.5 mL/min
+  flow rate      5.3 mL/h   0.5 mL/min   2 mL/kg/h
+  time           6 h   90 min   1 h 30 min   2 days
+  drops          42 drops/min   20 drops/mL
   patient        72 kg   178 cm   1.8 m2   54 years
+
+In quick sums a weight or height may be in words, "165 pounds", "11 stone 4 pounds",
+"5 feet 7 inches"; lb, st, ft and in are refused. Order files take kg and cm.
 
 microgram may be typed as mcg or µg. Per cent (grams in 100 mL) and ratio
 strengths are read and never printed. A number has digits and at most one point
@@ -44,6 +49,9 @@ scale, once, half up:
   pump rate        to the pump's step, 0.1 mL/h unless --step says otherwise
   body weight      ideal, adjusted and lean weight to 0.1 kg
   surface area     to 0.01 m²
+  drops            to whole drops a minute
+  time, and the most of a local anaesthetic
+                   down, to whole minutes and to 0.1 mL
   on screen        exactly, where four digits are enough; else to three digits,
                    and "about" stands before it
 
@@ -114,6 +122,25 @@ const helpLabel = `drawup label: one label, at the moment its syringe is filled
   --json                             print the plan of this syringe
 `
 
+const helpRead = `drawup read: what a scanned label or pack says, in words
+  drawup read "]d291N01AX07<GS>92261201193000001003<GS>932mg/mL" --at "2026-12-01 12:00"
+  drawup read "(01)09521234000006(17)271231(10)A-1(21)7"
+
+  drawup read [TEXT] [flags]        without TEXT one line from standard input: start it, then scan
+
+  --at               "2026-12-01 12:00"
+                                     the time to hold the use-by against; now if left out
+  --order            day.toml        an order with the site's own GTINs, to name what they stand for
+  --formulary        my-site.toml    the site's own formulary file, over the starter
+  --style            uk              house style of numbers and units: uk, us, si
+  --json                             the answer as a JSON document
+
+A separator may be the sign GS (29) or stand as <GS> {GS} [GS] <FNC1> {FNC1}
+[FNC1] ^]. A symbology identifier such as ]d2 in front, and identifiers in
+parentheses, are read. Times are those of the clock where the label was made. If
+a scanner sends no separators, set it to send GS; nothing is guessed.
+`
+
 const helpFormulary = `drawup formulary: what is stored of each drug, checked, compared, printed, approved
   drawup formulary list --class NMB
   drawup formulary show noradrenaline
@@ -125,6 +152,10 @@ const helpFormulary = `drawup formulary: what is stored of each drug, checked, c
      --flag          "high alert"    with this mark only
      --jurisdiction  UK              with a source or a standard of this jurisdiction
   show DRUG                          all that is stored of one drug, by any of its names
+  pair DRUG with DRUG                whether two drugs may share a syringe, and within which
+                                     limits; refused unless the formulary allows the pair
+     --use           infusion        bolus unless given
+     --route         epidural        IV unless given
   verify [FILE...]                   hold a formulary against itself: every finding with
                                      file, line and column; the starter without a file
   compare OLDER NEWER                what changed, what was loosened first; a file, a folder
@@ -218,6 +249,14 @@ func flagsOf(name string) ([]flagSpec, string, bool) {
 		return rateFlags(), `drawup rate --dose "0.1 microgram/kg/min" --weight "70 kg" --mix "4 mg in 50 mL"`, true
 	case "dose":
 		return doseFlags(), `drawup dose --dose "0.3 mg/kg" --weight "72 kg" --concentration "10 mg/mL"`, true
+	case "total":
+		return totalFlags(), `drawup total --rate "0.375 microgram/kg/min" --time "24 h" --load "0.05 mg/kg"`, true
+	case "flow":
+		return flowFlags(), `drawup flow --volume "1000 mL" --time "8 h" --set "20 drops/mL"`, true
+	case "local":
+		return localFlags(), `drawup local --weight "70 kg" --age "40 years" --give "lidocaine 1 %, 5 mL" --give "bupivacaine 0.25 %, 20 mL"`, true
+	case "accuracy":
+		return accuracyFlags(), `drawup accuracy --barrel "10 mL" --reading "4 mL"`, true
 	case "body":
 		return bodyFlags(), `drawup body --weight "72 kg" --height "178 cm" --sex male --age "54 years"`, true
 	case "convert":
@@ -240,6 +279,8 @@ func helpText(name string) (string, bool) {
 		return helpLabel, true
 	case "formulary":
 		return helpFormulary, true
+	case "read":
+		return helpRead, true
 	}
 	flags, example, ok := flagsOf(name)
 	if !ok {

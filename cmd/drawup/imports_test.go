@@ -23,20 +23,24 @@ func mayImport() map[string][]string {
 	return map[string][]string{
 		"cmd/drawup":                {"*"},
 		"dilution":                  plan,
-		"dilution/body":             {"dilution/quantity"},
+		"dilution/body":             {"dilution/quantity", "dilution/roots"},
+		"dilution/certainty":        {"dilution/quantity", "dilution/syringe"},
 		"dilution/formulary":        {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
-		"dilution/formulary/verify": {"dilution/formulary", "dilution/quantity", "dilution/refusal", "dilution/salts"},
+		"dilution/formulary/verify": {"dilution/body", "dilution/formulary", "dilution/quantity", "dilution/refusal", "dilution/salts"},
 		"dilution/order":            {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
 		"dilution/pump":             {"dilution/quantity"},
 		"dilution/quantity":         {},
 		"dilution/recheck":          {}, // the second route shares nothing
 		"dilution/refusal":          {},
+		"dilution/roots":            {},
 		"dilution/salts":            {"dilution/quantity"},
-		"dilution/syringe":          {"dilution/quantity"},
+		"dilution/syringe":          {"dilution/quantity", "dilution/roots"},
 		"dilution/tomlfile":         {"dilution/refusal"},
+		"dilution/twostep":          {"dilution/quantity", "dilution/syringe"},
 		"fonts":                     {},
 		"labels":                    said, // no page, no font, no PDF
 		"labels/gs1":                {},
+		"labels/gs1/generate":       {}, // run by go generate
 		"labels/sheets":             append([]string{"labels"}, said...),
 		"layouts":                   {"labels", "labels/gs1", "labels/sheets", "layouts/ink", "fonts", "dilution/refusal", "dilution/recheck"},
 		"layouts/ink":               {},

@@ -55,6 +55,8 @@ func newJob(
 	f, lapsed := lib.at(when)
 	faults = append(faults, lapsed...)
 	faults = append(faults, unknownNumbers(o, leaveOut)...)
+	products, wrong := productsOf(o, f)
+	faults = append(faults, wrong...)
 	j := &job{file: file, order: o, tell: tell}
 	list, reasons := lib.bench.NewList(o, f, when, leaveOut, faults)
 	j.list = list
@@ -67,6 +69,7 @@ func newJob(
 	}
 	j.shelf = lib.bench.Shelf
 	j.making = makingOf(o, f, when, data, leaveOut)
+	j.making.Products = products
 	reasons = append(reasons, leftOut(list)...)
 	return j, append(reasons, j.word()...)
 }
@@ -180,6 +183,7 @@ func (j *job) figuresOf(i int) []recheck.Figure {
 // the papers were given them.
 func (j *job) stated(i int, printed, given []recheck.Figure) recheck.Stated {
 	s := labels.Stated(j.list.Plans[i], printed)
+	s.Asked = append(s.Asked, j.making.Asked(j.list.Plans[i])...)
 	for _, f := range given {
 		if strings.HasPrefix(f.Name, recheck.Said+".") || strings.HasPrefix(f.Name, recheck.Bound+".") {
 			s.Asked = append(s.Asked, recheck.Figure{Paper: f.Paper, Name: f.Name, Text: f.Text})

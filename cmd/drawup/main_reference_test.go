@@ -165,9 +165,11 @@ func TestBodyFigures(t *testing.T) {
 // inch 2.54 cm (international yard and pound agreement, 1959).
 func TestPoundAndInch(t *testing.T) {
 	for _, c := range []struct{ from, to, want string }{
-		{"143 lb", "kg", "64.86370891"},
-		{"1 st", "kg", "6.35029318"},
-		{"70 in", "cm", "177.8"},
+		{"143 pounds", "kg", "64.86370891"},
+		{"1 stone", "kg", "6.35029318"},
+		{"11 stone 4 pounds", "kg", "71.66759446"},
+		{"70 inches", "cm", "177.8"},
+		{"5 feet 10 inches", "cm", "177.8"},
 		{"3200 g", "kg", "3.2"},
 	} {
 		want, _ := new(big.Rat).SetString(c.want)

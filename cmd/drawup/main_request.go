@@ -8,6 +8,7 @@ import (
 
 	"github.com/spf13/pflag"
 
+	"drawup/dilution/formulary"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
 )
@@ -31,13 +32,16 @@ type request struct {
 	broken bool // the flags could not be read to the end
 	style  quantity.Style
 	faults refusal.List
+	stored *formulary.Formulary // once a sum has asked for it
 }
 
 // An onceText is a flag's text that may be given once only: the last of two
-// doses must not win silently.
+// doses must not win silently. Where many are asked for, all holds each.
 type onceText struct {
 	text  string
 	given bool
+	many  bool
+	all   []string
 }
 
 func (t *onceText) String() string { return t.text }
@@ -47,13 +51,13 @@ func (t *onceText) Type() string { return "text" }
 
 // Set is called by pflag for each time the flag is typed.
 func (t *onceText) Set(s string) error {
-	if t.given {
+	if t.given && !t.many {
 		return errGivenTwice
 	}
 	if strings.HasPrefix(s, "--") { // the next flag stands where the value should
 		return errNoValue
 	}
-	t.text, t.given = s, true
+	t.text, t.given, t.all = s, true, append(t.all, s)
 	return nil
 }
 
@@ -70,6 +74,9 @@ func newRequest(name string, specs []flagSpec, args []string) *request {
 	r.flags.Usage = func() {}
 	for _, s := range specs {
 		r.addFlag(s.name, s.use)
+	}
+	if give, ok := r.texts["give"]; ok { // one for each drug and site
+		give.many = true
 	}
 	r.addFlag("style", "uk, us or si")
 	r.flags.BoolVar(&r.json, "json", false, "")
@@ -148,7 +155,10 @@ func (r *request) caution(x refusal.Reason) {
 func (r *request) refused() bool { return r.faults.Refused() }
 
 // given reports whether the flag was typed.
-func (r *request) given(name string) bool { return r.texts[name].given }
+func (r *request) given(name string) bool {
+	t, ok := r.texts[name]
+	return ok && t.given
+}
 
 // count is how many of the flags were typed.
 func (r *request) count(names ...string) int {
@@ -246,9 +256,15 @@ func read[T any](r *request, name string, parse func(string) (T, error)) T {
 	if !t.given {
 		return none
 	}
-	v, err := parse(t.text)
+	return readText(r, "--"+name, t.text, parse)
+}
+
+// readText is the value of a text, or the zero value and a fault.
+func readText[T any](r *request, field, text string, parse func(string) (T, error)) T {
+	v, err := parse(text)
 	if err != nil {
-		r.add(faultOf("--"+name, err))
+		r.add(faultOf(field, err))
+		var none T
 		return none
 	}
 	return v

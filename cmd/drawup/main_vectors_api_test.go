@@ -5,6 +5,7 @@ import (
 	"strings"
 	"testing"
 
+	"drawup/dilution"
 	"drawup/dilution/body"
 	"drawup/dilution/pump"
 	"drawup/dilution/quantity"
@@ -33,6 +34,12 @@ func (s sum) withAPI() sum {
 			return p.body(key)
 		case "convert":
 			return p.convert()
+		case "total":
+			return p.total()
+		case "flow":
+			return p.flow(key)
+		case "accuracy":
+			return p.accuracy(key)
 		}
 		t.Fatalf("no package route for %s", command)
 		return nil
@@ -107,6 +114,10 @@ func (p packages) mix(key string) *big.Rat {
 		take := p.volume("take")
 		a = must[quantity.Amount](p)(take.Holds(p.concentration()))
 		final = p.finalOf(take)
+	case p.flags["each"] != "":
+		each := must[quantity.DoseRate](p)(quantity.ParseDoseRate(p.flags["each"]))
+		final = quantity.Millilitres(big.NewRat(50, 1)) // the rule of three
+		a = must[quantity.Amount](p)(dilution.WeightMade(each, p.weight("weight"), final))
 	default:
 		a = must[quantity.Amount](p)(quantity.ParseAmount(p.flags["amount"]))
 		final = p.volume("final")
@@ -133,7 +144,67 @@ func (p packages) finalOf(take quantity.Volume) quantity.Volume {
 	return p.volume("make-up-to")
 }
 
+func (p packages) weight(flag string) quantity.BodyWeight {
+	return must[quantity.BodyWeight](p)(quantity.ParseAnyBodyWeight(p.flags[flag]))
+}
+
+func (p packages) duration() quantity.Duration {
+	return must[quantity.Duration](p)(quantity.ParseDuration(p.flags["time"]))
+}
+
+func (p packages) total() *big.Rat {
+	rate := must[quantity.DoseRate](p)(quantity.ParseDoseRate(p.flags["rate"]))
+	sum := must[quantity.Dose](p)(rate.During(p.duration()))
+	if text, ok := p.flags["load"]; ok {
+		sum = must[quantity.Dose](p)(must[quantity.Dose](p)(quantity.ParseDose(text)).Plus(sum))
+	}
+	return sum.Rat()
+}
+
+func (p packages) flow(key string) *big.Rat {
+	if text, ok := p.flags["rate"]; ok {
+		perKg := must[quantity.FlowPerKilogram](p)(quantity.ParseFlowPerKilogram(text))
+		return must[quantity.FlowRate](p)(perKg.For(p.weight("weight"))).Rat()
+	}
+	f := must[quantity.FlowRate](p)(p.volume("volume").Over(p.duration()))
+	if key == "flow_rate" {
+		return f.Rat()
+	}
+	set := must[quantity.DropFactor](p)(quantity.ParseDropFactor(p.flags["set"]))
+	drops := must[quantity.DropRate](p)(f.Drops(set)).Rat()
+	return drops.Mul(drops, big.NewRat(60, 1)) // in an hour, as the unit table counts
+}
+
+func (p packages) accuracy(key string) *big.Rat {
+	switch key {
+	case "tolerance":
+		b, ok := syringe.Find(p.volume("barrel"))
+		if !ok {
+			p.t.Fatal("no such barrel")
+		}
+		return b.Tolerance(p.volume("reading")).Rat()
+	case "relative":
+		v := p.volume("labelled")
+		excess := must[quantity.Volume](p)(dilution.Overfill(v, dilution.Mobile))
+		return excess.Rat().Mul(excess.Rat(), new(big.Rat).Quo(big.NewRat(100, 1), v.Rat()))
+	}
+	var widths []syringe.Width
+	for _, percent := range []*big.Rat{big.NewRat(12, 100), big.NewRat(18, 100), big.NewRat(84, 1000)} { // of 50 mL
+		widths = append(widths, syringe.Width{Percent: quantity.PerCent(percent), Shape: syringe.Rectangular})
+	}
+	u := must[syringe.Uncertainty](p)(syringe.Combine(widths...)).Standard.Rat()
+	return u.Mul(u, big.NewRat(1, 2)) // 50 mL in hundredths
+}
+
 func (p packages) body(key string) *big.Rat {
+	switch {
+	case p.flags["estimate"] != "":
+		rule, _ := body.AgeRuleNamed(p.flags["estimate"])
+		return must[body.Estimate](p)(rule.Guess(must[body.Age](p)(body.ParseAge(p.flags["age"])))).Weight.Rat()
+	case p.flags["ideal"] != "":
+		size := body.Size{Weight: p.weight("weight")}
+		return must[quantity.BodyWeight](p)(size.AdjustedFrom(p.weight("ideal"))).Rat()
+	}
 	sex, _ := body.SexNamed(p.flags["sex"])
 	size := body.Size{
 		Sex: sex, Age: must[body.Age](p)(body.ParseAge(p.flags["age"])),
@@ -150,10 +221,18 @@ func (p packages) body(key string) *big.Rat {
 		return weight(size.Lean()).Rat()
 	case "lean_james":
 		return weight(size.James()).Rat()
+	case "lean_boer":
+		return weight(size.Boer()).Rat()
+	case "ideal_child":
+		return weight(size.ChildIdeal()).Rat()
 	case "surface_mosteller":
 		return area(size.Mosteller()).Rat()
 	case "surface_dubois":
 		return area(size.DuBois()).Rat()
+	case "surface_haycock":
+		return area(size.Surface(body.Haycock)).Rat()
+	case "surface_boyd":
+		return area(size.Surface(body.Boyd)).Rat()
 	case "bmi":
 		return must[*big.Rat](p)(size.BMI())
 	}
@@ -166,9 +245,10 @@ func (p packages) convert() *big.Rat {
 	from, to := p.flags["from"], p.flags["to"]
 	text := strings.TrimSuffix(strings.TrimSuffix(from, " base"), " salt")
 	switch {
-	case strings.HasSuffix(from, "lb"):
-		w := must[quantity.BodyWeight](p)(quantity.ParseBodyWeight(strings.TrimSuffix(from, "lb") + "kg"))
-		return w.Rat().Mul(w.Rat(), big.NewRat(45359237, 100000000))
+	case to == "kg":
+		return must[quantity.BodyWeight](p)(quantity.ParseAnyBodyWeight(from)).Rat()
+	case to == "cm":
+		return must[quantity.Length](p)(quantity.ParseAnyLength(from)).Rat()
 	case strings.HasPrefix(to, "mL/"):
 		return must[quantity.FlowRate](p)(quantity.ParseFlowRate(from)).Rat()
 	case p.flags["of"] == "":
@@ -202,14 +282,4 @@ func (p packages) convert() *big.Rat {
 		return amount(s.Moles(a)).Rat()
 	}
 	return amount(s.Mass(a)).Rat()
-}
-
-// tolerance is row A174: 4 mL read on a 10 mL syringe.
-func tolerance(t *testing.T) *big.Rat {
-	t.Helper()
-	b, ok := syringe.Find(quantity.Millilitres(big.NewRat(10, 1)))
-	if !ok {
-		t.Fatal("no 10 mL barrel")
-	}
-	return b.Tolerance(quantity.Millilitres(big.NewRat(4, 1))).Rat()
 }

@@ -8,14 +8,25 @@ import (
 
 // A sum is one vector as the program is asked: the command's arguments, the key
 // of its answer, and the same sum through the packages, in mg, units, mmol, mL,
-// kg or m², and per hour. Both are divided by per when it is set; bare answers
-// are not in the unit of the row.
+// kg or m², and per hour. Both are divided by per when it is set, or divide over;
+// bare answers are not in the unit of the row.
 type sum struct {
-	args []string
-	key  string
-	api  func(*testing.T) *big.Rat
-	per  *big.Rat
-	bare bool
+	args      []string
+	key       string
+	api       func(*testing.T) *big.Rat
+	per, over *big.Rat
+	bare      bool
+}
+
+// shared is x divided by per, or over divided by x.
+func (s sum) shared(x *big.Rat) *big.Rat {
+	switch {
+	case s.per != nil:
+		return x.Quo(x, s.per)
+	case s.over != nil:
+		return x.Quo(s.over, x)
+	}
+	return x
 }
 
 // sumOf says how a row is asked, by its kind; rows that are written in words
@@ -36,8 +47,12 @@ func sumOf(t *testing.T, v vector) (sum, bool) {
 		return mixRow(v).withAPI(), true
 	case "body-bsa", "body-ibw", "body-abw", "body-lbw", "body-bmi":
 		return bodyRow(v).withAPI(), true
+	case "daily-total", "amount", "flow", "drop-rate":
+		return timeRow(v).withAPI(), true
 	case "tolerance":
-		return sum{api: tolerance}, true
+		return sum{args: []string{"accuracy", "--barrel", v.in["nominal"], "--reading", bareText(v.in["expelled"])}, key: "tolerance"}.withAPI(), true
+	case "paed-weight":
+		return sum{args: []string{"body", "--age", v.in["age"] + "ear", "--estimate", v.in["method"]}, key: "estimated_weight"}.withAPI(), true
 	}
 	return sum{}, false
 }
@@ -151,7 +166,28 @@ func mixRow(v vector) sum {
 	return s
 }
 
+// timeRow is a sum of a volume, a rate or a dose over a time.
+func timeRow(v vector) sum {
+	command, key := "total", "total"
+	switch v.kind {
+	case "flow":
+		command, key = "flow", "flow_rate"
+	case "drop-rate":
+		command, key = "flow", "drop_rate"
+	}
+	args := []string{command}
+	for _, name := range []string{"volume", "rate", "time", "load", "set"} {
+		if x, ok := v.in[name]; ok {
+			args = append(args, "--"+name, x)
+		}
+	}
+	return sum{args: args, key: key}
+}
+
 func bodyRow(v vector) sum {
+	if ideal, ok := v.in["ibw"]; ok {
+		return sum{args: []string{"body", "--weight", v.in["weight"], "--ideal", ideal}, key: "adjusted"}
+	}
 	or := func(key, other string) string {
 		if x, ok := v.in[key]; ok {
 			return x
@@ -167,12 +203,16 @@ func bodyRow(v vector) sum {
 		sex = "female"
 	}
 	// Rows name no age; the equations want an adult's.
-	args := []string{"body", "--weight", or("weight", "70 kg"), "--height", height, "--sex", sex, "--age", "40 years"}
+	age := "40 years"
 	keys := map[string]string{
-		"Mosteller": "surface_mosteller", "Du Bois": "surface_dubois", "Devine": "ideal_devine",
-		"Janmahasatian": "lean_janmahasatian", "James": "lean_james",
+		"Mosteller": "surface_mosteller", "Du Bois": "surface_dubois", "Haycock": "surface_haycock", "Boyd": "surface_boyd",
+		"Devine": "ideal_devine", "Janmahasatian": "lean_janmahasatian", "James": "lean_james", "Boer": "lean_boer",
 	}
 	key := keys[v.in["method"]]
+	if strings.HasPrefix(v.in["method"], "child standard") {
+		key, age = "ideal_child", "12 years"
+	}
+	args := []string{"body", "--weight", or("weight", "70 kg"), "--height", height, "--sex", sex, "--age", age}
 	switch v.kind {
 	case "body-abw":
 		key = "adjusted"
@@ -219,8 +259,22 @@ func wordedRows() map[string]sum {
 		"A132": convert("1 mmol", "mg", "sodium"),
 		"A133": bare(convert("200 mg/mL", "mmol/mL", "magnesium in magnesium chloride hexahydrate"), big.NewRat(1, 2)), // two mEq in each mmol
 		"A134": bare(convert("1 mg base", "mg", "dobutamine hydrochloride"), nil),
-		"A155": convert("150 lb", "kg", ""),
-		// The published amount must give the published 1 mL/h.
-		"A139": bare(sum{args: []string{"rate", "--dose", "5 mcg/kg/min", "--weight", "6 kg", "--mix", "90 mg in 50 mL"}, key: "flow_rate"}, big.NewRat(1, 90)),
+		"A155": convert("150 pounds", "kg", ""),
+		// The program knows the legal pound alone; these sources divide by 2.2. Its
+		// kilograms are turned back into pounds and divided as they do.
+		"A106": byBook(convert("143 pounds", "kg", "")),
+		"A107": byBook(convert("60 pounds", "kg", "")),
+		"A108": {args: convert("1 inch", "cm", "").args, key: "result", over: big.NewRat(55, 1), bare: true}, // inches are read, never written
+		"A156": {args: []string{"flow", "--rate", "1 mL/kg/min", "--weight", "50 kg"}, key: "flow_rate"},
+		"A139": {args: []string{"mix", "--each", "5 mcg/kg/min", "--weight", "6 kg", "--rule", "three"}, key: "amount"},
+		// 4 °C at 2.1e-4 per °C is 0.084 % of the flask.
+		"A175": {args: []string{"accuracy", "--parts", "0.06 mL, 0.09 mL, 0.084 %", "--of", "50 mL"}, key: "standard_uncertainty"},
+		"A176": {args: []string{"accuracy", "--labelled", "0.5 mL", "--fluid", "mobile"}, key: "relative"},
 	}
+}
+
+// byBook divides pounds by 2.2, as textbooks do.
+func byBook(s sum) sum {
+	s.per = new(big.Rat).Mul(big.NewRat(45359237, 100000000), big.NewRat(22, 10))
+	return s
 }

@@ -1,14 +1,12 @@
 package main
 
 import (
-	"fmt"
 	"io"
 	"math/big"
 
 	"drawup/dilution"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
-	"drawup/dilution/syringe"
 )
 
 func mixFlags() []flagSpec {
@@ -25,6 +23,12 @@ func mixFlags() []flagSpec {
 		{"powder", "250 mg", "amount of powder in the vial"},
 		{"add", "4.8 mL", "fluid added to the powder"},
 		{"displacement", "0.2 mL", "volume that the powder itself takes, from its record"},
+		{"each", "1 microgram/kg/min", "a mixture for one weight: what each 1 mL/h is to give; with --weight"},
+		{"weight", "6 kg", "with --each: the body weight that the mixture is for"},
+		{"rule", "three", "with --each, in place of --final: three makes 50 mL, six makes 100 mL"},
+		{"bag-holds", "265 mL", "with --add-to or --replace-in: what the bag was measured to hold"},
+		{"assay", "5 %", "half width of the presentation's assay limits, for the interval"},
+		{"presentation", "ampoule 4 mg in 4 mL", "with --drug: the presentation, as drawup formulary show names it"},
 	}, limitFlags()...)
 }
 
@@ -39,7 +43,13 @@ type mixDocument struct {
 	Concentration *quantityJSON `json:"concentration,omitempty"`
 	Interval      *intervalJSON `json:"interval,omitempty"`
 	DrugReading   *readingJSON  `json:"drug_reading,omitempty"`
+	Presentations []string      `json:"presentations,omitempty"` // that it may be drawn from
+	Containers    int           `json:"containers,omitempty"`    // opened, where there is one presentation
+	Diluent       string        `json:"diluent,omitempty"`
 	Working       []string      `json:"working,omitempty"`
+	bagJSON
+	weightMadeJSON
+	patientJSON
 	findings
 }
 
@@ -62,7 +72,11 @@ type mixture struct {
 	strength                         quantity.Concentration
 	drug, displaced, diluent, volume quantity.Volume
 	bag                              quantity.Volume // as labelled, for the methods with a bag
+	measured                         quantity.Volume // what the bag was measured to hold, if it was
 	conc                             quantity.Concentration
+	each                             quantity.DoseRate // of a mixture for one weight
+	weight                           quantity.BodyWeight
+	assay                            quantity.Percent // as typed
 }
 
 func runMix(e env, args []string) int {
@@ -71,6 +85,9 @@ func runMix(e env, args []string) int {
 		return showHelp(e, "mix")
 	}
 	doc := &mixDocument{}
+	if r.given("drug") {
+		r.need("use", "the limits of a mixture depend on whether it is for a bolus or an infusion")
+	}
 	if !r.refused() {
 		if m, ok := readMixture(r); ok {
 			workMix(r, m, doc)
@@ -94,6 +111,8 @@ func readMixture(r *request) (mixture, bool) {
 	default:
 		m, err = readMakeUp(r)
 	}
+	m.readAssay(r)
+	m.bagNeedsInfusion(r)
 	if r.refused() {
 		return m, false
 	}
@@ -101,165 +120,32 @@ func readMixture(r *request) (mixture, bool) {
 		m.conc, err = m.amount.In(m.volume)
 	}
 	if err != nil {
-		r.add(mixFault(err))
+		r.add(sumFault("mix", err))
 		return m, false
 	}
 	return m, true
 }
 
-func mixFault(err error) refusal.Reason {
-	if r, ok := err.(refusal.Reason); ok {
-		return r
+// widestAssay is the widest assay limits that are read, in per cent: our own net.
+const widestAssay = 25
+
+// readAssay is --assay; a drug of the formulary brings its own.
+func (m *mixture) readAssay(r *request) {
+	if r.given("drug") {
+		r.forbid("the formulary's assay limits are taken", "assay")
+		return
 	}
-	return faultOf("mix", err)
+	m.assay = read(r, "assay", quantity.ParsePercent)
+	if m.assay.Given() && m.assay.Rat().Cmp(big.NewRat(widestAssay, 1)) > 0 {
+		r.strange("assay", refusal.ValueUnknown, "at most 25 %", "is wider than any assay limits")
+	}
 }
 
-// readMakeUp is --amount or --concentration, --final and --strength: the drug
-// volume is worked and the syringe made up.
-func readMakeUp(r *request) (mixture, error) {
-	r.exactlyOne("amount", "concentration")
-	r.need("final", "an amount or a concentration needs the final volume")
-	r.forbid("they go with --take or --powder", "diluent", "make-up-to", "add-to", "replace-in", "add", "displacement")
-	m := mixture{
-		method: methodMakeUp, amount: read(r, "amount", quantity.ParseAmount), volume: read(r, "final", quantity.ParseVolume),
-		strength: read(r, "strength", quantity.ParseConcentration),
+// bagNeedsInfusion refuses a bag for a single dose: an order knows none either.
+func (m *mixture) bagNeedsInfusion(r *request) {
+	if m.bag.Given() && r.given("drug") && r.texts["use"].text == "bolus" {
+		r.forbid("a bag is for an infusion", "add-to", "replace-in")
 	}
-	conc := read(r, "concentration", quantity.ParseConcentration)
-	if r.refused() {
-		return m, nil
-	}
-	var err error
-	if conc.Given() {
-		if m.amount, err = m.volume.Holds(conc); err != nil {
-			return m, err
-		}
-	}
-	if !m.strength.Given() {
-		m.method = methodFinal
-		return m, nil
-	}
-	if m.drug, err = m.amount.DrawnAt(m.strength); err != nil {
-		return m, err
-	}
-	return m, m.fill(r)
-}
-
-// fill works the diluent of a final volume.
-func (m *mixture) fill(r *request) error {
-	if m.drug.Cmp(m.volume) > 0 {
-		return refusal.Reason{
-			Code: refusal.ContradictoryAmounts, Severity: refusal.Refuse, Field: "drug volume", Rule: "R5",
-			Got: r.style.Volume(m.drug), Want: "at most " + r.style.Volume(m.volume),
-			Message: fmt.Sprintf("the drug alone takes %s, more than the final volume of %s", r.style.Volume(m.drug), r.style.Volume(m.volume)),
-			Remedy:  "use a stronger presentation, a larger final volume or less drug",
-		}
-	}
-	if m.drug.Cmp(m.volume) == 0 {
-		m.method = methodNeat
-	}
-	var err error
-	m.diluent, err = m.volume.Minus(m.drug)
-	return err
-}
-
-// readTake is --take and --strength with one of the four ways to dilute.
-func readTake(r *request) (mixture, error) {
-	r.need("strength", "the amount in what is taken is not known without it")
-	r.exactlyOne("diluent", "make-up-to", "add-to", "replace-in")
-	r.forbid("--take says how much drug there is", "amount", "concentration", "final", "add", "displacement")
-	m := mixture{drug: read(r, "take", quantity.ParseVolume), strength: read(r, "strength", quantity.ParseConcentration)}
-	diluent, makeUp := read(r, "diluent", quantity.ParseVolume), read(r, "make-up-to", quantity.ParseVolume)
-	addTo, replace := read(r, "add-to", quantity.ParseVolume), read(r, "replace-in", quantity.ParseVolume)
-	if r.refused() {
-		return m, nil
-	}
-	var err error
-	if m.amount, err = m.drug.Holds(m.strength); err != nil {
-		return m, err
-	}
-	switch {
-	case diluent.Given():
-		m.method, m.diluent = methodAdd, diluent
-		m.volume = m.drug.Plus(diluent)
-	case addTo.Given():
-		m.method, m.diluent, m.bag = methodAddTo, addTo, addTo
-		m.volume = m.drug.Plus(addTo)
-	case makeUp.Given():
-		m.method, m.volume = methodMakeUp, makeUp
-		return m, m.fill(r)
-	case replace.Given():
-		m.method, m.volume, m.bag = methodReplace, replace, replace
-		err = m.fill(r)
-	}
-	return m, err
-}
-
-// readPowder is --powder with what is added and what the powder displaces, or
-// with the volume in the end (rule R7).
-func readPowder(r *request) (mixture, error) {
-	r.forbid("a powder has no volume to take", "amount", "strength", "take", "diluent", "make-up-to", "add-to", "replace-in")
-	m := mixture{
-		method: methodPowder, amount: read(r, "powder", quantity.ParseAmount), diluent: read(r, "add", quantity.ParseVolume),
-		displaced: read(r, "displacement", quantity.ParseVolume), volume: read(r, "final", quantity.ParseVolume),
-	}
-	conc := read(r, "concentration", quantity.ParseConcentration)
-	if r.refused() {
-		return m, nil
-	}
-	if conc.Given() {
-		r.atMostOne("concentration", "final")
-		r.atMostOne("concentration", "add")
-		var err error
-		if m.volume, err = m.amount.DrawnAt(conc); err != nil {
-			return m, err
-		}
-	}
-	return m, m.closePowder(r)
-}
-
-// closePowder finds the third of added, displaced and final volume.
-func (m *mixture) closePowder(r *request) error {
-	add, displaced, final := m.diluent.Given(), m.displaced.Given(), m.volume.Given()
-	var err error
-	switch {
-	case add && displaced && final:
-		if m.diluent.Plus(m.displaced).Cmp(m.volume) != 0 {
-			return refusal.Reason{
-				Code: refusal.ContradictoryAmounts, Severity: refusal.Refuse, Field: "--final", Rule: "R7",
-				Message: fmt.Sprintf("%s added and %s displaced make %s, not %s", r.style.Volume(m.diluent), r.style.Volume(m.displaced),
-					r.style.Volume(m.diluent.Plus(m.displaced)), r.style.Volume(m.volume)),
-				Remedy: "leave one of the three out",
-			}
-		}
-	case add && displaced:
-		m.volume = m.diluent.Plus(m.displaced)
-	case final && displaced:
-		m.diluent, err = m.rest(r, m.displaced)
-	case final && add:
-		m.displaced, err = m.rest(r, m.diluent)
-	case final && r.given("final"):
-	default:
-		return refusal.Reason{
-			Code: refusal.DisplacementBlank, Severity: refusal.Refuse, Field: "--displacement", Rule: "R7",
-			Message: "a powder takes room of its own, and neither that volume nor the volume after mixing is given",
-			Remedy:  `add --displacement "0.2 mL" from the record of the powder, or --final "5 mL" if that is what it gives`,
-		}
-	}
-	return err
-}
-
-// rest is what the final volume leaves beside part.
-func (m *mixture) rest(r *request, part quantity.Volume) (quantity.Volume, error) {
-	left, err := m.volume.Minus(part)
-	if err != nil {
-		return left, refusal.Reason{
-			Code: refusal.ContradictoryAmounts, Severity: refusal.Refuse, Field: "--final", Rule: "R7",
-			Got: r.style.Volume(m.volume), Want: "at least " + r.style.Volume(part),
-			Message: fmt.Sprintf("%s alone is more than the volume after mixing, %s", r.style.Volume(part), r.style.Volume(m.volume)),
-			Remedy:  "check the volumes, and the concentration if one is given",
-		}
-	}
-	return left, nil
 }
 
 func workMix(r *request, m mixture, doc *mixDocument) {
@@ -278,15 +164,61 @@ func workMix(r *request, m mixture, doc *mixDocument) {
 		}
 	}
 	doc.Working = mixWorking(r, m, doc)
+	limits := r.checkLimits(m.quick(r))
+	doc.Containers, doc.Diluent = limits.Containers, limits.Diluent
+	for _, p := range limits.Presentations {
+		doc.Presentations = append(doc.Presentations, p.ID)
+	}
+	m.spread(r, doc, limits)
+	mixCautions(r, m)
+	m.tellBag(r, doc)
+	m.tellEach(r, doc, limits)
+}
+
+// spread fills in the interval: from measuring, and from the assay limits that
+// are typed or on record (rule R9).
+func (m mixture) spread(r *request, doc *mixDocument, limits dilution.QuickLimits) {
 	parts, ok := mixParts(r, m, doc)
-	if ok && len(parts) > 0 {
+	assay := m.assay
+	if len(limits.Presentations) > 0 {
+		var assumed bool
 		var err error
-		if doc.Interval, err = intervalOf(r.style, m.conc, parts); err != nil {
-			r.add(faultOf("interval", err))
+		if assay, assumed, err = dilution.WidestAssay(limits.Presentations); err != nil {
+			r.add(faultOf("assay", err))
+			return
+		}
+		if assumed {
+			r.caution(refusal.Reason{
+				Code: refusal.AssayAssumed, Field: "assay", Rule: "R9", Got: "none stored", Want: r.style.Percent(assay),
+				Message: "no assay limits of " + limits.Presentations[0].ID + " are stored; plus or minus " + r.style.Percent(assay) + " is assumed for the interval",
+			})
 		}
 	}
-	mixCautions(r, m)
-	r.checkLimits(dilution.Quick{Concentration: m.conc, Strength: m.strength})
+	if !ok || len(parts) == 0 && !assay.Given() {
+		return
+	}
+	var err error
+	if doc.Interval, err = intervalOf(r.style, m.conc, parts, assay); err != nil {
+		r.add(faultOf("interval", err))
+	}
+}
+
+// quick is the mixture to be held against the formulary.
+func (m mixture) quick(r *request) dilution.Quick {
+	q := dilution.QuickMix{Presentation: r.texts["presentation"].text, Drug: m.drug, Final: m.volume}
+	switch m.method {
+	case methodPowder:
+		q.Method, q.Powder = dilution.Neat, m.amount
+	case methodNeat:
+		q.Method = dilution.Neat
+	case methodMakeUp, methodAdd, methodFinal:
+		q.Method = dilution.MakeUpTo
+	case methodAddTo:
+		q.Method = dilution.AddTo
+	case methodReplace:
+		q.Method = dilution.WithdrawThenAdd
+	}
+	return dilution.Quick{Concentration: m.conc, Strength: m.strength, Mix: &q}
 }
 
 // balanced checks at run time that nothing is lost (rule R6): the parts make
@@ -313,52 +245,3 @@ func balanced(r *request, m mixture) bool {
 	}
 	return sound
 }
-
-// mixParts is how far each measured volume can be off, as a share of the
-// concentration in per cent. It is false when a volume cannot be measured.
-func mixParts(r *request, m mixture, doc *mixDocument) ([]*big.Rat, bool) {
-	one := big.NewRat(1, 1)
-	p := &widths{r: r, all: true}
-	if m.drug.Given() && !m.drug.IsZero() {
-		weight := one
-		if m.method == methodAdd { // the share of the other volume weighs each reading (GUM)
-			weight = share(m.diluent, m.volume)
-		}
-		if got, ok := p.add("drug volume", m.drug, weight); ok {
-			doc.DrugReading = readingOf(r.style, got)
-		}
-	}
-	switch m.method {
-	case methodMakeUp:
-		p.add("final volume", m.volume, one)
-	case methodAdd, methodPowder:
-		if m.diluent.Given() && !m.diluent.IsZero() {
-			p.add("diluent volume", m.diluent, share(m.diluent, m.volume))
-		}
-	case methodNeat, methodFinal: // nothing is diluted, or nothing is known
-		return nil, false
-	case methodAddTo, methodReplace: // the bag's own error is a caution
-	}
-	return p.parts, p.all
-}
-
-// widths gathers the half widths of readings in per cent.
-type widths struct {
-	r     *request
-	parts []*big.Rat
-	all   bool // every volume could be measured
-}
-
-// add reads v on a barrel and keeps its half width times weight.
-func (p *widths) add(field string, v quantity.Volume, weight *big.Rat) (syringe.Reading, bool) {
-	got, ok := p.r.measure(field, v)
-	if !ok {
-		p.all = false
-		return got, false
-	}
-	p.parts = append(p.parts, new(big.Rat).Mul(halfWidth(got), weight))
-	return got, true
-}
-
-// share is v as a part of whole.
-func share(v, whole quantity.Volume) *big.Rat { return new(big.Rat).Quo(v.Rat(), whole.Rat()) }

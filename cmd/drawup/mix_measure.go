@@ -38,13 +38,17 @@ func (x *readingJSON) words() string {
 }
 
 // measure reads v on the smallest stocked barrel that holds it. What cannot be
-// measured is a caution here and false; an order refuses it.
-func (r *request) measure(field string, v quantity.Volume) (syringe.Reading, bool) {
+// measured is false: a caution, or a refusal where strict, as in an order.
+func (r *request) measure(field string, v quantity.Volume, strict bool) (syringe.Reading, bool) {
 	smallest := quantity.Millilitres(big.NewRat(smallestTenths, 10))
 	within := quantity.PerCent(big.NewRat(withinPercent, 1))
 	got, err := syringe.Measure(v, syringe.Stocked(), smallest, within)
 	if err != nil {
-		r.caution(measureFault(r.style, field, v, err))
+		if fault := measureFault(r.style, field, v, err); strict {
+			r.add(fault)
+		} else {
+			r.caution(fault)
+		}
 		return syringe.Reading{}, false
 	}
 	if got.MovedPercent.Sign() != 0 {
@@ -106,15 +110,23 @@ func halfWidth(x syringe.Reading) *big.Rat {
 type intervalJSON struct {
 	Low     *quantityJSON `json:"low"`
 	High    *quantityJSON `json:"high"`
-	Percent *quantityJSON `json:"percent"`
+	Percent *quantityJSON `json:"percent"`    // either way, GUM with coverage factor 2
+	Worst   *quantityJSON `json:"worst_case"` // either way, everything off to one side
 	Covers  string        `json:"covers"`
 }
 
-// intervalOf combines half widths in per cent around c.
-func intervalOf(s quantity.Style, c quantity.Concentration, parts []*big.Rat) (*intervalJSON, error) {
+// intervalOf combines half widths in per cent around c. The assay's is not given
+// where nobody said it.
+func intervalOf(s quantity.Style, c quantity.Concentration, parts []*big.Rat, assay quantity.Percent) (*intervalJSON, error) {
 	var widths []quantity.Percent
+	covers, worst := "not the assay of the presentation", new(big.Rat)
+	if assay.Given() {
+		parts = append([]*big.Rat{assay.Rat()}, parts...)
+		covers = "the assay of the presentation, " + s.Percent(assay)
+	}
 	for _, p := range parts {
 		widths = append(widths, quantity.PerCent(p))
+		worst.Add(worst, p)
 	}
 	percent, err := syringe.Interval(widths...)
 	if err != nil {
@@ -129,7 +141,7 @@ func intervalOf(s quantity.Style, c quantity.Concentration, parts []*big.Rat) (*
 		return &quantityJSON{x.Exact(u), s.ConcentrationIn(x, u), u.String() + "/mL"}
 	}
 	return &intervalJSON{
-		Low: bound(low), High: bound(high), Percent: percentJSON(s, percent),
-		Covers: "measuring syringes (" + syringe.ToleranceSource + "); not the assay of the presentation",
+		Low: bound(low), High: bound(high), Percent: percentJSON(s, percent), Worst: percentJSON(s, quantity.PerCent(worst)),
+		Covers: "measuring syringes (" + syringe.ToleranceSource + "); " + covers,
 	}, nil
 }

@@ -3,22 +3,24 @@ package main
 import (
 	"fmt"
 	"io"
+	"strings"
 
 	"drawup/dilution/refusal"
 )
 
 // mixCautions tells what the sum does not show by itself.
 func mixCautions(r *request, m mixture) {
-	switch m.method {
-	case methodAddTo:
+	switch {
+	case m.measured.Given(): // both figures are told
+	case m.method == methodAddTo:
 		bagCaution(r, m, "the drug's own volume is counted; the bag as labelled alone would give")
-	case methodReplace:
+	case m.method == methodReplace:
 		r.caution(refusal.Reason{
 			Code: refusal.BagFillUnknown, Field: "--replace-in", Rule: "R9", Got: r.style.Volume(m.bag),
 			Message: "the bag is taken to hold " + r.style.Volume(m.bag) + "; what it really holds is not known and is not in the interval",
 			Remedy:  "measure the fluid instead where the concentration matters",
 		})
-	case methodFinal:
+	case m.method == methodFinal:
 		r.caution(refusal.Reason{
 			Code: refusal.FlagMissing, Field: "--strength",
 			Message: "no strength is given: what to draw and what to add are not worked, and there is no interval",
@@ -109,9 +111,29 @@ func tellMix(w io.Writer, d *mixDocument) {
 		line(w, "drug measured", d.DrugReading.words())
 	}
 	if d.Interval != nil {
-		line(w, "interval", fmt.Sprintf("%s to %s, %s either way, from measuring alone", d.Interval.Low.Printed, d.Interval.High.Printed, d.Interval.Percent.Printed))
+		line(w, "interval", fmt.Sprintf("%s to %s, %s either way; %s at the worst", d.Interval.Low.Printed, d.Interval.High.Printed,
+			d.Interval.Percent.Printed, d.Interval.Worst.Printed))
+		line(w, "interval covers", d.Interval.Covers)
 	}
+	if len(d.Presentations) > 0 {
+		line(w, "drawn from", d.stock())
+	}
+	d.bagJSON.tell(w)
+	d.weightMadeJSON.tell(w)
+	d.patientJSON.tell(w)
 	for _, s := range d.Working {
 		line(w, "how", s)
 	}
+}
+
+// stock is what has to be fetched.
+func (d *mixDocument) stock() string {
+	s := strings.Join(d.Presentations, ", or ")
+	if d.Containers > 0 {
+		s = fmt.Sprintf("%d x %s", d.Containers, s)
+	}
+	if d.Diluent != "" {
+		s += "; diluted with " + d.Diluent
+	}
+	return s
 }

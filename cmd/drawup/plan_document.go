@@ -8,6 +8,7 @@ import (
 	"drawup/dilution"
 	"drawup/dilution/pump"
 	"drawup/dilution/quantity"
+	"drawup/labels"
 )
 
 // A planDocument is plan.json: one order, worked. It is stable: keys are added,
@@ -70,7 +71,8 @@ type syringeJSON struct {
 	Doses         int           `json:"doses,omitempty"`
 	Choices       []choiceJSON  `json:"choices"`
 	Serial        string        `json:"serial"`
-	Code          string        `json:"code"`
+	Code          string        `json:"code"`  // the shortest form of the barcode
+	Codes         []string      `json:"codes"` // all forms, the fullest first; the label has one of them
 	Cautions      []reasonJSON  `json:"cautions"`
 }
 
@@ -144,7 +146,7 @@ func planOf(j *job) *planDocument {
 		doc.Shelf = &shelfJSON{filepath.Base(j.shelf.File), j.shelf.Name.Value, j.shelf.Invented}
 	}
 	for i, p := range j.list.Plans {
-		doc.Syringes = append(doc.Syringes, syringePlan(p, m.SerialOf(p.Number), j.labels[i].Code.Text))
+		doc.Syringes = append(doc.Syringes, syringePlan(p, m.SerialOf(p.Number), j.labels[i].Codes))
 	}
 	for _, l := range j.list.LeftOut {
 		doc.LeftOut = append(doc.LeftOut, leftOutJSON{l.Number, l.Drug, reasonsJSON(l.Reasons)})
@@ -152,7 +154,7 @@ func planOf(j *job) *planDocument {
 	return doc
 }
 
-func syringePlan(p dilution.Plan, serial, code string) syringeJSON {
+func syringePlan(p dilution.Plan, serial string, codes []labels.Cell) syringeJSON {
 	s, m := p.Style, p.Mixture
 	out := syringeJSON{
 		Number: p.Number, Patient: p.Patient.ID.Value, Drug: p.Name, ATC: p.Drug.ATC,
@@ -167,7 +169,10 @@ func syringePlan(p dilution.Plan, serial, code string) syringeJSON {
 		LeftVolume: volumeJSON(s, m.LeftVolume), LeftAmount: amountJSON(s, m.LeftAmount),
 		UseBy:  useByPlan{p.UseBy.At.Format(time.RFC3339), p.UseBy.Minutes, p.UseBy.Won, p.UseBy.Source},
 		Opened: packsOf(m), Fluids: fluidPacksOf(s, m), Doses: p.Order.Doses.Value, Choices: choicesOf(p.Choices),
-		Serial: serial, Code: code, Cautions: reasonsJSON(p.Cautions),
+		Serial: serial, Cautions: reasonsJSON(p.Cautions),
+	}
+	for _, code := range codes {
+		out.Codes, out.Code = append(out.Codes, code.Text), code.Text
 	}
 	if m.DiluentVolume.Given() {
 		out.DiluentVolume = volumeJSON(s, m.DiluentVolume)

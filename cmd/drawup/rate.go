@@ -30,12 +30,10 @@ func rateFlags() []flagSpec {
 }
 
 func patientAndMixFlags() []flagSpec {
-	return []flagSpec{
-		{"weight", "72 kg", "body weight, where the dose is per kg"},
-		{"surface", "1.8 m2", "surface area, where the dose is per m²"},
+	return append([]flagSpec{
 		{"mix", "4 mg in 50 mL", "amount in FINAL volume"},
 		{"concentration", "80 microgram/mL", "concentration in the syringe; per cent and ratio strengths are read too"},
-	}
+	}, patientFlags()...)
 }
 
 // A rungJSON is one step of the ladder.
@@ -56,6 +54,7 @@ type rateDocument struct {
 	Lost          *quantityJSON `json:"lost,omitempty"` // pump rate minus flow rate, in per cent of it
 	Ladder        []rungJSON    `json:"ladder,omitempty"`
 	Working       []string      `json:"working,omitempty"`
+	patientJSON
 	findings
 }
 
@@ -65,6 +64,7 @@ type rateSum struct {
 	flow quantity.FlowRate // with --rate
 	step quantity.FlowRate
 	conc quantity.Concentration
+	who  patient
 	per  pump.Per
 }
 
@@ -102,7 +102,8 @@ func readRate(r *request) rateSum {
 		s.dose = readAs(r, s.conc)
 	}
 	if s.dose.Given() {
-		s.per = readPer(r, s.dose.Basis())
+		s.who = readPatient(r, s.dose.Basis())
+		s.per = s.who.per(s.dose.Basis())
 	}
 	return s
 }
@@ -130,45 +131,16 @@ func readAs(r *request, c quantity.Concentration) quantity.DoseRate {
 	}
 	unit := c.Unit().String()
 	switch {
+	case r.given("surface"), r.given("surface-by"):
+		unit += "/m2"
 	case r.given("weight"):
 		unit += "/kg"
-	case r.given("surface"):
-		unit += "/m2"
 	}
 	d, err := quantity.ParseDoseRate("1 " + unit + "/h")
 	if err != nil {
 		r.add(faultOf("--as", err))
 	}
 	return d
-}
-
-// readPer is what a dose is counted per. A weight that is missing is refused,
-// and so is one that has no part in the sum: a "/kg" may have been forgotten.
-func readPer(r *request, b quantity.Basis) pump.Per {
-	weight := readWeight(r)
-	surface := read(r, "surface", quantity.ParseSurface)
-	switch b {
-	case quantity.PerKilogram:
-		r.forbid("the dose is per kg", "surface")
-		if !r.given("weight") && !r.broken {
-			r.add(refusal.Reason{Code: refusal.WeightMissing, Field: "--weight", Rule: "R3",
-				Message: "the dose is per kg and no body weight is given", Remedy: r.remedyFor("weight")})
-		}
-		return pump.PerWeight(weight)
-	case quantity.PerSquareMetre:
-		r.forbid("the dose is per m²", "weight")
-		if !r.given("surface") && !r.broken {
-			r.add(refusal.Reason{Code: refusal.SurfaceMissing, Field: "--surface", Rule: "R3",
-				Message: "the dose is per m² and no surface area is given", Remedy: r.remedyFor("surface")})
-		}
-		return pump.PerSurface(surface)
-	case quantity.Absolute:
-		if !r.given("drug") { // limits per kg need a weight even then
-			r.forbid("the dose is neither per kg nor per m²", "weight", "surface")
-		}
-		return pump.PerNothing()
-	}
-	return pump.Per{}
 }
 
 func workRate(r *request, s rateSum, doc *rateDocument) {
@@ -195,8 +167,8 @@ func workRate(r *request, s rateSum, doc *rateDocument) {
 	doc.Lost = &quantityJSON{exactText(set.LostPercent), signed(r.style, set.LostPercent) + " %", "%"}
 	doc.Working = rateWorking(r, s, doc)
 	lossCaution(r, set)
-	weight, surface := quickScalar(r)
-	limits := r.checkLimits(dilution.Quick{Infusion: true, Concentration: s.conc, Rate: set.Dose, Weight: weight, Surface: surface})
+	doc.patientJSON = s.who.echo(r.style)
+	limits := r.checkLimits(dilution.Quick{Infusion: true, Concentration: s.conc, Rate: set.Dose, Weight: s.who.weight, Surface: s.who.surface})
 	if r.given("dose") && !r.refused() {
 		ladder(r, s, doc, limits.Top)
 	}
@@ -275,14 +247,7 @@ func (r *request) noLimits() {
 
 // rateWorking says in one or two lines how the rate was got.
 func rateWorking(r *request, s rateSum, doc *rateDocument) []string {
-	who := ""
-	switch s.per.Basis() {
-	case quantity.PerKilogram:
-		who = "body weight " + r.style.BodyWeight(read(r, "weight", quantity.ParseBodyWeight))
-	case quantity.PerSquareMetre:
-		who = "surface area " + r.style.Surface(read(r, "surface", quantity.ParseSurface))
-	case quantity.Absolute:
-	}
+	who := s.who.scalar(r.style, s.per.Basis())
 	times, over := "", ""
 	if who != "" {
 		times, over = " x "+who, " / "+who
@@ -309,6 +274,7 @@ func tellRate(w io.Writer, d *rateDocument, fromFlow bool) {
 	line(w, "pump rate", d.PumpRate.Printed+", "+d.Lost.Printed)
 	line(w, "dose rate delivered", shown(d.Delivered))
 	line(w, "concentration", shown(d.Concentration))
+	d.patientJSON.tell(w)
 	for _, s := range d.Working {
 		line(w, "how", s)
 	}

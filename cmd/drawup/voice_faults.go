@@ -30,6 +30,9 @@ func faultOf(field string, err error) refusal.Reason {
 		r.Code, r.Got, r.Want, r.Rule = refusal.AmountKindDiffer, kind.Got.String(), kind.Want.String(), "R4"
 		r.Message = fmt.Sprintf("%s: one quantity is counted by %v, the other by %v; no factor joins them", field, kind.Got, kind.Want)
 		r.Remedy = "give both in the same kind of unit, as the presentation in the hand states it"
+		if kind.Got != quantity.ByActivity && kind.Want != quantity.ByActivity {
+			r.Remedy += "; drawup convert joins mass and mmol of a named salt"
+		}
 	case errors.As(err, &basis):
 		r.Code, r.Got, r.Want, r.Rule = refusal.UnitWrongKind, basis.Got.String(), basis.Want.String(), "R3"
 		r.Remedy = "check the unit of the dose against the order"

@@ -22,6 +22,20 @@ func line(w io.Writer, name, value string) {
 	fmt.Fprintf(w, "  %s%s\n", pad(name, 22), value)
 }
 
+// listed cuts a list at its commas. A comma between digits is left for the reader
+// of the number, which refuses it.
+func listed(s string) []string {
+	var out []string
+	from := 0
+	for i, c := range s {
+		if c != ',' || i == 0 || strings.ContainsRune("0123456789", rune(s[i-1])) {
+			continue
+		}
+		out, from = append(out, s[from:i]), i+1
+	}
+	return append(out, s[from:])
+}
+
 // plain is the number of a printed quantity without its unit and separators.
 func plain(printed string) string {
 	number, _, _ := strings.Cut(printed, " ")

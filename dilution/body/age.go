@@ -150,6 +150,20 @@ func (a Age) Years() int {
 	return 0
 }
 
+// Months is how many whole months are completed, rounded down; 0 if not given.
+func (a Age) Months() int {
+	switch a.unit {
+	case years:
+		return 12 * a.n
+	case months:
+		return a.n
+	case days, weeks:
+		m := new(big.Rat).Quo(a.inDays(), big.NewRat(3652425, 120000))
+		return int(new(big.Int).Div(m.Num(), m.Denom()).Int64())
+	}
+	return 0
+}
+
 // Cmp compares two ages: -1, 0 or +1. Both must be given; an age that is not
 // given counts as the youngest.
 func (a Age) Cmp(b Age) int {

@@ -245,25 +245,6 @@ func TestUsedSurfaceTie(t *testing.T) {
 	}
 }
 
-// TestRoots holds every root to its definition: n - 1/2 <= root < n + 1/2 for
-// the rounded one, compared as powers.
-func TestRoots(t *testing.T) {
-	rapid.Check(t, func(t *rapid.T) {
-		k := rapid.SampledFrom([]int{2, 3, 5, 40}).Draw(t, "k")
-		r := rat(rapid.Int64Range(1, 1<<60).Draw(t, "a"), rapid.Int64Range(1, 1<<30).Draw(t, "b"))
-		n := new(big.Rat).SetInt(rootHalfUp(r, k))
-		low, high := sub(n, rat(1, 2)), add(n, rat(1, 2))
-		if low.Sign() > 0 && power(low, int64(k)).Cmp(r) > 0 || power(high, int64(k)).Cmp(r) <= 0 {
-			t.Fatalf("root %d of %s: got %s", k, r, n)
-		}
-		x := root(r, k)
-		ulp := shiftedRat(rat(1, 2), -significantDigits+len(x.FloatString(0))) // at least half a unit of the last digit
-		if power(add(x, ulp), int64(k)).Cmp(r) <= 0 || power(sub(x, ulp), int64(k)).Cmp(r) > 0 {
-			t.Fatalf("root %d of %s to 40 digits: got %s", k, r, x)
-		}
-	})
-}
-
 // TestUsedSurfaceEncloses holds the printed area to the second route's rule:
 // its square, half a step either way, encloses height x weight / 3600.
 func TestUsedSurfaceEncloses(t *testing.T) {

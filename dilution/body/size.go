@@ -115,11 +115,7 @@ func (s Size) Adjusted() (quantity.BodyWeight, error) {
 	if err != nil {
 		return quantity.BodyWeight{}, err
 	}
-	if s.Weight.Cmp(ideal) < 0 {
-		return s.Weight, nil
-	}
-	excess := sub(s.Weight.Rat(), ideal.Rat())
-	return quantity.Kilograms(add(ideal.Rat(), mul(rat(4, 10), excess))), nil
+	return s.AdjustedFrom(ideal)
 }
 
 // BMI is weight over height squared in kg/m², exact. Error: *MissingError.

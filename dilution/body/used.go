@@ -4,6 +4,7 @@ import (
 	"math/big"
 
 	"drawup/dilution/quantity"
+	"drawup/dilution/roots"
 )
 
 // halfUp moves r, which is not negative, to the nearest multiple of step; a
@@ -45,6 +46,6 @@ func (s Size) UsedSurface() (quantity.BodySurfaceArea, error) {
 	if err != nil {
 		return quantity.BodySurfaceArea{}, err
 	}
-	hundredths := rootHalfUp(mul(square, rat(10000, 1)), 2)
+	hundredths := roots.HalfUp(mul(square, rat(10000, 1)), 2)
 	return quantity.SquareMetres(new(big.Rat).SetFrac(hundredths, big.NewInt(100))), nil
 }

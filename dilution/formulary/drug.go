@@ -230,6 +230,18 @@ func (r *reader) contents(p *Presentation, rec presentationRecord, at func(strin
 		return
 	}
 	p.Added = added
+	if rec.Volume != "" {
+		v, err := quantity.ParseVolume(rec.Volume)
+		if err != nil {
+			r.badText(rec.Volume, err, at("volume")...)
+		}
+		if rec.Displacement != nil {
+			r.fault(refusal.KeyConflict, rec.Volume, "the volume that is obtained, or the displacement",
+				"a powder has both a volume after mixing and a displacement", at("volume")...)
+		}
+		p.Volume, p.Obtained = v, true
+		return
+	}
 	if rec.Displacement == nil {
 		return
 	}
@@ -237,6 +249,7 @@ func (r *reader) contents(p *Presentation, rec presentationRecord, at func(strin
 		s := r.source(rec.Displacement.Source, at("displacement")...)
 		p.Displacement = Figure[quantity.Volume]{
 			Text: "negligible", Source: s, Unverified: rec.Displacement.Unverified || s.Grade == "C",
+			Jurisdiction: s.Jurisdiction, Pos: r.places.Of(at("displacement")...),
 		}
 		p.Negligible, p.Volume = true, added
 		return
@@ -271,7 +284,8 @@ func (r *reader) diluents(list []diluentRecord, path []any) []Diluent {
 
 func (r *reader) bounds(rec concentrationRecord, path ...any) Bounds {
 	at := func(key string) []any { return append(append([]any{}, path...), key) }
-	b := Bounds{Use: rec.Use, Line: rec.Line, Routes: rec.Routes, Pos: r.places.Of(path...),
+	b := Bounds{Use: rec.Use, Line: rec.Line, Routes: rec.Routes, For: rec.For, Pos: r.places.Of(path...),
+		AgeFrom: r.age(rec.AgeFrom, at("age_from")...), AgeTo: r.age(rec.AgeTo, at("age_to")...),
 		Low:  figure(r, rec.Low, quantity.ParseConcentration, at("low")...),
 		High: figure(r, rec.High, quantity.ParseConcentration, at("high")...)}
 	if !contains([]string{"bolus", "infusion"}, b.Use) || !contains([]string{"any", "peripheral", "central"}, b.Line) {

@@ -88,7 +88,7 @@ func (d Drug) Entries() []Entry {
 		e.presentation(p)
 	}
 	for _, b := range d.Bounds {
-		name := "concentration for " + b.Use + ", " + b.Line + " line" + tail(", ", strings.Join(b.Routes, ", "))
+		name := "concentration for " + b.Use + ", " + b.Line + " line" + tail(", ", strings.Join(b.Routes, ", ")) + tail(", ", b.Whom())
 		add(e, name+": lowest", b.Low, downward)
 		add(e, name+": highest", b.High, upwards)
 	}

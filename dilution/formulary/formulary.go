@@ -106,6 +106,7 @@ type Presentation struct {
 	AddFluids    []string
 	Displacement Figure[quantity.Volume] // powder; Value not given when negligible
 	Negligible   bool                    // the record says so, with a source (rule R7)
+	Obtained     bool                    // powder: Volume is what the label says is obtained
 	SecondName   string
 	SecondAmount quantity.Amount
 	Assay        Figure[quantity.Percent]
@@ -147,9 +148,35 @@ type Bounds struct {
 	Use    string   // bolus, infusion
 	Line   string   // any, peripheral, central
 	Routes []string // none: every route that no other row of this use names
-	Low    Figure[quantity.Concentration]
-	High   Figure[quantity.Concentration]
-	Pos    refusal.Pos
+	For    string   // indication; "": every one that no other row names
+	// AgeFrom and AgeTo bound the ages; neither given: every age.
+	AgeFrom, AgeTo body.Age
+	Low            Figure[quantity.Concentration]
+	High           Figure[quantity.Concentration]
+	Pos            refusal.Pos
+}
+
+// Special counts what makes the row special: a route, an indication, an age.
+// Of rows that fit, the most special ones hold.
+func (b Bounds) Special() int {
+	n := 0
+	for _, is := range []bool{len(b.Routes) > 0, b.For != "", b.AgeFrom.Given() || b.AgeTo.Given()} {
+		if is {
+			n++
+		}
+	}
+	return n
+}
+
+// Fits reports whether the row is for this route, indication and age.
+func (b Bounds) Fits(route, purpose string, age body.Age) bool {
+	ages := Rule[quantity.Dose]{AgeFrom: b.AgeFrom, AgeTo: b.AgeTo}
+	return (len(b.Routes) == 0 || contains(b.Routes, route)) && (b.For == "" || b.For == purpose) && ages.Fits(age)
+}
+
+// Whom is the row's indication and ages in words, "" when it has none.
+func (b Bounds) Whom() string {
+	return strings.Trim(b.For+", "+Rule[quantity.Dose]{AgeFrom: b.AgeFrom, AgeTo: b.AgeTo}.Ages(), ", ")
 }
 
 // A Rule is one row of dose limits, for boluses in doses, for infusions in

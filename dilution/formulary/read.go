@@ -10,6 +10,7 @@ import (
 	"io/fs"
 	"regexp"
 	"sort"
+	"sync"
 
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
@@ -45,7 +46,14 @@ func DefaultTexts() ([]Text, error) {
 
 // Default is the embedded starter formulary. It is checked by the tests, row
 // by row, so a refusal here is a fault of ours.
-func Default() (*Formulary, error) {
+//
+// It is read once: the value never changes, and reading it takes longer than
+// most of what is asked of it.
+func Default() (*Formulary, error) { return starterOnce() }
+
+var starterOnce = sync.OnceValues(readStarter)
+
+func readStarter() (*Formulary, error) {
 	texts, err := DefaultTexts()
 	if err != nil {
 		return nil, err
@@ -64,10 +72,11 @@ func Read(texts ...Text) (*Formulary, refusal.List) {
 	f := &Formulary{}
 	var all refusal.List
 	sum := sha256.New()
-	for _, t := range texts {
-		sum.Write(t.Data)
-		r := reader{text: t}
-		r.file(f)
+	for i, r := range readAll(texts) {
+		sum.Write(texts[i].Data)
+		if r.whole {
+			r.join(f)
+		}
 		all = append(all, r.faults...)
 	}
 	f.Digest = hex.EncodeToString(sum.Sum(nil))
@@ -75,6 +84,37 @@ func Read(texts ...Text) (*Formulary, refusal.List) {
 	all = append(all, repeatedNames(f)...)
 	all = append(all, pairFaults(f)...)
 	return f, all
+}
+
+// readAll reads each file by itself, all at once: the starter is most of a
+// quick sum's time. The order of the readers is that of the texts.
+func readAll(texts []Text) []*reader {
+	readers := make([]*reader, len(texts))
+	var wait sync.WaitGroup
+	for i, t := range texts {
+		readers[i] = &reader{text: t}
+		wait.Go(readers[i].file)
+	}
+	wait.Wait()
+	return readers
+}
+
+// join adds what the file holds to f; files of one formulary must agree.
+func (r *reader) join(f *Formulary) {
+	if f.Name == "" {
+		f.Name, f.Version, f.Base, f.basePos = r.part.Name, r.part.Version, r.part.Base, r.part.basePos
+	}
+	if r.part.Base != f.Base {
+		r.fault(refusal.KeyConflict, r.part.Base, f.Base, "the files of one formulary must build on the same base", "base")
+	}
+	if r.part.Name == "" || r.part.Name != f.Name || r.part.Version != f.Version {
+		r.fault(refusal.KeyConflict, r.part.Name+" "+r.part.Version, f.Name+" "+f.Version,
+			"the files of one formulary must carry one name and one version", "name")
+	}
+	f.drugs = append(f.drugs, r.part.drugs...)
+	f.Mixes = append(f.Mixes, r.part.Mixes...)
+	f.Never = append(f.Never, r.part.Never...)
+	f.TallMan = append(f.TallMan, r.part.TallMan...)
 }
 
 // repeatedNames finds names that would fetch two drugs.
@@ -109,6 +149,8 @@ type reader struct {
 	sources map[string]Source
 	used    map[string]bool
 	faults  refusal.List
+	part    Formulary // what this file holds
+	whole   bool      // the file could be read at all
 }
 
 func (r *reader) fault(code refusal.Code, got, want, message string, path ...any) {
@@ -126,7 +168,7 @@ func (r *reader) fault(code refusal.Code, got, want, message string, path ...any
 	})
 }
 
-func (r *reader) file(f *Formulary) {
+func (r *reader) file() {
 	var rec fileRecord
 	places, faults := tomlfile.Decode(r.text.Name, r.text.Data, &rec)
 	r.places, r.used = places, map[string]bool{}
@@ -134,17 +176,8 @@ func (r *reader) file(f *Formulary) {
 	if faults.Refused() {
 		return
 	}
-	if f.Name == "" {
-		f.Name, f.Version, f.Base = rec.Name, rec.Version, rec.Base
-		f.basePos = places.Of("base")
-	}
-	if rec.Base != f.Base {
-		r.fault(refusal.KeyConflict, rec.Base, f.Base, "the files of one formulary must build on the same base", "base")
-	}
-	if rec.Name == "" || rec.Name != f.Name || rec.Version != f.Version {
-		r.fault(refusal.KeyConflict, rec.Name+" "+rec.Version, f.Name+" "+f.Version,
-			"the files of one formulary must carry one name and one version", "name")
-	}
+	f := &r.part
+	f.Name, f.Version, f.Base, f.basePos, r.whole = rec.Name, rec.Version, rec.Base, places.Of("base"), true
 	r.readSources(rec.Sources)
 	for i, d := range rec.Drugs {
 		one := r.drug(d, i)

@@ -142,7 +142,7 @@ type presentationRecord struct {
 	Form string `toml:"form"`
 	// Amount of drug in one container, as counted. Example: "20 mg"
 	Amount string `toml:"amount"`
-	// Volume of one container; blank for a powder. Example: "10 mL"
+	// Volume of one container; of a powder the volume that is obtained after mixing, where the label says it in place of a displacement. Example: "10 mL"
 	Volume string `toml:"volume"`
 	// Key of the source of the contents. Example: "ETO-1"
 	Source string `toml:"source"`
@@ -210,6 +210,12 @@ type concentrationRecord struct {
 	Line string `toml:"line"`
 	// Routes that the row is for; blank: every route that no other row of this use names. Example: ["IM"]
 	Routes []string `toml:"routes"`
+	// Indication that the row is for; blank: every one that no other row names. Example: "after birth"
+	For string `toml:"for"`
+	// From this age; blank: birth. Example: "1 month"
+	AgeFrom string `toml:"age_from"`
+	// Up to this age, which is not included; blank: no end. Example: "18 years"
+	AgeTo string `toml:"age_to"`
 	// Lowest concentration. Example: { value = "20 microgram/mL", source = "S4S16" }
 	Low *figureRecord `toml:"low"`
 	// Highest concentration. Example: { value = "320 microgram/mL", source = "ICS16" }

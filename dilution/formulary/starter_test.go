@@ -33,18 +33,26 @@ func rows(t *testing.T, folder string, columns int) [][]string {
 	}
 	var out [][]string
 	for _, name := range files {
-		data, err := os.ReadFile(name)
-		if err != nil {
-			t.Fatal(err)
+		out = append(out, table(t, name, columns)...)
+	}
+	return out
+}
+
+// table reads one tab-separated file without its head.
+func table(t *testing.T, name string, columns int) [][]string {
+	t.Helper()
+	data, err := os.ReadFile(name)
+	if err != nil {
+		t.Fatal(err)
+	}
+	var out [][]string
+	for i, line := range strings.Split(strings.TrimRight(string(data), "\n"), "\n") {
+		cells := strings.Split(line, "\t")
+		if len(cells) != columns {
+			t.Fatalf("%s:%d: got %d columns, want %d", name, i+1, len(cells), columns)
 		}
-		for i, line := range strings.Split(strings.TrimRight(string(data), "\n"), "\n") {
-			cells := strings.Split(line, "\t")
-			if len(cells) != columns {
-				t.Fatalf("%s:%d: got %d columns, want %d", name, i+1, len(cells), columns)
-			}
-			if i > 0 {
-				out = append(out, cells)
-			}
+		if i > 0 {
+			out = append(out, cells)
 		}
 	}
 	return out
@@ -70,30 +78,6 @@ func TestStarterHoldsTheDrugs(t *testing.T) {
 	}
 	if !strings.Contains(f.State(), "not approved") {
 		t.Errorf("got the state %q, want it to say that nobody approved it", f.State())
-	}
-}
-
-// ATC codes and label classes against the table of names: WHO index and
-// ISO 26825:2020, see testdata/formulary/README.md.
-func TestCodesAndClasses(t *testing.T) {
-	f := starter(t)
-	shape := regexp.MustCompile(`^[A-Z]\d{2}[A-Z]{2}\d{2}$`)
-	seen := map[string]bool{}
-	for _, r := range rows(t, "names", 4) {
-		d, _, ok := f.Find(r[0])
-		if !ok {
-			t.Errorf("%s is in the table and not in the formulary", r[0])
-			continue
-		}
-		seen[d.Name] = true
-		if !shape.MatchString(d.ATC) || d.ATC != r[1] || d.Class != r[2] {
-			t.Errorf("%s: got %s, class %s, want %s, class %s", d.Name, d.ATC, d.Class, r[1], r[2])
-		}
-	}
-	for _, d := range f.Drugs() {
-		if !seen[d.Name] {
-			t.Errorf("%s has no row in the table of names", d.Name)
-		}
 	}
 }
 
@@ -141,8 +125,8 @@ func TestIdentifiersAgreeWithContents(t *testing.T) {
 				t.Errorf("%s: %q holds %s", d.Name, p.ID, quantity.UK().Volume(p.Volume))
 			}
 		}
-		if len(d.Presentations) == 0 {
-			t.Errorf("%s has no presentation", d.Name)
+		if (len(d.Presentations) == 0) != slices.Contains(namesOnly, d.Name) {
+			t.Errorf("%s: got %d presentations; those in %q have none, all others some", d.Name, len(d.Presentations), namesOnly)
 		}
 	}
 }
@@ -292,20 +276,20 @@ func TestEveryFigureHasASource(t *testing.T) {
 	}
 }
 
-// Rows of one drug, purpose, route and counting do not overlap in age: an
-// overlap would let the milder of two rows win.
+// Rows of one drug, purpose, route and counting do not overlap in age, those for
+// the frail apart: an overlap would let the milder of two rows win.
 func TestAgeBandsDoNotOverlap(t *testing.T) {
 	for _, d := range starter(t).Drugs() {
 		for i, a := range d.Doses {
 			for _, b := range d.Doses[:i] {
-				if a.For == b.For && share(a.Routes, b.Routes) && overlap(a, b) && a.UsualHigh.Value.Basis() == b.UsualHigh.Value.Basis() {
+				if a.For == b.For && a.Frail == b.Frail && share(a.Routes, b.Routes) && overlap(a, b) && a.UsualHigh.Value.Basis() == b.UsualHigh.Value.Basis() {
 					t.Errorf("%s, %s: the rows for %q and %q overlap", d.Name, a.For, a.Ages(), b.Ages())
 				}
 			}
 		}
 		for i, a := range d.Rates {
 			for _, b := range d.Rates[:i] {
-				if a.For == b.For && share(a.Routes, b.Routes) && overlap(a, b) && a.UsualHigh.Value.Basis() == b.UsualHigh.Value.Basis() {
+				if a.For == b.For && a.Frail == b.Frail && share(a.Routes, b.Routes) && overlap(a, b) && a.UsualHigh.Value.Basis() == b.UsualHigh.Value.Basis() {
 					t.Errorf("%s, %s: the rows for %q and %q overlap", d.Name, a.For, a.Ages(), b.Ages())
 				}
 			}

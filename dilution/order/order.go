@@ -54,6 +54,18 @@ type Site struct {
 	Jurisdiction  Field[string]            // whose standard preparations are used; any when not given
 	TallMan       Field[string]            // whose tall-man list names are printed by; none when not given
 	DualNames     bool                     // the other name follows in brackets
+	Products      []Product                // preparations with a GTIN of the site's own
+}
+
+// A Product is a preparation to which the site has given a trade item number
+// (GTIN) out of its own GS1 company prefix: one drug at one concentration in one
+// volume.
+type Product struct {
+	Number        Field[string] // 14 digits, the last of which checks the others
+	Drug          Field[string]
+	Concentration Field[quantity.Concentration]
+	Volume        Field[quantity.Volume]
+	Pos           refusal.Pos
 }
 
 // A Patient is whom the syringes are for.

@@ -81,6 +81,12 @@ id = "B"
 [[patient.syringe]]
 drug = "ondansetron"
 dose = "4 mg"
+
+[[site.gtin]]
+number = "9521234000006"
+drug = "etomidate"
+concentration = "2 mg/mL"
+volume = "10 mL"
 `
 
 func mustRead(t *testing.T, text string) Order {
@@ -106,6 +112,10 @@ func TestWholeOrder(t *testing.T) {
 	}
 	if len(o.Site.Barrels) != 3 || o.Site.Barrels[1].Value.Exact() != "2.5" || o.Site.Tolerance.Value.Exact() != "5" || o.Site.PumpStep.Value.Exact() != "0.1" || o.Site.Smallest.Value.Exact() != "0.1" {
 		t.Errorf("site: got %+v", o.Site)
+	}
+	// 952 is the GS1 prefix for demonstrations and examples.
+	if g := o.Site.Products; len(g) != 1 || g[0].Number.Value != "09521234000006" || g[0].Drug.Value != "etomidate" || g[0].Concentration.Value.Exact(quantity.Milligram()) != "2" || g[0].Volume.Value.Exact() != "10" {
+		t.Errorf("GTIN: got %+v", g)
 	}
 	p := o.Patients[0]
 	if p.Sex.Value != body.Female || p.Age.Value.Years() != 82 || p.Height.Value.Exact() != "158" || p.Weight.Value.Exact() != "54" || p.Weighed.Value != "2026-11-30" || !p.Estimated {
@@ -414,7 +424,7 @@ func TestKnownKeysAreTheRecords(t *testing.T) {
 	c := commonRecord{Expiry: ""}
 	data, err := toml.Marshal(fileRecord{
 		Session:  sessionRecord{Date: "", Prepared: ""},
-		Site:     siteRecord{Barrels: []string{}},
+		Site:     siteRecord{Barrels: []string{}, Products: []productRecord{{}}},
 		Patients: []patientRecord{{Weighed: "", Syringes: []syringeRecord{{commonRecord: c, Doses: ""}}, Infusions: []infusionRecord{{commonRecord: c}}}},
 	})
 	if err != nil {
@@ -436,14 +446,14 @@ func TestKnownKeysAreTheRecords(t *testing.T) {
 		path := []any{}
 		for _, part := range strings.Split(k, ".") {
 			path = append(path, part)
-			if part == "patient" || part == "syringe" || part == "infusion" {
+			if part == "patient" || part == "syringe" || part == "infusion" || part == "gtin" {
 				path = append(path, 0)
 			}
 		}
 		if !places.Has(path...) {
 			t.Errorf("the records have no %s", k)
 		}
-		if strings.Contains(k, ".") && k != "patient.syringe" && k != "patient.infusion" {
+		if strings.Contains(k, ".") && k != "patient.syringe" && k != "patient.infusion" && k != "site.gtin" {
 			known++
 		}
 	}

@@ -131,16 +131,8 @@ func held(w, low, high *big.Rat) (want string, ok bool) {
 // firstMonth says that the child is too young for the rule; the weight is then
 // the one that the rule gives at one month.
 func weightByAge(a body.Age) (kg *big.Rat, firstMonth bool) {
-	switch y := int64(a.Years()); {
-	case y >= 6:
-		return big.NewRat(3*y+7, 1), false
-	case y >= 1:
-		return big.NewRat(2*y+8, 1), false
-	}
-	for m := int64(11); m >= 1; m-- {
-		if bound, err := body.ParseAge(fmt.Sprintf("%d months", m)); err == nil && !a.Less(bound) {
-			return big.NewRat(m+8, 2), false
-		}
+	if middle, err := body.APLS2011.Guess(a); err == nil {
+		return middle.Weight.Rat(), false
 	}
 	return big.NewRat(9, 2), true
 }

@@ -13,7 +13,7 @@ import (
 // reason to refuse it at once, in the order of the file: what [tomlfile.Decode]
 // refuses, then too-many-syringes (alone with the faults of session and site;
 // no patient is read), key-missing, keys-contradict, key-repeated, nothing-to-make,
-// value-unknown, time-malformed, the faults of a quantity's text
+// value-unknown, product-number-wrong, time-malformed, the faults of a quantity's text
 // ([quantity.Fault]), units-against-mass, weight-missing, height-missing,
 // sex-missing, weight-implausible, height-implausible, body-values-do-not-fit.
 // The one caution is weight-implausible, of a child's weight that few have.
@@ -221,5 +221,8 @@ func (r *reader) site(s siteRecord) {
 	site.DualNames = s.DualNames
 	for i, text := range s.Barrels {
 		r.order.Site.Barrels = append(r.order.Site.Barrels, read(r, text, quantity.ParseVolume, at(p, "barrels", i)))
+	}
+	for i, product := range s.Products {
+		r.product(product, at(p, "gtin", i))
 	}
 }

@@ -30,6 +30,15 @@ type siteRecord struct {
 	Jurisdiction  string   `toml:"jurisdiction"`
 	TallMan       string   `toml:"tall_man"`
 	DualNames     bool     `toml:"dual_names"`
+
+	Products []productRecord `toml:"gtin"`
+}
+
+type productRecord struct {
+	Number        string `toml:"number"`
+	Drug          string `toml:"drug"`
+	Concentration string `toml:"concentration"`
+	Volume        string `toml:"volume"`
 }
 
 type patientRecord struct {
@@ -93,13 +102,14 @@ type infusionRecord struct {
 // knownKeys lists every key of the records with its table; a test holds the
 // two together.
 func knownKeys() []string {
-	keys := []string{"session", "site", "patient", "patient.syringe", "patient.infusion"}
+	keys := []string{"session", "site", "site.gtin", "patient", "patient.syringe", "patient.infusion"}
 	for _, t := range []struct {
 		table string
 		names []string
 	}{
 		{"session", []string{"place", "date", "prepared", "zone", "preparer", "invented"}},
 		{"site", []string{"style", "bolus_use_by", "infusion_use_by", "smallest_volume", "tolerance", "pump_step", "barrels", "jurisdiction", "tall_man", "dual_names"}},
+		{"site.gtin", []string{"number", "drug", "concentration", "volume"}},
 		{"patient", []string{"id", "name", "sex", "age", "height", "weight", "weighed", "estimated", "frail"}},
 		{"patient.syringe", append(commonKeys(), "dose", "amount", "concentration", "volume", "doses", "dilute_if_needed")},
 		{"patient.infusion", append(commonKeys(), "standard", "mix", "method", "line", "start", "from", "to", "concentration", "volume", "hours",

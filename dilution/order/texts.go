@@ -37,6 +37,7 @@ func textReason(key, text string, err error) refusal.Reason {
 	var kind *quantity.KindError
 	var word *wordError
 	var moment *timeError
+	var number *numberError
 	switch {
 	case errors.As(err, &syntax):
 		r.Want, r.Rule = syntax.Want, "R1"
@@ -53,6 +54,8 @@ func textReason(key, text string, err error) refusal.Reason {
 	case errors.As(err, &word):
 		r.Want = word.want
 		r.Message = fmt.Sprintf("the %s %q is not one that can be chosen here", spaced(key), text)
+	case errors.As(err, &number):
+		number.explain(&r)
 	case errors.As(err, &moment):
 		r.Want = moment.want
 		if r.Remedy == "" {

@@ -21,7 +21,42 @@ func readers() map[string]reader {
 	for name, r := range bodyReaders() {
 		all[name] = r
 	}
+	for name, r := range timeReaders() {
+		all[name] = r
+	}
 	return all
+}
+
+func timeReaders() map[string]reader {
+	return map[string]reader{
+		"any weight": func(s string) (readBack, error) {
+			v, err := ParseAnyBodyWeight(s)
+			return readBack{v.Exact() + " kg", func(w string) bool { b, err := ParseAnyBodyWeight(w); return err == nil && b.Cmp(v) == 0 }}, err
+		},
+		"any height": func(s string) (readBack, error) {
+			l, err := ParseAnyLength(s)
+			return readBack{l.Exact() + " cm", func(w string) bool { b, err := ParseAnyLength(w); return err == nil && b.Cmp(l) == 0 }}, err
+		},
+		"duration": func(s string) (readBack, error) {
+			d, err := ParseDuration(s)
+			return readBack{d.Exact() + " min", func(w string) bool { b, err := ParseDuration(w); return err == nil && b.Rat().Cmp(d.Rat()) == 0 }}, err
+		},
+		"drop factor": func(s string) (readBack, error) {
+			n, err := ParseDropFactor(s)
+			return readBack{n.Exact() + " drops/mL", func(w string) bool { b, err := ParseDropFactor(w); return err == nil && b.Rat().Cmp(n.Rat()) == 0 }}, err
+		},
+		"drop rate": func(s string) (readBack, error) {
+			d, err := ParseDropRate(s)
+			return readBack{d.Exact() + " drops/min", func(w string) bool { b, err := ParseDropRate(w); return err == nil && b.Rat().Cmp(d.Rat()) == 0 }}, err
+		},
+		"flow per kg": func(s string) (readBack, error) {
+			f, err := ParseFlowPerKilogram(s)
+			return readBack{f.x.text() + " mL/kg/h", func(w string) bool {
+				b, err := ParseFlowPerKilogram(w)
+				return err == nil && b.Rat().Cmp(f.Rat()) == 0
+			}}, err
+		},
+	}
 }
 
 func drugReaders() map[string]reader {
@@ -106,7 +141,7 @@ var trailingZero = regexp.MustCompile(`\.[0-9]*0(?:[^0-9]|$)`)
 // *SyntaxError whose likely reading reads. Texts longer than a number may be
 // (a fraction, a litre in mL) are passed over only for the reading back.
 func FuzzParse(f *testing.F) {
-	for _, s := range []string{"4 mg", "0.1 microgram/kg/min", "75 mg/m2", "4 mg in 50 mL", "1:1000", "1 in 1,000", "0.5 %", "5 mL/h", "72 kg", "72 lb", "1.78 m", "1.8 m²", "10 %",
+	for _, s := range []string{"4 mg", "0.1 microgram/kg/min", "75 mg/m2", "4 mg in 50 mL", "1:1000", "1 in 1,000", "0.5 %", "5 mL/h", "72 kg", "72 lb", "11 stone 4 pounds", "11 st 4", "5 feet 7 inches", `5'7"`, "1 h 30 min", "6:30", "1.0d0", "20 drops/mL", "42 gtt/min", "2 mL/kg/h", "1.78 m", "1.8 m²", "10 %",
 		"1,5 mg", ".5 mg", "-5 mg", "5 / mg", "5 /", "5 //", "1e3 mg", "½ mg", "1/2 mL", "1 1/2 mL", "1 000 mg", "5 mg/100 mL", "5 mg/0 mL", "50 IU/mL", "1:", "1 in ", " in ", "5 per mL", "٥ mg", "0x10 mg", "5\u00a0mg", "5 mg/1,000 mL", "\xff"} {
 		f.Add(s)
 	}

@@ -26,7 +26,7 @@ func TestFormatting(t *testing.T) {
 		{"0.01 mg/mL", "10 micrograms/mL", "10 mcg/mL"},
 		{"0.001 mg/mL", "1 microgram/mL", "1 mcg/mL"},
 		{"0.0000005 mg/mL", "0.5 nanogram/mL", "0.5 nanogram/mL"},
-		{"2 g/mL", "2,000 mg/mL", "2,000 mg/mL"}, {"0.5 mmol/mL", "500 micromol/mL", "500 micromol/mL"},
+		{"2 g/mL", "2,000 mg/mL", "2,000 mg/mL"}, {"0.5 mmol/mL", "0.5 mmol/mL", "0.5 mmol/mL"}, {"5 micromol/mL", "5 micromol/mL", "5 micromol/mL"},
 	} {
 		conc, err := ParseConcentration(c.in)
 		if err != nil {
@@ -162,10 +162,23 @@ func TestExactText(t *testing.T) {
 
 // TestInCode: ASCII, no blank, no group sign.
 func TestInCode(t *testing.T) {
-	for in, want := range map[string]string{"0.05 mg/mL": "50ug/mL", "1 mg/mL": "1mg/mL", "0.0005 \u00b5g/mL": "0.5ng/mL", "100 units/mL": "100unit/mL", "2000 units/mL": "2000unit/mL", "0.5 mmol/mL": "500umol/mL", "2 mmol/mL": "2mmol/mL", "1 mg in 3 mL": "333ug/mL"} {
+	for in, want := range map[string]string{"0.05 mg/mL": "50ug/mL", "1 mg/mL": "1mg/mL", "0.0005 \u00b5g/mL": "0.5ng/mL", "100 units/mL": "100unit/mL", "2000 units/mL": "2000unit/mL", "0.5 mmol/mL": "0.5mmol/mL", "2 mmol/mL": "2mmol/mL", "1 mg in 3 mL": "333ug/mL"} {
 		if c, err := ParseConcentration(in); err != nil || c.InCode() != want {
 			t.Errorf("%s: got %q, %v, want %q", in, c.InCode(), err, want)
 		}
+	}
+}
+
+// Amounts in the code are the printed ones: unit words of ASCII letters, no
+// blank, no group sign.
+func TestAmountInCode(t *testing.T) {
+	for in, want := range map[string]string{"5 g": "5g", "1000 mg": "1g", "20 mg": "20mg", "0.05 mg": "50ug", "0.0005 mg": "500ng", "5000 units": "5000unit", "8 mmol": "8mmol", "0.5 mmol": "0.5mmol", "1234.5 mg": "1.23g"} {
+		if a, err := ParseAmount(in); err != nil || a.InCode() != want {
+			t.Errorf("%s: got %q, %v, want %q", in, a.InCode(), err, want)
+		}
+	}
+	if got := (Amount{}).InCode(); got != "" {
+		t.Errorf("nothing: got %q", got)
 	}
 }
 

@@ -67,7 +67,12 @@ func bestCount(x exact, k Kind) Unit {
 	case ByActivity:
 		return Units()
 	case BySubstance:
-		return largest(x, Millimole(), Micromole())
+		// Electrolytes are prescribed in mmol: 400 micromol/mL beside mmol/h would
+		// invite a thousandfold slip. Below a hundredth the noughts would.
+		if x.mul(whole(100)).cmp(Millimole().scale) >= 0 {
+			return Millimole()
+		}
+		return Micromole()
 	}
 	return Unit{}
 }
@@ -90,14 +95,28 @@ func (c Concentration) InCode() string {
 		return ""
 	}
 	u := c.Best()
-	word := u.word
-	switch word {
-	case "microgram":
-		word = "ug"
-	case "nanogram":
-		word = "ng"
-	case "micromol":
-		word = "umol"
+	return shorten(in(c.x, c.kind, u)).text() + u.codeWord() + "/mL"
+}
+
+// InCode is a as the barcode carries it: no blank, ASCII units (g, mg, ug, ng,
+// unit, mmol, umol), by the SHORT rule; "" if nothing is given.
+func (a Amount) InCode() string {
+	if !a.Given() {
+		return ""
 	}
-	return shorten(in(c.x, c.kind, u)).text() + word + "/mL"
+	u := a.Best()
+	return shorten(in(a.x, a.kind, u)).text() + u.codeWord()
+}
+
+// codeWord is the unit in signs that a barcode may hold.
+func (u Unit) codeWord() string {
+	switch u.word {
+	case "microgram":
+		return "ug"
+	case "nanogram":
+		return "ng"
+	case "micromol":
+		return "umol"
+	}
+	return u.word
 }

@@ -20,7 +20,7 @@ func alterations(name, text string) []string {
 	out = append(out, alteredUnits(text)...)
 	out = append(out, alteredWords(text)...)
 	out = append(out, alteredMoments(text)...)
-	if name == Code || name == ATC {
+	if key, _ := splitRow(name); key == Code+".*.text" || key == ATC {
 		for i, r := range text {
 			if r >= 'A' && r <= 'Z' || r >= 'a' && r <= 'z' {
 				out = append(out, text[:i]+string(r+1)+text[i+1:])

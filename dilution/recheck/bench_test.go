@@ -11,7 +11,7 @@ func bench(b *testing.B, labelOnly bool) {
 	s := newTruth(1)
 	if labelOnly {
 		keep := map[string]bool{ContainerAmount: true, ContainerVolume: true, Method: true, DrugVolume: true, DrugStep: true, DiluentVolume: true, FinalVolume: true, AmountInSyringe: true,
-			Concentration: true, Prepared: true, PreparedOffset: true, UseHours: true, UseBy: true, UseByOffset: true, ATC: true, Serial: true, Code: true}
+			Concentration: true, Prepared: true, PreparedOffset: true, UseHours: true, UseBy: true, UseByOffset: true, ATC: true, Serial: true, "code.1.text": true}
 		var figures []Figure
 		for _, f := range s.Figures {
 			if keep[f.Name] {

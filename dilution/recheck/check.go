@@ -52,6 +52,7 @@ func Check(s Stated) (Passed, error) {
 // A check is the work on one Stated.
 type check struct {
 	syringe string
+	drug    string
 	names   []string            // in the order in which they were first stated
 	texts   map[string]string   // name to printed text
 	papers  map[string][]string // name to the papers it stands on
@@ -70,6 +71,7 @@ type check struct {
 func newCheck(s Stated) *check {
 	c := &check{
 		syringe: s.Syringe,
+		drug:    s.Drug,
 		texts:   map[string]string{},
 		papers:  map[string][]string{},
 		asked:   map[string][]string{},
@@ -131,7 +133,7 @@ func (c *check) honoured(name, text string) *objection {
 		return nil
 	}
 	switch name {
-	case AmountInSyringe, Concentration, ContainerCount, Age, Sex, Prepared, UseHours:
+	case AmountInSyringe, Concentration, ContainerCount, Age, Sex, Prepared, UseHours, Ref:
 		return nil
 	case UseBy, EmptyAt:
 		return sameMoment(c.asked[name][0], text)

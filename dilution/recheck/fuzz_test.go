@@ -52,7 +52,7 @@ func FuzzQuantity(f *testing.F) {
 func FuzzCheck(f *testing.F) {
 	f.Add("[[drug]]\nname = \"x\"\n[[drug.presentation]]\nid = \"a\"\namount = \"1 mg\"\n", ContainerAmount, "1 mg")
 	f.Add("", Row(Ladder, 3, "rate"), "1 mL/h")
-	f.Add("[[drug]]\nname = 'x'", Code, "(91)N01AX07(92)261202073000001003(93)2mg/mL")
+	f.Add("[[drug]]\nname = 'x'", Row(Code, 1, "text"), "(91)N01AX07(92)261202073000001003(93)2mg/mL")
 	f.Fuzz(func(t *testing.T, record, name, text string) {
 		s := Stated{Syringe: "f", Drug: "x", Presentation: "a", Record: []byte(record), Figures: []Figure{{"label", name, text}}, Asked: []Figure{{"order", name, text}}}
 		passed, err := Check(s)

@@ -217,12 +217,12 @@ func TestMissingPartners(t *testing.T) {
 		Prepared:        {UseBy, EmptyAt},
 		PreparedOffset:  {UseBy, EmptyAt},
 		UseHours:        {UseBy},
-		UseBy:           {UseHours, UseByOffset, Code},
+		UseBy:           {UseHours, UseByOffset, "code.1.text", "code.2.text"},
 		RunTime:         {EmptyAt},
-		Serial:          {Code},
-		ATC:             {Code},
+		Serial:          {"code.1.text", "code.2.text"},
+		ATC:             {"code.1.text"},
 		Method:          {FinalVolume, IntervalPercent},
-		Code:            {Serial, ATC},
+		"code.1.text":   {Serial, ATC},
 	}
 	for seed := int64(40); seed < 43; seed++ {
 		for name, faults := range needed {

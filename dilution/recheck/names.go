@@ -27,7 +27,7 @@ func splitRow(name string) (string, int) {
 
 func isTable(word string) bool {
 	switch word {
-	case Ladder, Slip, Said, Bound:
+	case Ladder, Slip, Said, Bound, Code:
 		return true
 	}
 	return false
@@ -72,7 +72,8 @@ func allRules() map[string]rule {
 		Slip + ".*.kind": slipKind, Slip + ".*.rate": measured(slipRate),
 
 		Prepared: prepared, PreparedOffset: preparedOffset, UseHours: useHours, UseBy: useBy, UseByOffset: useByOffset,
-		Code: code, ATC: atc, Serial: serial, Typed: typedOnly, DoseRounding: typedOnly, RateRounding: typedOnly, Stock: stock,
+		Code + ".*.text": code, ATC: atc, Serial: serial, Ref: ref, FormularyDigest: typedOnly,
+		ProductNumber: typedOnly, ProductDrug: typedOnly, ProductConcentration: typedOnly, ProductVolume: typedOnly, Typed: typedOnly, DoseRounding: typedOnly, RateRounding: typedOnly, Stock: stock,
 
 		DrugWanted: measured(drugWanted), DrugMoved: drugMoved, DoseWanted: measured(doseWanted), DoseMoved: doseMoved,
 		StartFlow: measured(startFlow), StartMoved: startMoved,

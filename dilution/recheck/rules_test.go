@@ -212,17 +212,18 @@ func TestRunTimeWords(t *testing.T) {
 	}
 }
 
-// The code repeats its four facts in GS1 company-internal identifiers 91 to 93.
+// The code repeats its facts in GS1 company-internal identifiers 91 to 95.
 func TestCode(t *testing.T) {
 	build := func(concentration, code string) Stated {
 		return stated(t, "amount = \"20 mg\"\nvolume = \"10 mL\"\n",
-			"atc = N01AX07\nmethod = neat\nfinal.volume = 10 mL\ndrug.step = 0.5 mL",
+			"atc = N01AX07\nmethod = neat\nfinal.volume = 10 mL\ndrug.step = 0.5 mL\nformulary.digest = 7a83c0d1e4f5",
 			`container.amount = 20 mg
 container.volume = 10 mL
 method = neat
 drug.volume = 10 mL
 drug.step = 0.5 mL
 final.volume = 10 mL
+amount = 20 mg
 concentration = `+concentration+`
 prepared = 01 Dec 2026 07:30
 prepared.offset = +00:00
@@ -231,7 +232,16 @@ use.by = 02 Dec 2026 07:30
 use.by.offset = +00:00
 atc = N01AX07
 serial = 00001003
-code = `+code)
+code.1.text = `+code)
+	}
+	const full = "(91)N01AX07(92)261202073000001003(93)2mg/mL(94)20mg(95)7a83c0d1"
+	agrees(t, "the full form", build("2 mg/mL", full))
+	for _, wrong := range []string{
+		strings.Replace(full, "(94)20mg", "(94)2mg", 1), strings.Replace(full, "(94)20mg", "(94)20ug", 1), strings.Replace(full, "(94)20mg", "(94)20mg/mL", 1),
+		strings.Replace(full, "7a83c0d1", "7a83c0d2", 1), strings.Replace(full, "7a83c0d1", "7a83c0d1e", 1), strings.Replace(full, "(94)20mg", "", 1),
+		full + "(96)1mg/mL", "(01)09521234000006(7003)2612020730(10)70836235(21)00001003",
+	} {
+		disagreesAt(t, wrong, build("2 mg/mL", wrong), "code.1.text")
 	}
 	agrees(t, "milligrams", build("2 mg/mL", "(91)N01AX07(92)261202073000001003(93)2mg/mL"))
 	agrees(t, "the same in micrograms", build("2 mg/mL", "(91)N01AX07(92)261202073000001003(93)2000ug/mL"))
@@ -241,7 +251,66 @@ code = `+code)
 		"(91)N01AX07(92)261202073000001003(93)2 mg/mL", "(91)N01AX07(92)261202073000001003(93)2.0mg/mL", "(91)N01AX07(92)261202073000001003(93)02mg/mL",
 		"(91)N01AX07(92)261202073000001003(93)2mg/mL(10)A", "(92)261202073000001003(91)N01AX07(93)2mg/mL", "", "(91)",
 	} {
-		disagreesAt(t, wrong, build("2 mg/mL", wrong), Code)
+		disagreesAt(t, wrong, build("2 mg/mL", wrong), "code.1.text")
+	}
+}
+
+// A site's own number must be the typed one, with a check digit that fits, and
+// stand for this drug at this concentration in this volume. 952 is the GS1
+// prefix for demonstrations and examples.
+func TestProductCode(t *testing.T) {
+	const (
+		asked = "number = 9521234000006\ndrug = Invented\nconcentration = 2 mg/mL\nvolume = 10 mL"
+		good  = "(01)09521234000006(7003)2612020730(10)70836235(21)00001003"
+		full  = good + "(91)N01AX07(93)2mg/mL(94)20mg(95)7a83c0d1"
+	)
+	build := func(product, code string) Stated {
+		lines := ""
+		for _, l := range strings.Split(product, "\n") {
+			if l != "" {
+				lines += "\nproduct." + l
+			}
+		}
+		return stated(t, "amount = \"20 mg\"\nvolume = \"10 mL\"\n",
+			"atc = N01AX07\nmethod = neat\nfinal.volume = 10 mL\ndrug.step = 0.5 mL\nref = 70836235\nformulary.digest = 7a83c0d1e4f5"+lines,
+			`container.amount = 20 mg
+container.volume = 10 mL
+method = neat
+drug.volume = 10 mL
+drug.step = 0.5 mL
+final.volume = 10 mL
+amount = 20 mg
+concentration = 2 mg/mL
+prepared = 01 Dec 2026 07:30
+prepared.offset = +00:00
+use.hours = 24 h
+use.by = 02 Dec 2026 07:30
+use.by.offset = +00:00
+atc = N01AX07
+serial = 00001003
+ref = 70836235
+code.1.text = `+full+`
+code.2.text = `+code)
+	}
+	agrees(t, "number", build(asked, good))
+	agrees(t, "without the run", build(asked, "(01)09521234000006(7003)2612020730(21)00001003"))
+	agrees(t, "typed with 14 digits", build(strings.Replace(asked, "952", "0952", 1), good))
+	agrees(t, "typed as a mixture", build(strings.Replace(asked, "2 mg/mL", "20 mg in 10 mL", 1), good))
+	agrees(t, "typed per 5 mL", build(strings.Replace(asked, "2 mg/mL", "10 mg/5 mL", 1), good))
+	agrees(t, "typed in per cent", build(strings.Replace(asked, "2 mg/mL", "0.2 %", 1), good))
+	for _, wrong := range []string{
+		strings.Replace(good, "09521234000006", "09521234000013", 1), strings.Replace(good, "2612020730", "2612020731", 1),
+		strings.Replace(good, "70836235", "70836236", 1), strings.Replace(good, "00001003", "00001004", 1),
+		strings.Replace(good, "(10)70836235(21)00001003", "(21)00001003(10)70836235", 1), "(01)09521234000006",
+		"(91)N01AX07(92)261202073000001003(93)2mg/mL",
+	} {
+		disagreesAt(t, wrong, build(asked, wrong), "code.2.text")
+	}
+	for _, other := range []string{
+		strings.Replace(asked, "Invented", "other", 1), strings.Replace(asked, "2 mg/mL", "3 mg/mL", 1), strings.Replace(asked, "10 mL", "20 mL", 1),
+		strings.Replace(asked, "9521234000006", "9521234000007", 1), "",
+	} {
+		disagreesAt(t, other, build(other, strings.Replace(good, "00006", map[bool]string{true: "00007", false: "00006"}[strings.Contains(other, "00007")], 1)), "code.2.text")
 	}
 }
 

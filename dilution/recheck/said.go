@@ -66,15 +66,18 @@ func (c *check) allKnown() *known {
 	k := &known{words: map[string]bool{}}
 	for _, name := range c.names {
 		switch key, _ := splitRow(name); key {
-		case Said + ".*.text", Bound + ".*.text", Code, Slip + ".*.rate":
+		case Said + ".*.text", Bound + ".*.text", Code + ".*.text", Ref, Slip + ".*.rate":
 			// A slip's rate is wrong by design; no sentence may take it.
 		default:
 			c.learnFigure(k, c.texts[name])
 		}
 	}
 	for name, texts := range c.asked {
-		if key, _ := splitRow(name); key == Said+".*.text" || key == Bound+".*.text" {
+		switch key, _ := splitRow(name); key {
+		case Said + ".*.text", Bound + ".*.text":
 			continue // what a sentence was to say confirms no figure in it
+		case Ref, FormularyDigest, ProductNumber, ProductConcentration, ProductVolume:
+			continue // these are for the barcode alone
 		}
 		for _, text := range texts {
 			k.learn(text)

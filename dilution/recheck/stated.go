@@ -41,8 +41,8 @@ type Figure struct {
 // concentration, drug.volume, container.count, a final.volume drawn neat, or a
 // dose alone. ladder.N.dose is compared where it was asked. prepared,
 // prepared.offset, use.hours and use.by.offset are confirmed by use.by or else
-// must be asked; atc by the drug's line atc in the record, by code or by Asked;
-// serial by code or by Asked.
+// must be asked; atc by the drug's line atc in the record, by code.1 or by Asked;
+// serial by code.1 or by Asked.
 type Stated struct {
 	Syringe      string
 	Drug         string
@@ -132,10 +132,10 @@ const (
 	UseBy          = "use.by"          // prepared + use.hours, absolute hours (R18)
 	UseByOffset    = "use.by.offset"
 
-	// The barcode, in human-readable form, and the facts it must repeat.
-	Code   = "code"   // "(91)N01AX07(92)261202073000001003(93)2mg/mL"
+	// What the barcode must repeat.
 	ATC    = "atc"    // "N01AX07"
 	Serial = "serial" // eight digits
+	Ref    = "ref"    // short name of the run, as asked
 
 	// Stock is the name of the blank labels, as typed; where it is printed, or a
 	// sentence repeats it, it must be in Asked.
@@ -198,9 +198,22 @@ const (
 //	ladder.N.delivered  the dose rate that this pump rate gives
 //	slip.N.kind         "per minute for per hour", "per hour for per minute", "ten times", "a tenth", "pounds for kilograms"
 //	slip.N.rate         the pump rate that this slip would show, half up to the step, from the exact start dose
+//	code.N.text         a form of the barcode in human-readable form, the fullest first; every part is held against what it repeats
 const (
 	Ladder = "ladder"
 	Slip   = "slip"
+	Code   = "code"
+)
+
+// What stands behind the barcode, in Asked only; no figure has these names. The
+// number is the site's own for this preparation, with the drug, concentration
+// and volume that it stands for.
+const (
+	FormularyDigest      = "formulary.digest"
+	ProductNumber        = "product.number"
+	ProductDrug          = "product.drug"
+	ProductConcentration = "product.concentration"
+	ProductVolume        = "product.volume"
 )
 
 // Names whose sums are not written yet: [Knows] tells which of them have one. A

@@ -511,24 +511,55 @@ func (p *truth) times() {
 	p.code(until)
 }
 
+// code makes both forms of the barcode from what is printed, and in one plan of
+// three those that begin with a number of the site's own. 952 is the GS1 prefix
+// for demonstrations and examples; its check digit, worked by hand, is 6.
 func (p *truth) code(until time.Time) {
-	var conc string
+	conc, amount, volume := p.printed(Concentration), p.printed(AmountInSyringe), p.printed(FinalVolume)
+	serial := p.printed(Serial)
+	p.ask(FormularyDigest, "7a83c0d1e4f5")
+	p.both(Ref, "70836235")
+	stamp := until.Format("0601021504")
+	full := "(91)N01AX07(92)" + stamp + serial + "(93)" + codeText(conc) + "(94)" + codeText(amount) + "(95)7a83c0d1"
+	short := "(91)N01AX07(92)" + stamp + serial + "(93)" + codeText(conc)
+	if p.r.Intn(3) == 0 {
+		p.ask(ProductNumber, "9521234000006")
+		p.ask(ProductDrug, "Invented")
+		p.ask(ProductConcentration, strings.ReplaceAll(conc, ",", ""))
+		p.ask(ProductVolume, strings.ReplaceAll(volume, ",", ""))
+		short = "(01)09521234000006(7003)" + stamp + "(10)70836235(21)" + serial
+		full = short + "(91)N01AX07(93)" + codeText(conc) + "(94)" + codeText(amount) + "(95)7a83c0d1"
+	}
+	p.print(Row(Code, 1, "text"), full)
+	p.print(Row(Code, 2, "text"), short)
+	p.out = append(p.out, Figure{Paper: "another label", Name: Row(Code, 1, "text"), Text: full}, Figure{Paper: "another label", Name: Concentration, Text: conc})
+}
+
+// printed is the text of a figure that was printed before.
+func (p *truth) printed(name string) string {
 	for _, f := range p.out {
-		if f.Name == Concentration {
-			conc = f.Text
+		if f.Name == name {
+			return f.Text
 		}
 	}
-	number, u, _ := strings.Cut(conc, " ")
-	u = strings.TrimSuffix(u, "/mL")
+	return ""
+}
+
+// codeText is a printed amount or concentration in the signs of the code.
+func codeText(figure string) string {
+	number, u, _ := strings.Cut(figure, " ")
+	u, per, _ := strings.Cut(u, "/")
+	if per != "" {
+		per = "/" + per
+	}
 	value := decimalOf(strings.ReplaceAll(number, ",", ""))
-	words := map[string]string{"mg": "mg", "micrograms": "ug", "nanograms": "ng", "units": "unit", "mmol": "mmol"}
+	words := map[string]string{
+		"g": "g", "mg": "mg", "microgram": "ug", "micrograms": "ug", "nanogram": "ng", "nanograms": "ng",
+		"unit": "unit", "units": "unit", "mmol": "mmol", "micromol": "umol",
+	}
 	word, ok := words[u]
 	if !ok {
-		value = quo(value, rat(1000, 1))
-		word = map[string]string{"milliunits": "unit", "micromol": "mmol"}[u]
+		value, word = quo(value, rat(1000, 1)), map[string]string{"milliunit": "unit", "milliunits": "unit"}[u]
 	}
-	serial := p.out[len(p.out)-1].Text
-	text := "(91)N01AX07(92)" + until.Format("0601021504") + serial + "(93)" + plain(value) + word + "/mL"
-	p.print(Code, text)
-	p.out = append(p.out, Figure{Paper: "another label", Name: Code, Text: text}, Figure{Paper: "another label", Name: Concentration, Text: conc})
+	return plain(value) + word + per
 }

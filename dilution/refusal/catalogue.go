@@ -14,6 +14,7 @@ const (
 	Measuring  Family = "measuring"  // barrels, bags, pumps
 	Times      Family = "times"      // use-by and expiry
 	Papers     Family = "papers"     // labels and sheets
+	Barcodes   Family = "barcodes"   // scanned codes
 	Routes     Family = "routes"     // the program's check of itself
 )
 
@@ -43,7 +44,7 @@ func All() []Entry {
 	var all []Entry
 	for _, part := range [][]Entry{
 		quantityEntries(), requestEntries(), fileEntries(), patientEntries(),
-		choiceEntries(), limitEntries(), measuringEntries(), shelfEntries(), paperEntries(),
+		choiceEntries(), limitEntries(), measuringEntries(), shelfEntries(), paperEntries(), barcodeEntries(),
 	} {
 		all = append(all, part...)
 	}

@@ -40,6 +40,7 @@ func fileEntries() []Entry {
 		stops(KeyConflict, Files, "", "Two keys say different things, or limits are out of order."),
 		stops(ValueWrongType, Files, "", "A value is a number, date or table where a text is needed, or the other way round."),
 		stops(ValueUnknown, Files, "", "A value is not one of those that the key may have."),
+		stops(ProductNumber, Files, "", "A trade item number (GTIN) has a wrong check digit or length, or is none of a company's own."),
 		stops(TimeMalformed, Files, "R18", "A date, a time or a time zone cannot be read, or does not exist in that zone."),
 		stops(SourceNowhere, Files, "R13", "A source of the formulary does not say where it holds."),
 		stops(ContentsUnlike, Files, "R13", "The name of an ampoule or vial and what the record says is in it do not agree."),

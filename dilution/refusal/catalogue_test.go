@@ -85,7 +85,7 @@ func TestCodeNames(t *testing.T) {
 func TestEntriesAreWhole(t *testing.T) {
 	rule := regexp.MustCompile(`^R([1-9]|1[0-9])$`)
 	families := map[Family]bool{Quantities: true, Requests: true, Files: true, Patients: true, Choices: true,
-		Limits: true, Measuring: true, Times: true, Papers: true, Routes: true}
+		Limits: true, Measuring: true, Times: true, Papers: true, Barcodes: true, Routes: true}
 	used := map[Family]bool{}
 	for _, e := range All() {
 		if !strings.HasSuffix(e.Says, ".") || strings.Count(e.Says, ". ") > 0 || len(e.Says) < 20 || len(e.Says) > 120 {
@@ -95,7 +95,7 @@ func TestEntriesAreWhole(t *testing.T) {
 			t.Errorf("%s: got rule %q, want R1 to R19 or none", e.Code, e.Rule)
 		}
 		if !families[e.Family] {
-			t.Errorf("%s: the family %q is not one of the ten", e.Code, e.Family)
+			t.Errorf("%s: the family %q is not one of the eleven", e.Code, e.Family)
 		}
 		used[e.Family] = true
 		if e.Refuses != e.May(Refuse) || e.Cautions != e.May(Caution) || !e.Refuses && !e.Cautions || e.May(0) {

@@ -46,6 +46,7 @@ const (
 	NothingToMake    Code = "nothing-to-make"
 	SyringesMany     Code = "too-many-syringes"
 	SyringeNumber    Code = "syringe-number-unknown"
+	ProductNumber    Code = "product-number-wrong"
 )
 
 // Faults of a patient.
@@ -87,6 +88,7 @@ const (
 	DoseBelowSoft          Code = "dose-below-usual"
 	DoseBelowHard          Code = "dose-below-hard-limit"
 	DoseAboveTotal         Code = "dose-above-absolute-maximum"
+	OneWeightOnly          Code = "mixture-for-one-weight"
 	RateAboveHard          Code = "dose-rate-above-hard-limit"
 	RateAboveSoft          Code = "dose-rate-above-soft-limit"
 	RateAboveUsual         Code = "dose-rate-above-usual"
@@ -106,6 +108,8 @@ const (
 	ExpiredPresentation    Code = "presentation-expired"
 	UseByUnknown           Code = "use-by-unknown"
 	NegligibleDisplacement Code = "displacement-negligible"
+	PairNever              Code = "pair-never-in-one-syringe"
+	PairNotListed          Code = "pair-not-listed"
 	PreservedNeuraxial     Code = "preserved-near-nerves"
 	DoseAboveFirst         Code = "dose-above-first-maximum"
 	DoseAboveDay           Code = "dose-above-day-maximum"
@@ -148,6 +152,25 @@ const (
 	DeadSpaceCounts   Code = "dead-space-counts"
 	HoursNotReached   Code = "hours-not-reached"
 	MadeForOneWeight  Code = "made-for-one-weight"
+)
+
+// Faults of a scanned code.
+const (
+	CodeEmpty       Code = "barcode-empty"
+	CodeForeign     Code = "barcode-foreign"
+	CodeIdentifier  Code = "barcode-identifier-unknown"
+	CodeLength      Code = "barcode-length-wrong"
+	CodeSign        Code = "barcode-sign-wrong"
+	CodeCheckDigit  Code = "barcode-check-digit-wrong"
+	CodeMoment      Code = "barcode-date-impossible"
+	CodePairing     Code = "barcode-pairing-wrong"
+	CodeRepeated    Code = "barcode-identifier-repeated"
+	CodeContent     Code = "barcode-content-unknown"
+	CodeSeparator   Code = "barcode-separator-lost"
+	CodeRunTogether Code = "barcode-maybe-run-together"
+	CodePast        Code = "barcode-past-use-by"
+	CodeDrug        Code = "barcode-drug-unknown"
+	CodeFormulary   Code = "barcode-other-formulary"
 )
 
 // Faults of paper.

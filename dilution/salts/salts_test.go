@@ -101,6 +101,8 @@ func TestMolarMassesOfReference(t *testing.T) {
 		"morphine sulfate pentahydrate": "758.833", "ketamine hydrochloride": "274.185",
 		"lidocaine hydrochloride monohydrate": "288.816", "bupivacaine hydrochloride monohydrate": "342.908",
 		"dexmedetomidine hydrochloride": "236.743", "atropine sulfate monohydrate": "694.837",
+		"suxamethonium chloride dihydrate": "397.334", "ropivacaine hydrochloride monohydrate": "328.881",
+		"cisatracurium besilate": "1243.487", "aminophylline dihydrate": "456.464",
 	}
 	for name, printed := range want {
 		s, ok := Find(name)
@@ -209,6 +211,8 @@ func TestSaltAndBase(t *testing.T) {
 		{"noradrenaline acid tartrate monohydrate", "2", "1.0", 1},
 		{"dobutamine hydrochloride", "1.12", "1.00", 2},
 		{"adrenaline acid tartrate", "1.8", "0.99", 2}, // BP 2012: 0.9 to 1.1 mg/mL of base
+		{"aminophylline dihydrate", "127", "100", 0},   // University of Zurich, veterinary drug compendium
+		{"cisatracurium besilate", "2.68", "2", 0},     // 2 mg/mL as cation, sum of atomic weights
 	} {
 		a, _ := quantity.ParseAmount(c.mg + " mg")
 		s := mustFind(t, c.salt)
@@ -262,6 +266,9 @@ func TestPharmacopoeialMasses(t *testing.T) {
 		{"phenylephrine hydrochloride", "203.67", "University of Zurich, veterinary drug compendium"},
 		{"potassium dihydrogen phosphate", "136.1", "intensive-care teaching text: 1.361 g in 10 mL is 1 mmol/mL"},
 		{"glucose monohydrate", "198.17", "US product labels"},
+		{"suxamethonium chloride dihydrate", "397.34", "United States Pharmacopeia 2025"},
+		{"aminophylline dihydrate", "456.46", "United States Pharmacopeia 2025"},
+		{"cisatracurium besilate", "1243.49", "US prescribing information, atracurium"},
 	} {
 		want, _ := new(big.Rat).SetString(c.mass)
 		off := new(big.Rat).Sub(mustFind(t, c.salt).GramsPerMole(), want)

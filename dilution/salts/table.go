@@ -19,6 +19,9 @@ const (
 	labelDopamine       = "US prescribing information, dopamine: C8H11NO2 with HCl, 189.64; 80 mg is 64.6 mg of base"
 	zurichPhenylephrine = "University of Zurich, veterinary drug compendium, phenylephrine: base C9H13NO2, 167.207; hydrochloride C9H14ClNO2, 203.67"
 	icuPhosphate        = "intensive-care teaching text, potassium dihydrogen phosphate: 1.361 g in 10 mL is 1 mmol/mL of potassium and of phosphate"
+	uspSuxamethonium    = "United States Pharmacopeia 2025, Succinylcholine Chloride: C14H30Cl2N2O4 361.31, with 2 H2O 397.34"
+	uspAminophylline    = "United States Pharmacopeia 2025, Aminophylline: C16H24N10O4 with 2 H2O, 456.46"
+	labelAtracurium     = "US prescribing information, atracurium, of which cisatracurium is one isomer: C65H82N2O18S2, 1243.49"
 	bpAdrenaline        = "British Pharmacopoeia 2012, Adrenaline Injection: acid tartrate 0.18 % holds 0.09 to 0.11 % of base"
 )
 
@@ -66,5 +69,9 @@ func table() []Salt {
 		{name: "bupivacaine hydrochloride monohydrate", formula: "C18H28N2O.HCl.H2O", molar: 34290800, base: "bupivacaine", baseFormula: "C18H28N2O", baseMolar: 28843500, baseCount: 1},
 		{name: "dexmedetomidine hydrochloride", formula: "C13H16N2.HCl", molar: 23674300, base: "dexmedetomidine", baseFormula: "C13H16N2", baseMolar: 20028500, baseCount: 1},
 		{name: "atropine sulfate monohydrate", formula: "2C17H23NO3.H2SO4.H2O", molar: 69483700, base: "atropine", baseFormula: "C17H23NO3", baseMolar: 28937500, baseCount: 2, checked: uspAtropine},
+		{name: "suxamethonium chloride dihydrate", formula: "C14H30Cl2N2O4.2H2O", molar: 39733400, base: "suxamethonium chloride, anhydrous", baseFormula: "C14H30Cl2N2O4", baseMolar: 36130400, baseCount: 1, checked: uspSuxamethonium},
+		{name: "ropivacaine hydrochloride monohydrate", formula: "C17H26N2O.HCl.H2O", molar: 32888100, base: "ropivacaine hydrochloride, anhydrous", baseFormula: "C17H26N2O.HCl", baseMolar: 31086600, baseCount: 1},
+		{name: "cisatracurium besilate", formula: "C53H72N2O12.2C6H5O3S", molar: 124348700, base: "cisatracurium cation", baseFormula: "C53H72N2O12", baseMolar: 92916100, baseCount: 1, checked: labelAtracurium},
+		{name: "aminophylline dihydrate", formula: "2C7H8N4O2.C2H8N2.2H2O", molar: 45646400, base: "theophylline", baseFormula: "C7H8N4O2", baseMolar: 18016700, baseCount: 2, checked: uspAminophylline},
 	}
 }

@@ -1,12 +1,17 @@
-// Package gs1 writes and reads GS1 element strings for the barcode of a label:
-// which application identifiers there are, what their values may hold, where a
-// separator must stand, and how the whole reads for a person.
+// Package gs1 writes and reads GS1 element strings for the barcode of a label
+// or a pack: which application identifiers there are, what their values may
+// hold, which need or exclude one another, where a separator must stand, and
+// how the whole reads for a person.
 //
-// Source of the rules: GS1 syntax dictionary, 2026-07-27 (Apache-2.0), entries
-// 01, 10, 17, 21, 7003 and 91 to 99; GS1 General Specifications, figure of the
-// 82 signs. Only these identifiers are known here. 91 to 99 are for a
+// Source of the rules: the GS1 Barcode Syntax Dictionary (Apache-2.0), copied
+// into dictionary/ and turned into a table by go generate. 91 to 99 are for a
 // company's own use, may stand alone and mean nothing outside it; no number is
 // invented under 01.
+//
+// Lengths, signs, check digits, days, times, needs and exclusions are judged.
+// Lists of countries, currencies, packages and media, coupons, bank accounts,
+// places on the globe and company prefixes are not (see unjudged): no medicine's
+// code hangs on them.
 package gs1
 
 import (
@@ -22,35 +27,9 @@ const Separator = 0xE8
 // An Element is one application identifier with its value.
 type Element struct{ AI, Value string }
 
-// A rule says what one identifier may hold.
-type rule struct {
-	shortest, longest int
-	digits            bool // digits only, else the 82 signs
-	separated         bool // needs a separator when something follows
-	needsGTIN         bool // only beside 01
-	more              func(value string) error
-}
-
-// ruleOf is the table of identifiers.
-func ruleOf(ai string) (rule, bool) {
-	switch ai {
-	case "01":
-		return rule{shortest: 14, longest: 14, digits: true, more: checkGTIN}, true
-	case "10", "21":
-		return rule{shortest: 1, longest: 20, separated: true, needsGTIN: true}, true
-	case "17":
-		return rule{shortest: 6, longest: 6, digits: true, needsGTIN: true, more: checkDate}, true
-	case "7003":
-		return rule{shortest: 10, longest: 10, digits: true, separated: true, needsGTIN: true, more: checkMoment}, true
-	case "91", "92", "93", "94", "95", "96", "97", "98", "99":
-		return rule{shortest: 1, longest: 90, separated: true}, true
-	}
-	return rule{}, false
-}
-
 // Encode checks the elements and gives the bytes for the symbol, with the
 // leading Separator and those between, and the human-readable form, in which
-// each identifier stands in parentheses. Errors name the identifier.
+// each identifier stands in parentheses. Its error is a Fault.
 func Encode(elements []Element) (symbol []byte, hri string, err error) {
 	if err := Check(elements); err != nil {
 		return nil, "", err
@@ -58,29 +37,27 @@ func Encode(elements []Element) (symbol []byte, hri string, err error) {
 	symbol = []byte{Separator}
 	var read strings.Builder
 	for i, e := range elements {
-		r, _ := ruleOf(e.AI) // known, or Check had refused it
 		symbol = append(symbol, e.AI+e.Value...)
-		if r.separated && i < len(elements)-1 {
+		if i < len(elements)-1 && !find(e.AI).predefined { // known, or Check had refused it
 			symbol = append(symbol, Separator)
 		}
 		fmt.Fprintf(&read, "(%s)%s", e.AI, e.Value)
 	}
 	// A value may hold parentheses; one that reads like an identifier would
 	// make the human-readable form say something else than the symbol.
-	again := split(read.String())
-	if len(again) != len(elements) {
-		return nil, "", fmt.Errorf("got a value that reads like an identifier in %q, want one that does not", read.String())
+	if again := split(read.String()); len(again) != len(elements) {
+		return nil, "", Fault{Kind: Sign, Got: fmt.Sprintf("a value that reads like an identifier in %q", read.String()), Want: "one that does not"}
 	}
 	return symbol, read.String(), nil
 }
 
 // Parse takes the human-readable form apart and checks it as Encode does. It
 // wants exactly what Encode writes: no blanks, nothing before the first
-// identifier.
+// identifier. Its error is a Fault.
 func Parse(hri string) ([]Element, error) {
 	elements := split(hri)
 	if len(elements) == 0 {
-		return nil, fmt.Errorf("got %q, want an identifier in parentheses first", hri)
+		return nil, Fault{Kind: Foreign, Got: fmt.Sprintf("%q", hri), Want: "an identifier in parentheses first"}
 	}
 	if err := Check(elements); err != nil {
 		return nil, err
@@ -88,8 +65,8 @@ func Parse(hri string) ([]Element, error) {
 	return elements, nil
 }
 
-// split cuts at every known identifier in parentheses; nil when the text does
-// not begin with one.
+// split cuts at every two to four digits in parentheses; nil when the text does
+// not begin with them.
 func split(hri string) []Element {
 	var out []Element
 	for len(hri) > 0 {
@@ -108,70 +85,125 @@ func split(hri string) []Element {
 	return out
 }
 
-// leading is the known identifier in parentheses with which s begins.
+// leading is the identifier in parentheses with which s begins.
 func leading(s string) string {
-	for _, n := range []int{2, 4} {
-		if len(s) >= n+2 && s[0] == '(' && s[n+1] == ')' {
-			if _, ok := ruleOf(s[1 : n+1]); ok {
-				return s[1 : n+1]
-			}
-		}
+	if s == "" || s[0] != '(' {
+		return ""
 	}
-	return ""
+	end := 1
+	for end < len(s) && end <= 4 && numeric.holds(rune(s[end])) {
+		end++
+	}
+	if end < 3 || end == len(s) || s[end] != ')' {
+		return ""
+	}
+	return s[1:end]
 }
 
-// Check says what is wrong with the elements, nil if nothing is: identifiers
-// known and each once, values of the right length and signs, and those that
-// describe a trade item only beside its number (01).
+// Check is the first thing that is wrong with the elements, as a Fault; nil if
+// nothing is.
 func Check(elements []Element) error {
-	if len(elements) == 0 {
-		return fmt.Errorf("got no element, want one or more")
-	}
-	seen := map[string]bool{}
-	for _, e := range elements {
-		if seen[e.AI] {
-			return fmt.Errorf("(%s): got it twice, want it once", e.AI)
-		}
-		seen[e.AI] = true
-	}
-	for _, e := range elements {
-		r, ok := ruleOf(e.AI)
-		if !ok {
-			return fmt.Errorf("got identifier %q, want one of 01 10 17 21 7003 91 to 99", e.AI)
-		}
-		if err := r.check(e.Value); err != nil {
-			return fmt.Errorf("(%s): %w", e.AI, err)
-		}
-		if r.needsGTIN && !seen["01"] {
-			return fmt.Errorf("(%s): got no (01) beside it, want one: it describes a trade item", e.AI)
-		}
+	if faults := Faults(elements); len(faults) > 0 {
+		return faults[0]
 	}
 	return nil
 }
 
-func (r rule) check(value string) error {
-	if len(value) < r.shortest || len(value) > r.longest {
-		return fmt.Errorf("got %q of %d signs, want %d to %d", value, len(value), r.shortest, r.longest)
+// Faults is everything that is wrong with the elements: identifiers known and
+// each once, values of the right length and signs, with the right check digit
+// and days that exist, and each identifier beside those that it needs and none
+// that it excludes.
+func Faults(elements []Element) []Fault {
+	if len(elements) == 0 {
+		return []Fault{{Kind: Empty, Got: "no element", Want: "one or more"}}
 	}
-	for _, c := range value {
-		if r.digits && (c < '0' || c > '9') {
-			return fmt.Errorf("got %q in %q, want digits", c, value)
+	var out []Fault
+	for i, e := range elements {
+		for _, f := range e.faults(elements[:i], elements) {
+			f.element = i
+			out = append(out, f)
 		}
-		if !inSet(c) {
-			return fmt.Errorf("got %q in %q, want one of the 82 signs", c, value)
-		}
 	}
-	if r.more == nil {
-		return nil
-	}
-	return r.more(value)
+	return out
 }
 
-// inSet says whether c is one of the 82 signs that a value may hold.
-func inSet(c rune) bool {
-	switch {
-	case c >= '0' && c <= '9', c >= 'A' && c <= 'Z', c >= 'a' && c <= 'z':
-		return true
+// faults is what is wrong with e after the elements before it, among all.
+func (e Element) faults(before, all []Element) []Fault {
+	for _, b := range before {
+		if b.AI == e.AI {
+			return []Fault{{Kind: Repeated, AI: e.AI, Got: "it twice", Want: "it once", offset: -1}}
+		}
 	}
-	return c != 0 && strings.ContainsRune(`!"%&'()*+,-./:;<=>?_`, c)
+	rule := find(e.AI)
+	if rule == nil {
+		return []Fault{{Kind: Unknown, AI: e.AI, Got: fmt.Sprintf("the identifier %q", e.AI), Want: "one of the GS1 dictionary, such as 01, 10, 17, 21 or 91 to 99", offset: -1}}
+	}
+	out := rule.faults(e)
+	for _, need := range rule.requires {
+		if !met(all, need) {
+			out = append(out, Fault{Kind: Pairing, AI: e.AI, Got: "it alone", Want: "beside it " + inWords(need), offset: -1})
+		}
+	}
+	for _, pattern := range rule.excludes {
+		for _, other := range all {
+			if other.AI != e.AI && matches(other.AI, pattern) {
+				out = append(out, Fault{Kind: Pairing, AI: e.AI, Got: "(" + other.AI + ") beside it", Want: "one of the two", offset: -1})
+			}
+		}
+	}
+	return out
+}
+
+// inWords is a requirement for reading: "(01), or (02)", "(01) and (21)".
+func inWords(need string) string {
+	return "(" + strings.NewReplacer("+", ") and (", ",", "), or (").Replace(need) + ")"
+}
+
+// faults is what is wrong with the value of e by itself.
+func (r *entry) faults(e Element) []Fault {
+	shortest, longest := r.span()
+	signs := []rune(e.Value)
+	if n := len(signs); n < shortest || n > longest {
+		return []Fault{r.lengthFault(e, n, shortest, longest)}
+	}
+	at := 0
+	for _, p := range r.parts {
+		if p.optional && at == len(signs) {
+			break
+		}
+		end := min(at+p.longest, len(signs))
+		if end-at < p.shortest {
+			return []Fault{r.lengthFault(e, len(signs), shortest, longest)}
+		}
+		if f := p.fault(signs[at:end]); f != nil {
+			f.AI, f.offset = e.AI, f.offset+at
+			return []Fault{*f}
+		}
+		at = end
+	}
+	return nil
+}
+
+func (r *entry) lengthFault(e Element, got, shortest, longest int) Fault {
+	want := fmt.Sprintf("%d to %d", shortest, longest)
+	if shortest == longest {
+		want = fmt.Sprint(shortest)
+	}
+	return Fault{Kind: Length, AI: e.AI, Got: fmt.Sprintf("%q of %d signs", e.Value, got), Want: want, offset: min(got, longest)}
+}
+
+// fault is what is wrong with a piece of a value; its offset counts from the
+// piece.
+func (p component) fault(signs []rune) *Fault {
+	for i, c := range signs {
+		if !p.set.holds(c) {
+			return &Fault{Kind: Sign, Got: fmt.Sprintf("%q", c), Want: p.set.String(), offset: i}
+		}
+	}
+	for _, name := range p.checks {
+		if f := judge(name, string(signs)); f != nil {
+			return f
+		}
+	}
+	return nil
 }

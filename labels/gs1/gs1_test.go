@@ -7,8 +7,8 @@ import (
 	"drawup/labels/gs1"
 )
 
-// The two numbers are the check digit tests of the GS1 syntax dictionary,
-// 2026-07-27.
+// Two of the check digit tests of the GS1 syntax dictionary; all of them stand
+// in TestCheckDigits.
 func TestCheckDigit(t *testing.T) {
 	good := []gs1.Element{{AI: "01", Value: "12345678901231"}}
 	bad := []gs1.Element{{AI: "01", Value: "12345678901232"}}
@@ -69,7 +69,7 @@ func TestRefused(t *testing.T) {
 		elements []gs1.Element
 	}{
 		{"nothing", nil},
-		{"unknown identifier", []gs1.Element{{"90", "1"}}},
+		{"unknown identifier", []gs1.Element{{"04", "1"}}},
 		{"identifier twice", []gs1.Element{{"91", "1"}, {"91", "2"}}},
 		{"too short", []gs1.Element{{"01", "1234567890123"}}},
 		{"too long", []gs1.Element{{"91", strings.Repeat("A", 91)}}},
@@ -98,7 +98,7 @@ func TestRefused(t *testing.T) {
 			t.Errorf("%s: got %q, want an error", c.why, hri)
 		}
 	}
-	for _, text := range []string{"", "91ABC", "x(91)A", "(91)", " (91)A", "(90)A", "(91)A(21)B"} {
+	for _, text := range []string{"", "91ABC", "x(91)A", "(91)", " (91)A", "(04)A", "(91)A(21)B", "(91)A(04)B"} {
 		if got, err := gs1.Parse(text); err == nil {
 			t.Errorf("%q: got %v, want an error", text, got)
 		}

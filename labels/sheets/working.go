@@ -41,7 +41,11 @@ func (s scribe) working() []labels.Line {
 		add(s.say("dose: {dose} times {dose.weight} is {dose.amount}"))
 	}
 	if s.p.Presentation.Powder() {
-		add(s.say("volume after mixing: {powder.added} added and {powder.displaced} taken by the powder make {container.volume}"))
+		if s.f.Has("powder.displaced") {
+			add(s.say("volume after mixing: {powder.added} added and {powder.displaced} taken by the powder make {container.volume}"))
+		} else {
+			add(s.say("volume after mixing: {powder.added} added give {container.volume}, as the label says"))
+		}
 	}
 	add(s.say("strength: {container.amount} in {container.volume} is {strength}" + s.likeTheRest()))
 	add(s.say("drug volume: {drug.wanted}, read as {drug.volume} on the {drug.barrel} barrel in steps of {drug.step}; rounding: {drug.moved}"))

@@ -44,16 +44,26 @@ func meet[T any](a, b formulary.Rule[T]) bool {
 	return begins && ends
 }
 
+// reach is how many times the maximum by weight the maximum in all may be: for
+// children it is often the adult's.
+func reach(kg int64) int64 {
+	if kg < adult {
+		return 10
+	}
+	return 3
+}
+
 // maxima wants first doses, repeats, days and courses to rise: a day holds at
 // least one usual dose, a course at least a day's least.
 func (c *check) maxima() {
 	for _, r := range c.drug.Doses {
-		low, high := doseOf(r.UsualLow), doseOf(r.UsualHigh)
+		kg := weightOf(r)
+		low, high := doseOf(r.UsualLow, kg), doseOf(r.UsualHigh, kg)
 		for _, m := range []struct {
 			f    formulary.Figure[quantity.Dose]
 			what string
 		}{{r.FirstMax, "highest first dose"}, {r.RepeatMax, "highest repeat"}, {r.DayMax, "maximum of a day"}, {r.CourseMax, "maximum of a course"}} {
-			x := doseOf(m.f)
+			x := doseOf(m.f, kg)
 			if x.value == nil {
 				continue
 			}
@@ -66,12 +76,13 @@ func (c *check) maxima() {
 		}
 	}
 	for _, m := range c.drug.LocalMaxima {
-		x := doseOf(m.PerKg)
-		if s, ok := sizeOf(c.drug.Class); ok && x.value != nil && !s.dose.holds(perKilogram(x.value)) {
+		kg := weightOf(formulary.Rule[quantity.Dose]{AgeFrom: m.AgeFrom, AgeTo: m.AgeTo})
+		x := doseOf(m.PerKg, kg)
+		if s, ok := sizeOf(c.drug.Class); ok && x.value != nil && !s.dose.holds(perKilogram(x.value, kg)) {
 			c.find(refusal.Implausible, x.pos, "per_kg", x.f, s.dose.low+" to "+s.dose.high+" mg/kg", "the maximum is far from those of the class %s; is a unit wrong?", c.drug.Class)
 		}
-		if x.value != nil && m.Total.Given() && m.Total.Value.Kind() == c.drug.Kind && (apart(x.value, m.Total.Value.Rat(), 3) || apart(m.Total.Value.Rat(), x.value, 3)) {
-			c.find(refusal.Implausible, m.Total.Pos, "total", m.Total.Text, "within a factor of three of the maximum by weight at 70 kg, "+x.f, "the two maxima do not fit each other")
+		if x.value != nil && m.Total.Given() && m.Total.Value.Kind() == c.drug.Kind && (apart(x.value, m.Total.Value.Rat(), reach(kg)) || apart(m.Total.Value.Rat(), x.value, 3)) {
+			c.find(refusal.Implausible, m.Total.Pos, "total", m.Total.Text, "within a factor of three of the maximum by weight, "+x.f+", of a child of ten", "the two maxima do not fit each other")
 		}
 	}
 }

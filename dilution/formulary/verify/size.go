@@ -1,9 +1,11 @@
 package verify
 
 import (
+	"fmt"
 	"math/big"
 	"slices"
 
+	"drawup/dilution/body"
 	"drawup/dilution/formulary"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
@@ -28,7 +30,7 @@ type size struct{ strength, dose, rate span }
 // sizeOf is by class code.
 func sizeOf(class string) (size, bool) {
 	s, ok := map[string]size{
-		"IND":   {span{"0.5", "200"}, span{"0.03", "30"}, span{"0.01", "40"}},
+		"IND":   {span{"0.5", "200"}, span{"0.01", "30"}, span{"0.01", "40"}},
 		"BZD":   {span{"0.01", "20"}, span{"0.001", "3"}, span{"0.001", "3"}},
 		"BZD-A": {span{"0.005", "1"}, span{"0.0003", "0.2"}, span{"0.0003", "0.2"}},
 		"NMB":   {span{"0.02", "50"}, span{"0.005", "4"}, span{"0.01", "5"}},
@@ -46,9 +48,31 @@ func sizeOf(class string) (size, bool) {
 	return s, ok
 }
 
-// weight is the body for which an absolute dose is compared, and weights those
-// for which a dose per kg is compared with containers.
-const weight = 70
+// adult is the body of an adult, in kg, for which a figure per kg and an
+// absolute one are compared.
+const adult = 70
+
+// weightOf is the body, in kg, of those whom a row is for: round figures of our
+// own between the ends of its ages.
+func weightOf[T any](r formulary.Rule[T]) int64 {
+	for _, b := range []struct {
+		years  int64
+		weight int64
+	}{{1, 5}, {6, 14}, {12, 25}, {16, 45}} {
+		if r.AgeTo.Given() && !ageOf(b.years).Less(r.AgeTo) {
+			return b.weight
+		}
+	}
+	return adult
+}
+
+func ageOf(years int64) body.Age {
+	a, err := body.ParseAge(fmt.Sprintf("%d years", years))
+	if err != nil {
+		panic(err) // the four texts above are fixed
+	}
+	return a
+}
 
 // strengths bounds what is in the container by its class.
 func (c *check) strengths() {
@@ -110,7 +134,7 @@ func apart(low, high *big.Rat, n int64) bool {
 	return new(big.Rat).Mul(low, big.NewRat(n, 1)).Cmp(high) < 0
 }
 
-// A scaled figure is one limit, counted for the body of [weight].
+// A scaled figure is one limit, counted for the body that its row is for.
 type scaled struct {
 	f     string
 	value *big.Rat // mg, or mg/h
@@ -122,13 +146,14 @@ type scaled struct {
 func (c *check) doses() {
 	s, known := sizeOf(c.drug.Class)
 	for _, r := range c.drug.Doses {
-		low, high := doseOf(r.UsualLow), doseOf(r.UsualHigh)
-		hardLow, soft, hard := doseOf(r.HardLow), doseOf(r.SoftHigh), doseOf(r.HardHigh)
+		kg := weightOf(r)
+		low, high := doseOf(r.UsualLow, kg), doseOf(r.UsualHigh, kg)
+		hardLow, soft, hard := doseOf(r.HardLow, kg), doseOf(r.SoftHigh, kg), doseOf(r.HardHigh, kg)
 		for _, x := range []scaled{hardLow, low, high, soft, hard} {
 			if x.value == nil {
 				continue
 			}
-			if known && c.drug.Kind == quantity.ByMass && !s.dose.holds(perKilogram(x.value)) {
+			if known && c.drug.Kind == quantity.ByMass && !s.dose.holds(perKilogram(x.value, kg)) {
 				c.find(refusal.Implausible, x.pos, "dose", x.f, s.dose.low+" to "+s.dose.high+" mg/kg",
 					"the dose of %s for %s is far from those of the class %s; is a unit wrong?", x.f, r.For, c.drug.Class)
 			}
@@ -138,32 +163,32 @@ func (c *check) doses() {
 		if r.TotalMax.Given() && high.value != nil && r.TotalMax.Value.Kind() == c.drug.Kind {
 			most := scaled{r.TotalMax.Text, r.TotalMax.Value.Rat(), r.TotalMax.Pos}
 			if apart(most.value, high.value, 4) || apart(high.value, most.value, 8) {
-				c.find(refusal.Implausible, most.pos, "total_max", most.f, "from a quarter to eight times the usual highest for 70 kg, "+high.f,
+				c.find(refusal.Implausible, most.pos, "total_max", most.f, "from a quarter to eight times the usual highest for the body it is for, "+high.f,
 					"the absolute maximum of %s for %s and its usual highest of %s do not fit", most.f, r.For, high.f)
 			}
 		}
 	}
 }
 
-func doseOf(f formulary.Figure[quantity.Dose]) scaled {
+func doseOf(f formulary.Figure[quantity.Dose], kg int64) scaled {
 	if !f.Given() {
 		return scaled{}
 	}
-	return scaled{f.Text, whole(f.Value.Rat(), f.Value.Basis()), f.Pos}
+	return scaled{f.Text, whole(f.Value.Rat(), f.Value.Basis(), kg), f.Pos}
 }
 
-func rateOf(f formulary.Figure[quantity.DoseRate]) scaled {
+func rateOf(f formulary.Figure[quantity.DoseRate], kg int64) scaled {
 	if !f.Given() {
 		return scaled{}
 	}
-	return scaled{f.Text, whole(f.Value.Rat(), f.Value.Basis()), f.Pos}
+	return scaled{f.Text, whole(f.Value.Rat(), f.Value.Basis(), kg), f.Pos}
 }
 
-// whole counts a figure for the body of [weight] and 1.8 m².
-func whole(r *big.Rat, b quantity.Basis) *big.Rat {
+// whole counts a figure for a body of so many kg, and 1.8 m².
+func whole(r *big.Rat, b quantity.Basis, kg int64) *big.Rat {
 	switch b {
 	case quantity.PerKilogram:
-		return r.Mul(r, big.NewRat(weight, 1))
+		return r.Mul(r, big.NewRat(kg, 1))
 	case quantity.PerSquareMetre:
 		return r.Mul(r, big.NewRat(9, 5))
 	case quantity.Absolute:
@@ -171,7 +196,7 @@ func whole(r *big.Rat, b quantity.Basis) *big.Rat {
 	return r
 }
 
-func perKilogram(r *big.Rat) *big.Rat { return new(big.Rat).Quo(r, big.NewRat(weight, 1)) }
+func perKilogram(r *big.Rat, kg int64) *big.Rat { return new(big.Rat).Quo(r, big.NewRat(kg, 1)) }
 
 // inContainers wants a dose to be between a five-hundredth of the smallest
 // container and thirty of the largest.
@@ -211,13 +236,14 @@ func (c *check) steps(purpose string, row []scaled) {
 func (c *check) rates() {
 	s, known := sizeOf(c.drug.Class)
 	for _, r := range c.drug.Rates {
-		low, high := rateOf(r.UsualLow), rateOf(r.UsualHigh)
-		hardLow, soft, hard := rateOf(r.HardLow), rateOf(r.SoftHigh), rateOf(r.HardHigh)
+		kg := weightOf(r)
+		low, high := rateOf(r.UsualLow, kg), rateOf(r.UsualHigh, kg)
+		hardLow, soft, hard := rateOf(r.HardLow, kg), rateOf(r.SoftHigh, kg), rateOf(r.HardHigh, kg)
 		for _, x := range []scaled{hardLow, low, high, soft, hard} {
 			if x.value == nil {
 				continue
 			}
-			if known && c.drug.Kind == quantity.ByMass && !s.rate.holds(perKilogram(x.value)) {
+			if known && c.drug.Kind == quantity.ByMass && !s.rate.holds(perKilogram(x.value, kg)) {
 				c.find(refusal.Implausible, x.pos, "rate", x.f, s.rate.low+" to "+s.rate.high+" mg/kg/h",
 					"the dose rate of %s for %s is far from those of the class %s; is a unit wrong?", x.f, r.For, c.drug.Class)
 			}

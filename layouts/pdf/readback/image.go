@@ -2,7 +2,9 @@ package readback
 
 import (
 	"image"
+	"image/color"
 	"image/draw"
+	"math"
 	"strings"
 
 	"drawup/layouts/ink"
@@ -29,6 +31,74 @@ func (f *File) Render(page, dpi int) *image.RGBA {
 func Crop(img image.Image, x, y, w, h ink.Micrometre, dpi int) *image.RGBA {
 	box := image.Rect(pixel(x, dpi), pixel(y, dpi), pixel(x+w, dpi)+1, pixel(y+h, dpi)+1)
 	return copied(img, box.Intersect(img.Bounds()))
+}
+
+// Blurred is a picture out of focus: every pixel is the mean of those within a
+// distance, twice over.
+func Blurred(img *image.RGBA, distance int) *image.RGBA {
+	for range 2 {
+		img = mean(mean(img, distance, 0), 0, distance)
+	}
+	return img
+}
+
+// mean takes the mean of the pixels within dx along a row and dy along a column.
+func mean(img *image.RGBA, dx, dy int) *image.RGBA {
+	b := img.Bounds()
+	out := image.NewRGBA(b)
+	for y := b.Min.Y; y < b.Max.Y; y++ {
+		for x := b.Min.X; x < b.Max.X; x++ {
+			var r, g, bl, n int
+			for j := max(y-dy, b.Min.Y); j <= min(y+dy, b.Max.Y-1); j++ {
+				for i := max(x-dx, b.Min.X); i <= min(x+dx, b.Max.X-1); i++ {
+					c := img.RGBAAt(i, j)
+					r, g, bl, n = r+int(c.R), g+int(c.G), bl+int(c.B), n+1
+				}
+			}
+			out.SetRGBA(x, y, color.RGBA{uint8(r / n), uint8(g / n), uint8(bl / n), 255})
+		}
+	}
+	return out
+}
+
+// Framed is a picture with so many pixels of white around it.
+func Framed(img *image.RGBA, white int) *image.RGBA {
+	b := img.Bounds()
+	out := image.NewRGBA(image.Rect(0, 0, b.Dx()+2*white, b.Dy()+2*white))
+	draw.Draw(out, out.Bounds(), image.White, image.Point{}, draw.Src)
+	draw.Draw(out, b.Sub(b.Min).Add(image.Pt(white, white)), img, b.Min, draw.Src)
+	return out
+}
+
+// Turned is a picture turned about its middle, on white; each pixel is the mean
+// of the four that it falls between.
+func Turned(img *image.RGBA, degrees float64) *image.RGBA {
+	b := img.Bounds()
+	out := image.NewRGBA(image.Rect(0, 0, b.Dx(), b.Dy()))
+	sin, cos := math.Sincos(degrees * math.Pi / 180)
+	midX, midY := float64(b.Dx()-1)/2, float64(b.Dy()-1)/2
+	for y := range b.Dy() {
+		for x := range b.Dx() {
+			dx, dy := float64(x)-midX, float64(y)-midY
+			out.SetRGBA(x, y, between(img, midX+dx*cos+dy*sin, midY-dx*sin+dy*cos))
+		}
+	}
+	return out
+}
+
+// between is the colour at a place between pixels; white outside.
+func between(img *image.RGBA, x, y float64) color.RGBA {
+	left, top := math.Floor(x), math.Floor(y)
+	var sum [3]float64
+	for _, n := range [4][2]float64{{0, 0}, {1, 0}, {0, 1}, {1, 1}} {
+		share := (1 - math.Abs(x-left-n[0])) * (1 - math.Abs(y-top-n[1]))
+		c := color.RGBA{255, 255, 255, 255}
+		if p := image.Pt(int(left+n[0]), int(top+n[1])); p.In(img.Bounds()) {
+			c = img.RGBAAt(p.X, p.Y)
+		}
+		sum[0], sum[1], sum[2] = sum[0]+share*float64(c.R), sum[1]+share*float64(c.G), sum[2]+share*float64(c.B)
+	}
+	return color.RGBA{uint8(sum[0] + 0.5), uint8(sum[1] + 0.5), uint8(sum[2] + 0.5), 255}
 }
 
 // At returns the colour of a rendered page at a place on paper.
@@ -61,13 +131,14 @@ func DecodeDataMatrix(img image.Image) (string, error) {
 	if err == nil {
 		return text, nil
 	}
-	if text, again := decode(doubled(img)); again == nil {
+	if text, again := decode(Doubled(img)); again == nil {
 		return text, nil
 	}
 	return "", err
 }
 
-func doubled(img image.Image) image.Image {
+// Doubled shows every pixel twice each way.
+func Doubled(img image.Image) *image.RGBA {
 	b := img.Bounds()
 	out := image.NewRGBA(image.Rect(0, 0, 2*b.Dx(), 2*b.Dy()))
 	for y := range out.Bounds().Dy() {

@@ -1,0 +1,69 @@
+package formulary_test
+
+import (
+	"path/filepath"
+	"regexp"
+	"strings"
+	"testing"
+)
+
+// namesOnly are the drugs that are filed by name, code and class alone: no
+// text was found that states a presentation, so nothing of them can be planned.
+var namesOnly = []string{"articaine"}
+
+// A drug by name alone holds nothing that could be planned (rule R10).
+func TestNamesOnlyHoldNothing(t *testing.T) {
+	f := starter(t)
+	for _, n := range namesOnly {
+		d, _, ok := f.Find(n)
+		if !ok {
+			t.Errorf("%s is not filed", n)
+			continue
+		}
+		if len(d.Presentations)+len(d.Bounds)+len(d.Doses)+len(d.Rates)+len(d.Standards)+len(d.Stability)+len(d.LocalMaxima) > 0 {
+			t.Errorf("%s holds figures; take it out of the drugs by name alone", n)
+		}
+	}
+}
+
+// labelRules is the table of 126 drugs of the label rules: INN, code, class.
+const labelRules = "label-rules-5-2.tsv"
+
+// ATC codes and label classes against the tables of names: WHO index and
+// ISO 26825:2020, see testdata/formulary/README.md. A drug of the label rules
+// that is not filed yet is counted, any other is a fault.
+func TestCodesAndClasses(t *testing.T) {
+	f := starter(t)
+	shape := regexp.MustCompile(`^[A-Z]\d{2}[A-Z]{2}\d{2}$`)
+	files, err := filepath.Glob("../../testdata/formulary/names/*.tsv")
+	if err != nil {
+		t.Fatal(err)
+	}
+	seen := map[string]bool{}
+	var missing []string
+	for _, file := range files {
+		ruled := filepath.Base(file) == labelRules
+		list := table(t, file, 4)
+		if ruled && len(list) != 126 {
+			t.Fatalf("got %d drugs in the label rules, want 126", len(list))
+		}
+		for _, r := range list {
+			d, _, ok := f.Find(r[0])
+			switch {
+			case !ok && ruled:
+				missing = append(missing, r[0])
+			case !ok:
+				t.Errorf("%s is in %s and not in the formulary", r[0], file)
+			case !shape.MatchString(d.ATC) || d.ATC != r[1] || d.Class != r[2]:
+				t.Errorf("%s: got %s, class %s, want %s, class %s", d.Name, d.ATC, d.Class, r[1], r[2])
+			}
+			seen[d.Name] = true
+		}
+	}
+	t.Logf("%d of 126 drugs of the label rules are not filed: %s", len(missing), strings.Join(missing, ", "))
+	for _, d := range f.Drugs() {
+		if !seen[d.Name] {
+			t.Errorf("%s has no row in the tables of names", d.Name)
+		}
+	}
+}
