@@ -19,17 +19,18 @@ import (
 func mayImport() map[string][]string {
 	plan := []string{"dilution/body", "dilution/formulary", "dilution/order", "dilution/pump", "dilution/quantity",
 		"dilution/refusal", "dilution/syringe"}
-	said := append([]string{"dilution", "dilution/recheck", "labels/gs1"}, plan...)
+	said := append([]string{"dilution", "dilution/quantity/lint", "dilution/recheck", "labels/gs1"}, plan...)
 	return map[string][]string{
 		"cmd/drawup":                {"*"},
 		"dilution":                  plan,
 		"dilution/body":             {"dilution/quantity", "dilution/roots"},
 		"dilution/certainty":        {"dilution/quantity", "dilution/syringe"},
 		"dilution/formulary":        {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
-		"dilution/formulary/verify": {"dilution/body", "dilution/formulary", "dilution/quantity", "dilution/refusal", "dilution/salts"},
-		"dilution/order":            {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
+		"dilution/formulary/verify": {"dilution/body", "dilution/formulary", "dilution/quantity", "dilution/quantity/lint", "dilution/refusal", "dilution/salts"},
+		"dilution/order":            {"dilution/quantity", "dilution/quantity/lint", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
 		"dilution/pump":             {"dilution/quantity"},
 		"dilution/quantity":         {},
+		"dilution/quantity/lint":    {}, // judges the printer, so shares nothing with it
 		"dilution/recheck":          {}, // the second route shares nothing
 		"dilution/refusal":          {},
 		"dilution/roots":            {},

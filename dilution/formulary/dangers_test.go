@@ -211,7 +211,7 @@ func TestDangerSaidInWords(t *testing.T) {
 		{"atropine", "plastic", "Lewis and others, AANA J 1994: half lost in four days"},
 		{"clevidipine", "12 h", "handbook on injectable drugs, clevidipine"},
 		{"remimazolam", "overfill", "handbook on injectable drugs, remimazolam"},
-		{"teicoplanin", "draw 3.0 mL", "handbook on injectable drugs, teicoplanin: less out than in"},
+		{"teicoplanin", "draw 3 mL", "handbook on injectable drugs, teicoplanin: less out than in"},
 		{"esketamine", "half", "machine-written page, ketamine: not to be swapped"},
 		{"noradrenaline", "base", "UK SmPC, noradrenaline"},
 		{"carbetocin", "once", "UK drug monograph, carbetocin"},

@@ -25,7 +25,7 @@ func Check(f *formulary.Formulary) refusal.List {
 		}
 		for _, step := range []func(){
 			c.jurisdictions, c.words, c.names, c.contents, c.powders, c.assays, c.factors, c.strengths, c.bounds, c.mixtures,
-			c.doses, c.rates, c.overlaps, c.maxima, c.courses, c.standards, c.stability, c.times,
+			c.doses, c.rates, c.overlaps, c.maxima, c.courses, c.standards, c.stability, c.times, c.wording,
 		} {
 			step()
 		}
