@@ -22,9 +22,9 @@ func (w *work) draw(t target) bool {
 		return false
 	}
 	m.DrugWanted, m.DrugReading, m.DrugVolume = need, r, r.Volume
-	n, err := m.DrugVolume.Containers(w.plan.Presentation.Volume)
-	if err != nil {
-		return w.fault(err, t.field, t.pos)
+	n, ok := w.open(t)
+	if !ok {
+		return false
 	}
 	m.Containers = n
 	if n > mostContainers {
@@ -91,7 +91,7 @@ func (w *work) tooLittle(v quantity.Volume, field string, pos refusal.Pos) refus
 		Code: refusal.VolumeBelowMeasurable, Field: field,
 		Got: s.Volume(v), Want: "at least " + s.Volume(w.site.smallest),
 		Rule: "R8", Pos: pos,
-		Message: fmt.Sprintf("%s of %s is too little to measure", s.Volume(v), w.plan.Presentation.ID),
+		Message: fmt.Sprintf("%s of %q is too little to measure", s.Volume(v), w.plan.Presentation.ID),
 		Remedy:  w.tooSmallRemedy(),
 	}
 }

@@ -114,7 +114,6 @@ func examples() map[refusal.Code]func(*testing.T) string {
 		refusal.LabelsTogether:   preparing(two, "order.toml"),
 		refusal.OutputUnwritable: preparing(soundOrder, "order.toml", "--out", "order.toml"),
 		refusal.GlyphMissing:     preparing(strings.Replace(soundOrder, "A. Example", "A. 薬", 1), "order.toml"),
-		refusal.TextTooLong:      preparing(strings.Replace(soundOrder, "theatre 2", strings.Repeat("overlong", 40), 1), "order.toml"),
 		refusal.LabelTooSmall:    preparing(infusion, "order.toml", "--infusion-stock", "roll-40x15"),
 		refusal.LabelMoved:       preparing(strings.Replace(soundOrder, "suxamethonium\"\npresentation = \"ampoule 100 mg in 2 mL\"\ndose = \"1 mg/kg", "neostigmine with glycopyrronium\"\npresentation = \"ampoule 2.5 mg with 0.5 mg in 1 mL\"\ndose = \"2.5 mg", 1), "order.toml", "--stock", "roll-40x15"),
 		refusal.OneWeightOnly:    told("mix", "--each", "1 microgram/kg/min", "--weight", "6 kg", "--rule", "three"),
@@ -139,6 +138,7 @@ func examples() map[refusal.Code]func(*testing.T) string {
 		refusal.CodeDrug:         told("read", "(01)09521234000006"),
 		refusal.CodeFormulary:    told("read", "(91)N01AX07(92)261201193000001003(93)2mg/mL(94)20mg(95)00000000"),
 		refusal.RateBelowHard:    belowHardLimit,
+		refusal.SearchCut:        seventyStrengths,
 	}
 }
 
@@ -211,6 +211,27 @@ func unproven(t *testing.T) string {
 	}
 	_, refused := layouts.Labels([]labels.Label{l}, layouts.Stocks()[0], []recheck.Passed{{}}, layouts.Options{})
 	return refused.Error()
+}
+
+// seventyStrengths plans from a shelf with more strengths of an invented drug than
+// are looked at.
+func seventyStrengths(t *testing.T) string {
+	form := "name = \"invented\"\nversion = \"1\"\n[sources.X]\ntitle = \"invented for a test\"\ngrade = \"A\"\njurisdiction = \"international\"\n" +
+		"[[drug]]\nname = \"sleepwell\"\natc = \"N01AX99\"\nclass = \"IND\"\ncounted = \"mass\"\n"
+	shelf := "[[barrel]]\nsize = \"50 mL\"\n"
+	for mg := range 70 {
+		id := fmt.Sprintf("ampoule %d mg in 1 mL", mg+1)
+		form += fmt.Sprintf("[[drug.presentation]]\nid = %q\ncontainer = \"ampoule\"\nform = \"solution\"\namount = \"%d mg\"\nvolume = \"1 mL\"\nsource = \"X\"\nuses = [\"bolus\"]\nneat = true\n", id, mg+1)
+		shelf += fmt.Sprintf("[[stock]]\ndrug = \"sleepwell\"\npresentation = %q\n", id)
+	}
+	f, faults := formulary.Read(formulary.Text{Name: "invented.toml", Data: []byte(form)})
+	s, more := order.ReadShelf("shelf.toml", []byte(shelf))
+	if faults.Refused() || more.Refused() {
+		t.Fatal(faults, more)
+	}
+	o, faults := order.Read("order.toml", []byte(strings.Replace(soundOrder, "drug = \"suxamethonium\"\npresentation = \"ampoule 100 mg in 2 mL\"\ndose = \"1 mg/kg\"", "drug = \"sleepwell\"\namount = \"20 mg\"", 1)))
+	_, reasons := dilution.Bench{Shelf: &s}.NewList(o, f, time.Date(2026, 12, 1, 7, 30, 0, 0, time.UTC), nil, faults)
+	return reasons.Error()
 }
 
 // belowHardLimit orders less than the lowest dose rate of an invented drug; no

@@ -16,6 +16,7 @@ func topics() []topic {
 		{"rounding", "where numbers are rounded and where not", helpRounding},
 		{"exit-codes", "what the program ends with", helpExitCodes},
 		{"cautions", "refusals and cautions, and how to read them", helpCautions},
+		{"shelf", "a file of what is stocked, and how the planner chooses from it", helpShelf},
 	}
 }
 
@@ -95,6 +96,8 @@ const helpPrepare = `drawup prepare: plan an order: sheets, labels, pump cards, 
   --mono                             for a printer without colours
   --formulary        my-site.toml    the site's own formulary files, over the starter
   --approval         approval.toml   who signed for it
+  --shelf            shelf.toml      what there is to make them from: see drawup help shelf
+  --explain                          what was chosen, why, and what else was weighed
   --json                             print plan.json in place of the table
 
 Everything is worked and placed before anything is written: a refusal leaves no
@@ -115,6 +118,7 @@ const helpLabel = `drawup label: one label, at the moment its syringe is filled
   --mono                             for a printer without colours
   --formulary        my-site.toml    the site's own formulary files, over the starter
   --approval         approval.toml   who signed for it
+  --shelf            shelf.toml      what there is to make it from; the one of drawup prepare
   --json                             print the plan of this syringe
 `
 
@@ -275,6 +279,8 @@ func helpText(name string) (string, bool) {
 		return helpLabel, true
 	case "formulary":
 		return helpFormulary, true
+	case "wording":
+		return wordingHelp(), true
 	case "read":
 		return helpRead, true
 	}

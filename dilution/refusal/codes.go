@@ -136,6 +136,24 @@ const (
 	RateSlow              Code = "rate-slow-start"
 )
 
+// Faults of a shelf, and of planning from it.
+const (
+	ShelfEmpty        Code = "shelf-empty"
+	BarrelNone        Code = "no-barrel-stocked"
+	BarrelOffStandard Code = "barrel-against-standard"
+	StockOtherDrug    Code = "presentation-of-another-drug"
+	NotStocked        Code = "presentation-not-stocked"
+	StockShort        Code = "stock-runs-short"
+	NoneStockedFits   Code = "no-stocked-presentation-fits"
+	DiluentNotStocked Code = "diluent-not-stocked"
+	SyringeNotForPump Code = "syringe-not-for-pump"
+	SearchCut         Code = "search-cut-short"
+	DilutedToMeasure  Code = "diluted-to-be-measured"
+	DeadSpaceCounts   Code = "dead-space-counts"
+	HoursNotReached   Code = "hours-not-reached"
+	MadeForOneWeight  Code = "made-for-one-weight"
+)
+
 // Faults of a scanned code.
 const (
 	CodeEmpty       Code = "barcode-empty"
@@ -163,6 +181,7 @@ const (
 	StockUnknown     Code = "stock-unknown"
 	GlyphMissing     Code = "glyph-missing"
 	TextTooLong      Code = "text-too-long"
+	TextMisread      Code = "text-misread"
 	SyringesLeftOut  Code = "syringes-left-out"
 	LimitsNotChecked Code = "limits-not-checked"
 	QuickCheck       Code = "quick-sum-checked"
