@@ -53,6 +53,7 @@ func decimal(t *rapid.T, label string) string {
 // Whatever is ordered: what is made balances exactly (rule R6), and volumes,
 // amounts and concentrations agree.
 func TestEveryPlanBalances(t *testing.T) {
+	t.Parallel()
 	f := starter(t)
 	made := 0
 	rapid.Check(t, func(t *rapid.T) {

@@ -161,6 +161,7 @@ func (s smallShelf) countings(strength int64) func(func([]int) bool) {
 // What the planner takes is never worse than the best of all ways, each looked
 // at, on small shelves; and it refuses only where there is no way.
 func TestPlannerAgainstAllWays(t *testing.T) {
+	t.Parallel()
 	f := inventedFormulary(t, 1, 3, 1, 2, 5, 10)
 	planned, refused, mixed := 0, 0, 0
 	rapid.Check(t, func(t *rapid.T) {

@@ -2,6 +2,7 @@ package dilution_test
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 	"testing"
 	"time"
@@ -75,6 +76,34 @@ func codesOf(t testing.TB, f *formulary.Formulary, patient, table, body string) 
 	t.Helper()
 	_, reasons := plan(t, f, session+patient+"\n[[patient."+table+"]]\n"+body)
 	return reasons.Refusals().Codes()
+}
+
+// eachAlone plans each body as the one syringe of an order of its own, and gives
+// its reasons. The bodies are read as one order, because reading is most of the
+// work; then each is planned by itself, so that sums over a patient's syringes
+// do not touch it.
+func eachAlone(t testing.TB, f *formulary.Formulary, patient, table string, bodies []string) []refusal.List {
+	t.Helper()
+	var out []refusal.List
+	for chunk := range slices.Chunk(bodies, 900) { // an order takes 999 syringes
+		var text strings.Builder
+		text.WriteString(session + patient)
+		for _, body := range chunk {
+			text.WriteString("\n[[patient." + table + "]]\n" + body)
+		}
+		o, faults := order.Read("order.toml", []byte(text.String()))
+		of := map[int][]order.Syringe{}
+		for _, s := range o.Syringes {
+			of[s.Number] = append(of[s.Number], s)
+		}
+		for i := range chunk {
+			alone := o
+			alone.Syringes = of[i+1]
+			_, reasons := dilution.NewList(alone, f, o.Session.Prepared.Value, nil, append(faults.Of(0), faults.Of(i+1)...))
+			out = append(out, reasons)
+		}
+	}
+	return out
 }
 
 // want compares what would be printed.

@@ -218,6 +218,7 @@ func planOne(s *order.Shelf, f *formulary.Formulary, y order.Syringe) (*dilution
 // Double the amount and the volume double what is drawn and added, and leave the
 // concentration as it is, wherever both stand on lines.
 func TestScaling(t *testing.T) {
+	t.Parallel()
 	f := inventedFormulary(t, 1, 2, 2, 5, 10)
 	compared := 0
 	rapid.Check(t, func(t *rapid.T) {
@@ -254,6 +255,7 @@ func sameStrength(a, b dilution.Plan) bool { return a.Mixture.Strength.Equal(b.M
 // The same order in mg, in micrograms and in grams gives the same plan: every
 // exact figure, every choice with its reason, every code.
 func TestUnitInvariance(t *testing.T) {
+	t.Parallel()
 	f := inventedFormulary(t, 1, 2, 2, 5, 10)
 	rapid.Check(t, func(t *rapid.T) {
 		r := rand.New(rand.NewPCG(rapid.Uint64().Draw(t, "seed"), 11))
@@ -355,6 +357,7 @@ func TestMonotoneLimits(t *testing.T) {
 
 // What can be measured under a stricter site can be measured under a looser one.
 func TestMonotoneSites(t *testing.T) {
+	t.Parallel()
 	f := inventedFormulary(t, 1, 2, 2, 5, 10)
 	rapid.Check(t, func(t *rapid.T) {
 		r := rand.New(rand.NewPCG(rapid.Uint64().Draw(t, "seed"), 13))

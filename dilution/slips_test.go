@@ -8,6 +8,7 @@ import (
 	"path/filepath"
 	"slices"
 	"strings"
+	"sync"
 	"testing"
 
 	"drawup/dilution/body"
@@ -51,18 +52,36 @@ func rowOf[T any](d formulary.Drug, use string, x formulary.Rule[T]) row {
 	return r
 }
 
-// rowsOf is every row of the formulary.
-func rowsOf(f *formulary.Formulary) []row {
+// rowsOf is every row of a drug.
+func rowsOf(d formulary.Drug) []row {
 	var out []row
-	for _, d := range f.Drugs() {
-		for _, x := range d.Doses {
-			out = append(out, rowOf(d, "bolus", x))
-		}
-		for _, x := range d.Rates {
-			out = append(out, rowOf(d, "infusion", x))
-		}
+	for _, x := range d.Doses {
+		out = append(out, rowOf(d, "bolus", x))
+	}
+	for _, x := range d.Rates {
+		out = append(out, rowOf(d, "infusion", x))
 	}
 	return out
+}
+
+// eachRow runs check for every row of the formulary, the drugs side by side.
+func eachRow(t *testing.T, check func(*testing.T, *formulary.Formulary, row)) {
+	f := starter(t)
+	rows := 0
+	t.Run("drugs", func(t *testing.T) {
+		for _, d := range f.Drugs() {
+			rows += len(rowsOf(d))
+			t.Run(d.Name, func(t *testing.T) {
+				t.Parallel()
+				for _, r := range rowsOf(d) {
+					check(t, f, r)
+				}
+			})
+		}
+	})
+	if rows < 450 {
+		t.Fatalf("got %d rows, want the whole starter formulary", rows)
+	}
 }
 
 // times multiplies the number at the head of a figure, "0.3 mg/kg", exactly.
@@ -173,6 +192,16 @@ func (r row) asked(way, figure string) string {
 	return way + key("dose", figure) + "\n"
 }
 
+// inEachWay asks for the figure in each way and gives the reasons.
+func (r row) inEachWay(t *testing.T, f *formulary.Formulary, patient, table string, ways []string, figure string) []refusal.List {
+	t.Helper()
+	var bodies []string
+	for _, way := range ways {
+		bodies = append(bodies, r.asked(way, figure))
+	}
+	return eachAlone(t, f, patient, table, bodies)
+}
+
 // limitCodes are the refusals that a stored limit gives.
 var limitCodes = []refusal.Code{refusal.SlipThousand, refusal.SlipTen, refusal.DoseAboveHard, refusal.DoseBelowHard, refusal.DoseAboveTotal,
 	refusal.RateAboveHard, refusal.RateBelowHard, refusal.SoftLimitNotSigned, refusal.FormularyBlank}
@@ -190,51 +219,58 @@ func (r row) slips(t *testing.T) []string {
 // Every slip is refused in every way in which the drug can be asked for, and
 // by the limits themselves in every way in which the dose is reached.
 func TestSlipsOnEveryStoredRange(t *testing.T) {
-	f := starter(t)
-	rows := rowsOf(f)
-	if len(rows) < 80 {
-		t.Fatalf("got %d rows, want the whole starter formulary", len(rows))
-	}
-	tried, never := 0, unmakeable(t)
-	for _, r := range rows {
+	never := unmakeable(t)
+	eachRow(t, func(t *testing.T, f *formulary.Formulary, r row) {
 		patient := fitting(t, r)[0]
 		table, ways := r.ways(t)
 		_, mute := never[r.String()]
 		for _, figure := range r.slips(t) {
 			reached := false
-			for _, way := range ways {
-				tried++
-				codes := codesOf(t, f, patient, table, r.asked(way, figure))
+			var open []string
+			for i, reasons := range r.inEachWay(t, f, patient, table, ways, figure) {
+				codes := reasons.Refusals().Codes()
 				limited := slices.ContainsFunc(codes, func(c refusal.Code) bool { return slices.Contains(limitCodes, c) })
 				reached = reached || limited
 				if len(codes) == 0 || !limited && !unmixed(codes) {
-					t.Errorf("%v: got %v for %s, want a refusal by a limit, as\n%s", r, codes, figure, way)
+					t.Errorf("%v: got %v for %s, want a refusal by a limit, as\n%s", r, codes, figure, ways[i])
+				}
+				if limited || !barred(codes) {
+					open = append(open, ways[i])
 				}
 			}
 			if reached == mute {
 				t.Errorf("%v: %s was held against a limit: %v; the test says that the row can be made: %v", r, figure, reached, !mute)
 			}
+			ways = open
 		}
-	}
-	t.Logf("%d rows, %d slips", len(rows), tried)
+	})
 }
 
 // Ten times the highest usual figure is refused unless somebody signs.
 func TestTenTimesTheUsual(t *testing.T) {
-	f := starter(t)
-	for _, r := range rowsOf(f) {
+	eachRow(t, func(t *testing.T, f *formulary.Formulary, r row) {
 		if r.usualHigh == "" {
-			continue
+			return
 		}
-		patient := fitting(t, r)[0]
 		table, ways := r.ways(t)
-		for _, way := range ways {
-			if len(codesOf(t, f, patient, table, r.asked(way, times(t, r.usualHigh, big.NewRat(10, 1))))) == 0 {
+		ten := times(t, r.usualHigh, big.NewRat(10, 1))
+		for _, reasons := range r.inEachWay(t, f, fitting(t, r)[0], table, ways, ten) {
+			if !reasons.Refused() {
 				t.Errorf("%v: %s: ten times it passes unsigned", r, r.usualHigh)
 				break
 			}
 		}
-	}
+	})
+}
+
+// barred reports a refusal in which the dose has no part: the presentation or
+// the mixture itself. The same way is refused for every other figure as well, so
+// it need not be tried with them.
+func barred(codes []refusal.Code) bool {
+	return slices.ContainsFunc(codes, func(c refusal.Code) bool {
+		return slices.Contains([]refusal.Code{refusal.DisplacementBlank, refusal.MustBeDiluted, refusal.DiluentMissing,
+			refusal.DiluentNotListed, refusal.ConcentrationTooHigh, refusal.ConcentrationTooLow, refusal.AgeOutside, refusal.RouteNotListed}, c)
+	})
 }
 
 // unmixed reports that the presentation or the mixture itself was refused, so
@@ -255,9 +291,9 @@ func unmixed(codes []refusal.Code) bool {
 // The usual figures of every row can be made in some way, unless the test says
 // why not.
 func TestUsualFiguresPass(t *testing.T) {
-	f := starter(t)
+	var lock sync.Mutex
 	used, never, small := map[string]bool{}, unmakeable(t), offTheScale(t)
-	for _, r := range rowsOf(f) {
+	eachRow(t, func(t *testing.T, f *formulary.Formulary, r row) {
 		for _, figure := range []string{r.usualLow, r.usualHigh} {
 			if figure == "" {
 				continue
@@ -271,7 +307,9 @@ func TestUsualFiguresPass(t *testing.T) {
 					why, excused = small[name]
 				}
 			}
+			lock.Lock()
 			used[name] = used[name] || excused
+			lock.Unlock()
 			switch made, codes := r.made(t, f, figure); {
 			case !made && !excused:
 				t.Errorf("%s %s cannot be made in any way: %v", r, figure, codes)
@@ -279,7 +317,7 @@ func TestUsualFiguresPass(t *testing.T) {
 				t.Errorf("%s %s can be made, though the test says: %s", r, figure, why)
 			}
 		}
-	}
+	})
 	for _, list := range []map[string]string{never, small} {
 		for name := range list {
 			if !used[name] {
@@ -351,21 +389,15 @@ func excused(t *testing.T, kind string) map[string]string {
 // A row without a lower figure cannot catch a slip downwards; every plan by it
 // says so.
 func TestRowsWithoutLowerFigureSaySo(t *testing.T) {
-	f := starter(t)
-	n := 0
-	for _, r := range rowsOf(f) {
+	eachRow(t, func(t *testing.T, f *formulary.Formulary, r row) {
 		if r.lowest() != "" {
-			continue
+			return
 		}
-		n++
-		patient := fitting(t, r)[0]
 		table, ways := r.ways(t)
-		for _, way := range ways {
-			_, reasons := plan(t, f, session+patient+"\n[[patient."+table+"]]\n"+r.asked(way, r.highest))
+		for _, reasons := range r.inEachWay(t, f, fitting(t, r)[0], table, ways, r.highest) {
 			if !reasons.Refused() && !slices.Contains(reasons.Cautions().Codes(), refusal.FormularyBlank) {
 				t.Errorf("%v: passes without a word that it was checked upwards only", r)
 			}
 		}
-	}
-	t.Logf("%d rows without a lower figure", n)
+	})
 }
