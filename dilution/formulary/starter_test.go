@@ -151,6 +151,28 @@ func TestIdentifiersAgreeWithContents(t *testing.T) {
 	}
 }
 
+// What comes out of a powder is a figure like any other: print shows it for the
+// signature, compare tells when it changed.
+func TestEntriesSayWhatIsObtained(t *testing.T) {
+	n := 0
+	for _, d := range starter(t).Drugs() {
+		for _, p := range d.Presentations {
+			if !p.Obtained {
+				continue
+			}
+			n++
+			if !slices.ContainsFunc(d.Entries(), func(e formulary.Entry) bool {
+				return e.Name == p.ID+": contents" && strings.HasSuffix(e.Text, "obtained "+p.Volume.Written())
+			}) {
+				t.Errorf("%s, %s: no entry says that %s are obtained", d.Name, p.ID, p.Volume.Written())
+			}
+		}
+	}
+	if n < 9 {
+		t.Errorf("got %d powders whose volume after mixing is stated", n)
+	}
+}
+
 // A pair stands once, whichever drug leads, and is allowed or forbidden, not both:
 // of two sources for one pair the second would never be read.
 func TestPairsStandOnce(t *testing.T) {
