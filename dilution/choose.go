@@ -69,7 +69,7 @@ func (w *work) choosePresentation() bool {
 				Got: p.ID, Want: "a presentation for " + w.use(),
 				Rule: "R10", Source: p.Source.Title,
 				Pos:     w.o.Presentation.Pos,
-				Message: fmt.Sprintf("%s of %s is not listed for use as %s", p.ID, d.Name, w.use()),
+				Message: fmt.Sprintf("%q of %s is not listed for use as %s", p.ID, d.Name, w.use()),
 				Remedy:  "use one of: " + joinOr(ids(w.usable())),
 			})
 		}
@@ -142,7 +142,7 @@ func (w *work) forThisAge() bool {
 		Code: refusal.AgeOutside, Field: "presentation",
 		Got: w.size.Age.String(), Want: "from " + p.AgeFrom.String(),
 		Rule: "R10", Source: p.Source.Title, Pos: w.o.Drug.Pos,
-		Message: fmt.Sprintf("%s of %s is for patients from %s", p.ID, w.plan.Drug.Name, p.AgeFrom),
+		Message: fmt.Sprintf("%q of %s is for patients from %s", p.ID, w.plan.Drug.Name, p.AgeFrom),
 		Remedy:  "take a presentation for this age",
 	})
 }
@@ -155,7 +155,7 @@ func (w *work) powderKnown() bool {
 			return w.refuse(refusal.Reason{
 				Code: refusal.FormularyBlank, Field: "add_fluids",
 				Want: "a fluid to mix the powder with", Rule: "R10", Source: p.Source.Title, Pos: w.o.Drug.Pos,
-				Message: fmt.Sprintf("the formulary does not say what the powder of %s is mixed with", p.ID),
+				Message: fmt.Sprintf("the formulary does not say what the powder of %q is mixed with", p.ID),
 				Remedy:  "add the fluid with its source to the formulary (whoever keeps it does that)",
 			})
 		}
@@ -173,7 +173,7 @@ func (w *work) powderKnown() bool {
 		Want: "a displacement volume, or a source that calls it negligible", Rule: "R7",
 		Pos: w.o.Drug.Pos,
 		Message: fmt.Sprintf(
-			"the formulary does not say how much volume the powder of %s takes, "+
+			"the formulary does not say how much volume the powder of %q takes, "+
 				"so no concentration can be worked out",
 			p.ID,
 		),

@@ -18,7 +18,7 @@ func (w *work) settleDiluent() bool {
 				Got: "undiluted", Want: joinOr(diluentNames(p.Diluents)),
 				Rule: "R10", Source: p.Source.Title,
 				Pos:     w.o.Pos,
-				Message: fmt.Sprintf("%s of %s must be diluted before use", p.ID, w.plan.Drug.Name),
+				Message: fmt.Sprintf("%q of %s must be diluted before use", p.ID, w.plan.Drug.Name),
 				Remedy:  "order a concentration and a volume",
 			})
 		}
@@ -59,7 +59,7 @@ func (w *work) diluentName() (string, bool) {
 			Code: refusal.FormularyBlank, Field: "diluent",
 			Want: "a listed diluent", Rule: "R10",
 			Source: p.Source.Title, Pos: w.o.Pos,
-			Message: fmt.Sprintf("the formulary lists no diluent for %s of %s: it may be used undiluted only",
+			Message: fmt.Sprintf("the formulary lists no diluent for %q of %s: it may be used undiluted only",
 				p.ID, w.plan.Drug.Name),
 			Remedy: "order it undiluted, or add a diluent with its source to the formulary " +
 				"(whoever keeps it does that)",
@@ -118,7 +118,7 @@ func (w *work) listedDiluent(name string) bool {
 		Got: name, Want: joinOr(diluentNames(p.Diluents)),
 		Rule: "R10", Source: p.Source.Title,
 		Pos: w.o.Diluent.Pos,
-		Message: fmt.Sprintf("the formulary does not list %s as a diluent for %s of %s",
+		Message: fmt.Sprintf("the formulary does not list %s as a diluent for %q of %s",
 			name, p.ID, w.plan.Drug.Name),
 		Remedy: w.diluentRemedy(),
 	})

@@ -91,7 +91,7 @@ func (w *work) tooLittle(v quantity.Volume, field string, pos refusal.Pos) refus
 		Code: refusal.VolumeBelowMeasurable, Field: field,
 		Got: s.Volume(v), Want: "at least " + s.Volume(w.site.smallest),
 		Rule: "R8", Pos: pos,
-		Message: fmt.Sprintf("%s of %s is too little to measure", s.Volume(v), w.plan.Presentation.ID),
+		Message: fmt.Sprintf("%s of %q is too little to measure", s.Volume(v), w.plan.Presentation.ID),
 		Remedy:  w.tooSmallRemedy(),
 	}
 }

@@ -121,7 +121,7 @@ func (w *work) chooseMethod(t target) bool {
 			Got:  s.Amount(t.amount) + " in " + s.Volume(t.volume),
 			Want: "at most " + s.Concentration(m.Strength), Rule: "R10",
 			Pos: t.pos, Source: w.plan.Presentation.Source.Title,
-			Message: fmt.Sprintf("%s already takes %s of %s, which is more than the final volume",
+			Message: fmt.Sprintf("%s already takes %s of %q, which is more than the final volume",
 				s.Amount(t.amount), s.Volume(need), w.plan.Presentation.ID),
 			Remedy: "order a larger volume, less drug, or a stronger presentation",
 		})

@@ -29,7 +29,7 @@ func (w *work) byThisRoute() bool {
 		Code: refusal.RouteNotListed, Field: "route",
 		Got: w.plan.Route, Want: joinOr(p.Routes),
 		Rule: "R10", Source: p.Source.Title, Pos: w.o.Pos,
-		Message: fmt.Sprintf("%s of %s is not for the route %q", p.ID, w.plan.Drug.Name, w.plan.Route),
+		Message: fmt.Sprintf("%q of %s is not for the route %q", p.ID, w.plan.Drug.Name, w.plan.Route),
 		Remedy:  "take another presentation, or check the route",
 	})
 }
@@ -44,7 +44,7 @@ func (w *work) inPump() bool {
 		Code: refusal.PresentationNotPump, Field: "presentation",
 		Got: p.ID, Want: "a presentation that may go into a pump",
 		Rule: "R10", Source: p.NotForPump.Source.Title, Pos: w.o.Pos,
-		Message: fmt.Sprintf("%s of %s may not go into a pump: %s", p.ID, w.plan.Drug.Name, p.NotForPump.Text),
+		Message: fmt.Sprintf("%q of %s may not go into a pump: %s", p.ID, w.plan.Drug.Name, p.NotForPump.Text),
 		Remedy:  "take another presentation",
 	})
 }
@@ -68,7 +68,7 @@ func (w *work) unpreserved() bool {
 		Code: refusal.PreservedNeuraxial, Field: "presentation",
 		Got: p.ID, Want: "a presentation without preservative",
 		Rule: "R11", Source: p.Preserved.Source.Title, Pos: w.o.Pos,
-		Message: fmt.Sprintf("%s of %s is preserved (%s) and must never be given by the route %q",
+		Message: fmt.Sprintf("%q of %s is preserved (%s) and must never be given by the route %q",
 			p.ID, w.plan.Drug.Name, p.Preserved.Text, w.plan.Route),
 		Remedy: "take a presentation without preservative; no setting passes this limit",
 	})

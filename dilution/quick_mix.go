@@ -148,7 +148,7 @@ func (w *work) strengthAgrees() bool {
 	}
 	return w.refuse(refusal.Reason{
 		Code: refusal.ContradictoryAmounts, Field: "presentation", Got: got, Want: p.ID, Rule: "R10", Source: p.Source.Title,
-		Message: fmt.Sprintf("%s and %s contradict each other", got, p.ID),
+		Message: fmt.Sprintf("%s and %q contradict each other", got, p.ID),
 		Remedy:  "give one of the two, as the pack in the hand states it",
 	})
 }
@@ -174,7 +174,7 @@ func (w *work) mixedAsStored() bool {
 		return w.refuse(refusal.Reason{
 			Code: refusal.DiluentNotListed, Field: "diluent", Got: q.Diluent, Want: joinOr(quoted(p.AddFluids)),
 			Rule: "R10", Source: p.Source.Title,
-			Message: fmt.Sprintf("the formulary does not list %s for mixing the powder of %s", q.Diluent, p.ID),
+			Message: fmt.Sprintf("the formulary does not list %s for mixing the powder of %q", q.Diluent, p.ID),
 			Remedy:  "use " + joinOr(quoted(p.AddFluids)),
 		})
 	}
@@ -186,7 +186,7 @@ func (w *work) mixedAsStored() bool {
 	return w.refuse(refusal.Reason{
 		Code: refusal.FormularyBlank, Field: "final volume", Got: s.Volume(q.Mix.Final), Want: s.Volume(want),
 		Rule: "R7", Source: p.Source.Title,
-		Message: fmt.Sprintf("the formulary mixes %d x %s with %s to %s; no other volume is on record",
+		Message: fmt.Sprintf("the formulary mixes %d x %q with %s to %s; no other volume is on record",
 			n, p.ID, s.Volume(p.Added.Times(n)), s.Volume(want)),
 		Remedy: "mix it so, then dilute; or compare the record with the pack in the hand",
 	})

@@ -44,7 +44,7 @@ const (
 	defaultStep      = "0.1 mL/h"
 	defaultBolus     = 4 * 60
 	defaultInfusion  = 24 * 60
-	defaultSource    = "default of this tool, unverified: 4 h for immediate use after USP <797> (2023), " +
+	defaultSource    = "default of this tool, unverified: 4 h for immediate use after US Pharmacopeia, chapter 797 (2023), " +
 		"24 h for infusions; set the site's own"
 )
 

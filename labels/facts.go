@@ -268,7 +268,7 @@ func (w *Facts) infusion(p dilution.Plan) {
 		{part.High, recheck.HighDose, recheck.HighRate},
 		{part.Limit, recheck.LimitDose, recheck.LimitRate},
 	} {
-		w.put(x.dose, s.DoseRate(x.set.Dose))
+		w.put(x.dose, inUnit(s, x.set.Dose, part.Start.Dose))
 		w.put(x.rate, s.FlowRate(x.set.Rate))
 	}
 	for i, rung := range part.Ladder {
@@ -308,6 +308,15 @@ func (w Facts) runs(p dilution.Plan) {
 	empty := p.Prepared.Add(time.Duration(minutes) * time.Minute)
 	w.put(recheck.EmptyAt, Moment(s, empty))
 	w.put(recheck.EmptyOffset, empty.Format("-07:00"))
+}
+
+// inUnit is a dose rate in the unit of the start's, so that a card shows one
+// unit throughout (rule N22); in its own where the two are counted unlike.
+func inUnit(s quantity.Style, d, start quantity.DoseRate) string {
+	if text := s.DoseRateIn(d, start.Unit()); text != "" {
+		return text
+	}
+	return s.DoseRate(d)
 }
 
 func (w Facts) times(p dilution.Plan) {

@@ -6,6 +6,7 @@ package labels
 import (
 	"strings"
 
+	"drawup/dilution/quantity/lint"
 	"drawup/dilution/recheck"
 )
 
@@ -37,6 +38,10 @@ func Words(text string) Line {
 	}
 	return Line{{Text: text}}
 }
+
+// Unbroken is a text of words in which a no-break blank ties each number to its
+// unit, so that no line ends between them (rule N26).
+func Unbroken(text string) string { return lint.Glue(text) }
 
 // Marks that a label carries when what stands behind it is not approved. They
 // are short because a label is small.

@@ -49,8 +49,9 @@ func Set(x, y ink.Micrometre, l labels.Line, f ink.Face, size ink.Micrometre, c 
 func Missing(text string, f ink.Face) []rune { return faceOf(f).Missing(text) }
 
 // Wrap breaks a line into rows no wider than width. It breaks only at blanks
-// in plain words, never inside a figure and never between a figure and what
-// stands next to it without a blank. It is false when a piece that may not be
+// in plain words, never inside a figure, never between a number and its unit in
+// words (rule N26) and never between a figure and what stands next to it
+// without a blank. It is false when a piece that may not be
 // broken is wider than width.
 func Wrap(l labels.Line, f ink.Face, size, width ink.Micrometre) ([]labels.Line, bool) {
 	var rows []labels.Line
@@ -83,7 +84,7 @@ func pieces(l labels.Line) []labels.Line {
 			now = append(now, c)
 			continue
 		}
-		for _, word := range strings.SplitAfter(c.Text, " ") {
+		for _, word := range strings.SplitAfter(labels.Unbroken(c.Text), " ") {
 			if word == "" {
 				continue
 			}

@@ -60,3 +60,18 @@ func TestLargest(t *testing.T) {
 		t.Errorf("got %d in 10 mm, want none", got)
 	}
 }
+
+// Rule N26: a number and its unit in words stay on one row, also in a text
+// that is no figure.
+func TestWrapKeepsNumberAndUnit(t *testing.T) {
+	line := labels.Words("give 250 mL over 24 h, then 0.5 micrograms/kg/min of it")
+	for width := ink.Micrometre(14_000); width < 60_000; width += 500 {
+		rows, ok := layouts.Wrap(line, ink.Regular, 3000, width)
+		for i, row := range rows {
+			text := row.Text()
+			if last := text[len(text)-1]; ok && i < len(rows)-1 && last >= '0' && last <= '9' {
+				t.Errorf("width %d: got a row that ends in a number, %q", width, text)
+			}
+		}
+	}
+}

@@ -2,7 +2,6 @@ package layouts
 
 import (
 	"slices"
-	"strings"
 
 	"drawup/labels"
 	"drawup/labels/sheets"
@@ -109,38 +108,8 @@ func glued(l labels.Line) labels.Line {
 			out[i].Figure = ""
 		}
 		if out[i].Figure == "" {
-			out[i].Text = glue(out[i].Text)
+			out[i].Text = labels.Unbroken(out[i].Text)
 		}
 	}
 	return out
-}
-
-func glue(text string) string {
-	words := strings.Split(text, " ")
-	var b strings.Builder
-	for i, w := range words {
-		if i > 0 {
-			if endsInDigit(words[i-1]) && startsUnit(w) {
-				b.WriteString("\u00a0")
-			} else {
-				b.WriteString(" ")
-			}
-		}
-		b.WriteString(w)
-	}
-	return b.String()
-}
-
-func endsInDigit(w string) bool {
-	return w != "" && w[len(w)-1] >= '0' && w[len(w)-1] <= '9'
-}
-
-func startsUnit(w string) bool {
-	w = strings.TrimRight(w, ".,;:)?")
-	head, _, _ := strings.Cut(w, "/")
-	switch strings.TrimSuffix(head, "s") {
-	case "mL", "L", "g", "mg", "kg", "microgram", "mcg", "nanogram", "unit", "mmol", "micromol", "cm", "m²", "h", "min", "%", "day", "hour", "year", "month", "week":
-		return true
-	}
-	return false
 }

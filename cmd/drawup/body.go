@@ -208,7 +208,7 @@ func tellBody(w io.Writer, d *bodyDocument) {
 	}{
 		{"ideal weight", "Devine 1974", d.Ideal},
 		{"ideal weight", "of a child, by height (clinPK)", d.Child},
-		{"adjusted weight", "ideal + 0.4 (actual - ideal); the actual weight where that is below the ideal", d.Adjusted},
+		{"adjusted weight", "ideal and 0.4 of the excess over it; the actual weight where that is below the ideal", d.Adjusted},
 		{"lean weight", "Janmahasatian 2005", d.Lean},
 		{"lean weight", "James 1976", d.James},
 		{"lean weight", "Boer 1984", d.Boer},
@@ -217,7 +217,7 @@ func tellBody(w io.Writer, d *bodyDocument) {
 		{"surface area", body.Haycock.String(), d.Haycock},
 		{"surface area", body.GehanGeorge.String(), d.Gehan},
 		{"surface area", body.Boyd.String(), d.Boyd},
-		{"body mass index", "weight / height squared", d.BMI},
+		{"body mass index", "weight ÷ height squared", d.BMI},
 	} {
 		if row.q != nil {
 			fmt.Fprintf(w, "%-16s %s%s\n", row.name, pad(row.q.Printed, 12), row.how)

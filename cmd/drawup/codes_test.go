@@ -113,7 +113,6 @@ func examples() map[refusal.Code]func(*testing.T) string {
 		refusal.LabelsTogether:   preparing(two, "order.toml"),
 		refusal.OutputUnwritable: preparing(soundOrder, "order.toml", "--out", "order.toml"),
 		refusal.GlyphMissing:     preparing(strings.Replace(soundOrder, "A. Example", "A. 薬", 1), "order.toml"),
-		refusal.TextTooLong:      preparing(strings.Replace(soundOrder, "theatre 2", strings.Repeat("overlong", 40), 1), "order.toml"),
 		refusal.LabelTooSmall:    preparing(infusion, "order.toml", "--infusion-stock", "roll-40x15"),
 		refusal.LabelMoved:       preparing(strings.Replace(soundOrder, "suxamethonium\"\ndose = \"1 mg/kg", "neostigmine with glycopyrronium\"\ndose = \"2.5 mg", 1), "order.toml", "--stock", "roll-40x15"),
 		refusal.OneWeightOnly:    told("mix", "--each", "1 microgram/kg/min", "--weight", "6 kg", "--rule", "three"),

@@ -49,7 +49,8 @@ func runConvert(e env, args []string) int {
 
 func tellConvert(w io.Writer, d *convertDocument) {
 	fmt.Fprintf(w, "%s\n", shown(d.Result))
-	if plain(d.Result.Printed) != d.Result.Exact {
+	// A fraction that does not end could be read as two numbers: --json has it.
+	if plain(d.Result.Printed) != d.Result.Exact && !strings.Contains(d.Result.Exact, "/") {
 		line(w, "exactly", d.Result.Exact+" "+d.Result.Unit)
 	}
 	line(w, "from", oneLine(d.From))

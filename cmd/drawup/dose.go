@@ -63,7 +63,7 @@ func workDose(r *request, dose quantity.Dose, c quantity.Concentration, who pati
 	if by := who.scalar(r.style, dose.Basis()); by != "" {
 		doc.Working = append(doc.Working, fmt.Sprintf("%s x %s = %s", r.style.Dose(dose), by, shown(doc.Amount)))
 	}
-	doc.Working = append(doc.Working, fmt.Sprintf("%s / %s = %s", shown(doc.Amount), shown(doc.Concentration), shown(doc.Volume)))
+	doc.Working = append(doc.Working, fmt.Sprintf("%s ÷ %s = %s", shown(doc.Amount), shown(doc.Concentration), shown(doc.Volume)))
 	doc.patientJSON = who.echo(r.style)
 	r.checkLimits(dilution.Quick{Concentration: c, Dose: dose, Weight: who.weight, Surface: who.surface})
 	if got, ok := r.measure("volume", volume, r.given("drug") && !r.refused()); ok {

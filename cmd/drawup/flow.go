@@ -164,7 +164,7 @@ func (s *flowSum) work(r *request, d *flowDocument) error {
 	case s.usable.Given() && !s.time.Given():
 		s.time, err = s.usable.Lasts(s.rate)
 		d.headline = "duration"
-		how("%s / %s = %s", r.style.Volume(s.usable), shown(flowRateJSON(r.style, s.rate)), shownSpan(r.style, s.time))
+		how("%s ÷ %s = %s", r.style.Volume(s.usable), shown(flowRateJSON(r.style, s.rate)), shownSpan(r.style, s.time))
 	case s.time.Given() && !s.usable.Given():
 		s.usable, err = s.rate.During(s.time)
 		s.volume, d.headline = s.usable, "volume"
@@ -186,10 +186,10 @@ func (s *flowSum) settleRate(r *request, how func(string, ...any)) error {
 		how("%s x body weight %s = %s", s.perKg.Written(), shown(bodyWeightJSON(r.style, s.weight)), shown(flowRateJSON(r.style, s.rate)))
 	case s.drops.Given():
 		s.rate, err = s.drops.Flow(s.set)
-		how("%s / %s = %s", r.style.DropRate(s.drops), r.style.DropFactor(s.set), shown(flowRateJSON(r.style, s.rate)))
+		how("%s ÷ %s = %s", r.style.DropRate(s.drops), r.style.DropFactor(s.set), shown(flowRateJSON(r.style, s.rate)))
 	default: // volume and time are given: readFlow asked for them
 		s.rate, err = s.usable.Over(s.time)
-		how("%s / %s = %s", r.style.Volume(s.usable), shownSpan(r.style, s.time), shown(flowRateJSON(r.style, s.rate)))
+		how("%s ÷ %s = %s", r.style.Volume(s.usable), shownSpan(r.style, s.time), shown(flowRateJSON(r.style, s.rate)))
 	}
 	return err
 }

@@ -4,6 +4,8 @@ import (
 	"fmt"
 	"io"
 	"strings"
+
+	"drawup/dilution/quantity/lint"
 )
 
 // A proof writes one drug so that it can be read against its sources: one fact
@@ -34,8 +36,12 @@ func (p proof) item(name, value string) {
 	}
 }
 
-// sourced writes a name and a value with its source below.
+// sourced writes a name and a value with its source below. Thousands are
+// grouped, but not in what an order repeats letter by letter.
 func (p proof) sourced(name, value string, s shownSource) {
+	if !strings.Contains(value, "\"") {
+		value = lint.UK().Grouped(value)
+	}
 	if s.Unverified {
 		value += " (unverified)"
 	}

@@ -280,6 +280,8 @@ func helpText(name string) (string, bool) {
 		return helpLabel, true
 	case "formulary":
 		return helpFormulary, true
+	case "wording":
+		return wordingHelp(), true
 	case "read":
 		return helpRead, true
 	}

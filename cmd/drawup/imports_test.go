@@ -19,17 +19,18 @@ import (
 func mayImport() map[string][]string {
 	plan := []string{"dilution/body", "dilution/formulary", "dilution/order", "dilution/pump", "dilution/quantity",
 		"dilution/refusal", "dilution/syringe"}
-	said := append([]string{"dilution", "dilution/recheck", "labels/gs1"}, plan...)
+	said := append([]string{"dilution", "dilution/quantity/lint", "dilution/recheck", "labels/gs1"}, plan...)
 	return map[string][]string{
 		"cmd/drawup":                {"*"},
 		"dilution":                  plan,
 		"dilution/body":             {"dilution/quantity", "dilution/roots"},
 		"dilution/certainty":        {"dilution/quantity", "dilution/syringe"},
 		"dilution/formulary":        {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
-		"dilution/formulary/verify": {"dilution/body", "dilution/formulary", "dilution/quantity", "dilution/refusal", "dilution/salts"},
-		"dilution/order":            {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
+		"dilution/formulary/verify": {"dilution/body", "dilution/formulary", "dilution/quantity", "dilution/quantity/lint", "dilution/refusal", "dilution/salts"},
+		"dilution/order":            {"dilution/quantity", "dilution/quantity/lint", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
 		"dilution/pump":             {"dilution/quantity"},
 		"dilution/quantity":         {},
+		"dilution/quantity/lint":    {}, // judges the printer, so shares nothing with it
 		"dilution/recheck":          {}, // the second route shares nothing
 		"dilution/refusal":          {},
 		"dilution/roots":            {},
@@ -46,13 +47,17 @@ func mayImport() map[string][]string {
 		"layouts/ink":               {},
 		"layouts/pdf":               {"layouts/ink", "fonts"},
 		"layouts/pdf/readback":      {"layouts/ink"}, // from tests only
+
+		"dilution/formulary/published": {"dilution/formulary"}, // from tests only
 	}
 }
 
 const module = "drawup"
 
 // onlyFromTests lists packages that no shipped code may import.
-func onlyFromTests() []string { return []string{"layouts/pdf/readback"} }
+func onlyFromTests() []string {
+	return []string{"layouts/pdf/readback", "dilution/formulary/published"}
+}
 
 // goFiles lists the Go files of the module by package folder.
 func goFiles(t *testing.T, tests bool) map[string][]string {

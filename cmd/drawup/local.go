@@ -174,7 +174,7 @@ func tellLocal(w io.Writer, d *localDocument) {
 		fmt.Fprintf(w, "%s of the maximum, all together\n", shown(d.Share))
 	}
 	for _, x := range d.Given {
-		line(w, x.Drug, fmt.Sprintf("%s of %s (%s): %s; at most %s, room for %s more", shown(x.Amount), shown(x.Most), x.Limit,
+		line(w, x.Drug, fmt.Sprintf("%s of %s (%s): %s of it; at most %s, room for %s more", shown(x.Amount), shown(x.Most), x.Limit,
 			shown(x.Share), x.MostVolume.Printed, x.LeftVolume.Printed))
 		line(w, "", "maximum: "+x.Source)
 	}

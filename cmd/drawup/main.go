@@ -53,6 +53,7 @@ func commands() []command {
 		{"accuracy", "how far off a reading, a chain of steps or a fill may be", runAccuracy},
 		{"body", "ideal, adjusted and lean weight; surface area; a child's weight by age", runBody},
 		{"convert", "units, mmol, per cent, salt and base", runConvert},
+		{"wording", "a sentence against the rules of numbers, units and names", runWording},
 		{"formulary", "the stored drugs: list, show, verify, compare, print, approve", runFormulary},
 		{"help", "this list, one command, or one topic", runHelp},
 	}

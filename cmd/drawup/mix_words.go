@@ -47,7 +47,7 @@ func bagCaution(r *request, m mixture, words string) {
 
 // mixWorking says in one or two lines how the figures were got.
 func mixWorking(r *request, m mixture, d *mixDocument) []string {
-	final := fmt.Sprintf("%s / %s = %s", shown(d.Amount), shown(d.FinalVolume), shown(d.Concentration))
+	final := fmt.Sprintf("%s ÷ %s = %s", shown(d.Amount), shown(d.FinalVolume), shown(d.Concentration))
 	strength := ""
 	if m.strength.Given() {
 		strength = shown(concentrationJSON(r.style, m.strength))
@@ -60,7 +60,7 @@ func mixWorking(r *request, m mixture, d *mixDocument) []string {
 	case r.given("take"):
 		return []string{fmt.Sprintf("%s x %s = %s", shown(d.DrugVolume), strength, shown(d.Amount)), final}
 	}
-	return []string{fmt.Sprintf("%s / %s = %s", shown(d.Amount), strength, shown(d.DrugVolume)), final}
+	return []string{fmt.Sprintf("%s ÷ %s = %s", shown(d.Amount), strength, shown(d.DrugVolume)), final}
 }
 
 // act is what to do, in one line, for each method.

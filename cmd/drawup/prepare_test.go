@@ -251,10 +251,10 @@ func saying(found map[string]bool, l labels.Label) int {
 }
 
 // readSymbol reads one barcode out of a picture of the page. A scanner sees many
-// pictures of a label; the reader here gets up to three, cut closer or wider.
+// pictures of a label; the reader here gets up to five, cut closer or wider.
 func readSymbol(img *image.RGBA, s ink.Symbol, dpi int) (text string, err error) {
 	side := ink.Micrometre(len(s.Rows)) * s.Module
-	for _, quiet := range []ink.Micrometre{2 * s.Module, s.Module, 3 * s.Module} {
+	for _, quiet := range []ink.Micrometre{2 * s.Module, s.Module, 3 * s.Module, 3 * s.Module / 2, 5 * s.Module / 2} {
 		text, err = readback.DecodeDataMatrix(readback.Crop(img, s.X-quiet, s.Y-quiet, side+2*quiet, side+2*quiet, dpi))
 		if err == nil {
 			return text, nil
@@ -338,4 +338,20 @@ func abs(x ink.Micrometre) ink.Micrometre {
 		return -x
 	}
 	return x
+}
+
+// Rule N26 on a terminal: no line ends between a number and its unit, or inside
+// a number that a blank groups.
+func TestTerminalLinesKeepNumberAndUnit(t *testing.T) {
+	for width := 12; width < 60; width++ {
+		lines := wrap("of 10\u00a0000 units in 250 mL over 24 h, at 5 mL/h the syringe  is empty", width)
+		for i, line := range lines {
+			if last := line[len(line)-1]; i < len(lines)-1 && last >= '0' && last <= '9' {
+				t.Errorf("width %d: got a line that ends in a number: %q", width, line)
+			}
+		}
+		if got := strings.Join(lines, " "); got != "of 10\u00a0000 units in 250 mL over 24 h, at 5 mL/h the syringe is empty" {
+			t.Errorf("width %d: got %q", width, got)
+		}
+	}
 }

@@ -250,7 +250,7 @@ func rateWorking(r *request, s rateSum, doc *rateDocument) []string {
 	who := s.who.scalar(r.style, s.per.Basis())
 	times, over := "", ""
 	if who != "" {
-		times, over = " x "+who, " / "+who
+		times, over = " x "+who, " ÷ "+who
 	}
 	if r.given("rate") {
 		return []string{
@@ -258,7 +258,7 @@ func rateWorking(r *request, s rateSum, doc *rateDocument) []string {
 		}
 	}
 	return []string{
-		fmt.Sprintf("%s%s / %s = %s", shown(doc.DoseRate), times, shown(doc.Concentration), shown(doc.FlowRate)),
+		fmt.Sprintf("%s%s ÷ %s = %s", shown(doc.DoseRate), times, shown(doc.Concentration), shown(doc.FlowRate)),
 		fmt.Sprintf("half up to the pump's step of %s: %s (%s)", r.style.FlowRate(s.step), doc.PumpRate.Printed, doc.Lost.Printed),
 	}
 }
@@ -285,7 +285,7 @@ func tellRate(w io.Writer, d *rateDocument, fromFlow bool) {
 	for _, x := range d.Ladder {
 		mark := "  "
 		if x.DoseRate.Exact == d.DoseRate.Exact {
-			mark = "> "
+			mark = "* " // not an arrow: before a number it reads "more than"
 		}
 		fmt.Fprintf(w, "%s%s%s   %s\n", mark, pad(x.DoseRate.Printed, 26), padLeft(x.PumpRate.Printed, 12), shown(x.Delivered))
 	}

@@ -128,3 +128,7 @@ func TestSecondOpinionFullDisk(t *testing.T) {
 		t.Errorf("the folder is left behind: %v", err)
 	}
 }
+
+// Ten thousand plans at random over the whole starter formulary, in all house
+// styles: nothing that their papers say is known to be misread.
+func TestSecondOpinionTenThousandPlans(t *testing.T) { readRandomPlans(t, 10_000) }

@@ -8,6 +8,7 @@ import (
 	"unicode/utf8"
 
 	"drawup/dilution"
+	"drawup/dilution/quantity/lint"
 	"drawup/dilution/recheck"
 	"drawup/dilution/refusal"
 	"drawup/labels"
@@ -115,11 +116,12 @@ func tellCautions(w io.Writer, l refusal.List) {
 	}
 }
 
-// wrap breaks text at blanks into lines of at most width characters.
+// wrap breaks text at blanks into lines of at most width characters, never
+// between a number and its unit (rule N26) or inside a number.
 func wrap(text string, width int) []string {
 	var lines []string
 	line := ""
-	for _, word := range strings.Fields(text) {
+	for _, word := range unparted(text) {
 		switch {
 		case line == "":
 			line = word
@@ -131,4 +133,20 @@ func wrap(text string, width int) []string {
 		}
 	}
 	return append(lines, line)
+}
+
+// unparted are the pieces of a text between which a line may end.
+func unparted(text string) []string {
+	var out []string
+	for _, word := range strings.Split(text, " ") {
+		n := len(out)
+		switch {
+		case word == "":
+		case n > 0 && lint.Tied(out[n-1], word):
+			out[n-1] += " " + word
+		default:
+			out = append(out, word)
+		}
+	}
+	return out
 }

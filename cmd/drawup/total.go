@@ -137,7 +137,7 @@ func (s totalSum) work(r *request, d *totalDocument) error {
 		if total, err = s.load.Plus(infused); err != nil {
 			return err
 		}
-		how("%s first + %s = %s", d.Load.Printed, shown(d.Infused), shown(doseJSON(r.style, total)))
+		how("%s first and %s = %s", d.Load.Printed, shown(d.Infused), shown(doseJSON(r.style, total)))
 	case s.load.Given():
 		return s.joinUnlike(r, d, infused, how)
 	}
@@ -160,7 +160,7 @@ func (s totalSum) joinUnlike(r *request, d *totalDocument, infused quantity.Dose
 	if err != nil {
 		return err
 	}
-	how("%s first + %s = %s, for this patient", shown(amountJSON(r.style, first)), shown(amountJSON(r.style, then)), shown(amountJSON(r.style, sum)))
+	how("%s first and %s = %s, for this patient", shown(amountJSON(r.style, first)), shown(amountJSON(r.style, then)), shown(amountJSON(r.style, sum)))
 	d.Total = amountJSON(r.style, sum)
 	return s.volume(r, d, sum, how)
 }
@@ -193,7 +193,7 @@ func (s totalSum) volume(r *request, d *totalDocument, amount quantity.Amount, h
 		return err
 	}
 	d.Volume, d.Concentration = volumeJSON(r.style, v), concentrationJSON(r.style, s.conc)
-	how("%s / %s = %s", shown(d.Amount), shown(d.Concentration), shown(d.Volume))
+	how("%s ÷ %s = %s", shown(d.Amount), shown(d.Concentration), shown(d.Volume))
 	return nil
 }
 

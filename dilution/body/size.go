@@ -18,7 +18,7 @@ type Size struct {
 // Names of the equations, as errors and notes print them.
 const (
 	devine        = "ideal weight (Devine 1974)"
-	adjusted      = "adjusted weight (ideal + 0.4 of the excess)"
+	adjusted      = "adjusted weight (ideal and 0.4 of the excess)"
 	janmahasatian = "lean weight (Janmahasatian 2005)"
 	james         = "lean weight (James 1976)"
 	boer          = "lean weight (Boer 1984)"

@@ -255,6 +255,7 @@ func (r *reader) localMaximum(rec localMaximumRecord, kind quantity.Kind, path .
 		Total:  figure(r, rec.Total, quantity.ParseAmount, at("total")...),
 		DayMax: figure(r, rec.DayMax, quantity.ParseDose, at("day_max")...)}
 	m.By, m.BySource = r.scalar(rec.By, rec.BySource, at("by"))
+	r.ageOrder(m.AgeFrom, m.AgeTo, path)
 	if !m.PerKg.Given() && !m.Total.Given() {
 		r.fault(refusal.KeyMissing, "", "per_kg or total", "the maximum has no figure", path...)
 	}

@@ -252,6 +252,10 @@ func figure[T any](r *reader, rec *figureRecord, parse func(string) (T, error), 
 		r.badText(rec.Value, err, path...)
 	}
 	s := r.source(rec.Source, path...)
+	if rec.Jurisdiction != "" && !jurisdictionPattern.MatchString(rec.Jurisdiction) {
+		r.fault(refusal.ValueUnknown, rec.Jurisdiction, `two capital letters such as "UK", or "international"`,
+			"the jurisdiction of the figure is not one", path...)
+	}
 	if rec.Unverified && rec.VerifiedBy != "" {
 		r.fault(refusal.KeyConflict, "unverified, and verified by "+rec.VerifiedBy, "one of the two",
 			"the figure is said to be verified and not to be", path...)

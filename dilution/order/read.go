@@ -15,8 +15,9 @@ import (
 // no patient is read), key-missing, keys-contradict, key-repeated, nothing-to-make,
 // value-unknown, product-number-wrong, time-malformed, the faults of a quantity's text
 // ([quantity.Fault]), units-against-mass, weight-missing, height-missing,
-// sex-missing, weight-implausible, height-implausible, body-values-do-not-fit.
-// The one caution is weight-implausible, of a child's weight that few have.
+// sex-missing, weight-implausible, height-implausible, body-values-do-not-fit,
+// text-too-long, text-misread. Cautions are weight-implausible, of a child's
+// weight that few have, and text-misread.
 //
 // A reason that concerns one syringe carries its number. When nothing refuses,
 // every given field of the order has a value.
@@ -39,6 +40,7 @@ func Read(name string, data []byte) (Order, refusal.List) {
 		}
 		r.something()
 	}
+	r.hold()
 	r.attribute(len(list))
 	r.list.Sort()
 	return r.order, r.list
@@ -54,6 +56,8 @@ type reader struct {
 	number int    // the syringe that is being read, 0 outside
 	drug   string // its drug, for messages
 	order  Order
+
+	wordings []wording // texts in a person's own words
 }
 
 // at is a longer path; base is never changed.

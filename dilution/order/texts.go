@@ -4,7 +4,6 @@ import (
 	"errors"
 	"fmt"
 	"strings"
-	"unicode"
 
 	"drawup/dilution/body"
 	"drawup/dilution/quantity"
@@ -97,17 +96,13 @@ func (r *reader) text(s string, path []any) Field[string] {
 		return Field[string]{Pos: f.Pos}
 	}
 	f.Text = s
-	if strings.ContainsFunc(f.Value, unprintable) {
-		r.refuse(path, refusal.Reason{Code: refusal.ValueWrongType, Got: s, Want: "words on one line",
-			Message: fmt.Sprintf("the %s runs over several lines or holds a character that cannot be seen", spaced(key(path))), Remedy: "write it on one line"})
+	if r.printable(s, f.Value, path) {
+		r.remember(f.Value, path)
+	} else {
 		f.Value = ""
 	}
 	return f
 }
-
-// unprintable are line ends, other control characters and the invisible marks
-// that turn the direction of a text: paper would not show what was typed.
-func unprintable(c rune) bool { return unicode.IsControl(c) || unicode.Is(unicode.Cf, c) }
 
 // unread reports a key that is there and has a reason of the file's form.
 func (r *reader) unread(path []any) bool {

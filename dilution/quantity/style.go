@@ -59,6 +59,16 @@ func (s Style) DoseRate(d DoseRate) string {
 	return s.counted(d.inOwnUnit(), d.unit, basisTail(d.basis)+"/"+d.period.String())
 }
 
+// DoseRateIn is d in unit u and its own period, by the SHORT rule; "" if u
+// counts in another way.
+func (s Style) DoseRateIn(d DoseRate, u Unit) string {
+	x := in(d.x, d.kind, u)
+	if !x.given() {
+		return ""
+	}
+	return s.counted(x.quo(d.period.perHour()), u, basisTail(d.basis)+"/"+d.period.String())
+}
+
 // Volume is v in mL. What a scale or a pump can show, two decimals or fewer, is
 // exact; anything else goes by the SHORT rule.
 func (s Style) Volume(v Volume) string { return s.shown(v.x, " mL") }

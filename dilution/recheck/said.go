@@ -1,6 +1,7 @@
 package recheck
 
 import (
+	"regexp"
 	"slices"
 	"strconv"
 	"strings"
@@ -141,7 +142,7 @@ func (c *check) blockTexts() *blockText {
 		return c.block
 	}
 	for _, t := range texts {
-		folded := fold(t)
+		folded := unseparated(fold(t))
 		c.block.texts = append(c.block.texts, t)
 		c.block.folded = append(c.block.folded, folded)
 		c.block.words = append(c.block.words, withoutFigures(folded))
@@ -157,7 +158,7 @@ func said(c *check, row int, text string) *objection {
 	if o != nil || c.inBlock(folded) {
 		return o
 	}
-	if o := c.misquoted(folded); o != nil {
+	if o := c.misquoted(unseparated(folded)); o != nil {
 		return o
 	}
 	rest, o := withoutFixed(folded)
@@ -234,8 +235,29 @@ func readable(text string) (string, *objection) {
 }
 
 func (c *check) inBlock(folded string) bool {
-	return slices.Contains(c.blockTexts().folded, folded)
+	return slices.Contains(c.blockTexts().folded, unseparated(folded))
 }
+
+// unseparated takes the signs between thousands out of a text: they change no
+// number, and each house style has its own. A sign counts where one to three
+// digits stand before it and groups of exactly three follow.
+func unseparated(text string) string {
+	var b strings.Builder
+	at := 0
+	for _, found := range thousands.FindAllStringSubmatchIndex(text, -1) {
+		from, to := found[2], found[3]
+		if to < len(text) && text[to] >= '0' && text[to] <= '9' {
+			continue // "1,2345" is no number of three digits a group
+		}
+		b.WriteString(text[at:from])
+		b.WriteString(strings.NewReplacer(",", "", "\u00a0", "", "\u202f", "").Replace(text[from:to]))
+		at = to
+	}
+	b.WriteString(text[at:])
+	return b.String()
+}
+
+var thousands = regexp.MustCompile(`(?:^|[^0-9.,])([0-9]{1,3}(?:[,\x{00A0}\x{202F}][0-9]{3})+)`)
 
 // confirm objects to every figure of the sentence that is not known.
 func (k *known) confirm(text, why string) *objection {

@@ -247,3 +247,20 @@ func TestSentencesNeedTheirSources(t *testing.T) {
 	s.Asked = s.Asked[:len(s.Asked)-1]
 	disagreesAt(t, "stock not asked", s, said1)
 }
+
+// The sign between thousands belongs to the house style, not to the record: a
+// sentence may carry the house's own. The figures stay the record's.
+func TestSentencesMayGroupThousands(t *testing.T) {
+	for text, want := range map[string]string{
+		"Not more than 1000 mL in 24 h.":           "Not more than 1000 mL in 24 h.",
+		"Not more than 1,000 mL in 24 h.":          "Not more than 1000 mL in 24 h.",
+		"Not more than 1\u00a0000 mL":              "Not more than 1000 mL",
+		"1,000, 5\u202f000 and 1,250,000 units/mL": "1000, 5000 and 1250000 units/mL",
+		"1,2345 units":                             "1,2345 units",
+		"1.500,250 mL, 3,7 and 12,34":              "1.500,250 mL, 3,7 and 12,34",
+	} {
+		if got := unseparated(text); got != want {
+			t.Errorf("%q: got %q, want %q", text, got, want)
+		}
+	}
+}

@@ -181,6 +181,7 @@ const (
 	StockUnknown     Code = "stock-unknown"
 	GlyphMissing     Code = "glyph-missing"
 	TextTooLong      Code = "text-too-long"
+	TextMisread      Code = "text-misread"
 	SyringesLeftOut  Code = "syringes-left-out"
 	LimitsNotChecked Code = "limits-not-checked"
 	QuickCheck       Code = "quick-sum-checked"

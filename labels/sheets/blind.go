@@ -33,8 +33,8 @@ func (s scribe) blindParts() []Part {
 		{n, []Block{s.name(nil, nil, false),
 			Words{Line: labels.Words("Work alone and work it out yourself. Do not ask for the preparer's figures, and do not open the next page before this one is filled in."), Strong: true}}},
 		{n, []Block{Beside{LeftShare: 50,
-			Left:  []Block{heading("The order, as typed"), Pairs{List: s.ordered()}},
-			Right: []Block{heading("The patient, as typed"), Pairs{List: s.body()}, heading("The container, as its label should read"), Pairs{List: s.pack()}}}}},
+			Left:  []Block{heading("The order, as typed, in house style"), Pairs{List: s.ordered()}},
+			Right: []Block{heading("The patient, as typed, in house style"), Pairs{List: s.body()}, heading("The container, as its label should read"), Pairs{List: s.pack()}}}}},
 		{n, []Block{heading("What you read"), Boxes{s.readBoxes()}}},
 		{n, []Block{heading("What you work out"), Boxes{s.workBoxes()}}},
 		{n, []Block{Beside{LeftShare: 50,
@@ -55,29 +55,29 @@ func (s scribe) ordered() []Pair {
 		}
 	}
 	add("drug", o.Drug.Text)
-	add("presentation", o.Presentation.Text)
+	add("presentation", s.typed(o.Presentation.Text))
 	add("indication", o.Indication.Text)
-	add("dose", o.Dose.Text)
-	add("amount", o.Amount.Text)
-	add("concentration", o.Concentration.Text)
-	add("volume", o.Volume.Text)
-	add("doses", o.Doses.Text)
+	add("dose", s.typed(o.Dose.Text))
+	add("amount", s.typed(o.Amount.Text))
+	add("concentration", s.typed(o.Concentration.Text))
+	add("volume", s.typed(o.Volume.Text))
+	add("doses", s.typed(o.Doses.Text))
 	add("dilute if needed", yes(o.Dilute.Value))
-	add("standard", o.Standard.Text)
-	add("mix", mixText(s.p))
+	add("standard", s.typed(o.Standard.Text))
+	add("mix", s.typed(mixText(s.p)))
 	add("method", o.Method.Text)
 	add("diluent", o.Diluent.Text)
 	add("route", o.Route.Text)
 	add("line", o.Line.Text)
-	add("start", o.Start.Text)
-	add("from", o.From.Text)
-	add("to", o.To.Text)
-	add("to last", o.Hours.Text)
-	add("fills the line", o.Priming.Text)
-	add("stays behind", o.DeadSpace.Text)
+	add("start", s.typed(o.Start.Text))
+	add("from", s.typed(o.From.Text))
+	add("to", s.typed(o.To.Text))
+	add("to last", s.typed(o.Hours.Text))
+	add("fills the line", s.typed(o.Priming.Text))
+	add("stays behind", s.typed(o.DeadSpace.Text))
 	add("mixture", o.Mixture.Text)
-	add("each mL/h gives", o.Each.Text)
-	add("syringe size", o.Size.Text)
+	add("each mL/h gives", s.typed(o.Each.Text))
+	add("syringe size", s.typed(o.Size.Text))
 	add("batch", o.Batch.Text)
 	add("expiry", o.Expiry.Text)
 	return append(out, s.given()...)
@@ -128,8 +128,8 @@ func (s scribe) body() []Pair {
 		age = strings.TrimPrefix(age+", frail", ", ")
 	}
 	add("age", age)
-	add("height", p.Height.Text)
-	weight := p.Weight.Text
+	add("height", s.typed(p.Height.Text))
+	weight := s.typed(p.Weight.Text)
 	if weight != "" && p.Estimated {
 		weight += ", an estimate"
 	}

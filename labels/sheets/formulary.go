@@ -6,6 +6,7 @@ import (
 	"strings"
 
 	"drawup/dilution/formulary"
+	"drawup/dilution/quantity/lint"
 	"drawup/labels"
 )
 
@@ -99,7 +100,8 @@ func pairSheet(f *formulary.Formulary, foot Foot) Sheet {
 }
 
 // entryParts is one part for each group of entries: what stands before the
-// first colon of a name is the group.
+// first colon of a name is the group. Thousands are grouped, by a comma, as the
+// formulary has no house style; all else stands as it is filed.
 func entryParts(list []formulary.Entry, sources *sourceList) []Part {
 	var parts []Part
 	open := "none yet"
@@ -113,7 +115,7 @@ func entryParts(list []formulary.Entry, sources *sourceList) []Part {
 			if head == "" {
 				head = "record"
 			}
-			parts = append(parts, Part{Blocks: []Block{heading(head), Table{Box: true, Small: true,
+			parts = append(parts, Part{Blocks: []Block{heading(lint.UK().Grouped(head)), Table{Box: true, Small: true,
 				Columns: []Column{{Head: "what", Share: 62}, {Head: "as filed", Share: 74}, {Head: "source", Share: 44}}}}})
 			open = group
 		}
@@ -122,7 +124,7 @@ func entryParts(list []formulary.Entry, sources *sourceList) []Part {
 		}
 		last := parts[len(parts)-1].Blocks
 		t, _ := last[1].(Table)
-		t.Rows = append(t.Rows, Row{Strong: e.Unverified, Cells: []labels.Line{labels.Words(item), labels.Words(e.Text), labels.Words(entrySource(e, sources))}})
+		t.Rows = append(t.Rows, Row{Strong: e.Unverified, Cells: []labels.Line{labels.Words(lint.UK().Grouped(item)), labels.Words(lint.UK().Grouped(e.Text)), labels.Words(entrySource(e, sources))}})
 		last[1] = t
 	}
 	return parts

@@ -74,7 +74,7 @@ func (s scribe) inDiluent() string {
 // entries are what the pump asks for, in the order in which it is entered,
 // then the rate that must come out.
 func (s scribe) entries() []BigRow {
-	conc := BigRow{Key: "1  concentration", Value: s.say(s.concentration()), Note: s.say("{amount} in {final.volume}")}
+	conc := BigRow{Key: "1  concentration", Value: s.say(s.concentration()), Note: joined(s.say("{amount} in {final.volume}"), s.inRateUnit())}
 	holder := BigRow{Key: "2  syringe", Value: s.say("{final.barrel}"), Note: s.say("holds {final.volume}")}
 	if s.bag() {
 		holder = BigRow{Key: "2  bag", Value: s.say("{final.volume}")}
@@ -88,6 +88,16 @@ func (s scribe) entries() []BigRow {
 	}
 	rows = append(rows, BigRow{Key: fmt.Sprintf("%d  dose rate", len(rows)+1), Value: s.say("{start.dose}"), Note: labels.Words("ordered")})
 	return append(rows, BigRow{Key: "then it shows", Value: s.say("{start.rate}"), Note: s.say("which gives {start.delivered}"), Most: true})
+}
+
+// inRateUnit is the concentration in the unit of the dose rate, where the label
+// has another one: whoever checks the pump's sum need not convert (rule N22).
+func (s scribe) inRateUnit() labels.Line {
+	text := s.p.Style.ConcentrationIn(s.p.Mixture.Concentration, s.p.Infusion.Start.Dose.Unit())
+	if text == "" || text == s.f.Text(recheck.Concentration) {
+		return nil
+	}
+	return joined(labels.Words(", that is "), s.said(text))
 }
 
 // weighed says which weight it is and where it comes from.

@@ -4,6 +4,7 @@ import (
 	"regexp"
 	"strings"
 
+	"drawup/dilution/quantity/lint"
 	"drawup/dilution/recheck"
 	"drawup/labels"
 )
@@ -47,14 +48,32 @@ func (s scribe) said(text string) labels.Line { return s.listed(recheck.Said, te
 func (s scribe) bound(text string) labels.Line { return s.listed(recheck.Bound, text) }
 
 func (s scribe) listed(table, text string) labels.Line {
+	text = s.house().Grouped(text)
 	if !holdsDigit(text) {
 		return labels.Words(text)
 	}
 	return labels.Line{{Text: text, Figure: recheck.Row(table, s.rows.row(table, text), "text")}}
 }
 
+// house is the site's house style as the linter knows it.
+func (s scribe) house() lint.House {
+	if h, ok := lint.Named(s.p.Style.String()); ok {
+		return h
+	}
+	return lint.UK()
+}
+
+// typed is a quantity of the order: as it was typed, but spelled and grouped as
+// the house does it, so that a paper never shows the µg or cc that a keyboard
+// may (rule R14).
+func (s scribe) typed(text string) string {
+	fixed, _ := s.house().Fixed(text)
+	return s.house().Grouped(fixed)
+}
+
 // note is a sentence of the formulary. One with figures is printed word for
-// word, since the second route looks it up so.
+// word but for the sign between thousands, since the second route looks it up
+// so.
 func (s scribe) note(text string) labels.Line {
 	if !holdsDigit(text) {
 		return labels.Words(sentence(text))
