@@ -243,7 +243,7 @@ func (f *paperFlags) write(e env, jobs []*job, all refusal.List) int {
 		files = append(files, made...)
 	}
 	if !all.Refused() {
-		all = append(all, writeAll(files, f.orders)...)
+		all = append(all, writeAll(files, f.inputs())...)
 	}
 	if all.Refused() {
 		return finish(e, f.json, doc, nil, all)

@@ -28,6 +28,14 @@ func (f *paperFlags) takeShelf(lib *library) refusal.List {
 	return faults
 }
 
+// inputs are the files that were read and that no paper may be written over.
+func (f *paperFlags) inputs() []string {
+	if f.shelf == "" {
+		return f.orders
+	}
+	return append([]string{f.shelf}, f.orders...)
+}
+
 // tellChoices says what was chosen for each syringe, why, and what else was
 // weighed.
 func tellChoices(w io.Writer, j *job) {
@@ -46,7 +54,7 @@ func tellChoices(w io.Writer, j *job) {
 //	                    the smallest that has a line at 1.1 mL
 //	  not 1 mL in steps of 0.01 mL: too small
 func tellChoice(w io.Writer, c dilution.Choice) {
-	const indent = 24
+	const indent = 26
 	blank := strings.Repeat(" ", indent)
 	for i, l := range append(wrap(c.Took, widest-indent), wrap(c.Why, widest-indent)...) {
 		head := blank
