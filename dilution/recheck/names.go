@@ -13,8 +13,12 @@ func Row(table string, row int, column string) string {
 }
 
 // splitRow takes a row number out of a name: "ladder.3.rate" gives
-// "ladder.*.rate" and 3. Other names come back as they are.
+// "ladder.*.rate" and 3. Other names come back as they are, one with a star in it
+// empty.
 func splitRow(name string) (string, int) {
+	if strings.Contains(name, "*") { // no figure has such a name
+		return "", 0
+	}
 	parts := strings.Split(name, ".")
 	if len(parts) != 3 || !isTable(parts[0]) {
 		return name, 0

@@ -32,6 +32,9 @@ func otherContainerAmount(c *check, _ int, r reading) *objection {
 	if !r.whole.dim.isDrug() {
 		return object("", "is not an amount of drug")
 	}
+	if !c.has(OtherDrug) {
+		return object("", "needs "+OtherDrug+", which is not printed")
+	}
 	return exact(r, c.other.quantity("amount"), "the second record says")
 }
 

@@ -45,12 +45,16 @@ func useOf(name string) barrelUse {
 	return barrelUse{}
 }
 
-// stepOf is the rule of a graduation: one of those typed, and its barrel's.
+// stepOf is the rule of a graduation: one of those typed, and its barrel's. That
+// of an intermediate and of a second drug is nothing without its barrel.
 func stepOf(name string) rule {
 	use := useOf(name)
 	return measured(func(c *check, _ int, r reading) *objection {
 		if o := c.oneOf(name, r); o != nil {
 			return o
+		}
+		if use.barrel != DrugBarrel && !c.has(use.barrel) {
+			return object("", "needs "+use.barrel+", which is not printed")
 		}
 		return c.paired(use)
 	})
