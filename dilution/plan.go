@@ -137,7 +137,10 @@ type Plan struct {
 	Prepared     time.Time
 	UseBy        UseBy
 	Standard     string // the standard preparation's id, if it is one
-	Cautions     refusal.List
+	// Edition and Region are the scheme of label classes that the site has
+	// picked; "" for the usual one.
+	Edition, Region string
+	Cautions        refusal.List
 }
 
 // A List is all syringes of an order that are made, in making order.

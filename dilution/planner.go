@@ -2,6 +2,7 @@ package dilution
 
 import (
 	"fmt"
+	"strings"
 	"time"
 
 	"drawup/dilution/body"
@@ -62,7 +63,8 @@ func NewList(
 		unread := broken[sy.Number] || unreadable(o.Patients[sy.Patient])
 		w := newPlan(s, f, o, sy, at, unread)
 		p, reasons := w.plan, w.reasons
-		p.Cautions = append(ofPatient(faults, o.Patients[sy.Patient]), p.Cautions...)
+		typed := append(ofPatient(faults, o, sy.Patient), faults.Cautions().Of(sy.Number)...)
+		p.Cautions = append(typed, p.Cautions...)
 		if unread && !leaveOut[sy.Number] {
 			all = append(all, reasons.Refusals()...)
 			continue
@@ -77,8 +79,9 @@ func NewList(
 		made = append(made, w)
 	}
 	all = append(all, localSums(made)...)
-	list.Cautions = shared(list.Plans)
-	all = append(all, list.Cautions...)
+	whole := append(edition(s, o), shared(list.Plans)...)
+	all = append(all, whole...)
+	list.Cautions = append(ofOrder(faults), whole...)
 	if len(list.Plans) == 0 && !all.Refused() {
 		all = append(all, refusal.Reason{
 			Code: refusal.NothingToMake, Severity: refusal.Refuse,
@@ -183,7 +186,7 @@ func newPlan(
 	broken bool,
 ) *work {
 	w := &work{site: s, f: f, o: sy, patient: o.Patients[sy.Patient]}
-	w.plan = Plan{Number: sy.Number, Order: sy, Patient: w.patient, Style: s.style, Prepared: at, Route: "IV"}
+	w.plan = Plan{Number: sy.Number, Order: sy, Patient: w.patient, Style: s.style, Prepared: at, Route: "IV", Edition: s.edition, Region: s.region}
 	if sy.Route.Given() {
 		w.plan.Route = sy.Route.Value
 	}
@@ -358,10 +361,16 @@ func joinOr(list []string) string {
 
 // ofPatient is the cautions of the reading that stand on a value of this
 // patient, to be printed with each of the patient's syringes.
-func ofPatient(faults refusal.List, p order.Patient) refusal.List {
+func ofPatient(faults refusal.List, o order.Order, patient int) refusal.List {
 	var out refusal.List
 	for _, r := range faults.Cautions().Of(0) {
-		if p.Weight.Given() && r.Pos == p.Weight.Pos {
+		at := -1 // the patient in whose table the caution stands
+		for i, p := range o.Patients {
+			if p.Pos.Line <= r.Pos.Line && (at < 0 || p.Pos.Line > o.Patients[at].Pos.Line) {
+				at = i
+			}
+		}
+		if strings.HasPrefix(r.Field, "patient.") && at == patient {
 			out = append(out, r)
 		}
 	}

@@ -13,7 +13,8 @@ import (
 
 // The rows are those of a public summary of Table 1 of ISO 26825:2020; the
 // colours are the published screen values of the inks it names, typed anew.
-// Process yellow, heparin, protamine and the rest group have no source.
+// Process yellow, heparin, protamine, anticoagulants and the rest group have no
+// source.
 func TestClassTable(t *testing.T) {
 	const table = `
 IND   FFED00 - - -
@@ -32,6 +33,7 @@ ACH   A4D65E - - -
 AEM   EFBE7D - - -
 HEP   FFFFFF - - -
 PRO   000000 stripes - -
+ACO   FFFFFF - - -
 OTH   FFFFFF - - -`
 	want := strings.Split(strings.TrimSpace(table), "\n")
 	if len(labels.Classes()) != len(want) {
