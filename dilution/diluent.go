@@ -50,6 +50,9 @@ func (w *work) diluentName() (string, bool) {
 	if s, ok := w.plan.Drug.Standard(w.plan.Standard); ok && s.Diluent != "" {
 		return s.Diluent, true
 	}
+	if name, ok := w.onlyStockedFluid(); ok {
+		return name, true
+	}
 	switch len(p.Diluents) {
 	case 0:
 		return "", w.refuse(refusal.Reason{

@@ -40,6 +40,7 @@ func (w *work) dose() bool {
 		return w.fault(err, "dose", w.o.Dose.Pos)
 	}
 	if w.doseIsWhole() {
+		// the syringe was read when the drug was drawn
 		d.Volume, d.Step = m.DrugVolume, m.DrugReading.Barrel.Step()
 	} else if !w.keepLimit(exact, d) || !w.doseReadable(exact, d) {
 		return false
@@ -47,7 +48,7 @@ func (w *work) dose() bool {
 	if d.Delivered, err = d.Volume.Holds(m.Concentration); err != nil {
 		return w.fault(err, "dose", w.o.Dose.Pos)
 	}
-	return true
+	return w.dosesFit(d)
 }
 
 // keepLimit moves a dose that its nearest graduation would carry past a limit
@@ -69,7 +70,7 @@ func (w *work) keepLimit(exact quantity.Volume, d *DosePart) bool {
 
 // doseIsWhole reports that the syringe holds exactly the one dose.
 func (w *work) doseIsWhole() bool {
-	return !w.o.Amount.Given() && !w.o.Concentration.Given()
+	return !w.o.Amount.Given() && !w.o.Concentration.Given() && !w.o.Doses.Given()
 }
 
 // doseReadable checks that the dose can be read off the giving barrel (R8).

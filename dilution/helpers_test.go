@@ -7,6 +7,7 @@ import (
 	"time"
 
 	"drawup/dilution"
+	"drawup/dilution/body"
 	"drawup/dilution/formulary"
 	"drawup/dilution/order"
 	"drawup/dilution/quantity"
@@ -96,4 +97,14 @@ func key(name, value string) string { return fmt.Sprintf("%s = %q", name, value)
 // at is a time in the zone of the session's default.
 func at(year int, month time.Month, day, hour, minute int) time.Time {
 	return time.Date(year, month, day, hour, minute, 0, 0, time.UTC)
+}
+
+// adultAge is forty years.
+func adultAge(t testing.TB) body.Age {
+	t.Helper()
+	a, err := body.ParseAge("40 years")
+	if err != nil {
+		t.Fatal(err)
+	}
+	return a
 }

@@ -3,6 +3,7 @@ package dilution
 import (
 	"fmt"
 	"math/big"
+	"slices"
 
 	"drawup/dilution/body"
 	"drawup/dilution/formulary"
@@ -20,28 +21,53 @@ func (w *work) infusion() bool {
 	if !w.o.Infusion {
 		return true
 	}
-	rows, ok := fittingRows(w, w.plan.Drug.Rates, "dose rate")
+	start, ok := w.startPart()
 	if !ok {
 		return false
+	}
+	part := &start
+	w.plan.Infusion = part
+	return w.setPump(part) && w.setRange(part) && w.extras(part) && w.longEnough(part)
+}
+
+// A started is the verdict of startPart, kept so that it is worked once.
+type started struct {
+	part InfusionPart
+	ok   bool
+}
+
+// startPart holds the ordered dose rates against their limits and finds the
+// weight or surface that they go by. It does not need the mixture.
+func (w *work) startPart() (InfusionPart, bool) {
+	if w.started == nil {
+		part, ok := w.pickStart()
+		w.started = &started{part, ok}
+	}
+	return w.started.part, w.started.ok
+}
+
+func (w *work) pickStart() (InfusionPart, bool) {
+	rows, ok := fittingRows(w, w.plan.Drug.Rates, "dose rate")
+	if !ok {
+		return InfusionPart{}, false
 	}
 	row, ok := w.pickRate(rows)
 	if !ok {
-		return false
+		return InfusionPart{}, false
 	}
-	part := &InfusionPart{Rule: row, Step: w.site.step}
+	part := InfusionPart{Rule: row, Step: w.site.step}
 	by := row.By
 	if w.o.RateBy.Given() {
 		by = w.o.RateBy.Value
 	}
 	var err error
 	if part.Weight, part.Surface, part.By, err = w.scalar(w.o.Start.Value.Basis(), by); err != nil {
-		return w.sizeFault(err, "start", w.o.Start.Pos)
+		return part, w.sizeFault(err, "start", w.o.Start.Pos)
 	}
-	w.plan.Infusion = part
 	w.unlikeWeight(w.o.RateBy.Given(), w.o.RateBy.Value, row.By, row.BySource, w.o.RateBy.Pos)
 	w.takenWeight(w.o.RateBy.Given(), part.By, part.Weight, row.BySource, w.o.Start.Pos)
 	w.weightNotes(part.By)
-	return w.setPump(part) && w.setRange(part) && w.extras(part)
+	return part, true
 }
 
 // per is the weight or surface of the part, for package pump.
@@ -338,6 +364,36 @@ func (w *work) extras(part *InfusionPart) bool {
 	}
 	if part.Minutes, err = w.plan.Mixture.FinalVolume.Minutes(part.Start.Rate); err != nil {
 		return w.fault(err, "run time", w.o.Start.Pos)
+	}
+	w.oneWeight(part)
+	return w.eachRung(part)
+}
+
+// eachRung puts into the ladder of a mixture for one weight what 1 mL/h gives,
+// where that lies in the range: the one row that its rule promises.
+func (w *work) eachRung(part *InfusionPart) bool {
+	if !part.Each.Given() {
+		return true
+	}
+	rung, err := pump.Set(part.Each, part.per(), w.plan.Mixture.Concentration, part.Step)
+	if err != nil {
+		return w.fault(err, "mixture", w.o.Mixture.Pos)
+	}
+	at := 0
+	for i, other := range part.Ladder {
+		n, err := other.Dose.Cmp(part.Each)
+		if err != nil {
+			return w.fault(err, "mixture", w.o.Mixture.Pos)
+		}
+		if n == 0 {
+			return true
+		}
+		if n < 0 {
+			at = i + 1
+		}
+	}
+	if len(inside([]pump.Setting{rung}, part)) == 1 {
+		part.Ladder = slices.Insert(part.Ladder, at, rung)
 	}
 	return true
 }

@@ -22,9 +22,9 @@ func (w *work) draw(t target) bool {
 		return false
 	}
 	m.DrugWanted, m.DrugReading, m.DrugVolume = need, r, r.Volume
-	n, err := m.DrugVolume.Containers(w.plan.Presentation.Volume)
-	if err != nil {
-		return w.fault(err, t.field, t.pos)
+	n, ok := w.open(t)
+	if !ok {
+		return false
 	}
 	m.Containers = n
 	if n > mostContainers {

@@ -25,13 +25,17 @@ func (w *work) mix() bool {
 	}
 	w.plan.Mixture = Mixture{Method: Neat, Strength: strength}
 	if p.Powder() && len(p.AddFluids) > 0 {
-		w.plan.Mixture.AddFluid = p.AddFluids[0]
+		w.plan.Mixture.AddFluid = w.powderFluid(p)
 	}
 	t, ok := w.target()
 	if !ok {
 		return false
 	}
-	return w.chooseMethod(t) && w.draw(t) && w.settleFinal(t) && w.results()
+	if !w.chooseMethod(t) || !w.draw(t) || !w.settleFinal(t) || !w.results() || !w.fetchFluids(t) {
+		return false
+	}
+	w.deadSpaceCounts(t)
+	return true
 }
 
 // target turns the order's words into an amount and a final volume.
@@ -55,8 +59,14 @@ func (w *work) target() (target, bool) {
 		}
 		w.plan.Standard = s.ID
 		return target{s.Amount, s.Volume, "standard", o.Standard.Pos}, true
-	case o.Infusion:
+	case o.Infusion && o.Mixture.Given():
+		return w.weightMade()
+	case o.Infusion && o.Concentration.Given() && !o.Volume.Given():
+		return w.forHours()
+	case o.Infusion && !o.Concentration.Given():
 		return target{o.MixAmount.Value, o.MixVolume.Value, "mix", o.MixAmount.Pos}, true
+	case o.Doses.Given():
+		return w.forDoses()
 	case o.Concentration.Given():
 		a, err := o.Volume.Value.Holds(o.Concentration.Value)
 		if err != nil {
@@ -164,7 +174,7 @@ func (w *work) neatOffGraduation(t target) bool {
 
 // results works amount, concentration, left-over, and the drug's companions.
 func (w *work) results() bool {
-	m, p := &w.plan.Mixture, w.plan.Presentation
+	m := &w.plan.Mixture
 	var err error
 	if m.Amount, err = m.DrugVolume.Holds(m.Strength); err != nil {
 		return w.fault(err, "amount", w.o.Pos)
@@ -172,7 +182,7 @@ func (w *work) results() bool {
 	if m.Concentration, err = m.Amount.In(m.FinalVolume); err != nil {
 		return w.fault(err, "concentration", w.o.Pos)
 	}
-	if m.LeftVolume, err = p.Volume.Times(m.Containers).Minus(m.DrugVolume); err != nil {
+	if m.LeftVolume, err = m.opened().Minus(m.DrugVolume); err != nil {
 		return w.fault(err, "left over", w.o.Pos)
 	}
 	if m.LeftAmount, err = m.LeftVolume.Holds(m.Strength); err != nil {

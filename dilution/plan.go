@@ -46,7 +46,9 @@ func (m Method) String() string {
 // volumes are exact and balance: taken = in the syringe + left over (R6).
 type Mixture struct {
 	Method        Method
-	Containers    int
+	Containers    int                    // of all sizes together
+	Packs         []Pack                 // what is opened, by size; one entry where all are alike
+	Fluids        []FluidPack            // containers of diluent to fetch; none without a shelf that lists them
 	Strength      quantity.Concentration // of the presentation, after mixing a powder
 	DrugWanted    quantity.Volume        // exact, before the graduation
 	DrugVolume    quantity.Volume
@@ -70,6 +72,23 @@ type Mixture struct {
 	Interval      quantity.Percent
 	Low, High     quantity.Concentration
 }
+
+// A Pack is some containers of one presentation.
+type Pack struct {
+	Presentation formulary.Presentation
+	Count        int
+}
+
+// A FluidPack is some containers of one fluid.
+type FluidPack struct {
+	Name, Container string
+	Volume          quantity.Volume // of one
+	Count           int
+	ForPowder       bool // to mix the powder with, not to dilute
+}
+
+// Mixed reports whether containers of several sizes are opened.
+func (m Mixture) Mixed() bool { return len(m.Packs) > 1 }
 
 // A DosePart is one dose out of the syringe.
 type DosePart struct {
@@ -104,8 +123,21 @@ type InfusionPart struct {
 	Ladder  []pump.Setting
 	Slips   []pump.SlipReading
 	Minutes int64 // until empty at the start rate
-	Rule    formulary.Rule[quantity.DoseRate]
+	// Usable is Minutes less what the line takes and what stays behind.
+	Usable             int64
+	Wanted             int64           // how long it is to last; 0 when the order does not say
+	Priming, DeadSpace quantity.Volume // not given: nothing is counted off
+	// Each is the dose rate that 1 mL/h gives, for a mixture made for one weight.
+	Each quantity.DoseRate
+	// RuleAmount is what the rule of such a mixture comes to, before the drug is
+	// moved to a graduation.
+	RuleAmount quantity.Amount
+	Rule       formulary.Rule[quantity.DoseRate]
 }
+
+// CountsOff reports whether part of the syringe never reaches the patient: it
+// fills the line, or stays behind.
+func (p InfusionPart) CountsOff() bool { return p.Priming.Given() || p.DeadSpace.Given() }
 
 // A UseBy is until when a syringe may be used, and why.
 type UseBy struct {
@@ -121,22 +153,30 @@ type UseBy struct {
 
 // A Plan is one syringe, worked.
 type Plan struct {
-	Number       int
-	Order        order.Syringe
-	Patient      order.Patient
-	Size         body.Size
-	Style        quantity.Style
-	Drug         formulary.Drug
-	Name         string // of the drug, as the papers print it
-	Other        string // its name elsewhere, where the site prints both
-	Presentation formulary.Presentation
-	Route        string
-	Mixture      Mixture
-	Dose         *DosePart     // nil when no dose was ordered
-	Infusion     *InfusionPart // nil for a bolus syringe
-	Prepared     time.Time
-	UseBy        UseBy
-	Standard     string // the standard preparation's id, if it is one
+	Number int
+	Order  order.Syringe // as typed
+	// Settled is the order with what the planner chose filled in: a concentration
+	// and a volume, a standard preparation. It is Order where nothing was open.
+	Settled   order.Syringe
+	Choices   []Choice
+	FromShelf bool // planned from a shelf
+	// NeedleDeadSpace is the shelf's figure for the needle that draws; not given
+	// without one.
+	NeedleDeadSpace quantity.Volume
+	Patient         order.Patient
+	Size            body.Size
+	Style           quantity.Style
+	Drug            formulary.Drug
+	Name            string // of the drug, as the papers print it
+	Other           string // its name elsewhere, where the site prints both
+	Presentation    formulary.Presentation
+	Route           string
+	Mixture         Mixture
+	Dose            *DosePart     // nil when no dose was ordered
+	Infusion        *InfusionPart // nil for a bolus syringe
+	Prepared        time.Time
+	UseBy           UseBy
+	Standard        string // the standard preparation's id, if it is one
 	// Edition and Region are the scheme of label classes that the site has
 	// picked; "" for the usual one.
 	Edition, Region string

@@ -11,6 +11,7 @@ import (
 	"drawup/dilution/pump"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
+	"drawup/dilution/syringe"
 )
 
 // A work is one syringe while it is being planned. Reasons gather; the steps
@@ -22,75 +23,17 @@ type work struct {
 	patient order.Patient
 	size    body.Size
 	plan    Plan
-	doseOK  bool               // verdict of pickDose
-	noted   map[body.Kind]bool // weights already commented on
-	fixed   *Quick             // a quick sum: its weight goes for every kind
+	sizes   []formulary.Presentation // sizes of one strength that may be opened together
+	holder  syringe.Barrel           // the giving syringe, where the target settled it
+	started *started                 // verdict of startPart
+	steps   int                      // lines of the giving syringe added so that it lasts
+	trying  bool                     // one of several ways, or an alternative: no remedy is worked out
+	stopped bool                     // a way that cannot be made
+	short   bool                     // it would last the hours with more in it
+	doseOK  bool                     // verdict of pickDose
+	noted   map[body.Kind]bool       // weights already commented on
+	fixed   *Quick                   // a quick sum: its weight goes for every kind
 	reasons refusal.List
-}
-
-// NewList plans every syringe of o that is not left out. It returns all
-// reasons; when any of them refuses, nothing of the list is to be made.
-func NewList(
-	o order.Order,
-	f *formulary.Formulary,
-	at time.Time,
-	leaveOut map[int]bool,
-	faults refusal.List,
-) (List, refusal.List) {
-	list := List{Order: o, Formulary: f, At: at}
-	var all refusal.List
-	for _, r := range faults {
-		if r.Syringe == 0 || !leaveOut[r.Syringe] {
-			all = append(all, r)
-		}
-	}
-	s, err := siteOf(o)
-	if err != nil {
-		return list, append(all, refusal.Reason{
-			Code: refusal.ValueUnknown, Severity: refusal.Refuse,
-			Field: "site", Rule: "R8",
-			Pos:     o.Site.Tolerance.Pos,
-			Message: err.Error(),
-			Remedy:  "mend the [site] table of the order",
-		})
-	}
-	tall, missing := tallManOf(f, o.Site.TallMan)
-	s.tallMan = tall
-	all = append(all, missing...)
-	broken := brokenSyringes(faults)
-	var made []*work
-	for _, sy := range o.Syringes {
-		unread := broken[sy.Number] || unreadable(o.Patients[sy.Patient])
-		w := newPlan(s, f, o, sy, at, unread)
-		p, reasons := w.plan, w.reasons
-		typed := append(ofPatient(faults, o, sy.Patient), faults.Cautions().Of(sy.Number)...)
-		p.Cautions = append(typed, p.Cautions...)
-		if unread && !leaveOut[sy.Number] {
-			all = append(all, reasons.Refusals()...)
-			continue
-		}
-		if leaveOut[sy.Number] {
-			list.LeftOut = append(list.LeftOut,
-				LeftOut{sy.Number, sy.Drug.Value, append(faults.Of(sy.Number), reasons.Refusals()...)})
-			continue
-		}
-		all = append(all, reasons...)
-		list.Plans = append(list.Plans, p)
-		made = append(made, w)
-	}
-	all = append(all, localSums(made)...)
-	whole := append(edition(s, o), shared(list.Plans)...)
-	all = append(all, whole...)
-	list.Cautions = append(ofOrder(faults), whole...)
-	if len(list.Plans) == 0 && !all.Refused() {
-		all = append(all, refusal.Reason{
-			Code: refusal.NothingToMake, Severity: refusal.Refuse,
-			Want:    "at least one syringe",
-			Message: "every syringe of the order is left out",
-			Remedy:  "leave fewer out",
-		})
-	}
-	return list, all
 }
 
 // syringes names the syringes of numbers, runs of them short: "syringes 1, 3 to
@@ -186,12 +129,12 @@ func newPlan(
 	broken bool,
 ) *work {
 	w := &work{site: s, f: f, o: sy, patient: o.Patients[sy.Patient]}
-	w.plan = Plan{Number: sy.Number, Order: sy, Patient: w.patient, Style: s.style, Prepared: at, Route: "IV", Edition: s.edition, Region: s.region}
+	w.plan = Plan{Number: sy.Number, Order: sy, Settled: sy, Patient: w.patient, Style: s.style, Prepared: at, Route: "IV", Edition: s.edition, Region: s.region}
 	if sy.Route.Given() {
 		w.plan.Route = sy.Route.Value
 	}
 	if broken {
-		if sy.Drug.Given() && w.findDrug() {
+		if sy.Drug.Given() && w.findDrug() && (s.stock == nil || sy.Presentation.Given()) {
 			w.choosePresentation()
 		}
 		return w
@@ -201,17 +144,28 @@ func newPlan(
 		Height: w.patient.Height.Value, Weight: w.patient.Weight.Value,
 	}
 	w.plan.Size = w.size
-	for _, step := range []func() bool{
-		w.findDrug, w.nameIt, w.choosePresentation, w.mix, w.checkConcentration, w.dose,
-		w.infusion, w.holdsTooMuch, w.localKnown, w.certainty, w.useBy, w.lasts, w.balance,
-	} {
-		if !step() {
-			break
-		}
+	if s.stock != nil {
+		w.plan.FromShelf, w.plan.NeedleDeadSpace = true, s.stock.needle
+	}
+	if w.findDrug() && w.nameIt() {
+		w.make()
 	}
 	w.unverified()
+	w.plan.Settled = w.o
 	w.plan.Cautions = w.reasons.Cautions()
 	return w
+}
+
+// rest works everything that follows from the mixture.
+func (w *work) rest() bool {
+	for _, step := range []func() bool{
+		w.checkConcentration, w.dose, w.infusion, w.holdsTooMuch, w.localKnown, w.certainty, w.useBy, w.lasts, w.balance,
+	} {
+		if !step() {
+			return false
+		}
+	}
+	return true
 }
 
 // refuse adds a refusal and returns false, for "return w.refuse(…)".
@@ -276,16 +230,33 @@ func (w *work) fault(err error, field string, pos refusal.Pos) bool {
 // balance is the run-time check of rule R6: taken = in the syringe + left.
 func (w *work) balance() bool {
 	m := w.plan.Mixture
-	taken := w.plan.Presentation.Amount.Times(m.Containers)
-	sum, err := m.Amount.Plus(m.LeftAmount)
-	if err != nil || !sum.Equal(taken) {
-		return w.refuse(refusal.Reason{
-			Code: refusal.RoutesDisagree, Rule: "R6",
-			Message: "the amounts taken, drawn and left over do not balance: a fault of this program, not of yours",
-			Remedy:  "do not use this result; report it",
-		})
+	if taken, err := m.taken(); err == nil {
+		if sum, err := m.Amount.Plus(m.LeftAmount); err == nil && sum.Equal(taken) {
+			return true
+		}
 	}
-	return true
+	return w.refuse(refusal.Reason{
+		Code: refusal.RoutesDisagree, Rule: "R6",
+		Message: "the amounts taken, drawn and left over do not balance: a fault of this program, not of yours",
+		Remedy:  "do not use this result; report it",
+	})
+}
+
+// taken is the amount in all containers that are opened.
+func (m Mixture) taken() (quantity.Amount, error) {
+	var sum quantity.Amount
+	for i, pack := range m.Packs {
+		a := pack.Presentation.Amount.Times(pack.Count)
+		if i == 0 {
+			sum = a
+			continue
+		}
+		var err error
+		if sum, err = sum.Plus(a); err != nil {
+			return sum, err
+		}
+	}
+	return sum, nil
 }
 
 // unverified gathers one caution for all unverified figures that were used.

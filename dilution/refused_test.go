@@ -84,13 +84,38 @@ func formularyFor(t *testing.T, name string, starter *formulary.Formulary) *form
 	return f
 }
 
+// A bench that reads orders from text.
+type bench struct{ dilution.Bench }
+
+// plan reads an order from text and plans it from the bench.
+func (b bench) plan(t interface{ Helper() }, f *formulary.Formulary, text string) (dilution.List, refusal.List) {
+	t.Helper()
+	o, faults := order.Read("order.toml", []byte(text))
+	return b.NewList(o, f, o.Session.Prepared.Value, nil, faults)
+}
+
+// benchFor is the invented shelf beside the file, of the same name and the ending
+// "shelf", or no shelf.
+func benchFor(t *testing.T, name string) bench {
+	t.Helper()
+	data, err := os.ReadFile(filepath.Join(refusedFolder, strings.TrimSuffix(name, ".toml")+".shelf"))
+	if os.IsNotExist(err) {
+		return bench{}
+	}
+	if err != nil {
+		t.Fatal(err)
+	}
+	s := shelf(t, string(data))
+	return bench{dilution.Bench{Shelf: &s}}
+}
+
 // Every refusal is expected on its line, and every expected one comes. The
 // expected codes stand in the files, written by hand.
 func TestRefusedPlans(t *testing.T) {
 	f := starter(t)
 	for name, text := range refusedTexts(t) {
 		t.Run(name, func(t *testing.T) {
-			_, list := plan(t, formularyFor(t, name, f), text)
+			_, list := benchFor(t, name).plan(t, formularyFor(t, name, f), text)
 			want, noted := marks(text, "want"), marks(text, "caution")
 			if len(want)+len(noted) == 0 {
 				t.Error("the file expects nothing")

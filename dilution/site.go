@@ -3,11 +3,13 @@ package dilution
 import (
 	"fmt"
 	"math/big"
+	"slices"
 	"time"
 
 	"drawup/dilution/formulary"
 	"drawup/dilution/order"
 	"drawup/dilution/quantity"
+	"drawup/dilution/refusal"
 	"drawup/dilution/syringe"
 )
 
@@ -21,6 +23,9 @@ type site struct {
 	barrels   []syringe.Barrel
 	bolus     useByPolicy
 	infusion  useByPolicy
+
+	stock   *stock // nil without a shelf
+	explain bool   // keep the alternatives that were weighed
 
 	jurisdiction string            // whose standard preparations are used; "" for any
 	tallMan      formulary.TallMan // the zero list has no names
@@ -119,4 +124,37 @@ func knownSizes(style quantity.Style) string {
 		out = append(out, style.Volume(b.Nominal()))
 	}
 	return joinOr(out)
+}
+
+// takeShelf takes the syringes of the shelf in place of the usual ones. Where the
+// order lists sizes of its own, they narrow the shelf.
+func (s *site) takeShelf(stock *stock, o order.Order) refusal.List {
+	s.stock, s.barrels = stock, stock.barrels
+	if len(o.Site.Barrels) == 0 {
+		return nil
+	}
+	var out refusal.List
+	s.barrels = nil
+	for _, f := range o.Site.Barrels {
+		found := false
+		for _, b := range stock.barrels {
+			if f.Value.Given() && b.Nominal().Cmp(f.Value) == 0 {
+				s.barrels, found = append(s.barrels, b), true
+			}
+		}
+		if f.Value.Given() && !found {
+			out = append(out, refusal.Reason{
+				Code: refusal.SyringeUnknown, Severity: refusal.Refuse, Field: "site.barrels", Got: f.Text, Want: "a size on the shelf", Rule: "R8", Pos: f.Pos,
+				Message: fmt.Sprintf("the order counts on a %s syringe, and the shelf has none", s.style.Volume(f.Value)),
+				Remedy:  "put it on the shelf, or take it out of the order's list",
+			})
+		}
+	}
+	slices.SortFunc(s.barrels, func(a, b syringe.Barrel) int {
+		if a.Before(b) {
+			return -1
+		}
+		return 1
+	})
+	return out
 }

@@ -66,7 +66,6 @@ func (w Facts) container(p dilution.Plan) {
 	s, pr := w.style, p.Presentation
 	w.put(recheck.ContainerAmount, s.Amount(pr.Amount))
 	w.put(recheck.ContainerVolume, s.Volume(pr.Volume))
-	w.put(recheck.ContainerCount, fmt.Sprint(p.Mixture.Containers))
 	w.put(recheck.Strength, s.Concentration(p.Mixture.Strength))
 	if pr.Powder() {
 		w.put(recheck.PowderAdded, s.Volume(pr.Added))
@@ -78,6 +77,37 @@ func (w Facts) container(p dilution.Plan) {
 		}
 	}
 	w.put(recheck.ATC, p.Drug.ATC)
+	w.packs(p)
+}
+
+// packs counts the containers. Where several sizes are opened, the counts and
+// what is left over wait for the second route's sum; until then the papers say
+// which sizes, in words.
+func (w Facts) packs(p dilution.Plan) {
+	s, m := w.style, p.Mixture
+	if m.Mixed() && !recheck.Knows(recheck.Row(recheck.Pack, 1, "count")) {
+		return
+	}
+	w.put(recheck.ContainerCount, fmt.Sprint(m.Containers))
+	w.put(recheck.LeftVolume, s.Volume(m.LeftVolume))
+	w.put(recheck.LeftAmount, s.Amount(m.LeftAmount))
+	if !m.Mixed() {
+		return
+	}
+	for i, pack := range m.Packs {
+		row := func(column string) string { return recheck.Row(recheck.Pack, i+1, column) }
+		w.put(row("presentation"), pack.Presentation.ID)
+		w.put(row("amount"), s.Amount(pack.Presentation.Amount))
+		w.put(row("volume"), s.Volume(pack.Presentation.Volume))
+		w.put(row("count"), fmt.Sprint(pack.Count))
+	}
+}
+
+// known puts a figure whose sum the second route may not have yet.
+func (w Facts) known(name, text string) {
+	if recheck.Knows(name) {
+		w.put(name, text)
+	}
 }
 
 func (w Facts) mixture(p dilution.Plan) {
@@ -95,8 +125,6 @@ func (w Facts) mixture(p dilution.Plan) {
 	}
 	w.put(recheck.AmountInSyringe, s.Amount(m.Amount))
 	w.put(recheck.Concentration, s.Concentration(m.Concentration))
-	w.put(recheck.LeftVolume, s.Volume(m.LeftVolume))
-	w.put(recheck.LeftAmount, s.Amount(m.LeftAmount))
 	w.put(recheck.SecondContainer, s.Amount(p.Presentation.SecondAmount))
 	w.put(recheck.SecondAmount, s.Amount(m.SecondAmount))
 	w.put(recheck.SecondConcentrated, s.Concentration(m.SecondConc))
@@ -164,6 +192,7 @@ func (w Facts) dose(p dilution.Plan) {
 	w.put(recheck.DoseVolume, s.Volume(d.Volume))
 	w.put(recheck.DoseStep, s.Volume(d.Step))
 	w.put(recheck.DoseDelivered, s.Amount(d.Delivered))
+	w.known(recheck.DoseCount, p.Order.Doses.Text)
 }
 
 // movedText is what a rounding lost: "1.12 % more", "0.7 % less", "nothing".
@@ -253,8 +282,30 @@ func (w *Facts) infusion(p dilution.Plan) {
 		w.put(recheck.Row(recheck.Slip, i+1, "rate"), s.FlowRate(slip.Rate))
 	}
 	w.slips = len(part.Slips)
-	w.put(recheck.RunTime, Span(part.Minutes))
-	empty := p.Prepared.Add(time.Duration(part.Minutes) * time.Minute)
+	w.runs(p)
+}
+
+// runs is how long the infusion lasts. Where something is counted off for the
+// line and the dead space, the time that is left waits for the second route's
+// sum; until then the papers say so in words, and no time to the last drop, which
+// would be too long.
+func (w Facts) runs(p dilution.Plan) {
+	part, s := p.Infusion, w.style
+	minutes := part.Minutes
+	if part.CountsOff() {
+		if !recheck.Knows(recheck.UsableTime) {
+			return
+		}
+		minutes = part.Usable
+		w.put(recheck.UsableTime, Span(minutes))
+		w.put(recheck.Priming, s.Volume(part.Priming))
+		w.put(recheck.DeadSpace, s.Volume(part.DeadSpace))
+	} else {
+		w.put(recheck.RunTime, Span(minutes))
+	}
+	w.known(recheck.WantedTime, p.Order.Hours.Text)
+	w.known(recheck.RuleRate, s.DoseRate(part.Each))
+	empty := p.Prepared.Add(time.Duration(minutes) * time.Minute)
 	w.put(recheck.EmptyAt, Moment(s, empty))
 	w.put(recheck.EmptyOffset, empty.Format("-07:00"))
 }

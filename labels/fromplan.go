@@ -8,6 +8,7 @@ import (
 	"drawup/dilution"
 	"drawup/dilution/body"
 	"drawup/dilution/order"
+	"drawup/dilution/quantity"
 	"drawup/dilution/recheck"
 	"drawup/dilution/refusal"
 )
@@ -136,7 +137,7 @@ func asked(p dilution.Plan) []recheck.Figure {
 			out = append(out, recheck.Figure{Paper: "order", Name: name, Text: text})
 		}
 	}
-	o := p.Order
+	o := p.Settled
 	add(recheck.Dose, typedDose(o.Dose.Text))
 	add(recheck.AmountInSyringe, o.Amount.Text)
 	add(recheck.Concentration, o.Concentration.Text)
@@ -150,13 +151,29 @@ func asked(p dilution.Plan) []recheck.Figure {
 	add(recheck.UseHours, Span(p.UseBy.Minutes))
 	add(recheck.Prepared, p.Prepared.Format("2006-01-02 15:04"))
 	add(recheck.PreparedOffset, p.Prepared.Format("-07:00"))
-	for _, text := range []string{
-		o.AcceptedBy.Text, o.AcceptedReason.Text, o.Batch.Text, o.Expiry.Text, o.Indication.Text,
-	} {
+	for _, text := range typedBesides(p) {
 		add(recheck.Typed, text)
 	}
 	if p.Mixture.AssayAssumed {
 		add(recheck.Assay, p.Mixture.Assay.Written())
+	}
+	return out
+}
+
+// typedBesides are the other words of the order, and of the shelf where the plan
+// says what to fetch from it: sentences may repeat their figures.
+func typedBesides(p dilution.Plan) []string {
+	o := p.Settled
+	out := []string{o.AcceptedBy.Text, o.AcceptedReason.Text, o.Batch.Text, o.Expiry.Text, o.Indication.Text,
+		o.Doses.Text, o.Hours.Text, o.Priming.Text, o.DeadSpace.Text, o.Each.Text}
+	if part := p.Infusion; part != nil && part.DeadSpace.Given() {
+		out = append(out, p.Style.Volume(part.DeadSpace))
+	}
+	for _, f := range p.Mixture.Fluids {
+		out = append(out, p.Style.Volume(f.Volume))
+	}
+	if p.NeedleDeadSpace.Given() {
+		out = append(out, p.Style.Volume(p.NeedleDeadSpace))
 	}
 	return out
 }
@@ -198,16 +215,30 @@ func weightWord(weight, surface bool, ordered order.Field[body.Kind], row body.K
 	return row.String()
 }
 
-// askedVolume says which volume the order's number meant (rule R5).
+// askedVolume says which volume the order's number meant (rule R5), and how much
+// drug the order takes where it says so beside the other keys.
 func askedVolume(p dilution.Plan, add func(name, text string)) {
-	text := p.Order.Volume.Text
-	if p.Order.Infusion {
-		amount, volume, _ := strings.Cut(p.Order.MixAmount.Text, " in ")
+	o := p.Settled
+	text := o.Volume.Text
+	switch {
+	case o.Infusion && o.Mixture.Given():
+		// What the rule comes to is asked until the second route has a sum for it.
+		if !askedIfKnown(add, recheck.RuleRate, o.Each.Text) {
+			add(recheck.AmountInSyringe, exactly(p.Infusion.RuleAmount))
+		}
+	case o.Infusion && !o.Concentration.Given():
+		amount, volume, _ := strings.Cut(o.MixAmount.Text, " in ")
 		if s, ok := p.Drug.Standard(p.Standard); ok {
 			amount, volume = s.Amount.Written(), s.Volume.Written()
 		}
 		add(recheck.AmountInSyringe, strings.TrimSpace(amount))
 		text = strings.TrimSpace(volume)
+	case o.Doses.Given() && askedIfKnown(add, recheck.DoseCount, o.Doses.Text):
+	case o.Doses.Given() && p.Mixture.Method == dilution.Neat:
+		// So many doses as they are read, asked until the second route has a sum.
+		add(recheck.DrugVolume, ungrouped(p.Style.Volume(p.Mixture.DrugVolume)))
+	case o.Doses.Given() && !o.Concentration.Given():
+		add(recheck.AmountInSyringe, exactly(p.Dose.Amount.Times(o.Doses.Value)))
 	}
 	if p.Mixture.Method == dilution.AddTo {
 		add(recheck.DiluentVolume, text)
@@ -216,11 +247,34 @@ func askedVolume(p dilution.Plan, add func(name, text string)) {
 	add(recheck.FinalVolume, text)
 }
 
+// askedIfKnown asks under a name that the second route may not know yet, and
+// reports whether it did.
+func askedIfKnown(add func(name, text string), name, text string) bool {
+	if !recheck.Knows(name) {
+		return false
+	}
+	add(name, text)
+	return true
+}
+
+// exactly is an amount with all its digits, as an order would write it.
+func exactly(a quantity.Amount) string {
+	if !a.Given() {
+		return ""
+	}
+	return a.Exact(a.Best()) + " " + a.Best().String()
+}
+
 func askedRates(p dilution.Plan, add func(name, text string)) {
 	if p.Infusion == nil {
 		return
 	}
 	part := p.Infusion
+	if part.CountsOff() {
+		askedIfKnown(add, recheck.Priming, p.Style.Volume(part.Priming))
+		askedIfKnown(add, recheck.DeadSpace, p.Style.Volume(part.DeadSpace))
+	}
+	askedIfKnown(add, recheck.WantedTime, p.Order.Hours.Text)
 	add(recheck.StartDose, typedDose(p.Order.Start.Text))
 	if part.Down {
 		add(recheck.RateRounding, "down")
@@ -229,7 +283,11 @@ func askedRates(p dilution.Plan, add func(name, text string)) {
 	for i, rung := range part.Ladder {
 		add(recheck.Row(recheck.Ladder, i+1, "dose"), ungrouped(p.Style.DoseRate(rung.Dose)))
 	}
-	empty := p.Prepared.Add(time.Duration(part.Minutes) * time.Minute)
+	minutes := part.Minutes
+	if part.CountsOff() {
+		minutes = part.Usable
+	}
+	empty := p.Prepared.Add(time.Duration(minutes) * time.Minute)
 	add(recheck.EmptyOffset, empty.Format("-07:00"))
 	add(recheck.RateStep, p.Style.FlowRate(part.Step))
 	add(recheck.LowDose, part.Low.Dose.Written())

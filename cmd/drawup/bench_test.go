@@ -45,10 +45,14 @@ func BenchmarkFifteenPlans(b *testing.B) { benchPlan(b, 15) }
 
 // The starter formulary, from its text.
 func BenchmarkFormulary(b *testing.B) {
+	texts, err := formulary.DefaultTexts()
+	if err != nil {
+		b.Fatal(err)
+	}
 	b.ReportAllocs()
 	for b.Loop() {
-		if _, err := formulary.Default(); err != nil {
-			b.Fatal(err)
+		if _, faults := formulary.Read(texts...); faults.Refused() {
+			b.Fatal(faults)
 		}
 	}
 }

@@ -117,6 +117,8 @@ func examples() map[refusal.Code]func(*testing.T) string {
 		refusal.LabelTooSmall:    preparing(infusion, "order.toml", "--infusion-stock", "roll-40x15"),
 		refusal.LabelMoved:       preparing(strings.Replace(soundOrder, "suxamethonium\"\ndose = \"1 mg/kg", "neostigmine with glycopyrronium\"\ndose = \"2.5 mg", 1), "order.toml", "--stock", "roll-40x15"),
 		refusal.OneWeightOnly:    told("mix", "--each", "1 microgram/kg/min", "--weight", "6 kg", "--rule", "three"),
+		refusal.PairNever:        told("formulary", "pair", "propofol", "with", "remifentanil"),
+		refusal.PairNotListed:    told("formulary", "pair", "propofol", "with", "heparin"),
 		refusal.ApprovedOther:    approved("base 9", "2026-12-01"),
 		refusal.ApprovalPast:     approved("", "2019-12-01"),
 		refusal.RoutesDisagree:   unproven,

@@ -22,18 +22,19 @@ type quantityJSON struct {
 
 // A reasonJSON is one refusal or caution of a JSON document.
 type reasonJSON struct {
-	Code    string `json:"code"`
-	Message string `json:"message"`
-	Field   string `json:"field"`
-	Got     string `json:"got"`
-	Want    string `json:"want"`
-	Rule    string `json:"rule"`
-	Source  string `json:"source"`
-	Remedy  string `json:"remedy"`
-	Syringe int    `json:"syringe,omitempty"`
-	File    string `json:"file,omitempty"`
-	Line    int    `json:"line,omitempty"`
-	Column  int    `json:"column,omitempty"`
+	Code    string       `json:"code"`
+	Message string       `json:"message"`
+	Field   string       `json:"field"`
+	Got     string       `json:"got"`
+	Want    string       `json:"want"`
+	Rule    string       `json:"rule"`
+	Source  string       `json:"source"`
+	Remedy  string       `json:"remedy"`
+	Instead *insteadJSON `json:"instead,omitempty"`
+	Syringe int          `json:"syringe,omitempty"`
+	File    string       `json:"file,omitempty"`
+	Line    int          `json:"line,omitempty"`
+	Column  int          `json:"column,omitempty"`
 }
 
 // findings is the part that every JSON document ends with. Both lists are
@@ -60,7 +61,7 @@ func reasonsJSON(l refusal.List) []reasonJSON {
 	for _, r := range l {
 		out = append(out, reasonJSON{
 			Code: string(r.Code), Message: r.Message, Field: r.Field, Got: r.Got, Want: r.Want,
-			Rule: r.Rule, Source: r.Source, Remedy: r.Remedy, Syringe: r.Syringe,
+			Rule: r.Rule, Source: r.Source, Remedy: r.Remedy, Instead: insteadOf(r.Instead), Syringe: r.Syringe,
 			File: r.Pos.File, Line: r.Pos.Line, Column: r.Pos.Column,
 		})
 	}

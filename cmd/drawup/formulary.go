@@ -23,6 +23,7 @@ type formularyRequest struct {
 	out          onceText
 	at           onceText
 	review       onceText
+	use, route   onceText
 	signers      []string
 	own          formularyFlags
 	json, help   bool
@@ -49,6 +50,7 @@ func formularyVerbs() []formularyVerb {
 	return []formularyVerb{
 		{"list", "nothing", []string{"class", "flag", "jurisdiction", "formulary", "approval", "at"}, 0, 0, runFormularyList},
 		{"show", "the name of a drug", []string{"formulary", "approval", "at"}, 1, 12, runFormularyShow},
+		{"pair", "two drugs with the word with between them", []string{"formulary", "approval", "at", "use", "route"}, 3, 24, runFormularyPair},
 		{"verify", "a formulary file, or nothing for the starter", nil, 0, 40, runFormularyVerify},
 		{"compare", "two formularies, the older first", nil, 2, 2, runFormularyCompare},
 		{"print", "nothing", []string{"formulary", "approval", "at", "out"}, 0, 0, runFormularyPrint},
@@ -76,6 +78,8 @@ func readFormularyRequest(args []string) (*formularyRequest, formularyVerb) {
 	set.Var(&r.jurisdiction, "jurisdiction", "where a source holds")
 	set.Var(&r.out, "out", "file to write")
 	set.Var(&r.at, "at", "day")
+	set.Var(&r.use, "use", "bolus or infusion")
+	set.Var(&r.route, "route", "route")
 	set.Var(&r.review, "review", "last day of the approval")
 	set.StringArrayVar(&r.signers, "signed", nil, "name and role")
 	set.StringSliceVar(&r.own.files, "formulary", nil, "")

@@ -294,6 +294,13 @@ func presentationOf(s quantity.Style, p formulary.Presentation) shownPresentatio
 	return out
 }
 
+// noQuantity is for figures that are no quantity of the quick sums: times.
+func noQuantity(time.Duration) *quantityJSON { return nil }
+
+func concentrationIn(s quantity.Style) func(quantity.Concentration) *quantityJSON {
+	return func(c quantity.Concentration) *quantityJSON { return concentrationJSON(s, c) }
+}
+
 func ifGiven(given bool, q *quantityJSON) *quantityJSON {
 	if given {
 		return q
@@ -324,7 +331,6 @@ func shownOf[T any](f formulary.Figure[T], value func(T) *quantityJSON) *shownFi
 func rulesOf[T any](list []formulary.Rule[T], s quantity.Style, value func(T) *quantityJSON) []shownRule {
 	out := []shownRule{}
 	dose := func(x quantity.Dose) *quantityJSON { return doseJSON(s, x) }
-	noQuantity := func(time.Duration) *quantityJSON { return nil }
 	for _, r := range list {
 		row := shownRule{For: r.For, Routes: whole(r.Routes), Ages: r.Ages(), By: r.By.String(),
 			HardLow: shownOf(r.HardLow, value), UsualLow: shownOf(r.UsualLow, value), UsualHigh: shownOf(r.UsualHigh, value),

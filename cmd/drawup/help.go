@@ -16,6 +16,7 @@ func topics() []topic {
 		{"rounding", "where numbers are rounded and where not", helpRounding},
 		{"exit-codes", "what the program ends with", helpExitCodes},
 		{"cautions", "refusals and cautions, and how to read them", helpCautions},
+		{"shelf", "a file of what is stocked, and how the planner chooses from it", helpShelf},
 	}
 }
 
@@ -95,6 +96,8 @@ const helpPrepare = `drawup prepare: plan an order: sheets, labels, pump cards, 
   --mono                             for a printer without colours
   --formulary        my-site.toml    the site's own formulary files, over the starter
   --approval         approval.toml   who signed for it
+  --shelf            shelf.toml      what there is to make them from: see drawup help shelf
+  --explain                          what was chosen, why, and what else was weighed
   --json                             print plan.json in place of the table
 
 Everything is worked and placed before anything is written: a refusal leaves no
@@ -115,6 +118,7 @@ const helpLabel = `drawup label: one label, at the moment its syringe is filled
   --mono                             for a printer without colours
   --formulary        my-site.toml    the site's own formulary files, over the starter
   --approval         approval.toml   who signed for it
+  --shelf            shelf.toml      what there is to make it from; the one of drawup prepare
   --json                             print the plan of this syringe
 `
 
@@ -127,6 +131,7 @@ const helpRead = `drawup read: what a scanned label or pack says, in words
   --at               "2026-12-01 12:00"
                                      the time to hold the use-by against; now if left out
   --order            day.toml        an order with the site's own GTINs, to name what they stand for
+  --formulary        my-site.toml    the site's own formulary file, over the starter
   --style            uk              house style of numbers and units: uk, us, si
   --json                             the answer as a JSON document
 
@@ -147,6 +152,10 @@ const helpFormulary = `drawup formulary: what is stored of each drug, checked, c
      --flag          "high alert"    with this mark only
      --jurisdiction  UK              with a source or a standard of this jurisdiction
   show DRUG                          all that is stored of one drug, by any of its names
+  pair DRUG with DRUG                whether two drugs may share a syringe, and within which
+                                     limits; refused unless the formulary allows the pair
+     --use           infusion        bolus unless given
+     --route         epidural        IV unless given
   verify [FILE...]                   hold a formulary against itself: every finding with
                                      file, line and column; the starter without a file
   compare OLDER NEWER                what changed, what was loosened first; a file, a folder

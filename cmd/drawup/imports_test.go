@@ -24,6 +24,7 @@ func mayImport() map[string][]string {
 		"cmd/drawup":                {"*"},
 		"dilution":                  plan,
 		"dilution/body":             {"dilution/quantity", "dilution/roots"},
+		"dilution/certainty":        {"dilution/quantity", "dilution/syringe"},
 		"dilution/formulary":        {"dilution/quantity", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
 		"dilution/formulary/verify": {"dilution/body", "dilution/formulary", "dilution/quantity", "dilution/quantity/lint", "dilution/refusal", "dilution/salts"},
 		"dilution/order":            {"dilution/quantity", "dilution/quantity/lint", "dilution/refusal", "dilution/tomlfile", "dilution/body"},
@@ -36,6 +37,7 @@ func mayImport() map[string][]string {
 		"dilution/salts":            {"dilution/quantity"},
 		"dilution/syringe":          {"dilution/quantity", "dilution/roots"},
 		"dilution/tomlfile":         {"dilution/refusal"},
+		"dilution/twostep":          {"dilution/quantity", "dilution/syringe"},
 		"fonts":                     {},
 		"labels":                    said, // no page, no font, no PDF
 		"labels/gs1":                {},
@@ -45,13 +47,17 @@ func mayImport() map[string][]string {
 		"layouts/ink":               {},
 		"layouts/pdf":               {"layouts/ink", "fonts"},
 		"layouts/pdf/readback":      {"layouts/ink"}, // from tests only
+
+		"dilution/formulary/published": {"dilution/formulary"}, // from tests only
 	}
 }
 
 const module = "drawup"
 
 // onlyFromTests lists packages that no shipped code may import.
-func onlyFromTests() []string { return []string{"layouts/pdf/readback"} }
+func onlyFromTests() []string {
+	return []string{"layouts/pdf/readback", "dilution/formulary/published"}
+}
 
 // goFiles lists the Go files of the module by package folder.
 func goFiles(t *testing.T, tests bool) map[string][]string {

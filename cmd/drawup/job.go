@@ -25,6 +25,7 @@ type job struct {
 	file   string // as typed
 	tell   progress
 	order  order.Order
+	shelf  *order.Shelf // nil without one
 	list   dilution.List
 	facts  []labels.Facts
 	labels []labels.Label
@@ -57,12 +58,16 @@ func newJob(
 	products, wrong := productsOf(o, f)
 	faults = append(faults, wrong...)
 	j := &job{file: file, order: o, tell: tell}
-	list, reasons := dilution.NewList(o, f, when, leaveOut, faults)
+	list, reasons := lib.bench.NewList(o, f, when, leaveOut, faults)
 	j.list = list
 	if reasons.Refused() {
 		reasons.Sort()
 		return j, reasons
 	}
+	if len(lib.shelf) > 0 { // another shelf is another plan (rule R19)
+		data = append(append([]byte{}, data...), lib.shelf...)
+	}
+	j.shelf = lib.bench.Shelf
 	j.making = makingOf(o, f, when, data, leaveOut)
 	j.making.Products = products
 	reasons = append(reasons, leftOut(list)...)

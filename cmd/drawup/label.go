@@ -40,6 +40,9 @@ func runLabel(e env, args []string) int {
 	if faults.Refused() {
 		return finish(e, f.json, doc, nil, faults)
 	}
+	if faults = f.takeShelf(&lib); faults.Refused() {
+		return finish(e, f.json, doc, nil, faults)
+	}
 	j, all := newOneJob(f, lib, e)
 	if all.Refused() {
 		return finish(e, f.json, doc, nil, all)

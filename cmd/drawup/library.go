@@ -5,6 +5,7 @@ import (
 	"slices"
 	"time"
 
+	"drawup/dilution"
 	"drawup/dilution/formulary"
 	"drawup/dilution/refusal"
 	"drawup/dilution/tomlfile"
@@ -15,6 +16,8 @@ import (
 type library struct {
 	form     *formulary.Formulary
 	approval *formulary.Approval // nil when none was named
+	bench    dilution.Bench      // the shelf, where one was named
+	shelf    []byte              // its text; part of what the papers are worked from
 }
 
 // formularyFlags names the site's own files.

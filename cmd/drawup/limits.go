@@ -19,6 +19,7 @@ func limitFlags() []flagSpec {
 		{"route", "IV", "with --drug: the route, IV unless given"},
 		{"line", "central", "with --drug: peripheral or central, peripheral unless given"},
 		{"fluid", "sodium chloride 0.9 %", "with --drug: the diluent's name"},
+		{"formulary", "my-site.toml", "with --drug: the site's own formulary file, over the starter"},
 	}
 }
 
@@ -28,7 +29,7 @@ func limitFlags() []flagSpec {
 func (r *request) checkLimits(q dilution.Quick) dilution.QuickLimits {
 	var limits dilution.QuickLimits
 	if !r.given("drug") {
-		r.forbid("it goes with --drug", "use", "indication", "age", "route", "line", "fluid", "presentation")
+		r.forbid("it goes with --drug", "use", "indication", "age", "route", "line", "fluid", "presentation", "formulary")
 		r.noLimits()
 		return limits
 	}
@@ -59,15 +60,20 @@ func (r *request) quick(q dilution.Quick) (dilution.Quick, *formulary.Formulary,
 	return q, f, ok
 }
 
-// formulary is the starter, read once for each request.
+// formulary is the starter, with the site's own file over it where one is named,
+// read once for each request.
 func (r *request) formulary() (*formulary.Formulary, bool) {
 	if r.stored == nil {
-		f, err := formulary.Default()
-		if err != nil {
-			r.add(ourFault(0, err))
+		var own formularyFlags
+		if r.given("formulary") {
+			own.files = strings.Split(r.texts["formulary"].text, ",")
+		}
+		lib, faults := libraryOf(own)
+		r.faults = append(r.faults, faults...)
+		if faults.Refused() {
 			return nil, false
 		}
-		r.stored = f
+		r.stored = lib.form
 	}
 	return r.stored, true
 }
@@ -143,7 +149,7 @@ func (r *request) oneOf(name string, words ...string) bool {
 
 // limitsNote says what was checked, and what a quick sum cannot know.
 func (r *request) limitsNote(q dilution.Quick, f *formulary.Formulary, limits dilution.QuickLimits) {
-	words := "checked against the " + f.State()
+	words := "checked against " + f.Name + " " + f.Version + ": " + f.State()
 	if q.Weight.Given() && limits.By != body.None && limits.By != 0 {
 		words += "; an order would go by " + limits.By.String() + " weight, and the weight given is taken as that"
 	}

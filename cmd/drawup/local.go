@@ -18,6 +18,7 @@ func localFlags() []flagSpec {
 		{"give", "lidocaine 1 %, 10 mL", `a local anaesthetic and its volume, again for each drug and site; ", at most 7 mg/kg" behind it sets its maximum`},
 		{"weight", "72 kg", "body weight, where a maximum is per kg"},
 		{"age", "54 years", "the patient's age, where maxima depend on it"},
+		{"formulary", "my-site.toml", "the site's own formulary file, over the starter"},
 	}
 }
 

@@ -20,6 +20,7 @@ type planDocument struct {
 	Preparer  string         `json:"preparer,omitempty"`
 	Invented  bool           `json:"invented,omitempty"`
 	Formulary *formularyJSON `json:"formulary,omitempty"`
+	Shelf     *shelfJSON     `json:"shelf,omitempty"`
 	Digest    string         `json:"digest,omitempty"`
 	Syringes  []syringeJSON  `json:"syringes"`
 	LeftOut   []leftOutJSON  `json:"left_out,omitempty"`
@@ -65,6 +66,10 @@ type syringeJSON struct {
 	Dose          *dosePlan     `json:"dose,omitempty"`
 	Infusion      *infusionPlan `json:"infusion,omitempty"`
 	UseBy         useByPlan     `json:"use_by"`
+	Opened        []packJSON    `json:"opened"`
+	Fluids        []fluidJSON   `json:"diluent_containers,omitempty"`
+	Doses         int           `json:"doses,omitempty"`
+	Choices       []choiceJSON  `json:"choices"`
 	Serial        string        `json:"serial"`
 	Code          string        `json:"code"`  // the shortest form of the barcode
 	Codes         []string      `json:"codes"` // all forms, the fullest first; the label has one of them
@@ -105,7 +110,8 @@ type infusionPlan struct {
 	Ladder     []settingJSON `json:"ladder"`
 	Slips      []slipJSON    `json:"slips"`
 	RunMinutes int64         `json:"run_minutes"`
-	CheckedBy  string        `json:"checked_against"`
+	lastsJSON
+	CheckedBy string `json:"checked_against"`
 }
 
 type settingJSON struct {
@@ -136,6 +142,9 @@ func planOf(j *job) *planDocument {
 		Formulary: &formularyJSON{m.Formulary, j.list.Formulary.Digest, m.State},
 		Digest:    m.Digest, Syringes: []syringeJSON{},
 	}
+	if j.shelf != nil {
+		doc.Shelf = &shelfJSON{filepath.Base(j.shelf.File), j.shelf.Name.Value, j.shelf.Invented}
+	}
 	for i, p := range j.list.Plans {
 		doc.Syringes = append(doc.Syringes, syringePlan(p, m.SerialOf(p.Number), j.labels[i].Codes))
 	}
@@ -159,6 +168,7 @@ func syringePlan(p dilution.Plan, serial string, codes []labels.Cell) syringeJSO
 		},
 		LeftVolume: volumeJSON(s, m.LeftVolume), LeftAmount: amountJSON(s, m.LeftAmount),
 		UseBy:  useByPlan{p.UseBy.At.Format(time.RFC3339), p.UseBy.Minutes, p.UseBy.Won, p.UseBy.Source},
+		Opened: packsOf(m), Fluids: fluidPacksOf(s, m), Doses: p.Order.Doses.Value, Choices: choicesOf(p.Choices),
 		Serial: serial, Cautions: reasonsJSON(p.Cautions),
 	}
 	for _, code := range codes {
@@ -218,7 +228,7 @@ func infusionOf(s quantity.Style, p dilution.Plan) *infusionPlan {
 	out := &infusionPlan{
 		Standard: p.Standard, WeightBy: part.By.String(), Weight: scalarJSON(s, part.Weight, part.Surface),
 		Step: flowRateJSON(s, part.Step), Start: settingOf(s, part.Start), Low: settingOf(s, part.Low),
-		High: settingOf(s, part.High), RunMinutes: part.Minutes,
+		High: settingOf(s, part.High), RunMinutes: part.Minutes, lastsJSON: lastsOf(s, *part),
 		CheckedBy: rowText(part.Rule.For, part.Rule.Ages()),
 	}
 	if part.Limit.Dose.Given() {

@@ -33,6 +33,8 @@ type paperFlags struct {
 	leaveOut      []string
 	syringe       int
 	formulary     formularyFlags
+	shelf         string
+	explain       bool
 	orders        []string
 }
 
@@ -48,6 +50,7 @@ func readPaperFlags(name string, args []string) (*paperFlags, refusal.List) {
 	f.set.StringVar(&f.stock, "stock", "", "stock of blank labels")
 	f.set.StringSliceVar(&f.formulary.files, "formulary", nil, "the site's own formulary files")
 	f.set.StringVar(&f.formulary.approval, "approval", "", "who signed for the formulary")
+	f.set.StringVar(&f.shelf, "shelf", "", "what there is to make them from")
 	f.set.BoolVar(&f.mono, "mono", false, "black and white printer")
 	f.set.BoolVar(&f.json, "json", false, "")
 	f.set.BoolVarP(&f.help, "help", "h", false, "")
@@ -57,6 +60,7 @@ func readPaperFlags(name string, args []string) (*paperFlags, refusal.List) {
 		f.set.StringVar(&f.infusionStock, "infusion-stock", "a4-24", "stock for infusion labels")
 		f.set.IntVar(&f.used, "labels-used", 0, "labels already taken from the first sheet")
 		f.set.StringSliceVar(&f.leaveOut, "leave-out", nil, "syringe numbers to leave out")
+		f.set.BoolVar(&f.explain, "explain", false, "what else was weighed")
 	case "label":
 		f.set.StringVar(&f.out, "out", "", "file to write")
 		f.set.IntVar(&f.syringe, "syringe", 0, "number of the syringe")
@@ -102,6 +106,9 @@ func runPrepare(e env, args []string) int {
 	}
 	lib, faults := libraryOf(f.formulary)
 	if faults.Refused() {
+		return finish(e, f.json, doc, nil, faults)
+	}
+	if faults = f.takeShelf(&lib); faults.Refused() {
 		return finish(e, f.json, doc, nil, faults)
 	}
 	jobs, all := f.work(lib, leaveOut, progressOn(e))
@@ -259,6 +266,11 @@ func (f *paperFlags) write(e env, jobs []*job, all refusal.List) int {
 	var b strings.Builder
 	for _, j := range jobs {
 		table(&b, j)
+	}
+	if f.explain {
+		for _, j := range jobs {
+			tellChoices(&b, j)
+		}
 	}
 	tellFiles(&b, files)
 	tellCautions(&b, all.Cautions())

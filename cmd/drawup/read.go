@@ -23,6 +23,7 @@ type readRequest struct {
 	text       string
 	at, order  onceText
 	styled     onceText
+	own        formularyFlags
 	style      quantity.Style
 	json, help bool
 	faults     refusal.List
@@ -47,10 +48,11 @@ func runRead(e env, args []string) int {
 	if r.faults.Refused() {
 		return finish(e, r.json, doc, nil, r.faults)
 	}
-	form, err := formulary.Default()
-	if err != nil {
-		return finish(e, r.json, doc, nil, refusal.List{ourFault(0, err)})
+	lib, faults := libraryOf(r.own)
+	if faults.Refused() {
+		return finish(e, r.json, doc, nil, faults)
 	}
+	form := lib.form
 	products := r.products(form)
 	if r.faults.Refused() {
 		return finish(e, r.json, doc, nil, r.faults)
@@ -67,11 +69,12 @@ func newReadRequest(args []string) (*readRequest, []string) {
 	set.Var(&r.at, "at", "time to hold the use-by against")
 	set.Var(&r.order, "order", "order with the site's GTINs")
 	set.Var(&r.styled, "style", "uk, us or si")
+	set.StringSliceVar(&r.own.files, "formulary", nil, "the site's own formulary files")
 	set.BoolVar(&r.json, "json", false, "")
 	set.BoolVarP(&r.help, "help", "h", false, "")
 	if err := set.Parse(args); err != nil {
 		r.json = r.json || wantsJSON(args)
-		r.add(flagFault(err, []string{"at", "order", "style", "json", "help"}))
+		r.add(flagFault(err, []string{"at", "order", "style", "formulary", "json", "help"}))
 		return r, nil
 	}
 	if r.styled.given {

@@ -2,7 +2,10 @@ package formulary
 
 import (
 	"fmt"
+	"maps"
 	"regexp"
+	"slices"
+	"strconv"
 	"strings"
 	"time"
 
@@ -88,6 +91,14 @@ func (r *reader) identity(d *Drug, rec drugRecord, i int) {
 		r.fault(refusal.KeyMissing, d.Name, "the INN in lower case", "the drug has no name in lower case",
 			"drug", i, "name")
 	}
+	for _, style := range slices.Sorted(maps.Keys(rec.Names)) {
+		n := rec.Names[style]
+		if _, ok := quantity.StyleNamed(style); !ok {
+			r.fault(refusal.ValueUnknown, style, "uk, us or si", "the house style of the name is not known", "drug", i, "names", style)
+		} else if n == "" || n == strings.ToUpper(n) {
+			r.fault(refusal.ValueUnknown, n, "a name that is not all capitals", "the name on paper is blank or all capitals", "drug", i, "names", style)
+		}
+	}
 	if !atcPattern.MatchString(d.ATC) {
 		r.fault(refusal.ValueUnknown, d.ATC, "a code such as N01AX07", "the ATC code has not the shape of one",
 			"drug", i, "atc")
@@ -149,14 +160,15 @@ func parseFactor(s string) (Factor, error) {
 	return Factor{PerGram: a}, err
 }
 
-// parseMinutes reads "24 h", "30 min" or "7 days" as whole minutes.
+// parseMinutes reads "24 h", "30 min" or "7 days" as whole minutes. The number
+// is whole: half an hour is 30 min.
 func parseMinutes(s string) (int64, error) {
 	number, unit, _ := strings.Cut(strings.TrimSpace(s), " ")
 	factor := map[string]int64{"min": 1, "h": 60, "hour": 60, "hours": 60, "day": 1440, "days": 1440}[unit]
-	var n int64
 	most := int64(100 * 365 * 24 * time.Hour / time.Minute)
-	if _, err := fmt.Sscanf(number, "%d", &n); err != nil || factor == 0 || n <= 0 || n > most {
-		return 0, fmt.Errorf("got %q, want a time such as \"24 h\"", s)
+	n, err := strconv.ParseInt(number, 10, 64)
+	if err != nil || number[0] == '+' || factor == 0 || n <= 0 || n > most {
+		return 0, fmt.Errorf("got %q, want a time in whole numbers such as \"24 h\" or \"30 min\"", s)
 	}
 	return n * factor, nil
 }
@@ -191,7 +203,11 @@ func (r *reader) presentation(rec presentationRecord, kind quantity.Kind, path .
 	}
 	p.Amount = a
 	r.contents(&p, rec, at)
-	if rec.SecondName != "" {
+	if (rec.SecondName == "") != (rec.SecondAmount == "") {
+		r.fault(refusal.KeyMissing, rec.SecondName+" "+rec.SecondAmount, "second_name and second_amount, or neither",
+			"the second drug of the container is half described", path...)
+	}
+	if rec.SecondName != "" && rec.SecondAmount != "" {
 		if p.SecondAmount, err = quantity.ParseAmount(rec.SecondAmount); err != nil {
 			r.badText(rec.SecondAmount, err, at("second_amount")...)
 		}
@@ -221,6 +237,10 @@ func (r *reader) contents(p *Presentation, rec presentationRecord, at func(strin
 		v, err := quantity.ParseVolume(rec.Volume)
 		if err != nil {
 			r.badText(rec.Volume, err, at("volume")...)
+		}
+		if rec.Add != "" || rec.Displacement != nil || len(rec.AddFluids) > 0 {
+			r.fault(refusal.KeyConflict, rec.Form, "a powder, or none of add, add_fluids and displacement",
+				"what is no powder is not mixed", at("form")...)
 		}
 		p.Volume = v
 		return
@@ -293,6 +313,7 @@ func (r *reader) bounds(rec concentrationRecord, path ...any) Bounds {
 		r.fault(refusal.ValueUnknown, b.Use+", "+b.Line, "use bolus or infusion; line any, peripheral or central",
 			"the row does not say what it is for", path...)
 	}
+	r.ageOrder(b.AgeFrom, b.AgeTo, path)
 	if b.Low.Given() && b.High.Given() {
 		if n, err := b.Low.Value.Cmp(b.High.Value); err != nil || n > 0 {
 			r.fault(refusal.KeyConflict, b.Low.Text+" to "+b.High.Text, "low not above high, counted the same way",

@@ -107,13 +107,14 @@ func (d Drug) Entries() []Entry {
 			Pos: s.Pos, looser: present})
 	}
 	for _, s := range d.Stability {
-		e.add(Entry{Name: s.name(), Text: s.Text, Source: s.Source, Unverified: s.Unverified, Pos: s.Pos,
+		e.add(Entry{Name: s.Name(), Text: s.Text, Source: s.Source, Unverified: s.Unverified, Pos: s.Pos,
 			looser: upwards, value: time.Duration(s.Minutes) * time.Minute})
 	}
 	return e.list
 }
 
-func (s Stability) name() string {
+// Name is the preparation in words, as Entries names it.
+func (s Stability) Name() string {
 	return "stability, " + s.Diluent + ", " + s.Storage + tail(", ", s.Container) + tail(", from ", s.Low.Text) + tail(", up to ", s.High.Text)
 }
 

@@ -112,6 +112,30 @@ func (f *Formulary) Forbidden(a, b string) (NeverMix, bool) {
 	return NeverMix{}, false
 }
 
+// MayShare says whether two drugs may share a syringe: the record that allows
+// it, or the reason why not. A pair that the formulary keeps apart is refused,
+// and so is one that it does not name (rule R10).
+func (f *Formulary) MayShare(a, b, use, route string) (Mix, *refusal.Reason) {
+	two := a + " with " + b
+	if n, never := f.Forbidden(a, b); never {
+		return Mix{}, &refusal.Reason{Code: refusal.PairNever, Severity: refusal.Refuse, Field: "drugs", Got: two,
+			Want: "two syringes", Rule: "R11", Source: n.Source.Title,
+			Message: fmt.Sprintf("%s and %s must never share a syringe: %s", a, b, n.Reason),
+			Remedy:  "make two syringes; no setting passes this limit"}
+	}
+	if m, ok := f.Pair(a, b, use, route); ok {
+		return m, nil
+	}
+	r := &refusal.Reason{Code: refusal.PairNotListed, Severity: refusal.Refuse, Field: "drugs", Got: two,
+		Want: "a pair that the formulary allows", Rule: "R10",
+		Message: fmt.Sprintf("the formulary does not allow %s and %s in one syringe, %s, %s", a, b, use, route),
+		Remedy:  "make two syringes, or add the pair with its limit and source to the formulary (whoever keeps it does that)"}
+	if with := f.Partners(a); len(with) > 0 {
+		r.Want = a + " with " + strings.Join(with, " or ")
+	}
+	return Mix{}, r
+}
+
 // Partners are the drugs that may share a syringe with this one.
 func (f *Formulary) Partners(name string) []string {
 	var out []string
@@ -231,6 +255,7 @@ func (r *reader) localMaximum(rec localMaximumRecord, kind quantity.Kind, path .
 		Total:  figure(r, rec.Total, quantity.ParseAmount, at("total")...),
 		DayMax: figure(r, rec.DayMax, quantity.ParseDose, at("day_max")...)}
 	m.By, m.BySource = r.scalar(rec.By, rec.BySource, at("by"))
+	r.ageOrder(m.AgeFrom, m.AgeTo, path)
 	if !m.PerKg.Given() && !m.Total.Given() {
 		r.fault(refusal.KeyMissing, "", "per_kg or total", "the maximum has no figure", path...)
 	}

@@ -46,7 +46,14 @@ func DefaultTexts() ([]Text, error) {
 
 // Default is the embedded starter formulary. It is checked by the tests, row
 // by row, so a refusal here is a fault of ours.
-func Default() (*Formulary, error) {
+//
+// It is read once: the value never changes, and reading it takes longer than
+// most of what is asked of it.
+func Default() (*Formulary, error) { return starterOnce() }
+
+var starterOnce = sync.OnceValues(readStarter)
+
+func readStarter() (*Formulary, error) {
 	texts, err := DefaultTexts()
 	if err != nil {
 		return nil, err
@@ -245,6 +252,10 @@ func figure[T any](r *reader, rec *figureRecord, parse func(string) (T, error), 
 		r.badText(rec.Value, err, path...)
 	}
 	s := r.source(rec.Source, path...)
+	if rec.Jurisdiction != "" && !jurisdictionPattern.MatchString(rec.Jurisdiction) {
+		r.fault(refusal.ValueUnknown, rec.Jurisdiction, `two capital letters such as "UK", or "international"`,
+			"the jurisdiction of the figure is not one", path...)
+	}
 	if rec.Unverified && rec.VerifiedBy != "" {
 		r.fault(refusal.KeyConflict, "unverified, and verified by "+rec.VerifiedBy, "one of the two",
 			"the figure is said to be verified and not to be", path...)

@@ -70,8 +70,10 @@ func refusedFiles(t *testing.T, folder string, read func(formulary.Text) refusal
 				}
 			}
 			for i, line := range strings.Split(string(data), "\n") {
-				if _, code, ok := strings.Cut(line, "# want: "); ok {
-					want = append(want, fmt.Sprintf("%d: %s", i+1, code))
+				if _, codes, ok := strings.Cut(line, "# want: "); ok {
+					for code := range strings.SplitSeq(codes, ", ") {
+						want = append(want, fmt.Sprintf("%d: %s", i+1, code))
+					}
 				}
 			}
 			sort.Strings(got)

@@ -24,6 +24,7 @@ func (r *reader) doseRule(rec doseRecord, path ...any) Rule[quantity.Dose] {
 		RepeatAfter: figure(r, rec.RepeatAfter, parseSpan, at("repeat_after")...),
 		Frail:       rec.Frail}
 	rule.By, rule.BySource = r.scalar(rec.By, rec.BySource, at("by"))
+	whomFor(r, rule, path)
 	inOrder(r, rule, quantity.Dose.Cmp, path)
 	return rule
 }
@@ -41,8 +42,26 @@ func (r *reader) rateRule(rec infusionRecord, path ...any) Rule[quantity.DoseRat
 		Longest:   figure(r, rec.Longest, parseSpan, at("longest")...),
 		Frail:     rec.Frail}
 	rule.By, rule.BySource = r.scalar(rec.By, rec.BySource, at("by"))
+	whomFor(r, rule, path)
 	inOrder(r, rule, quantity.DoseRate.Cmp, path)
 	return rule
+}
+
+// whomFor wants a row to say what it is for, by which routes, and from a younger
+// age to an older one.
+func whomFor[T any](r *reader, rule Rule[T], path []any) {
+	if rule.For == "" || len(rule.Routes) == 0 {
+		r.fault(refusal.KeyMissing, rule.For, "an indication and at least one route", "the row does not say what it is for", path...)
+	}
+	r.ageOrder(rule.AgeFrom, rule.AgeTo, path)
+}
+
+// ageOrder refuses ages that nobody has: from one to the same or a younger one.
+func (r *reader) ageOrder(from, to body.Age, path []any) {
+	if from.Given() && to.Given() && !from.Less(to) {
+		r.fault(refusal.KeyConflict, from.String()+" to "+to.String(), "a younger age before an older one",
+			"the ages of the row hold nobody", path...)
+	}
 }
 
 // scalar reads which body weight a row goes by, and where that is said.

@@ -62,7 +62,12 @@ func checkValues(t *testing.T, n int, s Syringe) {
 		"from":          s.From.Given() == s.From.Value.Given(),
 		"to":            s.To.Given() == s.To.Value.Given(),
 		"mix":           s.MixAmount.Given() == s.MixVolume.Value.Given() && s.MixAmount.Value.Given() == s.MixVolume.Value.Given(),
-		"standard":      !s.Infusion || s.Standard.Given() != s.MixAmount.Given(),
+		"standard":      !s.Infusion || ways(s) == 1 || ways(s) == 0 && s.Hours.Given(),
+		"hours":         s.Hours.Given() == (s.Hours.Value > 0),
+		"priming":       s.Priming.Given() == s.Priming.Value.Given(),
+		"dead space":    s.DeadSpace.Given() == s.DeadSpace.Value.Given(),
+		"each":          s.Each.Given() == s.Each.Value.Given() && (!s.Each.Given() || s.Mixture.Given()),
+		"doses":         s.Doses.Given() == (s.Doses.Value > 0) && (!s.Doses.Given() || s.Dose.Given()),
 		"expiry":        s.Expiry.Given() != s.Expiry.Value.IsZero(),
 		"accepted":      s.AcceptedBy.Given() == s.AcceptedReason.Given(),
 	} {
@@ -70,4 +75,15 @@ func checkValues(t *testing.T, n int, s Syringe) {
 			t.Errorf("syringe %d was accepted, and its %s is not whole: %s", n+1, name, fmt.Sprintf("%+v", s))
 		}
 	}
+}
+
+// ways counts in how many ways an infusion says what it holds.
+func ways(s Syringe) int {
+	n := 0
+	for _, there := range []bool{s.Standard.Given(), s.MixAmount.Given(), s.Mixture.Given(), s.Concentration.Given()} {
+		if there {
+			n++
+		}
+	}
+	return n
 }

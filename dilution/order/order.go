@@ -107,20 +107,35 @@ type Syringe struct {
 	Size   Field[quantity.Volume] // nominal volume of the giving syringe
 
 	// Of a syringe: one of dose; amount; amount and volume; concentration and
-	// volume; a dose with either of these pairs.
+	// volume; a dose with either of these pairs; a number of doses, alone or with a
+	// concentration or a volume.
 	Dose          Field[quantity.Dose]
 	DoseBy        Field[body.Kind] // the word after the dose: "0.3 mg/kg lean"
 	Amount        Field[quantity.Amount]
 	Concentration Field[quantity.Concentration]
 	Volume        Field[quantity.Volume]
+	Doses         Field[int]  // how many doses it is to hold
+	Dilute        Field[bool] // it may be diluted where the neat dose cannot be measured
 
-	// Of an infusion: a standard preparation by name, or a mixture.
+	// Of an infusion: a standard preparation by name; a mixture; a concentration
+	// with a volume or for so many hours; a mixture made for one weight; or hours
+	// alone, for the planner to choose a standard preparation that lasts them.
 	Standard        Field[string]
 	MixAmount       Field[quantity.Amount]
 	MixVolume       Field[quantity.Volume]
 	Method          Field[string] // one of the Method texts; MakeUpTo when not given
 	Start, From, To Field[quantity.DoseRate]
 	RateBy          Field[body.Kind] // the word after the start dose rate
+
+	// How long it is to last at the start rate, and what of its volume never
+	// reaches the patient: what fills the line, what stays in syringe and line.
+	Hours              Field[time.Duration]
+	Priming, DeadSpace Field[quantity.Volume]
+
+	// A mixture made for one weight: its rule, and the dose rate that 1 mL/h of it
+	// gives (1 microgram/kg/min when not given).
+	Mixture Field[string]
+	Each    Field[quantity.DoseRate]
 
 	// A named person and a reason take the responsibility for a soft limit (R11).
 	AcceptedBy, AcceptedReason Field[string]
@@ -131,4 +146,10 @@ const (
 	MakeUpTo        = "make up to"
 	AddTo           = "add to"
 	WithdrawThenAdd = "withdraw, then add"
+)
+
+// Rules of mixtures that are made for one weight.
+const (
+	RuleOfSix   = "rule of six"   // 6 mg for each kg in 100 mL: 1 mL/h gives 1 microgram/kg/min
+	RuleOfThree = "rule of three" // 3 mg for each kg in 50 mL: the same
 )

@@ -425,7 +425,7 @@ func TestKnownKeysAreTheRecords(t *testing.T) {
 	data, err := toml.Marshal(fileRecord{
 		Session:  sessionRecord{Date: "", Prepared: ""},
 		Site:     siteRecord{Barrels: []string{}, Products: []productRecord{{}}},
-		Patients: []patientRecord{{Weighed: "", Syringes: []syringeRecord{{commonRecord: c}}, Infusions: []infusionRecord{{commonRecord: c}}}},
+		Patients: []patientRecord{{Weighed: "", Syringes: []syringeRecord{{commonRecord: c, Doses: ""}}, Infusions: []infusionRecord{{commonRecord: c}}}},
 	})
 	if err != nil {
 		t.Fatal(err)

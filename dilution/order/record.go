@@ -78,6 +78,8 @@ type syringeRecord struct {
 	Amount        string `toml:"amount"`
 	Concentration string `toml:"concentration"`
 	Volume        string `toml:"volume"`
+	Doses         any    `toml:"doses"`
+	Dilute        bool   `toml:"dilute_if_needed"`
 }
 
 type infusionRecord struct {
@@ -89,6 +91,14 @@ type infusionRecord struct {
 	Start    string `toml:"start"`
 	From     string `toml:"from"`
 	To       string `toml:"to"`
+
+	Concentration string `toml:"concentration"`
+	Volume        string `toml:"volume"`
+	Hours         string `toml:"hours"`
+	Priming       string `toml:"priming"`
+	DeadSpace     string `toml:"dead_space"`
+	Mixture       string `toml:"mixture"`
+	Each          string `toml:"one_ml_per_hour"`
 }
 
 // knownKeys lists every key of the records with its table; a test holds the
@@ -103,8 +113,9 @@ func knownKeys() []string {
 		{"site", []string{"style", "bolus_use_by", "infusion_use_by", "smallest_volume", "tolerance", "pump_step", "barrels", "jurisdiction", "tall_man", "dual_names", "edition", "anticoagulants"}},
 		{"site.gtin", []string{"number", "drug", "concentration", "volume"}},
 		{"patient", []string{"id", "name", "sex", "age", "height", "weight", "weighed", "estimated", "frail"}},
-		{"patient.syringe", append(commonKeys(), "dose", "amount", "concentration", "volume")},
-		{"patient.infusion", append(commonKeys(), "standard", "mix", "method", "line", "start", "from", "to")},
+		{"patient.syringe", append(commonKeys(), "dose", "amount", "concentration", "volume", "doses", "dilute_if_needed")},
+		{"patient.infusion", append(commonKeys(), "standard", "mix", "method", "line", "start", "from", "to", "concentration", "volume", "hours",
+			"priming", "dead_space", "mixture", "one_ml_per_hour")},
 	} {
 		for _, name := range t.names {
 			keys = append(keys, t.table+"."+name)

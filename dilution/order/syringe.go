@@ -48,7 +48,12 @@ func (r *reader) syringe(patient int, path []any, s syringeRecord) Syringe {
 	out.Amount = read(r, s.Amount, quantity.ParseAmount, at(path, "amount"))
 	out.Concentration = read(r, s.Concentration, quantity.ParseConcentration, at(path, "concentration"))
 	out.Volume = read(r, s.Volume, quantity.ParseVolume, at(path, "volume"))
+	out.Doses = r.count(s.Doses, at(path, "doses"))
+	if s.Dilute {
+		out.Dilute = Field[bool]{true, "true", r.places.Of(at(path, "dilute_if_needed")...)}
+	}
 	r.wanted(path)
+	r.several(path, s.Dilute)
 	r.threeFit(path, out)
 	if out.Dose.Value.Given() {
 		r.bodyFor(at(path, "dose"), patient, out.Dose.Value.Basis(), out.DoseBy)
@@ -57,13 +62,16 @@ func (r *reader) syringe(patient int, path []any, s syringeRecord) Syringe {
 }
 
 // combinations says what the four keys of a syringe may be together.
-const combinations = "dose; amount; amount and volume; concentration and volume; or a dose with amount and volume or with concentration and volume"
+const combinations = "dose; amount; amount and volume; concentration and volume; a dose with amount and volume or with concentration and volume; or doses beside a dose"
 
 // wanted refuses combinations of keys that say too little or contradict each
 // other. A key whose value did not read is there all the same.
 func (r *reader) wanted(path []any) {
 	has := func(name string) bool { return r.places.Has(at(path, name)...) }
 	dose, amount, conc, volume := has("dose"), has("amount"), has("concentration"), has("volume")
+	if dose && has("doses") && !amount {
+		return // the number of doses settles what is missing
+	}
 	conflict := func(name, message, remedy string) {
 		r.refuse(at(path, name), refusal.Reason{Code: refusal.KeyConflict, Message: message, Got: name, Want: combinations, Remedy: remedy})
 	}
@@ -112,37 +120,6 @@ func (r *reader) kindsDiffer(path []any, got, other string) {
 	r.refuse(path, refusal.Reason{Code: refusal.AmountKindDiffer, Got: got, Want: "the same way of counting as " + other, Rule: "R4",
 		Message: fmt.Sprintf("%s counts the drug in two ways, %s and %s, that cannot be compared", r.here(), got, other),
 		Remedy:  "write both in mass, both in units or both in mmol"})
-}
-
-// infusion reads one syringe for a pump.
-func (r *reader) infusion(patient int, path []any, s infusionRecord) Syringe {
-	out := r.common(patient, path, s.commonRecord)
-	out.Infusion = true
-	out.Standard = r.text(s.Standard, at(path, "standard"))
-	out.Method = read(r, s.Method, parseMethod, at(path, "method"))
-	out.Line = read(r, s.Line, parseLine, at(path, "line"))
-	out.Start, out.RateBy = dosed(r, s.Start, quantity.ParseDoseRate, at(path, "start"))
-	out.From = read(r, s.From, quantity.ParseDoseRate, at(path, "from"))
-	out.To = read(r, s.To, quantity.ParseDoseRate, at(path, "to"))
-	mix := read(r, s.Mix, parseMix, at(path, "mix"))
-	out.MixAmount = Field[quantity.Amount]{Value: mix.Value.amount, Text: mix.Text, Pos: mix.Pos}
-	out.MixVolume = Field[quantity.Volume]{Value: mix.Value.volume, Text: mix.Text, Pos: mix.Pos}
-	standard := out.Standard.Given() || r.unread(at(path, "standard"))
-	mixed := r.places.Has(at(path, "mix")...)
-	switch {
-	case standard && mixed:
-		r.refuse(at(path, "mix"), refusal.Reason{Code: refusal.KeyConflict, Got: "standard and mix", Want: "one of the two",
-			Message: r.here() + " names a standard preparation and a mixture of its own", Remedy: "take one of them out"})
-	case !standard && !mixed:
-		r.refuse(path, refusal.Reason{Code: refusal.KeyMissing, Got: "no standard, no mix", Want: "one of the two",
-			Message: r.here() + " does not say what the syringe is to hold", Remedy: `add a line such as: standard = "4 mg in 50 mL"`})
-	}
-	r.required(r.places.Has(at(path, "start")...), path, "start", r.here(), `start = "0.05 microgram/kg/min"`)
-	r.ratesFit(path, out)
-	if out.Start.Value.Given() {
-		r.bodyFor(at(path, "start"), patient, out.Start.Value.Basis(), out.RateBy)
-	}
-	return out
 }
 
 // mixture is an amount made up to a volume.

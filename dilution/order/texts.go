@@ -80,6 +80,10 @@ func spaced(key string) string {
 		return "barrel"
 	case "from", "to", "start":
 		return key + " rate"
+	case "one_ml_per_hour":
+		return "dose rate that 1 mL/h gives"
+	case "hours":
+		return "time that it is to last"
 	}
 	return strings.ReplaceAll(strings.Replace(key, "use_by", "use-by", 1), "_", " ")
 }

@@ -86,18 +86,22 @@ func (x exact) toStep(step exact, d Direction) (exact, error) {
 	if !step.positive() {
 		return exact{}, &NotGivenError{What: "a step above zero"}
 	}
-	var n *big.Int
+	// x is count/of steps, both whole numbers and of above zero: no fraction is
+	// brought to lowest terms on the way.
+	count := new(big.Int).Mul(x.r.Num(), step.r.Denom())
+	of := new(big.Int).Mul(x.r.Denom(), step.r.Num())
 	switch d {
-	case HalfUp:
-		n = x.add(step.quo(whole(2))).floorDiv(step)
+	case HalfUp: // the whole part of count/of and a half
+		count.Add(count.Lsh(count, 1), of)
+		count.Div(count, of.Lsh(of, 1))
 	case Down:
-		n = x.floorDiv(step)
+		count.Div(count, of)
 	case Up:
-		n = new(big.Int).Neg(whole(0).sub(x).floorDiv(step))
+		count.Neg(count.Div(count.Neg(count), of))
 	default:
 		return exact{}, &NotGivenError{What: "a rounding direction"}
 	}
-	return exact{r: new(big.Rat).Mul(new(big.Rat).SetInt(n), step.r)}, nil
+	return exact{r: new(big.Rat).SetFrac(count.Mul(count, step.r.Num()), step.r.Denom())}, nil
 }
 
 // decimal gives the terminating decimal text of x, or false.

@@ -92,8 +92,9 @@ func ratioOf(text string) (string, bool) {
 	return n, ok && strings.Trim(n, "0123456789.,' ") == ""
 }
 
-// readRatio reads 1 in n as 1 g in n mL. n is a whole number from 10 on, at
-// most nine digits, plain or set off in threes.
+// readRatio reads 1 in n as 1 g in n mL. n is a whole number from 100 on, at
+// most nine digits, plain or set off in threes: "1 in 10" is the language of
+// parts, one of drug with nine of diluent, or with ten.
 func readRatio(s, text, n string) (Concentration, error) {
 	digits := n
 	for _, mark := range []string{",", " "} {
@@ -101,9 +102,9 @@ func readRatio(s, text, n string) (Concentration, error) {
 			digits = joined
 		}
 	}
-	if !allDigits(digits) || len(digits) < 2 || len(digits) > 9 || digits[0] == '0' {
+	if !allDigits(digits) || len(digits) < 3 || len(digits) > 9 || digits[0] == '0' {
 		return Concentration{}, &SyntaxError{Got: s, Want: wantConcentration, Code: RatioText,
-			Why: "a ratio must be 1 in a whole number from 10 on"}
+			Why: "a ratio must be 1 in a whole number from 100 on; a smaller one may mean parts, so write the volumes or mg/mL"}
 	}
 	of, _ := new(big.Rat).SetString(digits)
 	return Concentration{x: whole(1000).quo(exact{r: of}), kind: ByMass, unit: Milligram(), text: text}, nil

@@ -34,7 +34,7 @@ func TestStrengths(t *testing.T) {
 
 // TestRatiosRefused: a ratio that could be read in two ways is not read.
 func TestRatiosRefused(t *testing.T) {
-	for _, text := range []string{"1:5", "1:0", "1:", "1:1", "1:0100", "1:1,5", "1 in 1,5", "1:1,00", "1:1234,567", "1:0,500", "1:10,00", "1:1000.5", "1 in 10.5", "1:x", "1:1000 mL", "1:1,000,0", "1:1234567890", "2:1000", "1:-10", "1:٥٠"} {
+	for _, text := range []string{"1:5", "1 in 10", "1:10", "1:99", "1:0", "1:", "1:1", "1:0100", "1:1,5", "1 in 1,5", "1:1,00", "1:1234,567", "1:0,500", "1:10,00", "1:1000.5", "1 in 10.5", "1:x", "1:1000 mL", "1:1,000,0", "1:1234567890", "2:1000", "1:-10", "1:٥٠"} {
 		c, err := ParseConcentration(text)
 		if fault := faultIn(t, text, err); fault.Code != RatioText || fault.Likely != "" || c.Given() {
 			t.Errorf("%q: got %s, likely %q, want %s", text, fault.Code, fault.Likely, RatioText)

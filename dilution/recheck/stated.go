@@ -215,3 +215,45 @@ const (
 	ProductConcentration = "product.concentration"
 	ProductVolume        = "product.volume"
 )
+
+// Names whose sums are not written yet: [Knows] tells which of them have one. A
+// figure without a sum is not printed, and nothing is asked under its name; the
+// papers say what it is about in words.
+//
+//	dose.count      how many doses the syringe holds, as typed: "4"; the order then asks for
+//	                drug: neat, final.volume = dose.count x dose.volume; otherwise final.volume
+//	                is at least that, and the amount that is wanted follows from the asked
+//	                concentration, or is dose.count x dose.amount in the asked final.volume
+//	priming         what fills the line, as typed: "2 mL"
+//	dead.space      what stays in syringe and line, as typed in the order or on the shelf: "0.1 mL"
+//	wanted.time     how long the infusion is to last, as typed: "12 h"; usable.time is not less
+//	usable.time     (final.volume - priming - dead.space) / start.rate, whole minutes, rounded down;
+//	                what is not printed counts as nothing. Where it is printed, empty.at is
+//	                prepared + usable.time
+//	rule.rate       dose rate that 1 mL/h of a mixture for one weight gives, as typed or
+//	                "1 microgram/kg/min" by the published rules of six and of three; the amount
+//	                that is wanted is rule.rate x rate.weight x final.volume over 1 mL/h
+//
+//	pack.N.presentation  a size of container that is opened, by its id in the record; where there
+//	                are several sizes, N counts them from 1 and pack.1 is that of container.amount
+//	pack.N.amount   drug in one of them, as the record says
+//	pack.N.volume   volume of one of them, as the record says; amount / volume = strength
+//	pack.N.count    how many of them are opened, "2"; container.count is the sum of the counts,
+//	                left.volume the sum of count x volume less drug.volume, and one container less
+//	                of any size would not do
+const (
+	DoseCount  = "dose.count"
+	Priming    = "priming"
+	DeadSpace  = "dead.space"
+	WantedTime = "wanted.time"
+	UsableTime = "usable.time"
+	RuleRate   = "rule.rate"
+	Pack       = "pack"
+)
+
+// Knows reports whether the second route has a sum for figures of this name.
+func Knows(name string) bool {
+	key, _ := splitRow(name)
+	_, ok := allRules()[key]
+	return ok
+}

@@ -44,7 +44,7 @@ func All() []Entry {
 	var all []Entry
 	for _, part := range [][]Entry{
 		quantityEntries(), requestEntries(), fileEntries(), patientEntries(),
-		choiceEntries(), limitEntries(), measuringEntries(), paperEntries(), barcodeEntries(),
+		choiceEntries(), limitEntries(), measuringEntries(), shelfEntries(), paperEntries(), barcodeEntries(),
 	} {
 		all = append(all, part...)
 	}

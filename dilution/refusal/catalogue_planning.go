@@ -12,6 +12,8 @@ func choiceEntries() []Entry {
 		either(DiluentMissing, Choices, "R5", "The order does not say what to dilute with, or names a fluid for a syringe that takes none."),
 		stops(MustBeDiluted, Choices, "R10", "The ampoule or vial may not be given undiluted."),
 		stops(RouteNotListed, Choices, "R10", "The formulary has no dose by that route."),
+		stops(PairNever, Choices, "R11", "The formulary keeps the two drugs apart: they must never share a syringe."),
+		stops(PairNotListed, Choices, "R10", "The formulary does not name the two drugs as a pair that may share a syringe."),
 		stops(PreservedNeuraxial, Choices, "R11", "A preserved presentation is asked for by an epidural or intrathecal route."),
 		stops(StandardElsewhere, Choices, "R10", "The standard preparation belongs to another jurisdiction than the site's."),
 		stops(NeverAsInfusion, Choices, "R11", "The drug must never be given as an infusion."),

@@ -108,6 +108,8 @@ const (
 	ExpiredPresentation    Code = "presentation-expired"
 	UseByUnknown           Code = "use-by-unknown"
 	NegligibleDisplacement Code = "displacement-negligible"
+	PairNever              Code = "pair-never-in-one-syringe"
+	PairNotListed          Code = "pair-not-listed"
 	PreservedNeuraxial     Code = "preserved-near-nerves"
 	DoseAboveFirst         Code = "dose-above-first-maximum"
 	DoseAboveDay           Code = "dose-above-day-maximum"
@@ -132,6 +134,24 @@ const (
 	RateRounding          Code = "rate-rounding-large"
 	RunsPastUseBy         Code = "runs-past-use-by"
 	RateSlow              Code = "rate-slow-start"
+)
+
+// Faults of a shelf, and of planning from it.
+const (
+	ShelfEmpty        Code = "shelf-empty"
+	BarrelNone        Code = "no-barrel-stocked"
+	BarrelOffStandard Code = "barrel-against-standard"
+	StockOtherDrug    Code = "presentation-of-another-drug"
+	NotStocked        Code = "presentation-not-stocked"
+	StockShort        Code = "stock-runs-short"
+	NoneStockedFits   Code = "no-stocked-presentation-fits"
+	DiluentNotStocked Code = "diluent-not-stocked"
+	SyringeNotForPump Code = "syringe-not-for-pump"
+	SearchCut         Code = "search-cut-short"
+	DilutedToMeasure  Code = "diluted-to-be-measured"
+	DeadSpaceCounts   Code = "dead-space-counts"
+	HoursNotReached   Code = "hours-not-reached"
+	MadeForOneWeight  Code = "made-for-one-weight"
 )
 
 // Faults of a scanned code.

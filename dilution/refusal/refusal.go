@@ -52,14 +52,15 @@ func (p Pos) String() string {
 type Reason struct {
 	Code     Code
 	Severity Severity
-	Syringe  int    // number in making order, 0 when it concerns the whole order
-	Message  string // what is wrong, in words
-	Field    string // the field in the user's words, "patient.weight"
-	Got      string // what was read or worked out
-	Want     string // what is allowed
-	Rule     string // "R8"
-	Source   string // where the limit comes from, spelled out
-	Remedy   string // what to do
+	Syringe  int      // number in making order, 0 when it concerns the whole order
+	Message  string   // what is wrong, in words
+	Field    string   // the field in the user's words, "patient.weight"
+	Got      string   // what was read or worked out
+	Want     string   // what is allowed
+	Rule     string   // "R8"
+	Source   string   // where the limit comes from, spelled out
+	Remedy   string   // what to do
+	Instead  *Instead // what can be made in its place; nil where nothing was found or looked for
 	Pos      Pos
 }
 

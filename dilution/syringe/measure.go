@@ -71,11 +71,17 @@ func (e *OffGraduation) Error() string {
 		text(e.Got), text(e.Moved), text(e.Barrel.nominal), e.Percent.FloatString(1), e.Within.Exact())
 }
 
-// Measure finds the smallest barrel of stock that holds v and reads v on it,
-// moved half up to its graduation (rules R2 and R8). No other barrel is tried
-// when that one is too coarse: larger barrels are never graduated more finely
-// ([Known]), so the smallest one that fits has the finest graduation. Of two
-// barrels of one capacity the finer one is taken.
+// Measure finds the barrel of stock that shows v best and reads v on it, moved
+// half up to its graduation (rules R2 and R8). Of the barrels that hold v, the
+// one is taken that
+//
+//  1. v fills to a fifth or more, if there is one;
+//  2. moves v least, not at all if one has a line there;
+//  3. is smallest;
+//  4. is graduated most finely.
+//
+// Where a larger barrel is never graduated more finely than a smaller one, as
+// among the [Known] ones, that is the smallest barrel that holds v.
 //
 // Smallest is the site's smallest measurable volume; within is how far, in per
 // cent of v, the move may go. Errors: *quantity.NotGivenError, *BelowSmallest,
@@ -87,7 +93,7 @@ func Measure(v quantity.Volume, stock []Barrel, smallest quantity.Volume, within
 	if v.Cmp(smallest) < 0 {
 		return Reading{}, &BelowSmallest{Got: v, Smallest: smallest}
 	}
-	var fits Barrel
+	var best Look
 	var largest quantity.Volume
 	for _, b := range stock {
 		if !b.Given() {
@@ -96,18 +102,63 @@ func Measure(v quantity.Volume, stock []Barrel, smallest quantity.Volume, within
 		if !largest.Given() || b.nominal.Cmp(largest) > 0 {
 			largest = b.nominal
 		}
-		if b.nominal.Cmp(v) >= 0 && (!fits.Given() || b.before(fits)) {
-			fits = b
+		if best.unbeaten(b) {
+			continue
+		}
+		if look := b.Look(v); look.Holds && (!best.Holds || look.Before(best)) {
+			best = look
 		}
 	}
-	if !fits.Given() {
+	if !best.Holds {
 		return Reading{}, &NoBarrel{Got: v, Largest: largest}
 	}
-	return fits.Read(v, smallest, within)
+	return best.Barrel.Read(v, smallest, within)
 }
 
-// before reports whether b is smaller than c, or as large and finer.
-func (b Barrel) before(c Barrel) bool {
+// A Look is how one barrel would show a volume, before any rule allows it.
+type Look struct {
+	Barrel     Barrel
+	Holds      bool            // the volume fits into it
+	Line       quantity.Volume // the nearest line, a tie goes up
+	Moved      *big.Rat        // how far the line lies from the volume, in mL, never negative
+	UnderFifth bool            // the volume fills less than a fifth of it
+}
+
+// Look is how the barrel would show v; the zero Look with the barrel for what it
+// does not hold.
+func (b Barrel) Look(v quantity.Volume) Look {
+	if !b.Given() || !v.Given() || b.nominal.Cmp(v) < 0 {
+		return Look{Barrel: b}
+	}
+	line, _, err := v.ToStep(b.step, quantity.HalfUp)
+	if err != nil {
+		return Look{Barrel: b}
+	}
+	moved := new(big.Rat).Sub(line.Rat(), v.Rat())
+	return Look{Barrel: b, Holds: true, Line: line, Moved: moved.Abs(moved),
+		UnderFifth: line.Cmp(share(b.nominal.Rat(), 1, 5)) < 0}
+}
+
+// unbeaten reports that b, whatever it shows, cannot go before x: x has a line at
+// the volume, which fills a fifth of it, and is smaller or finer.
+func (x Look) unbeaten(b Barrel) bool {
+	return x.Holds && !x.UnderFifth && x.Moved.Sign() == 0 && x.Barrel.Before(b)
+}
+
+// Before reports whether x shows the volume better than y, by the rule of
+// [Measure]. Both must hold it.
+func (x Look) Before(y Look) bool {
+	if x.UnderFifth != y.UnderFifth {
+		return !x.UnderFifth
+	}
+	if n := x.Moved.Cmp(y.Moved); n != 0 {
+		return n < 0
+	}
+	return x.Barrel.Before(y.Barrel)
+}
+
+// Before reports whether b is smaller than c, or as large and finer.
+func (b Barrel) Before(c Barrel) bool {
 	if n := b.nominal.Cmp(c.nominal); n != 0 {
 		return n < 0
 	}

@@ -61,6 +61,8 @@ func (s scribe) ordered() []Pair {
 	add("amount", s.typed(o.Amount.Text))
 	add("concentration", s.typed(o.Concentration.Text))
 	add("volume", s.typed(o.Volume.Text))
+	add("doses", s.typed(o.Doses.Text))
+	add("dilute if needed", yes(o.Dilute.Value))
 	add("standard", s.typed(o.Standard.Text))
 	add("mix", s.typed(mixText(s.p)))
 	add("method", o.Method.Text)
@@ -70,10 +72,35 @@ func (s scribe) ordered() []Pair {
 	add("start", s.typed(o.Start.Text))
 	add("from", s.typed(o.From.Text))
 	add("to", s.typed(o.To.Text))
+	add("to last", s.typed(o.Hours.Text))
+	add("fills the line", s.typed(o.Priming.Text))
+	add("stays behind", s.typed(o.DeadSpace.Text))
+	add("mixture", o.Mixture.Text)
+	add("each mL/h gives", s.typed(o.Each.Text))
 	add("syringe size", s.typed(o.Size.Text))
 	add("batch", o.Batch.Text)
 	add("expiry", o.Expiry.Text)
+	return append(out, s.given()...)
+}
+
+// given is what the planner chose and the second person cannot work out from the
+// order: it is taken as ordered.
+func (s scribe) given() []Pair {
+	var out []Pair
+	if s.p.Order.Dilute.Value && s.p.Settled.Concentration.Given() {
+		out = append(out, pair("chosen, not ordered", s.say("dilute to {concentration}, {final.volume} in all")))
+	}
+	if o := s.p.Settled; o.Infusion && o.Standard.Given() && !s.p.Order.Standard.Given() {
+		out = append(out, pair("chosen, not ordered", s.said(o.Standard.Value)))
+	}
 	return out
+}
+
+func yes(b bool) string {
+	if b {
+		return "yes"
+	}
+	return ""
 }
 
 // mixText is a mixture as typed, "4 mg in 50 mL".
@@ -113,7 +140,10 @@ func (s scribe) body() []Pair {
 
 // pack is the container in the words of the formulary.
 func (s scribe) pack() []Pair {
-	out := []Pair{pair("container", joined(labels.Words(s.drug()+", "), s.said(s.p.Presentation.ID)))}
+	var out []Pair
+	for _, pack := range s.p.Mixture.Packs {
+		out = append(out, pair("container", joined(labels.Words(s.drug()+", "), s.said(pack.Presentation.ID))))
+	}
 	if s.p.Presentation.Powder() {
 		out = append(out, words("form", "powder: read on the pack what to add and what it gives"))
 	}

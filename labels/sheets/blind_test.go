@@ -35,6 +35,9 @@ var grouped = regexp.MustCompile(`^[0-9]{1,3}([, \x{a0}][0-9]{3})+(\.[0-9]+)?$`)
 // of the syringe.
 func typedNumbers(p dilution.Plan) []string {
 	texts := append(typedTexts(p), p.Presentation.ID)
+	for _, pack := range p.Mixture.Packs {
+		texts = append(texts, pack.Presentation.ID)
+	}
 	var out []string
 	for _, t := range texts {
 		out = append(out, plainNumbers(t)...)

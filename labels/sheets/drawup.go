@@ -77,7 +77,7 @@ func fetchPart(all []scribe) Part {
 			with = labels.Words("the same")
 		}
 		t.Rows = append(t.Rows, Row{Syringe: s.p.Number, Cells: []labels.Line{
-			labels.Words(fmt.Sprint(s.p.Number)), labels.Words(s.p.Patient.ID.Value), labels.Words(s.drug()), s.say(s.containers() + s.each() + s.contents()),
+			labels.Words(fmt.Sprint(s.p.Number)), labels.Words(s.p.Patient.ID.Value), labels.Words(s.drug()), s.opened(),
 			s.fluids(m), with, into,
 		}})
 	}
@@ -102,7 +102,7 @@ func (s scribe) oneSyringe() bool {
 func (s scribe) fluids(m dilution.Mixture) labels.Line {
 	var parts []labels.Line
 	if s.f.Has(recheck.PowderAdded) {
-		parts = append(parts, s.say("{"+recheck.PowderAdded+"} {="+m.AddFluid+"} for the powder"+s.eachPowder()))
+		parts = append(parts, joined(s.say("{"+recheck.PowderAdded+"} {="+m.AddFluid+"} for the powder"+s.eachPowder()), s.diluentFrom(true)))
 	}
 	switch m.Method {
 	case dilution.AddTo:
@@ -110,7 +110,7 @@ func (s scribe) fluids(m dilution.Mixture) labels.Line {
 	case dilution.WithdrawThenAdd:
 		parts = append(parts, s.say("bag of {"+recheck.FinalVolume+"} {="+m.Diluent+"}"))
 	case dilution.MakeUpTo:
-		parts = append(parts, s.say("{"+recheck.DiluentVolume+"} {="+m.Diluent+"}"))
+		parts = append(parts, joined(s.say("{"+recheck.DiluentVolume+"} {="+m.Diluent+"}"), s.diluentFrom(false)))
 	case dilution.Neat:
 	}
 	if len(parts) == 0 {
@@ -173,7 +173,7 @@ func barrelsPart(all []scribe) Part {
 
 // drawUpPart is one syringe: head, steps, what results, cautions.
 func (s scribe) drawUpPart(list dilution.List, sources *sourceList) Part {
-	below := joined(labels.Words(s.patient()+"; "+s.p.Route+"; "), s.say(s.container()))
+	below := joined(labels.Words(s.patient()+"; "+s.p.Route+"; "), s.supplied())
 	steps := Steps{List: s.steps(), Strong: []string{recheck.DrugVolume, recheck.FinalVolume, recheck.PowderAdded}}
 	right := []Block{Pairs{Dense: true, List: s.results(), Strong: []string{recheck.DoseVolume, recheck.UseBy, recheck.StartRate}}}
 	if c := append(s.cautions(list), sources.short(s)...); len(c) > 0 {
@@ -222,9 +222,19 @@ func (s scribe) results() []Pair {
 	if s.p.Dose != nil {
 		out = append(out, pair("One dose", s.doseLine()))
 	}
-	if s.p.Infusion != nil {
-		out = append(out, pair("Pump", s.say("start {start.rate}; see the pump card")))
+	if s.p.Order.Doses.Given() {
+		out = append(out, pair("Doses", s.doses()))
 	}
+	if part := s.p.Infusion; part != nil {
+		out = append(out, pair("Pump", s.say("start {start.rate}; see the pump card")))
+		if part.Wanted > 0 || part.CountsOff() {
+			out = append(out, pair("Lasts", s.lasts()))
+		}
+	}
+	if line := s.oneWeight(); line != nil {
+		out = append(out, pair("Made for", line))
+	}
+	out = append(out, s.chosen()...)
 	out = append(out, pair("Use by", joined(s.say("{use.by}, after {use.hours}: "), s.won(), labels.Words(" ends first"))))
 	out = append(out, pair("Holds", s.say("{amount} in {final.volume}, "+s.concentration()+s.countedAs())))
 	if s.f.Has(recheck.SubstanceAmount) {
@@ -312,12 +322,16 @@ func wastePart(all []scribe) Part {
 		if !s.p.Mixture.LeftVolume.Given() || s.p.Mixture.LeftVolume.IsZero() {
 			continue
 		}
+		left, that := s.say("{left.volume}"), s.say("{left.amount}")
+		if !s.f.Has(recheck.LeftVolume) {
+			left, that = labels.Words("____________"), labels.Words("in plan.json")
+		}
 		witness := labels.Words("not asked for")
 		if s.p.Drug.Has("controlled") {
 			witness = labels.Words("____________")
 		}
 		t.Rows = append(t.Rows, Row{Syringe: s.p.Number, Cells: []labels.Line{labels.Words(fmt.Sprint(s.p.Number)), labels.Words(s.drug()),
-			s.say("{left.volume}"), s.say("{left.amount}"), labels.Words("____________"), witness}})
+			left, that, labels.Words("____________"), witness}})
 	}
 	if len(t.Rows) == 0 {
 		return Part{}

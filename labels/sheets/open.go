@@ -40,8 +40,12 @@ func (s scribe) compare() Table {
 	add := func(key, pattern string) {
 		t.Rows = append(t.Rows, Row{Strong: true, Cells: []labels.Line{s.say(key), s.say(pattern)}})
 	}
-	add(s.p.Presentation.Container, s.contents())
-	add("containers opened", "{container.count}")
+	if s.p.Mixture.Mixed() {
+		t.Rows = append(t.Rows, Row{Strong: true, Cells: []labels.Line{labels.Words("containers opened"), s.opened()}})
+	} else {
+		add(s.p.Presentation.Container, s.contents())
+		add("containers opened", "{container.count}")
+	}
 	if s.f.Has(recheck.PowderAdded) {
 		add("fluid added to each", "{powder.added} of {="+s.p.Mixture.AddFluid+"}")
 	}
@@ -61,6 +65,9 @@ func (s scribe) compare() Table {
 	if s.p.Dose != nil {
 		add("one dose, amount", "{dose.amount}; the syringe gives {dose.delivered}")
 		add("one dose, volume", "{dose.volume}")
+	}
+	if s.p.Order.Doses.Given() {
+		t.Rows = append(t.Rows, Row{Strong: true, Cells: []labels.Line{labels.Words("doses in it"), s.doses()}})
 	}
 	if s.p.Infusion != nil {
 		add("pump rate for the start", "{start.rate}")

@@ -35,7 +35,7 @@ func (s scribe) pumpParts(list dilution.List) []Part {
 		{n, []Block{s.rangeTable()}},
 		{n, []Block{Beside{LeftShare: 61, Left: []Block{s.ladder()}, Right: []Block{s.chart(), s.slips()}}}},
 		{n, []Block{Pairs{Strong: []string{recheck.EmptyAt, recheck.UseBy}, List: []Pair{
-			pair("Empty", s.say("{empty.at}, if started {prepared} at this rate ({run.time})")),
+			s.empty(),
 			pair("Use by", s.say("{use.by}: change it then, empty or not"))}}}},
 		{n, []Block{Sign{[]string{"programmed by, time", "checked alone by, time"}}}},
 		{n, []Block{Words{Line: labels.Words("Next " + s.vessel() + ": read its label; is the concentration the same?"), Strong: true},

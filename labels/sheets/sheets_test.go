@@ -115,12 +115,18 @@ func (r run) all() []sheets.Sheet {
 
 func papers(t *testing.T, text string, without int) run {
 	t.Helper()
+	return papersFrom(t, dilution.Bench{}, text, without)
+}
+
+// papersFrom is all papers of an order planned from a bench.
+func papersFrom(t *testing.T, b dilution.Bench, text string, without int) run {
+	t.Helper()
 	o, faults := order.Read("demo.toml", []byte(text))
 	f, err := formulary.Default()
 	if err != nil {
 		t.Fatal(err)
 	}
-	list, reasons := dilution.NewList(o, f, o.Session.Prepared.Value, map[int]bool{without: true}, faults)
+	list, reasons := b.NewList(o, f, o.Session.Prepared.Value, map[int]bool{without: true}, faults)
 	if reasons.Refused() {
 		t.Fatalf("the order is refused:\n%v", reasons.Refusals())
 	}

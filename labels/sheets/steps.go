@@ -55,10 +55,7 @@ func (s scribe) dissolve(act func(string)) {
 // draw is drawing, filling and reading, by the method (rule R5).
 func (s scribe) draw(act func(string)) {
 	m := s.p.Mixture
-	from := " from " + s.containers() + " of " + s.drug() + " ({strength})"
-	if !s.p.Presentation.Powder() {
-		from = " from " + s.containers() + " of " + s.drug() + ", {container.amount} in {container.volume} ({strength})"
-	}
+	from := s.from()
 	with := ", {drug.barrel} syringe."
 	switch m.Method {
 	case dilution.Neat:

@@ -6,6 +6,7 @@ import (
 	"drawup/dilution"
 	"drawup/dilution/body"
 	"drawup/dilution/formulary"
+	"drawup/dilution/recheck"
 	"drawup/labels"
 )
 
@@ -46,9 +47,9 @@ func (s scribe) working() []labels.Line {
 			add(s.say("volume after mixing: {powder.added} added give {container.volume}, as the label says"))
 		}
 	}
-	add(s.say("strength: {container.amount} in {container.volume} is {strength}"))
+	add(s.say("strength: {container.amount} in {container.volume} is {strength}" + s.likeTheRest()))
 	add(s.say("drug volume: {drug.wanted}, read as {drug.volume} on the {drug.barrel} barrel in steps of {drug.step}; rounding: {drug.moved}"))
-	add(s.say("containers: {drug.volume} out of {container.volume} each takes {container.count}"))
+	add(s.counted())
 	add(s.diluentLine())
 	add(s.say("amount: {drug.volume} of {strength} is {amount}"))
 	add(s.say("concentration: {amount} in {final.volume} is {concentration}"))
@@ -60,7 +61,7 @@ func (s scribe) working() []labels.Line {
 	}
 	s.doseWorking(add)
 	s.rateWorking(add)
-	add(s.say("balance: {container.count} of {container.amount} taken; {amount} in it and {left.amount} ({left.volume}) left over"))
+	add(s.balance())
 	assumed := ""
 	if s.p.Mixture.AssayAssumed {
 		assumed = ", assumed"
@@ -132,7 +133,15 @@ func (s scribe) rateWorking(add func(labels.Line)) {
 	}
 	add(s.say("pump rate: {start.dose}" + times + " at {concentration} is {start.flow}, set to {start.rate} in steps of {rate.step}; rounding: {start.moved}; that gives {start.delivered}"))
 	add(s.say("ends of the range: {low.dose} rounded up is {low.rate}, {high.dose} rounded down is {high.rate}"))
-	add(s.say("time: {final.volume} at {start.rate} last {run.time}, to {empty.at}"))
+	if s.f.Has(recheck.RunTime) {
+		add(s.say("time: {final.volume} at {start.rate} last {run.time}, to {empty.at}"))
+	}
+	if s.p.Infusion.Wanted > 0 || s.p.Infusion.CountsOff() {
+		add(joined(labels.Words("it lasts "), s.lasts()))
+	}
+	if line := s.oneWeight(); line != nil {
+		add(line)
+	}
 }
 
 // largest names what the interval comes from most (rule R9). The assay itself

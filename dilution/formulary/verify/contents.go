@@ -1,7 +1,6 @@
 package verify
 
 import (
-	"fmt"
 	"math/big"
 	"regexp"
 	"slices"
@@ -64,11 +63,13 @@ func (c *check) contents() {
 
 // powders bounds what a powder takes: less than the fluid added to it, and
 // about as much as its own mass. 2 mL for each gram is more than any substance
-// of the kind; most take 0.5 to 1 mL for each gram (our own choice).
+// of the kind, a quarter is less; most take 0.5 to 1 mL for each gram. A container
+// holds a hundredth to three tenths more than it says (our own choices).
 func (c *check) powders() {
 	for _, p := range c.drug.Presentations {
-		if p.Overfill.Given() && p.Volume.Given() && p.Overfill.Value.Rat().Cmp(p.Volume.Rat()) > 0 {
-			c.find(refusal.Implausible, p.Overfill.Pos, "overfill", p.Overfill.Text, "less than the volume itself", "%s: the overfill is more than the volume", p.ID)
+		if nominal := firstGiven(p.Volume, p.Added); p.Overfill.Given() && nominal.Given() &&
+			(apart(p.Overfill.Value.Rat(), nominal.Rat(), 100) || p.Overfill.Value.Rat().Cmp(new(big.Rat).Mul(nominal.Rat(), big.NewRat(3, 10))) > 0) {
+			c.find(refusal.Implausible, p.Overfill.Pos, "overfill", p.Overfill.Text, "from a hundredth to three tenths of "+nominal.Written(), "%s: no container is overfilled like that", p.ID)
 		}
 		v := p.Displacement
 		if !p.Powder() || !v.Given() || !v.Value.Given() {
@@ -79,9 +80,31 @@ func (c *check) powders() {
 		}
 		if p.Amount.Kind() == quantity.ByMass {
 			grams := new(big.Rat).Quo(p.Amount.Rat(), big.NewRat(1000, 1))
+			if grams.Cmp(big.NewRat(1, 10)) >= 0 && apart(v.Value.Rat(), grams, 4) {
+				c.find(refusal.Implausible, v.Pos, "displacement", v.Text, "at least a quarter of a mL for each gram", "%s: the powder takes less volume than any of its mass", p.ID)
+			}
 			if v.Value.Rat().Cmp(grams.Mul(grams, big.NewRat(2, 1))) > 0 && v.Value.Rat().Cmp(big.NewRat(1, 2)) > 0 {
 				c.find(refusal.Implausible, v.Pos, "displacement", v.Text, "at most 2 mL for each gram", "%s: the powder takes more volume than any of its mass", p.ID)
 			}
+		}
+	}
+}
+
+func firstGiven(volumes ...quantity.Volume) quantity.Volume {
+	for _, v := range volumes {
+		if v.Given() {
+			return v
+		}
+	}
+	return quantity.Volume{}
+}
+
+// assays bounds the half width of the assay limits: pharmacopoeias give 5 to 15 %,
+// for a few substances less (our own choice: 2 to 20).
+func (c *check) assays() {
+	for _, p := range c.drug.Presentations {
+		if x := p.Assay; x.Given() && !(span{"2", "20"}).holds(x.Value.Rat()) {
+			c.find(refusal.Implausible, x.Pos, "assay", x.Text, "2 to 20 %", "%s: no pharmacopoeia has assay limits like that", p.ID)
 		}
 	}
 }
@@ -135,6 +158,10 @@ func (c *check) standards() {
 		if err != nil {
 			continue // the reader has refused it
 		}
+		if a, v, err := quantity.ParseMix(s.ID); err != nil || !a.Equal(s.Amount) || v.Cmp(s.Volume) != 0 {
+			c.find(refusal.ContentsUnlike, s.Pos, "mix", s.Mix, "what the id says, as in \"4 mg in 50 mL\"",
+				"the id %q and the mixture, %s, do not agree", s.ID, s.Mix)
+		}
 		if !slices.ContainsFunc(d.Bounds, func(b formulary.Bounds) bool {
 			low, e1 := conc.Cmp(b.Low.Value)
 			high, e2 := conc.Cmp(b.High.Value)
@@ -167,25 +194,4 @@ func (c *check) makeable(s formulary.Standard) bool {
 		}
 		return slices.ContainsFunc(p.Diluents, func(d formulary.Diluent) bool { return d.Name == s.Diluent })
 	})
-}
-
-// stability bounds times: no diluted drug is kept for longer than 100 days
-// (our own choice; the longest that was seen is 90).
-func (c *check) stability() {
-	for _, s := range c.drug.Stability {
-		if s.Minutes > 100*24*60 {
-			c.find(refusal.Implausible, s.Pos, "hours", s.Text, "at most 100 days", "a preparation is said to last %s", s.Text)
-		}
-		known := s.Diluent == "any" || s.Diluent == "neat" || slices.ContainsFunc(c.drug.Presentations, func(p formulary.Presentation) bool {
-			return slices.Contains(p.AddFluids, s.Diluent) || slices.ContainsFunc(p.Diluents, func(d formulary.Diluent) bool { return d.Name == s.Diluent })
-		})
-		if !known {
-			c.find(refusal.ValueUnknown, s.Pos, "diluent", s.Diluent, "any, neat, or a diluent of a presentation",
-				"the stability is for %q, which no presentation allows", s.Diluent)
-		}
-		if !slices.Contains([]string{"room", "refrigerator"}, s.Storage) || !slices.Contains([]string{"", "syringe", "bag", "glass"}, s.Container) {
-			c.find(refusal.ValueUnknown, s.Pos, "storage", fmt.Sprintf("%s, %s", s.Storage, s.Container), "room or refrigerator; syringe, bag or glass",
-				"the stability does not say how and in what it is kept")
-		}
-	}
 }

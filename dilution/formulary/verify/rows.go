@@ -1,6 +1,8 @@
 package verify
 
 import (
+	"fmt"
+	"math/big"
 	"slices"
 
 	"drawup/dilution/formulary"
@@ -53,36 +55,103 @@ func reach(kg int64) int64 {
 	return 3
 }
 
-// maxima wants first doses, repeats, days and courses to rise: a day holds at
-// least one usual dose, a course at least a day's least.
+// maxima wants first doses, repeats, days and courses to fit the row: the first
+// dose and a repeat lie in it, a day or a course holds one dose to some twenty.
 func (c *check) maxima() {
 	for _, r := range c.drug.Doses {
 		kg := weightOf(r)
-		low, high := doseOf(r.UsualLow, kg), doseOf(r.UsualHigh, kg)
+		low, high := doseOf(r.UsualLow, kg), c.highest(r, kg)
 		for _, m := range []struct {
-			f    formulary.Figure[quantity.Dose]
-			what string
-		}{{r.FirstMax, "highest first dose"}, {r.RepeatMax, "highest repeat"}, {r.DayMax, "maximum of a day"}, {r.CourseMax, "maximum of a course"}} {
+			f           formulary.Figure[quantity.Dose]
+			what        string
+			under, over int64 // times the usual lowest that it may fall short of, times the highest that it may pass
+		}{
+			{r.FirstMax, "highest first dose", 1, 1}, {r.RepeatMax, "highest repeat", 3, 1},
+			{r.DayMax, "maximum of a day", 1, 25}, {r.CourseMax, "maximum of a course", 1, 25},
+		} {
 			x := doseOf(m.f, kg)
 			if x.value == nil {
 				continue
 			}
-			if low.value != nil && x.value.Cmp(low.value) < 0 && m.what != "highest repeat" {
-				c.find(refusal.KeyConflict, x.pos, "row", x.f, "at least the usual lowest dose, "+low.f, "the %s for %s is below one usual dose", m.what, r.For)
+			if low.value != nil && new(big.Rat).Mul(x.value, big.NewRat(m.under, 1)).Cmp(low.value) < 0 {
+				c.find(refusal.KeyConflict, x.pos, "row", x.f, "at least one usual lowest dose, "+low.f, "the %s for %s is below one usual dose", m.what, r.For)
 			}
-			if high.value != nil && apart(high.value, x.value, 60) {
-				c.find(refusal.Implausible, x.pos, "row", x.f, "within a factor of 60 of the usual highest dose, "+high.f, "the %s for %s is far above one usual dose", m.what, r.For)
+			if high.value != nil && apart(high.value, x.value, m.over) {
+				c.find(refusal.KeyConflict, x.pos, "row", x.f, fmt.Sprintf("at most %d times the highest dose, %s", m.over, high.f), "the %s for %s is too far above the highest dose", m.what, r.For)
+			}
+			if m.over > 1 && high.value != nil && x.value.Cmp(new(big.Rat).Mul(high.value, big.NewRat(9, 10))) < 0 {
+				c.find(refusal.KeyConflict, x.pos, "row", x.f, "at least the highest dose, "+high.f, "the %s for %s is below the highest dose of the row", m.what, r.For)
 			}
 		}
 	}
+	c.localMaxima()
+}
+
+// highest is what one dose of a row may come to: its highest figure, or its
+// absolute maximum where that is lower.
+func (c *check) highest(r formulary.Rule[quantity.Dose], kg int64) scaled {
+	high := scaled{}
+	for _, f := range []formulary.Figure[quantity.Dose]{r.UsualHigh, r.SoftHigh, r.HardHigh} {
+		if x := doseOf(f, kg); x.value != nil {
+			high = x
+		}
+	}
+	if most := r.TotalMax; most.Given() && most.Value.Kind() == c.drug.Kind && (high.value == nil || most.Value.Rat().Cmp(high.value) < 0) {
+		high = scaled{most.Text, most.Value.Rat(), most.Pos}
+	}
+	return high
+}
+
+func (c *check) localMaxima() {
 	for _, m := range c.drug.LocalMaxima {
 		kg := weightOf(formulary.Rule[quantity.Dose]{AgeFrom: m.AgeFrom, AgeTo: m.AgeTo})
 		x := doseOf(m.PerKg, kg)
-		if s, ok := sizeOf(c.drug.Class); ok && x.value != nil && !s.dose.holds(perKilogram(x.value, kg)) {
-			c.find(refusal.Implausible, x.pos, "per_kg", x.f, s.dose.low+" to "+s.dose.high+" mg/kg", "the maximum is far from those of the class %s; is a unit wrong?", c.drug.Class)
+		if s, kin, ok := sizeOf(c.drug); ok && x.value != nil && !s.dose.holds(perKilogram(x.value, kg)) {
+			c.find(refusal.Implausible, x.pos, "per_kg", x.f, s.dose.low+" to "+s.dose.high+" mg/kg", "the maximum is far from those of %s; is a unit wrong?", kin)
 		}
-		if x.value != nil && m.Total.Given() && m.Total.Value.Kind() == c.drug.Kind && (apart(x.value, m.Total.Value.Rat(), reach(kg)) || apart(m.Total.Value.Rat(), x.value, 3)) {
-			c.find(refusal.Implausible, m.Total.Pos, "total", m.Total.Text, "within a factor of three of the maximum by weight, "+x.f+", of a child of ten", "the two maxima do not fit each other")
+		total := scaled{m.Total.Text, nil, m.Total.Pos}
+		if m.Total.Given() && m.Total.Value.Kind() == c.drug.Kind {
+			total.value = m.Total.Value.Rat()
+		}
+		if x.value != nil && total.value != nil && (apart(x.value, total.value, reach(kg)) || apart(total.value, x.value, 3)) {
+			c.find(refusal.Implausible, m.Total.Pos, "total", m.Total.Text, "within a factor of three of the maximum by weight at 70 kg, "+x.f, "the two maxima do not fit each other")
+		}
+		day := doseOf(m.DayMax, kg)
+		if day.value != nil && total.value != nil && (day.value.Cmp(total.value) < 0 || apart(total.value, day.value, 8)) {
+			c.find(refusal.KeyConflict, day.pos, "day_max", day.f, "one to eight times the maximum of one dose, "+total.f, "the maximum of a day and that of one dose do not fit")
 		}
 	}
+}
+
+// courses wants the most that an infusion may give to be what its rates give in
+// ten minutes to two days, and in no more than the time it may run.
+func (c *check) courses() {
+	for _, r := range c.drug.Rates {
+		kg := weightOf(r)
+		course, low, high := doseOf(r.CourseMax, kg), rateOf(r.UsualLow, kg), rateOf(r.UsualHigh, kg)
+		if course.value == nil || high.value == nil {
+			continue
+		}
+		hours := new(big.Rat).Quo(course.value, high.value)
+		if !(span{"0.16", "48"}).holds(hours) {
+			c.find(refusal.Implausible, course.pos, "course_max", course.f, "what the usual highest rate, "+high.f+", gives in ten minutes to two days",
+				"the most that may be given for %s and the dose rates do not fit", r.For)
+		}
+		if least := firstValue(low, high); r.Longest.Given() {
+			run := big.NewRat(int64(r.Longest.Value.Minutes()), 60)
+			if apart(new(big.Rat).Mul(high.value, run), course.value, 2) || apart(course.value, new(big.Rat).Mul(least, run), 8) {
+				c.find(refusal.Implausible, course.pos, "course_max", course.f, "about what the usual rates give in "+r.Longest.Text,
+					"the most that may be given for %s and the longest time do not fit", r.For)
+			}
+		}
+	}
+}
+
+func firstValue(list ...scaled) *big.Rat {
+	for _, x := range list {
+		if x.value != nil {
+			return x.value
+		}
+	}
+	return nil
 }

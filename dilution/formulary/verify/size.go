@@ -3,7 +3,6 @@ package verify
 import (
 	"fmt"
 	"math/big"
-	"slices"
 
 	"drawup/dilution/body"
 	"drawup/dilution/formulary"
@@ -21,15 +20,24 @@ func rat(s string) *big.Rat {
 
 func (s span) holds(x *big.Rat) bool { return x.Cmp(rat(s.low)) >= 0 && x.Cmp(rat(s.high)) <= 0 }
 
-// A size is what is plausible for the drugs of one label class that are counted
-// by mass: strength in mg/mL, a dose in mg/kg, a dose rate in mg/kg/h. The
-// figures are our own choice: from the published ranges of the class, about
-// three times wider at either end.
+// A size is what is plausible for the drugs of one label class: strength in mg/mL,
+// a dose in mg/kg, a dose rate in mg/kg/h; units or mmol where the drug is counted
+// by them. The figures are our own choice: from the published ranges of the class,
+// about three times wider at either end.
 type size struct{ strength, dose, rate span }
 
-// sizeOf is by class code.
-func sizeOf(class string) (size, bool) {
-	s, ok := map[string]size{
+// sizeOf is by class code; where a class holds too much, and where drugs are not
+// counted by mass, by ATC group. kin says which: "the class OPI".
+func sizeOf(d formulary.Drug) (s size, kin string, ok bool) {
+	if s, group := groupSize(d); group != "" || d.Kind != quantity.ByMass {
+		return s, "the ATC group " + group, group != ""
+	}
+	s, ok = classes()[d.Class]
+	return s, "the class " + d.Class, ok
+}
+
+func classes() map[string]size {
+	return map[string]size{
 		"IND":   {span{"0.5", "200"}, span{"0.01", "30"}, span{"0.01", "40"}},
 		"BZD":   {span{"0.01", "20"}, span{"0.001", "3"}, span{"0.001", "3"}},
 		"BZD-A": {span{"0.005", "1"}, span{"0.0003", "0.2"}, span{"0.0003", "0.2"}},
@@ -44,8 +52,7 @@ func sizeOf(class string) (size, bool) {
 		"LA":    {span{"0.2", "60"}, span{"0.01", "30"}, span{"0.01", "10"}},
 		"ACH":   {span{"0.003", "60"}, span{"0.0003", "2"}, span{"0.0001", "1"}},
 		"AEM":   {span{"0.005", "150"}, span{"0.001", "10"}, span{"0.001", "3"}},
-	}[class]
-	return s, ok
+	}
 }
 
 // adult is the body of an adult, in kg, for which a figure per kg and an
@@ -76,22 +83,22 @@ func ageOf(years int64) body.Age {
 
 // strengths bounds what is in the container by its class.
 func (c *check) strengths() {
-	s, ok := sizeOf(c.drug.Class)
-	if !ok || c.drug.Kind != quantity.ByMass {
+	s, kin, ok := sizeOf(c.drug)
+	if !ok {
 		return
 	}
 	for _, p := range c.drug.Presentations {
 		conc, err := p.Amount.In(p.Volume)
 		if err == nil && !s.strength.holds(conc.Rat()) {
-			c.find(refusal.Implausible, p.Pos, "amount", p.ID, s.strength.low+" to "+s.strength.high+" mg/mL",
-				"%s is far from what drugs of the class %s come in; is a unit wrong?", p.ID, c.drug.Class)
+			c.find(refusal.Implausible, p.Pos, "amount", p.ID, s.strength.low+" to "+s.strength.high+" "+c.unit()+"/mL",
+				"%s is far from what drugs of %s come in; is a unit wrong?", p.ID, kin)
 		}
 	}
 }
 
 // bounds holds concentrations against the strengths that the drug comes in:
 // nothing can be stronger than the strongest container, and nobody dilutes
-// a thousandfold in one step. Between the ends lies a factor of 200 at most.
+// more than 1500-fold. Between the ends lies a factor of 100 at most.
 func (c *check) bounds() {
 	for _, b := range c.drug.Bounds {
 		strongest := c.strongest(b.Use)
@@ -102,12 +109,12 @@ func (c *check) bounds() {
 			c.find(refusal.Implausible, b.High.Pos, "high", b.High.Text, "at most the strongest presentation for "+b.Use,
 				"the highest concentration for %s, %s, is stronger than any container", b.Use, b.High.Text)
 		}
-		if b.Low.Given() && new(big.Rat).Mul(b.Low.Value.Rat(), big.NewRat(3000, 1)).Cmp(strongest) < 0 {
-			c.find(refusal.Implausible, b.Low.Pos, "low", b.Low.Text, "a 3000th of the strongest presentation or more",
+		if b.Low.Given() && new(big.Rat).Mul(b.Low.Value.Rat(), big.NewRat(1500, 1)).Cmp(strongest) < 0 {
+			c.find(refusal.Implausible, b.Low.Pos, "low", b.Low.Text, "a 1500th of the strongest presentation or more",
 				"the lowest concentration for %s, %s, is a dilution that nobody makes", b.Use, b.Low.Text)
 		}
-		if b.Low.Given() && b.High.Given() && apart(b.Low.Value.Rat(), b.High.Value.Rat(), 200) {
-			c.find(refusal.Implausible, b.Low.Pos, "low", b.Low.Text, "within a factor of 200 of the highest, "+b.High.Text,
+		if b.Low.Given() && b.High.Given() && apart(b.Low.Value.Rat(), b.High.Value.Rat(), 100) {
+			c.find(refusal.Implausible, b.Low.Pos, "low", b.Low.Text, "within a factor of 100 of the highest, "+b.High.Text,
 				"the ends of the concentrations for %s are too far apart", b.Use)
 		}
 	}
@@ -144,7 +151,7 @@ type scaled struct {
 // doses holds every row of single doses against its class, its containers and
 // itself.
 func (c *check) doses() {
-	s, known := sizeOf(c.drug.Class)
+	s, kin, known := sizeOf(c.drug)
 	for _, r := range c.drug.Doses {
 		kg := weightOf(r)
 		low, high := doseOf(r.UsualLow, kg), doseOf(r.UsualHigh, kg)
@@ -153,18 +160,25 @@ func (c *check) doses() {
 			if x.value == nil {
 				continue
 			}
-			if known && c.drug.Kind == quantity.ByMass && !s.dose.holds(perKilogram(x.value, kg)) {
-				c.find(refusal.Implausible, x.pos, "dose", x.f, s.dose.low+" to "+s.dose.high+" mg/kg",
-					"the dose of %s for %s is far from those of the class %s; is a unit wrong?", x.f, r.For, c.drug.Class)
+			if known && !s.dose.holds(perKilogram(x.value, kg)) {
+				c.find(refusal.Implausible, x.pos, "dose", x.f, s.dose.low+" to "+s.dose.high+" "+c.unit()+"/kg",
+					"the dose of %s for %s is far from those of %s; is a unit wrong?", x.f, r.For, kin)
 			}
 			c.inContainers(x, r.For)
 		}
-		c.steps(r.For, []scaled{hardLow, low, high, soft, hard})
-		if r.TotalMax.Given() && high.value != nil && r.TotalMax.Value.Kind() == c.drug.Kind {
+		c.steps(r.For, hardLow, low, high, soft, hard, gap{usual: 10, hard: 5, signed: 20})
+		c.volumes(r, low, high, kg)
+		top := scaled{}
+		for _, x := range []scaled{high, soft, hard} {
+			if x.value != nil {
+				top = x
+			}
+		}
+		if r.TotalMax.Given() && top.value != nil && r.TotalMax.Value.Kind() == c.drug.Kind {
 			most := scaled{r.TotalMax.Text, r.TotalMax.Value.Rat(), r.TotalMax.Pos}
-			if apart(most.value, high.value, 4) || apart(high.value, most.value, 8) {
-				c.find(refusal.Implausible, most.pos, "total_max", most.f, "from a quarter to eight times the usual highest for the body it is for, "+high.f,
-					"the absolute maximum of %s for %s and its usual highest of %s do not fit", most.f, r.For, high.f)
+			if apart(most.value, top.value, 4) || apart(top.value, most.value, 8) {
+				c.find(refusal.Implausible, most.pos, "total_max", most.f, "from a quarter to eight times the highest for the body it is for, "+top.f,
+					"the absolute maximum of %s for %s and its highest of %s do not fit", most.f, r.For, top.f)
 			}
 		}
 	}
@@ -196,6 +210,11 @@ func whole(r *big.Rat, b quantity.Basis, kg int64) *big.Rat {
 	return r
 }
 
+// unit is what the drug is counted in, for messages.
+func (c *check) unit() string {
+	return map[quantity.Kind]string{quantity.ByMass: "mg", quantity.ByActivity: "units", quantity.BySubstance: "mmol"}[c.drug.Kind]
+}
+
 func perKilogram(r *big.Rat, kg int64) *big.Rat { return new(big.Rat).Quo(r, big.NewRat(kg, 1)) }
 
 // inContainers wants a dose to be between a five-hundredth of the smallest
@@ -220,12 +239,32 @@ func (c *check) inContainers(x scaled, purpose string) {
 	}
 }
 
+// A gap is how far two figures of a row may be apart. A usual range that spans
+// more hides a slip of the point; a hard end far above the usual one lets it pass
+// unless a soft limit asks for a signature before it.
+type gap struct{ usual, hard, signed int64 }
+
 // steps wants neighbouring figures of a row within reach of each other.
-func (c *check) steps(purpose string, row []scaled) {
-	given := slices.DeleteFunc(slices.Clone(row), func(x scaled) bool { return x.value == nil })
-	for i := 1; i < len(given); i++ {
-		if apart(given[i-1].value, given[i].value, 60) {
-			c.find(refusal.Implausible, given[i].pos, "row", given[i].f, "within a factor of 60 of the figure below it, "+given[i-1].f,
+func (c *check) steps(purpose string, hardLow, low, high, soft, hard scaled, most gap) {
+	beyond := most.hard
+	if soft.value != nil {
+		beyond = most.signed
+	}
+	last := func(list ...scaled) scaled {
+		out := scaled{}
+		for _, x := range list {
+			if x.value != nil {
+				out = x
+			}
+		}
+		return out
+	}
+	for _, s := range []struct {
+		from, to scaled
+		times    int64
+	}{{hardLow, low, 10}, {last(hardLow, low), high, most.usual}, {last(low, high), soft, most.hard}, {last(low, high, soft), hard, beyond}} {
+		if s.from.value != nil && s.to.value != nil && apart(s.from.value, s.to.value, s.times) {
+			c.find(refusal.Implausible, s.to.pos, "row", s.to.f, fmt.Sprintf("within %d times the figure below it, %s", s.times, s.from.f),
 				"two figures of the row for %s are too far apart", purpose)
 		}
 	}
@@ -234,7 +273,7 @@ func (c *check) steps(purpose string, row []scaled) {
 // rates holds every row of dose rates against its class, itself, and the flow
 // that it makes from the strongest and the weakest mixture.
 func (c *check) rates() {
-	s, known := sizeOf(c.drug.Class)
+	s, kin, known := sizeOf(c.drug)
 	for _, r := range c.drug.Rates {
 		kg := weightOf(r)
 		low, high := rateOf(r.UsualLow, kg), rateOf(r.UsualHigh, kg)
@@ -243,13 +282,13 @@ func (c *check) rates() {
 			if x.value == nil {
 				continue
 			}
-			if known && c.drug.Kind == quantity.ByMass && !s.rate.holds(perKilogram(x.value, kg)) {
-				c.find(refusal.Implausible, x.pos, "rate", x.f, s.rate.low+" to "+s.rate.high+" mg/kg/h",
-					"the dose rate of %s for %s is far from those of the class %s; is a unit wrong?", x.f, r.For, c.drug.Class)
+			if known && !s.rate.holds(perKilogram(x.value, kg)) {
+				c.find(refusal.Implausible, x.pos, "rate", x.f, s.rate.low+" to "+s.rate.high+" "+c.unit()+"/kg/h",
+					"the dose rate of %s for %s is far from those of %s; is a unit wrong?", x.f, r.For, kin)
 			}
 			c.flows(x, r.For)
 		}
-		c.steps(r.For, []scaled{hardLow, low, high, soft, hard})
+		c.steps(r.For, hardLow, low, high, soft, hard, gap{usual: 40, hard: 14, signed: 14})
 	}
 }
 

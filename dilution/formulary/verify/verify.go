@@ -19,14 +19,19 @@ func Check(f *formulary.Formulary) refusal.List {
 	var all refusal.List
 	for _, d := range f.Drugs() {
 		c := &check{drug: d}
+		if c.kinds(); len(c.found) > 0 {
+			all = append(all, c.found...)
+			continue // figures that count different things cannot be compared
+		}
 		for _, step := range []func(){
-			c.jurisdictions, c.names, c.contents, c.powders, c.factors, c.strengths, c.bounds,
-			c.doses, c.rates, c.overlaps, c.maxima, c.standards, c.stability, c.wording,
+			c.jurisdictions, c.words, c.names, c.contents, c.powders, c.assays, c.factors, c.strengths, c.bounds, c.mixtures,
+			c.doses, c.rates, c.overlaps, c.maxima, c.courses, c.standards, c.stability, c.times, c.wording,
 		} {
 			step()
 		}
 		all = append(all, c.found...)
 	}
+	all = append(all, pairs(f)...)
 	all.Sort()
 	return all
 }

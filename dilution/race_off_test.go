@@ -1,0 +1,5 @@
+//go:build !race
+
+package dilution_test
+
+const slowly = false
