@@ -186,3 +186,47 @@ func rowInked(img *image.RGBA, row, from, to int, inked func(ink.Colour) bool) b
 	}
 	return false
 }
+
+// The reversal line covers the ends of the stripes: no sliver of them shows
+// below it, at either end.
+func TestNoStripeBelowTheLine(t *testing.T) {
+	for _, s := range bothKinds(t, layouts.Options{}, 600) {
+		if !s.label.Class.Line {
+			continue
+		}
+		for _, x := range []ink.Micrometre{s.x + 500, s.x + 1500, s.x + 2500, s.x + 3500} {
+			y := s.y + s.h*2/5
+			for ; !dark(s.at(x, y)) && y < s.y+s.h*3/5; y += 20 {
+			}
+			for ; dark(s.at(x, y)); y += 20 {
+			}
+			for end := y + 400; y < end; y += 20 {
+				if c := s.at(x, y); !greyish(c) {
+					t.Errorf("%s: got %v below the line at %d", s.label.Name, c, x-s.x)
+				}
+			}
+		}
+	}
+}
+
+// Two concentrations stand clear of each other: the tails of the upper one end
+// above the dots and stems of the lower one.
+func TestConcentrationsApart(t *testing.T) {
+	l := sample("NMB-R", "Neostigmine", "2.5 mg/mL", "2.5 mg", "N07AA51", "2.5mg/mL")
+	l.Second, l.SecondConcentration = "glycopyrronium", labels.Cell{Text: "500 micrograms/mL", Figure: "second.concentration"}
+	var low, high ink.Micrometre
+	for _, mark := range placed(t, []labels.Label{l}, stock(t, "roll-70x37"), layouts.Options{})[0].Marks {
+		if m, ok := mark.(ink.Text); ok {
+			up, down := fonts.Get(fonts.Name(m.Face)).Extents(m.String, int64(m.Size))
+			switch m.String {
+			case l.Concentration.Text:
+				low = m.Y + ink.Micrometre(down)
+			case l.SecondConcentration.Text:
+				high = m.Y - ink.Micrometre(up)
+			}
+		}
+	}
+	if low == 0 || high < low+50 {
+		t.Errorf("got the first down to %d and the second up to %d, want them apart", low, high)
+	}
+}
