@@ -61,8 +61,9 @@ func (b Bench) NewList(
 	all = append(all, missing...)
 	made := plannedAll(s, &list, &all, leaveOut, faults)
 	all = append(all, localSums(made)...)
-	list.Cautions = shared(list.Plans)
-	all = append(all, list.Cautions...)
+	whole := append(edition(s, o), shared(list.Plans)...)
+	all = append(all, whole...)
+	list.Cautions = append(ofOrder(faults), whole...)
 	if len(list.Plans) == 0 && !all.Refused() {
 		all = append(all, refusal.Reason{
 			Code: refusal.NothingToMake, Severity: refusal.Refuse,
@@ -109,7 +110,8 @@ func plannedAll(s site, list *List, all *refusal.List, leaveOut map[int]bool, fa
 		if s.stock != nil && !unread && !reasons.Refused() {
 			s.stock.takeAway(p) // also for one that is left out: it may be made another time
 		}
-		p.Cautions = append(ofPatient(faults, o.Patients[sy.Patient]), p.Cautions...)
+		typed := append(ofPatient(faults, o, sy.Patient), faults.Cautions().Of(sy.Number)...)
+		p.Cautions = append(typed, p.Cautions...)
 		if unread && !leaveOut[sy.Number] {
 			*all = append(*all, reasons.Refusals()...)
 			continue

@@ -178,6 +178,9 @@ type Plan struct {
 	Prepared        time.Time
 	UseBy           UseBy
 	Standard        string // the standard preparation's id, if it is one
+	// Edition and Region are the scheme of label classes that the site has
+	// picked; "" for the usual one.
+	Edition, Region string
 	Cautions        refusal.List
 }
 

@@ -207,6 +207,15 @@ func ourFault(syringe int, err error) refusal.Reason {
 	}
 }
 
+// subject is what a file says of itself: the state of the formulary, and which
+// edition of the standard its labels follow.
+func (j *job) subject() string {
+	if len(j.labels) == 0 {
+		return j.making.State
+	}
+	return j.making.State + "; labels: " + j.labels[0].Class.Claim()
+}
+
 // name is the order's file name without its folder and ending.
 func (j *job) name() string { return nameOf(j.file) }
 

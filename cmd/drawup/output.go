@@ -24,7 +24,7 @@ type file struct {
 func pdfOf(pages []ink.Page, title string, j *job) ([]byte, refusal.List) {
 	var b bytes.Buffer
 	err := pdf.Write(&b, pdf.Document{
-		Pages: pages, Title: title, Subject: j.making.State,
+		Pages: pages, Title: title, Subject: j.subject(),
 		Creator: "drawup", Language: "en-GB", Made: j.list.At,
 	})
 	if err == nil {

@@ -15,6 +15,7 @@ import (
 	"drawup/dilution/order"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
+	"drawup/labels"
 	"drawup/layouts"
 	"drawup/layouts/ink"
 )
@@ -184,7 +185,18 @@ func (f *paperFlags) work(lib library, leaveOut map[int]bool, tell progress) ([]
 		all = append(all, reasons...)
 		jobs = append(jobs, j)
 	}
-	return jobs, all
+	return jobs, append(all, oneScheme(jobs)...)
+}
+
+// oneScheme refuses orders of one run whose labels would look in two ways.
+func oneScheme(jobs []*job) refusal.List {
+	var list []labels.Label
+	for _, j := range jobs {
+		if j != nil {
+			list = append(list, j.labels...)
+		}
+	}
+	return labels.OneScheme(list)
 }
 
 // when gives the time prepared: --at, else now if the command works in the
