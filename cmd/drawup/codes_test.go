@@ -230,7 +230,7 @@ func seventyStrengths(t *testing.T) string {
 	if faults.Refused() || more.Refused() {
 		t.Fatal(faults, more)
 	}
-	o, faults := order.Read("order.toml", []byte(strings.Replace(soundOrder, "drug = \"suxamethonium\"\ndose = \"1 mg/kg\"", "drug = \"sleepwell\"\namount = \"20 mg\"", 1)))
+	o, faults := order.Read("order.toml", []byte(strings.Replace(soundOrder, "drug = \"suxamethonium\"\npresentation = \"ampoule 100 mg in 2 mL\"\ndose = \"1 mg/kg\"", "drug = \"sleepwell\"\namount = \"20 mg\"", 1)))
 	_, reasons := dilution.Bench{Shelf: &s}.NewList(o, f, time.Date(2026, 12, 1, 7, 30, 0, 0, time.UTC), nil, faults)
 	return reasons.Error()
 }
