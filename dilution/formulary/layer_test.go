@@ -83,6 +83,12 @@ func TestWhatASiteLoosens(t *testing.T) {
 			"slumbrium: never as infusion taken away; it was an invented ban", true},
 		{`amount = "10 mg"`, `amount = "10 mg"` + "\n" + `age_from = "1 year"`,
 			"slumbrium: ampoule 10 mg in 2 mL: from age added: 1 year", false},
+		{`by = "none"`, `by = "lean"`, "slumbrium: dose for sedation, IV: goes by changed from none to lean", true},
+		{`hard_high = { value = "5 mg", source = "I" }`, `hard_high = { value = "5 mg", source = "I", unverified = true }`,
+			"slumbrium: dose for sedation, IV: hard maximum: standing changed from not marked to unverified", false},
+		{`hard_high = { value = "5 mg", source = "I" }`, `hard_high = { value = "5 mg", source = "I", verified_by = "A. Example, 2026-12-01" }`,
+			"slumbrium: dose for sedation, IV: hard maximum: standing changed from not marked to verified by A. Example, 2026-12-01", false},
+		{`neat = true`, "neat = true\n  multi_dose = true", "slumbrium: ampoule 10 mg in 2 mL: more than one dose added: allowed", true},
 		{`also = ["sleepol"]`, `also = ["sleepol", "dozine"]`, "slumbrium: name dozine added: dozine", false},
 	} {
 		f, faults := layer(t, site(c.old, c.new))
@@ -94,8 +100,15 @@ func TestWhatASiteLoosens(t *testing.T) {
 			t.Errorf("%q: refused %v, want %v: %v", c.new, refused, c.loosened, faults)
 		}
 	}
+	// Another document for the same figure is told.
+	other := site(`hard_high = { value = "5 mg", source = "I" }`, `hard_high = { value = "5 mg", source = "J" }`)
+	f, _ := layer(t, strings.Replace(other, "[[drug]]", "[sources.J]\ntitle = \"another document\"\ngrade = \"A\"\njurisdiction = \"UK\"\n[[drug]]", 1))
+	want := "[slumbrium: dose for sedation, IV: hard maximum: source changed from an invented document to another document]"
+	if got := formulary.Compare(readText(t, baseText), f); fmt.Sprint(got) != want {
+		t.Errorf("got %v, want %s", got, want)
+	}
 	// The same figure in another unit is no change.
-	f, _ := layer(t, site(`value = "5 mg"`, `value = "5000 microgram"`))
+	f, _ = layer(t, site(`value = "5 mg"`, `value = "5000 microgram"`))
 	if got := formulary.Compare(readText(t, baseText), f); len(got) != 0 {
 		t.Errorf("got %v for the same figure in another unit", got)
 	}
