@@ -6,6 +6,7 @@ import (
 	"fmt"
 	"io"
 	"path/filepath"
+	"slices"
 	"strconv"
 	"strings"
 	"time"
@@ -239,6 +240,11 @@ func (f *paperFlags) when(now func() time.Time) func(order.Session) (time.Time, 
 // sameWall reports that a clock on the wall shows the same at both times.
 func sameWall(a, b time.Time) bool {
 	return a.Format("2006-01-02 15:04") == b.Format("2006-01-02 15:04")
+}
+
+// inputs is every file that was read.
+func (f *paperFlags) inputs() []string {
+	return slices.Concat(f.orders, f.formulary.files, []string{f.formulary.approval, f.shelf})
 }
 
 // write places everything in memory, then writes it, then tells the user.

@@ -126,15 +126,20 @@ func (c *check) bounds() {
 func (c *check) strongest(use string) *big.Rat {
 	var top *big.Rat
 	for _, p := range c.drug.Presentations {
-		conc, err := p.Amount.In(p.Volume)
-		if err != nil && p.Powder() && p.Added.Given() {
-			conc, err = p.Amount.In(p.Added)
-		}
-		if err == nil && p.For(use) && (top == nil || conc.Rat().Cmp(top) > 0) {
+		if conc, ok := strength(p); ok && p.For(use) && (top == nil || conc.Rat().Cmp(top) > 0) {
 			top = conc.Rat()
 		}
 	}
 	return top
+}
+
+// strength is what a container holds per volume; of a powder, in what is added.
+func strength(p formulary.Presentation) (quantity.Concentration, bool) {
+	conc, err := p.Amount.In(p.Volume)
+	if err != nil && p.Powder() && p.Added.Given() {
+		conc, err = p.Amount.In(p.Added)
+	}
+	return conc, err == nil
 }
 
 // apart reports that high is more than n times low.
