@@ -191,7 +191,7 @@ func runFormularyStandards(e env, r *formularyRequest) int {
 
 // inputs is every file that was read.
 func (r *formularyRequest) inputs() []string {
-	return append(slices.Clone(r.own.files), r.own.approval)
+	return named(append(slices.Clone(r.own.files), r.own.approval))
 }
 
 // deliver writes data to --out, or to standard output.

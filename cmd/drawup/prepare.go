@@ -242,9 +242,14 @@ func sameWall(a, b time.Time) bool {
 	return a.Format("2006-01-02 15:04") == b.Format("2006-01-02 15:04")
 }
 
+// named leaves out names that were not given.
+func named(files []string) []string {
+	return slices.DeleteFunc(files, func(name string) bool { return name == "" })
+}
+
 // inputs is every file that was read.
 func (f *paperFlags) inputs() []string {
-	return slices.Concat(f.orders, f.formulary.files, []string{f.formulary.approval, f.shelf})
+	return named(slices.Concat(f.orders, f.formulary.files, []string{f.formulary.approval, f.shelf}))
 }
 
 // write places everything in memory, then writes it, then tells the user.

@@ -28,14 +28,6 @@ func (f *paperFlags) takeShelf(lib *library) refusal.List {
 	return faults
 }
 
-// inputs are the files that were read and that no paper may be written over.
-func (f *paperFlags) inputs() []string {
-	if f.shelf == "" {
-		return f.orders
-	}
-	return append([]string{f.shelf}, f.orders...)
-}
-
 // tellChoices says what was chosen for each syringe, why, and what else was
 // weighed.
 func tellChoices(w io.Writer, j *job) {
