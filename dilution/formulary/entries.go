@@ -138,6 +138,9 @@ func (e *entries) presentation(p Presentation) {
 	text := p.Amount.Written() + tail(" in ", p.Volume.Written())
 	if p.Powder() {
 		text = p.Amount.Written() + " of powder" + tail(", add ", p.Added.Written())
+		if p.Obtained {
+			text += ", which gives " + p.Volume.Written()
+		}
 	}
 	if p.SecondName != "" {
 		text += " with " + p.SecondAmount.Written() + " of " + p.SecondName
