@@ -33,8 +33,9 @@ func NewList(
 }
 
 // NewList plans every syringe of o that is not left out, from the bench. Syringes
-// are planned in making order, and what one of them opens is gone from the shelf
-// for the next. It returns all reasons; when any of them refuses, nothing of the
+// are planned in making order, and what one of them opens, made or left out, is
+// gone from the shelf for the next, so that a label printed by itself comes from
+// the same containers as in the list. It returns all reasons; when any of them refuses, nothing of the
 // list is to be made.
 func (b Bench) NewList(
 	o order.Order,
@@ -60,8 +61,9 @@ func (b Bench) NewList(
 	all = append(all, missing...)
 	made := plannedAll(s, &list, &all, leaveOut, faults)
 	all = append(all, localSums(made)...)
-	list.Cautions = shared(list.Plans)
-	all = append(all, list.Cautions...)
+	whole := append(edition(s, o), shared(list.Plans)...)
+	all = append(all, whole...)
+	list.Cautions = append(ofOrder(faults), whole...)
 	if len(list.Plans) == 0 && !all.Refused() {
 		all = append(all, refusal.Reason{
 			Code: refusal.NothingToMake, Severity: refusal.Refuse,
@@ -105,7 +107,11 @@ func plannedAll(s site, list *List, all *refusal.List, leaveOut map[int]bool, fa
 		unread := broken[sy.Number] || unreadable(o.Patients[sy.Patient])
 		w := newPlan(s, list.Formulary, o, sy, list.At, unread)
 		p, reasons := w.plan, w.reasons
-		p.Cautions = append(ofPatient(faults, o.Patients[sy.Patient]), p.Cautions...)
+		if s.stock != nil && !unread && !reasons.Refused() {
+			s.stock.takeAway(p) // also for one that is left out: it may be made another time
+		}
+		typed := append(ofPatient(faults, o, sy.Patient), faults.Cautions().Of(sy.Number)...)
+		p.Cautions = append(typed, p.Cautions...)
 		if unread && !leaveOut[sy.Number] {
 			*all = append(*all, reasons.Refusals()...)
 			continue
@@ -118,9 +124,6 @@ func plannedAll(s site, list *List, all *refusal.List, leaveOut map[int]bool, fa
 		*all = append(*all, reasons...)
 		list.Plans = append(list.Plans, p)
 		made = append(made, w)
-		if s.stock != nil && !reasons.Refused() {
-			s.stock.takeAway(p)
-		}
 	}
 	return made
 }

@@ -48,6 +48,7 @@ type Mixture struct {
 	Method        Method
 	Containers    int                    // of all sizes together
 	Packs         []Pack                 // what is opened, by size; one entry where all are alike
+	AddBarrel     syringe.Barrel         // measures the fluid for a powder; not given without a shelf
 	Fluids        []FluidPack            // containers of diluent to fetch; none without a shelf that lists them
 	Strength      quantity.Concentration // of the presentation, after mixing a powder
 	DrugWanted    quantity.Volume        // exact, before the graduation
@@ -177,6 +178,9 @@ type Plan struct {
 	Prepared        time.Time
 	UseBy           UseBy
 	Standard        string // the standard preparation's id, if it is one
+	// Edition and Region are the scheme of label classes that the site has
+	// picked; "" for the usual one.
+	Edition, Region string
 	Cautions        refusal.List
 }
 

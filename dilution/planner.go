@@ -2,6 +2,7 @@ package dilution
 
 import (
 	"fmt"
+	"strings"
 	"time"
 
 	"drawup/dilution/body"
@@ -128,7 +129,7 @@ func newPlan(
 	broken bool,
 ) *work {
 	w := &work{site: s, f: f, o: sy, patient: o.Patients[sy.Patient]}
-	w.plan = Plan{Number: sy.Number, Order: sy, Settled: sy, Patient: w.patient, Style: s.style, Prepared: at, Route: "IV"}
+	w.plan = Plan{Number: sy.Number, Order: sy, Settled: sy, Patient: w.patient, Style: s.style, Prepared: at, Route: "IV", Edition: s.edition, Region: s.region}
 	if sy.Route.Given() {
 		w.plan.Route = sy.Route.Value
 	}
@@ -268,6 +269,9 @@ func (w *work) unverified() {
 	}
 	p := w.plan
 	note("contents of the container", p.Presentation.Unverified)
+	for _, pack := range p.Mixture.Packs {
+		note("contents of the container", pack.Presentation.Unverified)
+	}
 	if p.Dose != nil {
 		for _, f := range []formulary.Figure[quantity.Dose]{
 			p.Dose.Rule.HardLow, p.Dose.Rule.UsualLow, p.Dose.Rule.UsualHigh,
@@ -331,10 +335,16 @@ func joinOr(list []string) string {
 
 // ofPatient is the cautions of the reading that stand on a value of this
 // patient, to be printed with each of the patient's syringes.
-func ofPatient(faults refusal.List, p order.Patient) refusal.List {
+func ofPatient(faults refusal.List, o order.Order, patient int) refusal.List {
 	var out refusal.List
 	for _, r := range faults.Cautions().Of(0) {
-		if p.Weight.Given() && r.Pos == p.Weight.Pos {
+		at := -1 // the patient in whose table the caution stands
+		for i, p := range o.Patients {
+			if p.Pos.Line <= r.Pos.Line && (at < 0 || p.Pos.Line > o.Patients[at].Pos.Line) {
+				at = i
+			}
+		}
+		if strings.HasPrefix(r.Field, "patient.") && at == patient {
 			out = append(out, r)
 		}
 	}

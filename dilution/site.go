@@ -30,6 +30,8 @@ type site struct {
 	jurisdiction string            // whose standard preparations are used; "" for any
 	tallMan      formulary.TallMan // the zero list has no names
 	dualNames    bool
+
+	edition, region string // scheme of label classes, "" for the usual one
 }
 
 type useByPolicy struct {
@@ -85,6 +87,10 @@ func siteOf(o order.Order) (site, error) {
 		s.step = in.PumpStep.Value
 	}
 	s.dualNames = in.DualNames
+	s.edition = in.Edition.Value
+	if in.Anticoagulants.Value == order.Teal {
+		s.region = order.Teal
+	}
 	s.jurisdiction = in.Jurisdiction.Value
 	if in.BolusUseBy.Value > 0 {
 		s.bolus = useByPolicy{int64(in.BolusUseBy.Value / time.Minute), "site policy in the order file"}

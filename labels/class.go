@@ -1,8 +1,8 @@
 package labels
 
-// Edition is the edition of ISO 26825 that the table below follows. The
-// second edition (October 2020) replaced the first of 2008; a third is in
-// work, so a label says which one it follows.
+// Edition is the edition of ISO 26825 whose classes a label has when a site
+// picks none. The second edition (October 2020) replaced the first of 2008; a
+// third is in work, so a label says which one it follows.
 const Edition = "2020"
 
 // Layout is the only claim a label sheet makes about the standard. Adhesive,
@@ -28,9 +28,15 @@ type Class struct {
 	// LetterOnBar is the colour of the name in the bar; it means something
 	// only with Bar.
 	LetterOnBar RGB
+	// Edition is the edition that the class follows, Region the regional option
+	// of its scheme, "" for none.
+	Edition, Region string
+	// Basis says how far the design was seen: clause, summary or reading; Why
+	// what it rests on.
+	Basis, Why string
 }
 
-// Colours of the table, named by hue.
+// The palette, named by hue.
 var (
 	white  = RGB{0xFF, 0xFF, 0xFF}
 	black  = RGB{0x00, 0x00, 0x00}
@@ -42,48 +48,36 @@ var (
 	grey   = RGB{0xAF, 0xA9, 0xA0} // 401
 	green  = RGB{0xA4, 0xD6, 0x5E} // 367
 	salmon = RGB{0xEF, 0xBE, 0x7D} // 156
+	teal   = RGB{0x00, 0xA4, 0x99} // regional; no published screen value was seen, this one is our choice
 )
 
-// Classes lists all classes in a fixed order.
-//
-// Colours and classes are those of Table 1 of ISO 26825:2020 as a public
-// summary gives them; the standard's own table was not seen. Not seen either
-// and therefore our reading: the white letters in the bar of suxamethonium and
-// adrenaline (2008: the label's own colour, which on black is too dim for red),
-// the look of heparin and protamine, and which class "everything else" is.
-// Stripes: clauses 5.2.2 and 5.4.4. Line: clause 5.4.4, a "should".
-func Classes() []Class { return append([]Class{}, classes[:]...) }
-
-// classes is the table; it never changes.
-var classes = [...]Class{
-	{Code: "IND", Word: "INDUCTION", Fill: yellow},
-	{Code: "BZD", Word: "BENZODIAZEPINE", Fill: orange},
-	{Code: "BZD-A", Parent: "BZD", Word: "BENZODIAZEPINE ANTAGONIST", Fill: orange, Stripes: true},
-	{Code: "NMB", Word: "RELAXANT", Fill: red},
-	{Code: "SUX", Parent: "NMB", Word: "RELAXANT", Fill: red, Bar: true, LetterOnBar: white},
-	{Code: "NMB-R", Parent: "NMB", Word: "REVERSAL", Fill: red, Stripes: true, Line: true},
-	{Code: "OPI", Word: "OPIOID", Fill: blue},
-	{Code: "OPI-A", Parent: "OPI", Word: "OPIOID ANTAGONIST", Fill: blue, Stripes: true},
-	{Code: "VAS", Word: "VASOPRESSOR", Fill: violet},
-	{Code: "ADR", Parent: "VAS", Word: "VASOPRESSOR", Fill: violet, Bar: true, LetterOnBar: white},
-	{Code: "HYP", Parent: "VAS", Word: "HYPOTENSIVE", Fill: violet, Stripes: true},
-	{Code: "LA", Word: "LOCAL ANAESTHETIC", Fill: grey},
-	{Code: "ACH", Word: "ANTICHOLINERGIC", Fill: green},
-	{Code: "AEM", Word: "ANTI-EMETIC", Fill: salmon},
-	{Code: "HEP", Word: "HEPARIN", Fill: white},
-	{Code: "PRO", Parent: "HEP", Word: "PROTAMINE", Fill: black, Stripes: true},
-	{Code: "OTH", Word: "OTHER", Fill: white},
-}
-
-// ClassOf finds a class by its code. An unknown code is no class: nothing is
-// derived from a drug's name or code.
-func ClassOf(code string) (Class, bool) {
-	for _, c := range &classes {
-		if c.Code == code {
-			return c, true
-		}
+// hue is a colour of the palette by its name in the table of classes.
+func hue(name string) (RGB, bool) {
+	switch name {
+	case "white":
+		return white, true
+	case "black":
+		return black, true
+	case "yellow":
+		return yellow, true
+	case "orange":
+		return orange, true
+	case "red":
+		return red, true
+	case "blue":
+		return blue, true
+	case "violet":
+		return violet, true
+	case "grey":
+		return grey, true
+	case "green":
+		return green, true
+	case "salmon":
+		return salmon, true
+	case "teal":
+		return teal, true
 	}
-	return Class{}, false
+	return RGB{}, false
 }
 
 // Background is the colour behind most of the label: the class colour, or
@@ -100,3 +94,12 @@ func (c Class) Background() RGB {
 // reader without the red receptor (simulation after Viénot, Brettel and Mollon
 // 1999), under the 4.5 to 1 asked for of small text.
 func (c Class) Dim() bool { return c.Background() == red }
+
+// Claim is what a label of this class may say about the standard; of the
+// edition of 2008, whose clauses were not read, less than of the other.
+func (c Class) Claim() string {
+	if c.Edition == "2008" {
+		return "layout after ISO 26825:2008, white letters in the bar"
+	}
+	return Layout
+}

@@ -33,9 +33,18 @@ type Making struct {
 // the number.
 func (m Making) SerialOf(n int) string { return fmt.Sprintf("%s%03d", m.Serial, n) }
 
+// ClassFor is the class of a plan's drug in the scheme that its site has picked.
+func ClassFor(p dilution.Plan) (Class, bool) {
+	s, ok := SchemeOf(p.Edition, p.Region)
+	if !ok {
+		return Class{}, false
+	}
+	return s.Class(p.Drug.Class)
+}
+
 // FromPlan is the label of one planned syringe.
 func FromPlan(p dilution.Plan, w Facts, m Making) (Label, error) {
-	class, ok := ClassOf(p.Drug.Class)
+	class, ok := ClassFor(p)
 	if !ok {
 		return Label{}, fmt.Errorf("got label class %q, want one of Table 1", p.Drug.Class)
 	}
@@ -241,7 +250,7 @@ func askedVolume(p dilution.Plan, add func(name, text string)) {
 // askedIfKnown asks under a name that the second route may not know yet, and
 // reports whether it did.
 func askedIfKnown(add func(name, text string), name, text string) bool {
-	if !recheck.Knows(name) {
+	if !printed(name) {
 		return false
 	}
 	add(name, text)

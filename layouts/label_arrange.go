@@ -276,8 +276,8 @@ func (a *arrangement) upper(l labels.Label, c *content, strips int) bool {
 		return false
 	}
 	if d.class.Line {
-		// Level with the end of the stripes, so that none shows below it.
-		a.line = d.line(max(a.name.bottom+lineAir, d.legEnd-d.lineHeight()))
+		// A little over the end of the stripes, so that no sliver shows below it.
+		a.line = d.line(max(a.name.bottom+lineAir, d.legEnd-d.lineHeight()+lineOver))
 	}
 	return true
 }

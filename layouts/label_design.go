@@ -11,6 +11,7 @@ const (
 	stripeGap = 530 // 5.4.4: at least 0.5 mm from the stripes to the top of the name; 0.03 mm for the rounding of type sizes
 	lineLow   = 350 // least thickness of the reversal line
 	lineAir   = 80  // from the name to it
+	lineOver  = 40  // it covers the ends of the stripes by so much
 	legGap    = 350 // the stripes beside the name end this far above the concentration
 	hairline  = 100
 )

@@ -141,7 +141,7 @@ func (b block) concentrations(list []stated, first int, large, end ink.Micrometr
 	for i, s := range list {
 		need += large + s.dips.at(bold)
 		if i > 0 {
-			need += 150
+			need += statedAir(large)
 		}
 	}
 	if need > end {
@@ -167,10 +167,14 @@ func (b block) concentrations(list []stated, first int, large, end ink.Micrometr
 		if !fits {
 			return false
 		}
-		y = low + 150
+		y = low + statedAir(large)
 	}
 	return true
 }
+
+// statedAir parts two concentrations: the upper one's tails from the dots and
+// stems of the lower one, which rise above its capitals.
+func statedAir(large ink.Micrometre) ink.Micrometre { return 150 + large*(rise-100)/100 }
 
 func (b block) statedWidth(s stated, large ink.Micrometre) ink.Micrometre {
 	w := s.wide[s.face].at(SizeFor(statedFaces()[s.face], large))

@@ -37,7 +37,7 @@ const Paper = "label"
 // out for want of room, with a caution in the list; the pages are there unless
 // the list is Refused.
 func Labels[P Proof](list []labels.Label, s Stock, passed []P, opt Options) ([]ink.Page, refusal.List) {
-	var refused refusal.List
+	refused := labels.OneScheme(list)
 	if opt.Used < 0 || opt.Used >= s.PerPage() && !s.Roll() {
 		refused = append(refused, refusal.Reason{Code: refusal.ValueUnknown, Severity: refusal.Refuse,
 			Message: "More labels are said to be used than the sheet has.", Field: "skip",
@@ -98,7 +98,7 @@ func (p *placer) put(l labels.Label, seen pattern, modules []string) {
 		page := ink.Page{W: s.PageW, H: s.PageH, Bookmark: bookmark(l, s, len(p.pages)+1, p.total)}
 		if !s.Roll() {
 			page.Marks = make([]ink.Mark, 0, 32+per*(len(seen.marks)+2))
-			page.Add(s.edgeNote(p.opt.Foot, len(p.pages)+1, p.total)...)
+			page.Add(s.edgeNote(p.opt.Foot, l.Class.Claim(), len(p.pages)+1, p.total)...)
 		}
 		p.pages = append(p.pages, page)
 	}

@@ -14,10 +14,10 @@ const noteSize = 1700
 // edgeNote is what a sheet says about itself: stock, page, how to print it, a
 // ruler that proves the scale, and the caller's words. It stands in the upper
 // and lower margin, or on the last label where there is no margin.
-func (s Stock) edgeNote(foot []string, page, total int) []ink.Mark {
+func (s Stock) edgeNote(foot []string, claim string, page, total int) []ink.Mark {
 	said := []string{
 		fmt.Sprintf("%s, sheet %d of %d. Print at 100 %%, without fitting to the page.", s.Name, page, total),
-		"Design: " + labels.Layout + ".",
+		"Design: " + claim + ".",
 	}
 	if s.Note != "" {
 		said = append(said, "Note: "+s.Note+".")

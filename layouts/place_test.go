@@ -48,7 +48,7 @@ func TestPlaces(t *testing.T) {
 		if names != count {
 			t.Errorf("page %d: got %d labels, want %d", page+1, names, count)
 		}
-		text := file.AllText(page + 1)
+		text := strings.ReplaceAll(file.AllText(page+1), "\u00a0", " ") // 100 % stays together
 		for _, want := range []string{fmt.Sprintf("sheet %d of 2", page+1), "100 %", "40 mm", "layout after ISO 26825:2020, 5.2 to 5.4", "Made by A. Example.", "a4-65"} {
 			if !strings.Contains(text, want) {
 				t.Errorf("page %d: found no %q at the edge", page+1, want)

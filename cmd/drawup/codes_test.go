@@ -111,6 +111,7 @@ func examples() map[refusal.Code]func(*testing.T) string {
 		refusal.StockUnknown:     preparing(soundOrder, "order.toml", "--stock", "papyrus"),
 		refusal.SyringeNumber:    preparing(soundOrder, "order.toml", "--leave-out", "9"),
 		refusal.SyringesLeftOut:  preparing(two, "order.toml", "--leave-out", "2"),
+		refusal.LabelEdition:     preparing(strings.Replace(soundOrder, "\n[[patient]]", "\n[site]\nedition = \"2008\"\n\n[[patient]]", 1), "order.toml", "--json"),
 		refusal.LabelsTogether:   preparing(two, "order.toml"),
 		refusal.OutputUnwritable: preparing(soundOrder, "order.toml", "--out", "order.toml"),
 		refusal.GlyphMissing:     preparing(strings.Replace(soundOrder, "A. Example", "A. 薬", 1), "order.toml"),

@@ -65,7 +65,7 @@ func newJob(
 		return j, reasons
 	}
 	if len(lib.shelf) > 0 { // another shelf is another plan (rule R19)
-		data = append(append([]byte{}, data...), lib.shelf...)
+		data = fmt.Appendf(nil, "%s\nshelf, %d bytes\n%s", data, len(lib.shelf), lib.shelf)
 	}
 	j.shelf = lib.bench.Shelf
 	j.making = makingOf(o, f, when, data, leaveOut)
@@ -205,6 +205,15 @@ func ourFault(syringe int, err error) refusal.Reason {
 		Message: "the two routes disagree: " + err.Error(),
 		Remedy:  "do not use any figure of this order; report the order and this message",
 	}
+}
+
+// subject is what a file says of itself: the state of the formulary, and which
+// edition of the standard its labels follow.
+func (j *job) subject() string {
+	if len(j.labels) == 0 {
+		return j.making.State
+	}
+	return j.making.State + "; labels: " + j.labels[0].Class.Claim()
 }
 
 // name is the order's file name without its folder and ending.

@@ -14,10 +14,11 @@ import (
 	"drawup/dilution/refusal"
 )
 
-// classes are the label classes of label-rules.md 1.3.
+// classes are the label classes of package labels; a test there holds the two
+// together.
 var classes = []string{
 	"IND", "BZD", "BZD-A", "NMB", "SUX", "NMB-R", "OPI", "OPI-A", "VAS", "ADR", "HYP", "LA", "ACH", "AEM",
-	"HEP", "PRO", "OTH",
+	"HEP", "PRO", "ACO", "OTH",
 }
 
 // flags are the marks a drug may carry.

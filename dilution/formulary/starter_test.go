@@ -162,7 +162,7 @@ func TestEntriesSayWhatIsObtained(t *testing.T) {
 			}
 			n++
 			if !slices.ContainsFunc(d.Entries(), func(e formulary.Entry) bool {
-				return e.Name == p.ID+": contents" && strings.HasSuffix(e.Text, "obtained "+p.Volume.Written())
+				return e.Name == p.ID+": contents" && strings.HasSuffix(e.Text, "which gives "+p.Volume.Written())
 			}) {
 				t.Errorf("%s, %s: no entry says that %s are obtained", d.Name, p.ID, p.Volume.Written())
 			}

@@ -44,17 +44,19 @@ type Session struct {
 
 // A Site is the house's settings. What is not given has the caller's default.
 type Site struct {
-	Style         Field[quantity.Style]
-	BolusUseBy    Field[time.Duration]    // from 1 min to 30 days, our own bound
-	InfusionUseBy Field[time.Duration]    // as BolusUseBy
-	Smallest      Field[quantity.Volume]  // smallest volume that may be measured (R8)
-	Tolerance     Field[quantity.Percent] // how far a graduation may move a volume (R8)
-	PumpStep      Field[quantity.FlowRate]
-	Barrels       []Field[quantity.Volume] // syringe sizes in stock
-	Jurisdiction  Field[string]            // whose standard preparations are used; any when not given
-	TallMan       Field[string]            // whose tall-man list names are printed by; none when not given
-	DualNames     bool                     // the other name follows in brackets
-	Products      []Product                // preparations with a GTIN of the site's own
+	Style          Field[quantity.Style]
+	BolusUseBy     Field[time.Duration]    // from 1 min to 30 days, our own bound
+	InfusionUseBy  Field[time.Duration]    // as BolusUseBy
+	Smallest       Field[quantity.Volume]  // smallest volume that may be measured (R8)
+	Tolerance      Field[quantity.Percent] // how far a graduation may move a volume (R8)
+	PumpStep       Field[quantity.FlowRate]
+	Barrels        []Field[quantity.Volume] // syringe sizes in stock
+	Jurisdiction   Field[string]            // whose standard preparations are used; any when not given
+	TallMan        Field[string]            // whose tall-man list names are printed by; none when not given
+	DualNames      bool                     // the other name follows in brackets
+	Edition        Field[string]            // of ISO 26825, Edition2008 or Edition2020; the latter when not given
+	Anticoagulants Field[string]            // Teal or White; White when not given
+	Products       []Product                // preparations with a GTIN of the site's own
 }
 
 // A Product is a preparation to which the site has given a trade item number
@@ -67,6 +69,15 @@ type Product struct {
 	Volume        Field[quantity.Volume]
 	Pos           refusal.Pos
 }
+
+// Editions of the standard for syringe labels, and the two ways to colour
+// anticoagulants: teal by a regional custom, or white as everything else.
+const (
+	Edition2008 = "2008"
+	Edition2020 = "2020"
+	Teal        = "teal"
+	White       = "white"
+)
 
 // A Patient is whom the syringes are for.
 type Patient struct {

@@ -220,6 +220,8 @@ func (r *reader) site(s siteRecord) {
 		PumpStep:      read(r, s.PumpStep, quantity.ParseFlowRate, at(p, "pump_step")),
 	}
 	site := &r.order.Site
+	site.Edition = read(r, s.Edition, parseEdition, at(p, "edition"))
+	site.Anticoagulants = read(r, s.Anticoagulants, parseAnticoagulants, at(p, "anticoagulants"))
 	site.Jurisdiction = r.text(s.Jurisdiction, at(p, "jurisdiction"))
 	site.TallMan = r.text(s.TallMan, at(p, "tall_man"))
 	site.DualNames = s.DualNames

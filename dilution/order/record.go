@@ -20,16 +20,18 @@ type sessionRecord struct {
 }
 
 type siteRecord struct {
-	Style         string   `toml:"style"`
-	BolusUseBy    string   `toml:"bolus_use_by"`
-	InfusionUseBy string   `toml:"infusion_use_by"`
-	Smallest      string   `toml:"smallest_volume"`
-	Tolerance     string   `toml:"tolerance"`
-	PumpStep      string   `toml:"pump_step"`
-	Barrels       []string `toml:"barrels"`
-	Jurisdiction  string   `toml:"jurisdiction"`
-	TallMan       string   `toml:"tall_man"`
-	DualNames     bool     `toml:"dual_names"`
+	Style          string   `toml:"style"`
+	BolusUseBy     string   `toml:"bolus_use_by"`
+	InfusionUseBy  string   `toml:"infusion_use_by"`
+	Smallest       string   `toml:"smallest_volume"`
+	Tolerance      string   `toml:"tolerance"`
+	PumpStep       string   `toml:"pump_step"`
+	Barrels        []string `toml:"barrels"`
+	Jurisdiction   string   `toml:"jurisdiction"`
+	TallMan        string   `toml:"tall_man"`
+	DualNames      bool     `toml:"dual_names"`
+	Edition        string   `toml:"edition"`
+	Anticoagulants string   `toml:"anticoagulants"`
 
 	Products []productRecord `toml:"gtin"`
 }
@@ -108,7 +110,7 @@ func knownKeys() []string {
 		names []string
 	}{
 		{"session", []string{"place", "date", "prepared", "zone", "preparer", "invented"}},
-		{"site", []string{"style", "bolus_use_by", "infusion_use_by", "smallest_volume", "tolerance", "pump_step", "barrels", "jurisdiction", "tall_man", "dual_names"}},
+		{"site", []string{"style", "bolus_use_by", "infusion_use_by", "smallest_volume", "tolerance", "pump_step", "barrels", "jurisdiction", "tall_man", "dual_names", "edition", "anticoagulants"}},
 		{"site.gtin", []string{"number", "drug", "concentration", "volume"}},
 		{"patient", []string{"id", "name", "sex", "age", "height", "weight", "weighed", "estimated", "frail"}},
 		{"patient.syringe", append(commonKeys(), "dose", "amount", "concentration", "volume", "doses", "dilute_if_needed")},

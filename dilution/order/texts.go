@@ -162,6 +162,22 @@ func parseMethod(s string) (string, error) {
 	return "", &wordError{s, fmt.Sprintf("%q, %q or %q", MakeUpTo, AddTo, WithdrawThenAdd)}
 }
 
+func parseEdition(s string) (string, error) {
+	switch s {
+	case Edition2008, Edition2020:
+		return s, nil
+	}
+	return "", &wordError{s, fmt.Sprintf("%q or %q", Edition2008, Edition2020)}
+}
+
+func parseAnticoagulants(s string) (string, error) {
+	switch s {
+	case Teal, White:
+		return s, nil
+	}
+	return "", &wordError{s, fmt.Sprintf("%q or %q", Teal, White)}
+}
+
 func parseLine(s string) (string, error) {
 	switch s {
 	case "peripheral", "central":

@@ -86,6 +86,7 @@ func paperEntries() []Entry {
 		warns(LabelsTogether, Papers, "", "Labels of a whole list are printed at once, before the syringes are filled."),
 		stops(GlyphMissing, Papers, "R15", "A text has a letter that no embedded face can show."),
 		either(TextTooLong, Papers, "R15", "A text does not fit: refused in an order and on a sheet, left to the draw-up sheet on a label."),
+		warns(LabelEdition, Papers, "R16", "The site has picked the older edition of the standard for syringe labels, or a regional colour."),
 		either(TextMisread, Papers, "R14", "A text in a person's words has a number, unit or name in a form that is known to be misread."),
 		warns(SyringesLeftOut, Papers, "", "Syringes were left out on request."),
 		stops(RoutesDisagree, Routes, "R17", "The second route comes to another result: a fault of this program."),

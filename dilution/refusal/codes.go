@@ -182,6 +182,7 @@ const (
 	GlyphMissing     Code = "glyph-missing"
 	TextTooLong      Code = "text-too-long"
 	TextMisread      Code = "text-misread"
+	LabelEdition     Code = "label-edition"
 	SyringesLeftOut  Code = "syringes-left-out"
 	LimitsNotChecked Code = "limits-not-checked"
 	QuickCheck       Code = "quick-sum-checked"

@@ -104,7 +104,7 @@ func (s scribe) patient() string {
 
 // name is the head of the syringe with its concentration large.
 func (s scribe) name(conc labels.Line, below labels.Line, large bool) Name {
-	class, _ := labels.ClassOf(s.p.Drug.Class) // no class, no band: the label itself is refused then
+	class, _ := labels.ClassFor(s.p) // no class, no band: the label itself is refused then
 	drug := labels.Capital(s.drug())
 	if s.p.Drug.ShowAs && s.p.Drug.CountedAs != "" {
 		drug += " (" + s.p.Drug.CountedAs + ")"

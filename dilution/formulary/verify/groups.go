@@ -66,7 +66,7 @@ func unitGroups() map[string]size {
 		"A10":   {span{"30", "300"}, none, span{"0.01", "0.5"}},
 		"B01":   {span{"15", "80000"}, span{"15", "500"}, span{"4", "100"}},
 		"H01BA": {span{"0.06", "60"}, none, span{"0.003", "0.3"}},
-		"H01BB": {span{"1.5", "30"}, span{"0.008", "0.3"}, span{"0.0003", "0.2"}}, // after birth 10 units/h
+		"H01BB": {span{"1.5", "30"}, span{"0.008", "0.3"}, span{"0.0003", "0.4"}},
 	}
 }
 
