@@ -33,8 +33,9 @@ func NewList(
 }
 
 // NewList plans every syringe of o that is not left out, from the bench. Syringes
-// are planned in making order, and what one of them opens is gone from the shelf
-// for the next. It returns all reasons; when any of them refuses, nothing of the
+// are planned in making order, and what one of them opens, made or left out, is
+// gone from the shelf for the next, so that a label printed by itself comes from
+// the same containers as in the list. It returns all reasons; when any of them refuses, nothing of the
 // list is to be made.
 func (b Bench) NewList(
 	o order.Order,
@@ -106,6 +107,9 @@ func plannedAll(s site, list *List, all *refusal.List, leaveOut map[int]bool, fa
 		unread := broken[sy.Number] || unreadable(o.Patients[sy.Patient])
 		w := newPlan(s, list.Formulary, o, sy, list.At, unread)
 		p, reasons := w.plan, w.reasons
+		if s.stock != nil && !unread && !reasons.Refused() {
+			s.stock.takeAway(p) // also for one that is left out: it may be made another time
+		}
 		typed := append(ofPatient(faults, o, sy.Patient), faults.Cautions().Of(sy.Number)...)
 		p.Cautions = append(typed, p.Cautions...)
 		if unread && !leaveOut[sy.Number] {
@@ -120,9 +124,6 @@ func plannedAll(s site, list *List, all *refusal.List, leaveOut map[int]bool, fa
 		*all = append(*all, reasons...)
 		list.Plans = append(list.Plans, p)
 		made = append(made, w)
-		if s.stock != nil && !reasons.Refused() {
-			s.stock.takeAway(p)
-		}
 	}
 	return made
 }

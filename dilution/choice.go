@@ -34,6 +34,7 @@ func (w *work) choose(all []trial) {
 		}
 	}
 	add(w.mixtureChoice(all))
+	add(w.powderChoice())
 	add(w.measuringChoice())
 	add(w.givingChoice())
 	add(w.diluentChoice())
@@ -184,6 +185,20 @@ func (w *work) mixtureChoice(all []trial) Choice {
 		return Choice{What: "final volume", Took: s.Volume(m.FinalVolume), Why: fmt.Sprintf("%d doses as they are read, so that the last is whole", o.Doses.Value)}
 	}
 	return Choice{}
+}
+
+// powderChoice is the syringe that measures the fluid for a powder.
+func (w *work) powderChoice() Choice {
+	b, p, s := w.plan.Mixture.AddBarrel, w.plan.Presentation, w.plan.Style
+	if !b.Given() {
+		return Choice{}
+	}
+	best := b.Look(p.Added)
+	c := Choice{What: "syringe for the powder", Took: s.Volume(b.Nominal()), Why: "the smallest that has a line at " + s.Volume(p.Added)}
+	if w.site.explain {
+		c.Against = w.otherBarrels(b, func(x syringe.Barrel) string { return w.whyNotMeasure(best, x.Look(p.Added)) })
+	}
+	return c
 }
 
 // measuringChoice is the syringe that measures the drug.

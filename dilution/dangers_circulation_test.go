@@ -126,6 +126,6 @@ func TestDangerConflictsToTheCautiousSide(t *testing.T) {
 		{"verapamil above 10 mg", "hospital intravenous guide, Ireland, verapamil", "syringe", "drug: verapamil; presentation: vial 10 mg in 4 mL; dose: 11 mg", refusal.DoseAboveHard, "presentation: ampoule 5 mg in 2 mL; dose: 5 mg", ""},
 		{"vasopressin above 0.07 units/min in septic shock", "US prescribing information, vasopressin, 2021", "infusion", "drug: vasopressin; presentation: ampoule 20 units in 1 mL; standard: 20 units in 50 mL; accepted_by: A. Example; accepted_reason: invented; start: 0.08 units/min; indication: septic shock", refusal.RateAboveHard, "start: 0.06 units/min", ""},
 		{"metaraminol above 5 mg", "UK SmPC, metaraminol 0.5 mg/mL syringe, a copy", "syringe", "drug: metaraminol; presentation: syringe 5 mg in 10 mL; dose: 10 mg", refusal.SlipTen, "dose: 0.5 mg", ""},
-		{"oxytocin above 20 milliunits/min", "UK product text, oxytocin", "infusion", "drug: oxytocin; presentation: ampoule 5 units in 1 mL; mix: 5 units in 500 mL; method: withdraw, then add; start: 21 milliunits/min", refusal.RateAboveHard, "start: 20 milliunits/min", ""},
+		{"oxytocin above 20 milliunits/min", "UK product text, oxytocin", "infusion", "drug: oxytocin; presentation: ampoule 5 units in 1 mL; mix: 5 units in 500 mL; method: withdraw, then add; indication: labour; start: 21 milliunits/min", refusal.RateAboveHard, "start: 20 milliunits/min", ""},
 	})
 }

@@ -116,8 +116,8 @@ func TestDangerConcentrations(t *testing.T) {
 			"drug: dexmedetomidine; presentation: multi-dose vial 1000 microgram in 10 mL; mix: 500 microgram in 50 mL; start: 0.4 microgram/kg/h; indication: sedation in intensive care", refusal.ConcentrationTooHigh, "mix: 400 microgram in 50 mL", ""},
 		{"highest: a bolus of pethidine 10 mg/mL", "handbook on injectable drugs, 25th edition, meperidine", "syringe",
 			"drug: pethidine; presentation: ampoule 100 mg in 2 mL; concentration: 25 mg/mL; volume: 4 mL; diluent: sodium chloride 0.9 %; dose: 25 mg; route: IV; indication: pain", refusal.ConcentrationTooHigh, "concentration: 10 mg/mL; volume: 10 mL", ""},
-		{"highest: midazolam 0.15 mg/mL in the newborn", "newborn sheet, New Zealand, midazolam, 2019; no rows for newborns are filed", "infusion",
-			"drug: midazolam; presentation: ampoule 5 mg in 5 mL; mix: 25 mg in 50 mL; diluent: glucose 5 %; start: 0.03 mg/kg/h; indication: sedation in intensive care", refusal.AgeOutside, "", newborn},
+		{"highest: midazolam 0.15 mg/mL in the newborn", "newborn sheet, New Zealand, midazolam, 2019", "infusion",
+			"drug: midazolam; presentation: ampoule 5 mg in 5 mL; mix: 25 mg in 50 mL; diluent: glucose 5 %; start: 0.03 mg/kg/h; indication: sedation in intensive care", refusal.ConcentrationTooHigh, "", newborn},
 	})
 }
 

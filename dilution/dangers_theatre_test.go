@@ -110,7 +110,7 @@ func TestDangerUnitSlipsInPrint(t *testing.T) {
 		{"lidocaine 2 g in 500 mg", "bedside card, lidocaine", "infusion",
 			"drug: lidocaine; presentation: ampoule 200 mg in 20 mL; mix: 2 g in 500 mg; start: 2 mg/min; indication: arrhythmia", refusal.UnitWrongKind, "mix: 200 mg in 50 mL; diluent: glucose 5 %", ""},
 		{"suxamethonium above 500 mg/h", "drug monograph, suxamethonium, Myanmar edition", "infusion",
-			"drug: suxamethonium; mix: 50 mg in 50 mL; diluent: sodium chloride 0.9 %; accepted_by: A. Example; accepted_reason: invented; start: 8.5 mg/min", refusal.RateAboveHard, "start: 8 mg/min", ""},
+			"drug: suxamethonium; presentation: ampoule 100 mg in 2 mL; mix: 50 mg in 50 mL; diluent: sodium chloride 0.9 %; accepted_by: A. Example; accepted_reason: invented; start: 8.5 mg/min", refusal.RateAboveHard, "start: 8 mg/min", ""},
 		{"neostigmine above 5 mg", "US drug page, neostigmine", "syringe",
 			"drug: neostigmine; presentation: ampoule 2.5 mg in 1 mL; dose: 0.07 mg/kg actual", refusal.DoseAboveTotal, "dose: 0.05 mg/kg actual",
 			"\n[[patient]]\nid = \"A\"\nsex = \"male\"\nage = \"40 years\"\nheight = \"185 cm\"\nweight = \"80 kg\"\n"},

@@ -14,6 +14,15 @@ import (
 func (w *work) checkConcentration() bool {
 	line := w.line()
 	rows, central := w.boundsFor(line)
+	if purposes := w.boundedPurposes(); len(rows) == 0 && !w.o.Indication.Given() && len(purposes) > 0 {
+		return w.refuse(refusal.Reason{
+			Code: refusal.IndicationUnclear, Field: "indication",
+			Want: joinOr(quoted(purposes)), Rule: "R10", Pos: w.o.Pos,
+			Message: fmt.Sprintf("the concentrations of %s for %s depend on what it is for, and the order does not say",
+				w.plan.Drug.Name, w.use()),
+			Remedy: "write indication = one of: " + joinOr(quoted(purposes)),
+		})
+	}
 	if len(rows) == 0 {
 		remedy := "add bounds with their source to the formulary (whoever keeps it does that)"
 		if central {
@@ -33,6 +42,17 @@ func (w *work) checkConcentration() bool {
 		ok = w.within(b) && ok
 	}
 	return w.diluentStrength() && ok
+}
+
+// boundedPurposes are the indications that have bounds of their own for this use.
+func (w *work) boundedPurposes() []string {
+	var out []string
+	for _, b := range w.plan.Drug.Bounds {
+		if b.Use == w.use() && b.For != "" {
+			out = append(out, b.For)
+		}
+	}
+	return unique(out)
 }
 
 // line is the line that the syringe goes into, peripheral unless the order says

@@ -31,7 +31,7 @@ func (w *work) mix() bool {
 	if !ok {
 		return false
 	}
-	if !w.chooseMethod(t) || !w.draw(t) || !w.settleFinal(t) || !w.results() || !w.fetchFluids(t) {
+	if !w.chooseMethod(t) || !w.draw(t) || !w.settleFinal(t) || !w.results() || !w.measureFluid(t) || !w.fetchFluids(t) {
 		return false
 	}
 	w.deadSpaceCounts(t)

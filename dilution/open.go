@@ -8,6 +8,7 @@ import (
 	"drawup/dilution/formulary"
 	"drawup/dilution/quantity"
 	"drawup/dilution/refusal"
+	"drawup/dilution/syringe"
 )
 
 // open counts the containers for the drawn volume, by size. It says how many they
@@ -121,6 +122,25 @@ func (w *work) powderFluid(p formulary.Presentation) string {
 		}
 	}
 	return p.AddFluids[0]
+}
+
+// measureFluid finds the syringe on the shelf that measures the fluid for a powder:
+// it must have a line at the volume, since the strength rests on it.
+func (w *work) measureFluid(t target) bool {
+	p, s := w.plan.Presentation, w.plan.Style
+	if w.site.stock == nil || !p.Powder() {
+		return true
+	}
+	r, err := syringe.Measure(p.Added, w.site.barrels, w.site.smallest, w.site.tolerance)
+	if err == nil && r.MovedPercent.Sign() == 0 {
+		w.plan.Mixture.AddBarrel = r.Barrel
+		return true
+	}
+	return w.refuse(refusal.Reason{
+		Code: refusal.VolumeOffGraduation, Field: "presentation", Got: s.Volume(p.Added), Want: "a syringe with a line there", Rule: "R8", Pos: t.pos, Source: p.Source.Title,
+		Message: fmt.Sprintf("no syringe on the shelf has a line at %s, which are added to each %s of %s", s.Volume(p.Added), p.Container, p.ID),
+		Remedy:  "put a syringe of another size on the shelf, or take another presentation",
+	})
 }
 
 // fetchFluids chooses the containers of diluent on the shelf, where it lists any:

@@ -48,6 +48,7 @@ type Mixture struct {
 	Method        Method
 	Containers    int                    // of all sizes together
 	Packs         []Pack                 // what is opened, by size; one entry where all are alike
+	AddBarrel     syringe.Barrel         // measures the fluid for a powder; not given without a shelf
 	Fluids        []FluidPack            // containers of diluent to fetch; none without a shelf that lists them
 	Strength      quantity.Concentration // of the presentation, after mixing a powder
 	DrugWanted    quantity.Volume        // exact, before the graduation

@@ -269,6 +269,9 @@ func (w *work) unverified() {
 	}
 	p := w.plan
 	note("contents of the container", p.Presentation.Unverified)
+	for _, pack := range p.Mixture.Packs {
+		note("contents of the container", pack.Presentation.Unverified)
+	}
 	if p.Dose != nil {
 		for _, f := range []formulary.Figure[quantity.Dose]{
 			p.Dose.Rule.HardLow, p.Dose.Rule.UsualLow, p.Dose.Rule.UsualHigh,

@@ -95,11 +95,11 @@ func TestRocuroniumOneInTen(t *testing.T) {
 
 // The ready mixture: 2.5 mg with 0.5 mg in 1 mL, UK leaflet; always five to one.
 func TestReadyMixture(t *testing.T) {
-	p := one(t, "syringe", lines(key("drug", "neostigmine with glycopyrronium"), key("dose", "2.5 mg")))
+	p := one(t, "syringe", lines(key("drug", "neostigmine with glycopyrronium"), key("presentation", "ampoule 2.5 mg with 0.5 mg in 1 mL"), key("dose", "2.5 mg")))
 	want(t, "amount", uk().Amount(p.Mixture.Amount), "2.5 mg")
 	want(t, "second", uk().Amount(p.Mixture.SecondAmount), "500 micrograms")
 	want(t, "second per mL", uk().Concentration(p.Mixture.SecondConc), "500 micrograms/mL")
-	p = one(t, "syringe", lines(key("drug", "neostigmine with glycopyrronium"), key("dose", "3.5 mg")))
+	p = one(t, "syringe", lines(key("drug", "neostigmine with glycopyrronium"), key("presentation", "ampoule 2.5 mg with 0.5 mg in 1 mL"), key("dose", "3.5 mg")))
 	want(t, "amount of 1.4 mL", uk().Amount(p.Mixture.Amount), "3.5 mg")
 	want(t, "second of 1.4 mL", uk().Amount(p.Mixture.SecondAmount), "700 micrograms")
 	if p.Mixture.Containers != 2 {
@@ -121,10 +121,8 @@ func TestWeightsOfDoses(t *testing.T) {
 		{"male", "180 cm", "suxamethonium", "1 mg/kg actual", "80 kg", "80 mg"},
 	} {
 		patient := "\n[[patient]]\n" + lines(key("id", "A"), key("sex", c.sex), key("age", "40 years"), key("height", c.height), key("weight", "80 kg"))
-		body := lines(key("drug", c.drug), key("dose", c.dose))
-		if c.drug == "etomidate" {
-			body += key("presentation", "ampoule 20 mg in 10 mL") + "\n"
-		}
+		ampoule := map[string]string{"etomidate": "ampoule 20 mg in 10 mL", "suxamethonium": "ampoule 100 mg in 2 mL"}[c.drug]
+		body := lines(key("drug", c.drug), key("presentation", ampoule), key("dose", c.dose))
 		p := oneFor(t, patient, "syringe", body)
 		want(t, c.dose, uk().BodyWeight(p.Dose.Weight), c.weight)
 		want(t, c.dose, uk().Amount(p.Dose.Amount), c.amount)

@@ -172,7 +172,7 @@ func TestUnknownDrugNamesItsNeighbours(t *testing.T) {
 
 // A list from which every syringe is left out makes nothing, and says so.
 func TestEverythingLeftOut(t *testing.T) {
-	text := session + adult + "[[patient.syringe]]\n" + lines(key("drug", "suxamethonium"), key("dose", "1 mg/kg"))
+	text := session + adult + "[[patient.syringe]]\n" + lines(key("drug", "suxamethonium"), key("presentation", "ampoule 100 mg in 2 mL"), key("dose", "1 mg/kg"))
 	o, faults := order.Read("order.toml", []byte(text))
 	list, reasons := dilution.NewList(o, starter(t), o.Session.Prepared.Value, map[int]bool{1: true}, faults)
 	if got := reasons.Codes(); !slices.Equal(got, []refusal.Code{refusal.NothingToMake}) || !reasons.Refused() {
@@ -186,9 +186,9 @@ func TestEverythingLeftOut(t *testing.T) {
 // A refused syringe that is left out no longer stops the rest, and its reasons
 // are kept for the sheets.
 func TestLeaveOut(t *testing.T) {
-	text := session + adult + "[[patient.syringe]]\n" + lines(key("drug", "suxamethonium"), key("dose", "10 mg/kg")) +
-		"[[patient.syringe]]\n" + lines(key("drug", "suxamethonium"), key("dose", "1,5 mg/kg")) +
-		"[[patient.syringe]]\n" + lines(key("drug", "suxamethonium"), key("dose", "1 mg/kg"))
+	text := session + adult + "[[patient.syringe]]\n" + lines(key("drug", "suxamethonium"), key("presentation", "ampoule 100 mg in 2 mL"), key("dose", "10 mg/kg")) +
+		"[[patient.syringe]]\n" + lines(key("drug", "suxamethonium"), key("presentation", "ampoule 100 mg in 2 mL"), key("dose", "1,5 mg/kg")) +
+		"[[patient.syringe]]\n" + lines(key("drug", "suxamethonium"), key("presentation", "ampoule 100 mg in 2 mL"), key("dose", "1 mg/kg"))
 	o, faults := order.Read("order.toml", []byte(text))
 	f := starter(t)
 	if _, reasons := dilution.NewList(o, f, o.Session.Prepared.Value, nil, faults); len(reasons.Refusals()) != 2 {

@@ -6,6 +6,7 @@ import (
 	"testing"
 
 	"drawup/dilution"
+	"drawup/dilution/order"
 	"drawup/dilution/refusal"
 )
 
@@ -66,8 +67,8 @@ func TestChoiceOfPresentation(t *testing.T) {
 			"1 x ampoule 100 microgram in 2 mL and 1 x ampoule 500 microgram in 10 mL"},
 		{"one container before two that leave less", fentanyl("", "", "0", "0"), key("amount", "150 microgram"), "1 x ampoule 500 microgram in 10 mL"},
 		{"one container that leaves less", fentanyl("", "", "", "0"), key("amount", "150 microgram"), "1 x vial 250 microgram in 5 mL"},
-		{"the shelf has too few of the large ones", fentanyl("", "0", "0", "1"), key("amount", "1200 microgram"),
-			"2 x ampoule 100 microgram in 2 mL and 1 x vial 1000 microgram in 20 mL"},
+		{"the shelf has too few of the large ones", fentanyl("", "1", "0", "0"), key("amount", "800 microgram"),
+			"3 x ampoule 100 microgram in 2 mL and 1 x ampoule 500 microgram in 10 mL"},
 		{"a solution that is ready before one to dilute", barrels + stocked("ephedrine", "ampoule 30 mg in 1 mL", "") + stocked("ephedrine", "syringe 30 mg in 10 mL", ""),
 			lines(key("concentration", "3 mg/mL"), key("volume", "10 mL")), "1 x syringe 30 mg in 10 mL"},
 		{"all else equal, the first on the shelf", barrels + stocked("ondansetron", "vial 4 mg in 2 mL", "") + stocked("ondansetron", "ampoule 4 mg in 2 mL", ""),
@@ -99,12 +100,12 @@ func TestChoiceOfPresentation(t *testing.T) {
 // nothing.
 func TestShelfRunsDown(t *testing.T) {
 	text := barrels + stocked("etomidate", "ampoule 20 mg in 10 mL", "3") + stocked("suxamethonium", "ampoule 100 mg in 2 mL", "1")
-	order := "[[patient.syringe]]\n" + lines(key("drug", "etomidate"), key("amount", "40 mg")) +
+	wanted := "[[patient.syringe]]\n" + lines(key("drug", "etomidate"), key("amount", "40 mg")) +
 		"[[patient.syringe]]\n" + lines(key("drug", "suxamethonium"), key("dose", "10 mg/kg")) + // refused: ten times too much
 		"[[patient.syringe]]\n" + lines(key("drug", "etomidate"), key("amount", "20 mg")) +
 		"[[patient.syringe]]\n" + lines(key("drug", "suxamethonium"), key("dose", "1 mg/kg")) +
 		"[[patient.syringe]]\n" + lines(key("drug", "etomidate"), key("amount", "20 mg"))
-	_, reasons := fromShelf(t, text, order)
+	_, reasons := fromShelf(t, text, wanted)
 	if got := reasons.Of(5).Refusals().Codes(); !slices.Equal(got, []refusal.Code{refusal.StockShort}) {
 		t.Errorf("the fourth ampoule of three: got %v", got)
 	}
@@ -113,6 +114,21 @@ func TestShelfRunsDown(t *testing.T) {
 			t.Errorf("syringe %d: got %v, want it made", n, got)
 		}
 	}
+}
+
+// A label printed by itself comes from the same containers as in the list: what
+// the syringes before it open is gone, also when they are left out.
+func TestLeftOutSyringesKeepTheirContainers(t *testing.T) {
+	s := shelf(t, barrels+stocked("ondansetron", "vial 4 mg in 2 mL", "1")+stocked("ondansetron", "ampoule 4 mg in 2 mL", ""))
+	text := session + adult + strings.Repeat("[[patient.syringe]]\n"+lines(key("drug", "ondansetron"), key("amount", "4 mg")), 2)
+	o, faults := order.Read("order.toml", []byte(text))
+	both, _ := dilution.Bench{Shelf: &s}.NewList(o, starter(t), o.Session.Prepared.Value, nil, faults)
+	alone, reasons := dilution.Bench{Shelf: &s}.NewList(o, starter(t), o.Session.Prepared.Value, map[int]bool{1: true}, faults)
+	if reasons.Refused() || len(both.Plans) != 2 || len(alone.Plans) != 1 {
+		t.Fatal(reasons)
+	}
+	want(t, "in the list", both.Plans[1].Presentation.ID, "ampoule 4 mg in 2 mL")
+	want(t, "alone", alone.Plans[0].Presentation.ID, "ampoule 4 mg in 2 mL")
 }
 
 // The giving syringe fits a pump on the list; the diluent comes from fewest
@@ -126,26 +142,26 @@ func TestChoiceOfPumpAndFluid(t *testing.T) {
 	pump := func(sizes string) string {
 		return "[[pump]]\nname = \"the pump\"\ntakes = [" + sizes + "]\n"
 	}
-	order := func(mix string) string {
+	infusion := func(mix string) string {
 		return lines(key("drug", "midazolam"), key("mix", mix), key("start", "0.05 mg/kg/h"))
 	}
-	p := made(t, stock+saline("ampoule", "10 mL")+pump(`"50 mL"`), "infusion", order("20 mg in 20 mL"))
+	p := made(t, stock+saline("ampoule", "10 mL")+pump(`"50 mL"`), "infusion", infusion("20 mg in 20 mL"))
 	want(t, "a pump for 50 mL only", p.Mixture.FinalBarrel.Nominal().Exact(), "50")
 	want(t, "the only fluid on the shelf", p.Mixture.Diluent, "sodium chloride 0.9 %")
-	p = made(t, stock+saline("ampoule", "10 mL")+pump(`"20 mL", "50 mL"`), "infusion", order("20 mg in 20 mL"))
+	p = made(t, stock+saline("ampoule", "10 mL")+pump(`"20 mL", "50 mL"`), "infusion", infusion("20 mg in 20 mL"))
 	want(t, "a pump for 20 mL as well", p.Mixture.FinalBarrel.Nominal().Exact(), "20")
 	for _, c := range []struct{ shelf, container, volume string }{
 		{saline("ampoule", "10 mL"), "ampoule", "10"},
 		{saline("ampoule", "10 mL") + saline("bag", "100 mL"), "bag", "100"},
 		{saline("bag", "100 mL") + saline("bag", "50 mL"), "bag", "50"},
 	} {
-		p := made(t, stock+c.shelf, "infusion", order("50 mg in 50 mL"))
+		p := made(t, stock+c.shelf, "infusion", infusion("50 mg in 50 mL"))
 		f := p.Mixture.Fluids
 		if len(f) != 1 || f[0].Container != c.container || f[0].Volume.Exact() != c.volume {
 			t.Errorf("got %+v, want a %s of %s mL", f, c.container, c.volume)
 		}
 	}
-	bag := order("100 mg in 100 mL") + lines(key("method", "add to"))
+	bag := infusion("100 mg in 100 mL") + lines(key("method", "add to"))
 	if p := made(t, stock+saline("bag", "100 mL"), "infusion", bag); len(p.Mixture.Fluids) != 1 || !p.Mixture.InBag {
 		t.Errorf("got %+v, want the bag", p.Mixture.Fluids)
 	}
@@ -168,6 +184,20 @@ func TestChoiceOfBarrel(t *testing.T) {
 		"[[patient.syringe]]\n"+lines(key("drug", "etomidate"), key("amount", "20 mg")))
 	if got := reasons.Refusals().Codes(); !slices.Equal(got, []refusal.Code{refusal.SyringeUnknown}) {
 		t.Errorf("a barrel that the shelf lacks: got %v", got)
+	}
+}
+
+// The fluid for a powder is measured in a syringe that has a line there: 2 mL for
+// each vial of 2 mg remifentanil (the starter's record), which a shelf with a 50 mL
+// syringe in steps of 5 mL alone cannot show.
+func TestChoiceForPowder(t *testing.T) {
+	body := lines(key("drug", "remifentanil"), key("mix", "2 mg in 40 mL"), key("diluent", "sodium chloride 0.9 %"), key("start", "0.1 microgram/kg/min"))
+	p := made(t, barrels+stocked("remifentanil", "vial 2 mg", ""), "infusion", body)
+	want(t, "for the powder", p.Mixture.AddBarrel.Nominal().Exact(), "2")
+	coarse := "[[barrel]]\nsize = \"50 mL\"\nstep = \"5 mL\"\n" + stocked("remifentanil", "vial 2 mg", "")
+	_, reasons := fromShelf(t, coarse, "[[patient.infusion]]\n"+body)
+	if !slices.Contains(reasons.Refusals().Codes(), refusal.VolumeOffGraduation) {
+		t.Errorf("got %v", reasons.Refusals())
 	}
 }
 

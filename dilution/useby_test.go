@@ -31,7 +31,7 @@ func TestUseByOverAClockChange(t *testing.T) {
 		{"2026-12-01", "2026-12-02 08:00", "Z"},
 	} {
 		p := useBy(t, lines(key("date", c.date), key("prepared", "20:00"), key("zone", "Europe/London")), key("bolus_use_by", "12 h")+"\n",
-			lines(key("drug", "suxamethonium"), key("dose", "1 mg/kg")))
+			lines(key("drug", "suxamethonium"), key("presentation", "ampoule 100 mg in 2 mL"), key("dose", "1 mg/kg")))
 		want(t, c.date, p.UseBy.At.Format("2006-01-02 15:04"), c.printed)
 		want(t, c.date, p.UseBy.At.Format("Z07:00"), c.offset)
 		if p.UseBy.Minutes != 720 || p.UseBy.At.Sub(p.Prepared).Hours() != 12 {
@@ -43,7 +43,7 @@ func TestUseByOverAClockChange(t *testing.T) {
 // The earliest of policy, stability and expiry wins, and the plan says which.
 func TestEarliestUseByWins(t *testing.T) {
 	day := lines(key("date", "2026-12-01"), key("prepared", "07:30"))
-	undiluted := lines(key("drug", "suxamethonium"), key("dose", "1 mg/kg"))
+	undiluted := lines(key("drug", "suxamethonium"), key("presentation", "ampoule 100 mg in 2 mL"), key("dose", "1 mg/kg"))
 	// UK and European texts: drawn up propofol is used within 6 hours.
 	propofol := lines(key("drug", "propofol"), key("presentation", "ampoule 200 mg in 20 mL"), key("dose", "2 mg/kg"))
 	for _, c := range []struct{ name, site, body, at, won string }{
@@ -65,7 +65,7 @@ func TestEarliestUseByWins(t *testing.T) {
 // A silent site gets the printed default: 4 h for a bolus, and it says that
 // nobody has verified it.
 func TestDefaultUseBy(t *testing.T) {
-	p := useBy(t, lines(key("date", "2026-12-01"), key("prepared", "07:30")), "", lines(key("drug", "suxamethonium"), key("dose", "1 mg/kg")))
+	p := useBy(t, lines(key("date", "2026-12-01"), key("prepared", "07:30")), "", lines(key("drug", "suxamethonium"), key("presentation", "ampoule 100 mg in 2 mL"), key("dose", "1 mg/kg")))
 	want(t, "default", p.UseBy.At.Format("15:04"), "11:30")
 	if !strings.Contains(p.UseBy.Source, "unverified") {
 		t.Errorf("got the source %q, want it marked unverified", p.UseBy.Source)

@@ -250,7 +250,7 @@ func askedVolume(p dilution.Plan, add func(name, text string)) {
 // askedIfKnown asks under a name that the second route may not know yet, and
 // reports whether it did.
 func askedIfKnown(add func(name, text string), name, text string) bool {
-	if !recheck.Knows(name) {
+	if !printed(name) {
 		return false
 	}
 	add(name, text)

@@ -73,6 +73,7 @@ weighed = "bed scale, 30 Nov 2026"
   start = "0.1 microgram/kg/min ideal"
   [[patient.infusion]]
   drug = "oxytocin"
+  indication = "labour"
   presentation = "ampoule 5 units in 1 mL"
   mix = "5 units in 500 mL"
   method = "withdraw, then add"

@@ -16,14 +16,21 @@ import (
 const demo = "../../testdata/orders/harbour-morning.toml"
 
 // demoJob is the demonstration list, worked and passed.
-func demoJob(t testing.TB) *job {
+func demoJob(t testing.TB) *job { return jobOf(t, demo) }
+
+// jobOf is the list of an order file, worked with the given flags and passed.
+func jobOf(t testing.TB, file string, args ...string) *job {
 	t.Helper()
 	f, err := formulary.Default()
 	if err != nil {
 		t.Fatal(err)
 	}
-	flags, _ := readPaperFlags("prepare", nil)
-	j, reasons := newJob(demo, library{form: f}, flags.when(nil), nil, silent)
+	flags, faults := readPaperFlags("prepare", args)
+	lib := library{form: f}
+	if faults = append(faults, flags.takeShelf(&lib)...); faults.Refused() {
+		t.Fatal(faults)
+	}
+	j, reasons := newJob(file, lib, flags.when(nil), nil, silent)
 	if reasons.Refused() {
 		t.Fatalf("the demonstration list is refused:\n%v", reasons.Refusals())
 	}
@@ -35,7 +42,18 @@ func demoJob(t testing.TB) *job {
 // route stops each (rule R17; the list: last digit, ×10, ÷10, ×60, mg
 // for microgram and its like).
 func TestAlteredFigures(t *testing.T) {
-	j := demoJob(t)
+	alterList(t, demoJob(t), 10000)
+}
+
+// TestAlteredFiguresFromShelf does the same with the list that is planned from the
+// demonstration shelf: several sizes of container, so many doses, so many hours,
+// a dilution, a mixture for one weight.
+func TestAlteredFiguresFromShelf(t *testing.T) {
+	alterList(t, jobOf(t, "../../testdata/orders/harbour-shelf.toml", "--shelf", "../../testdata/shelves/harbour.toml"), 3000)
+}
+
+// alterList alters every figure of a list, in at least so many ways in all.
+func alterList(t *testing.T, j *job, least int64) {
 	var tried atomic.Int64
 	t.Run("syringe", func(t *testing.T) {
 		for i, p := range j.list.Plans {
@@ -45,7 +63,7 @@ func TestAlteredFigures(t *testing.T) {
 			})
 		}
 	})
-	if n := tried.Load(); n < 10000 {
+	if n := tried.Load(); n < least {
 		t.Errorf("only %d alterations were tried", n)
 	}
 	t.Logf("%d alterations tried", tried.Load())

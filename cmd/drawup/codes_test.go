@@ -87,20 +87,21 @@ weight = "70 kg"
 
 [[patient.syringe]]
 drug = "suxamethonium"
+presentation = "ampoule 100 mg in 2 mL"
 dose = "1 mg/kg"
 `
 
 // examples is how each remaining code comes about. Each returns what was told.
 func examples() map[refusal.Code]func(*testing.T) string {
 	two := soundOrder + "\n[[patient.syringe]]\ndrug = \"ondansetron\"\npresentation = \"vial 4 mg in 2 mL\"\ndose = \"4 mg\"\n"
-	infusion := strings.Replace(soundOrder, "[[patient.syringe]]\ndrug = \"suxamethonium\"\ndose = \"1 mg/kg\"\n",
+	infusion := strings.Replace(soundOrder, "[[patient.syringe]]\ndrug = \"suxamethonium\"\npresentation = \"ampoule 100 mg in 2 mL\"\ndose = \"1 mg/kg\"\n",
 		"[[patient.infusion]]\ndrug = \"labetalol\"\npresentation = \"ampoule 100 mg in 20 mL\"\nmix = \"50 mg in 50 mL\"\ndiluent = \"glucose 5 %\"\nstart = \"1 mg/min\"\n", 1)
 	return map[refusal.Code]func(*testing.T) string{
 		refusal.FileUnreadable:   preparing("", "absent.toml"),
 		refusal.FileEmpty:        preparing(" \n", "order.toml"),
 		refusal.FileNotText:      preparing("place = \"\xff\"\n", "order.toml"),
 		refusal.FileTooLarge:     preparing(strings.Repeat("# a long comment\n", 1<<16), "order.toml"),
-		refusal.SyringesMany:     preparing(soundOrder+strings.Repeat("\n[[patient.syringe]]\ndrug = \"suxamethonium\"\ndose = \"1 mg/kg\"\n", 999), "order.toml"),
+		refusal.SyringesMany:     preparing(soundOrder+strings.Repeat("\n[[patient.syringe]]\ndrug = \"suxamethonium\"\npresentation = \"ampoule 100 mg in 2 mL\"\ndose = \"1 mg/kg\"\n", 999), "order.toml"),
 		refusal.FlagMissing:      told("rate", "--dose", "1 mg/h"),
 		refusal.FlagUnknown:      told("rate", "--nonsense", "x"),
 		refusal.FlagConflict:     told("rate", "--dose", "1 mg/h", "--rate", "1 mL/h", "--mix", "4 mg in 50 mL"),
@@ -115,7 +116,7 @@ func examples() map[refusal.Code]func(*testing.T) string {
 		refusal.OutputUnwritable: preparing(soundOrder, "order.toml", "--out", "order.toml"),
 		refusal.GlyphMissing:     preparing(strings.Replace(soundOrder, "A. Example", "A. 薬", 1), "order.toml"),
 		refusal.LabelTooSmall:    preparing(infusion, "order.toml", "--infusion-stock", "roll-40x15"),
-		refusal.LabelMoved:       preparing(strings.Replace(soundOrder, "suxamethonium\"\ndose = \"1 mg/kg", "neostigmine with glycopyrronium\"\ndose = \"2.5 mg", 1), "order.toml", "--stock", "roll-40x15"),
+		refusal.LabelMoved:       preparing(strings.Replace(soundOrder, "suxamethonium\"\npresentation = \"ampoule 100 mg in 2 mL\"\ndose = \"1 mg/kg", "neostigmine with glycopyrronium\"\npresentation = \"ampoule 2.5 mg with 0.5 mg in 1 mL\"\ndose = \"2.5 mg", 1), "order.toml", "--stock", "roll-40x15"),
 		refusal.OneWeightOnly:    told("mix", "--each", "1 microgram/kg/min", "--weight", "6 kg", "--rule", "three"),
 		refusal.PairNever:        told("formulary", "pair", "propofol", "with", "remifentanil"),
 		refusal.PairNotListed:    told("formulary", "pair", "propofol", "with", "heparin"),
@@ -138,6 +139,7 @@ func examples() map[refusal.Code]func(*testing.T) string {
 		refusal.CodeDrug:         told("read", "(01)09521234000006"),
 		refusal.CodeFormulary:    told("read", "(91)N01AX07(92)261201193000001003(93)2mg/mL(94)20mg(95)00000000"),
 		refusal.RateBelowHard:    belowHardLimit,
+		refusal.SearchCut:        seventyStrengths,
 	}
 }
 
@@ -212,6 +214,27 @@ func unproven(t *testing.T) string {
 	return refused.Error()
 }
 
+// seventyStrengths plans from a shelf with more strengths of an invented drug than
+// are looked at.
+func seventyStrengths(t *testing.T) string {
+	form := "name = \"invented\"\nversion = \"1\"\n[sources.X]\ntitle = \"invented for a test\"\ngrade = \"A\"\njurisdiction = \"international\"\n" +
+		"[[drug]]\nname = \"sleepwell\"\natc = \"N01AX99\"\nclass = \"IND\"\ncounted = \"mass\"\n"
+	shelf := "[[barrel]]\nsize = \"50 mL\"\n"
+	for mg := range 70 {
+		id := fmt.Sprintf("ampoule %d mg in 1 mL", mg+1)
+		form += fmt.Sprintf("[[drug.presentation]]\nid = %q\ncontainer = \"ampoule\"\nform = \"solution\"\namount = \"%d mg\"\nvolume = \"1 mL\"\nsource = \"X\"\nuses = [\"bolus\"]\nneat = true\n", id, mg+1)
+		shelf += fmt.Sprintf("[[stock]]\ndrug = \"sleepwell\"\npresentation = %q\n", id)
+	}
+	f, faults := formulary.Read(formulary.Text{Name: "invented.toml", Data: []byte(form)})
+	s, more := order.ReadShelf("shelf.toml", []byte(shelf))
+	if faults.Refused() || more.Refused() {
+		t.Fatal(faults, more)
+	}
+	o, faults := order.Read("order.toml", []byte(strings.Replace(soundOrder, "drug = \"suxamethonium\"\npresentation = \"ampoule 100 mg in 2 mL\"\ndose = \"1 mg/kg\"", "drug = \"sleepwell\"\namount = \"20 mg\"", 1)))
+	_, reasons := dilution.Bench{Shelf: &s}.NewList(o, f, time.Date(2026, 12, 1, 7, 30, 0, 0, time.UTC), nil, faults)
+	return reasons.Error()
+}
+
 // belowHardLimit orders less than the lowest dose rate of an invented drug; no
 // row of the starter formulary stores such a figure.
 func belowHardLimit(t *testing.T) string {
@@ -251,7 +274,7 @@ counted = "mass"
 	if faults.Refused() {
 		t.Fatal(faults)
 	}
-	text := strings.Replace(soundOrder, "[[patient.syringe]]\ndrug = \"suxamethonium\"\ndose = \"1 mg/kg\"\n",
+	text := strings.Replace(soundOrder, "[[patient.syringe]]\ndrug = \"suxamethonium\"\npresentation = \"ampoule 100 mg in 2 mL\"\ndose = \"1 mg/kg\"\n",
 		"[[patient.infusion]]\ndrug = \"sleepwell\"\nmix = \"50 mg in 50 mL\"\nstart = \"1 mg/h\"\n", 1)
 	o, faults := order.Read("order.toml", []byte(text))
 	_, reasons := dilution.NewList(o, f, time.Date(2026, 12, 1, 7, 30, 0, 0, time.UTC), nil, faults)

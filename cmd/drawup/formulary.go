@@ -124,13 +124,17 @@ func (r *formularyRequest) check(set *pflag.FlagSet) formularyVerb {
 // fits holds words and flags against what the verb takes.
 func (r *formularyRequest) fits(v formularyVerb, set *pflag.FlagSet) {
 	words := strings.Join(r.words, " ")
+	remedy := "type drawup help formulary for an example"
+	if v.most == 0 {
+		remedy = "to see one drug type drawup formulary show " + words
+	}
 	switch {
 	case len(r.words) < v.least:
 		r.add(refusal.Reason{Code: refusal.FlagMissing, Field: "argument", Got: words, Want: v.wants,
 			Message: fmt.Sprintf("%s wants %s", v.name, v.wants), Remedy: "type drawup help formulary for an example"})
 	case len(r.words) > v.most:
 		r.add(refusal.Reason{Code: refusal.FlagUnknown, Field: "argument", Got: words, Want: v.wants + " after " + v.name,
-			Message: fmt.Sprintf("got %q after %s, want %s", words, v.name, v.wants), Remedy: "to see one drug type drawup formulary show " + words})
+			Message: fmt.Sprintf("got %q after %s, want %s", words, v.name, v.wants), Remedy: remedy})
 	}
 	set.Visit(func(f *pflag.Flag) {
 		if f.Name == "json" || f.Name == "help" {

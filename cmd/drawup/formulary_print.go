@@ -30,7 +30,7 @@ func runFormularyPrint(e env, r *formularyRequest) int {
 		Subject: f.State(), Creator: "drawup", Language: "en-GB", Made: day}); err != nil {
 		return finish(e, r.json, &bareDocument{}, nil, refusal.List{ourFault(0, err)})
 	}
-	if faults := writeAll([]file{{r.out.text, b.Bytes()}}, r.own.files); faults.Refused() {
+	if faults := writeAll([]file{{r.out.text, b.Bytes()}}, r.inputs()); faults.Refused() {
 		return finish(e, r.json, &bareDocument{}, nil, faults)
 	}
 	return finish(e, r.json, &bareDocument{}, func(w io.Writer) {

@@ -6,6 +6,7 @@ import (
 	"fmt"
 	"os"
 	"path/filepath"
+	"regexp"
 	"slices"
 	"strings"
 	"testing"
@@ -54,8 +55,13 @@ func starterFiles(t *testing.T) []starterFile {
 	return out
 }
 
-// oneLineOf is a text without its line breaks and columns.
-func oneLineOf(s string) string { return strings.Join(strings.Fields(s), " ") }
+// oneLineOf is a text without its line breaks, its columns and the signs between
+// thousands, which paper has and the files have not.
+func oneLineOf(s string) string {
+	return thousands.ReplaceAllString(strings.Join(strings.Fields(s), " "), "$1$2")
+}
+
+var thousands = regexp.MustCompile(`(\d),(\d{3})`)
 
 // TestEveryDrugIsShown holds each drug's page against the formulary file, read
 // by a general TOML reader: every text of the file stands on the page, and every

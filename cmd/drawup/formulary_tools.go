@@ -6,6 +6,7 @@ import (
 	"io"
 	"os"
 	"path/filepath"
+	"slices"
 	"strings"
 	"time"
 
@@ -27,6 +28,10 @@ type verifyDocument struct {
 func runFormularyVerify(e env, r *formularyRequest) int {
 	doc := &verifyDocument{}
 	f, faults := openFormulary(r.words)
+	if f != nil && !faults.Refused() && len(f.Drugs())+len(f.PairEntries())+len(f.TallMan) == 0 {
+		faults = append(faults, refusal.Reason{Code: refusal.KeyMissing, Severity: refusal.Refuse, Field: "drug", Got: "none", Want: "a drug, a pair or a list of names",
+			Message: f.Name + " holds no drug, no pair and no list of names", Remedy: "check that this is the whole file; drawup formulary schema shows what one holds"})
+	}
 	if f != nil {
 		doc.Formulary, doc.Drugs = headOf(f), len(f.Drugs())
 		faults = append(faults, verify.Check(f)...)
@@ -52,13 +57,11 @@ func openFormulary(names []string) (*formulary.Formulary, refusal.List) {
 			continue
 		}
 		if info, err := os.Stat(n); err == nil && info.IsDir() {
-			for _, pattern := range []string{"*.toml", "*.csv"} {
-				found, err := filepath.Glob(filepath.Join(n, pattern))
-				if err != nil {
-					return nil, refusal.List{ourFault(0, err)}
-				}
-				files = append(files, found...)
+			inside, faults := filesIn(n)
+			if faults.Refused() {
+				return nil, faults
 			}
+			files = append(files, inside...)
 			continue
 		}
 		files = append(files, n)
@@ -71,6 +74,24 @@ func openFormulary(names []string) (*formulary.Formulary, refusal.List) {
 		return nil, faults
 	}
 	return formulary.Layer(starter, texts...)
+}
+
+// filesIn is the formulary files and tables of a folder; one without any is a slip,
+// and must not stand for the starter.
+func filesIn(dir string) ([]string, refusal.List) {
+	var files []string
+	for _, pattern := range []string{"*.toml", "*.csv"} {
+		found, err := filepath.Glob(filepath.Join(escapeGlob(dir), pattern))
+		if err != nil {
+			return nil, refusal.List{ourFault(0, err)}
+		}
+		files = append(files, found...)
+	}
+	if len(files) == 0 {
+		return nil, refusal.List{{Code: refusal.FileUnreadable, Severity: refusal.Refuse, Field: "file", Got: dir, Want: "a folder with formulary files (.toml) or tables (.csv)",
+			Message: fmt.Sprintf("the folder %q holds no formulary file and no table", dir), Remedy: "check the name; the starter needs none, or the word starter"}}
+	}
+	return files, nil
 }
 
 // A compareDocument is the answer of formulary compare.
@@ -168,6 +189,11 @@ func runFormularyStandards(e env, r *formularyRequest) int {
 	return r.deliver(e, b.Bytes(), "the table of standard preparations")
 }
 
+// inputs is every file that was read.
+func (r *formularyRequest) inputs() []string {
+	return named(append(slices.Clone(r.own.files), r.own.approval))
+}
+
 // deliver writes data to --out, or to standard output.
 func (r *formularyRequest) deliver(e env, data []byte, what string) int {
 	if !r.out.given {
@@ -176,7 +202,7 @@ func (r *formularyRequest) deliver(e env, data []byte, what string) int {
 		}
 		return exitMade
 	}
-	if faults := writeAll([]file{{r.out.text, data}}, r.own.files); faults.Refused() {
+	if faults := writeAll([]file{{r.out.text, data}}, r.inputs()); faults.Refused() {
 		return finish(e, r.json, &bareDocument{}, nil, faults)
 	}
 	return finish(e, r.json, &bareDocument{}, func(w io.Writer) { fmt.Fprintf(w, "%s: %s\n", what, r.out.text) }, nil)

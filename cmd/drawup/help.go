@@ -75,7 +75,8 @@ const helpCautions = `A refusal stops the work and goes to standard error:
 The code never changes its meaning. All refusals are told at once. A caution has
 the same form, starts with "caution:" and stands below the answer: the answer
 holds, and a person has to weigh it. With --json both are lists of objects with
-code, message, field, got, want, rule, source and remedy.
+code, message, field, got, want, rule, source and remedy; where something else can
+be made, the refusal has it worked in full, as an object, instead.
 
 Without --drug a quick sum checks no limit of any drug (limits-not-checked).
 Local policy, the pack in the hand and licensed staff decide.

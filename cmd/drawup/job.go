@@ -65,7 +65,7 @@ func newJob(
 		return j, reasons
 	}
 	if len(lib.shelf) > 0 { // another shelf is another plan (rule R19)
-		data = append(append([]byte{}, data...), lib.shelf...)
+		data = fmt.Appendf(nil, "%s\nshelf, %d bytes\n%s", data, len(lib.shelf), lib.shelf)
 	}
 	j.shelf = lib.bench.Shelf
 	j.making = makingOf(o, f, when, data, leaveOut)

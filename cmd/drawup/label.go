@@ -96,7 +96,7 @@ func (f *paperFlags) writeLabel(e env, j *job, all refusal.List) int {
 	if !all.Refused() {
 		data, reasons := pdfOf(pages, "Syringe label", j)
 		if all = append(all, reasons...); !all.Refused() {
-			all = append(all, writeAll([]file{{f.out, data}}, f.orders)...)
+			all = append(all, writeAll([]file{{f.out, data}}, f.inputs())...)
 		}
 	}
 	return finish(e, f.json, doc, func(w io.Writer) {

@@ -396,7 +396,7 @@ func symbolOn(p *labelPage) (left, top, right, low ink.Micrometre) {
 }
 
 func oneEdition(t *testing.T, _ *gallery) {
-	old := fmt.Sprintf(theSession, `edition = "2008"`) + "[[patient.syringe]]\ndrug = \"sugammadex\"\namount = \"200 mg\"\n"
+	old := fmt.Sprintf(theSession, `edition = "2008"`) + "[[patient.syringe]]\ndrug = \"sugammadex\"\npresentation = \"vial 200 mg in 2 mL\"\namount = \"200 mg\"\n"
 	dir, told, code := prepareText(t, old)
 	if code != exitMade {
 		t.Fatal(told)
@@ -452,7 +452,7 @@ func fontsEmbedded(t *testing.T, g *gallery) {
 }
 
 func noBoxes(t *testing.T, _ *gallery) {
-	text := strings.Replace(fmt.Sprintf(theSession, ""), "A. Sample", "A. 薬師", 1) + "[[patient.syringe]]\ndrug = \"sugammadex\"\namount = \"200 mg\"\n"
+	text := strings.Replace(fmt.Sprintf(theSession, ""), "A. Sample", "A. 薬師", 1) + "[[patient.syringe]]\ndrug = \"sugammadex\"\npresentation = \"vial 200 mg in 2 mL\"\namount = \"200 mg\"\n"
 	dir, told, code := prepareText(t, text)
 	if code != exitRefused || !strings.Contains(told, "glyph-missing") {
 		t.Errorf("exit %d: %s, want a refusal", code, told)

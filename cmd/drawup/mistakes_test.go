@@ -222,6 +222,7 @@ const galleryOrder = theSession + `
   amount = "50 mg"
   [[patient.syringe]]
   drug = "neostigmine with glycopyrronium"
+  presentation = "ampoule 2.5 mg with 0.5 mg in 1 mL"
   amount = "2.5 mg"
   [[patient.infusion]]
   drug = "noradrenaline"

@@ -4,6 +4,7 @@ import (
 	"bytes"
 	"errors"
 	"fmt"
+	"io"
 	"os"
 	"path/filepath"
 	"sort"
@@ -51,7 +52,7 @@ func pdfOf(pages []ink.Page, title string, j *job) ([]byte, refusal.List) {
 // list is removed first and renamed last, so that it marks a complete set.
 //
 // inputs are the files that were read; none of them is ever written over, and
-// neither is a folder.
+// neither is a folder, nor a file of another kind.
 func writeAll(files []file, inputs []string) refusal.List {
 	if l := overwrites(files, inputs); l.Refused() {
 		return l
@@ -207,7 +208,24 @@ func incomplete(path string, err error) refusal.List {
 	return l
 }
 
-// overwrites refuses to put a paper where a folder or an order file is.
+// kindBytes is how much at the head of a file tells its kind, as "%PDF" does.
+const kindBytes = 4
+
+// otherKind reports a file at f's place that begins as none of f's kind does: a
+// formulary that was named where a PDF goes, or a table that a spreadsheet saved.
+func otherKind(f file) bool {
+	there, err := os.Open(f.path)
+	if err != nil {
+		return false // what cannot be opened is found when it is written
+	}
+	defer there.Close() // only read
+	head := make([]byte, min(kindBytes, len(f.data)))
+	n, err := io.ReadFull(there, head)
+	return n > 0 && (err != nil || !bytes.Equal(head, f.data[:n]))
+}
+
+// overwrites refuses to put a paper where a folder, a file that was read or one of
+// another kind is.
 func overwrites(files []file, inputs []string) refusal.List {
 	var out refusal.List
 	for _, f := range files {
@@ -220,8 +238,12 @@ func overwrites(files []file, inputs []string) refusal.List {
 		}
 		for _, in := range inputs {
 			if order, err := os.Stat(in); err == nil && os.SameFile(order, there) {
-				out = append(out, unwritable(f.path, errors.New("it is the order file itself"))...)
+				out = append(out, unwritable(f.path, errors.New("it is one of the files that were read"))...)
 			}
+		}
+		if there.Mode().IsRegular() && otherKind(f) {
+			out = append(out, unwritable(f.path, errors.New("a file of another kind is there"))...)
+			out[len(out)-1].Want, out[len(out)-1].Remedy = "a new name, or an older file of the same kind", "choose another name"
 		}
 	}
 	return out

@@ -6,6 +6,7 @@ import (
 	"fmt"
 	"io"
 	"path/filepath"
+	"slices"
 	"strconv"
 	"strings"
 	"time"
@@ -241,6 +242,16 @@ func sameWall(a, b time.Time) bool {
 	return a.Format("2006-01-02 15:04") == b.Format("2006-01-02 15:04")
 }
 
+// named leaves out names that were not given.
+func named(files []string) []string {
+	return slices.DeleteFunc(files, func(name string) bool { return name == "" })
+}
+
+// inputs is every file that was read.
+func (f *paperFlags) inputs() []string {
+	return named(slices.Concat(f.orders, f.formulary.files, []string{f.formulary.approval, f.shelf}))
+}
+
 // write places everything in memory, then writes it, then tells the user.
 func (f *paperFlags) write(e env, jobs []*job, all refusal.List) int {
 	doc := &planDocument{Syringes: []syringeJSON{}}
@@ -255,7 +266,7 @@ func (f *paperFlags) write(e env, jobs []*job, all refusal.List) int {
 		files = append(files, made...)
 	}
 	if !all.Refused() {
-		all = append(all, writeAll(files, f.orders)...)
+		all = append(all, writeAll(files, f.inputs())...)
 	}
 	if all.Refused() {
 		return finish(e, f.json, doc, nil, all)

@@ -46,7 +46,7 @@ func tellChoices(w io.Writer, j *job) {
 //	                    the smallest that has a line at 1.1 mL
 //	  not 1 mL in steps of 0.01 mL: too small
 func tellChoice(w io.Writer, c dilution.Choice) {
-	const indent = 24
+	const indent = 26
 	blank := strings.Repeat(" ", indent)
 	for i, l := range append(wrap(c.Took, widest-indent), wrap(c.Why, widest-indent)...) {
 		head := blank

@@ -142,7 +142,7 @@ func unparted(text string) []string {
 		n := len(out)
 		switch {
 		case word == "":
-		case n > 0 && lint.Tied(out[n-1], word):
+		case n > 0 && lint.Tied(out[n-1], strings.TrimRight(word, "\"',;:)")):
 			out[n-1] += " " + word
 		default:
 			out = append(out, word)

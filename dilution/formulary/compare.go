@@ -103,9 +103,11 @@ func compareEntries(drug string, older, newer []Entry) []Change {
 		case !ok:
 			out = append(out, Change{Drug: drug, Name: k, Old: was.Text, Verb: "taken away",
 				Loosened: was.looser == upwards || was.looser == downward || was.looser == absent, Source: was.Source, Entry: was})
-		case is.Text != was.Text:
+		default:
 			if c, changed := changeOf(drug, k, was, is); changed {
 				out = append(out, c)
+			} else {
+				out = append(out, standing(drug, k, was, is)...)
 			}
 		}
 	}
@@ -140,6 +142,9 @@ func besideOld(key string, is Entry, oldKeys []string) bool {
 // 1 mg and 1000 microgram, are no change.
 func changeOf(drug, name string, was, is Entry) (Change, bool) {
 	c := Change{Drug: drug, Name: name, Old: was.Text, New: is.Text, Verb: "changed", Reason: is.Reason, Source: is.Source, Entry: is}
+	if is.Text == was.Text {
+		return c, false
+	}
 	n, comparable := is.order(was)
 	switch {
 	case !comparable:
@@ -153,4 +158,28 @@ func changeOf(drug, name string, was, is Entry) (Change, bool) {
 		c.Verb, c.Loosened = "lowered", was.looser == downward
 	}
 	return c, true
+}
+
+// standing tells what a figure that stays rests on now, where that is another
+// document, or where it is no longer marked unverified, or now is.
+func standing(drug, name string, was, is Entry) []Change {
+	var out []Change
+	for _, x := range []struct{ what, old, new string }{
+		{": source", was.Source.Title, is.Source.Title}, {": standing", was.standing(), is.standing()},
+	} {
+		if x.old != x.new {
+			out = append(out, Change{Drug: drug, Name: name + x.what, Old: x.old, New: x.new, Verb: "changed", Reason: is.Reason, Source: is.Source, Entry: is})
+		}
+	}
+	return out
+}
+
+func (x Entry) standing() string {
+	switch {
+	case x.VerifiedBy != "":
+		return "verified by " + x.VerifiedBy
+	case x.Unverified:
+		return "unverified"
+	}
+	return "not marked"
 }

@@ -210,7 +210,7 @@ func TestDangerSaidInWords(t *testing.T) {
 		{"dantrolene", "water", "malignant hyperthermia guideline: never hang the water"},
 		{"atropine", "plastic", "Lewis and others, AANA J 1994: half lost in four days"},
 		{"clevidipine", "12 h", "handbook on injectable drugs, clevidipine"},
-		{"remimazolam", "overfill", "handbook on injectable drugs, remimazolam"},
+		{"remimazolam", "holds more than 20 mg", "handbook on injectable drugs, remimazolam"},
 		{"teicoplanin", "draw 3 mL", "handbook on injectable drugs, teicoplanin: less out than in"},
 		{"esketamine", "half", "machine-written page, ketamine: not to be swapped"},
 		{"noradrenaline", "base", "UK SmPC, noradrenaline"},

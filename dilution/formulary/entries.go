@@ -35,6 +35,7 @@ const (
 	downward           // a lower figure, or none at all
 	present            // being there at all: a diluent, a route, a pair
 	absent             // not being there: a ban, a caution
+	turned             // another word, whichever: what a figure is multiplied by
 )
 
 // entries gathers those of one drug.
@@ -80,6 +81,12 @@ func (d Drug) Entries() []Entry {
 	e.note("never as infusion", d.NeverAsInfusion, absent)
 	e.note("never as bolus", d.NeverAsBolus, absent)
 	add(e, "amount of substance", d.Substance, neither)
+	if d.IonsPerFormula != 1 {
+		e.word("ions per formula", fmt.Sprint(d.IonsPerFormula), d.Pos, neither)
+	}
+	if d.ShowAs {
+		e.word("counted by, on the label", "shown", d.Pos, neither)
+	}
 	if d.Salt != nil {
 		e.add(Entry{Name: "salt " + d.Salt.Name, Text: d.Salt.PerMg.Written(), Source: d.Salt.Source,
 			Unverified: d.Salt.Unverified, Pos: d.Salt.Pos, value: d.Salt.PerMg})
@@ -131,6 +138,9 @@ func (e *entries) presentation(p Presentation) {
 	text := p.Amount.Written() + tail(" in ", p.Volume.Written())
 	if p.Powder() {
 		text = p.Amount.Written() + " of powder" + tail(", add ", p.Added.Written())
+		if p.Obtained {
+			text += ", which gives " + p.Volume.Written()
+		}
 	}
 	if p.SecondName != "" {
 		text += " with " + p.SecondAmount.Written() + " of " + p.SecondName
@@ -150,6 +160,12 @@ func (e *entries) presentation(p Presentation) {
 	}
 	if p.Neat {
 		e.word(at+"undiluted", "allowed", p.Pos, present)
+	}
+	if p.MultiDose {
+		e.word(at+"more than one dose", "allowed", p.Pos, present)
+	}
+	for _, f := range p.AddFluids {
+		e.word(at+"dissolved in "+f, "allowed", p.Pos, present)
 	}
 	e.note(at+"preserved", p.Preserved, absent)
 	e.note(at+"not for a pump", p.NotForPump, absent)
@@ -172,7 +188,7 @@ func (e *entries) presentation(p Presentation) {
 // by how their figures are counted.
 func row[T interface{ Basis() quantity.Basis }](e *entries, what string, r Rule[T]) {
 	name := what + r.For + ", " + strings.Join(r.Routes, " ") + tail(", ", r.Ages()) + countedTail(r)
-	e.word(name+": goes by", r.By.String(), r.Pos, neither)
+	e.add(Entry{Name: name + ": goes by", Text: r.By.String(), Source: r.BySource, Pos: r.Pos, looser: turned})
 	add(e, name+": hard minimum", r.HardLow, downward)
 	add(e, name+": usual lowest", r.UsualLow, downward)
 	add(e, name+": usual highest", r.UsualHigh, upwards)
@@ -210,7 +226,7 @@ func (e *entries) localMaximum(m LocalMaximum) {
 		name = "local anaesthetic maximum, with adrenaline"
 	}
 	name += tail(", ", Rule[quantity.Dose]{AgeFrom: m.AgeFrom, AgeTo: m.AgeTo}.Ages())
-	e.word(name+": goes by", m.By.String(), m.Pos, neither)
+	e.add(Entry{Name: name + ": goes by", Text: m.By.String(), Source: m.BySource, Pos: m.Pos, looser: turned})
 	add(e, name+": by weight", m.PerKg, upwards)
 	add(e, name+": in all", m.Total, upwards)
 	add(e, name+": in a day", m.DayMax, upwards)

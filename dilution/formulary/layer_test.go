@@ -83,6 +83,12 @@ func TestWhatASiteLoosens(t *testing.T) {
 			"slumbrium: never as infusion taken away; it was an invented ban", true},
 		{`amount = "10 mg"`, `amount = "10 mg"` + "\n" + `age_from = "1 year"`,
 			"slumbrium: ampoule 10 mg in 2 mL: from age added: 1 year", false},
+		{`by = "none"`, `by = "lean"`, "slumbrium: dose for sedation, IV: goes by changed from none to lean", true},
+		{`hard_high = { value = "5 mg", source = "I" }`, `hard_high = { value = "5 mg", source = "I", unverified = true }`,
+			"slumbrium: dose for sedation, IV: hard maximum: standing changed from not marked to unverified", false},
+		{`hard_high = { value = "5 mg", source = "I" }`, `hard_high = { value = "5 mg", source = "I", verified_by = "A. Example, 2026-12-01" }`,
+			"slumbrium: dose for sedation, IV: hard maximum: standing changed from not marked to verified by A. Example, 2026-12-01", false},
+		{`neat = true`, "neat = true\n  multi_dose = true", "slumbrium: ampoule 10 mg in 2 mL: more than one dose added: allowed", true},
 		{`also = ["sleepol"]`, `also = ["sleepol", "dozine"]`, "slumbrium: name dozine added: dozine", false},
 	} {
 		f, faults := layer(t, site(c.old, c.new))
@@ -94,8 +100,15 @@ func TestWhatASiteLoosens(t *testing.T) {
 			t.Errorf("%q: refused %v, want %v: %v", c.new, refused, c.loosened, faults)
 		}
 	}
+	// Another document for the same figure is told.
+	other := site(`hard_high = { value = "5 mg", source = "I" }`, `hard_high = { value = "5 mg", source = "J" }`)
+	f, _ := layer(t, strings.Replace(other, "[[drug]]", "[sources.J]\ntitle = \"another document\"\ngrade = \"A\"\njurisdiction = \"UK\"\n[[drug]]", 1))
+	want := "[slumbrium: dose for sedation, IV: hard maximum: source changed from an invented document to another document]"
+	if got := formulary.Compare(readText(t, baseText), f); fmt.Sprint(got) != want {
+		t.Errorf("got %v, want %s", got, want)
+	}
 	// The same figure in another unit is no change.
-	f, _ := layer(t, site(`value = "5 mg"`, `value = "5000 microgram"`))
+	f, _ = layer(t, site(`value = "5 mg"`, `value = "5000 microgram"`))
 	if got := formulary.Compare(readText(t, baseText), f); len(got) != 0 {
 		t.Errorf("got %v for the same figure in another unit", got)
 	}
@@ -139,8 +152,8 @@ func TestAMilderRowBesideAnother(t *testing.T) {
 }
 
 // Out and in again, standard preparations are the same, whatever a spreadsheet
-// does to the file: a mark at its head, semicolons, other line ends, columns in
-// another order.
+// does to the file: a mark at its head, semicolons, other line ends, columns and lines
+// with nothing in them.
 func TestStandardsThroughATable(t *testing.T) {
 	f := starter(t)
 	var b bytes.Buffer
@@ -149,7 +162,8 @@ func TestStandardsThroughATable(t *testing.T) {
 	}
 	plain := b.String()
 	want := standardsOf(f)
-	for name, text := range map[string]string{"plain": plain, "marked": "\ufeff" + plain, "line ends": strings.ReplaceAll(plain, "\n", "\r\n"), "semicolons": semicolons(t, plain)} {
+	for name, text := range map[string]string{"plain": plain, "marked": "\ufeff" + plain, "line ends": strings.ReplaceAll(plain, "\n", "\r\n"), "semicolons": semicolons(t, plain),
+		"blank columns and lines": strings.ReplaceAll(plain, "\n", ",,\n") + ",,,,\n,,\n"} {
 		again, faults := formulary.Layer(f, formulary.Text{Name: "standards.csv", Data: []byte(text)})
 		if faults.Refused() {
 			t.Errorf("%s: %v", name, faults)
@@ -195,21 +209,31 @@ func semicolons(t *testing.T, text string) string {
 
 // A faulty table is refused with the line.
 func TestFaultyTables(t *testing.T) {
-	const head = "drug,id,mix,diluent,line,jurisdiction,title,grade\n"
+	const head = "drug,id,mix,diluent,line,patients,jurisdiction,title,grade\n"
 	for text, want := range map[string]string{
 		"":                      "1: file-syntax",
 		"drug,id\n":             "1: key-missing",
 		"drug,drug," + head[5:]: "1: key-repeated",
-		strings.Replace(head, "grade", "taste", 1):                                                    "1: key-unknown",
-		head + "moonlight,a,1 mg in 1 mL,,any,UK,x,A\n":                                               "2: drug-unknown",
-		head + "noradrenaline,a,1 unit in 1 mL,,any,UK,x,A\n":                                         "2: units-against-mass",
-		head + "noradrenaline,a,1 in 1 mL,,any,UK,x,A\n":                                              "2: value-unknown",
-		head + "noradrenaline,a,1 mg in 1 mL,,sideways,UK,x,A\n":                                      "2: value-unknown",
-		head + "noradrenaline,a,1 mg in 1 mL,,any,UK,,A\n":                                            "2: key-missing",
-		head + "noradrenaline,,1 mg in 1 mL,,any,UK,x,A\n":                                            "2: key-missing",
-		head + "noradrenaline,a,1 mg in 1 mL,,any,UK,x,A,,\n":                                         "2: file-syntax",
-		head + "noradrenaline,\"a,1 mg in 1 mL,,any,UK,x,A\n":                                         "2: file-syntax",
-		head + "noradrenaline,a,1 mg in 1 mL,,any,UK,x,A\nnoradrenaline,a,2 mg in 1 mL,,any,UK,x,A\n": "3: key-repeated",
+		strings.Replace(head, "grade", "taste", 1):                 "1: key-unknown",
+		strings.Replace(head, "diluent,", "", 1):                   "1: key-missing",
+		strings.Replace(head, "patients,", "", 1):                  "1: key-missing",
+		strings.Replace(head, "grade", ",grade", 1):                "1: key-unknown",
+		strings.ReplaceAll(head, ",", "\t"):                        "1: file-syntax",
+		head + "moonlight,a,1 mg in 1 mL,,any,,UK,x,A\n":           "2: drug-unknown",
+		head + "Noradrenaline,a,1 mg in 1 mL,,any,,UK,x,A\n":       "2: drug-unknown",
+		head + "noradrenaline,a,1 unit in 1 mL,,any,,UK,x,A\n":     "2: units-against-mass",
+		head + "noradrenaline,a,1 in 1 mL,,any,,UK,x,A\n":          "2: value-unknown",
+		head + "noradrenaline,a,\"1,5 mg in 1 mL\",,any,,UK,x,A\n": "2: value-unknown",
+		head + "noradrenaline,a,1 mg in 1 mL,,sideways,,UK,x,A\n":  "2: value-unknown",
+		head + "noradrenaline,a,1 mg in 1 mL,,any,cats,UK,x,A\n":   "2: value-unknown",
+		head + "noradrenaline,a,1 mg in 1 mL,,any,,,x,A\n":         "2: value-unknown",
+		head + "noradrenaline,a,1 mg in 1 mL,,any,,Atlantis,x,A\n": "2: value-unknown",
+		head + "noradrenaline,a,1 mg in 1 mL,,any,,UK,,A\n":        "2: key-missing",
+		head + "noradrenaline,,1 mg in 1 mL,,any,,UK,x,A\n":        "2: key-missing",
+		head + "noradrenaline,a,1 mg in 1 mL,,any,,UK,x,A,,more\n": "2: file-syntax",
+		head + "noradrenaline,\"a,1 mg in 1 mL,,any,,UK,x,A\n":     "2: file-syntax",
+		head + "noradrenaline,a,1 mg in 1 mL,,any,,UK,x,A\n,,,,\n" +
+			"noradrenaline,a,2 mg in 1 mL,,any,,UK,x,A\n": "4: key-repeated",
 	} {
 		_, faults := formulary.Layer(starter(t), formulary.Text{Name: "t.csv", Data: []byte(text)})
 		got := ""

@@ -25,6 +25,29 @@ func TestNamesOnlyHoldNothing(t *testing.T) {
 	}
 }
 
+// Each drug of the formulary has one row in the tables of names: a second one,
+// elsewhere, would go stale unseen.
+func TestOneRowForEachDrug(t *testing.T) {
+	f := starter(t)
+	rows := map[string]int{}
+	files, err := filepath.Glob("../../testdata/formulary/names/*.tsv")
+	if err != nil {
+		t.Fatal(err)
+	}
+	for _, file := range files {
+		for _, r := range table(t, file, 4) {
+			if d, _, ok := f.Find(r[0]); ok {
+				rows[d.Name]++
+			}
+		}
+	}
+	for _, d := range f.Drugs() {
+		if rows[d.Name] != 1 {
+			t.Errorf("%s: got %d rows in the tables of names, want one", d.Name, rows[d.Name])
+		}
+	}
+}
+
 // labelRules is the table of 126 drugs of the label rules: INN, code, class.
 const labelRules = "label-rules-5-2.tsv"
 

@@ -8,7 +8,7 @@ import (
 
 // Every drug against three sets of published tables (testdata/formulary, with
 // the source of each row): containers stand in a document; figures of limits are
-// near to those of a second source; and against the second transcription no
+// near to those of a second source; and against the second copy no
 // concentration, dose rate or time in use is looser than the row's, and each
 // container of a row is filed. What disagrees stands in the excuses with why.
 func TestAgainstPublishedTables(t *testing.T) {

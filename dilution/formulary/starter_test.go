@@ -58,23 +58,43 @@ func table(t *testing.T, name string, columns int) [][]string {
 	return out
 }
 
-// wanted are the drugs that the starter formulary must hold at least.
-const wanted = `etomidate, propofol, ketamine, thiopental, midazolam, fentanyl, alfentanil, remifentanil, morphine, naloxone, flumazenil,
-suxamethonium, rocuronium, atracurium, neostigmine with glycopyrronium, sugammadex, lidocaine, bupivacaine, ropivacaine, atropine,
-glycopyrronium, ondansetron, dexamethasone, adrenaline, noradrenaline, phenylephrine, ephedrine, metaraminol, glyceryl trinitrate,
-labetalol, heparin, insulin, magnesium sulfate, tranexamic acid, oxytocin, cefazolin`
+// wanted are the drugs that the starter formulary must hold at least: one for each
+// block of the notes that were taken while reading, in their order.
+const wanted = `etomidate, propofol, ketamine, esketamine, thiopental, methohexital, midazolam, diazepam, diazepam emulsion, lorazepam,
+remimazolam, flumazenil, fentanyl, alfentanil, sufentanil, remifentanil, morphine, hydromorphone, pethidine, oxycodone, naloxone,
+dexmedetomidine, clonidine, paracetamol, ketorolac,
+suxamethonium, rocuronium, vecuronium, atracurium, cisatracurium, mivacurium, pancuronium, neostigmine,
+neostigmine with glycopyrronium, sugammadex, edrophonium, lidocaine, lidocaine with adrenaline, bupivacaine,
+bupivacaine with adrenaline, bupivacaine hyperbaric, levobupivacaine, ropivacaine, prilocaine, chloroprocaine, atropine,
+glycopyrronium, hyoscine hydrobromide, ondansetron, granisetron, metoclopramide, droperidol, cyclizine, dexamethasone,
+prochlorperazine, haloperidol, hydrocortisone, lipid emulsion, dantrolene,
+adrenaline, noradrenaline, phenylephrine, ephedrine, metaraminol, vasopressin, terlipressin, dopamine, dobutamine, milrinone,
+isoprenaline, levosimendan, glyceryl trinitrate, sodium nitroprusside, labetalol, esmolol, hydralazine, nicardipine, clevidipine,
+phentolamine, amiodarone, adenosine, digoxin, verapamil, magnesium sulfate, potassium chloride, calcium chloride,
+calcium gluconate, sodium bicarbonate, insulin, heparin, protamine, tranexamic acid, oxytocin, carbetocin, carboprost,
+furosemide, aminophylline, salbutamol, levetiracetam, phenytoin, phenobarbital, alprostadil, cefazolin, co-amoxiclav,
+vancomycin, gentamicin, teicoplanin, glucose, mannitol`
 
 func TestStarterHoldsTheDrugs(t *testing.T) {
 	f := starter(t)
 	names := strings.Split(strings.ReplaceAll(wanted, "\n", " "), ", ")
-	if len(f.Drugs()) < 32 || len(names) != 36 {
-		t.Fatalf("got %d drugs and %d wanted names", len(f.Drugs()), len(names))
+	if len(names) != 109 {
+		t.Fatalf("got %d wanted names", len(names))
 	}
 	for _, n := range names {
 		d, _, ok := f.Find(n)
-		if !ok || d.Name != n {
-			t.Errorf("no drug is filed under %q", n)
+		if !ok || d.Name != n || len(d.Presentations) == 0 {
+			t.Errorf("no drug with a presentation is filed under %q", n)
 		}
+	}
+	held := 0
+	for _, d := range f.Drugs() {
+		if len(d.Presentations) > 0 {
+			held++
+		}
+	}
+	if held < 110 {
+		t.Errorf("got %d drugs with a presentation, want 110 at least", held)
 	}
 	if !strings.Contains(f.State(), "not approved") {
 		t.Errorf("got the state %q, want it to say that nobody approved it", f.State())
@@ -128,6 +148,33 @@ func TestIdentifiersAgreeWithContents(t *testing.T) {
 		if (len(d.Presentations) == 0) != slices.Contains(namesOnly, d.Name) {
 			t.Errorf("%s: got %d presentations; those in %q have none, all others some", d.Name, len(d.Presentations), namesOnly)
 		}
+	}
+}
+
+// A pair stands once, whichever drug leads, and is allowed or forbidden, not both:
+// of two sources for one pair the second would never be read.
+func TestPairsStandOnce(t *testing.T) {
+	f := starter(t)
+	seen := map[[2]string]string{}
+	sorted := func(d [2]string) [2]string {
+		if d[0] > d[1] {
+			return [2]string{d[1], d[0]}
+		}
+		return d
+	}
+	for _, n := range f.Never {
+		if other, ok := seen[sorted(n.Drugs)]; ok {
+			t.Errorf("%v: forbidden in %s and in %s", n.Drugs, other, n.Pos.File)
+		}
+		seen[sorted(n.Drugs)] = n.Pos.File
+	}
+	for _, m := range f.Mixes {
+		if other, ok := seen[sorted(m.Drugs)]; ok {
+			t.Errorf("%v: allowed in %s and forbidden in %s", m.Drugs, m.Pos.File, other)
+		}
+	}
+	if len(seen) < 140 {
+		t.Errorf("got %d forbidden pairs", len(seen))
 	}
 }
 

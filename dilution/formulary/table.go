@@ -14,8 +14,9 @@ import (
 )
 
 // columns of a table of standard preparations, in the order in which it is
-// written. It may be read in any order, and without those after jurisdiction
-// that are blank throughout.
+// written. It may be read in any order, and without source, source jurisdiction and
+// unverified where these are blank throughout. A blank diluent means undiluted, so
+// that its column may not be lost.
 var columns = []string{
 	"drug", "id", "mix", "diluent", "line", "patients", "jurisdiction",
 	"source", "title", "grade", "source jurisdiction", "unverified",
@@ -93,8 +94,9 @@ type tableRow struct {
 	Standard
 }
 
-// readStandards reads one table. Spreadsheets write a byte-order mark, and in
-// some countries semicolons; both are taken.
+// readStandards reads one table. Spreadsheets write a byte-order mark, in some
+// countries semicolons, and lines and columns without anything in them behind the
+// table; all are taken.
 func readStandards(t Text, f *Formulary) ([]tableRow, refusal.List) {
 	data := bytes.TrimPrefix(t.Data, []byte("\xef\xbb\xbf"))
 	r := csv.NewReader(bytes.NewReader(data))
@@ -123,6 +125,9 @@ func readStandards(t Text, f *Formulary) ([]tableRow, refusal.List) {
 		if err != nil {
 			return rows, append(faults, tableFault(refusal.FileUnreadable, refusal.Pos{File: t.Name}, "table", "", "a table", err.Error()))
 		}
+		if blank(cells) {
+			continue
+		}
 		row, wrong := oneStandard(t, f, at, cells, r)
 		faults = append(faults, wrong...)
 		if !wrong.Refused() {
@@ -140,12 +145,23 @@ func commaOf(data []byte) rune {
 	return ','
 }
 
+func blank(cells []string) bool {
+	return !slices.ContainsFunc(cells, func(c string) bool { return strings.TrimSpace(c) != "" })
+}
+
 // columnsOf finds each column; unknown ones and missing ones are refused.
 func columnsOf(t Text, head []string) (map[string]int, refusal.List) {
 	at := map[string]int{}
 	var faults refusal.List
+	if len(head) == 1 && strings.Contains(head[0], "\t") {
+		return at, refusal.List{tableFault(refusal.FileSyntax, refusal.Pos{File: t.Name, Line: 1, Column: 1}, "table", "tabs", "fields parted by commas or semicolons",
+			"the fields are parted by tabs")}
+	}
 	for i, name := range head {
 		name = strings.ToLower(strings.TrimSpace(name))
+		if name == "" && blank(head[i:]) {
+			break
+		}
 		pos := refusal.Pos{File: t.Name, Line: 1, Column: i + 1}
 		if !slices.Contains(columns, name) {
 			faults = append(faults, tableFault(refusal.KeyUnknown, pos, "column", name, strings.Join(columns, ", "), fmt.Sprintf("the column %q is not known", name)))
@@ -155,7 +171,7 @@ func columnsOf(t Text, head []string) (map[string]int, refusal.List) {
 		}
 		at[name] = i
 	}
-	for _, name := range []string{"drug", "id", "mix", "line", "jurisdiction", "title", "grade"} {
+	for _, name := range []string{"drug", "id", "mix", "diluent", "line", "patients", "jurisdiction", "title", "grade"} {
 		if _, ok := at[name]; !ok {
 			faults = append(faults, tableFault(refusal.KeyMissing, refusal.Pos{File: t.Name, Line: 1, Column: 1}, "column", "", name,
 				fmt.Sprintf("the column %q is missing", name)))
@@ -177,7 +193,7 @@ func oneStandard(t Text, f *Formulary, at map[string]int, cells []string, r *csv
 	fault := func(code refusal.Code, name, want, message string) {
 		faults = append(faults, tableFault(code, refusal.Pos{File: t.Name, Line: line, Column: at[name] + 1}, name, cell(name), want, message))
 	}
-	if len(cells) > len(at) {
+	if len(cells) > len(at) && !blank(cells[len(at):]) {
 		fault(refusal.FileSyntax, "drug", fmt.Sprintf("%d fields", len(at)), fmt.Sprintf("the line has %d fields, the first has %d", len(cells), len(at)))
 	}
 	s := Standard{ID: cell("id"), Mix: cell("mix"), Diluent: cell("diluent"), Line: cell("line"), Patients: cell("patients"),
@@ -185,7 +201,13 @@ func oneStandard(t Text, f *Formulary, at map[string]int, cells []string, r *csv
 		Source: Source{Key: cell("source"), Title: cell("title"), Grade: cell("grade"), Jurisdiction: cell("source jurisdiction")}}
 	d, ok := f.named(cell("drug"))
 	if !ok {
-		fault(refusal.DrugUnknown, "drug", "the name of a drug as it is filed", fmt.Sprintf("%q is not in the formulary", cell("drug")))
+		fault(refusal.DrugUnknown, "drug", "the name of a drug as it is filed", fmt.Sprintf("%q is not the name of a drug as it is filed", cell("drug")))
+		if known, near, is := f.Find(cell("drug")); is {
+			near = []string{known.Name}
+			faults[len(faults)-1].Remedy = "write " + near[0]
+		} else if len(near) > 0 {
+			faults[len(faults)-1].Remedy = "was " + strings.Join(near, " or ") + " meant?"
+		}
 	}
 	var err error
 	if s.Amount, s.Volume, err = quantity.ParseMix(s.Mix); err != nil {
@@ -198,6 +220,14 @@ func oneStandard(t Text, f *Formulary, at map[string]int, cells []string, r *csv
 	}
 	if !slices.Contains([]string{"any", "peripheral", "central"}, s.Line) {
 		fault(refusal.ValueUnknown, "line", "any, peripheral or central", "the line is not known")
+	}
+	if !slices.Contains([]string{"", "adults", "children", "newborns"}, s.Patients) {
+		fault(refusal.ValueUnknown, "patients", "adults, children, newborns or nothing", fmt.Sprintf("nobody is called %q here", s.Patients))
+	}
+	for _, name := range []string{"jurisdiction", "source jurisdiction"} {
+		if x := cell(name); (x != "" || name == "jurisdiction") && !jurisdictionPattern.MatchString(x) {
+			fault(refusal.ValueUnknown, name, `two capital letters such as "UK", or "international"`, fmt.Sprintf("%q is no jurisdiction", x))
+		}
 	}
 	if s.Source.Title == "" || !slices.Contains([]string{"A", "B", "C", "P"}, s.Source.Grade) {
 		fault(refusal.KeyMissing, "title", "a source spelled out, with its grade A, B, C or P", "the preparation has no source (rule R13)")

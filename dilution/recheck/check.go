@@ -60,12 +60,18 @@ type check struct {
 	slips   map[string]int      // kind of slip to how many rows name it
 	read    map[string]value    // name to exact value, filled as figures are needed
 	parsed  map[string]parsed   // printed text to its reading
-	rules   map[string]rule
 	record  record
+	packs   []int      // rows of the sizes of container, sorted
 	all     *known     // what a sentence may repeat, filled when one is met
 	own     *known     // what a bound may repeat
 	block   *blockText // texts of the drug's block
 	faults  []Fault
+
+	twoSteps  bool // a figure of an intermediate syringe is printed
+	twoDrugs  bool // there is a second drug from a container of its own
+	otherName string
+	other     record
+	mix       []string // texts of what the record says of the pair
 }
 
 func newCheck(s Stated) *check {
@@ -78,7 +84,6 @@ func newCheck(s Stated) *check {
 		slips:   map[string]int{},
 		read:    map[string]value{},
 		parsed:  map[string]parsed{},
-		rules:   allRules(),
 		record:  findRecord(s.Record, s.Drug, s.Presentation),
 	}
 	for _, f := range s.Figures {
@@ -87,9 +92,7 @@ func newCheck(s Stated) *check {
 		case !known:
 			c.names = append(c.names, f.Name)
 			c.texts[f.Name] = f.Text
-			if isSlipKind(f.Name) {
-				c.slips[f.Text]++
-			}
+			c.note(f)
 		case first != f.Text:
 			c.add(f.Paper, f.Name, f.Text, first, "the papers do not say the same: "+strings.Join(c.papers[f.Name], ", ")+" prints the other text")
 		}
@@ -100,7 +103,36 @@ func newCheck(s Stated) *check {
 	for _, f := range s.Asked {
 		c.asked[f.Name] = append(c.asked[f.Name], f.Text)
 	}
+	c.findOther(s)
+	slices.Sort(c.packs)
+	c.packs = slices.Compact(c.packs)
 	return c
+}
+
+// findOther looks up the second drug and what is said of the pair.
+func (c *check) findOther(s Stated) {
+	c.twoDrugs = c.twoDrugs || s.OtherDrug != "" || c.was(OtherDrug)
+	if c.otherName = s.OtherDrug; c.otherName == "" {
+		c.other.problem = "no second drug is stated whose record could be searched"
+		return
+	}
+	c.other = findRecord(s.OtherRecord, s.OtherDrug, s.OtherPresentation)
+	c.mix = pairTexts([][]byte{s.Record, s.OtherRecord, s.PairRecord}, s.Drug, s.OtherDrug)
+}
+
+// note keeps what the names alone tell of the syringe.
+func (c *check) note(f Figure) {
+	key, row := splitRow(f.Name)
+	switch {
+	case key == Slip+".*.kind":
+		c.slips[f.Text]++
+	case row > 0 && strings.HasPrefix(key, Pack+"."):
+		c.packs = append(c.packs, row)
+	case strings.HasPrefix(key, "intermediate."):
+		c.twoSteps = true
+	case strings.HasPrefix(key, "other."):
+		c.twoDrugs = true
+	}
 }
 
 func (c *check) add(paper, name, printed, gets, sentence string) {
@@ -111,7 +143,7 @@ func (c *check) checkOne(name string) {
 	text := c.texts[name]
 	papers := strings.Join(c.papers[name], ", ")
 	key, row := splitRow(name)
-	work, ok := c.rules[key]
+	work, ok := rules[key]
 	if !ok {
 		c.add(papers, name, text, "", "the second route has no sum for a figure of this name")
 		return
@@ -133,9 +165,14 @@ func (c *check) honoured(name, text string) *objection {
 		return nil
 	}
 	switch name {
-	case AmountInSyringe, Concentration, ContainerCount, Age, Sex, Prepared, UseHours, Ref:
+	case AmountInSyringe, Concentration, ContainerCount, DoseCount, Age, Sex, Prepared, UseHours, IntermediateUseHours, WantedTime, Ref,
+		OtherDrug, OtherAmount, OtherContainerCount:
 		return nil
-	case UseBy, EmptyAt:
+	case SecondAmount, SecondConcentrated:
+		if c.twoDrugs { // what was wanted of the second drug, before its volume was rounded
+			return nil
+		}
+	case UseBy, IntermediateUseBy, EmptyAt:
 		return sameMoment(c.asked[name][0], text)
 	}
 	if key, _ := splitRow(name); key == Said+".*.text" || key == Bound+".*.text" {
@@ -159,7 +196,7 @@ func (c *check) checkAsked() {
 	for _, name := range names {
 		typed := c.asked[name]
 		key, _ := splitRow(name)
-		if _, ok := c.rules[key]; !ok {
+		if _, ok := rules[key]; !ok {
 			c.add("the order", name, typed[0], "", "the second route does not know what was asked under this name")
 		}
 		for _, other := range typed[1:] {
@@ -174,7 +211,8 @@ func (c *check) checkAsked() {
 // from: what the site has in stock.
 func isStocked(name string) bool {
 	switch name {
-	case DrugStep, DoseStep, DrugBarrel, FinalBarrel, Typed:
+	case DrugStep, DoseStep, DrugBarrel, FinalBarrel, Typed,
+		IntermediateDrugStep, IntermediateDrugBarrel, IntermediateStep, IntermediateBarrel, TakenStep, TakenBarrel, OtherStep, OtherBarrel:
 		return true
 	}
 	return false
@@ -284,16 +322,17 @@ func stocked(name string) rule {
 }
 
 func (c *check) oneOf(name string, r reading) *objection {
-	if !c.was(name) {
+	stock := c.stockOf(name)
+	if len(stock) == 0 {
 		return object("", "is not among what was typed for "+name+", and no sum could confirm it")
 	}
-	for _, text := range c.asked[name] {
+	for _, text := range stock {
 		v, _, err := readTyped(text)
 		if err == nil && exact(r, v, "typed as") == nil {
 			return nil
 		}
 	}
-	return object(strings.Join(c.asked[name], " or "), "is none of those typed")
+	return object(strings.Join(stock, " or "), "is none of those typed")
 }
 
 // sameText is the rule of words that must be repeated letter by letter.

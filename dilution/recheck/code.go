@@ -219,7 +219,8 @@ func (c *check) product(number string) *objection {
 		return object("", "has a check digit that does not fit")
 	}
 	drug := c.askedText(ProductDrug)
-	names := append(slices.Clone(c.blockTexts().texts), c.drug)
+	block := c.blockTexts()
+	names := append(slices.Clone(block.texts[:block.own]), c.drug)
 	if drug.lack != "" || !slices.ContainsFunc(names, func(n string) bool { return strings.EqualFold(n, strings.TrimSpace(drug.text)) }) {
 		return object(drug.text, "stands for another drug")
 	}

@@ -37,7 +37,14 @@ func doseWeightBy(c *check, _ int, text string) *objection {
 	return c.sizeWord(text, DoseWeightBy, Dose, DoseWeight)
 }
 
+// rateWeightBy holds the word against the start dose, and against the rate of a
+// mixture for one weight where there is one.
 func rateWeightBy(c *check, _ int, text string) *objection {
+	if c.has(RuleRate) {
+		if o := c.sizeWord(text, RateWeightBy, RuleRate, RateWeight); o != nil || !c.has(StartDose) {
+			return o
+		}
+	}
 	return c.sizeWord(text, RateWeightBy, StartDose, RateWeight)
 }
 
@@ -89,6 +96,9 @@ func doseWeight(c *check, _ int, r reading) *objection {
 }
 
 func rateWeight(c *check, _ int, r reading) *objection {
+	if c.has(RuleRate) && !c.has(StartDose) {
+		return c.sizeOf(r, RateWeightBy, RuleRate)
+	}
 	return c.sizeOf(r, RateWeightBy, StartDose)
 }
 

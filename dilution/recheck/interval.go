@@ -38,13 +38,17 @@ func readingTolerance(x, v value) value {
 // volume only where the syringe is made up to it.
 func (c *check) components() ([]value, string) {
 	list := []value{c.get(Assay)}
-	drug := readingTolerance(c.get(DrugVolume), c.get(DrugBarrel))
 	switch c.texts[Method] {
 	case neat:
+		list = append(list, c.besideOther()...)
 	case makeUpTo:
-		list = append(list, drug, readingTolerance(c.get(FinalVolume), c.get(FinalBarrel)))
+		if c.twoSteps {
+			list = append(list, c.stepReadings()...)
+			break
+		}
+		list = append(list, c.toleranceOf(DrugVolume, DrugBarrel), c.toleranceOf(FinalVolume, FinalBarrel))
 	case addTo, withdraw:
-		list = append(list, drug)
+		list = append(list, c.toleranceOf(DrugVolume, DrugBarrel))
 	default:
 		return nil, "needs method, which is not printed or not known"
 	}
@@ -57,6 +61,38 @@ func (c *check) components() ([]value, string) {
 		}
 	}
 	return list, ""
+}
+
+// toleranceOf is the reading tolerance of a printed volume in its printed barrel.
+func (c *check) toleranceOf(volume, barrel string) value {
+	return readingTolerance(c.get(volume), c.get(barrel))
+}
+
+// stepReadings are those of a dilution in two steps, C = S (drug / made up to)
+// (taken / final). Two on one side of the fraction that may be of one syringe
+// count together, as correlated readings do.
+func (c *check) stepReadings() []value {
+	above := c.together(IntermediateDrugVolume, IntermediateDrugBarrel, TakenVolume, TakenBarrel)
+	return append(above, c.together(IntermediateVolume, IntermediateBarrel, FinalVolume, FinalBarrel)...)
+}
+
+func (c *check) together(first, itsBarrel, second, thatBarrel string) []value {
+	a, b := c.toleranceOf(first, itsBarrel), c.toleranceOf(second, thatBarrel)
+	if sameValue(c.get(itsBarrel), c.get(thatBarrel)) {
+		return []value{a.plus(b)}
+	}
+	return []value{a, b}
+}
+
+// besideOther is the part of a second drug that is drawn to a neat one: with V
+// both together, u^2 = (other / V)^2 (u drug^2 + u other^2), as for a diluent that
+// is measured and added.
+func (c *check) besideOther() []value {
+	if !c.twoDrugs {
+		return nil
+	}
+	share := c.get(OtherVolume).over(c.get(FinalVolume))
+	return []value{share.times(c.toleranceOf(DrugVolume, DrugBarrel)), share.times(c.toleranceOf(OtherVolume, OtherBarrel))}
 }
 
 // intervalPercent compares squares: with u^2 = sum of a^2 / 3 the half width is
@@ -97,57 +133,6 @@ func intervalHigh(c *check, _ int, r reading) *objection {
 
 func (c *check) percent() value { return c.get(IntervalPercent).bare(dim{}) }
 
-// drugStep is one of the graduations that were typed, and belongs to the barrel.
-func drugStep(c *check, _ int, r reading) *objection {
-	if o := c.oneOf(DrugStep, r); o != nil {
-		return o
-	}
-	return c.paired()
-}
-
-// paired holds barrel and graduation together: where several of each were
-// typed, the first graduation is that of the first barrel, and so on.
-func (c *check) paired() *objection {
-	barrels, steps := c.asked[DrugBarrel], c.asked[DrugStep]
-	if !c.has(DrugBarrel) || !c.has(DrugStep) || len(barrels) < 2 && len(steps) < 2 {
-		return nil
-	}
-	if len(barrels) != len(steps) {
-		return object("", "the barrels and graduations that were typed do not pair off")
-	}
-	barrel, step := c.get(DrugBarrel), c.get(DrugStep)
-	for i := range barrels {
-		v, _, err := readTyped(barrels[i])
-		w, _, fault := readTyped(steps[i])
-		if err == nil && fault == nil && sameValue(barrel, v) && sameValue(step, w) {
-			return nil
-		}
-	}
-	return object("", "no barrel that was typed has this capacity with this graduation")
-}
-
 func sameValue(a, b value) bool {
 	return a.lack == "" && b.lack == "" && a.dim == b.dim && a.against(b) == 0
-}
-
-// drugBarrel is one of the barrels that were typed, and holds the volume.
-func drugBarrel(c *check, _ int, r reading) *objection {
-	if o := c.barrel(DrugBarrel, r, DrugVolume); o != nil {
-		return o
-	}
-	return c.paired()
-}
-
-func finalBarrel(c *check, _ int, r reading) *objection {
-	return c.barrel(FinalBarrel, r, FinalVolume)
-}
-
-func (c *check) barrel(name string, r reading, holds string) *objection {
-	if o := c.oneOf(name, r); o != nil {
-		return o
-	}
-	if t := readingTolerance(c.get(holds), r.whole); t.lack != "" {
-		return object("", t.lack)
-	}
-	return nil
 }

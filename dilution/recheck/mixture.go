@@ -1,9 +1,5 @@
 package recheck
 
-import (
-	"math/big"
-)
-
 // The four methods. "make up to", "add to" and "withdraw, then add" are three
 // different sums of preparation (rule R5); in all of them the final volume is
 // the drug volume and the diluent volume together.
@@ -19,8 +15,33 @@ func (c *check) exactStrength() value {
 	return c.once(Strength, func() value { return c.get(ContainerAmount).over(c.get(ContainerVolume)) })
 }
 
+// drawn is the volume drawn of the drug's containers.
+func (c *check) drawn() value {
+	if c.twoSteps {
+		return c.get(IntermediateDrugVolume)
+	}
+	return c.get(DrugVolume)
+}
+
+// undiluted is what goes into the giving syringe beside the diluent.
+func (c *check) undiluted() value {
+	first := c.get(DrugVolume)
+	if c.twoSteps {
+		first = c.get(TakenVolume)
+	}
+	if c.twoDrugs {
+		return first.plus(c.get(OtherVolume))
+	}
+	return first
+}
+
 func (c *check) exactAmount() value {
-	return c.once(AmountInSyringe, func() value { return c.get(DrugVolume).times(c.exactStrength()) })
+	return c.once(AmountInSyringe, func() value {
+		if c.twoSteps {
+			return c.get(TakenVolume).times(c.exactIntermediate())
+		}
+		return c.get(DrugVolume).times(c.exactStrength())
+	})
 }
 
 func (c *check) exactConcentration() value {
@@ -49,6 +70,9 @@ func drugKind(v value) int {
 func method(c *check, _ int, text string) *objection {
 	switch text {
 	case neat:
+		if c.twoSteps {
+			return object(makeUpTo, "what is taken of an intermediate is made up")
+		}
 		if c.has(DiluentVolume) {
 			return object("", "a neat syringe holds no diluent, yet diluent.volume is printed")
 		}
@@ -59,12 +83,15 @@ func method(c *check, _ int, text string) *objection {
 	default:
 		return object("", "is not one of the four methods")
 	}
+	if c.twoSteps && text != makeUpTo {
+		return object(makeUpTo, "what is taken of an intermediate is made up")
+	}
 	return c.sameText(Method, text)
 }
 
 // exactNeat confirms "neat" by its sum where the order left the method open.
 func exactNeat(c *check) *objection {
-	drug, final := c.get(DrugVolume), c.get(FinalVolume)
+	drug, final := c.undiluted(), c.get(FinalVolume)
 	if rest := final.minus(drug); rest.lack != "" {
 		return object("", rest.lack)
 	}
@@ -78,115 +105,16 @@ func drugVolume(c *check, _ int, r reading) *objection {
 	if r.whole.dim != one(inVolume) {
 		return object("", "is not a volume")
 	}
+	if c.twoSteps {
+		return exact(r, c.drawn(), "intermediate.drug.volume is printed as")
+	}
 	if c.doseOnly() {
-		return c.holdsTheDose(r)
+		return c.holdsTheDoses(r)
 	}
-	step := c.get(DrugStep)
-	if step.lack != "" {
-		return object("", step.lack)
+	if o := c.graduated(r, DrugStep); o != nil {
+		return o
 	}
-	if step.dim != one(inVolume) || !r.whole.isMultiple(step) {
-		return object("", "is not a whole number of drug.step")
-	}
-	return c.asOrdered(r, step)
-}
-
-// asOrdered holds the drawn volume against everything in the order that says
-// how much drug the syringe must hold.
-func (c *check) asOrdered(r reading, step value) *objection {
-	bound := false
-	for _, name := range []string{AmountInSyringe, Concentration} {
-		if !c.was(name) {
-			continue
-		}
-		bound = true
-		want := c.wantedVolume(name)
-		if want.lack != "" {
-			return object("", want.lack)
-		}
-		if want.dim != r.whole.dim {
-			return object("", "what was asked as "+name+" is of another kind than the container holds")
-		}
-		if !roundsTo(r.whole, want, step, halfUp) {
-			return object(nearest(want, step, halfUp, r.unit), "from the "+name+" asked")
-		}
-	}
-	if c.was(DrugVolume) {
-		bound = true
-		if o := exact(r, c.typed(DrugVolume), "typed as"); o != nil {
-			return o
-		}
-	}
-	if bound {
-		return nil
-	}
-	return c.fromWhole(r)
-}
-
-// fromWhole confirms a drawn volume that only the volume of the syringe or the
-// number of containers decides.
-func (c *check) fromWhole(r reading) *objection {
-	if c.was(FinalVolume) && c.texts[Method] == neat {
-		return exact(r, c.typed(FinalVolume), "a neat syringe was asked with")
-	}
-	if c.was(ContainerCount) {
-		return exact(r, c.count().times(c.get(ContainerVolume)), "whole containers hold")
-	}
-	return object("", "nothing in the order says how much drug to draw")
-}
-
-// wantedVolume is the exact volume of drug that an asked amount or an asked
-// concentration needs.
-func (c *check) wantedVolume(name string) value {
-	asked := c.typed(name)
-	if asked.lack != "" {
-		return asked
-	}
-	stock := c.counted(c.exactStrength(), drugKind(asked))
-	if name == AmountInSyringe {
-		return asked.over(stock)
-	}
-	if c.texts[Method] == addTo {
-		// C = S d / (bag + d), so d (S - C) = C bag.
-		return asked.times(c.get(DiluentVolume)).over(stock.minus(asked))
-	}
-	return asked.times(c.get(FinalVolume)).over(stock)
-}
-
-// doseOnly says whether the order asks a dose and nothing about the mixture.
-func (c *check) doseOnly() bool {
-	for _, name := range []string{AmountInSyringe, Concentration, FinalVolume, DrugVolume, ContainerCount} {
-		if c.was(name) {
-			return false
-		}
-	}
-	return c.was(Dose)
-}
-
-// holdsTheDose confirms a syringe that holds exactly one dose: the volume given
-// is the whole volume.
-func (c *check) holdsTheDose(r reading) *objection {
-	given, final := c.get(DoseVolume), c.get(FinalVolume)
-	if rest := given.minus(final); rest.lack != "" {
-		return object("", rest.lack)
-	}
-	if given.against(final) != 0 {
-		return object("", "only a dose was asked, yet dose.volume is not the whole final.volume")
-	}
-	if c.texts[Method] == neat {
-		if c.has(DrugStep) && c.stepFault(r) {
-			return object("", "is not a whole number of drug.step")
-		}
-		return exact(r, given, "the dose volume is")
-	}
-	step := c.get(DrugStep)
-	stock := c.counted(c.exactStrength(), drugKind(c.get(Dose)))
-	return onStep(r, c.exactDose().over(stock), step, c.roundingOf(DoseRounding))
-}
-
-func (c *check) stepFault(r reading) bool {
-	step := c.get(DrugStep)
-	return step.lack != "" || step.dim != r.whole.dim || !r.whole.isMultiple(step)
+	return c.asOrdered(r, c.get(DrugStep))
 }
 
 func diluentVolume(c *check, _ int, r reading) *objection {
@@ -196,7 +124,7 @@ func diluentVolume(c *check, _ int, r reading) *objection {
 	if c.was(DiluentVolume) {
 		return exact(r, c.typed(DiluentVolume), "typed as")
 	}
-	return exact(r, c.get(FinalVolume).minus(c.get(DrugVolume)), "final.volume less drug.volume is")
+	return exact(r, c.get(FinalVolume).minus(c.undiluted()), "final.volume less what is diluted is")
 }
 
 func finalVolume(c *check, _ int, r reading) *objection {
@@ -207,9 +135,9 @@ func finalVolume(c *check, _ int, r reading) *objection {
 	}
 	switch c.texts[Method] {
 	case neat:
-		return exact(r, c.get(DrugVolume), "a neat syringe holds drug.volume only, which is")
+		return exact(r, c.undiluted(), "a neat syringe holds no more than was drawn, which is")
 	case makeUpTo, addTo, withdraw:
-		return exact(r, c.get(DrugVolume).plus(c.get(DiluentVolume)), "drug.volume and diluent.volume together are")
+		return exact(r, c.undiluted().plus(c.get(DiluentVolume)), "what is diluted and diluent.volume together are")
 	}
 	return object("", "needs method, which is not printed or not known")
 }
@@ -222,55 +150,12 @@ func concentration(c *check, _ int, r reading) *objection {
 	return short(r, c.exactConcentration())
 }
 
-// count is the number of containers opened.
-func (c *check) count() value {
-	text, ok := c.texts[ContainerCount]
-	if !ok {
-		return lacking("needs container.count, which is not printed")
-	}
-	n, err := printedNumber(text)
-	if err != nil || n.den.Cmp(big.NewInt(1)) != 0 || n.sign() == 0 {
-		return lacking("needs container.count, which cannot be read")
-	}
-	return n
-}
-
-func containerCount(c *check, _ int, text string) *objection {
-	n := c.count()
-	if n.lack != "" {
-		return object("", "cannot be read: want a whole number from 1")
-	}
-	if c.was(ContainerCount) {
-		want, err := typedNumber(c.asked[ContainerCount][0])
-		if err != nil || want.against(n) != 0 {
-			return object(c.asked[ContainerCount][0], "was typed so")
-		}
-	}
-	each, drug := c.get(ContainerVolume), c.get(DrugVolume)
-	left := n.times(each).minus(drug)
-	if left.lack != "" {
-		return object("", left.lack)
-	}
-	if left.sign() < 0 {
-		return object("", "so many containers hold less than drug.volume")
-	}
-	if !c.has(LeftVolume) && left.against(each) >= 0 {
-		return object("", "one container less would do, and no left.volume is printed that says why")
-	}
-	return nil
-}
-
-func (c *check) exactLeft() value {
-	return c.count().times(c.get(ContainerVolume)).minus(c.get(DrugVolume))
-}
-
-func leftVolume(c *check, _ int, r reading) *objection { return short(r, c.exactLeft()) }
-
-func leftAmount(c *check, _ int, r reading) *objection {
-	return short(r, c.exactLeft().times(c.exactStrength()))
-}
-
+// exactSecond is a second drug of the same container, or the second drug from a
+// container of its own.
 func (c *check) exactSecond() value {
+	if c.twoDrugs {
+		return c.exactOther()
+	}
 	return c.exactAmount().times(c.get(SecondContainer)).over(c.get(ContainerAmount))
 }
 

@@ -10,21 +10,21 @@ import "strings"
 // before a concentration, and that before a drawn volume.
 func (c *check) exactWanted() value {
 	if c.doseOnly() {
-		dose := c.exactDose()
-		return dose.over(c.counted(c.exactStrength(), drugKind(dose)))
+		doses := c.exactDoses()
+		return doses.over(c.counted(c.exactStrength(), drugKind(doses)))
 	}
-	for _, name := range []string{AmountInSyringe, Concentration} {
-		if c.was(name) {
-			return c.wantedVolume(name)
-		}
+	if sources := c.sources(); len(sources) > 0 {
+		return c.wantedVolume(sources[0])
 	}
 	switch {
 	case c.was(DrugVolume):
 		return c.typed(DrugVolume)
+	case c.was(FinalVolume) && c.texts[Method] == neat && c.twoDrugs:
+		return c.typed(FinalVolume).minus(c.get(OtherVolume))
 	case c.was(FinalVolume) && c.texts[Method] == neat:
 		return c.typed(FinalVolume)
 	case c.was(ContainerCount):
-		return c.count().times(c.get(ContainerVolume))
+		return c.held()
 	}
 	return lacking("nothing in the order says how much drug to draw")
 }
@@ -51,6 +51,9 @@ func startFlow(c *check, _ int, r reading) *objection {
 }
 
 func drugMoved(c *check, _ int, text string) *objection {
+	if c.twoSteps {
+		return object("", "of a dilution in two steps target.moved says what the rounding lost")
+	}
 	return c.moved(text, c.get(DrugVolume), c.exactWanted())
 }
 

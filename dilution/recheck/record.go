@@ -14,6 +14,7 @@ type record struct {
 	problem string
 	own     map[string]string
 	pack    map[string]string
+	packs   []block // all presentations of the drug
 	place   place
 }
 
@@ -44,6 +45,37 @@ func (r record) holds(key string) bool {
 	return r.problem == "" && ok
 }
 
+// size is the same drug's record with another of its presentations.
+func (r record) size(id string) (record, string) {
+	if r.problem != "" {
+		return record{}, r.problem
+	}
+	pack, problem := onePack(r.packs, id)
+	if problem != "" {
+		return record{}, problem
+	}
+	r.pack = pack.lines
+	return r, ""
+}
+
+// onePack is the one presentation with this id; two of them, and a line that
+// stands twice, are problems.
+func onePack(packs []block, id string) (block, string) {
+	var found []block
+	for _, p := range packs {
+		if p.lines["id"] == id && id != "" {
+			found = append(found, p)
+		}
+	}
+	if len(found) != 1 {
+		return block{}, fmt.Sprintf("the record holds %d presentations %q, want one", len(found), id)
+	}
+	if found[0].twice != "" {
+		return block{}, "the record has a line twice: " + found[0].twice
+	}
+	return found[0], ""
+}
+
 // A block is one table of the record: the header it stands under and its lines.
 type block struct {
 	lines map[string]string
@@ -67,19 +99,14 @@ func findRecord(raw []byte, drug, presentation string) record {
 	if len(found) != 1 {
 		return record{problem: fmt.Sprintf("the record holds %d drugs named %q, want one", len(found), drug)}
 	}
-	var packs []block
-	for _, p := range found[0].packs {
-		if p.lines["id"] == presentation && presentation != "" {
-			packs = append(packs, p)
-		}
-	}
-	if len(packs) != 1 {
-		return record{problem: fmt.Sprintf("the record of %q holds %d presentations %q, want one", drug, len(packs), presentation)}
-	}
-	if key := found[0].twice + packs[0].twice; key != "" {
+	if key := found[0].twice; key != "" {
 		return record{problem: fmt.Sprintf("the record of %q has a line twice: %s", drug, key)}
 	}
-	return record{own: found[0].lines, pack: packs[0].lines, place: found[0].place}
+	pack, problem := onePack(found[0].packs, presentation)
+	if problem != "" {
+		return record{problem: fmt.Sprintf("drug %q: %s", drug, problem)}
+	}
+	return record{own: found[0].lines, pack: pack.lines, packs: found[0].packs, place: found[0].place}
 }
 
 // drugsNamed cuts the text at its [[drug]] lines and reads only the pieces in

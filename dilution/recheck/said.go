@@ -95,10 +95,23 @@ func (c *check) allKnown() *known {
 			k.syringe = append(k.syringe, t.number)
 		}
 	}
-	tolerance := readingTolerance(c.get(DrugVolume), c.get(DrugBarrel)).times(c.get(DrugVolume))
-	k.printed = func(r reading) bool { return short(r, tolerance) == nil }
+	k.printed = c.isTolerance
 	c.all = k
 	return k
+}
+
+// isTolerance says whether a quantity is the reading tolerance of a volume that
+// is drawn, in the barrel that measures it.
+func (c *check) isTolerance(r reading) bool {
+	for _, use := range barrelUses() {
+		if use.step == "" || !c.has(use.holds) || !c.has(use.barrel) {
+			continue
+		}
+		if short(r, c.toleranceOf(use.holds, use.barrel).times(c.get(use.holds))) == nil {
+			return true
+		}
+	}
+	return false
 }
 
 // learnFigure takes a figure that is one quantity as it has been read already.
@@ -124,30 +137,43 @@ func (c *check) ownKnown() *known {
 }
 
 // A blockText is the texts of the drug's block of the record: as they are, with
-// blanks folded, and the latter without figures.
-type blockText struct{ texts, folded, words []string }
+// blanks folded, and the latter without figures. Of two drugs it holds those of
+// both and of the pair; the first own of them are the drug's own.
+type blockText struct {
+	texts, folded, words []string
+	own                  int
+}
 
-// blockTexts reads the drug's block once; it is empty where the record cannot
-// be read, so that nothing is confirmed by it.
+// blockTexts reads the blocks once; it is empty where the record cannot be read,
+// so that nothing is confirmed by it.
 func (c *check) blockTexts() *blockText {
 	if c.block != nil {
 		return c.block
 	}
 	c.block = &blockText{}
-	if c.record.problem != "" {
-		return c.block
+	c.block.add(c.record)
+	c.block.own = len(c.block.texts)
+	c.block.add(c.other)
+	c.block.keep(c.mix)
+	return c.block
+}
+
+func (b *blockText) add(r record) {
+	if r.problem != "" {
+		return
 	}
-	texts, ok := c.record.place.texts()
-	if !ok {
-		return c.block
+	if texts, ok := r.place.texts(); ok {
+		b.keep(texts)
 	}
+}
+
+func (b *blockText) keep(texts []string) {
 	for _, t := range texts {
 		folded := unseparated(fold(t))
-		c.block.texts = append(c.block.texts, t)
-		c.block.folded = append(c.block.folded, folded)
-		c.block.words = append(c.block.words, withoutFigures(folded))
+		b.texts = append(b.texts, t)
+		b.folded = append(b.folded, folded)
+		b.words = append(b.words, withoutFigures(folded))
 	}
-	return c.block
 }
 
 func said(c *check, row int, text string) *objection {

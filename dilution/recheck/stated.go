@@ -25,31 +25,47 @@ type Figure struct {
 // it. Figures holds every figure of every paper of this syringe, repeated ones
 // included.
 //
+// OtherDrug, OtherPresentation and OtherRecord say the same of the second drug of
+// a syringe that holds two, each from a container of its own; they are empty
+// where there is none. PairRecord is the text of the file in which their [[mix]]
+// stands, where that is neither of the two: sentences and bounds may repeat its
+// figures.
+//
 // These names have no sum that could confirm them, so each that is printed must
 // be in Asked under its own name: method (unless neat), drug.step, dose.step,
 // rate.step, drug.barrel, final.barrel, weight.actual, height, age, sex, dose,
-// start.dose, low.dose, high.dose, limit.dose.
+// dose.count, start.dose, low.dose, high.dose, limit.dose, priming, dead.space,
+// wanted.time, other.drug.
 //
-// drug.step, drug.barrel, final.barrel and dose.step may be asked several times:
-// that is the stock to choose from, the first drug.step belonging to the first
-// drug.barrel and so on. A wrong choice from a stock shows only where a sum
-// depends on it, so one entry each binds best.
+// Every step but rate.step and every barrel may be asked several times: that is
+// the stock to choose from, the first drug.step belonging to the first drug.barrel
+// and so on. Steps
+// and barrels of an intermediate or a second drug that were not asked under their
+// own names (both or neither) are chosen from those of drug.step and drug.barrel.
+// A wrong choice from a stock shows only where a sum depends on it, so one entry
+// each binds best.
 //
 // The weight that a dose goes by stands behind the typed dose ("0.3 mg/kg lean")
 // or in Asked under dose.weight.by and rate.weight.by; where it is nowhere, only
-// "actual" passes. How much drug to draw must follow from an asked amount,
-// concentration, drug.volume, container.count, a final.volume drawn neat, or a
-// dose alone. ladder.N.dose is compared where it was asked. prepared,
-// prepared.offset, use.hours and use.by.offset are confirmed by use.by or else
-// must be asked; atc by the drug's line atc in the record, by code.1 or by Asked;
-// serial by code.1 or by Asked.
+// "actual" passes. How much drug to draw must follow from an asked amount or
+// concentration, rule.rate, drug.volume, container.count, dose.count with a
+// final.volume, a final.volume drawn neat, or doses alone; how much of a second
+// drug from an asked other.amount, second.amount, second.concentration,
+// other.volume or other.container.count. ladder.N.dose is compared where it was
+// asked. prepared, prepared.offset, use.hours and use.by.offset are confirmed by
+// use.by or else must be asked; atc by the drug's line atc in the record, by
+// code.1 or by Asked; serial by code.1 or by Asked.
 type Stated struct {
-	Syringe      string
-	Drug         string
-	Presentation string
-	Record       []byte
-	Asked        []Figure
-	Figures      []Figure
+	Syringe           string
+	Drug              string
+	Presentation      string
+	Record            []byte
+	OtherDrug         string
+	OtherPresentation string
+	OtherRecord       []byte
+	PairRecord        []byte
+	Asked             []Figure
+	Figures           []Figure
 }
 
 // Names of figures. Each says what it is, and the sum that it must satisfy.
@@ -67,13 +83,13 @@ const (
 	DrugVolume         = "drug.volume"          // total drawn from the containers
 	DrugStep           = "drug.step"            // graduation of the barrel that measures it; drug.volume is a multiple
 	DiluentVolume      = "diluent.volume"       // diluent added ("add to": volume already in the bag; "withdraw, then add": volume left in the bag)
-	FinalVolume        = "final.volume"         // drug.volume + diluent.volume
+	FinalVolume        = "final.volume"         // drug.volume + diluent.volume (+ other.volume)
 	AmountInSyringe    = "amount"               // drug.volume x strength
 	Concentration      = "concentration"        // amount / final.volume
 	LeftVolume         = "left.volume"          // count x container.volume - drug.volume
 	LeftAmount         = "left.amount"          // left.volume x strength
 	SecondContainer    = "second.container"     // a second drug in the same container, "500 micrograms"
-	SecondAmount       = "second.amount"        // amount x second.container / container.amount
+	SecondAmount       = "second.amount"        // amount x second.container / container.amount; of two drugs, other.amount
 	SecondConcentrated = "second.concentration" // second.amount / final.volume
 	SubstanceFactor    = "substance.factor"     // the drug's own factor, "4 mmol/g"
 	SubstanceAmount    = "substance.amount"     // amount x factor
@@ -107,6 +123,7 @@ const (
 	DoseVolume    = "dose.volume"    // dose.amount / concentration, on the giving barrel's graduation
 	DoseStep      = "dose.step"      // that graduation
 	DoseDelivered = "dose.delivered" // dose.volume x concentration
+	DoseCount     = "dose.count"     // doses that the syringe holds, as typed, "4"; neat final.volume = dose.count x dose.volume, else it is at least that
 
 	// An infusion.
 	RateWeightBy   = "rate.weight.by"
@@ -122,8 +139,14 @@ const (
 	LimitDose      = "limit.dose"      // hard limit of the formulary
 	LimitRate      = "limit.rate"      // its rate, rounded down to the step
 	RunTime        = "run.time"        // final.volume / start.rate, whole minutes, rounded down, "9 h 25 min"
-	EmptyAt        = "empty.at"        // prepared + run.time
+	EmptyAt        = "empty.at"        // prepared + usable.time; where that is not printed, + run.time
 	EmptyOffset    = "empty.offset"    // offset of empty.at; where it is not printed, that of prepared
+	Priming        = "priming"         // what fills the line, as typed, "2 mL"
+	DeadSpace      = "dead.space"      // what stays in syringe and line, as typed, "0.1 mL"
+	UsableTime     = "usable.time"     // (final.volume - priming - dead.space) / start.rate, written and rounded like run.time
+	WantedTime     = "wanted.time"     // how long the infusion is to last, as typed, "12 h"; usable.time is not less
+	RuleRate       = "rule.rate"       // dose rate that 1 mL/h gives, as typed; where it is not, "1 microgram/kg/min" (rules of six and of three).
+	// The amount wanted is rule.rate x rate.weight x final.volume over 1 mL/h.
 
 	// Time.
 	Prepared       = "prepared"        // date and time, as the number style writes it
@@ -191,6 +214,57 @@ const (
 	Typed = "typed"
 )
 
+// A dilution in two steps: drug is drawn, made up in an intermediate syringe, a
+// part of that is taken and made up in the giving syringe. Then drug.volume, where
+// it is printed, is intermediate.drug.volume, and so it is where containers are
+// counted (container.count, left.volume); method is "make up to"; amount =
+// intermediate.taken.volume x intermediate.concentration; final.volume = taken +
+// diluent.volume. The taken volume is on one of the two graduations beside what
+// the order wants of the intermediate.
+//
+// interval.percent then has five readings (GUM): assay, drug and taken volume,
+// intermediate and final volume. Readings in barrels of one capacity count as
+// those of one syringe, whose errors are correlated: two volumes that both raise
+// the concentration (drug, taken) or both lower it (intermediate, final) are then
+// added before they are squared. Readings of one syringe on opposite sides would
+// cancel in part; that is not counted upon.
+const (
+	IntermediateDrugVolume  = "intermediate.drug.volume"    // drawn of the containers, a multiple of its step, less than intermediate.volume
+	IntermediateDrugStep    = "intermediate.drug.step"      // graduation of that barrel
+	IntermediateDrugBarrel  = "intermediate.drug.barrel"    // its nominal capacity
+	IntermediateVolume      = "intermediate.volume"         // made up to, a multiple of its step
+	IntermediateStep        = "intermediate.step"           // graduation of the intermediate syringe
+	IntermediateBarrel      = "intermediate.barrel"         // its nominal capacity
+	IntermediateDiluent     = "intermediate.diluent.volume" // intermediate.volume - intermediate.drug.volume
+	IntermediateAmount      = "intermediate.amount"         // intermediate.drug.volume x strength
+	IntermediateConc        = "intermediate.concentration"  // intermediate.amount / intermediate.volume
+	IntermediateUseHours    = "intermediate.use.hours"      // the intermediate's own label
+	IntermediateUseBy       = "intermediate.use.by"         // prepared + intermediate.use.hours
+	IntermediateUseByOffset = "intermediate.use.by.offset"
+	TakenVolume             = "intermediate.taken.volume" // taken of the intermediate, a multiple of its step
+	TakenStep               = "intermediate.taken.step"   // graduation of the barrel that measures it
+	TakenBarrel             = "intermediate.taken.barrel" // its nominal capacity
+	IntermediateLeftVolume  = "intermediate.left.volume"  // intermediate.volume - intermediate.taken.volume, thrown away
+	IntermediateLeftAmount  = "intermediate.left.amount"  // intermediate.left.volume x intermediate.concentration
+	TargetMoved             = "target.moved"              // (concentration - wanted) / wanted, written like drug.moved; wanted is the asked concentration, or the amount asked over final.volume
+)
+
+// Two drugs in one syringe, each from its own container. Figures of the second
+// container come from the second drug's record.
+const (
+	OtherDrug            = "other.drug"             // the second drug's name, as its record files it
+	OtherContainerAmount = "other.container.amount" // like container.amount
+	OtherContainerVolume = "other.container.volume" // like container.volume
+	OtherContainerCount  = "other.container.count"  // like container.count
+	OtherStrength        = "other.strength"         // other.container.amount / other.container.volume
+	OtherVolume          = "other.volume"           // drawn of the second drug, a multiple of other.step
+	OtherStep            = "other.step"             // graduation of the barrel that measures it
+	OtherBarrel          = "other.barrel"           // its nominal capacity
+	OtherAmount          = "other.amount"           // other.volume x other.strength
+	OtherLeftVolume      = "other.left.volume"      // count x container volume - other.volume
+	OtherLeftAmount      = "other.left.amount"      // other.left.volume x other.strength
+)
+
 // Names of table rows: Row("ladder", 3, "rate") is "ladder.3.rate".
 //
 //	ladder.N.dose       a dose rate
@@ -199,10 +273,18 @@ const (
 //	slip.N.kind         "per minute for per hour", "per hour for per minute", "ten times", "a tenth", "pounds for kilograms"
 //	slip.N.rate         the pump rate that this slip would show, half up to the step, from the exact start dose
 //	code.N.text         a form of the barcode in human-readable form, the fullest first; every part is held against what it repeats
+//	pack.N.presentation a size of container that is opened, by its id in the record; pack.1 is that of container.amount
+//	pack.N.amount       drug in one of them, as the record says
+//	pack.N.volume       volume of one of them, as the record says; amount / volume = strength
+//	pack.N.count        how many of them are opened; container.count is the sum, and one less of any size would not do
+//
+// Where sizes are printed, left.volume is the sum of count x volume less
+// drug.volume.
 const (
 	Ladder = "ladder"
 	Slip   = "slip"
 	Code   = "code"
+	Pack   = "pack"
 )
 
 // What stands behind the barcode, in Asked only; no figure has these names. The
@@ -215,45 +297,3 @@ const (
 	ProductConcentration = "product.concentration"
 	ProductVolume        = "product.volume"
 )
-
-// Names whose sums are not written yet: [Knows] tells which of them have one. A
-// figure without a sum is not printed, and nothing is asked under its name; the
-// papers say what it is about in words.
-//
-//	dose.count      how many doses the syringe holds, as typed: "4"; the order then asks for
-//	                drug: neat, final.volume = dose.count x dose.volume; otherwise final.volume
-//	                is at least that, and the amount that is wanted follows from the asked
-//	                concentration, or is dose.count x dose.amount in the asked final.volume
-//	priming         what fills the line, as typed: "2 mL"
-//	dead.space      what stays in syringe and line, as typed in the order or on the shelf: "0.1 mL"
-//	wanted.time     how long the infusion is to last, as typed: "12 h"; usable.time is not less
-//	usable.time     (final.volume - priming - dead.space) / start.rate, whole minutes, rounded down;
-//	                what is not printed counts as nothing. Where it is printed, empty.at is
-//	                prepared + usable.time
-//	rule.rate       dose rate that 1 mL/h of a mixture for one weight gives, as typed or
-//	                "1 microgram/kg/min" by the published rules of six and of three; the amount
-//	                that is wanted is rule.rate x rate.weight x final.volume over 1 mL/h
-//
-//	pack.N.presentation  a size of container that is opened, by its id in the record; where there
-//	                are several sizes, N counts them from 1 and pack.1 is that of container.amount
-//	pack.N.amount   drug in one of them, as the record says
-//	pack.N.volume   volume of one of them, as the record says; amount / volume = strength
-//	pack.N.count    how many of them are opened, "2"; container.count is the sum of the counts,
-//	                left.volume the sum of count x volume less drug.volume, and one container less
-//	                of any size would not do
-const (
-	DoseCount  = "dose.count"
-	Priming    = "priming"
-	DeadSpace  = "dead.space"
-	WantedTime = "wanted.time"
-	UsableTime = "usable.time"
-	RuleRate   = "rule.rate"
-	Pack       = "pack"
-)
-
-// Knows reports whether the second route has a sum for figures of this name.
-func Knows(name string) bool {
-	key, _ := splitRow(name)
-	_, ok := allRules()[key]
-	return ok
-}

@@ -1,6 +1,7 @@
 package recheck
 
 import (
+	"slices"
 	"strconv"
 	"strings"
 	"unicode/utf8"
@@ -12,23 +13,56 @@ import (
 // texts lists them, or says why they cannot be read. Two readers that count the
 // drugs of a piece differently have not understood it; then nothing is taken.
 func (p place) texts() ([]string, bool) {
-	w := walk{left: p.piece, drug: -1, fresh: true, want: p.nth}
+	return walkThrough(p.piece, "drug", p.nth, p.of)
+}
+
+// walkThrough lists the texts of the block of this table that stands at want,
+// counted from 0, or says that the piece does not hold of such blocks.
+func walkThrough(piece, table string, want, of int) ([]string, bool) {
+	w := walk{left: piece, table: table, at: -1, fresh: true, want: want}
 	for w.left != "" {
 		if !w.step() {
 			return nil, false
 		}
 	}
-	if w.drug+1 != p.of {
+	if w.at+1 != of {
 		return nil, false
 	}
 	return w.found, true
 }
 
-// A walk is the way through the piece: which drug it is in, whether under one
-// of that drug's headers, how deep in brackets, and whether a line has begun.
+// pairTexts is every text of the [[mix]] blocks that name both drugs, in any of
+// the files.
+func pairTexts(files [][]byte, drug, other string) []string {
+	const head = "\n[[mix]]"
+	var out []string
+	for _, raw := range files {
+		if len(raw) > mostRecord {
+			continue
+		}
+		text := "\n" + string(raw)
+		for at := strings.Index(text, head); at >= 0; at = strings.Index(text, head) {
+			text = text[at+1:]
+			piece := text
+			if end := strings.Index(text, "\n[["); end >= 0 {
+				piece = text[:end+1]
+			}
+			texts, ok := walkThrough(piece, "mix", 0, 1)
+			if ok && slices.Contains(texts, drug) && slices.Contains(texts, other) {
+				out = append(out, texts...)
+			}
+		}
+	}
+	return out
+}
+
+// A walk is the way through the piece: which block of the table it is in, whether
+// under one of that block's headers, how deep in brackets, and whether a line has
+// begun.
 type walk struct {
 	left   string
-	drug   int
+	table  string
+	at     int
 	inside bool
 	depth  int
 	fresh  bool
@@ -79,12 +113,12 @@ func (w *walk) line() string {
 func (w *walk) header(line string) {
 	name, _, _ := strings.Cut(line, "#")
 	name = strings.TrimSpace(name)
-	if name == "[[drug]]" {
-		w.drug++
+	if name == "[["+w.table+"]]" {
+		w.at++
 		w.inside = true
 		return
 	}
-	w.inside = w.drug >= 0 && strings.HasPrefix(strings.TrimLeft(name, "["), "drug.")
+	w.inside = w.at >= 0 && strings.HasPrefix(strings.TrimLeft(name, "["), w.table+".")
 }
 
 // text takes one text in quotes and keeps it unless it is a key.
@@ -96,7 +130,7 @@ func (w *walk) text() bool {
 	w.left = rest
 	after := strings.TrimLeft(rest, " \t")
 	key := after != "" && (after[0] == '=' || after[0] == '.')
-	if w.inside && w.drug == w.want && !key {
+	if w.inside && w.at == w.want && !key {
 		w.found = append(w.found, text)
 	}
 	return true

@@ -31,7 +31,7 @@ func (c *check) momentFault(text string) *objection {
 	if _, ok := readMoment(text); !ok {
 		return object("", "cannot be read as a date and time")
 	}
-	for _, name := range []string{Prepared, UseBy, EmptyAt} {
+	for _, name := range []string{Prepared, UseBy, IntermediateUseBy, EmptyAt} {
 		if other, ok := c.texts[name]; ok && isYearFirst(other) != isYearFirst(text) {
 			return object("", "is in another style than "+name)
 		}
@@ -104,19 +104,22 @@ func (c *check) spans(fromName, fromOffset, toName, toOffset string, minutes val
 	return nil
 }
 
-func useBy(c *check, _ int, text string) *objection {
-	if o := c.momentFault(text); o != nil {
-		return o
+// useBy is the rule of a use-by: prepared and so many hours, absolute.
+func useBy(hours, until, offset string) rule {
+	return func(c *check, _ int, text string) *objection {
+		if o := c.momentFault(text); o != nil {
+			return o
+		}
+		span, ok := c.texts[hours]
+		if !ok {
+			return object("", "needs "+hours+", which is not printed")
+		}
+		minutes, ok := spanMinutes(span)
+		if !ok {
+			return object("", "needs "+hours+", which cannot be read as hours and minutes")
+		}
+		return c.spans(Prepared, PreparedOffset, until, offset, minutes)
 	}
-	hours, ok := c.texts[UseHours]
-	if !ok {
-		return object("", "needs use.hours, which is not printed")
-	}
-	minutes, ok := spanMinutes(hours)
-	if !ok {
-		return object("", "needs use.hours, which cannot be read as hours and minutes")
-	}
-	return c.spans(Prepared, PreparedOffset, UseBy, UseByOffset, minutes)
 }
 
 // partOf is for a figure that another figure's sum takes in exactly: where that
@@ -140,7 +143,7 @@ func prepared(c *check, _ int, text string) *objection {
 	if c.was(Prepared) {
 		return sameMoment(c.asked[Prepared][0], text)
 	}
-	return c.partOf(Prepared, text, UseBy, EmptyAt)
+	return c.partOf(Prepared, text, UseBy, IntermediateUseBy, EmptyAt)
 }
 
 // sameMoment compares a printed moment with the typed one, whichever of the
@@ -154,40 +157,38 @@ func sameMoment(typed, text string) *objection {
 	return nil
 }
 
-func preparedOffset(c *check, _ int, text string) *objection {
-	if _, ok := readOffset(text); !ok {
-		return object("", "cannot be read as an offset")
+// offsetOf is the rule of an offset, which the sum of one of the moments takes in.
+func offsetOf(name string, moments ...string) rule {
+	return func(c *check, _ int, text string) *objection {
+		if _, ok := readOffset(text); !ok {
+			return object("", "cannot be read as an offset")
+		}
+		return c.partOf(name, text, moments...)
 	}
-	return c.partOf(PreparedOffset, text, UseBy)
 }
 
-func useByOffset(c *check, _ int, text string) *objection {
-	if _, ok := readOffset(text); !ok {
-		return object("", "cannot be read as an offset")
+// useHours is the rule of the span until a use-by.
+func useHours(name, until string) rule {
+	return func(c *check, _ int, text string) *objection {
+		minutes, ok := spanMinutes(text)
+		if !ok {
+			return object("", "cannot be read as hours and minutes")
+		}
+		if !c.was(name) {
+			return c.partOf(name, text, until)
+		}
+		return exact(spanReading(minutes), c.typedSpan(name), "typed as")
 	}
-	return c.partOf(UseByOffset, text, UseBy)
 }
 
-func emptyOffset(c *check, _ int, text string) *objection {
-	if _, ok := readOffset(text); !ok {
-		return object("", "cannot be read as an offset")
+// typedSpan is a span as typed, in hours and minutes or as one quantity.
+func (c *check) typedSpan(name string) value {
+	if c.was(name) {
+		if minutes, ok := spanMinutes(c.asked[name][0]); ok {
+			return minutes
+		}
 	}
-	return c.partOf(EmptyOffset, text, EmptyAt)
-}
-
-func useHours(c *check, _ int, text string) *objection {
-	minutes, ok := spanMinutes(text)
-	if !ok {
-		return object("", "cannot be read as hours and minutes")
-	}
-	if !c.was(UseHours) {
-		return c.partOf(UseHours, text, UseBy)
-	}
-	typed, ok := spanMinutes(c.asked[UseHours][0])
-	if !ok {
-		typed = c.typed(UseHours)
-	}
-	return exact(spanReading(minutes), typed, "typed as")
+	return c.typed(name)
 }
 
 // spanReading is a span of minutes as a reading in minutes.
@@ -229,24 +230,74 @@ func readRun(text string) (value, bool) {
 
 // runTime is the final volume over the start rate, whole minutes, down.
 func runTime(c *check, _ int, text string) *objection {
+	return c.lasts(text, c.get(FinalVolume))
+}
+
+// usableTime is the same of what reaches the patient at the set rate.
+func usableTime(c *check, _ int, text string) *objection {
+	return c.lasts(text, c.usableVolume())
+}
+
+// lasts holds a span against a volume over the start rate.
+func (c *check) lasts(text string, volume value) *objection {
 	minutes, ok := readRun(text)
 	if !ok {
 		return object("", "cannot be read as hours and minutes")
 	}
-	return onStep(spanReading(minutes), c.get(FinalVolume).over(c.get(StartRate)), whole(1).ofKind(one(inTime)), downward)
+	return onStep(spanReading(minutes), volume.over(c.get(StartRate)), whole(1).ofKind(one(inTime)), downward)
+}
+
+// usableVolume is final.volume less what fills the line and what stays behind.
+func (c *check) usableVolume() value {
+	left := c.get(FinalVolume)
+	for _, name := range []string{Priming, DeadSpace} {
+		switch {
+		case c.has(name):
+			left = left.minus(c.get(name))
+		case c.was(name):
+			return lacking("needs " + name + ", which was typed, yet is not printed")
+		}
+	}
+	if left.lack == "" && left.sign() <= 0 {
+		return lacking("priming and dead.space leave nothing of final.volume")
+	}
+	return left
+}
+
+// wantedTime is as typed, and the syringe lasts that long.
+func wantedTime(c *check, _ int, text string) *objection {
+	minutes, ok := spanMinutes(text)
+	if !ok {
+		return object("", "cannot be read as hours and minutes")
+	}
+	if o := exact(spanReading(minutes), c.typedSpan(WantedTime), "typed as"); o != nil {
+		return o
+	}
+	usable, ok := readRun(c.texts[UsableTime])
+	if !ok {
+		return object("", "needs usable.time, which is not printed or cannot be read")
+	}
+	if usable.against(minutes) < 0 {
+		return object("", "usable.time is less")
+	}
+	return nil
 }
 
 func emptyAt(c *check, _ int, text string) *objection {
 	if o := c.momentFault(text); o != nil {
 		return o
 	}
-	run, ok := c.texts[RunTime]
+	name := RunTime
+	if c.has(UsableTime) {
+		name = UsableTime
+	}
+	run, ok := c.texts[name]
 	if !ok {
-		return object("", "needs run.time, which is not printed")
+		return object("", "needs "+name+", which is not printed")
 	}
 	minutes, ok := readRun(run)
 	if !ok {
-		return object("", "needs run.time, which cannot be read")
+		return object("", "needs "+name+", which cannot be read")
 	}
 	offset := EmptyOffset
 	if !c.has(EmptyOffset) {

@@ -168,6 +168,11 @@ func (s scribe) limits(sources *sourceList) Table {
 func (s scribe) packLimits(t *limitTable) {
 	pr := s.p.Presentation
 	t.words("contents of the container", pr.ID, pr.Source, pr.Unverified)
+	for _, pack := range s.p.Mixture.Packs {
+		if p := pack.Presentation; p.ID != pr.ID {
+			t.words("contents of the container", p.ID, p.Source, p.Unverified)
+		}
+	}
 	addLimit(t, "volume of the powder itself", "", pr.Displacement, s.p.Style.Volume)
 	for _, d := range pr.Diluents {
 		if d.Name == s.p.Mixture.Diluent {

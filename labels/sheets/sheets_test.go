@@ -74,6 +74,7 @@ weighed = "floor scale"
   start = "0.1 microgram/kg/min ideal"
   [[patient.infusion]]
   drug = "oxytocin"
+  indication = "labour"
   presentation = "ampoule 5 units in 1 mL"
   mix = "5 units in 500 mL"
   method = "withdraw, then add"

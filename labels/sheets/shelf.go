@@ -80,6 +80,9 @@ func (s scribe) chosen() []Pair {
 
 // doses says how many doses the syringe holds.
 func (s scribe) doses() labels.Line {
+	if s.p.Order.Doses.Value == 1 {
+		return labels.Words("the whole syringe is one dose")
+	}
 	if s.f.Has(recheck.DoseCount) {
 		return s.say("enough for {dose.count} doses")
 	}

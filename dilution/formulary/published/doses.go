@@ -6,7 +6,7 @@ import (
 	"drawup/dilution/formulary"
 )
 
-// A dose is one row of the second transcription of doses.
+// A dose is one row of the second copy of doses.
 type dose struct {
 	low, high figure // of one dose
 	most      figure // in one dose, a day or a course

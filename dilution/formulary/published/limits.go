@@ -70,7 +70,7 @@ func familyOf(kind string) string {
 }
 
 // family is every published figure of a drug's family: those of second sources,
-// the rows of the second transcription, and strengths, which are concentrations.
+// the rows of the second copy, and strengths, which are concentrations.
 func (t *Tables) family(drug, family string) []figure {
 	var out []figure
 	for _, l := range t.limits[drug] {

@@ -9,7 +9,7 @@ import (
 	"drawup/dilution/formulary"
 )
 
-// A row is one of the second transcription: a container, or a concentration to
+// A row is one of the second copy: a container, or a concentration to
 // prepare.
 type row struct {
 	drug, purpose, unit, volume string

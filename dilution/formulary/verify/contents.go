@@ -170,8 +170,8 @@ func (c *check) standards() {
 			c.find(refusal.StandardOutside, s.Pos, "standard", s.ID, "a concentration inside the bounds for its line",
 				"the standard preparation %s is outside every bound for infusions into a %s line", s.ID, s.Line)
 		}
-		if !c.makeable(s) {
-			c.find(refusal.StandardDiluent, s.Pos, "diluent", s.Diluent, "a diluent that a presentation for infusion allows",
+		if !c.makeable(s, conc) {
+			c.find(refusal.StandardDiluent, s.Pos, "diluent", s.Diluent, "a diluent that a presentation for infusion allows, and one as strong; undiluted, of the same strength",
 				"no presentation for infusion may be made up as %s, %s", s.ID, diluentWord(s.Diluent))
 		}
 	}
@@ -184,14 +184,18 @@ func diluentWord(name string) string {
 	return "in " + name
 }
 
-func (c *check) makeable(s formulary.Standard) bool {
+// makeable reports a presentation that is diluted so, or, undiluted, is as strong as
+// the mixture: a blank that was meant as a diluent does not pass as none.
+func (c *check) makeable(s formulary.Standard, conc quantity.Concentration) bool {
 	return slices.ContainsFunc(c.drug.Presentations, func(p formulary.Presentation) bool {
-		if !p.For("infusion") {
+		own, ok := strength(p)
+		if !ok || !p.For("infusion") {
 			return false
 		}
+		n, err := own.Cmp(conc)
 		if s.Diluent == "" {
-			return p.Neat
+			return p.Neat && err == nil && n == 0
 		}
-		return slices.ContainsFunc(p.Diluents, func(d formulary.Diluent) bool { return d.Name == s.Diluent })
+		return err == nil && n >= 0 && slices.ContainsFunc(p.Diluents, func(d formulary.Diluent) bool { return d.Name == s.Diluent })
 	})
 }

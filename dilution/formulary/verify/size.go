@@ -97,20 +97,21 @@ func (c *check) strengths() {
 }
 
 // bounds holds concentrations against the strengths that the drug comes in:
-// nothing can be stronger than the strongest container, and nobody dilutes
-// more than 1500-fold. Between the ends lies a factor of 100 at most.
+// nothing can be stronger than the strongest container, but for 1 % where a third
+// (400 mg in 3 mL) is rounded outwards, and nobody dilutes more than 2000-fold.
+// Between the ends lies a factor of 100 at most.
 func (c *check) bounds() {
 	for _, b := range c.drug.Bounds {
 		strongest := c.strongest(b.Use)
 		if strongest == nil {
 			continue
 		}
-		if b.High.Given() && b.High.Value.Rat().Cmp(strongest) > 0 {
+		if b.High.Given() && b.High.Value.Rat().Cmp(new(big.Rat).Mul(strongest, big.NewRat(101, 100))) > 0 {
 			c.find(refusal.Implausible, b.High.Pos, "high", b.High.Text, "at most the strongest presentation for "+b.Use,
 				"the highest concentration for %s, %s, is stronger than any container", b.Use, b.High.Text)
 		}
-		if b.Low.Given() && new(big.Rat).Mul(b.Low.Value.Rat(), big.NewRat(1500, 1)).Cmp(strongest) < 0 {
-			c.find(refusal.Implausible, b.Low.Pos, "low", b.Low.Text, "a 1500th of the strongest presentation or more",
+		if b.Low.Given() && new(big.Rat).Mul(b.Low.Value.Rat(), big.NewRat(2000, 1)).Cmp(strongest) < 0 {
+			c.find(refusal.Implausible, b.Low.Pos, "low", b.Low.Text, "a 2000th of the strongest presentation or more",
 				"the lowest concentration for %s, %s, is a dilution that nobody makes", b.Use, b.Low.Text)
 		}
 		if b.Low.Given() && b.High.Given() && apart(b.Low.Value.Rat(), b.High.Value.Rat(), 100) {
@@ -125,15 +126,20 @@ func (c *check) bounds() {
 func (c *check) strongest(use string) *big.Rat {
 	var top *big.Rat
 	for _, p := range c.drug.Presentations {
-		conc, err := p.Amount.In(p.Volume)
-		if err != nil && p.Powder() && p.Added.Given() {
-			conc, err = p.Amount.In(p.Added)
-		}
-		if err == nil && p.For(use) && (top == nil || conc.Rat().Cmp(top) > 0) {
+		if conc, ok := strength(p); ok && p.For(use) && (top == nil || conc.Rat().Cmp(top) > 0) {
 			top = conc.Rat()
 		}
 	}
 	return top
+}
+
+// strength is what a container holds per volume; of a powder, in what is added.
+func strength(p formulary.Presentation) (quantity.Concentration, bool) {
+	conc, err := p.Amount.In(p.Volume)
+	if err != nil && p.Powder() && p.Added.Given() {
+		conc, err = p.Amount.In(p.Added)
+	}
+	return conc, err == nil
 }
 
 // apart reports that high is more than n times low.

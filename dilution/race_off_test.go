@@ -1,5 +1,0 @@
-//go:build !race
-
-package dilution_test
-
-const slowly = false
