@@ -172,7 +172,7 @@ func greyish(c ink.Colour) bool {
 // class on both kinds of label, between its foot and the first row without ink.
 func capitalOf(s seen, start ink.Point, width ink.Micrometre, inked func(ink.Colour) bool) ink.Micrometre {
 	row, height := int(start.Y)*s.dpi/25400-1, 0
-	for ; rowInked(s.img, row, int(start.X)*s.dpi/25400, int(start.X+width)*s.dpi/25400, inked); row-- {
+	for ; row > 0 && rowInked(s.img, row, int(start.X)*s.dpi/25400, int(start.X+width)*s.dpi/25400, inked); row-- {
 		height++
 	}
 	return ink.Micrometre(height * 25400 / s.dpi)
@@ -198,7 +198,7 @@ func TestNoStripeBelowTheLine(t *testing.T) {
 			y := s.y + s.h*2/5
 			for ; !dark(s.at(x, y)) && y < s.y+s.h*3/5; y += 20 {
 			}
-			for ; dark(s.at(x, y)); y += 20 {
+			for ; dark(s.at(x, y)) && y < s.y+s.h; y += 20 {
 			}
 			for end := y + 400; y < end; y += 20 {
 				if c := s.at(x, y); !greyish(c) {

@@ -222,7 +222,7 @@ func heightOfLetters(t *testing.T, g *gallery) {
 			return false
 		}
 		height := ink.Micrometre(0)
-		for y := word.StartY - 60; inked(y); y -= 20 {
+		for y := word.StartY - 60; y > 0 && inked(y); y -= 20 {
 			height += 20
 		}
 		if height += 60; height < 2480 {

@@ -104,7 +104,11 @@ func TestFixes(t *testing.T) {
 			}
 		}
 	}
-	// A better unit is told, not put in: what was typed keeps its unit.
+}
+
+// A better unit is told, not put in: what was typed keeps its unit. What has two
+// readings has no fix at all.
+func TestWhatIsNotPutIn(t *testing.T) {
 	for text, want := range map[string][2]string{
 		"0.05 mg/mL":   {"50 micrograms", "50 mcg"},
 		"0.00005 g/mL": {"50 micrograms", "50 mcg"},

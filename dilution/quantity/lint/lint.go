@@ -86,7 +86,7 @@ func Rules() []Rule { return slices.Clone(rules) }
 
 // rules is the list, made once.
 var rules = func() []Rule {
-	all := slices.Concat(numberRules(), unitRules(), strengthRules(), wordRules())
+	all := slices.Concat(numberRules(), digitRules(), unitRules(), placeRules(), strengthRules(), wordRules())
 	slices.SortStableFunc(all, func(a, b Rule) int { return strings.Compare(a.Code, b.Code) })
 	return all
 }()

@@ -13,7 +13,6 @@ const (
 	brochure    = "SI Brochure, 5.3.3"
 	isoNumbers  = "ISO style for numbers, as restated by ETSI"
 	usp7        = "US Pharmacopeia, general chapter 7, 2016"
-	common      = "common practice, no source"
 	unseen      = "from memory, unverified"
 	ourOwn      = "our reading, no source"
 	divi        = "DIVI, labelling of syringes, 2012"
@@ -69,6 +68,12 @@ func numberRules() []Rule {
 			Source: palliative + "; " + divi, Severity: Warn, Scope: ChosenFigure,
 			Wrong: []string{"6.25 mg", "0.375 mL"}, Right: []string{"6.2 mg", "0.05 microgram/kg/min"},
 			find: each(`(?:^|[^\d.,])(\d+\.\d{2,}`+gap+`(?:mg|g|mcg|micrograms?|nanograms?|mL|units?|mmol))(?:/mL)?(?:[^/\w]|$)`, nil)},
+	}
+}
+
+// digitRules are about digits that are no plain number, or too many of them.
+func digitRules() []Rule {
+	return []Rule{
 		{Code: "N21", Fault: "a Roman numeral, a fraction or a power of ten",
 			Says:   "plain Arabic digits: no Roman numerals, no fractions, no powers of ten",
 			Source: errorProne, Severity: Stop, Scope: EveryText,

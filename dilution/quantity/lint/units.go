@@ -2,7 +2,7 @@ package lint
 
 import "strings"
 
-// unitRules are about units and what stands between them and their numbers.
+// unitRules are about the words for units.
 func unitRules() []Rule {
 	return []Rule{
 		{Code: "N03", Fault: "no blank between number and unit",
@@ -41,6 +41,12 @@ func unitRules() []Rule {
 				each(`\b(ML|cc|ccm|cm3)\b`, func(House, []string) string { return "mL" }),
 				only(each(`\b(ml)\b`, func(House, []string) string { return "mL" }), "uk", "us"),
 				only(graded(Warn, each(`\b(ml)\b`, func(House, []string) string { return "mL" })), "si"))},
+	}
+}
+
+// placeRules are about what stands around a unit.
+func placeRules() []Rule {
+	return []Rule{
 		{Code: "N10", Fault: "a full stop after a unit",
 			Says:   "no full stop after a unit: read as a 1",
 			Source: errorProne, Severity: Stop, Scope: EveryText,
